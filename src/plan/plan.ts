@@ -1,0 +1,30 @@
+import type { Craft, Pace, Reserve } from "../craft/craft.ts";
+import type { Route } from "../estimate/route.ts";
+import type { BeyondPolicy, FieldRole, GapPolicy, OutsidePolicy } from "../field/field.ts";
+
+/** A field file as a plan names it. */
+export interface FieldReference {
+  readonly role: FieldRole;
+  /** As written, relative to the plan. */
+  readonly file: string;
+  /** Column mapping: our axis or quantity name → the header in the file. */
+  readonly columns: Readonly<Record<string, string>>;
+  readonly gaps: GapPolicy;
+  readonly beyond: BeyondPolicy;
+  readonly outside: OutsidePolicy;
+}
+
+/** A plan, checked, in SI units, with its craft read. */
+export interface Plan {
+  readonly title: string;
+  /** ms since 1970-01-01T00:00Z. */
+  readonly departure: number;
+  readonly craft: Craft;
+  readonly pace: Pace;
+  readonly reserve: Reserve | null;
+  readonly fields: readonly FieldReference[];
+  readonly routes: readonly Route[];
+}
+
+/** Yields a named file's bytes in pieces; the name is as the plan writes it. Rejects with an InputError where there is none. */
+export type OpenFile = (name: string) => AsyncIterable<Uint8Array>;
