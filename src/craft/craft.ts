@@ -16,6 +16,8 @@ export interface PowerModel {
   readonly max: number;
   /** Rate at through-medium speed V (m/s). */
   perSecond(speed: number): number;
+  /** Derivative of `perSecond` with respect to speed at V (m/s), in the rate's unit per m/s. */
+  slope(speed: number): number;
   /** Speeds inside the domain where a derivative of the curve jumps (rows of a table), m/s ascending. */
   readonly kinks: readonly number[];
   /** Power per metre per second of climb, W/(m/s): m g₀ / η; 0 where the model has no climb. */
