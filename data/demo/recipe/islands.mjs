@@ -243,7 +243,7 @@ export const ISLANDS_PLAN = {
     {
       name: "East about",
       path: "rhumb",
-      waypoints: [PIER, { name: "Orrin foot", ...at(6.4, -10) }, { name: "Orrin east", ...at(11.6, 0.5) }, { name: "Orrin head", ...at(6.6, 12) }, LIGHT],
+      waypoints: [PIER, { name: "Orrin foot", ...at(8, -10) }, { name: "Orrin east", ...at(12.4, 0.5) }, { name: "Orrin head", ...at(8, 12) }, LIGHT],
     },
   ],
 };

@@ -148,9 +148,10 @@ export const OCEAN_PLAN = {
       waypoints: [
         { name: "Departure", lat: "35°40.0'N", lon: "152°30.0'E" },
         { name: "Crest", lat: 36.6, lon: 154.5 },
-        { name: "Trough", lat: 36.4, lon: 160.5 },
-        { name: "Second crest", lat: 37.4, lon: 166 },
-        { name: "Stream end", lat: 37.4, lon: 174 },
+        { name: "Trough", lat: 35.85, lon: 159 },
+        { name: "Second crest", lat: 36.6, lon: 165.5 },
+        { name: "Second trough", lat: 36.5, lon: 171 },
+        { name: "Stream end", lat: 36.95, lon: 179 },
         { name: "Arrival", lat: "38°30.0'N", lon: "164°00.0'W", path: "geodesic" },
       ],
     },
