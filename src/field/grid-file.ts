@@ -1,0 +1,24 @@
+import type { FieldRole } from "./field.ts";
+
+/**
+ * One file's grid, as read: nodes as in `Tile`, missing ones at 0 and told by the masks.
+ * Slices with the same missing nodes share a mask.
+ */
+export interface GridFile {
+  readonly file: string;
+  readonly role: FieldRole;
+  readonly lon: Float64Array;
+  readonly lat: Float64Array;
+  readonly height: Float64Array | null;
+  readonly times: Float64Array | null;
+  readonly slices: readonly Float64Array[];
+  readonly gusts: readonly Float64Array[] | null;
+  readonly masks: readonly (Uint8Array | null)[];
+  readonly global: boolean;
+  /** Headers of columns that were not used, as written. */
+  readonly ignoredColumns: readonly string[];
+  /** Lines that begin with `#` before the header, without it. */
+  readonly notes: readonly string[];
+  /** Size of the file, bytes. */
+  readonly bytes: number;
+}
