@@ -1,0 +1,152 @@
+import type {
+  ErrorBound,
+  Estimate,
+  FieldAlong,
+  FieldSummary,
+  Finding,
+  LegEstimate,
+  Penalty,
+  Reached,
+  RouteEstimate,
+  Spread,
+  Still,
+  Totals,
+} from "../estimate/result.ts";
+
+/*
+ * Keys are written out one by one: their order is part of what is promised, and what an estimate may one day carry besides
+ * does not slip into the file.
+ */
+
+function spread(value: Spread | null): Spread | null {
+  return value && { mean: value.mean, min: value.min, max: value.max };
+}
+
+function fieldAlong(value: FieldAlong | null): FieldAlong | null {
+  return (
+    value && {
+      alongTrackIntegral_m2_s: value.alongTrackIntegral_m2_s,
+      meanAlongTrack_m_s: value.meanAlongTrack_m_s,
+      meanCrossTrack_m_s: value.meanCrossTrack_m_s,
+      maxSpeed_m_s: value.maxSpeed_m_s,
+      covered: value.covered,
+    }
+  );
+}
+
+const still = ({ time_s, use }: Still): Still => ({ time_s, use });
+const bound = (value: ErrorBound | null): ErrorBound | null =>
+  value && { time_s: value.time_s, use: value.use };
+
+function penalty(value: Penalty | null): Penalty | null {
+  return (
+    value && {
+      time_s: value.time_s,
+      use: value.use,
+      alongTime_s: value.alongTime_s,
+      crossTime_s: value.crossTime_s,
+      firstOrderTime_s: value.firstOrderTime_s,
+    }
+  );
+}
+
+/** A leg with its keys in the order of the format. */
+export function legJson(value: LegEstimate): LegEstimate {
+  return {
+    leg: value.leg,
+    from: value.from,
+    to: value.to,
+    path: value.path,
+    distance_m: value.distance_m,
+    initialCourse_deg: value.initialCourse_deg,
+    finalCourse_deg: value.finalCourse_deg,
+    magneticCourse_deg: value.magneticCourse_deg,
+    departure: value.departure,
+    arrival: value.arrival,
+    time_s: value.time_s,
+    stay_s: value.stay_s,
+    throughDistance_m: value.throughDistance_m,
+    throughSpeed_m_s: spread(value.throughSpeed_m_s),
+    groundSpeed_m_s: spread(value.groundSpeed_m_s),
+    heading_deg: spread(value.heading_deg),
+    crab_deg: spread(value.crab_deg),
+    wind: fieldAlong(value.wind),
+    current: fieldAlong(value.current),
+    use: value.use,
+    remaining: value.remaining,
+    still: still(value.still),
+    penalty: penalty(value.penalty),
+    error: bound(value.error),
+  };
+}
+
+function totals(value: Totals): Totals {
+  return {
+    distance_m: value.distance_m,
+    time_s: value.time_s,
+    stay_s: value.stay_s,
+    throughDistance_m: value.throughDistance_m,
+    wind: fieldAlong(value.wind),
+    current: fieldAlong(value.current),
+    use: value.use,
+    remaining: value.remaining,
+    still: still(value.still),
+    penalty: penalty(value.penalty),
+    error: bound(value.error),
+  };
+}
+
+/** A finding with its keys in the order of the format. */
+export function findingJson(value: Finding): Finding {
+  return {
+    code: value.code,
+    severity: value.severity,
+    leg: value.leg,
+    at_m: value.at_m,
+    to_m: value.to_m,
+    lat: value.lat,
+    lon: value.lon,
+    message: value.message,
+  };
+}
+
+const reached = ({ leg: on, at_m, time_s, use }: Reached): Reached => ({ leg: on, at_m, time_s, use });
+
+function route(value: RouteEstimate): RouteEstimate {
+  return {
+    name: value.name,
+    status: value.status,
+    departure: value.departure,
+    arrival: value.arrival,
+    storeUnit: value.storeUnit,
+    usable: value.usable,
+    reserve: value.reserve,
+    ...(value.reached === undefined ? {} : { reached: reached(value.reached) }),
+    totals: totals(value.totals),
+    legs: value.legs.map(legJson),
+    findings: value.findings.map(findingJson),
+  };
+}
+
+function field(value: FieldSummary): FieldSummary {
+  return { role: value.role, files: [...value.files], validFrom: value.validFrom, validTo: value.validTo };
+}
+
+/** For `JSON.stringify`: a number that JSON would write as null is a defect, never silent. */
+export function refuseNotFinite(key: string, value: unknown): unknown {
+  if (typeof value === "number" && !Number.isFinite(value))
+    throw new Error(`${key} is ${value} in the estimate`);
+  return value;
+}
+
+/** The estimate as `legwork-estimate/1`: SI units with the unit in the key, keys in a fixed order, two spaces of indent, a final line end. */
+export function writeJson(estimate: Estimate): string {
+  const whole: Estimate = {
+    format: estimate.format,
+    advisory: estimate.advisory,
+    plan: { title: estimate.plan.title },
+    fields: estimate.fields.map(field),
+    routes: estimate.routes.map(route),
+  };
+  return `${JSON.stringify(whole, refuseNotFinite, 2)}\n`;
+}

@@ -1,0 +1,44 @@
+import { NO_FIGURE } from "./number-text.ts";
+
+/** The finest unit of time that a table prints. */
+export type Clock = "minute" | "second";
+
+const SECONDS = { minute: 60, second: 1 } as const;
+
+/** Seconds in one unit of the clock. */
+export function clockSeconds(clock: Clock): number {
+  return SECONDS[clock];
+}
+
+const two = (value: number): string => String(value).padStart(2, "0");
+
+/** A whole number of minutes or seconds as h:mm or h:mm:ss, of at most `width` columns; `signed` puts + before positive ones. */
+export function durationText(count: number | null, clock: Clock, width = 12, signed = false): string {
+  if (count === null) return NO_FIGURE;
+  const size = Math.abs(count);
+  const sign = count < 0 ? "-" : signed && count > 0 ? "+" : "";
+  const minutes = clock === "minute" ? size : Math.floor(size / 60);
+  const hours = Math.floor(minutes / 60);
+  const seconds = clock === "minute" ? "" : `:${two(size % 60)}`;
+  const text = `${sign}${hours}:${two(minutes % 60)}${seconds}`;
+  return text.length <= width ? text : `${sign}${hours.toExponential(0)}h`;
+}
+
+function roundedInstant(iso: string, clock: Clock): string {
+  const unit = clockSeconds(clock) * 1000;
+  return new Date(Math.round(Date.parse(iso) / unit) * unit).toISOString();
+}
+
+/** An instant in UTC for a column: day and time (`04 07:31`), or the time with its seconds (`07:31:05`). */
+export function etaText(iso: string | null, clock: Clock): string {
+  if (iso === null) return NO_FIGURE;
+  const text = roundedInstant(iso, clock);
+  return clock === "minute" ? `${text.slice(-16, -14)} ${text.slice(-13, -8)}` : text.slice(-13, -5);
+}
+
+/** An instant in words: `2027-05-04 07:31 UTC`, with seconds where the clock has them. */
+export function instantText(iso: string | null, clock: Clock): string {
+  if (iso === null) return NO_FIGURE;
+  const text = roundedInstant(iso, clock);
+  return `${text.slice(0, -14)} ${clock === "minute" ? text.slice(-13, -8) : text.slice(-13, -5)} UTC`;
+}
