@@ -12,6 +12,8 @@ export class AxisLearner {
   private readonly successors: number[] = [];
   private readonly found: number[] = [];
   private last = 0;
+  /** Whether the last cell went on to another value. */
+  private moving = false;
 
   /** @param parse value of a cell; throws a CellFault where there is none */
   constructor(parse: (cell: string) => number) {
@@ -26,14 +28,21 @@ export class AxisLearner {
   /** Index of a cell's value. */
   indexOf(cell: string): number {
     const { texts, last } = this;
-    if (cell === texts[last]) return last;
+    // Texts that differ in their last digit take longest to tell apart, so what held last time is tried first.
+    if (!this.moving && cell === texts[last]) return last;
     const next = this.successors[last] as number;
     if (cell === texts[next]) {
+      this.moving = next !== last;
       this.last = next;
       return next;
     }
+    if (this.moving && cell === texts[last]) {
+      this.moving = false;
+      return last;
+    }
     const index = this.byText.get(cell) ?? this.learn(cell);
     this.successors[last] = index;
+    this.moving = index !== last;
     this.last = index;
     return index;
   }

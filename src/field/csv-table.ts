@@ -40,6 +40,11 @@ export class CsvTable {
     this.file = file;
   }
 
+  /** Lines in the blocks taken so far. */
+  get lines(): number {
+    return this.line - 1 + occurrences(this.rest, "\n");
+  }
+
   /** `null` until a header has been met. */
   get head(): TableHead | null {
     return this.tableHead;

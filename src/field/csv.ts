@@ -5,6 +5,7 @@ import type { FieldRole } from "./field.ts";
 import { assembleGrid, refuseScattered } from "./grid-assembly.ts";
 import type { GridFile } from "./grid-file.ts";
 import { GridStore, type NodeIndices } from "./grid-store.ts";
+import { longitudeAxis } from "./longitude-axis.ts";
 import { type NodeSink, RowReader } from "./row-reader.ts";
 import { textBlocks } from "./text-blocks.ts";
 
@@ -32,8 +33,8 @@ export async function readGridFile(
 ): Promise<GridFile> {
   const { file, role } = options;
   let store: GridStore | null = null;
-  const scan = await scanNodes(open(), options, 1, (columns) => {
-    store = new GridStore(columns.gust !== null);
+  const scan = await scanNodes(open(), options, 1, (columns, reader) => {
+    store = new GridStore(columns.gust !== null, () => longitudeAxis(reader.axes.lon).global);
     return store;
   });
   // The compiler does not follow the assignment in the callback.
@@ -70,7 +71,7 @@ async function scanNodes(
   pieces: AsyncIterable<Uint8Array>,
   options: GridFileOptions,
   enoughLines: number,
-  sinkFor: (columns: Columns) => NodeSink,
+  sinkFor: (columns: Columns, reader: RowReader) => NodeSink,
 ): Promise<Scan> {
   const { file, role, columns: mapping = {}, onProgress } = options;
   const table = new CsvTable(file);
@@ -79,14 +80,14 @@ async function scanNodes(
   let reader: RowReader | null = null;
   let sink: NodeSink | null = null;
   let bytes = 0;
-  for await (const block of textBlocks(pieces, file)) {
+  for await (const block of textBlocks(pieces, file, () => table.lines)) {
     const batch = table.take(block);
     bytes = block.bytes;
     onProgress?.(bytes);
     if (table.head === null) continue;
     columns ??= findColumns(table.head, role, mapping, file);
     reader ??= new RowReader(columns, table.head.separator, role, file);
-    sink ??= sinkFor(columns);
+    sink ??= sinkFor(columns, reader);
     for (let row = reader.read(batch, 0, sink); row >= 0; row = reader.read(batch, row + 1, sink)) {
       toldLines.push(batch.lineOf(row));
       if (toldLines.length === enoughLines) break;

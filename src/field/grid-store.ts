@@ -34,10 +34,13 @@ export class GridStore {
   /** Rows so far. */
   rows = 0;
   private readonly withGusts: boolean;
+  private readonly closes: () => boolean;
   private readonly waiting = new WaitingRows();
 
-  constructor(withGusts: boolean) {
+  /** @param closes whether the longitudes so far close around the globe, so that the first will be repeated at the end */
+  constructor(withGusts: boolean, closes: () => boolean) {
     this.withGusts = withGusts;
+    this.closes = closes;
   }
 
   /** Rows, against the nodes that the axes span so far. */
@@ -106,7 +109,10 @@ export class GridStore {
   private makeRoom(time: number): boolean {
     const isNew = this.slices[time] === undefined;
     // With a second time the first has usually shown the whole of the other axes.
-    if (isNew && this.held === 1 && this.fits(this.exactRoom(), 2)) this.resize(this.exactRoom());
+    if (isNew && this.held === 1) {
+      const exact = { ...this.used, lon: this.used.lon + (this.closes() ? 1 : 0) };
+      if (this.fits(exact, 2)) this.resize(exact);
+    }
     const count = this.held + (isNew ? 1 : 0);
     const choices = [this.grownRoom(), this.used];
     const room = choices.find((choice) => this.fits(choice, count));
@@ -114,11 +120,6 @@ export class GridStore {
     this.resize(room);
     this.openSlice(time);
     return true;
-  }
-
-  /** Room for what is in use, with one more longitude where the axis may close around the globe. */
-  private exactRoom(): Room {
-    return { ...this.used, lon: this.used.lon + 1 };
   }
 
   private grownRoom(): Room {

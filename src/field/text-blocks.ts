@@ -22,13 +22,16 @@ export interface TextBlock {
  * Cuts a file's bytes into blocks of whole lines and decodes them as UTF-8; a byte order mark is left out and a last line
  * without an end gets one. Where the blocks are cut does not depend on the pieces.
  *
+ * @param linesTaken lines in the blocks before, asked only when there is a fault to place
+ *
  * Errors: bytes that are not UTF-8, a line longer than a block.
  */
 export async function* textBlocks(
   pieces: AsyncIterable<Uint8Array>,
   file: string,
+  linesTaken: () => number,
 ): AsyncGenerator<TextBlock, void, void> {
-  const cutter = new BlockCutter(file);
+  const cutter = new BlockCutter(file, linesTaken);
   for await (const piece of pieces) {
     let taken = 0;
     while (taken < piece.length) {
@@ -41,15 +44,16 @@ export async function* textBlocks(
 
 class BlockCutter {
   private readonly file: string;
+  private readonly linesTaken: () => number;
   private readonly buffer = new Uint8Array(BLOCK_BYTES);
   private readonly decoder = new TextDecoder("utf-8", { fatal: true, ignoreBOM: true });
   private length = 0;
   private bytes = 0;
-  private line = 1;
   private lineEnd = 0;
 
-  constructor(file: string) {
+  constructor(file: string, linesTaken: () => number) {
     this.file = file;
+    this.linesTaken = linesTaken;
   }
 
   get full(): boolean {
@@ -108,7 +112,6 @@ class BlockCutter {
     }
     if (this.bytes === 0 && text.startsWith("\uFEFF")) text = text.slice(1);
     this.bytes += end;
-    this.line += countOf(lines, this.settledLineEnd());
     return { text, newline: this.lineEnd === LINE_FEED ? "\n" : "\r", bytes: this.bytes };
   }
 
@@ -128,12 +131,6 @@ class BlockCutter {
   }
 
   private place(linesBefore: number): { file: string; line: number } {
-    return { file: this.file, line: this.line + linesBefore };
+    return { file: this.file, line: 1 + this.linesTaken() + linesBefore };
   }
-}
-
-function countOf(bytes: Uint8Array, wanted: number): number {
-  let count = 0;
-  for (let at = bytes.indexOf(wanted); at >= 0; at = bytes.indexOf(wanted, at + 1)) count++;
-  return count;
 }
