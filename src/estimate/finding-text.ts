@@ -1,0 +1,38 @@
+import type { StoreUnit } from "../craft/craft.ts";
+
+/*
+ * How findings say an amount: SI first, the unit of the trade beside it, so that one text serves every door and unit preset.
+ */
+
+/** `15.2 m/s (29.5 kn)` */
+export function speedText(speed: number): string {
+  return `${speed.toFixed(1)} m/s (${((speed * 3600) / 1852).toFixed(1)} kn)`;
+}
+
+/** `850 m`, `3.4 km (1.8 NM)` */
+export function lengthText(metres: number): string {
+  if (metres < 1000) return `${metres < 10 ? metres.toFixed(1) : metres.toFixed(0)} m`;
+  return `${(metres / 1000).toFixed(1)} km (${(metres / 1852).toFixed(1)} NM)`;
+}
+
+/** An amount of a store: `1.24 kWh`, `350 Wh`, `12.4 t`, `820 kg`, `45.0 L` */
+export function amountText(amount: number, unit: StoreUnit): string {
+  if (unit === "L") return `${amount.toFixed(1)} L`;
+  if (unit === "kg")
+    return Math.abs(amount) >= 1000 ? `${(amount / 1000).toFixed(2)} t` : `${amount.toFixed(1)} kg`;
+  const wattHours = amount / 3600;
+  return Math.abs(wattHours) >= 1000 ? `${(wattHours / 1000).toFixed(2)} kWh` : `${wattHours.toFixed(1)} Wh`;
+}
+
+/** `2027-05-04 06:00 UTC`, to the minute */
+export function momentText(milliseconds: number): string {
+  return `${new Date(milliseconds).toISOString().slice(0, 16).replace("T", " ")} UTC`;
+}
+
+/** `90 s`, `12 min`, `3 h 05 min` */
+export function durationText(seconds: number): string {
+  if (seconds < 120) return `${Math.round(seconds)} s`;
+  const minutes = Math.round(seconds / 60);
+  if (minutes < 60) return `${minutes} min`;
+  return `${Math.floor(minutes / 60)} h ${String(minutes % 60).padStart(2, "0")} min`;
+}

@@ -1,0 +1,180 @@
+import type { Craft } from "../craft/craft.ts";
+import type { FieldRole } from "../field/field.ts";
+import { amountText, lengthText, momentText, speedText } from "./finding-text.ts";
+import type { Watched } from "./leg-watch.ts";
+import type { PreparedLeg } from "./prepare.ts";
+import type { Finding, FindingCode, RouteStatus, Severity } from "./result.ts";
+
+const SEVERITIES: Readonly<Record<FindingCode, Severity>> = {
+  "cannot-hold-track": "stop",
+  "outside-area": "stop",
+  "outside-time": "stop",
+  gap: "stop",
+  "outside-power-table": "stop",
+  "store-empty": "stop",
+  "reserve-broken": "stop",
+  "wind-limit": "stop",
+  "gust-limit": "stop",
+  "gap-filled": "caution",
+  "held-beyond": "caution",
+  "zero-outside": "caution",
+  "slow-over-ground": "caution",
+  "stems-flow": "caution",
+  "wind-against-current": "caution",
+  "crosses-land": "caution",
+  "height-outside-field": "caution",
+  "near-pole": "note",
+  "field-unused": "note",
+  "no-field": "note",
+  "no-variation": "note",
+};
+
+/** A leg with its number, as findings speak of it. */
+export interface NumberedLeg {
+  readonly number: number;
+  readonly prepared: PreparedLeg;
+}
+
+/** A finding about a stretch of a leg (metres from its start); `what` follows the place and a colon. */
+export function legFinding(
+  code: FindingCode,
+  leg: NumberedLeg,
+  from: number,
+  to: number,
+  what: string,
+): Finding {
+  const { track } = leg.prepared;
+  const place = track.at(Math.min(Math.max(from, 0), track.length));
+  return {
+    code,
+    severity: SEVERITIES[code],
+    leg: leg.number,
+    at_m: from,
+    to_m: to,
+    lat: place.lat,
+    lon: place.lon - 360 * Math.round(place.lon / 360),
+    message: `leg ${leg.number}, ${extentText(leg, from, to)}: ${what}`,
+  };
+}
+
+/** A finding about the whole route. */
+export function routeFinding(code: FindingCode, message: string): Finding {
+  return {
+    code,
+    severity: SEVERITIES[code],
+    leg: null,
+    at_m: null,
+    to_m: null,
+    lat: null,
+    lon: null,
+    message,
+  };
+}
+
+function extentText(leg: NumberedLeg, from: number, to: number): string {
+  const { track, from: start, to: end } = leg.prepared;
+  if (from <= 0 && to >= track.length) return `${start.name} to ${end.name}`;
+  if (from >= track.length) return `at ${end.name}`;
+  if (to - from < 1) return from <= 0 ? `at ${start.name}` : `${lengthText(from)} after ${start.name}`;
+  const first = from <= 0 ? `from ${start.name}` : `from ${lengthText(from)} after ${start.name}`;
+  return `${first} ${to >= track.length ? `to ${end.name}` : `for ${lengthText(to - from)}`}`;
+}
+
+/** What a watched stretch has to say, by code. */
+export function watchedText({ code, role, stretch }: Watched, craft: Craft): string {
+  const repeated = stretch.times > 1 ? `, ${stretch.times} times, ${lengthText(stretch.touched)} in all` : "";
+  const { limits } = craft;
+  switch (code) {
+    case "wind-limit":
+      return `wind up to ${speedText(stretch.peak)}, above the craft's limit of ${speedText(limits.wind_m_s ?? 0)}${repeated}`;
+    case "gust-limit":
+      return `gusts up to ${speedText(stretch.peak)}, above the craft's limit of ${speedText(limits.gust_m_s ?? 0)}${repeated}`;
+    case "gap-filled":
+      return `the ${role} has missing values here, filled by the plan's gap policy over ${lengthText(stretch.touched)}${repeated}`;
+    case "held-beyond":
+      return `the ${role} ends before this; its last values are held over ${lengthText(stretch.touched)}`;
+    case "zero-outside":
+      return `outside the ${role}'s area; taken as no ${role} over ${lengthText(stretch.touched)}${repeated}`;
+    case "height-outside-field":
+      return `the height is outside the ${role}'s levels; the nearest level holds over ${lengthText(stretch.touched)}${repeated}`;
+    case "slow-over-ground":
+      return `ground speed down to ${speedText((limits.groundSpeed_m_s ?? 0) - stretch.peak)}, below the craft's ${speedText(limits.groundSpeed_m_s ?? 0)}${repeated}`;
+    case "stems-flow":
+      return `the flow along the track, up to ${speedText(stretch.peak)}, overtakes the ground speed ordered; the craft points against its course${repeated}`;
+    case "wind-against-current":
+      return `wind up to ${speedText(stretch.peak)} against the current: expect short steep seas${repeated}`;
+    case "near-pole":
+      return "beyond 85° of latitude; directions turn fast here";
+    default:
+      throw new Error(`no text for a stretch of ${code}`);
+  }
+}
+
+/** What stops a route, by code. */
+export function stopText(
+  code: FindingCode,
+  role: FieldRole | null,
+  held: { readonly along: number; readonly cross: number; readonly throughSpeed: number },
+  moment: number,
+  validity: string,
+): string {
+  switch (code) {
+    case "outside-area":
+      return `the ${role} file's area ends here; the estimate stops`;
+    case "outside-time":
+      return `it is ${momentText(moment)} here, and ${validity}; the estimate stops`;
+    case "gap":
+      return `the ${role} has missing values here that its gap policy does not fill; the estimate stops`;
+    case "outside-power-table":
+      return `the pace asks for ${speedText(held.throughSpeed)} through the medium, where the power model has no value; the estimate stops`;
+    case "cannot-hold-track":
+      return cannotHoldText(held);
+    default:
+      throw new Error(`no text for a stop by ${code}`);
+  }
+}
+
+function cannotHoldText({
+  along,
+  cross,
+  throughSpeed,
+}: {
+  along: number;
+  cross: number;
+  throughSpeed: number;
+}): string {
+  const head = "the track cannot be held";
+  if (Math.abs(cross) >= throughSpeed) {
+    const side = cross > 0 ? "starboard" : "port";
+    return `${head}: the flow sets ${speedText(Math.abs(cross))} to ${side} across it, and the speed through the medium is ${speedText(throughSpeed)}`;
+  }
+  return `${head}: the flow along it is ${speedText(Math.abs(along))} against the craft, which leaves no ground speed at ${speedText(throughSpeed)} through the medium`;
+}
+
+/** What a store below a mark says: where it first falls below, on this leg or since an earlier one. */
+export function storeText(
+  code: "store-empty" | "reserve-broken",
+  first: boolean,
+  craft: Craft,
+  reserve: number,
+  leftAtEnd: number | null,
+): string {
+  const { unit } = craft.store;
+  const since = first ? "falls" : "is";
+  const what =
+    code === "store-empty"
+      ? first
+        ? "the store runs empty here"
+        : "the store is empty"
+      : `what is left ${since} below the reserve of ${amountText(reserve, unit)}`;
+  if (!first || leftAtEnd === null) return what;
+  return leftAtEnd < 0
+    ? `${what}; the route needs ${amountText(-leftAtEnd, unit)} more than is aboard`
+    : `${what}; at the end ${amountText(leftAtEnd, unit)} is left, ${amountText(reserve - leftAtEnd, unit)} short`;
+}
+
+/** The worst of the findings. */
+export function statusOf(findings: readonly Finding[]): RouteStatus {
+  if (findings.some(({ severity }) => severity === "stop")) return "stop";
+  return findings.some(({ severity }) => severity === "caution") ? "caution" : "clear";
+}

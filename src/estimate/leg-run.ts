@@ -1,0 +1,195 @@
+import { type PACE_CANNOT_HOLD, PACE_OK, PACE_OUTSIDE_TABLE } from "../craft/pace-solution.ts";
+import type { FieldRole } from "../field/field.ts";
+import { type Flow, resolve } from "./flow.ts";
+import { STATIONS } from "./gauss-kronrod.ts";
+import type { LegWatch } from "./leg-watch.ts";
+import { addStations, addTimes, type LegSums } from "./leg-work.ts";
+import type { Panels } from "./panels.ts";
+import type { FindingCode } from "./result.ts";
+import { layMiddle } from "./stations.ts";
+import { type Step, solveStep, UNSETTLED } from "./step.ts";
+import type { TrackCurve } from "./track-curve.ts";
+
+/*
+ * The run along one leg: panel by panel in space, each cut again where a valid time falls inside it, and halved
+ * where the Gauss-Kronrod difference is too large, the time does not settle or the track cannot be held. A place that
+ * still fails at half a metre is where the route stops.
+ */
+
+/** Why and where a leg stops. */
+export interface Stop {
+  readonly code: FindingCode;
+  /** Metres from the leg's start. */
+  readonly at: number;
+  readonly role: FieldRole | null;
+  /** What held there: components of the medium and the speed through it, m/s. */
+  readonly along: number;
+  readonly cross: number;
+  readonly throughSpeed: number;
+}
+
+/** The fixed parts of a run along one leg. */
+export interface LegRun {
+  readonly curve: TrackCurve;
+  readonly panels: Panels;
+  readonly flows: readonly Flow[];
+  readonly step: Step;
+}
+
+/** Called with every accepted step. */
+export type Accepted = (from: number, to: number, start: number, panel: number) => void;
+
+/** A step is halved while its Gauss-Kronrod difference is above this share of it. */
+const STEP_TOLERANCE = 1e-11;
+/** No step is halved below this, m: a stop is found to half a metre. */
+const SHORTEST_STEP_M = 0.5;
+/** A valid time is met when it is this near, s. */
+const TIME_TOLERANCE_S = 1e-9;
+const MOST_CUTS = 12;
+
+/**
+ * Runs along a leg from `start` seconds after the route's departure.
+ *
+ * @param accepted called after each step, while the step's figures stand in `run.step`
+ * @returns where and why the leg stops, or `null` where it ends at its waypoint
+ */
+export function runLeg(run: LegRun, start: number, accepted: Accepted): Stop | null {
+  const { panels } = run;
+  const clock = { elapsed: 0, met: 0 };
+  for (let panel = 0; panel < panels.piece.length; panel += 1) {
+    const stop = runPanel(run, panel, start, clock, accepted);
+    if (stop !== null) return stop;
+  }
+  return null;
+}
+
+/** Time since the leg's start, and the last valid time that was met since then (the clock may be a nanosecond short of it). */
+interface Clock {
+  elapsed: number;
+  met: number;
+}
+
+function runPanel(run: LegRun, panel: number, start: number, clock: Clock, accepted: Accepted): Stop | null {
+  const { panels, curve, flows, step } = run;
+  const piece = panels.piece[panel] as number;
+  const end = panels.s[panel + 1] as number;
+  const polar = panels.polar[panel] === 1;
+  let place = panels.s[panel] as number;
+  let longest = end - place;
+  layMiddle(step.stations, curve, piece, place, end);
+  while (place < end) {
+    const now = start + clock.elapsed;
+    const until = resolveAll(flows, panel, Math.max(now, clock.met), step);
+    const failing = flows.find((flow) => flow.state !== "data" && flow.state !== "zero");
+    if (failing !== undefined) return fieldStop(failing, place);
+    let to = place + longest >= end ? end : place + longest;
+    let status = solveStep(step, curve, piece, panel, polar, place, to, now);
+    let met = false;
+    if (status === PACE_OK && now + step.time > until + TIME_TOLERANCE_S) {
+      to = cutAtTime(run, piece, panel, polar, place, to, now, until);
+      met = to > 0;
+      status = met ? PACE_OK : UNSETTLED;
+    }
+    const length = met || status === PACE_OK ? to - place : longest;
+    if (status !== PACE_OK || !isAccurate(step)) {
+      if (length > SHORTEST_STEP_M) {
+        longest = length / 2;
+        continue;
+      }
+      if (status !== PACE_OK) return motionStop(step, status, place);
+    }
+    accepted(place, to, now, panel);
+    clock.elapsed += step.time;
+    if (met) clock.met = until;
+    place = to;
+    longest = met ? end - place : Math.min(2 * length, end - place);
+  }
+  return null;
+}
+
+function resolveAll(flows: readonly Flow[], panel: number, time: number, step: Step): number {
+  let until = Number.POSITIVE_INFINITY;
+  for (const flow of flows) {
+    resolve(flow, panel, time, step.stations);
+    if (flow.until < until) until = flow.until;
+  }
+  return until;
+}
+
+function isAccurate(step: Step): boolean {
+  return step.timeError <= STEP_TOLERANCE * step.time && step.useError <= STEP_TOLERANCE * Math.abs(step.use);
+}
+
+/**
+ * Shortens the step to end at a valid time: Newton on t(s) = until, whose slope is 1/g. The step is left solved up to
+ * the place returned, -1 where it does not settle.
+ */
+function cutAtTime(
+  run: LegRun,
+  piece: number,
+  panel: number,
+  polar: boolean,
+  from: number,
+  to: number,
+  now: number,
+  until: number,
+): number {
+  const { step, curve } = run;
+  const wanted = until - now;
+  let place = placeAtTime(step, wanted, from, to);
+  for (let cut = 0; cut < MOST_CUTS; cut += 1) {
+    if (!(place > from)) return -1;
+    if (solveStep(step, curve, piece, panel, polar, from, place, now) !== PACE_OK) return -1;
+    const late = step.time - wanted;
+    if (Math.abs(late) <= TIME_TOLERANCE_S) return place;
+    const next = Math.min(place - late * (step.groundSpeed[STATIONS - 1] as number), to);
+    if (next === place) return place;
+    place = next;
+  }
+  return -1;
+}
+
+/** First guess of the place at a time since the step's start: linear between stations. */
+function placeAtTime(step: Step, wanted: number, from: number, to: number): number {
+  const { elapsed, stations } = step;
+  for (let i = 1; i < STATIONS; i += 1) {
+    const after = elapsed[i] as number;
+    if (after >= wanted) {
+      const before = i === 1 ? 0 : (elapsed[i - 1] as number);
+      const a = stations.s[i - 1] as number;
+      return a + (((stations.s[i] as number) - a) * (wanted - before)) / (after - before);
+    }
+  }
+  return from + ((to - from) * wanted) / step.time;
+}
+
+function fieldStop(flow: Flow, at: number): Stop {
+  const code = flow.state as "outside-area" | "outside-time" | "gap";
+  return { code, at, role: flow.field.role, along: 0, cross: 0, throughSpeed: 0 };
+}
+
+function motionStop(
+  step: Step,
+  status: typeof PACE_CANNOT_HOLD | typeof PACE_OUTSIDE_TABLE | typeof UNSETTLED,
+  at: number,
+): Stop {
+  const station = step.failedAt;
+  return {
+    code: status === PACE_OUTSIDE_TABLE ? "outside-power-table" : "cannot-hold-track",
+    at,
+    role: null,
+    along: step.along[station] as number,
+    cross: step.cross[station] as number,
+    throughSpeed: step.motion.solution.throughSpeed,
+  };
+}
+
+/** An `accepted` that adds everything up for the leg's account. */
+export function accountInto(run: LegRun, sums: LegSums, watch: LegWatch): Accepted {
+  const { step, flows, panels } = run;
+  return (from, to, start, panel) => {
+    addTimes(sums, step, to - from);
+    addStations(sums, step, to - from, flows, watch, start);
+    watch.overSpan(flows, panels.polar[panel] === 1, from, to);
+  };
+}

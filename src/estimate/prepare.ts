@@ -1,0 +1,62 @@
+import type { Craft } from "../craft/craft.ts";
+import type { Field, FieldRole } from "../field/field.ts";
+import { makeTrack } from "../geodesy/make-track.ts";
+import type { Track } from "../geodesy/track.ts";
+import { cutPanels, type LegHeights, locatePanels, type PanelCells, type Panels } from "./panels.ts";
+import type { Route, Waypoint } from "./route.ts";
+import { fitTrackCurve, type TrackCurve } from "./track-curve.ts";
+
+/*
+ * The first half of an estimate: what depends on the route and the grids' axes alone. It is made once and serves every
+ * departure, pace, craft and set of values on the same grids.
+ */
+
+export interface PreparedLeg {
+  readonly from: Waypoint;
+  readonly to: Waypoint;
+  readonly track: Track;
+  readonly curve: TrackCurve;
+  readonly panels: Panels;
+  readonly heights: LegHeights;
+  /** Per field, per tile: the cells of the panels. */
+  readonly cells: readonly (readonly PanelCells[])[];
+}
+
+export interface PreparedRoute {
+  readonly route: Route;
+  readonly legs: readonly PreparedLeg[];
+  /** Roles of the fields that `cells` are about, in their order. */
+  readonly roles: readonly FieldRole[];
+}
+
+/**
+ * Prepares a route for estimates on fields with these axes.
+ *
+ * @param fields those that the craft uses (see {@link fieldsInUse})
+ * @throws InputError where a waypoint's position is not on the globe
+ */
+export function prepareRoute(route: Route, fields: readonly Field[]): PreparedRoute {
+  const legs = route.waypoints
+    .slice(1)
+    .map((to, index) => prepareLeg(route.waypoints[index] as Waypoint, to, fields));
+  return { route, legs, roles: fields.map(({ role }) => role) };
+}
+
+function prepareLeg(from: Waypoint, to: Waypoint, fields: readonly Field[]): PreparedLeg {
+  const track = makeTrack(from, to, to.path);
+  const curve = fitTrackCurve(track);
+  const heights = { from: from.height_m, to: to.height_m };
+  const panels = cutPanels(curve, fields, heights);
+  const cells = fields.map((field) => field.tiles.map((tile) => locatePanels(curve, panels, tile, heights)));
+  return { from, to, track, curve, panels, heights, cells };
+}
+
+/** The fields that act on a craft: a current in the plan of a craft in the air is left out. */
+export function fieldsInUse(craft: Craft, fields: readonly Field[]): Field[] {
+  return fields.filter(({ role }) => craft.moves === "water" || role === "wind");
+}
+
+/** The field that the craft moves through. */
+export function mediumRole(craft: Craft): FieldRole {
+  return craft.moves === "water" ? "current" : "wind";
+}

@@ -1,0 +1,223 @@
+import { PACE_OK, type PaceStatus } from "../craft/pace-solution.ts";
+import { type Flow, project } from "./flow.ts";
+import {
+  FIRST_NODE,
+  GAUSS_WEIGHT,
+  INTEGRAL_TO_STATION,
+  KRONROD_WEIGHT,
+  LAST_NODE,
+  STATIONS,
+} from "./gauss-kronrod.ts";
+import { type Motion, move } from "./motion.ts";
+import { layStations, type Stations } from "./stations.ts";
+import type { TrackCurve } from "./track-curve.ts";
+
+/*
+ * One step of the estimate: a stretch of track inside one cell and one interval of valid times, where the field is smooth. The time at each
+ * station obeys t_i = t_0 + ∫ ds / g(s, t(s)); with g taken at the nine Kronrod nodes this is collocation (an implicit
+ * Runge-Kutta method; Hairer, Nørsett & Wanner, Solving Ordinary Differential Equations I, 1993, section II.7), solved by Picard's iteration.
+ */
+
+/** Status of a step: that of the motion, or that the iteration did not settle. */
+export type StepStatus = PaceStatus | typeof UNSETTLED;
+export const UNSETTLED = 9;
+
+/** Everything that a step needs and leaves behind; made once a route and reused. */
+export interface Step {
+  readonly stations: Stations;
+  motion: Motion;
+  /** The flow that the craft moves through, and the other one where it acts through windage. */
+  medium: Flow | null;
+  wind: Flow | null;
+  /** Take the medium's cross-track component as zero. */
+  alongOnly: boolean;
+
+  /** Per station, from the solution: seconds since the step's start, and what holds there. */
+  readonly elapsed: Float64Array;
+  readonly along: Float64Array;
+  readonly cross: Float64Array;
+  readonly windAlong: Float64Array;
+  readonly windCross: Float64Array;
+  readonly groundSpeed: Float64Array;
+  readonly slowness: Float64Array;
+  readonly throughSpeed: Float64Array;
+  /** Store units per second. */
+  readonly rate: Float64Array;
+
+  /** Time and use over the step, and the Gauss-Kronrod difference of each. */
+  time: number;
+  timeError: number;
+  use: number;
+  useError: number;
+  /** ∫ |∂g/∂t| / g² ds: how much of an error in the start's time the step adds to it. */
+  growth: number;
+  /** Station at which the motion failed. */
+  failedAt: number;
+  /** Guess of ground speed for the first pass, m/s. */
+  lastGroundSpeed: number;
+}
+
+export function makeStep(stations: Stations, motion: Motion): Step {
+  const perStation = () => new Float64Array(STATIONS);
+  return {
+    stations,
+    motion,
+    medium: null,
+    wind: null,
+    alongOnly: false,
+    elapsed: perStation(),
+    along: perStation(),
+    cross: perStation(),
+    windAlong: perStation(),
+    windCross: perStation(),
+    groundSpeed: perStation(),
+    slowness: perStation(),
+    throughSpeed: perStation(),
+    rate: perStation(),
+    time: 0,
+    timeError: 0,
+    use: 0,
+    useError: 0,
+    growth: 0,
+    failedAt: 0,
+    lastGroundSpeed: 1,
+  };
+}
+
+const MOST_PASSES = 24;
+/** A pass that moves no station by more than this share of the step's time ends the iteration. */
+const SETTLED = 1e-14;
+
+/** Solves the stretch from..to of piece p for the time at every station; `start` is seconds since departure. */
+export function solveStep(
+  step: Step,
+  curve: TrackCurve,
+  p: number,
+  panel: number,
+  polar: boolean,
+  from: number,
+  to: number,
+  start: number,
+): StepStatus {
+  layStations(step.stations, curve, p, from, to);
+  if (step.medium !== null) project(step.medium, panel, polar, step.stations);
+  if (step.wind !== null && step.wind !== step.medium) project(step.wind, panel, polar, step.stations);
+  return solveTimes(step, from, to, start);
+}
+
+function solveTimes(step: Step, from: number, to: number, start: number): StepStatus {
+  const half = (to - from) / 2;
+  const { elapsed, groundSpeed, stations } = step;
+  for (let i = 0; i < STATIONS; i += 1)
+    elapsed[i] = ((stations.s[i] as number) - from) / step.lastGroundSpeed;
+  const implicit = isImplicit(step);
+  for (let pass = 0; pass < MOST_PASSES; pass += 1) {
+    const status = moveStations(step, start, FIRST_NODE, LAST_NODE);
+    if (status !== PACE_OK) return status;
+    const moved = integrateTimes(elapsed, groundSpeed, step.slowness, half);
+    if (!implicit || moved <= SETTLED * (elapsed[STATIONS - 1] as number)) return finish(step, start, half);
+  }
+  return UNSETTLED;
+}
+
+/** Whether the ground speed depends on the time that is being solved for. */
+function isImplicit(step: Step): boolean {
+  if (step.motion.groundSpeedFixed) return false;
+  const mediumMoves = step.medium !== null && step.medium.perSecond !== 0;
+  return mediumMoves || (step.motion.windSetsSpeed && step.wind !== null && step.wind.perSecond !== 0);
+}
+
+function moveStations(step: Step, start: number, first: number, last: number): PaceStatus {
+  const { medium, wind, motion, along, cross, windAlong, windCross, groundSpeed, throughSpeed } = step;
+  for (let i = first; i <= last; i += 1) {
+    const time = step.elapsed[i] as number;
+    if (medium !== null) {
+      const share = (start - medium.from + time) * medium.perSecond;
+      along[i] = (medium.along[i] as number) + share * (medium.alongChange[i] as number);
+      cross[i] = step.alongOnly ? 0 : (medium.cross[i] as number) + share * (medium.crossChange[i] as number);
+    }
+    if (wind !== null) {
+      const share = (start - wind.from + time) * wind.perSecond;
+      windAlong[i] = (wind.along[i] as number) + share * (wind.alongChange[i] as number);
+      windCross[i] = (wind.cross[i] as number) + share * (wind.crossChange[i] as number);
+    }
+    const status = move(
+      motion,
+      along[i] as number,
+      cross[i] as number,
+      windAlong[i] as number,
+      windCross[i] as number,
+    );
+    if (status !== PACE_OK) {
+      step.failedAt = i;
+      return status;
+    }
+    groundSpeed[i] = motion.solution.groundSpeed;
+    throughSpeed[i] = motion.solution.throughSpeed;
+    step.rate[i] = motion.solution.rate;
+  }
+  return PACE_OK;
+}
+
+/** Puts the integral of 1/g up to each station into `elapsed`; returns the largest change. */
+function integrateTimes(
+  elapsed: Float64Array,
+  groundSpeed: Float64Array,
+  slowness: Float64Array,
+  half: number,
+): number {
+  let largest = 0;
+  for (let j = FIRST_NODE; j <= LAST_NODE; j += 1) slowness[j] = 1 / (groundSpeed[j] as number);
+  for (let i = FIRST_NODE; i < STATIONS; i += 1) {
+    let sum = 0;
+    for (let j = FIRST_NODE; j <= LAST_NODE; j += 1) {
+      sum += (INTEGRAL_TO_STATION[i * STATIONS + j] as number) * (slowness[j] as number);
+    }
+    const time = half * sum;
+    const moved = Math.abs(time - (elapsed[i] as number));
+    if (moved > largest) largest = moved;
+    elapsed[i] = time;
+  }
+  return largest;
+}
+
+function finish(step: Step, start: number, half: number): StepStatus {
+  // The nodes at their settled times, and both ends.
+  const status = moveStations(step, start, 0, STATIONS - 1);
+  if (status !== PACE_OK) return status;
+  let time = 0;
+  let timeGauss = 0;
+  let use = 0;
+  let useGauss = 0;
+  let growth = 0;
+  const { medium, groundSpeed, rate } = step;
+  const moving = medium !== null && isImplicit(step);
+  for (let i = FIRST_NODE; i <= LAST_NODE; i += 1) {
+    const slowness = 1 / (groundSpeed[i] as number);
+    const spending = (rate[i] as number) * slowness;
+    const kronrod = KRONROD_WEIGHT[i] as number;
+    const gauss = GAUSS_WEIGHT[i] as number;
+    time += kronrod * slowness;
+    timeGauss += gauss * slowness;
+    use += kronrod * spending;
+    useGauss += gauss * spending;
+    if (moving) growth += kronrod * slowness * slowness * changePerSecond(step, medium, i);
+  }
+  step.time = half * time;
+  step.timeError = half * Math.abs(time - timeGauss);
+  step.use = half * use;
+  step.useError = half * Math.abs(use - useGauss);
+  step.growth = half * growth;
+  step.lastGroundSpeed = groundSpeed[STATIONS - 1] as number;
+  return PACE_OK;
+}
+
+/** A bound on |∂g/∂t| at a station: |∂a/∂t| + |∂c/∂t| |c| / sqrt(V² - c²). */
+function changePerSecond(step: Step, medium: Flow, i: number): number {
+  const cross = Math.abs(step.cross[i] as number);
+  const speed = step.throughSpeed[i] as number;
+  const lever = cross / Math.sqrt(Math.max(speed * speed - cross * cross, 1e-12));
+  const alongChange = Math.abs(medium.alongChange[i] as number);
+  const crossChange = step.alongOnly ? 0 : Math.abs(medium.crossChange[i] as number);
+  return (alongChange + lever * crossChange) * medium.perSecond;
+}
