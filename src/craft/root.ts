@@ -33,7 +33,8 @@ export function findRoot(
     const share = tolerance / Math.abs(x2 - x1);
     const best = Math.abs(f1) < Math.abs(f2) ? x1 : x2;
     if (share >= 0.5 || x1 === x2) return best;
-    const x = x1 + Math.min(1 - share, Math.max(share, t)) * (x2 - x1);
+    let x = x1 + Math.min(1 - share, Math.max(share, t)) * (x2 - x1);
+    if (x === x1 || x === x2) x = 0.5 * (x1 + x2);
     if (x === x1 || x === x2) return best;
     const f = of.residual(x);
     if (f === 0) return x;
