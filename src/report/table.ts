@@ -5,7 +5,7 @@ import { comparisonTable } from "./comparison.ts";
 import { findingLines } from "./findings-text.ts";
 import type { ReportInput, Units } from "./input.ts";
 import { ledgerTable } from "./ledger-rows.ts";
-import { legTable } from "./leg-rows.ts";
+import { legTable, stayText } from "./leg-rows.ts";
 import { NO_FIGURE } from "./number-text.ts";
 import { clipped, displayWidth, isolated, plainText, wrapped } from "./plain-text.ts";
 import { type RouteFigures, routeFigures } from "./route-figures.ts";
@@ -57,7 +57,8 @@ function outcome(route: RouteEstimate, units: TableUnits): string[] {
     totals.error === null
       ? ""
       : ` Numerical error of the time at most ${totals.error.time_s.toExponential(0)} s (not that of the forecast).`;
-  return wrapped(`${arrives} ${storeText(route, units)}${bound}`, TABLE_WIDTH);
+  const stays = totals.stay_s > 0 ? ` Time is under way; stays take ${stayText(totals.stay_s)} besides.` : "";
+  return wrapped(`${arrives} ${storeText(route, units)}${stays}${bound}`, TABLE_WIDTH);
 }
 
 function routeBlock(
