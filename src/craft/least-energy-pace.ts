@@ -23,8 +23,9 @@ import { alongThrough } from "./triangle.ts";
  * is refined to rounding as a root of D (the value J alone would fix V to half the digits), and the least J of these and
  * the ends of the range is the answer; the faster of equals.
  *
- * Where a following flow makes the craft's own way not worth its price, the least J is the limit V → max(V_min, |c|), at which
- * the craft lies across the flow and is carried at g = a; with V = |c| this is the one case where g > 0 and V is not above |c|.
+ * Where a following flow or wind makes the craft's own way not worth its price, the least J is at the least V of the range,
+ * or is the limit V → |c|, at which the craft lies across the flow and is carried at g = a: V = 0 in a flow along the track.
+ * With that limit V = |c| is the one case of `PACE_OK` in which V is not above |c|; g is above 0.
  */
 export class LeastEnergyPace implements PaceSolver, Residual {
   readonly #propulsion: Propulsion;
