@@ -1,6 +1,6 @@
-import { POLAR_FRAME_LATITUDE } from "../constants.ts";
 import { type AxisCell, axisCell, latitudeCell, longitudeCell } from "./axis-cell.ts";
-import { type Field, NODE_FILLED, NODE_GIVEN, NODE_MISSING, type Tile } from "./field.ts";
+import { type Field, NODE_FILLED, NODE_MISSING, type Tile } from "./field.ts";
+import { WeightedNodes } from "./weighted-nodes.ts";
 
 /** A policy or a limit that had a part in a sample, by the name of its finding. */
 export type SampleEdge = "gap-filled" | "held-beyond" | "zero-outside" | "height-outside-field";
@@ -90,23 +90,16 @@ function sampleTile(
   const lonCell = longitudeCell(tile.lon, lon) as AxisCell;
   const levelCell = cellOfLevel(tile, height, edges);
   const timeCell = cellOfTime(tile, time, edges);
-  const sum = new WeightedSum(tile, lat, lon);
-  for (const [slice, timeWeight] of nodesOf(timeCell)) {
-    for (const [level, levelWeight] of nodesOf(levelCell)) {
-      for (const [j, latWeight] of nodesOf(latCell)) {
-        for (const [i, lonWeight] of nodesOf(lonCell)) {
-          sum.add(slice, level, j, i, timeWeight * levelWeight * latWeight * lonWeight);
-        }
-      }
-    }
-  }
+  const sum = new WeightedNodes();
+  sum.sum(tile, { time: timeCell, level: levelCell, lat: latCell, lon: lonCell }, lat, lon);
   if (sum.worst === NODE_MISSING) return { none: "gap" };
   if (sum.worst === NODE_FILLED) edges.push("gap-filled");
   const covered = !edges.includes("gap-filled") && !edges.includes("held-beyond");
   return { none: null, u: sum.u, v: sum.v, gust: Number.isNaN(sum.gust) ? null : sum.gust, covered, edges };
 }
 
-function cellOfLevel(tile: Tile, height: number | null, edges: SampleEdge[]): AxisCell {
+/** The cell of a height, and an edge where it is outside the levels. */
+export function cellOfLevel(tile: Tile, height: number | null, edges: SampleEdge[]): AxisCell {
   if (tile.height === null || height === null) return { index: 0, weight: 0 };
   const cell = axisCell(tile.height, height);
   if (cell !== null) return cell;
@@ -114,61 +107,11 @@ function cellOfLevel(tile: Tile, height: number | null, edges: SampleEdge[]): Ax
   return { index: height < (tile.height[0] as number) ? 0 : tile.height.length - 1, weight: 0 };
 }
 
-function cellOfTime(tile: Tile, time: number, edges: SampleEdge[]): AxisCell {
+/** The cell of a time that the tile has or holds, and an edge where it is held. */
+export function cellOfTime(tile: Tile, time: number, edges: SampleEdge[]): AxisCell {
   if (tile.times === null) return { index: 0, weight: 0 };
   const cell = axisCell(tile.times, time);
   if (cell !== null) return cell;
   edges.push("held-beyond");
   return { index: tile.times.length - 1, weight: 0 };
-}
-
-/** The nodes of a cell that count, with their weights. */
-function nodesOf({ index, weight }: AxisCell): readonly (readonly [index: number, weight: number])[] {
-  const nodes: readonly (readonly [number, number])[] = [
-    [index, 1 - weight],
-    [index + 1, weight],
-  ];
-  return nodes.filter(([, share]) => share > 0);
-}
-
-class WeightedSum {
-  private readonly tile: Tile;
-  private readonly lon: number;
-  /** +1 and -1 where the nodes' frames are turned into the point's, about the north and the south pole; else 0. */
-  private readonly pole: number;
-  u = 0;
-  v = 0;
-  gust: number;
-  /** State of the least certain node that counts. */
-  worst = NODE_GIVEN;
-
-  constructor(tile: Tile, lat: number, lon: number) {
-    this.tile = tile;
-    this.lon = lon;
-    this.pole = Math.abs(lat) > POLAR_FRAME_LATITUDE ? Math.sign(lat) : 0;
-    this.gust = tile.gusts === null ? Number.NaN : 0;
-  }
-
-  add(slice: number, level: number, j: number, i: number, weight: number): void {
-    const { tile } = this;
-    const node = (level * tile.lat.length + j) * tile.lon.length + i;
-    const values = tile.slices[slice] as Float64Array;
-    const [u, v] = this.turned(
-      values[2 * node] as number,
-      values[2 * node + 1] as number,
-      tile.lon[i] as number,
-    );
-    this.u += weight * u;
-    this.v += weight * v;
-    if (tile.gusts !== null) this.gust += weight * (tile.gusts[slice]?.[node] as number);
-    this.worst = Math.max(this.worst, tile.masks[slice]?.[node] ?? NODE_GIVEN);
-  }
-
-  /** A node's vector in the point's frame: about a pole, east and north turn with the meridian, by the longitude between. */
-  private turned(u: number, v: number, lon: number): readonly [number, number] {
-    if (this.pole === 0) return [u, v];
-    const turn = ((lon - this.lon) * this.pole * Math.PI) / 180;
-    const [sine, cosine] = [Math.sin(turn), Math.cos(turn)];
-    return [u * cosine - v * sine, u * sine + v * cosine];
-  }
 }
