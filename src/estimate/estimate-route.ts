@@ -48,7 +48,7 @@ export interface RouteRun {
 export function estimateRoute(prepared: PreparedRoute, conditions: Conditions): RouteRun {
   checkFields(prepared, conditions.fields);
   const run = new RouteWork(prepared, conditions);
-  prepared.legs.forEach((leg, index) => run.addLeg({ number: index + 1, prepared: leg }, index));
+  for (const [index, leg] of prepared.legs.entries()) run.addLeg({ number: index + 1, prepared: leg }, index);
   return run.result();
 }
 

@@ -14,6 +14,10 @@ export interface Motion {
   readonly solver: PaceSolver;
   readonly conditions: PaceConditions;
   readonly solution: PaceSolution;
+  /** Speed through the medium where the pace holds one, m/s, else 0: then g = a + sqrt(V² - c²) without asking. */
+  readonly throughSpeed: number;
+  /** Store units per second where neither place nor fields change it, else -1. */
+  readonly steadyRate: number;
   /** The ground speed does not depend on the fields. */
   readonly groundSpeedFixed: boolean;
   /** The wind acts on the choice of speed, not on the rate alone. */
@@ -22,13 +26,27 @@ export interface Motion {
 
 /** @param climbSlope metres of height per metre along the leg, positive climbing */
 export function makeMotion(craft: Craft, pace: Pace, windKnown: boolean, climbSlope: number): Motion {
+  const solver = paceSolver(craft, pace, windKnown);
+  const throughSpeed = pace.hold === "through-speed" ? pace.speed_m_s : 0;
+  const steady =
+    throughSpeed > 0 &&
+    !(windKnown && craft.windage !== null) &&
+    !(climbSlope > 0 && craft.power.climbForce > 0);
   return {
-    solver: paceSolver(craft, pace, windKnown),
+    solver,
     conditions: { ...stillConditions(), climbSlope },
     solution: emptySolution(),
+    throughSpeed,
+    steadyRate: steady ? rateInStillMedium(solver) : -1,
     groundSpeedFixed: pace.hold === "ground-speed",
     windSetsSpeed: craft.windage !== null && (pace.hold === "power" || pace.hold === "least-energy"),
   };
+}
+
+/** Rate at a held through-medium speed, -1 where the power model has none. */
+function rateInStillMedium(solver: PaceSolver): number {
+  const solution = emptySolution();
+  return solver.solve(stillConditions(), solution) === PACE_OK ? solution.rate : -1;
 }
 
 /** Asks the pace at a place; the answer stands in `motion.solution`. */
