@@ -1,0 +1,83 @@
+import { useSignal } from "@preact/signals";
+import { useEffect, useRef } from "preact/hooks";
+import { latText, lonText } from "../format/position-text.ts";
+import { shownUnit } from "../format/units.ts";
+import type { PageState } from "../state/page-state.ts";
+import { type ChartSession, openChart } from "./chart-session.ts";
+import { ShadingLegend } from "./ShadingLegend.tsx";
+import { scaleBar } from "./scale-bar.ts";
+
+/** The chart with its tools and read-outs. The table of waypoints is its equivalent for those who can't see it. */
+export function Chart({ page }: { readonly page: PageState }) {
+  const host = useRef<HTMLDivElement>(null);
+  const session = useRef<ChartSession | null>(null);
+  const pointer = useSignal<{ lat: number; lon: number } | null>(null);
+  const metresPerPx = useSignal(1);
+  const shadingLimit = useSignal<number | null>(null);
+
+  useEffect(() => {
+    if (!host.current) return;
+    const opened = openChart(host.current, page, { pointer, metresPerPx, shadingLimit });
+    session.current = opened;
+    return () => opened.close();
+  }, [page, pointer, metresPerPx, shadingLimit]);
+
+  const { view } = page;
+  const bar = scaleBar(metresPerPx.value, shownUnit(view.units.value, "distance").si, 120);
+  const place = pointer.value;
+  return (
+    <div class="chart">
+      <section ref={host} class="chart-map" id="chart" aria-label="Chart" />
+      <p id="handle-keys" class="unseen">
+        Arrow keys move it, with Shift in fine steps; Insert adds a waypoint on the next leg; Delete removes
+        it.
+      </p>
+      <div class="chart-tools" role="toolbar" aria-label="Chart tools">
+        <button type="button" aria-label="Zoom in" onClick={() => session.current?.zoom(1)}>
+          +
+        </button>
+        <button type="button" aria-label="Zoom out" onClick={() => session.current?.zoom(-1)}>
+          −
+        </button>
+        <button type="button" onClick={() => session.current?.fitRoutes()}>
+          Show all
+        </button>
+        <button
+          type="button"
+          aria-pressed={view.adding.value}
+          title="Click or tap the chart to add waypoints to the chosen route; Enter adds one at the middle"
+          onClick={() => {
+            view.adding.value = !view.adding.value;
+          }}
+        >
+          Add waypoints
+        </button>
+        <label class="chart-shade">
+          Shade{" "}
+          <select
+            value={view.shading.value}
+            onChange={(event) => {
+              const { value } = event.currentTarget;
+              if (value === "none" || value === "wind" || value === "current") view.shading.value = value;
+            }}
+          >
+            <option value="none">nothing</option>
+            <option value="current">current</option>
+            <option value="wind">wind</option>
+          </select>
+        </label>
+      </div>
+      <ShadingLegend limit_m_s={shadingLimit.value} units={view.units.value} />
+      <div class="chart-scale" aria-hidden="true">
+        <svg width={bar.px + 2} height="7">
+          <title>Scale</title>
+          <path d={`M1 0V6H${bar.px + 1}V0`} />
+        </svg>
+        {bar.value} {shownUnit(view.units.value, "distance").symbol}
+      </div>
+      <output class="chart-position" aria-label="Position of the pointer">
+        {place === null ? "" : `${latText(place.lat)}  ${lonText(place.lon)}`}
+      </output>
+    </div>
+  );
+}

@@ -1,0 +1,73 @@
+import { effect, type Signal } from "@preact/signals";
+import type * as L from "leaflet";
+import type { FieldRole } from "../core.ts";
+import { latestWins, SUPERSEDED } from "../state/latest-wins.ts";
+import { type PageState, shownInstant } from "../state/page-state.ts";
+import type { Lattice, LatticeQuestion } from "../worker/protocol.ts";
+import { createShading, createSymbols, latticeFor, latticeLimit } from "./field-layer.ts";
+
+const ROLES: readonly FieldRole[] = ["current", "wind"];
+
+/** Shows the plan's fields at the chart's instant: symbols for each role, and shading for the one chosen. */
+export function showFields(map: L.Map, page: PageState, shadingLimit: Signal<number | null>): () => void {
+  const closers = ROLES.map((role) => showRole(map, page, role));
+  closers.push(showShading(map, page, shadingLimit));
+  return () => {
+    for (const close of closers) close();
+  };
+}
+
+function showRole(map: L.Map, page: PageState, role: FieldRole): () => void {
+  let lattice: Lattice | null = null;
+  const layer = createSymbols(() => lattice, role).addTo(map);
+  return keepAsked(map, page, (instant, ask) => {
+    const shown = (page.store.plan.value.fields ?? []).some((field) => field.role === role);
+    const put = (found: Lattice | null): void => {
+      lattice = found;
+      layer.redraw();
+    };
+    if (!shown || instant === null) put(null);
+    else void ask(latticeFor(map, role, instant, false)).then((found) => found && put(found));
+  });
+}
+
+function showShading(map: L.Map, page: PageState, limit: Signal<number | null>): () => void {
+  let shaded: { lattice: Lattice; step: LatticeQuestion } | null = null;
+  const layer = createShading(() => shaded).addTo(map);
+  return keepAsked(map, page, (instant, ask) => {
+    const role = page.view.shading.value;
+    const present = (page.store.plan.value.fields ?? []).some((field) => field.role === role);
+    const put = (found: typeof shaded): void => {
+      shaded = found;
+      limit.value = found === null ? null : latticeLimit(found.lattice);
+      layer.redraw();
+    };
+    if (role === "none" || !present || instant === null) {
+      put(null);
+      return;
+    }
+    const step = latticeFor(map, role, instant, true);
+    void ask(step).then((lattice) => lattice && put({ lattice, step }));
+  });
+}
+
+type Ask = (question: LatticeQuestion) => Promise<Lattice | null>;
+
+/** Runs now, when a signal that it reads changes, and when the map has moved; superseded answers are `null`. */
+function keepAsked(map: L.Map, page: PageState, run: (instant: number | null, ask: Ask) => void): () => void {
+  const newest = latestWins((question: LatticeQuestion) => page.engine.lattice(question));
+  const ask: Ask = async (question) => {
+    const found = await newest(question);
+    return found === SUPERSEDED ? null : found;
+  };
+  const again = (): void => run(shownInstant(page), ask);
+  const stop = effect(() => {
+    page.sheets.value;
+    again();
+  });
+  map.on("moveend resize", again);
+  return () => {
+    stop();
+    map.off("moveend resize", again);
+  };
+}

@@ -1,0 +1,68 @@
+import * as L from "leaflet";
+import "leaflet/dist/leaflet.css";
+import { CoastlineLayer, type TileSource } from "./coastline-layer.ts";
+import { createGraticule } from "./graticule-layer.ts";
+
+const MAX_ZOOM = 16;
+
+export interface ChartMap {
+  readonly map: L.Map;
+  /** Draws everything anew in the theme's colours. */
+  recolour(): void;
+  /** Shows the user's own raster tiles, or none. */
+  showTiles(address: string): void;
+  fineCoastReady(): void;
+}
+
+/** The map with coastline and graticule; nothing on it is fetched from anywhere but the worker, unless the user says where from. */
+export function createChartMap(element: HTMLElement, coast: TileSource, wantFine: () => void): ChartMap {
+  const still = window.matchMedia("(prefers-reduced-motion: reduce)").matches;
+  const map = L.map(element, {
+    center: [40, 0],
+    zoom: 2,
+    minZoom: 1,
+    maxZoom: MAX_ZOOM,
+    zoomControl: false,
+    attributionControl: false,
+    zoomSnap: 0.5,
+    zoomAnimation: !still,
+    fadeAnimation: false,
+    inertia: !still,
+    maxBounds: [
+      [-85, -100000],
+      [85, 100000],
+    ],
+  });
+  addPane(map, "coast", 210);
+  addPane(map, "shading", 220);
+  addPane(map, "graticule", 230);
+  addPane(map, "field", 240);
+
+  const coastline = new CoastlineLayer(coast, wantFine, {
+    pane: "coast",
+    maxNativeZoom: MAX_ZOOM,
+    updateWhenZooming: false,
+    keepBuffer: 1,
+  }).addTo(map);
+  const graticule = createGraticule().addTo(map);
+  let tiles: L.TileLayer | null = null;
+
+  return {
+    map,
+    recolour() {
+      coastline.redraw();
+      graticule.redraw();
+    },
+    showTiles(address) {
+      tiles?.remove();
+      tiles = address === "" ? null : L.tileLayer(address, { maxZoom: MAX_ZOOM, zIndex: 5 }).addTo(map);
+    },
+    fineCoastReady: () => coastline.redraw(),
+  };
+}
+
+function addPane(map: L.Map, name: string, zIndex: number): void {
+  const pane = map.createPane(name);
+  pane.style.zIndex = String(zIndex);
+  pane.style.pointerEvents = "none";
+}

@@ -1,0 +1,267 @@
+import { effect, type Signal } from "@preact/signals";
+import * as L from "leaflet";
+import { withinTurn } from "../format/position-text.ts";
+import { nearestSample, placeAtDistance, placeAtTime } from "../state/along-route.ts";
+import { alongLimit } from "../state/along-scale.ts";
+import { type PageState, shownInstant } from "../state/page-state.ts";
+import { appendWaypoint, deleteWaypoint, insertWaypoint, placeWaypoint } from "../state/waypoint-edits.ts";
+import { showFields } from "./chart-fields.ts";
+import { type ChartMap, createChartMap } from "./chart-map.ts";
+import { turnsToward } from "./longitude.ts";
+import { Marks } from "./marks.ts";
+import { RouteLines, shiftFor } from "./route-lines.ts";
+import { drawnRoutes, handlesOf, legMiddles } from "./route-view.ts";
+import { WaypointHandles } from "./waypoint-handles.ts";
+
+export interface ChartReadouts {
+  readonly pointer: Signal<{ lat: number; lon: number } | null>;
+  readonly metresPerPx: Signal<number>;
+  /** Where the shading's scale ends, m/s; `null` where nothing is shaded. */
+  readonly shadingLimit: Signal<number | null>;
+}
+
+export interface ChartSession {
+  zoom(steps: number): void;
+  fitRoutes(): void;
+  close(): void;
+}
+
+/** Joins the map to the page's state: what is in the plan is drawn, and what is done on the chart is done to the plan. */
+export function openChart(host: HTMLElement, page: PageState, readouts: ChartReadouts): ChartSession {
+  const chart = createChartMap(
+    host,
+    (z, x, y, detail) => page.engine.coastTile(z, x, y, detail),
+    onceAtATime(() => page.engine.loadFineCoast().then(() => chart.fineCoastReady())),
+  );
+  const { map } = chart;
+  const closers = [
+    followPointer(map, readouts),
+    showRoutes(map, page),
+    showFields(map, page, readouts.shadingLimit),
+    addByClick(map, page),
+    followTheme(chart, page),
+  ];
+  const resized = new ResizeObserver(() => map.invalidateSize({ pan: false }));
+  resized.observe(host);
+
+  const fitRoutes = (): void => showAll(map, page);
+  fitWhenFirstDrawn(page, closers, fitRoutes);
+  return {
+    zoom: (steps) => map.setZoom(map.getZoom() + steps),
+    fitRoutes,
+    close() {
+      resized.disconnect();
+      for (const close of closers) close();
+      map.remove();
+    },
+  };
+}
+
+function showRoutes(map: L.Map, page: PageState): () => void {
+  const { store, view, answers } = page;
+  const lines = new RouteLines(map, {
+    click(route, lat, lon) {
+      const { value: chosen } = store.selection;
+      const drawing = answers.answer.value.drawings[route];
+      const at = drawing ? nearestSample(drawing, lat, lon) : null;
+      if (view.adding.value && chosen.route === route && drawing && at !== null) {
+        const leg = drawing.waypoints.findIndex((sample) => sample > at);
+        insertAt(page, route, leg === -1 ? drawing.waypoints.length - 1 : leg, lat, lon, map.getZoom());
+        store.settle();
+      } else store.select({ route, waypoint: null });
+    },
+    point(route, lat, lon) {
+      const drawing = answers.answer.value.drawings[route];
+      const at = drawing ? nearestSample(drawing, lat, lon) : null;
+      const distance_m = at === null ? undefined : drawing?.distance_m[at];
+      if (distance_m !== undefined) view.pointed.value = { route, distance_m };
+    },
+    leave() {
+      view.pointed.value = null;
+    },
+  });
+  const handles = new WaypointHandles(map, {
+    select: (waypoint) => store.select({ route: store.selection.value.route, waypoint }),
+    move(index, lat, lon, done) {
+      const { route } = store.selection.value;
+      const place = rounded(lat, lon, map.getZoom());
+      store.edit("Move waypoint", (plan) => placeWaypoint(plan, route, index, place.lat, place.lon), {
+        merge: `move ${route} ${index}`,
+        select: { route, waypoint: index },
+      });
+      if (done) store.settle();
+    },
+    insert(before, lat, lon) {
+      insertAt(page, store.selection.value.route, before, lat, lon, map.getZoom());
+    },
+    remove(index) {
+      const { route } = store.selection.value;
+      store.edit("Delete waypoint", (plan) => deleteWaypoint(plan, route, index), {
+        select: { route, waypoint: Math.max(index - 1, 0) },
+      });
+    },
+  });
+  const marks = new Marks(map);
+
+  const draw = (): void => {
+    const plan = store.plan.value;
+    const answer = answers.answer.value;
+    const { route, waypoint } = store.selection.value;
+    const routes = drawnRoutes(plan, answer, route);
+    lines.draw(routes, alongLimit(answer));
+    const places = handlesOf(plan.routes[route]) ?? [];
+    const shift = shiftFor(
+      map,
+      places.map(({ lon }) => lon),
+    );
+    handles.show(places, legMiddles(places, answer.drawings[route] ?? null), waypoint, shift);
+  };
+  const mark = (): void => {
+    const answer = answers.answer.value;
+    const instant = shownInstant(page);
+    const { route: chosen } = store.selection.value;
+    const crafts = answer.drawings.flatMap((drawing, route) => {
+      const departure = answer.routes[route]?.departure;
+      if (!drawing?.profile || departure === undefined || instant === null) return [];
+      const place = placeAtTime(drawing.profile, (instant - Date.parse(departure)) / 1000);
+      return place === null ? [] : [{ route, lat: place.lat, lon: place.lon, chosen: route === chosen }];
+    });
+    marks.showCrafts(crafts);
+    const pointed = view.pointed.value;
+    const line = pointed === null ? null : answer.drawings[pointed.route];
+    marks.showPointed(line && pointed ? placeAtDistance(line, pointed.distance_m) : null);
+  };
+  const stops = [effect(draw), effect(mark)];
+  // Panning past half a turn brings another copy of the world into view.
+  const again = (): void => {
+    draw();
+    mark();
+  };
+  map.on("moveend", again);
+  return () => {
+    for (const stop of stops) stop();
+    map.off("moveend", again);
+  };
+}
+
+function insertAt(
+  page: PageState,
+  route: number,
+  before: number,
+  lat: number,
+  lon: number,
+  zoom: number,
+): void {
+  const place = rounded(lat, lon, zoom);
+  page.store.edit("Insert waypoint", (plan) => insertWaypoint(plan, route, before, place), {
+    merge: `move ${route} ${before}`,
+    select: { route, waypoint: before },
+  });
+}
+
+function addByClick(map: L.Map, page: PageState): () => void {
+  const { store, view } = page;
+  const add = ({ lat, lng }: L.LatLng): void => {
+    if (!view.adding.value) return;
+    const { route } = store.selection.value;
+    const index = store.plan.value.routes[route]?.waypoints.length ?? 0;
+    const place = rounded(lat, lng, map.getZoom());
+    store.edit("Add waypoint", (plan) => appendWaypoint(plan, route, place), {
+      select: { route, waypoint: index },
+    });
+  };
+  map.on("click", (event) => add(event.latlng));
+  const host = map.getContainer();
+  const onKey = (event: KeyboardEvent): void => {
+    if (event.target === host && event.key === "Enter") add(map.getCenter());
+    if (event.key === "Escape") view.adding.value = false;
+  };
+  host.addEventListener("keydown", onKey);
+  const stop = effect(() => {
+    host.classList.toggle("adding", view.adding.value);
+  });
+  return () => {
+    host.removeEventListener("keydown", onKey);
+    stop();
+  };
+}
+
+function followPointer(map: L.Map, { pointer, metresPerPx }: ChartReadouts): () => void {
+  map.on("mousemove", ({ latlng }) => {
+    pointer.value = { lat: latlng.lat, lon: latlng.lng };
+  });
+  map.on("mouseout", () => {
+    pointer.value = null;
+  });
+  const measure = (): void => {
+    const { x, y } = map.getSize().divideBy(2);
+    const left = map.containerPointToLatLng([x - 50, y]);
+    metresPerPx.value = map.distance(left, map.containerPointToLatLng([x + 50, y])) / 100;
+  };
+  map.on("moveend resize", measure);
+  measure();
+  return () => map.off("moveend resize", measure);
+}
+
+function followTheme(chart: ChartMap, { view }: PageState): () => void {
+  const dark = window.matchMedia("(prefers-color-scheme: dark)");
+  const recolour = (): void => chart.recolour();
+  dark.addEventListener("change", recolour);
+  const stops = [
+    effect(() => {
+      view.theme.value;
+      // The theme's class is set by another effect; colours are read once it is.
+      queueMicrotask(recolour);
+    }),
+    effect(() => chart.showTiles(view.tiles.value)),
+    effect(() => {
+      const place = view.lookAt.value;
+      if (place === null) return;
+      const shift = turnsToward(place.lon, chart.map.getCenter().lng);
+      chart.map.panInside([place.lat, place.lon + shift], { padding: [60, 60] });
+    }),
+  ];
+  return () => {
+    dark.removeEventListener("change", recolour);
+    for (const stop of stops) stop();
+  };
+}
+
+function showAll(map: L.Map, { store, answers }: PageState): void {
+  const routes = drawnRoutes(store.plan.value, answers.answer.value, 0);
+  const points = routes.flatMap(({ drawing }) => {
+    const shift = shiftFor(map, drawing.lon);
+    return Array.from(drawing.lat, (lat, at): L.LatLngTuple => [lat, (drawing.lon[at] ?? 0) + shift]);
+  });
+  if (points.length > 0) map.fitBounds(L.latLngBounds(points), { padding: [48, 48], animate: false });
+}
+
+/** Shows the whole of a plan once, when it is first there; afterwards the view is the user's. */
+function fitWhenFirstDrawn(page: PageState, closers: (() => void)[], fitRoutes: () => void): void {
+  let fitted = false;
+  closers.push(
+    effect(() => {
+      const ready = page.store.plan.value.routes.some((route) => route.waypoints.length > 1);
+      if (fitted || !ready) return;
+      fitted = true;
+      queueMicrotask(fitRoutes);
+    }),
+  );
+}
+
+/** A position rounded to what a pixel can tell at a zoom, so that plans stay readable. */
+function rounded(lat: number, lon: number, zoom: number): { lat: number; lon: number } {
+  const decimals = Math.min(Math.max(Math.ceil(Math.log10((256 * 2 ** zoom) / 360)), 2), 6);
+  const round = (value: number): number => Number(value.toFixed(decimals));
+  return { lat: round(Math.min(Math.max(lat, -90), 90)), lon: round(withinTurn(lon)) };
+}
+
+function onceAtATime(run: () => Promise<void>): () => void {
+  let running: Promise<void> | null = null;
+  return () => {
+    // After a failure the next zoom tries again; after success there is nothing left to do.
+    running ??= run().catch(() => {
+      running = null;
+    });
+  };
+}

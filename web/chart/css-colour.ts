@@ -1,0 +1,4 @@
+/** A custom property's value as the page's theme has it now. */
+export function cssColour(property: string): string {
+  return getComputedStyle(document.documentElement).getPropertyValue(property).trim();
+}

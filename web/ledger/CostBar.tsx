@@ -1,0 +1,32 @@
+import type { RouteEstimate } from "../core.ts";
+import { durationText, signedDurationText } from "../format/time-text.ts";
+import { costBar } from "./cost-bar.ts";
+
+/** A route's time as one stacked bar on the ledger's common scale, and the same in figures. */
+export function CostBar({ route, end }: { readonly route: RouteEstimate; readonly end: number }) {
+  const { still, penalty } = route.totals;
+  return (
+    <div class="cost-bar">
+      <div class="bar" aria-hidden="true">
+        {costBar(route).map(({ kind, from, to }) => (
+          <span
+            key={kind}
+            class={kind}
+            style={{ left: `${(100 * from) / end}%`, width: `${(100 * (to - from)) / end}%` }}
+          />
+        ))}
+      </div>
+      <p>
+        still {durationText(still.time_s)}
+        {penalty !== null && (
+          <>
+            {" · along "}
+            {signedDurationText(penalty.alongTime_s)}
+            {" · cross "}
+            {signedDurationText(penalty.crossTime_s)}
+          </>
+        )}
+      </p>
+    </div>
+  );
+}

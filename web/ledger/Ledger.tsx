@@ -1,0 +1,183 @@
+import { ADVISORY, type RouteEstimate, type StoreUnit } from "../core.ts";
+import { clockText, durationText, signedDurationText, zoneText } from "../format/time-text.ts";
+import { inUnit, signedInUnit, storeUnit } from "../format/units.ts";
+import { Swatch } from "../ribbon/Ribbon.tsx";
+import type { PageState } from "../state/page-state.ts";
+import { CostBar } from "./CostBar.tsx";
+import { barsEnd } from "./cost-bar.ts";
+import { FindingList } from "./FindingList.tsx";
+import { type Best, bestOf } from "./ledger-best.ts";
+import { StatusMark } from "./StatusMark.tsx";
+
+/** A row a route: what it costs, what is left, what to worry about; beside the advisory, since here is where one decides. */
+export function Ledger({ page }: { readonly page: PageState }) {
+  const { store, view, answers } = page;
+  const { routes, fault } = answers.answer.value;
+  const plan = store.plan.value;
+  const base = view.base.value === null ? null : (routes[view.base.value] ?? null);
+  const best = bestOf(routes);
+  const end = barsEnd(routes);
+  const zone = view.zone.value;
+  return (
+    <section class="pane ledger" data-pane="ledger" aria-labelledby="ledger-title">
+      <header class="pane-head">
+        <h2 id="ledger-title">Ledger</h2>
+        <label>
+          Differences to{" "}
+          <select
+            value={view.base.value ?? ""}
+            onChange={({ currentTarget: { value } }) => {
+              view.base.value = value === "" ? null : Number(value);
+            }}
+          >
+            <option value="">no route</option>
+            {plan.routes.map(({ name }, at) => (
+              <option key={name} value={at}>
+                {name}
+              </option>
+            ))}
+          </select>
+        </label>
+      </header>
+      {fault !== null && (
+        <p class="fault" role="alert">
+          {fault}
+        </p>
+      )}
+      <div class="scroll">
+        <table class="ledger-table">
+          <thead>
+            <tr>
+              <th scope="col">Route</th>
+              <th scope="col">Arrival {zone === "UTC" ? "UTC" : zoneText(plan.departure, zone)}</th>
+              <th scope="col">Time</th>
+              <th scope="col">Use</th>
+              <th scope="col">Left</th>
+              <th scope="col">Findings</th>
+            </tr>
+          </thead>
+          {plan.routes.map(({ name }, at) => (
+            <LedgerRow
+              key={at}
+              page={page}
+              at={at}
+              name={name}
+              route={routes[at] ?? null}
+              base={base}
+              best={best}
+              end={end}
+            />
+          ))}
+        </table>
+        <BarLegend />
+      </div>
+      <p class="advisory">{ADVISORY}</p>
+      <FindingList page={page} />
+    </section>
+  );
+}
+
+interface LedgerRowProps {
+  readonly page: PageState;
+  readonly at: number;
+  readonly name: string;
+  readonly route: RouteEstimate | null;
+  readonly base: RouteEstimate | null;
+  readonly best: Best;
+  /** End of the longest bar, s. */
+  readonly end: number;
+}
+
+function LedgerRow({ page, at, name, route, base, best, end }: LedgerRowProps) {
+  const { store, view } = page;
+  const chosen = store.selection.value.route === at;
+  const against = base !== null && base !== route ? base : null;
+  return (
+    <tbody class={chosen ? "chosen" : ""}>
+      <tr>
+        <th scope="row">
+          <button
+            type="button"
+            aria-pressed={chosen}
+            onClick={() => store.select({ route: at, waypoint: null })}
+          >
+            <Swatch route={at} />
+            {name}
+          </button>
+        </th>
+        {route === null ? (
+          <td colSpan={5}>still being drawn</td>
+        ) : (
+          <>
+            <Cell best={best.arrival.has(at)} difference={arrivalDifference(route, against)}>
+              {route.arrival === null ? "not reached" : clockText(route.arrival, view.zone.value, true)}
+            </Cell>
+            <Cell best={false} difference={null}>
+              {durationText(wholeTime(route))}
+            </Cell>
+            <Cell best={best.use.has(at)} difference={amountDifference(route, against, "use")}>
+              {amountText(route.totals.use, route.storeUnit, route.usable)}
+            </Cell>
+            <Cell best={best.remaining.has(at)} difference={amountDifference(route, against, "remaining")}>
+              {amountText(route.totals.remaining, route.storeUnit, route.usable)}
+            </Cell>
+            <td>
+              <StatusMark route={route} />
+            </td>
+          </>
+        )}
+      </tr>
+      {route !== null && (
+        <tr class="cost">
+          <td colSpan={6}>
+            <CostBar route={route} end={end} />
+          </td>
+        </tr>
+      )}
+    </tbody>
+  );
+}
+
+function Cell(props: { best: boolean; difference: string | null; children: string }) {
+  return (
+    <td class={props.best ? "best" : ""}>
+      {props.children}
+      {props.best && <span class="best-mark"> best</span>}
+      {props.difference !== null && <span class="difference">{props.difference}</span>}
+    </td>
+  );
+}
+
+function BarLegend() {
+  return (
+    <p class="bar-legend" aria-hidden="true">
+      <span class="key still" /> still <span class="key along" /> along, against <span class="key cross" />{" "}
+      cross <span class="key gain" /> saved by a following flow
+    </p>
+  );
+}
+
+function wholeTime({ totals }: RouteEstimate): number | null {
+  return totals.time_s === null ? null : totals.time_s + totals.stay_s;
+}
+
+function amountText(amount: number | null, unit: StoreUnit, largest: number): string {
+  const shown = storeUnit(unit, largest);
+  return amount === null ? "–" : `${inUnit(amount, shown)} ${shown.symbol}`;
+}
+
+function arrivalDifference(route: RouteEstimate, base: RouteEstimate | null): string | null {
+  if (base === null || route.arrival === null || base.arrival === null) return null;
+  return signedDurationText((Date.parse(route.arrival) - Date.parse(base.arrival)) / 1000);
+}
+
+function amountDifference(
+  route: RouteEstimate,
+  base: RouteEstimate | null,
+  key: "use" | "remaining",
+): string | null {
+  const mine = route.totals[key];
+  const other = base?.totals[key] ?? null;
+  if (mine === null || other === null) return null;
+  return signedInUnit(mine - other, storeUnit(route.storeUnit, route.usable));
+}

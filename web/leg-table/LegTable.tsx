@@ -1,0 +1,118 @@
+import { ADVISORY, type LegEstimate } from "../core.ts";
+import { durationText } from "../format/time-text.ts";
+import { inUnit, shownUnit, storeUnit } from "../format/units.ts";
+import { Swatch } from "../ribbon/Ribbon.tsx";
+import type { PageState } from "../state/page-state.ts";
+import type { RouteDrawing } from "../worker/protocol.ts";
+import { type LegColumn, legColumns } from "./leg-columns.ts";
+
+/** The leg table of the chosen route. */
+export function LegTable({ page }: { readonly page: PageState }) {
+  const { store, view, answers } = page;
+  const { route: chosen } = store.selection.value;
+  const route = answers.answer.value.routes[chosen] ?? null;
+  const drawing = answers.answer.value.drawings[chosen] ?? null;
+  if (route === null) {
+    return (
+      <section class="pane legs" data-pane="legs" aria-labelledby="legs-title">
+        <header class="pane-head">
+          <h2 id="legs-title">Leg table</h2>
+        </header>
+        <p class="quiet">A route with two waypoints has a leg table.</p>
+      </section>
+    );
+  }
+  const columns = legColumns(route, view.units.value, view.zone.value);
+  const pointed = view.pointed.value?.route === chosen ? view.pointed.value.distance_m : null;
+  const marked = pointed === null || drawing === null ? null : legAt(drawing, pointed);
+  return (
+    <section class="pane legs" data-pane="legs" aria-labelledby="legs-title">
+      <header class="pane-head">
+        <h2 id="legs-title">Leg table</h2>
+        <span class="leg-route">
+          <Swatch route={chosen} />
+          {route.name}
+        </span>
+      </header>
+      <div class="scroll">
+        <table class="leg-table">
+          <thead>
+            <tr>
+              {columns.map(({ key, heading, unit, numeric }) => (
+                <th key={key} scope="col" class={numeric ? "figure" : ""}>
+                  {heading}
+                  {unit !== "" && <span class="unit">{unit}</span>}
+                </th>
+              ))}
+            </tr>
+          </thead>
+          <tbody>
+            {route.legs.map((leg) => (
+              <LegRow
+                key={leg.leg}
+                page={page}
+                leg={leg}
+                columns={columns}
+                drawing={drawing}
+                marked={leg.leg === marked}
+              />
+            ))}
+          </tbody>
+        </table>
+      </div>
+      <p class="leg-totals">
+        {route.name}: {inUnit(route.totals.distance_m, shownUnit(view.units.value, "distance"))}{" "}
+        {shownUnit(view.units.value, "distance").symbol}, {durationText(route.totals.time_s)} under way,{" "}
+        {inUnit(route.totals.use, storeUnit(route.storeUnit, route.usable))}{" "}
+        {storeUnit(route.storeUnit, route.usable).symbol} used
+      </p>
+      <p class="advisory only-print">{ADVISORY}</p>
+    </section>
+  );
+}
+
+interface LegRowProps {
+  readonly page: PageState;
+  readonly leg: LegEstimate;
+  readonly columns: readonly LegColumn[];
+  readonly drawing: RouteDrawing | null;
+  readonly marked: boolean;
+}
+
+function LegRow({ page, leg, columns, drawing, marked }: LegRowProps) {
+  const { store, view } = page;
+  const { route, waypoint } = store.selection.value;
+  const classes = [marked ? "pointed" : "", waypoint === leg.leg ? "chosen" : ""].join(" ").trim();
+  return (
+    <tr
+      class={classes}
+      onPointerEnter={() => {
+        const middle = drawing === null ? null : middleOf(drawing, leg.leg);
+        if (middle !== null) view.pointed.value = { route, distance_m: middle };
+      }}
+      onPointerLeave={() => {
+        view.pointed.value = null;
+      }}
+      onClick={() => store.select({ route, waypoint: leg.leg })}
+    >
+      {columns.map(({ key, numeric, text }) => (
+        <td key={key} class={numeric ? "figure" : ""}>
+          {text(leg)}
+        </td>
+      ))}
+    </tr>
+  );
+}
+
+/** The leg, from 1, that a distance along the route lies on. */
+export function legAt(drawing: RouteDrawing, distance_m: number): number {
+  const ends = Array.from(drawing.waypoints, (sample) => drawing.distance_m[sample] ?? 0);
+  const next = ends.findIndex((end) => end > distance_m);
+  return next === -1 ? ends.length - 1 : Math.max(next, 1);
+}
+
+function middleOf(drawing: RouteDrawing, leg: number): number | null {
+  const from = drawing.distance_m[drawing.waypoints[leg - 1] ?? -1];
+  const to = drawing.distance_m[drawing.waypoints[leg] ?? -1];
+  return from === undefined || to === undefined ? null : (from + to) / 2;
+}

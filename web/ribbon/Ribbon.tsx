@@ -1,0 +1,265 @@
+import type { LinearScale } from "d3-scale";
+import { area, line } from "d3-shape";
+import type { Profile, RouteEstimate } from "../core.ts";
+import { alongColour, routeHue } from "../format/palette.ts";
+import { inUnit, number, shownUnit, storeUnit } from "../format/units.ts";
+import { placeAtTime, valueAtDistance } from "../state/along-route.ts";
+import type { PageState } from "../state/page-state.ts";
+import type { RouteDrawing } from "../worker/protocol.ts";
+import { ribbonRuns } from "./ribbon-runs.ts";
+
+const STORE_TOP = 3;
+const STORE_HEIGHT = 24;
+const BAND_TOP = STORE_TOP + STORE_HEIGHT + 2;
+const BAND_HEIGHT = 11;
+const HEIGHT = BAND_TOP + BAND_HEIGHT + 15;
+
+interface RibbonProps {
+  readonly page: PageState;
+  readonly route: number;
+  readonly scale: LinearScale;
+  readonly width: number;
+  /** Where the colour scale ends, m/s. */
+  readonly limit: number;
+}
+
+/** One route unrolled: the store left above, the along-track component as a band, waypoints as ticks. */
+export function Ribbon({ page, route, scale, width, limit }: RibbonProps) {
+  const { store, view, answers } = page;
+  const document = store.plan.value.routes[route];
+  const drawing = answers.answer.value.drawings[route] ?? null;
+  const estimate = answers.answer.value.routes[route] ?? null;
+  const chosen = store.selection.value.route === route;
+  if (document === undefined) return null;
+
+  const label = (
+    <button
+      type="button"
+      class="ribbon-name"
+      aria-pressed={chosen}
+      onClick={() => store.select({ route, waypoint: null })}
+    >
+      <Swatch route={route} />
+      {document.name}
+    </button>
+  );
+  if (!drawing?.profile || estimate === null) {
+    return (
+      <div class="ribbon">
+        {label}
+        <p class="ribbon-none">Add waypoints on the chart or in the table.</p>
+      </div>
+    );
+  }
+  const axis = view.axis.value === "distance" ? drawing.profile.distance_m : drawing.profile.time_s;
+  const pointed = view.pointed.value?.route === route ? view.pointed.value.distance_m : null;
+  const point = (distance_m: number | null): void => {
+    view.pointed.value = distance_m === null ? null : { route, distance_m };
+  };
+  return (
+    <div class={chosen ? "ribbon chosen" : "ribbon"}>
+      {label}
+      <div
+        class="ribbon-strip"
+        role="slider"
+        tabIndex={0}
+        aria-label={`Place along ${document.name}`}
+        aria-valuemin={0}
+        aria-valuemax={100}
+        aria-valuenow={Math.round((100 * (pointed ?? 0)) / (drawing.distance_m.at(-1) ?? 1))}
+        aria-valuetext={placeText(page, drawing.profile, estimate, pointed ?? 0)}
+        onPointerMove={(event) =>
+          point(distanceAt(drawing, axis, scale.invert(event.offsetX), view.axis.value === "time"))
+        }
+        onPointerLeave={() => point(null)}
+        onFocus={() => point(pointed ?? 0)}
+        onBlur={() => point(null)}
+        onKeyDown={(event) => {
+          const total = drawing.distance_m.at(-1) ?? 0;
+          const next = keyTarget(event.key, event.shiftKey, pointed ?? 0, total);
+          if (next === null) return;
+          event.preventDefault();
+          point(next);
+        }}
+        onClick={() => store.select({ route, waypoint: null })}
+      >
+        <svg width={width} height={HEIGHT} aria-hidden="true">
+          <StoreLine profile={drawing.profile} axis={axis} scale={scale} estimate={estimate} route={route} />
+          <Band profile={drawing.profile} axis={axis} scale={scale} limit={limit} />
+          <Ticks page={page} route={route} drawing={drawing} axis={axis} scale={scale} />
+          {pointed !== null && (
+            <path
+              class="ribbon-cursor"
+              d={`M${scale(valueAtDistance(drawing.profile.distance_m, axis, pointed) ?? 0)} 0V${BAND_TOP + BAND_HEIGHT + 3}`}
+            />
+          )}
+        </svg>
+      </div>
+    </div>
+  );
+}
+
+export function Swatch({ route }: { readonly route: number }) {
+  return (
+    <svg class="swatch" width="12" height="12" aria-hidden="true">
+      <circle cx="6" cy="6" r="5" fill={routeHue(route)} />
+    </svg>
+  );
+}
+
+function Band({
+  profile,
+  axis,
+  scale,
+  limit,
+}: {
+  profile: Profile;
+  axis: Float64Array;
+  scale: LinearScale;
+  limit: number;
+}) {
+  const start = scale(axis[0] ?? 0);
+  const end = scale(axis.at(-1) ?? 0);
+  return (
+    <g>
+      {ribbonRuns(profile, axis, limit).map(({ from, to, classNumber }) => (
+        <rect
+          key={from}
+          x={scale(from)}
+          y={BAND_TOP}
+          width={scale(to) - scale(from) + 0.4}
+          height={BAND_HEIGHT}
+          fill={alongColour(classNumber)}
+        />
+      ))}
+      <rect
+        class="ribbon-frame"
+        x={start}
+        y={BAND_TOP}
+        width={Math.max(end - start, 0)}
+        height={BAND_HEIGHT}
+      />
+    </g>
+  );
+}
+
+interface StoreLineProps {
+  readonly profile: Profile;
+  readonly axis: Float64Array;
+  readonly scale: LinearScale;
+  readonly estimate: RouteEstimate;
+  readonly route: number;
+}
+
+/** Store left, from full at the top to empty at the bottom, and the reserve that it must not fall below. */
+function StoreLine({ profile, axis, scale, estimate, route }: StoreLineProps) {
+  const bottom = STORE_TOP + STORE_HEIGHT;
+  const level = (amount: number): number =>
+    bottom - (Math.min(Math.max(amount / estimate.usable, 0), 1) * STORE_HEIGHT || 0);
+  const samples = Array.from(axis, (_, at) => at);
+  const x = (at: number): number => scale(axis[at] ?? 0);
+  const y = (at: number): number => level(profile.remaining[at] ?? 0);
+  const fill = area<number>().x(x).y0(bottom).y1(y)(samples);
+  const edge = line<number>().x(x).y(y)(samples);
+  return (
+    <g>
+      <path class="store-fill" d={fill ?? ""} />
+      <path d={edge ?? ""} fill="none" stroke={routeHue(route)} stroke-width="1.8" />
+      {estimate.reserve !== null && estimate.reserve > 0 && (
+        <path
+          class="store-reserve"
+          d={`M${scale(axis[0] ?? 0)} ${level(estimate.reserve)}H${scale(axis.at(-1) ?? 0)}`}
+        />
+      )}
+    </g>
+  );
+}
+
+interface TicksProps {
+  readonly page: PageState;
+  readonly route: number;
+  readonly drawing: RouteDrawing;
+  readonly axis: Float64Array;
+  readonly scale: LinearScale;
+}
+
+const NAME_GAP = 54;
+
+function Ticks({ page, route, drawing, axis, scale }: TicksProps) {
+  const { profile } = drawing;
+  const waypoints = page.store.plan.value.routes[route]?.waypoints ?? [];
+  if (!profile) return null;
+  let named = Number.NEGATIVE_INFINITY;
+  return (
+    <g class="ribbon-ticks">
+      {Array.from(drawing.waypoints, (sample, at) => {
+        const along = drawing.distance_m[sample] ?? 0;
+        if (along > (profile.distance_m.at(-1) ?? 0)) return null;
+        const x = scale(valueAtDistance(profile.distance_m, axis, along) ?? 0);
+        const hasRoom = x - named >= NAME_GAP;
+        if (hasRoom) named = x;
+        const last = at === drawing.waypoints.length - 1;
+        return (
+          <g key={at} transform={`translate(${x} ${BAND_TOP})`}>
+            <path d={`M0 -2V${BAND_HEIGHT + 3}`} />
+            {hasRoom && (
+              <text y={BAND_HEIGHT + 13} text-anchor={at === 0 ? "start" : last ? "end" : "middle"}>
+                {waypoints[at]?.name ?? at + 1}
+              </text>
+            )}
+          </g>
+        );
+      })}
+    </g>
+  );
+}
+
+/** The distance along the route that a value of the axis stands for. */
+function distanceAt(
+  drawing: RouteDrawing,
+  axis: Float64Array,
+  value: number,
+  byTime: boolean,
+): number | null {
+  const held = Math.min(Math.max(value, 0), axis.at(-1) ?? 0);
+  if (!byTime || !drawing.profile) return held;
+  return placeAtTime(drawing.profile, held)?.distance_m ?? null;
+}
+
+/** Where a key leads: arrows by a hundredth of the route, with Shift by a thousandth. */
+export function keyTarget(key: string, fine: boolean, from: number, total: number): number | null {
+  const step = total * (fine ? 0.001 : 0.01);
+  const target: Record<string, number> = {
+    ArrowRight: from + step,
+    ArrowUp: from + step,
+    ArrowLeft: from - step,
+    ArrowDown: from - step,
+    PageUp: from + 10 * step,
+    PageDown: from - 10 * step,
+    Home: 0,
+    End: total,
+  };
+  const found = target[key];
+  return found === undefined ? null : Math.min(Math.max(found, 0), total);
+}
+
+/** The figures at a place, for those who hear the ribbon. */
+export function placeText(
+  { view }: PageState,
+  profile: Profile,
+  estimate: RouteEstimate,
+  distance_m: number,
+): string {
+  const units = view.units.value;
+  const speed = shownUnit(units, "speed");
+  const at = (values: Float64Array): number => valueAtDistance(profile.distance_m, values, distance_m) ?? 0;
+  const distance = shownUnit(units, "distance");
+  const amount = storeUnit(estimate.storeUnit, estimate.usable);
+  const along = at(profile.along_m_s);
+  return [
+    `${inUnit(distance_m, distance)} ${distance.symbol}`,
+    `${number(Math.abs(along) / speed.si, speed.decimals)} ${speed.symbol} ${along < 0 ? "against" : "with"}`,
+    `ground speed ${inUnit(at(profile.groundSpeed_m_s), speed)} ${speed.symbol}`,
+    `${inUnit(at(profile.remaining), amount)} ${amount.symbol} left`,
+  ].join(", ");
+}

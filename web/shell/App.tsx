@@ -1,0 +1,60 @@
+import { Chart } from "../chart/Chart.tsx";
+import { Ledger } from "../ledger/Ledger.tsx";
+import { LegTable } from "../leg-table/LegTable.tsx";
+import { Ribbons } from "../ribbon/Ribbons.tsx";
+import type { PageState } from "../state/page-state.ts";
+import type { Pane } from "../state/page-view.ts";
+import { RouteEditor } from "../waypoints/RouteEditor.tsx";
+import { ClockBar } from "./ClockBar.tsx";
+import { Header } from "./Header.tsx";
+import { PlanBar } from "./PlanBar.tsx";
+
+const PANES: readonly (readonly [Pane, string])[] = [
+  ["chart", "Chart"],
+  ["ribbons", "Ribbons"],
+  ["ledger", "Ledger"],
+  ["route", "Plan"],
+  ["legs", "Legs"],
+];
+
+export function App({ page }: { readonly page: PageState }) {
+  const { view } = page;
+  return (
+    <div class="page" data-shown={view.pane.value}>
+      <nav class="skip" aria-label="Skip to">
+        <a href="#ledger-title">Ledger</a>
+        <a href="#route-title">Route</a>
+        <a href="#legs-title">Leg table</a>
+      </nav>
+      <Header page={page} />
+      <PlanBar page={page} />
+      <main>
+        <section class="pane chart-pane" data-pane="chart" aria-label="Chart and clock">
+          <Chart page={page} />
+          <ClockBar page={page} />
+        </section>
+        <Ribbons page={page} />
+        <Ledger page={page} />
+        <RouteEditor page={page} />
+        <LegTable page={page} />
+      </main>
+      <nav class="pane-tabs" aria-label="Panes">
+        {PANES.map(([pane, name]) => (
+          <button
+            key={pane}
+            type="button"
+            aria-current={view.pane.value === pane ? "true" : undefined}
+            onClick={() => {
+              view.pane.value = pane;
+            }}
+          >
+            {name}
+          </button>
+        ))}
+      </nav>
+      <p class="unseen" role="status" aria-live="polite">
+        {view.announcement.value}
+      </p>
+    </div>
+  );
+}

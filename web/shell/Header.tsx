@@ -1,0 +1,80 @@
+import type { PageState } from "../state/page-state.ts";
+import { setPlanText } from "../state/plan-edits.ts";
+import { TextField } from "../waypoints/TextField.tsx";
+import { openPlanFile, savePlan } from "./plan-files.ts";
+import { Settings } from "./Settings.tsx";
+
+/** The plan's title, its files, undo and redo, and how things are shown. */
+export function Header({ page }: { readonly page: PageState }) {
+  const { store } = page;
+  const { undoLabel, redoLabel } = store;
+  return (
+    <header class="page-head">
+      <h1>
+        <Mark />
+        Legwork
+      </h1>
+      <TextField
+        label="Title of the plan"
+        value={store.plan.value.title ?? ""}
+        placeholder="Untitled plan"
+        onText={(text) => store.edit("Change title", (plan) => setPlanText(plan, "title", text))}
+      />
+      <span class="saved-state">{store.unsaved.value ? "not saved to a file" : ""}</span>
+      <div class="tools" role="toolbar" aria-label="Plan file">
+        <button
+          type="button"
+          disabled={undoLabel.value === null}
+          title={undoLabel.value === null ? "Nothing to undo" : `Undo: ${undoLabel.value}`}
+          onClick={() => store.undo()}
+        >
+          Undo
+        </button>
+        <button
+          type="button"
+          disabled={redoLabel.value === null}
+          title={redoLabel.value === null ? "Nothing to redo" : `Redo: ${redoLabel.value}`}
+          onClick={() => store.redo()}
+        >
+          Redo
+        </button>
+        <label class="button">
+          Open
+          <input
+            type="file"
+            class="unseen"
+            accept=".json,application/json"
+            onChange={({ currentTarget }) => {
+              const file = currentTarget.files?.[0];
+              if (file) void openPlanFile(page, file);
+              currentTarget.value = "";
+            }}
+          />
+        </label>
+        <button type="button" onClick={() => savePlan(page)}>
+          Save
+        </button>
+        <button type="button" onClick={() => window.print()}>
+          Print
+        </button>
+      </div>
+      <Settings page={page} />
+    </header>
+  );
+}
+
+function Mark() {
+  return (
+    <svg width="22" height="22" viewBox="0 0 22 22" aria-hidden="true">
+      <path
+        d="M3 18 9 8l5 5 5-10"
+        fill="none"
+        stroke="currentColor"
+        stroke-width="2.2"
+        stroke-linejoin="round"
+      />
+      <circle cx="3.5" cy="17.5" r="2.5" fill="currentColor" />
+      <circle cx="18.5" cy="3.5" r="2.5" fill="currentColor" />
+    </svg>
+  );
+}

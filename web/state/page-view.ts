@@ -1,0 +1,57 @@
+import { type Signal, signal } from "@preact/signals";
+
+export type UnitsPreset = "sea" | "air" | "metric";
+export type Theme = "auto" | "light" | "dark";
+export type RibbonAxis = "distance" | "time";
+export type Pane = "chart" | "ribbons" | "ledger" | "route" | "legs";
+
+/** A place on a route that the pointer or the keyboard points at, shown alike on chart, ribbons and table. */
+export interface Pointed {
+  readonly route: number;
+  /** Metres from the route's start. */
+  readonly distance_m: number;
+}
+
+/** How the page shows the plan; none of it is part of the plan, and none of it is undone. */
+export interface PageView {
+  readonly units: Signal<UnitsPreset>;
+  /** IANA name of the time zone that times are shown in; "UTC" unless chosen. */
+  readonly zone: Signal<string>;
+  readonly theme: Signal<Theme>;
+  readonly axis: Signal<RibbonAxis>;
+  /** The instant that the chart shows, ms since 1970; `null` for the departure. */
+  readonly instant: Signal<number | null>;
+  readonly pointed: Signal<Pointed | null>;
+  /** Route that the ledger's differences are taken against; `null` for none. */
+  readonly base: Signal<number | null>;
+  /** The pane that a narrow screen shows. */
+  readonly pane: Signal<Pane>;
+  /** A place that the chart is asked to bring into view. */
+  readonly lookAt: Signal<{ readonly lat: number; readonly lon: number } | null>;
+  /** Whether a click on the chart adds a waypoint. */
+  readonly adding: Signal<boolean>;
+  /** Which field is shaded by speed on the chart. */
+  readonly shading: Signal<"none" | "wind" | "current">;
+  /** The user's own raster tile address with {z}, {x}, {y}; empty for none. */
+  readonly tiles: Signal<string>;
+  /** What the live region says. */
+  readonly announcement: Signal<string>;
+}
+
+export function createPageView(): PageView {
+  return {
+    units: signal<UnitsPreset>("sea"),
+    zone: signal("UTC"),
+    theme: signal<Theme>("auto"),
+    axis: signal<RibbonAxis>("distance"),
+    instant: signal<number | null>(null),
+    pointed: signal<Pointed | null>(null),
+    base: signal<number | null>(null),
+    pane: signal<Pane>("chart"),
+    lookAt: signal<{ readonly lat: number; readonly lon: number } | null>(null),
+    adding: signal(false),
+    shading: signal<"none" | "wind" | "current">("none"),
+    tiles: signal(""),
+    announcement: signal(""),
+  };
+}

@@ -1,0 +1,51 @@
+import type { FieldRole } from "../core.ts";
+
+/*
+ * A plan as its file holds it: quantities and positions are the user's own text, kept as written, so that a plan that is opened
+ * and saved says what it said. Only the core reads the texts.
+ */
+
+export interface WaypointDocument {
+  readonly name?: string;
+  readonly lat: number | string;
+  readonly lon: number | string;
+  readonly path?: "geodesic" | "rhumb";
+  readonly speed?: string;
+  readonly stay?: string;
+  readonly height?: string;
+}
+
+export interface RouteDocument {
+  readonly name: string;
+  readonly path?: "geodesic" | "rhumb";
+  readonly waypoints: readonly WaypointDocument[];
+}
+
+export interface PaceDocument {
+  readonly hold: "through-speed" | "ground-speed" | "power" | "least-energy";
+  readonly speed?: string;
+  readonly power?: string;
+}
+
+export interface FieldDocument {
+  readonly role: FieldRole;
+  readonly file: string;
+  readonly columns?: Readonly<Record<string, string>>;
+  readonly gaps?: "nearest" | "zero" | "stop";
+  readonly beyond?: "stop" | "hold";
+  readonly outside?: "stop" | "zero";
+}
+
+/** A craft as its file holds it; its own form edits it. */
+export type CraftDocument = Readonly<Record<string, unknown>>;
+
+export interface PlanDocument {
+  readonly format: "legwork-plan/1";
+  readonly title?: string;
+  readonly departure: string;
+  readonly craft: CraftDocument | { readonly file: string };
+  readonly pace?: PaceDocument;
+  readonly reserve?: string;
+  readonly fields?: readonly FieldDocument[];
+  readonly routes: readonly RouteDocument[];
+}

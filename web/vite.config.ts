@@ -1,0 +1,47 @@
+import { defineConfig, type Plugin } from "vite";
+
+/*
+ * Images may come from elsewhere only because a user may enter a tile address of their own; shell/tile-policy.ts narrows this to
+ * that one origin, or to none, before anything is drawn.
+ */
+const POLICY = [
+  "default-src 'none'",
+  "script-src 'self'",
+  "style-src 'self'",
+  "img-src 'self' data: blob: https: http:",
+  "connect-src 'self'",
+  "worker-src 'self'",
+  "manifest-src 'self'",
+  "base-uri 'none'",
+  "form-action 'none'",
+].join("; ");
+
+/** Puts the policy first in the head of what is built; the development server needs inline scripts of its own. */
+function contentPolicy(): Plugin {
+  return {
+    name: "content-policy",
+    apply: "build",
+    transformIndexHtml: () => [
+      {
+        tag: "meta",
+        attrs: { "http-equiv": "Content-Security-Policy", content: POLICY },
+        injectTo: "head-prepend",
+      },
+    ],
+  };
+}
+
+export default defineConfig({
+  root: new URL(".", import.meta.url).pathname,
+  base: "./",
+  plugins: [contentPolicy()],
+  worker: { format: "es" },
+  build: {
+    outDir: new URL("../dist/page", import.meta.url).pathname,
+    emptyOutDir: true,
+    target: "es2022",
+    // A coastline inlined as text would be in the first load.
+    assetsInlineLimit: 2048,
+    modulePreload: { polyfill: false },
+  },
+});

@@ -1,0 +1,39 @@
+import { useEffect, useRef } from "preact/hooks";
+
+interface TextFieldProps {
+  readonly label: string;
+  readonly value: string;
+  /** Called with the new text on Enter or when the field is left, not at every key. */
+  readonly onText: (text: string) => void;
+  readonly placeholder?: string;
+}
+
+/** A field that speaks when its text is finished, and shows the plan's text again on Escape. */
+export function TextField({ label, value, onText, placeholder }: TextFieldProps) {
+  const input = useRef<HTMLInputElement>(null);
+  useEffect(() => {
+    if (input.current && document.activeElement !== input.current) input.current.value = value;
+  }, [value]);
+  const finish = (text: string): void => {
+    if (text !== value) onText(text);
+  };
+  return (
+    <input
+      ref={input}
+      type="text"
+      aria-label={label}
+      defaultValue={value}
+      {...(placeholder === undefined ? {} : { placeholder })}
+      autocomplete="off"
+      spellcheck={false}
+      onBlur={(event) => {
+        finish(event.currentTarget.value);
+        event.currentTarget.value = value;
+      }}
+      onKeyDown={(event) => {
+        if (event.key === "Enter") finish(event.currentTarget.value);
+        if (event.key === "Escape") event.currentTarget.value = value;
+      }}
+    />
+  );
+}
