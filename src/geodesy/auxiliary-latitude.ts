@@ -130,6 +130,9 @@ export function isometricLatitude(e2: number, sin: number, cos: number): number 
   return Math.asinh(sin / cos) - eccentricPart(e2, sin);
 }
 
+/** Latitudes closer than this, rad, are one: below 1e-300 numbers lose their precision, and quotients of them are void. */
+const COINCIDENT = 1e-290;
+
 /**
  * Slope of the isometric latitude between two geodetic latitudes: (ψ₂ - ψ₁) / (φ₂ - φ₁), accurate for any distance
  * between the two and equal to dψ/dφ where they coincide. Neither may be a pole.
@@ -149,7 +152,7 @@ export function isometricSlope(
   sinHalf: number,
   cosMean: number,
 ): number {
-  if (difference === 0) return (1 - e2) / (cos1 * (1 - e2 * sin1 * sin1));
+  if (Math.abs(difference) < COINCIDENT) return (1 - e2) / (cos1 * (1 - e2 * sin1 * sin1));
   // On the sphere ψ₂ - ψ₁ = atanh((sin φ₂ - sin φ₁) / (1 - sin φ₁ sin φ₂)) = 2 atanh(sin((φ₂-φ₁)/2) / cos((φ₁+φ₂)/2)).
   // The quotient nears 1 where the latitudes are far apart; there the plain difference loses nothing.
   const quotient = sinHalf / cosMean;

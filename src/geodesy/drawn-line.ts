@@ -44,7 +44,7 @@ export function densify(track: Track, tolerance = 50, ellipsoid: Ellipsoid = WGS
   if (track.length === 0) return points;
   const deviationLimit = SAMPLED_SHARE * tolerance;
   // The nodes still to reach, nearest last; a stretch is halved until its chord is close enough.
-  const ahead = [place(track.length), place(track.length / 2)];
+  const ahead = [place(track.length)];
   let from = start;
   let to = ahead.pop();
   while (to !== undefined) {
@@ -68,8 +68,10 @@ export function densify(track: Track, tolerance = 50, ellipsoid: Ellipsoid = WGS
   return points;
 }
 
+/** A vertex; a longitude within a micrometre of the antimeridian stands on it, so that rounding does not cut a line. */
 function drawnPoint({ lat, lon }: TrackPoint, s: number): DrawnPoint {
-  return { s, lat, lon };
+  const edge = 360 * Math.round((lon - 180) / 360) + 180;
+  return { s, lat, lon: Math.abs(lon - edge) < 1e-11 ? edge : lon };
 }
 
 /**
@@ -144,7 +146,7 @@ export function cutAtAntimeridian(points: readonly Position[]): LonLat[][] {
   let turn: number | undefined;
   let part: LonLat[] = [];
   const append = (from: Position, to: Position): void => {
-    const ownTurn = turnOf((from.lon + to.lon) / 2, turn);
+    const ownTurn = turnOf(insideOf(from.lon, to.lon), turn);
     if (ownTurn !== turn) {
       turn = ownTurn;
       part = [lonLat(from, ownTurn)];
@@ -174,9 +176,19 @@ function lonLat({ lat, lon }: Position, turn: number): LonLat {
  */
 function turnOf(lon: number, before: number | undefined): number {
   const turn = Math.floor((lon + 180) / 360);
-  if (lon + 180 !== 360 * turn) return turn;
+  if (!isOnEdge(lon)) return turn;
   const stays = before === undefined ? lon > 0 : before === turn - 1;
   return stays ? turn - 1 : turn;
+}
+
+/** A longitude of a segment that crosses no edge, off the edge if any of the segment is; exact, unlike the mean. */
+function insideOf(from: number, to: number): number {
+  if (!isOnEdge(from)) return from;
+  return isOnEdge(to) ? (from + to) / 2 : to;
+}
+
+function isOnEdge(lon: number): boolean {
+  return Math.abs(lon % 360) === 180;
 }
 
 function straightCrossings(from: Position, to: Position): Position[] {

@@ -81,18 +81,18 @@ export function geodesicTrack(ellipsoid: Ellipsoid, from: Position, to: Position
   const { distance: length, initialCourse, finalCourse } = geodesicInverse(ellipsoid, from, to);
   const { lon1, lon2, turn } = eastward(from.lon, to.lon);
   const line = solver(ellipsoid).InverseLine(from.lat, lon1, to.lat, lon2, LINE);
-  const atPole = Math.abs(from.lat) === 90;
-  const isMeridian = atPole || initialCourse === 0 || initialCourse === 180;
-  const meridian = atPole ? unroll(to.lon, from.lon) : from.lon;
+  const meridian = meridianOf(from, to, initialCourse);
 
   function sample(s: number): TrackPoint {
     const place = line.Position(s, PLACE);
+    const lat = place.lat2 as number;
     const lon = (place.lon2 as number) + turn;
-    if (!isMeridian) return trackPoint(place.lat2 as number, lon, normaliseCourse(place.azi2 as number));
+    if (meridian === undefined) return trackPoint(lat, lon, normaliseCourse(place.azi2 as number));
     // The series leave some 1e-14 of a degree of longitude, which would cross the edge of a grid.
-    const beyondPole = Math.abs(lon - meridian) > 90;
-    const southward = Math.abs(place.azi2 as number) > 90;
-    return trackPoint(place.lat2 as number, beyondPole ? meridian + 180 : meridian, southward ? 180 : 0);
+    const isBeyond = meridian.crossesPole && Math.abs(lon - meridian.lon) > 90;
+    return isBeyond
+      ? trackPoint(lat, meridian.lon + 180, 180 - meridian.course)
+      : trackPoint(lat, meridian.lon, meridian.course);
   }
 
   const start = trackPoint(from.lat, from.lon, initialCourse);
@@ -103,6 +103,22 @@ export function geodesicTrack(ellipsoid: Ellipsoid, from: Position, to: Position
     return place === "start" ? start : end;
   }
   return { path: "geodesic", from, to, length, initialCourse, finalCourse, at };
+}
+
+/** The meridian on which a line begins, if it is one, and the course there. */
+interface Meridian {
+  readonly lon: number;
+  readonly course: number;
+  readonly crossesPole: boolean;
+}
+
+function meridianOf(from: Position, to: Position, initialCourse: number): Meridian | undefined {
+  if (Math.abs(from.lat) === 90) {
+    return { lon: unroll(to.lon, from.lon), course: from.lat > 0 ? 180 : 0, crossesPole: false };
+  }
+  if (initialCourse !== 0 && initialCourse !== 180) return undefined;
+  const crossesPole = Math.abs(to.lat) !== 90 && Math.abs(angleDifference(from.lon, to.lon)) > 90;
+  return { lon: from.lon, course: initialCourse, crossesPole };
 }
 
 function solver({ a, f }: Ellipsoid): Solver {
