@@ -2,7 +2,15 @@ import type { Craft, Pace, Reserve } from "../craft/craft.ts";
 import { InputError } from "../errors.ts";
 import type { Field } from "../field/field.ts";
 import { momentText } from "./finding-text.ts";
-import { legFinding, type NumberedLeg, routeFinding, statusOf, stopText, watchedText } from "./findings.ts";
+import {
+  landText,
+  legFinding,
+  type NumberedLeg,
+  routeFinding,
+  statusOf,
+  stopText,
+  watchedText,
+} from "./findings.ts";
 import { type Flow, makeFlow } from "./flow.ts";
 import { hover, plainStay, type Stay } from "./hover.ts";
 import { isoTime, type LegOutcome, type LegTerms, legEstimate } from "./leg-result.ts";
@@ -108,6 +116,7 @@ class RouteWork {
     const stop = this.#runUnderWay(leg, sums, watch);
     watch.close(stop?.at ?? prepared.track.length);
     const stay = stop === null ? this.#stayAt(prepared, sums) : null;
+    this.#reportLand(leg, stop?.at ?? prepared.track.length);
     this.#report(leg, watch, stay, stop, this.#elapsed + sums.time);
     if (stop !== null) {
       this.#stopAt(leg, sums, stop);
@@ -213,6 +222,15 @@ class RouteWork {
       };
     if (craft.moves === "water" || wind === null) return plainStay(craft, seconds);
     return hover(craft, wind, leg, this.#step.stations, this.#elapsed + sums.time, seconds);
+  }
+
+  /** One hint a leg: from the first stretch over land to the last that the route reaches. */
+  #reportLand(leg: NumberedLeg, reached: number): void {
+    const met = leg.prepared.land.filter(({ from_m }) => from_m <= reached);
+    const first = met[0];
+    const last = met[met.length - 1];
+    if (first === undefined || last === undefined) return;
+    this.#findings.push(legFinding("crosses-land", leg, first.from_m, last.to_m, landText(met)));
   }
 
   #report(leg: NumberedLeg, watch: LegWatch, stay: Stay | null, stop: Stop | null, time: number): void {

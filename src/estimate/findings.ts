@@ -1,3 +1,4 @@
+import type { LandStretch } from "../coast/land-crossings.ts";
 import type { Craft } from "../craft/craft.ts";
 import type { FieldRole } from "../field/field.ts";
 import { amountText, lengthText, momentText, speedText } from "./finding-text.ts";
@@ -108,6 +109,13 @@ export function watchedText({ code, role, stretch }: Watched, craft: Craft): str
     default:
       throw new Error(`no text for a stretch of ${code}`);
   }
+}
+
+/** What a leg over the coarse land has to say: a hint, never a clearance. */
+export function landText(stretches: readonly LandStretch[]): string {
+  const over = stretches.reduce((sum, { from_m, to_m }) => sum + to_m - from_m, 0);
+  const times = stretches.length > 1 ? ` in ${stretches.length} places` : "";
+  return `crosses land${times}, ${lengthText(over)} in all, on a coarse coastline (Natural Earth 1:10m, off by 0.7 km in the median and by more than 4.5 km in a tenth of places): a hint only, check the official chart`;
 }
 
 /** What stops a route, by code. */

@@ -1,5 +1,8 @@
+import type { Land } from "../coast/land.ts";
+import { type LandStretch, landCrossings } from "../coast/land-crossings.ts";
 import type { Craft } from "../craft/craft.ts";
 import type { Field, FieldRole } from "../field/field.ts";
+import { densify } from "../geodesy/drawn-line.ts";
 import { makeTrack } from "../geodesy/make-track.ts";
 import type { Track } from "../geodesy/track.ts";
 import { cutPanels, type LegHeights, locatePanels, type PanelCells, type Panels } from "./panels.ts";
@@ -20,6 +23,8 @@ export interface PreparedLeg {
   readonly heights: LegHeights;
   /** Per field, per tile: the cells of the panels. */
   readonly cells: readonly (readonly PanelCells[])[];
+  /** Stretches over the coarse land, a hint only; empty where no land was given. */
+  readonly land: readonly LandStretch[];
 }
 
 export interface PreparedRoute {
@@ -33,22 +38,28 @@ export interface PreparedRoute {
  * Prepares a route for estimates on fields with these axes.
  *
  * @param fields those that the craft uses (see {@link fieldsInUse})
+ * @param land coarse land to hold the route against, for craft in water; `null` for none
  * @throws InputError where a waypoint's position is not on the globe
  */
-export function prepareRoute(route: Route, fields: readonly Field[]): PreparedRoute {
+export function prepareRoute(
+  route: Route,
+  fields: readonly Field[],
+  land: Land | null = null,
+): PreparedRoute {
   const legs = route.waypoints
     .slice(1)
-    .map((to, index) => prepareLeg(route.waypoints[index] as Waypoint, to, fields));
+    .map((to, index) => prepareLeg(route.waypoints[index] as Waypoint, to, fields, land));
   return { route, legs, roles: fields.map(({ role }) => role) };
 }
 
-function prepareLeg(from: Waypoint, to: Waypoint, fields: readonly Field[]): PreparedLeg {
+function prepareLeg(from: Waypoint, to: Waypoint, fields: readonly Field[], land: Land | null): PreparedLeg {
   const track = makeTrack(from, to, to.path);
   const curve = fitTrackCurve(track);
   const heights = { from: from.height_m, to: to.height_m };
   const panels = cutPanels(curve, fields, heights);
   const cells = fields.map((field) => field.tiles.map((tile) => locatePanels(curve, panels, tile, heights)));
-  return { from, to, track, curve, panels, heights, cells };
+  const stretches = land === null ? [] : landCrossings(land, densify(track));
+  return { from, to, track, curve, panels, heights, cells, land: stretches };
 }
 
 /** The fields that act on a craft: a current in the plan of a craft in the air is left out. */

@@ -61,7 +61,7 @@ function fitPiece(
   starts: number[],
   coefficients: number[],
 ): void {
-  fit(track, from, to, piece);
+  interpolate(track, from, to, piece);
   if (to - from > SHORTEST_PIECE_M && !agrees(track, from, to, piece)) {
     const middle = (from + to) / 2;
     fitPiece(track, from, middle, piece, starts, coefficients);
@@ -72,7 +72,7 @@ function fitPiece(
   for (const coefficient of piece) coefficients.push(coefficient);
 }
 
-function fit(track: Track, from: number, to: number, piece: Float64Array): void {
+function interpolate(track: Track, from: number, to: number, piece: Float64Array): void {
   piece.fill(0);
   for (let node = 0; node < TERMS; node += 1) {
     const point = track.at(from + ((to - from) * ((NODES[node] as number) + 1)) / 2);

@@ -1,0 +1,106 @@
+import type { Land } from "../coast/land.ts";
+import { ADVISORY } from "../constants.ts";
+import type { Craft, Pace, Reserve } from "../craft/craft.ts";
+import type { Field } from "../field/field.ts";
+import { estimateRoute, type RouteRun } from "./estimate-route.ts";
+import { routeFinding, statusOf } from "./findings.ts";
+import { isoTime } from "./leg-result.ts";
+import { fieldsInUse, mediumRole, type PreparedRoute, prepareRoute } from "./prepare.ts";
+import type { Estimate, FieldSummary, Finding, Profile } from "./result.ts";
+import type { Route } from "./route.ts";
+
+/** Everything that an estimate rests on, read and in SI units. */
+export interface EstimateInput {
+  readonly title: string;
+  /** ms since 1970-01-01T00:00Z. */
+  readonly departure: number;
+  readonly craft: Craft;
+  readonly pace: Pace;
+  readonly reserve: Reserve | null;
+  /** All fields of the plan; those that do not act on the craft are named in a note. */
+  readonly fields: readonly Field[];
+  readonly routes: readonly Route[];
+  /** Coarse land for the hint `crosses-land`; `null` for none. */
+  readonly land: Land | null;
+}
+
+export interface EstimateAnswer {
+  readonly estimate: Estimate;
+  /** Figures along each route, in the order of the routes. */
+  readonly profiles: readonly Profile[];
+}
+
+/**
+ * Estimates every route of a plan: the main job.
+ *
+ * @throws InputError where a position is not on the globe, or the pace has no speed even with every field at zero
+ */
+export function estimate(input: EstimateInput): EstimateAnswer {
+  const prepared = prepareRoutes(input);
+  return estimatePrepared(prepared, input);
+}
+
+/** The first half for all routes: reuse it while routes, the grids' axes and the craft's medium stay the same. */
+export function prepareRoutes(input: EstimateInput): PreparedRoute[] {
+  const fields = fieldsInUse(input.craft, input.fields);
+  const land = input.craft.moves === "water" ? input.land : null;
+  return input.routes.map((route) => prepareRoute(route, fields, land));
+}
+
+/** The second half for all routes. */
+export function estimatePrepared(prepared: readonly PreparedRoute[], input: EstimateInput): EstimateAnswer {
+  const fields = fieldsInUse(input.craft, input.fields);
+  const { departure, craft, pace, reserve } = input;
+  const notes = fieldNotes(input, fields);
+  const runs = prepared.map((route) =>
+    withNotes(estimateRoute(route, { departure, craft, pace, reserve, fields }), notes),
+  );
+  return {
+    estimate: {
+      format: "legwork-estimate/1",
+      advisory: ADVISORY,
+      plan: { title: input.title },
+      fields: input.fields.map(fieldSummary),
+      routes: runs.map((run) => run.estimate),
+    },
+    profiles: runs.map((run) => run.profile),
+  };
+}
+
+function withNotes(run: RouteRun, notes: readonly Finding[]): RouteRun {
+  const findings = [...notes, ...run.estimate.findings];
+  return { ...run, estimate: { ...run.estimate, status: statusOf(findings), findings } };
+}
+
+function fieldNotes({ craft, fields }: EstimateInput, used: readonly Field[]): Finding[] {
+  const notes: Finding[] = [];
+  const medium = mediumRole(craft);
+  if (fields.length === 0) {
+    notes.push(routeFinding("no-field", "the plan names no field: this is an estimate for a still medium"));
+  } else if (!used.some(({ role }) => role === medium)) {
+    notes.push(routeFinding("no-field", `the plan names no ${medium}: the ${craft.moves} is taken as still`));
+  }
+  for (const field of fields) {
+    if (!used.includes(field))
+      notes.push(
+        routeFinding(
+          "field-unused",
+          `the ${field.role} is left out: ${craft.name} moves through the ${craft.moves}`,
+        ),
+      );
+  }
+  return notes;
+}
+
+/** Files and validity of a field: from its first valid time to its last; `null` where no tile of it is timed. */
+export function fieldSummary({ role, tiles }: Field): FieldSummary {
+  const times = tiles.flatMap((tile) =>
+    tile.times === null ? [] : [tile.times[0] as number, tile.times[tile.times.length - 1] as number],
+  );
+  return {
+    role,
+    files: tiles.flatMap(({ files }) => files),
+    validFrom: times.length === 0 ? null : isoTime(Math.min(...times)),
+    validTo: times.length === 0 ? null : isoTime(Math.max(...times)),
+  };
+}

@@ -1,0 +1,75 @@
+import type { Land } from "../coast/land.ts";
+import { InputError } from "../errors.ts";
+import { type EstimateAnswer, type EstimateInput, estimate } from "../estimate/estimate.ts";
+import type { OpenFile, Plan } from "./plan.ts";
+import { type FileProgress, readFields } from "./read-fields.ts";
+import { readPlan } from "./read-plan.ts";
+import { parseTime } from "./time.ts";
+
+/** What a door hands over beside the plan's text. */
+export interface PlanRequest {
+  /** Name of the plan for messages. */
+  readonly file: string;
+  /** Yields the bytes of files that the plan names, in pieces. */
+  readonly open: OpenFile;
+  /** Departure in place of the plan's, ISO 8601 with a zone. */
+  readonly departure?: string;
+  /** Names of the routes to estimate; all where left out. */
+  readonly routes?: readonly string[];
+  /** Loads the coarse land for the hint `crosses-land`; called for craft in water only. */
+  readonly loadLand?: () => Promise<Land | null>;
+  readonly onProgress?: FileProgress;
+}
+
+/** An answered plan: what was asked, and the figures. */
+export interface PlanAnswer extends EstimateAnswer {
+  readonly plan: Plan;
+  readonly input: EstimateInput;
+}
+
+/**
+ * The main job: reads a plan with its craft and fields and estimates its routes.
+ *
+ * @throws InputError in one sentence with file, line or key for whatever is wrong in what the user gave
+ */
+export async function estimatePlan(text: string, request: PlanRequest): Promise<PlanAnswer> {
+  const plan = await checkPlanText(text, request);
+  const input = await readInput(plan, request);
+  return { ...estimate(input), plan, input };
+}
+
+/**
+ * Reads and checks everything that a plan names, and computes nothing.
+ *
+ * @throws InputError as {@link estimatePlan} does
+ */
+export async function checkPlan(
+  text: string,
+  request: PlanRequest,
+): Promise<{ readonly plan: Plan; readonly input: EstimateInput }> {
+  const plan = await checkPlanText(text, request);
+  return { plan, input: await readInput(plan, request) };
+}
+
+async function checkPlanText(text: string, { file, open, departure, routes }: PlanRequest): Promise<Plan> {
+  const plan = await readPlan(text, { file, open });
+  return {
+    ...plan,
+    ...(departure === undefined ? {} : { departure: parseTime(departure, "departure") }),
+    ...(routes === undefined ? {} : { routes: routes.map((name) => routeNamed(plan, name, file)) }),
+  };
+}
+
+function routeNamed(plan: Plan, name: string, file: string): Plan["routes"][number] {
+  const route = plan.routes.find((candidate) => candidate.name === name);
+  if (route !== undefined) return route;
+  const names = plan.routes.map((candidate) => `"${candidate.name}"`).join(", ");
+  throw new InputError(`a route is one of ${names}; found "${name}"`, { file, key: "routes" });
+}
+
+async function readInput(plan: Plan, { open, loadLand, onProgress }: PlanRequest): Promise<EstimateInput> {
+  const { title, departure, craft, pace, reserve, routes } = plan;
+  const fields = await readFields(plan.fields, open, onProgress);
+  const land = craft.moves === "water" && loadLand !== undefined ? await loadLand() : null;
+  return { title, departure, craft, pace, reserve, fields, routes, land };
+}
