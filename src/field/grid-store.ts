@@ -5,6 +5,8 @@ import { WaitingRows } from "./waiting-rows.ts";
 export const LEAST_SHARE = 20;
 /** Nodes that are given room whatever the rows so far, 16 MB of vectors. */
 const FREE_NODES = 1 << 20;
+/** Waiting rows are placed when they are one in so many. */
+const SETTLE_SHARE = 16;
 /** Room grows by this factor while an axis is being learned. */
 const GROWTH = 1.5;
 
@@ -61,7 +63,7 @@ export class GridStore {
     this.use(level, lat, lon);
     if (this.makeRoom(time)) return this.place(time, level, lat, lon, u, v, gust);
     this.waiting.add(time, level, lat, lon, u, v, gust);
-    return !this.allFit() || this.settle();
+    return !this.isWorthSettling() || this.settle();
   }
 
   /** Gives every waiting row its place, once all axes are known; `false` where a node has been given before. */
@@ -114,9 +116,8 @@ export class GridStore {
       if (this.fits(exact, 2)) this.resize(exact);
     }
     const count = this.held + (isNew ? 1 : 0);
-    const choices = [this.grownRoom(), this.used];
-    const room = choices.find((choice) => this.fits(choice, count));
-    if (room === undefined) return false;
+    const room = this.grownRoom();
+    if (!this.fits(room, count)) return false;
     this.resize(room);
     this.openSlice(time);
     return true;
@@ -137,8 +138,12 @@ export class GridStore {
     return nodesIn(room) * slices <= Math.max(FREE_NODES, LEAST_SHARE * this.rows);
   }
 
-  private allFit(): boolean {
-    return this.times * nodesIn(this.used) <= LEAST_SHARE * this.rows;
+  /** Whether all rows have room now, and enough wait for it to be worth moving the others. */
+  private isWorthSettling(): boolean {
+    return (
+      SETTLE_SHARE * this.waiting.length >= this.rows &&
+      this.times * nodesIn(this.used) <= LEAST_SHARE * this.rows
+    );
   }
 
   private resize(wanted: Room): void {

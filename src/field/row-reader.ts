@@ -132,10 +132,8 @@ export class RowReader {
     const member = cell.trim();
     this.member ??= member;
     if (member === this.member) return;
-    const found = `found "${shown(this.member)}" and "${shown(member)}"`;
-    throw new CellFault(
-      `the file holds one member; more are not read yet: ${cellOf(column)} says otherwise, ${found}`,
-    );
+    const found = `found "${shown(this.member)}" and "${shown(member)}" in the column "${column.header}"`;
+    throw new CellFault(`the file holds one member, more are not read yet; ${found}`);
   }
 
   private levelLearner(column: Column, kind: "height" | "air_pressure"): AxisLearner {

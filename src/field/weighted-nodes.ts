@@ -20,7 +20,7 @@ export class WeightedNodes {
   /** State of the least certain node that counts. */
   worst = NODE_GIVEN;
 
-  /** Sums up the nodes around a point at a latitude. */
+  /** Sums up the nodes around a point at a latitude and a longitude in degrees, of any turn. */
   sum(tile: Tile, cell: TileCell, lat: number, lon: number): void {
     const { time, level } = cell;
     this.u = 0;
