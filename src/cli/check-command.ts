@@ -1,0 +1,21 @@
+import { checkPlan } from "./core.ts";
+import { messageLine } from "./message.ts";
+import { writeResult } from "./output.ts";
+import { openBeside, readText } from "./plan-files.ts";
+
+function counted(count: number, word: string): string {
+  return `${count} ${word}${count === 1 ? "" : "s"}`;
+}
+
+/** Reads everything that a plan names and says that it is in order. */
+export async function checkCommand(file: string): Promise<number> {
+  const { plan } = await checkPlan(await readText(file), { file, open: openBeside(file) });
+  const legs = plan.routes.reduce((sum, route) => sum + route.waypoints.length - 1, 0);
+  const parts = [
+    counted(plan.routes.length, "route"),
+    counted(legs, "leg"),
+    counted(plan.fields.length, "field file"),
+  ];
+  await writeResult(messageLine(`${file}: in order; ${parts.join(", ")}, craft ${plan.craft.name}`));
+  return 0;
+}

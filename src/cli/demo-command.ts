@@ -1,0 +1,65 @@
+import { existsSync } from "node:fs";
+import { mkdir, readdir, readFile, writeFile } from "node:fs/promises";
+import { dirname, join } from "node:path";
+import { fileURLToPath } from "node:url";
+import { InputError } from "./core.ts";
+import { fileFault } from "./file-fault.ts";
+
+/** What of the demo folder a user wants; its recipe is not among it. */
+const WANTED = /\.(plan|craft)\.json$|\.csv$/;
+
+/** The demo data as they were shipped, above the built file or the source. */
+function shippedFolder(): string {
+  let folder = dirname(fileURLToPath(import.meta.url));
+  for (let levels = 0; levels < 4; levels += 1) {
+    const candidate = join(folder, "data", "demo");
+    if (existsSync(candidate)) return candidate;
+    folder = dirname(folder);
+  }
+  throw new Error("the demo data were not shipped beside the program");
+}
+
+async function contentOf(file: string): Promise<Buffer | null> {
+  try {
+    return await readFile(file);
+  } catch (fault) {
+    if (fault instanceof Error && "code" in fault && fault.code === "ENOENT") return null;
+    throw fault;
+  }
+}
+
+/** The files to write and their content; a file that is there already with the same content is left out. */
+async function missing(names: readonly string[], from: string, folder: string): Promise<Map<string, Buffer>> {
+  const files = new Map<string, Buffer>();
+  for (const name of names) {
+    const wanted = await readFile(join(from, name));
+    const target = join(folder, name);
+    const there = await contentOf(target);
+    if (there === null) files.set(target, wanted);
+    else if (!there.equals(wanted)) {
+      throw new InputError("a file of other content is there and is not overwritten; name another folder", {
+        file: target,
+      });
+    }
+  }
+  return files;
+}
+
+/** Writes the demo plans, craft and fields into a folder, all of them or none. */
+export async function demoCommand(folder: string): Promise<number> {
+  const from = shippedFolder();
+  const names = (await readdir(from)).filter((name) => WANTED.test(name)).sort();
+  try {
+    await mkdir(folder, { recursive: true });
+    const files = await missing(names, from, folder);
+    for (const [file, content] of files) await writeFile(file, content);
+  } catch (fault) {
+    throw fileFault(fault, folder);
+  }
+  const plans = names.filter((name) => name.endsWith(".plan.json")).map((name) => join(folder, name));
+  const next = plans.map(
+    (plan) => `  legwork estimate ${/^[\w./-]+$/.test(plan) ? plan : JSON.stringify(plan)}`,
+  );
+  process.stdout.write(`${names.length} files are in ${folder}. Run next:\n${next.join("\n")}\n`);
+  return 0;
+}

@@ -1,0 +1,54 @@
+import {
+  estimatePlan,
+  InputError,
+  type ReportInput,
+  type Units,
+  writeCsv,
+  writeGeoJson,
+  writeGpx,
+  writeJson,
+  writeTable,
+} from "./core.ts";
+import { writeResult } from "./output.ts";
+import { openBeside, readText } from "./plan-files.ts";
+
+export interface EstimateOptions {
+  readonly route?: readonly string[];
+  readonly departure?: string;
+  readonly format: "table" | "csv" | "json" | "geojson" | "gpx";
+  readonly units?: Units;
+  readonly out?: string;
+}
+
+function written(input: ReportInput, { format, units }: EstimateOptions): string {
+  switch (format) {
+    case "table":
+      return writeTable(input, units ?? (input.craft.moves === "air" ? "air" : "sea"));
+    case "csv":
+      return writeCsv(input);
+    case "json":
+      return writeJson(input.estimate);
+    case "geojson":
+      return writeGeoJson(input);
+    case "gpx":
+      return writeGpx(input);
+  }
+}
+
+/** Estimates a plan and writes the answer; 1 where some route ends in a stop. */
+export async function estimateCommand(file: string, options: EstimateOptions): Promise<number> {
+  if (options.units !== undefined && options.format !== "table") {
+    throw new InputError(
+      `--units belongs to --format table; found --format ${options.format}, whose units are SI`,
+    );
+  }
+  const { estimate, plan } = await estimatePlan(await readText(file), {
+    file,
+    open: openBeside(file),
+    ...(options.departure === undefined ? {} : { departure: options.departure }),
+    ...(options.route === undefined ? {} : { routes: options.route }),
+  });
+  const { routes, craft, pace } = plan;
+  await writeResult(written({ estimate, routes, craft, pace }, options), options.out);
+  return estimate.routes.some((route) => route.status === "stop") ? 1 : 0;
+}

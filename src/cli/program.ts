@@ -1,0 +1,153 @@
+import { Command, Option } from "commander";
+import { version } from "../../package.json";
+import { ADVISORY } from "./advisory.ts";
+import type { EstimateOptions } from "./estimate-command.ts";
+import type { InspectOptions } from "./inspect-command.ts";
+import { messageLine } from "./message.ts";
+
+const HELP_WIDTH = 80;
+/** The commands, for messages. */
+export const COMMANDS = "estimate, inspect, check or demo";
+
+const collect = (value: string, before: readonly string[] = []): readonly string[] => [...before, value];
+
+/** Commander's message in our form: one line that says what is accepted. */
+function usageLine(text: string): string {
+  const message = text
+    .replace(/^error: /, "")
+    .replace(/\s*\n\s*/g, " ")
+    .trim();
+  const known = /^unknown command/.test(message) ? `; the command is ${COMMANDS}` : "; see legwork --help";
+  return messageLine(message.replace(/\.$/, "") + known);
+}
+
+function wrap(text: string): string {
+  const lines = [""];
+  for (const word of text.split(" ")) {
+    const line = lines.at(-1) ?? "";
+    if (line.length + word.length + 1 > HELP_WIDTH) lines.push(word);
+    else lines[lines.length - 1] = line === "" ? word : `${line} ${word}`;
+  }
+  return lines.join("\n");
+}
+
+function ending(examples: readonly string[]): string {
+  return ["", "Examples:", ...examples.map((example) => `  ${example}`), "", wrap(ADVISORY)].join("\n");
+}
+
+type Settle = (status: number) => void;
+
+function addEstimate(program: Command, settle: Settle): void {
+  program
+    .command("estimate")
+    .summary("the leg table of every route")
+    .description(
+      "Prints the leg table of every route of a plan. Exit status: 0 every route is clear or has cautions only, " +
+        "1 some route ends in a stop, 2 bad input.",
+    )
+    .argument("<plan>", "plan file (*.plan.json); files that it names are beside it")
+    .option("--route <name>", "only this route (repeatable)", collect)
+    .option("--departure <time>", "in place of the plan's: ISO 8601 with its zone")
+    .addOption(
+      new Option("--format <format>", "what to write")
+        .choices(["table", "csv", "json", "geojson", "gpx"])
+        .default("table"),
+    )
+    .addOption(
+      new Option("--units <units>", "of the table (default: by the craft)").choices(["sea", "air", "metric"]),
+    )
+    .option("--out <file>", "write there, not to standard output")
+    .addHelpText(
+      "after",
+      ending([
+        "legwork estimate demo/islands.plan.json",
+        "legwork estimate demo/survey.plan.json --units metric",
+        "legwork estimate demo/ocean.plan.json --format gpx --out ocean.gpx",
+      ]),
+    )
+    .action(async (plan: string, options: EstimateOptions) => {
+      const { estimateCommand } = await import("./estimate-command.ts");
+      settle(await estimateCommand(plan, options));
+    });
+}
+
+function addInspect(program: Command, settle: Settle): void {
+  program
+    .command("inspect")
+    .summary("what a field file holds")
+    .description(
+      "Says what a field file holds: axes, spacing, times, coverage, gaps, ranges, ignored columns, memory.",
+    )
+    .argument("<field>", "gridded wind or current (*.csv)")
+    .addOption(new Option("--role <role>", "what the file is of").choices(["wind", "current"]))
+    .option("--map <axis=header>", "a column by its own header, as lon=longitude (repeatable)", collect)
+    .addOption(new Option("--format <format>", "what to write").choices(["text", "json"]).default("text"))
+    .addHelpText(
+      "after",
+      ending([
+        "legwork inspect demo/islands-current.csv --role current",
+        "legwork inspect wind.csv --map lon=x --map lat=y --format json",
+      ]),
+    )
+    .action(async (field: string, options: InspectOptions) => {
+      const { inspectCommand } = await import("./inspect-command.ts");
+      settle(await inspectCommand(field, options));
+    });
+}
+
+function addCheck(program: Command, settle: Settle): void {
+  program
+    .command("check")
+    .summary("read and check everything that a plan names")
+    .description("Reads and checks a plan and everything that it names, and computes nothing.")
+    .argument("<plan>", "plan file (*.plan.json)")
+    .addHelpText("after", ending(["legwork check demo/islands.plan.json"]))
+    .action(async (plan: string) => {
+      const { checkCommand } = await import("./check-command.ts");
+      settle(await checkCommand(plan));
+    });
+}
+
+function addDemo(program: Command, settle: Settle): void {
+  program
+    .command("demo")
+    .summary("write the demo plans with their craft and fields")
+    .description(
+      "Writes the demo plans with their craft and fields into a folder; a file of other content is left alone.",
+    )
+    .argument("<folder>", "where to; made if it is not there")
+    .addHelpText("after", ending(["legwork demo demo"]))
+    .action(async (folder: string) => {
+      const { demoCommand } = await import("./demo-command.ts");
+      settle(await demoCommand(folder));
+    });
+}
+
+/** The command line; an action loads its own part of the program, so that nothing waits for what it does not use. */
+export function buildProgram(settle: Settle): Command {
+  const program: Command = new Command("legwork")
+    .description("Passage and flight legs against gridded wind and current: time, use, what is left.")
+    .version(version, "-V, --version", "print the version")
+    .helpOption("-h, --help", "print this help")
+    .helpCommand(false)
+    .usage("<command> [options]")
+    .exitOverride()
+    .configureOutput({
+      getOutHelpWidth: () => HELP_WIDTH,
+      getErrHelpWidth: () => HELP_WIDTH,
+      outputError: (text, write) => write(usageLine(text)),
+    })
+    .allowExcessArguments(false);
+  addEstimate(program, settle);
+  addInspect(program, settle);
+  addCheck(program, settle);
+  addDemo(program, settle);
+  return program.addHelpText(
+    "after",
+    ending([
+      "legwork demo demo",
+      "legwork estimate demo/islands.plan.json",
+      "legwork inspect demo/islands-current.csv --role current",
+    ]),
+  );
+}

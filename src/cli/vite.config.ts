@@ -1,0 +1,35 @@
+import { chmodSync } from "node:fs";
+import { join } from "node:path";
+import { defineConfig, type Plugin } from "vite";
+
+const root = new URL("../..", import.meta.url).pathname;
+const outDir = join(root, "dist");
+
+/** So that the built command runs from a clone, as it does once installed. */
+function runBit(): Plugin {
+  return { name: "run-bit", writeBundle: ({ dir }) => chmodSync(join(dir ?? outDir, "cli.js"), 0o755) };
+}
+
+/** Builds dist/cli.js (the command) and dist/index.js (the library), dependencies bundled, Node's own modules left out. */
+export default defineConfig({
+  root,
+  publicDir: false,
+  plugins: [runBit()],
+  ssr: { noExternal: true },
+  build: {
+    ssr: true,
+    outDir,
+    // The page is built into the same folder.
+    emptyOutDir: false,
+    target: "node20",
+    rolldownOptions: {
+      input: { cli: join(root, "src/cli/main.ts"), index: join(root, "src/index.ts") },
+      output: {
+        format: "es",
+        entryFileNames: "[name].js",
+        chunkFileNames: "chunks/[name].js",
+        minify: { mangle: false, compress: true, codegen: { removeWhitespace: true } },
+      },
+    },
+  },
+});
