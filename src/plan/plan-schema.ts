@@ -1,0 +1,211 @@
+import * as z from "zod";
+import { columnNames } from "../field/column-names.ts";
+import { craftSchema } from "./craft-schema.ts";
+import { parseCoordinate } from "./position.ts";
+import {
+  fileName,
+  lineOfText,
+  listOf,
+  NOT_NEGATIVE,
+  objectOf,
+  oneOf,
+  POSITIVE,
+  quantity,
+  readBy,
+  sentence,
+} from "./schema-parts.ts";
+import { parseTime } from "./time.ts";
+
+const time = (name: string, description: string) =>
+  readBy(
+    z
+      .string({
+        error: (issue) =>
+          sentence(
+            name,
+            'takes an ISO 8601 date and time with its zone, as "2027-05-04T06:00:00Z"',
+            issue.input,
+          ),
+      })
+      .meta({ description }),
+    (text) => parseTime(text, name),
+  );
+
+const coordinate = (axis: "lat" | "lon", description: string) => {
+  const rule =
+    axis === "lat" ? `takes degrees, as 50.358 or "50°21.5'N"` : `takes degrees, as -4.151 or "4°09.05'W"`;
+  return readBy(
+    z
+      .union([z.number(), z.string()], {
+        error: (issue) => sentence(axis === "lat" ? "latitude" : "longitude", rule, issue.input),
+      })
+      .meta({ description }),
+    (value) => parseCoordinate(value, axis),
+  );
+};
+
+const path = oneOf(
+  "path",
+  ["geodesic", "rhumb"],
+  "Shortest line, or line of constant course; geodesic unless given.",
+);
+const speed = (description: string) => quantity(["speed"], "speed", POSITIVE, description);
+
+const waypoint = objectOf(
+  "a waypoint",
+  {
+    name: lineOfText("name", "Name of the waypoint.").optional(),
+    lat: coordinate("lat", "Latitude: degrees, north positive, or a text as 50°21.5'N."),
+    lon: coordinate("lon", "Longitude: degrees, east positive, or a text as 4°09'03\"W."),
+    path: path.optional(),
+    speed: speed("Speed of the leg that arrives here.").optional(),
+    height: quantity(["length"], "height", NOT_NEGATIVE, "Height above the surface here.").optional(),
+    stay: quantity(["time"], "stay", POSITIVE, "Time spent here before the next leg.").optional(),
+  },
+  "A waypoint; path, speed and height belong to the leg that arrives at it.",
+);
+
+const route = objectOf(
+  "a route",
+  {
+    name: lineOfText("name", "Name of the route.").optional(),
+    path: path.optional(),
+    waypoints: listOf(
+      "waypoints",
+      waypoint,
+      2,
+      "waypoints",
+      "The waypoints in order, none equal to the one before it.",
+    ),
+  },
+  "A route.",
+);
+
+const pace = z
+  .discriminatedUnion(
+    "hold",
+    [
+      objectOf(
+        "a pace that holds the through-speed",
+        {
+          hold: oneOf("hold", ["through-speed"], "Hold the speed through the medium."),
+          speed: speed("Speed through the medium; the craft's own unless given.").optional(),
+        },
+        "Hold the speed through the medium.",
+      ),
+      objectOf(
+        "a pace that holds the ground-speed",
+        {
+          hold: oneOf("hold", ["ground-speed"], "Hold the speed over the ground."),
+          speed: speed("Speed over the ground; the craft's own speed unless given.").optional(),
+        },
+        "Hold the speed over the ground.",
+      ),
+      objectOf(
+        "a pace that holds the power",
+        {
+          hold: oneOf("hold", ["power"], "Hold the power, hotel load apart."),
+          power: quantity(["power"], "power", POSITIVE, "The power to hold, hotel load apart."),
+        },
+        "Hold the power.",
+      ),
+      objectOf(
+        "a pace of least energy",
+        {
+          hold: oneOf(
+            "hold",
+            ["least-energy"],
+            "At each point the speed of least energy for the ground made good.",
+          ),
+        },
+        "The speed of least energy over the ground.",
+      ),
+    ],
+    {
+      error: (issue) =>
+        issue.code === "invalid_union"
+          ? sentence(
+              "hold",
+              'takes one of "through-speed", "ground-speed", "power", "least-energy"',
+              (issue.input as { hold?: unknown } | undefined)?.hold,
+            )
+          : sentence("pace", "is an object with the key hold", issue.input),
+    },
+  )
+  .meta({ description: "The rule by which the craft chooses its speed." });
+
+const COLUMN_NAMES = [
+  ...new Set([...columnNames("wind").values(), ...columnNames("current").values()].flat()),
+];
+
+const columns = objectOf(
+  "a column mapping",
+  Object.fromEntries(
+    COLUMN_NAMES.map((name) => [
+      name,
+      lineOfText("a header", `Header of the column that holds ${name}.`).optional(),
+    ]),
+  ),
+  "Name of an axis or quantity, and the header that it has in the file.",
+);
+
+const field = objectOf(
+  "a field",
+  {
+    role: oneOf("role", ["wind", "current"], "What the field is."),
+    file: fileName("Name of a CSV file, relative to the plan."),
+    columns: columns.optional(),
+    gaps: oneOf(
+      "gaps",
+      ["nearest", "zero", "stop"],
+      "What a missing value does; nearest unless given.",
+    ).optional(),
+    beyond: oneOf("beyond", ["stop", "hold"], "After the last valid time; stop unless given.").optional(),
+    outside: oneOf("outside", ["stop", "zero"], "Outside the grid's area; stop unless given.").optional(),
+  },
+  "A file of gridded wind or current.",
+);
+
+const craftReference = objectOf(
+  "a craft reference",
+  { file: fileName("Name of a craft file, relative to the plan.") },
+  "A craft in a file of its own.",
+);
+
+/** A plan file. */
+export const planSchema = objectOf(
+  "a plan",
+  {
+    $schema: lineOfText("$schema", "Address of this schema, for editors.").optional(),
+    format: oneOf("format", ["legwork-plan/1"], "Format and version of the file."),
+    title: lineOfText("title", "Title of the plan.", true).optional(),
+    departure: time("departure", "Date and time of departure, ISO 8601 with its zone."),
+    craft: z
+      .union([craftReference, craftSchema], {
+        error: (issue) => sentence("craft", "is an object: { file } or the craft itself", issue.input),
+      })
+      .meta({ description: "The craft: its file, or the craft itself." }),
+    pace: pace.optional(),
+    reserve: quantity(
+      ["share", "energy", "mass", "volume", "time"],
+      "reserve",
+      NOT_NEGATIVE,
+      "A share of the usable store, an amount in its kind, or a time at the final leg's rate under way.",
+    ).optional(),
+    fields: listOf(
+      "fields",
+      field,
+      0,
+      "fields",
+      "Files of wind and current; the earlier wins where two overlap.",
+    ).optional(),
+    routes: listOf("routes", route, 1, "route", "The candidate routes."),
+  },
+  "A plan: departure, craft, pace, fields and candidate routes.",
+);
+
+/** A plan as its file holds it: quantities, times and positions as the user wrote them. */
+export type PlanDocument = z.input<typeof planSchema>;
+
+/** A plan after the schema: quantities read, nothing yet checked against one another. */
+export type PlanParts = z.output<typeof planSchema>;

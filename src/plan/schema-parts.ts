@@ -1,0 +1,161 @@
+import * as z from "zod";
+import { InputError } from "../errors.ts";
+import { foundText, quoted } from "../found.ts";
+import { acceptedText, type Dimension, type Quantity, quantityPattern, readQuantity } from "../units.ts";
+import { nearestKey } from "./nearest-key.ts";
+
+/*
+ * The parts that the schemas of plan and craft are made of. Each gives whole sentences, since zod's own would name neither
+ * units nor examples; the place is added where the first issue is picked (`first-issue.ts`).
+ */
+
+/** Bounds of a number or of a quantity in its inner unit. */
+export interface Bounds {
+  readonly above?: number;
+  readonly atLeast?: number;
+  readonly atMost?: number;
+}
+
+/** A speed, area, mass and the like. */
+export const POSITIVE: Bounds = { above: 0 };
+export const NOT_NEGATIVE: Bounds = { atLeast: 0 };
+/** An efficiency or another share that cannot be nothing. */
+export const POSITIVE_SHARE: Bounds = { above: 0, atMost: 1 };
+
+/** A text with a number and its unit, turned into a {@link Quantity}. */
+export function quantity(
+  dimensions: readonly Dimension[],
+  name: string,
+  bounds: Bounds,
+  description: string,
+) {
+  const asText = (value: number) => boundText(value, dimensions);
+  return z
+    .string({ error: (issue) => sentence(name, `takes ${acceptedText(dimensions)}`, issue.input) })
+    .meta({ pattern: quantityPattern(dimensions), description })
+    .transform((text, context): Quantity => {
+      const read = caught(() => readQuantity(text, dimensions, name));
+      const broken = read instanceof InputError ? read.message : brokenBound(read.value, bounds, asText);
+      if (read instanceof InputError || broken !== null) {
+        context.addIssue(read instanceof InputError ? read.message : sentence(name, broken ?? "", text));
+        return z.NEVER;
+      }
+      return read;
+    });
+}
+
+/** A number without a unit. */
+export function bareNumber(name: string, bounds: Bounds, description: string) {
+  const limits = {
+    ...(bounds.above === undefined ? {} : { exclusiveMinimum: bounds.above }),
+    ...(bounds.atLeast === undefined ? {} : { minimum: bounds.atLeast }),
+  };
+  return z
+    .number({ error: (issue) => sentence(name, "takes a number without a unit", issue.input) })
+    .meta({ ...limits, description })
+    .superRefine((value, context) => {
+      const broken = brokenBound(value, bounds, String);
+      if (broken !== null) context.addIssue(sentence(name, broken, value));
+    });
+}
+
+/** A text that a sentence or a table can show: one line, without control characters. */
+export function lineOfText(name: string, description: string, mayBeEmpty = false) {
+  const rule = `takes a text of one line${mayBeEmpty ? "" : ", not empty"}`;
+  return z
+    .string({ error: (issue) => sentence(name, rule, issue.input) })
+    .meta({ description, ...(mayBeEmpty ? {} : { minLength: 1 }) })
+    .superRefine((text, context) => {
+      if (/[\p{Cc}\u2028\u2029]/u.test(text) || (!mayBeEmpty && text.trim() === ""))
+        context.addIssue(sentence(name, rule, text));
+    });
+}
+
+/** The name of a file beside the plan: relative, since a plan moves together with its files. */
+export function fileName(description: string) {
+  return lineOfText("file", description).superRefine((name, context) => {
+    if (/^(?:[/\\~]|[A-Za-z][A-Za-z0-9+.-]*:)/.test(name))
+      context.addIssue(sentence("file", "takes a name relative to the plan", name));
+  });
+}
+
+/** One of a few words. */
+export function oneOf<const T extends readonly [string, ...string[]]>(
+  name: string,
+  words: T,
+  description: string,
+) {
+  const rule = `takes ${words.length === 1 ? "" : "one of "}${words.map(quoted).join(", ")}`;
+  return z.enum(words, { error: (issue) => sentence(name, rule, issue.input) }).meta({ description });
+}
+
+/** An object with these keys and no others. `what` names it with its article, as `a waypoint`. */
+export function objectOf<T extends z.ZodRawShape>(what: string, shape: T, description: string) {
+  const keys = Object.keys(shape);
+  return z
+    .strictObject(shape, {
+      error: (issue) => {
+        if (issue.code !== "unrecognized_keys") return sentence(what, "is an object", issue.input);
+        return unknownKeySentence(what, issue.keys[0] ?? "", keys);
+      },
+    })
+    .meta({ description });
+}
+
+/** A list of at least so many items. `what` names it, as `routes`. */
+export function listOf<T extends z.ZodType>(
+  what: string,
+  item: T,
+  least: number,
+  items: string,
+  description: string,
+) {
+  const rule = least === 0 ? `takes a list of ${items}` : `takes a list of at least ${least} ${items}`;
+  return z
+    .array(item, { error: (issue) => sentence(what, rule, issue.input) })
+    .min(least, {
+      error: (issue) => `${what} ${rule}; found ${(issue.input as unknown[] | undefined)?.length ?? 0}`,
+    })
+    .meta({ description });
+}
+
+/** `<what> <rule>; found <input>`. */
+export function sentence(what: string, rule: string, input: unknown): string {
+  return `${what} ${rule}; found ${foundText(input)}`;
+}
+
+function unknownKeySentence(what: string, key: string, known: readonly string[]): string {
+  return `${what} has no key ${quoted(key)}; the nearest that it has is ${quoted(nearestKey(key, known))}`;
+}
+
+/** The rule that a value breaks, or `null`. */
+function brokenBound(value: number, { above, atLeast, atMost }: Bounds, text: (value: number) => string) {
+  if (above !== undefined && !(value > above)) return `is above ${text(above)}`;
+  if (atLeast !== undefined && !(value >= atLeast)) return `is not below ${text(atLeast)}`;
+  if (atMost !== undefined && !(value <= atMost)) return `is at most ${text(atMost)}`;
+  return null;
+}
+
+function boundText(value: number, dimensions: readonly Dimension[]): string {
+  return dimensions.length === 1 && dimensions[0] === "share" ? `${value * 100} %` : String(value);
+}
+
+/** What a reader gives, or the InputError that it throws. */
+function caught<T>(read: () => T): T | InputError {
+  try {
+    return read();
+  } catch (error) {
+    if (error instanceof InputError) return error;
+    throw error;
+  }
+}
+
+/** A text or number that a reader takes, which throws an InputError with the sentence. */
+export function readBy<T, Input extends z.ZodType>(input: Input, read: (value: z.output<Input>) => T) {
+  return input.transform((value, context): T => {
+    const result = caught(() => read(value));
+    if (!(result instanceof InputError)) return result;
+    context.addIssue(result.message);
+    return z.NEVER;
+  });
+}
