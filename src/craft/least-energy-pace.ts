@@ -9,8 +9,8 @@ import {
 } from "./pace-solution.ts";
 import { type PaceConditions, Propulsion } from "./propulsion.ts";
 import { findRoot, type Residual } from "./root.ts";
-import { type SpeedNodes, speedNodes } from "./speed-nodes.ts";
-import { alongThrough } from "./triangle.ts";
+import { firstHeld, type SpeedNodes, speedNodes } from "./speed-nodes.ts";
+import { alongThrough, groundSpeedAlong } from "./triangle.ts";
 
 /**
  * Least energy per metre over the ground: V in the craft's range minimises J = (E + hotel) / g.
@@ -30,9 +30,13 @@ import { alongThrough } from "./triangle.ts";
 export class LeastEnergyPace implements PaceSolver, Residual {
   readonly #propulsion: Propulsion;
   readonly #nodes: SpeedNodes;
+  /** Per node, where neither windage nor climb acts: (E + hotel), and (dE/dV) / V, so that dE/dq is that times q. */
+  readonly #plainRate: Float64Array;
+  readonly #plainPull: Float64Array;
   readonly #hotel: number;
   readonly #min: number;
   readonly #max: number;
+  /** The best so far. */
   #v = 0;
   #g = 0;
   #rate = 0;
@@ -43,91 +47,111 @@ export class LeastEnergyPace implements PaceSolver, Residual {
     this.#propulsion = new Propulsion(craft, windKnown);
     this.#nodes = speedNodes(craft);
     this.#hotel = craft.hotelPerSecond;
-    this.#min = this.#nodes.speed[0] as number;
-    this.#max = this.#nodes.speed[this.#nodes.speed.length - 1] as number;
+    const { speed, rate, slope } = this.#nodes;
+    this.#plainRate = rate.map((value) => value * craft.storePerRate + craft.hotelPerSecond);
+    // V = 0 is above no |c|, so its node is never asked.
+    this.#plainPull = slope.map((value, i) =>
+      speed[i] === 0 ? 0 : (value * craft.storePerRate) / (speed[i] as number),
+    );
+    this.#min = speed[0] as number;
+    this.#max = speed[speed.length - 1] as number;
   }
 
   solve(conditions: PaceConditions, solution: PaceSolution): PaceStatus {
-    const cross = Math.abs(conditions.cross);
-    const { along } = conditions;
-    const fastest = alongThrough(this.#max, cross);
-    if (fastest === 0 || !(along + fastest > 0))
-      return refuse(solution, PACE_CANNOT_HOLD, this.#max, fastest === 0 ? 0 : along + fastest);
+    const first = firstHeld(this.#nodes, conditions.along, conditions.cross);
+    const last = this.#nodes.speed.length - 1;
+    if (first > last) {
+      const g = groundSpeedAlong(this.#max, conditions.along, conditions.cross);
+      return refuse(solution, PACE_CANNOT_HOLD, this.#max, g);
+    }
     this.#propulsion.set(conditions);
     this.#perMetre = Number.POSITIVE_INFINITY;
-    this.#search(cross, along, fastest);
+    this.#atNode(last);
+    this.#consider();
+    for (let top = last; top > first; ) {
+      top = this.#rise(top, first);
+      if (top >= first) this.#refine(top);
+    }
+    this.#endBelow(first);
     return accept(solution, this.#v, this.#g, this.#rate);
   }
 
   /** D(q), with the model asked at V = sqrt(q² + c²). */
   residual(q: number): number {
-    const v = this.#speedAt(q);
-    const { model } = this.#propulsion;
-    return this.#rise(model.perSecond(v), model.slope(v), v, q);
+    this.#propulsion.at(q, this.#min, this.#max);
+    return this.#d();
   }
 
-  #search(cross: number, along: number, fastest: number): void {
-    const { speed, rate, slope } = this.#nodes;
-    let i = speed.length - 1;
-    let q = fastest;
-    let rise = this.#rise(rate[i] as number, slope[i] as number, this.#max, q);
-    this.#consider(rate[i] as number, this.#max, q);
-    while (i > 0) {
-      i--;
-      const v = speed[i] as number;
-      const qBelow = alongThrough(v, cross);
-      if (qBelow === 0 || !(along + qBelow > 0)) {
-        this.#searchToLimit(Math.max(0, -along), q, rise);
-        return;
-      }
-      const riseBelow = this.#rise(rate[i] as number, slope[i] as number, v, qBelow);
-      if (rise > 0 && !(riseBelow > 0)) this.#refine(qBelow, riseBelow, q, rise);
-      q = qBelow;
-      rise = riseBelow;
+  /** The greatest node below `top` from which D rises through 0 to the next; -1 where there is none down to `first`. */
+  #rise(top: number, first: number): number {
+    const { plain } = this.#propulsion;
+    let above = (plain ? this.#plainD(top) : this.#atNode(top)) > 0;
+    for (let i = top - 1; i >= first; i--) {
+      const here = (plain ? this.#plainD(i) : this.#atNode(i)) > 0;
+      if (above && !here) return i;
+      above = here;
     }
-    if (rise > 0) this.#consider(rate[0] as number, this.#min, q);
+    return -1;
   }
 
-  /** The last piece, which ends where the track can no longer be held: at g = 0, or at V = |c|. */
-  #searchToLimit(limit: number, q: number, rise: number): void {
-    if (!(rise > 0)) return;
+  #refine(i: number): void {
+    const { cross } = this.#propulsion;
+    const high = alongThrough(this.#nodes.speed[i + 1] as number, cross);
+    const atHigh = this.#atNode(i + 1);
+    const low = alongThrough(this.#nodes.speed[i] as number, cross);
+    const atLow = this.#atNode(i);
+    this.residual(findRoot(this, low, atLow, high, atHigh, this.#max));
+    this.#consider();
+  }
+
+  /** The least V: an end of the range, or within the piece below it, where the track can no longer be held (g = 0, or V = |c|). */
+  #endBelow(first: number): void {
+    const atFirst = this.#atNode(first);
+    if (!(atFirst > 0)) return;
+    if (first === 0) {
+      this.#consider();
+      return;
+    }
+    const limit = Math.max(0, -this.#propulsion.along);
+    const high = this.#propulsion.q;
     const atLimit = this.residual(limit);
-    if (atLimit > 0) this.#considerAt(limit);
-    else this.#refine(limit, atLimit, q, rise);
+    if (!(atLimit > 0)) this.residual(findRoot(this, limit, atLimit, high, atFirst, this.#max));
+    this.#consider();
   }
 
-  #refine(low: number, atLow: number, high: number, atHigh: number): void {
-    this.#considerAt(findRoot(this, low, atLow, high, atHigh, this.#max));
-  }
-
-  #considerAt(q: number): void {
-    const v = this.#speedAt(q);
-    this.#consider(this.#propulsion.model.perSecond(v), v, q);
-  }
-
-  #consider(modelRate: number, v: number, q: number): void {
-    const g = this.#propulsion.along + q;
-    const rate = this.#propulsion.spent(modelRate, v, q) + this.#hotel;
+  /** Keeps what the propulsion was asked last, if it is the best so far. */
+  #consider(): void {
+    const propulsion = this.#propulsion;
+    const g = propulsion.along + propulsion.q;
+    const rate = propulsion.value + this.#hotel;
     const perMetre = rate / g;
     if (!(perMetre < this.#perMetre)) return;
     this.#perMetre = perMetre;
-    this.#v = v;
+    this.#v = propulsion.v;
     this.#g = g;
     this.#rate = rate;
   }
 
-  #rise(modelRate: number, modelSlope: number, v: number, q: number): number {
-    const propulsion = this.#propulsion;
-    const g = propulsion.along + q;
-    const rate = propulsion.spent(modelRate, v, q) + this.#hotel;
-    // Where nothing at all is spent, faster is better.
-    if (rate === 0) return -Number.MIN_VALUE;
-    return propulsion.change(modelRate, modelSlope, v, q) * g - rate;
+  #atNode(i: number): number {
+    this.#propulsion.atNode(this.#nodes, i);
+    return this.#d();
   }
 
-  /** Rounding must not carry V out of the range. */
-  #speedAt(q: number): number {
-    const { cross } = this.#propulsion;
-    return Math.min(this.#max, Math.max(this.#min, Math.sqrt(q * q + cross * cross)));
+  /** D from what the propulsion was asked last. */
+  #d(): number {
+    const propulsion = this.#propulsion;
+    const rate = propulsion.value + this.#hotel;
+    // Where nothing at all is spent, faster is better.
+    if (rate === 0) return -Number.MIN_VALUE;
+    return propulsion.change * (propulsion.along + propulsion.q) - rate;
+  }
+
+  /** D at a node where neither windage nor climb acts. */
+  #plainD(i: number): number {
+    const { along, cross } = this.#propulsion;
+    const q = alongThrough(this.#nodes.speed[i] as number, cross);
+    const rate = this.#plainRate[i] as number;
+    if (rate === 0) return -Number.MIN_VALUE;
+    return (this.#plainPull[i] as number) * q * (along + q) - rate;
   }
 }

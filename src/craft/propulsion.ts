@@ -1,5 +1,7 @@
 import { InputError } from "../errors.ts";
 import type { Craft, PowerModel } from "./craft.ts";
+import type { SpeedNodes } from "./speed-nodes.ts";
+import { alongThrough } from "./triangle.ts";
 import { checkWindage, windageFactor } from "./windage.ts";
 
 /** What acts on a craft at one place and time, resolved along its course: along + with the craft, cross + toward starboard. */
@@ -27,12 +29,19 @@ export function stillConditions(): PaceConditions {
  *     E = max(0, P(V) + R V/η) + m g₀ max(0, dh/ds) g/η
  *
  * with R V = -½ ρ_a A C (|W| (W_a q - W_c c) + V g²), W_a = wind along - g, W_c = wind across (see `windage.ts`).
- * It holds the conditions of one place at a time and allocates nothing.
+ *
+ * It holds the conditions of one place at a time, and answers in its own fields: numbers that cross a call are boxed by the
+ * engine, which at this depth took as long as the arithmetic.
  */
 export class Propulsion {
   readonly model: PowerModel;
   along = 0;
   cross = 0;
+  /** What was asked last: V and q in m/s, E, and dE/dq. */
+  v = 0;
+  q = 0;
+  value = 0;
+  change = 0;
   /** Store units per second for one unit of the model's rate. */
   readonly #perRate: number;
   /** ½ ρ_a A C / η in store units; 0 without windage or wind. */
@@ -41,6 +50,7 @@ export class Propulsion {
   readonly #climbFactor: number;
   #windAlong = 0;
   #windCross = 0;
+  /** Store units that the climb costs per metre along the track. */
   #perMetre = 0;
 
   /** @param windKnown whether the plan has a wind field, without which windage does not act */
@@ -69,42 +79,59 @@ export class Propulsion {
     return this.#windFactor === 0 && this.#perMetre === 0;
   }
 
+  /** Evaluates at a node, which must be above |c|. */
+  atNode(nodes: SpeedNodes, i: number): void {
+    this.v = nodes.speed[i] as number;
+    this.q = alongThrough(this.v, this.cross);
+    this.value = (nodes.rate[i] as number) * this.#perRate;
+    this.change = ((nodes.slope[i] as number) * this.#perRate * this.q) / this.v;
+    this.#add();
+  }
+
+  /** Evaluates at q, with V kept within min and max, out of which rounding might carry it. */
+  at(q: number, min: number, max: number): void {
+    const { cross, model } = this;
+    const v = Math.min(max, Math.max(min, Math.sqrt(q * q + cross * cross)));
+    this.v = v;
+    this.q = q;
+    this.value = model.perSecond(v) * this.#perRate;
+    // dV/dq = q/V; where V = 0 the cross-track part is 0, V is q, and the ratio is 1.
+    this.change = model.slope(v) * this.#perRate * (v === 0 ? 1 : q / v);
+    this.#add();
+  }
+
   /** E at V and q, given the model's own rate at V. */
   spent(modelRate: number, v: number, q: number): number {
-    const g = this.along + q;
-    let spent = modelRate * this.#perRate;
-    if (this.#windFactor !== 0) spent = Math.max(0, spent + this.#windFactor * this.#windTerm(v, q, g));
-    return spent + this.#perMetre * g;
+    this.v = v;
+    this.q = q;
+    this.value = modelRate * this.#perRate;
+    this.change = 0;
+    this.#add();
+    return this.value;
   }
 
-  /** dE/dq at V and q, given the model's own rate and slope at V. */
-  change(modelRate: number, modelSlope: number, v: number, q: number): number {
-    // dV/dq = q/V; where V = 0 the cross-track part is 0, V is q, and the ratio is 1.
+  /** Adds what windage and climb spend to what the model spends. */
+  #add(): void {
+    const g = this.along + this.q;
+    if (this.#windFactor !== 0) this.#addWindage(g);
+    this.value += this.#perMetre * g;
+    this.change += this.#perMetre;
+  }
+
+  #addWindage(g: number): void {
+    const { v, q } = this;
     const dv = v === 0 ? 1 : q / v;
-    let change = modelSlope * this.#perRate * dv;
-    if (this.#windFactor !== 0) {
-      const g = this.along + q;
-      const spent = modelRate * this.#perRate + this.#windFactor * this.#windTerm(v, q, g);
-      change = spent < 0 ? 0 : change + this.#windFactor * this.#windTermChange(v, q, g, dv);
-    }
-    return change + this.#perMetre;
-  }
-
-  /** R V / (½ ρ_a A C). */
-  #windTerm(v: number, q: number, g: number): number {
-    const wa = this.#windAlong - g;
-    const wc = this.#windCross;
-    const relative = Math.sqrt(wa * wa + wc * wc);
-    return -(relative * (wa * q - wc * this.cross) + v * g * g);
-  }
-
-  #windTermChange(v: number, q: number, g: number, dv: number): number {
     const wa = this.#windAlong - g;
     const wc = this.#windCross;
     const relative = Math.sqrt(wa * wa + wc * wc);
     const onHeading = wa * q - wc * this.cross;
     const turning = relative === 0 ? 0 : (-wa / relative) * onHeading;
-    return -(turning + relative * (wa - q) + dv * g * g + 2 * v * g);
+    this.value -= this.#windFactor * (relative * onHeading + v * g * g);
+    this.change -= this.#windFactor * (turning + relative * (wa - q) + dv * g * g + 2 * v * g);
+    if (this.value < 0) {
+      this.value = 0;
+      this.change = 0;
+    }
   }
 }
 

@@ -31,11 +31,10 @@ export function findRoot(
   for (let step = 0; step < MAX_STEPS; step++) {
     const tolerance = Number.EPSILON * (Math.min(Math.abs(x1), Math.abs(x2)) + Number.EPSILON * scale);
     const share = tolerance / Math.abs(x2 - x1);
-    const best = Math.abs(f1) < Math.abs(f2) ? x1 : x2;
-    if (share >= 0.5 || x1 === x2) return best;
+    if (share >= 0.5) break;
     let x = x1 + Math.min(1 - share, Math.max(share, t)) * (x2 - x1);
     if (x === x1 || x === x2) x = 0.5 * (x1 + x2);
-    if (x === x1 || x === x2) return best;
+    if (x === x1 || x === x2) break;
     const f = of.residual(x);
     if (f === 0) return x;
     let x3 = x1;
@@ -48,23 +47,12 @@ export function findRoot(
     }
     x1 = x;
     f1 = f;
-    t = inverseQuadraticStep(x1, f1, x2, f2, x3, f3);
+    const xi = (x1 - x2) / (x3 - x2);
+    const phi = (f1 - f2) / (f3 - f2);
+    const safe = phi * phi < xi && (1 - phi) * (1 - phi) < 1 - xi;
+    t = safe
+      ? (f1 / (f2 - f1)) * (f3 / (f2 - f3)) + ((x3 - x1) / (x2 - x1)) * (f1 / (f3 - f1)) * (f2 / (f3 - f2))
+      : 0.5;
   }
   return Math.abs(f1) < Math.abs(f2) ? x1 : x2;
-}
-
-/** Share of the way from x1 to x2 of the next place to try. */
-function inverseQuadraticStep(
-  x1: number,
-  f1: number,
-  x2: number,
-  f2: number,
-  x3: number,
-  f3: number,
-): number {
-  const xi = (x1 - x2) / (x3 - x2);
-  const phi = (f1 - f2) / (f3 - f2);
-  const safe = phi * phi < xi && (1 - phi) * (1 - phi) < 1 - xi;
-  if (!safe) return 0.5;
-  return (f1 / (f2 - f1)) * (f3 / (f2 - f3)) + ((x3 - x1) / (x2 - x1)) * (f1 / (f3 - f1)) * (f2 / (f3 - f2));
 }

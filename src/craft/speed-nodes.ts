@@ -1,5 +1,6 @@
 import { InputError } from "../errors.ts";
 import type { Craft } from "./craft.ts";
+import { groundSpeedAlong } from "./triangle.ts";
 
 /** Fewest pieces into which a craft's range of speeds is cut, and fewest between two kinks of its power model. */
 const PIECES = 32;
@@ -51,4 +52,17 @@ function checkedRange(craft: Craft): { readonly min: number; readonly max: numbe
       `the craft's range of speeds lies within its power model's, ${power.min} to ${power.max} m/s; found ${min} to ${max} m/s`,
     );
   return { min, max };
+}
+
+/** Index of the least node at which a craft can hold its track: V > |c| and g > 0; the number of nodes where there is none. */
+export function firstHeld(nodes: SpeedNodes, along: number, cross: number): number {
+  const { speed } = nodes;
+  let low = 0;
+  let high = speed.length;
+  while (low < high) {
+    const mid = (low + high) >> 1;
+    if (groundSpeedAlong(speed[mid] as number, along, cross) > 0) high = mid;
+    else low = mid + 1;
+  }
+  return low;
 }
