@@ -2,8 +2,9 @@
  * Latitudes that turn the ellipsoid into a sphere: the rectifying latitude µ, whose arcs are proportional to the
  * meridian's, and the isometric latitude ψ, the ordinate of Mercator's chart. All angles here are in radians.
  *
- * Source: C. F. F. Karney, "On auxiliary latitudes", Survey Review 56 (2024), arXiv:2212.05818: series in the third
- * flattening n, and divided differences that stay accurate when the two latitudes meet.
+ * Sources: C. F. F. Karney, "On auxiliary latitudes", arXiv:2212.05818 (2023), for the series in the third flattening n,
+ * and "The area of rhumb polygons", arXiv:2303.03219 (2023), for divided differences (called slopes here), which stay
+ * accurate where the two latitudes meet. The formulas below are derived where they stand.
  */
 
 /** µ - φ and φ - µ as sine series: element k - 1 is the coefficient of sin 2kφ, or of sin 2kµ. */
@@ -28,7 +29,7 @@ const NEGLIGIBLE = 2e-17;
  *
  * The meridian's radius of curvature is (a + b)/2 (1 - n²)² (1 + 2n cos 2φ + n²)^(-3/2), and
  * 1 + 2n cos 2φ + n² = (1 + n e^{2iφ}) (1 + n e^{-2iφ}). The product of the two binomial series gives the Fourier
- * series of the radius, and its integral gives µ (Helmert 1880; Karney, section 4).
+ * series of the radius, and its integral gives µ (Helmert 1880).
  */
 export function rectifyingSeries(n: number): RectifyingSeries {
   const scale = (1 - n * n) ** 2 * meridianHarmonic(n, 0);
@@ -61,8 +62,8 @@ function meridianHarmonic(n: number, k: number): number {
  * Coefficients of φ - µ in sin 2kµ from those of µ - φ in sin 2kφ (reversion of the series).
  *
  * Integrating the Fourier integral by parts gives d_k = (1/kπ) ∫ cos 2kµ(φ) dφ over 0..π; the trapezium rule is exact
- * to rounding for such a smooth periodic integrand. The same as Lagrange's theorem (Karney, section 5), and valid for
- * every order without a table.
+ * to rounding for such a smooth periodic integrand. It gives what Lagrange's theorem gives, and
+ * for every order without a table.
  */
 function revertSeries(coefficients: readonly number[]): number[] {
   return coefficients.map((_, index) => {
@@ -125,7 +126,7 @@ export function seriesSlope(coefficients: readonly number[], sum: number, differ
   return 1 + 2 * slope;
 }
 
-/** Isometric latitude ψ = asinh tan φ - e atanh(e sin φ), rad; unbounded toward the poles. Karney, equation (10). */
+/** Isometric latitude ψ = asinh tan φ - e atanh(e sin φ), rad; unbounded toward the poles. */
 export function isometricLatitude(e2: number, sin: number, cos: number): number {
   return Math.asinh(sin / cos) - eccentricPart(e2, sin);
 }

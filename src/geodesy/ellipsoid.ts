@@ -59,7 +59,7 @@ export function ellipsoid(a: number, f: number): Ellipsoid {
 export const WGS84: Ellipsoid = ellipsoid(WGS84_A, WGS84_F);
 
 /**
- * Radius of curvature of the meridian, M(φ) = a (1 - e²) / (1 - e² sin²φ)^(3/2), m. NGA.STND.0036, section 4.
+ * Radius of curvature of the meridian, M(φ) = a (1 - e²) / (1 - e² sin²φ)^(3/2), m.
  *
  * @param lat latitude, degrees
  * @throws InputError if the latitude is not in -90..90

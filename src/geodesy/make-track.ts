@@ -9,7 +9,7 @@ import type { PathKind, Position, Track } from "./track.ts";
  * @throws InputError if a latitude is not in -90..90 or a longitude is not finite
  *
  * @example
- * makeTrack({ lat: 58, lon: -6 }, { lat: 59, lon: -6 }, "rhumb").length // → 111399.2
+ * makeTrack({ lat: 58, lon: -6 }, { lat: 59, lon: -6 }, "rhumb").length // → 111386.4132
  */
 export function makeTrack(from: Position, to: Position, path: PathKind): Track {
   return makeTrackOn(WGS84, from, to, path);

@@ -4,8 +4,8 @@
  *
  *     s cos θ = R (µ₂ - µ₁)        λ₂ - λ₁ = tan θ (ψ₂ - ψ₁)
  *
- * (Bowditch, The American Practical Navigator (2019), chapter on the sailings). Where the line runs nearly east-west
- * both differences vanish; everything here uses their slopes instead, after Karney, arXiv:2212.05818, so that no 0/0
+ * (NGA Pub. No. 9, Bowditch, The American Practical Navigator, on Mercator sailing). Where the line runs nearly east-west
+ * both differences vanish; everything here uses their slopes instead, after Karney, arXiv:2303.03219, so that no 0/0
  * arises: with δ = φ₂ - φ₁, s = R (µ₁₂/δ) hypot(δ, λ₁₂ / (ψ₁₂/δ)).
  */
 import { InputError } from "../errors.ts";

@@ -2,6 +2,7 @@ import fc from "fast-check";
 import { describe, expect, test } from "vitest";
 import { angleDifference, DEGREE } from "../../src/geodesy/angle.ts";
 import {
+  type Ellipsoid,
   ellipsoid,
   meridianArc,
   meridionalParts,
@@ -20,6 +21,21 @@ const at = (lat: number, lon: number): Position => ({ lat, lon });
 const TOLERANCE = 3e-8;
 // There and back rounds twice, and once in the course.
 const UNDONE = 1e-7;
+
+/** dψ/dφ = M / (N cos φ). */
+const isometricRate = (shape: Ellipsoid, lat: number): number =>
+  meridionalRadius(shape, lat) / (transverseRadius(shape, lat) * Math.cos(lat * DEGREE));
+
+/** Integral over latitude, degrees, of a function of it, in radians, by Simpson's rule. */
+function simpson(integrand: (lat: number) => number, from: number, to: number): number {
+  const strips = 4096;
+  let sum = 0;
+  for (let i = 0; i <= strips; i++) {
+    const weight = i === 0 || i === strips ? 1 : i % 2 === 1 ? 4 : 2;
+    sum += weight * integrand(from + ((to - from) * i) / strips);
+  }
+  return (sum * (to - from) * DEGREE) / (3 * strips);
+}
 
 describe("the rhumb inverse and direct problems", () => {
   test("undo each other all over the globe", () => {
@@ -110,6 +126,26 @@ describe("the rhumb inverse and direct problems", () => {
     const expectedCourse = Math.atan2(40 * DEGREE, Math.atanh(0.5)) / DEGREE;
     expect(course).toBeCloseTo(expectedCourse, 12);
     expect(distance).toBeCloseTo((6371000 * 30 * DEGREE) / Math.cos(expectedCourse * DEGREE), 7);
+  });
+
+  test("have the length that quadrature gives, on oblate and prolate ellipsoids", () => {
+    const latitude = fc.double({ min: -80, max: 80, noNaN: true });
+    const turn = fc.double({ min: -179, max: 179, noNaN: true });
+    const flattening = fc.constantFrom(WGS84.f, -WGS84.f, -1 / 150, 0.02, -0.02);
+    fc.assert(
+      fc.property(latitude, latitude, turn, flattening, (lat1, lat2, lon, f) => {
+        fc.pre(Math.abs(lat2 - lat1) > 0.1);
+        const shape = ellipsoid(6400000, f);
+        const arc = simpson((lat) => meridionalRadius(shape, lat), lat1, lat2);
+        const chart = simpson((lat) => isometricRate(shape, lat), lat1, lat2);
+        const expected = Math.abs(arc) * Math.hypot(1, (lon * DEGREE) / chart);
+        // Simpson's rule on 4096 strips up to 80 degrees is good to 1e-12 of 2e7 m.
+        expect(Math.abs(rhumbInverse(shape, at(lat1, 0), at(lat2, lon)).distance - expected)).toBeLessThan(
+          2e-6,
+        );
+      }),
+      { numRuns: 100 },
+    );
   });
 
   test("take the shorter way round, and east where the longitudes are half a turn apart", () => {
