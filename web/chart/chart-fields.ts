@@ -1,10 +1,11 @@
 import { effect, type Signal } from "@preact/signals";
 import type * as L from "leaflet";
 import type { FieldRole } from "../core.ts";
+import { shownUnit } from "../format/units.ts";
 import { latestWins, SUPERSEDED } from "../state/latest-wins.ts";
 import { type PageState, shownInstant } from "../state/page-state.ts";
 import type { Lattice, LatticeQuestion } from "../worker/protocol.ts";
-import { createShading, createSymbols, latticeFor, latticeLimit } from "./field-layer.ts";
+import { createShading, createSymbols, latticeFor, latticeLimit, type Shaded } from "./field-layer.ts";
 
 const ROLES: readonly FieldRole[] = ["current", "wind"];
 
@@ -32,14 +33,14 @@ function showRole(map: L.Map, page: PageState, role: FieldRole): () => void {
 }
 
 function showShading(map: L.Map, page: PageState, limit: Signal<number | null>): () => void {
-  let shaded: { lattice: Lattice; step: LatticeQuestion } | null = null;
+  let shaded: Shaded | null = null;
   const layer = createShading(() => shaded).addTo(map);
   return keepAsked(map, page, (instant, ask) => {
     const role = page.view.shading.value;
     const present = (page.store.plan.value.fields ?? []).some((field) => field.role === role);
     const put = (found: typeof shaded): void => {
       shaded = found;
-      limit.value = found === null ? null : latticeLimit(found.lattice);
+      limit.value = found?.limit_m_s ?? null;
       layer.redraw();
     };
     if (role === "none" || !present || instant === null) {
@@ -47,7 +48,8 @@ function showShading(map: L.Map, page: PageState, limit: Signal<number | null>):
       return;
     }
     const step = latticeFor(map, role, instant, true);
-    void ask(step).then((lattice) => lattice && put({ lattice, step }));
+    const { si } = shownUnit(page.view.units.value, "speed");
+    void ask(step).then((lattice) => lattice && put({ lattice, step, limit_m_s: latticeLimit(lattice, si) }));
   });
 }
 

@@ -14,12 +14,10 @@ export interface ChartMap {
   fineCoastReady(): void;
 }
 
-/** The map with coastline and graticule; nothing on it is fetched from anywhere but the worker, unless the user says where from. */
+/** The map with coastline and graticule, still without a view; nothing on it is fetched from anywhere but the worker, unless the user says where from. */
 export function createChartMap(element: HTMLElement, coast: TileSource, wantFine: () => void): ChartMap {
   const still = window.matchMedia("(prefers-reduced-motion: reduce)").matches;
   const map = L.map(element, {
-    center: [40, 0],
-    zoom: 2,
     minZoom: 1,
     maxZoom: MAX_ZOOM,
     zoomControl: false,
@@ -50,14 +48,14 @@ export function createChartMap(element: HTMLElement, coast: TileSource, wantFine
   return {
     map,
     recolour() {
-      coastline.redraw();
+      coastline.refresh();
       graticule.redraw();
     },
     showTiles(address) {
       tiles?.remove();
       tiles = address === "" ? null : L.tileLayer(address, { maxZoom: MAX_ZOOM, zIndex: 5 }).addTo(map);
     },
-    fineCoastReady: () => coastline.redraw(),
+    fineCoastReady: () => coastline.refresh(),
   };
 }
 

@@ -1,6 +1,7 @@
 import { effect, type Signal } from "@preact/signals";
 import * as L from "leaflet";
 import { withinTurn } from "../format/position-text.ts";
+import { shownUnit } from "../format/units.ts";
 import { nearestSample, placeAtDistance, placeAtTime } from "../state/along-route.ts";
 import { alongLimit } from "../state/along-scale.ts";
 import { type PageState, shownInstant } from "../state/page-state.ts";
@@ -34,6 +35,7 @@ export function openChart(host: HTMLElement, page: PageState, readouts: ChartRea
     onceAtATime(() => page.engine.loadFineCoast().then(() => chart.fineCoastReady())),
   );
   const { map } = chart;
+  const fitted = firstView(map, page);
   const closers = [
     followPointer(map, readouts),
     showRoutes(map, page),
@@ -45,7 +47,8 @@ export function openChart(host: HTMLElement, page: PageState, readouts: ChartRea
   resized.observe(host);
 
   const fitRoutes = (): void => showAll(map, page);
-  fitWhenFirstDrawn(page, closers, fitRoutes);
+  if (!fitted) closers.push(fitWhenFirstDrawn(page, fitRoutes));
+  closers.push(fitUntilTouched(map, fitRoutes));
   return {
     zoom: (steps) => map.setZoom(map.getZoom() + steps),
     fitRoutes,
@@ -108,7 +111,7 @@ function showRoutes(map: L.Map, page: PageState): () => void {
     const answer = answers.answer.value;
     const { route, waypoint } = store.selection.value;
     const routes = drawnRoutes(plan, answer, route);
-    lines.draw(routes, alongLimit(answer));
+    lines.draw(routes, alongLimit(answer, shownUnit(view.units.value, "speed").si));
     const places = handlesOf(plan.routes[route]) ?? [];
     const shift = shiftFor(
       map,
@@ -206,12 +209,13 @@ function followPointer(map: L.Map, { pointer, metresPerPx }: ChartReadouts): () 
 function followTheme(chart: ChartMap, { view }: PageState): () => void {
   const dark = window.matchMedia("(prefers-color-scheme: dark)");
   const recolour = (): void => chart.recolour();
+  let drawn = false;
   dark.addEventListener("change", recolour);
   const stops = [
-    effect(() => {
-      view.theme.value;
-      // The theme's class is set by another effect; colours are read once it is.
-      queueMicrotask(recolour);
+    view.theme.subscribe(() => {
+      // The theme's attribute is set by another effect; colours are read once it is.
+      if (drawn) queueMicrotask(recolour);
+      drawn = true;
     }),
     effect(() => chart.showTiles(view.tiles.value)),
     effect(() => {
@@ -228,25 +232,46 @@ function followTheme(chart: ChartMap, { view }: PageState): () => void {
 }
 
 function showAll(map: L.Map, { store, answers }: PageState): void {
-  const routes = drawnRoutes(store.plan.value, answers.answer.value, 0);
-  const points = routes.flatMap(({ drawing }) => {
+  const points = drawnRoutes(store.plan.value, answers.answer.value, 0).flatMap(({ drawing }) => {
     const shift = shiftFor(map, drawing.lon);
     return Array.from(drawing.lat, (lat, at): L.LatLngTuple => [lat, (drawing.lon[at] ?? 0) + shift]);
   });
   if (points.length > 0) map.fitBounds(L.latLngBounds(points), { padding: [48, 48], animate: false });
 }
 
+/** Opens on the whole plan, or on the world where the plan is empty; says whether there was a plan to show. */
+function firstView(map: L.Map, { store }: PageState): boolean {
+  const points = store.plan
+    .peek()
+    .routes.flatMap((route) => handlesOf(route) ?? [])
+    .map(({ lat, lon }): L.LatLngTuple => [lat, lon]);
+  if (points.length < 2) map.setView([25, 0], 2);
+  else map.fitBounds(L.latLngBounds(points), { padding: [48, 48], animate: false });
+  return points.length >= 2;
+}
+
 /** Shows the whole of a plan once, when it is first there; afterwards the view is the user's. */
-function fitWhenFirstDrawn(page: PageState, closers: (() => void)[], fitRoutes: () => void): void {
+function fitWhenFirstDrawn(page: PageState, fitRoutes: () => void): () => void {
   let fitted = false;
-  closers.push(
-    effect(() => {
-      const ready = page.store.plan.value.routes.some((route) => route.waypoints.length > 1);
-      if (fitted || !ready) return;
-      fitted = true;
-      queueMicrotask(fitRoutes);
-    }),
-  );
+  return effect(() => {
+    const ready = page.store.plan.value.routes.some((route) => route.waypoints.length > 1);
+    if (fitted || !ready) return;
+    fitted = true;
+    queueMicrotask(fitRoutes);
+  });
+}
+
+/** Keeps the whole plan in view while the panes around the chart find their sizes, until the user takes hold of the chart. */
+function fitUntilTouched(map: L.Map, fitRoutes: () => void): () => void {
+  const host = map.getContainer();
+  const gestures = ["pointerdown", "wheel", "keydown"];
+  const stop = (): void => {
+    map.off("resize", fitRoutes);
+    for (const gesture of gestures) host.removeEventListener(gesture, stop);
+  };
+  map.on("resize", fitRoutes);
+  for (const gesture of gestures) host.addEventListener(gesture, stop);
+  return stop;
 }
 
 /** A position rounded to what a pixel can tell at a zoom, so that plans stay readable. */

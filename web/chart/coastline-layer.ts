@@ -19,6 +19,12 @@ export class CoastlineLayer extends L.GridLayer {
     this.wantFine = wantFine;
   }
 
+  /** Draws all tiles anew. Leaflet's own redraw takes a zoom between two levels for a level of tiles. */
+  refresh(): void {
+    const map = this._map;
+    if (map) this.remove().addTo(map);
+  }
+
   protected override createTile(coords: L.Coords, done: L.DoneCallback): HTMLElement {
     const scale = window.devicePixelRatio;
     const canvas = document.createElement("canvas");

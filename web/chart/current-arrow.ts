@@ -1,4 +1,4 @@
-import type { Point, Symbol } from "./wind-barb.ts";
+import type { FlowSymbol, Point } from "./wind-barb.ts";
 
 const HEAD = 5;
 
@@ -8,7 +8,7 @@ const HEAD = 5;
  * @param toward_deg direction that the water moves to, degrees clockwise from up
  * @param length of the whole arrow, px; below 2 px it is a dot
  */
-export function currentArrow(toward_deg: number, length: number): Symbol {
+export function currentArrow(toward_deg: number, length: number): FlowSymbol {
   if (length < 2) return { strokes: [], fills: [], calm: 1 };
   const angle = (toward_deg * Math.PI) / 180;
   const ahead: Point = [Math.sin(angle), -Math.cos(angle)];

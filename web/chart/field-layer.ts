@@ -7,11 +7,11 @@ import { CanvasOverlay, type OverlayFrame } from "./canvas-overlay.ts";
 import { cssColour } from "./css-colour.ts";
 import { currentArrow } from "./current-arrow.ts";
 import { graticuleStep } from "./graticule.ts";
-import { type Symbol, windBarb } from "./wind-barb.ts";
+import { type FlowSymbol, windBarb } from "./wind-barb.ts";
 
 const BARB_LENGTH = 26;
-const BARB_GAP = 58;
-const ARROW_GAP = 40;
+const BARB_GAP = 68;
+const ARROW_GAP = 50;
 const ARROW_LENGTH = 30;
 const SHADE_CELL = 8;
 
@@ -57,7 +57,7 @@ function drawSymbols(frame: OverlayFrame, lattice: Lattice | null, role: FieldRo
   context.fillStyle = colour;
   context.lineWidth = role === "wind" ? 1.2 : 1.4;
   context.lineCap = "round";
-  const strongest = latticeLimit(lattice);
+  const strongest = latticeLimit(lattice, 1);
   for (let at = 0; at < lattice.lat.length; at += 1) {
     const lat = lattice.lat[at] ?? 0;
     const u = lattice.east_m_s[at] ?? 0;
@@ -67,18 +67,18 @@ function drawSymbols(frame: OverlayFrame, lattice: Lattice | null, role: FieldRo
   }
 }
 
-function barbOf(u: number, v: number, lat: number): Symbol {
+function barbOf(u: number, v: number, lat: number): FlowSymbol {
   const knot = shownUnit("sea", "speed").si;
   const from = (Math.atan2(-u, -v) * 180) / Math.PI;
   return windBarb(Math.hypot(u, v) / knot, from, lat < 0, BARB_LENGTH);
 }
 
-function arrowOf(u: number, v: number, strongest: number): Symbol {
+function arrowOf(u: number, v: number, strongest: number): FlowSymbol {
   const share = strongest === 0 ? 0 : Math.hypot(u, v) / strongest;
   return currentArrow((Math.atan2(u, v) * 180) / Math.PI, ARROW_LENGTH * Math.sqrt(share));
 }
 
-function drawSymbol(context: CanvasRenderingContext2D, symbol: Symbol, x: number, y: number): void {
+function drawSymbol(context: CanvasRenderingContext2D, symbol: FlowSymbol, x: number, y: number): void {
   context.beginPath();
   for (const stroke of symbol.strokes) {
     stroke.forEach(([dx, dy], at) => {
@@ -100,26 +100,30 @@ function drawSymbol(context: CanvasRenderingContext2D, symbol: Symbol, x: number
 }
 
 /** The speed that the scale of shading and arrows ends at, m/s. */
-export function latticeLimit({ east_m_s, north_m_s }: Lattice): number {
+export function latticeLimit({ east_m_s, north_m_s }: Lattice, unit: number): number {
   let most = 0;
   for (let at = 0; at < east_m_s.length; at += 1) {
     most = Math.max(most, Math.hypot(east_m_s[at] ?? 0, north_m_s[at] ?? 0));
   }
-  return roundLimit(most);
+  return roundLimit(most, unit);
+}
+
+/** Speeds of a field with the lattice that they stand on, and where their scale ends. */
+export interface Shaded {
+  readonly lattice: Lattice;
+  readonly step: LatticeQuestion;
+  readonly limit_m_s: number;
 }
 
 /** Cells coloured by speed. */
-export function createShading(
-  lattice: () => { lattice: Lattice; step: LatticeQuestion } | null,
-): CanvasOverlay {
+export function createShading(lattice: () => Shaded | null): CanvasOverlay {
   return new CanvasOverlay((frame) => drawShading(frame, lattice()), "shading", false);
 }
 
-function drawShading(frame: OverlayFrame, shaded: { lattice: Lattice; step: LatticeQuestion } | null): void {
+function drawShading(frame: OverlayFrame, shaded: Shaded | null): void {
   if (shaded === null) return;
   const { context, place } = frame;
-  const { lattice, step } = shaded;
-  const limit = latticeLimit(lattice);
+  const { lattice, step, limit_m_s: limit } = shaded;
   const colours = Array.from({ length: SPEED_CLASSES }, (_, at) => speedColour(at));
   for (let at = 0; at < lattice.lat.length; at += 1) {
     const lat = lattice.lat[at] ?? 0;

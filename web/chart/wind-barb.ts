@@ -2,7 +2,7 @@
 export type Point = readonly [number, number];
 
 /** A symbol as lines to stroke and polygons to fill. */
-export interface Symbol {
+export interface FlowSymbol {
   readonly strokes: readonly (readonly Point[])[];
   readonly fills: readonly (readonly Point[])[];
   /** Radius of the circle of a calm, px; `null` where it isn't calm. */
@@ -37,7 +37,7 @@ export function feathersOf(speed_kn: number): Feathers {
  * @param southern whether the place lies south of the equator
  * @param length of the shaft, px
  */
-export function windBarb(speed_kn: number, from_deg: number, southern: boolean, length: number): Symbol {
+export function windBarb(speed_kn: number, from_deg: number, southern: boolean, length: number): FlowSymbol {
   const { pennants, full, half } = feathersOf(speed_kn);
   if (pennants + full + half === 0) return { strokes: [], fills: [], calm: CALM_RADIUS };
 

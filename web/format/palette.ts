@@ -65,10 +65,13 @@ export function routeHue(index: number): string {
   return ROUTES[index % ROUTES.length] ?? ROUTES[0];
 }
 
-/** A round limit for a scale: the least of 1, 2, 5 × a power of ten that is not below the value. */
-export function roundLimit(value: number): number {
+const ROUND = [1, 1.5, 2, 3, 4, 5, 6, 8, 10] as const;
+
+/** A limit for a scale, round in the unit that it is shown in: the least round number of units not below the value. */
+export function roundLimit(value: number, unit: number): number {
   if (value <= 0) return 0;
-  const power = 10 ** Math.floor(Math.log10(value));
-  const step = [1, 2, 5, 10].find((factor) => factor * power >= value) ?? 10;
-  return step * power;
+  const shown = value / unit;
+  const power = 10 ** Math.floor(Math.log10(shown));
+  const step = ROUND.find((factor) => factor * power >= shown) ?? 10;
+  return step * power * unit;
 }

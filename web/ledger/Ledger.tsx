@@ -110,7 +110,9 @@ function LedgerRow({ page, at, name, route, base, best, end }: LedgerRowProps) {
         ) : (
           <>
             <Cell best={best.arrival.has(at)} difference={arrivalDifference(route, against)}>
-              {route.arrival === null ? "not reached" : clockText(route.arrival, view.zone.value, true)}
+              {route.arrival === null
+                ? "not reached"
+                : arrivalText(route.arrival, route.departure, view.zone.value)}
             </Cell>
             <Cell best={false} difference={null}>
               {durationText(wholeTime(route))}
@@ -155,6 +157,14 @@ function BarLegend() {
       cross <span class="key gain" /> saved by a following flow
     </p>
   );
+}
+
+/** The clock alone where the route arrives on the day that it departs. */
+function arrivalText(arrival: string, departure: string, zone: string): string {
+  const full = clockText(arrival, zone, true);
+  const clock = clockText(arrival, zone, false);
+  const sameDay = full.slice(0, -clock.length) === clockText(departure, zone, true).slice(0, -clock.length);
+  return sameDay ? clock : full;
 }
 
 function wholeTime({ totals }: RouteEstimate): number | null {

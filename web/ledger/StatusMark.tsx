@@ -2,16 +2,27 @@ import type { RouteEstimate, RouteStatus, Severity } from "../core.ts";
 
 const SHAPES: Record<RouteStatus | "note", string> = { clear: "✓", note: "i", caution: "!", stop: "✕" };
 
-/** How a route stands, in a word, a shape and a colour, with how many findings of each severity. */
+/** How a route stands: a shape and a number for each severity of finding, in words for those who hear it. */
 export function StatusMark({ route }: { readonly route: RouteEstimate }) {
-  const count = (severity: Severity): number =>
-    route.findings.filter((finding) => finding.severity === severity).length;
-  const parts = (["stop", "caution", "note"] as const).flatMap((severity) =>
-    count(severity) === 0 ? [] : [`${count(severity)} ${severity}`],
-  );
+  const counts = (["stop", "caution", "note"] as const).flatMap((severity) => {
+    const count = route.findings.filter((finding) => finding.severity === severity).length;
+    return count === 0 ? [] : [{ severity, count }];
+  });
+  if (counts.length === 0) {
+    return (
+      <span class="status clear">
+        <SeverityShape severity="clear" /> clear
+      </span>
+    );
+  }
   return (
-    <span class={`status ${route.status}`}>
-      <SeverityShape severity={route.status} /> {parts.length === 0 ? "clear" : parts.join(", ")}
+    <span class="status">
+      {counts.map(({ severity, count }) => (
+        <span key={severity} class={severity} title={`${count} ${severity}`}>
+          <SeverityShape severity={severity} /> {count}
+          <span class="unseen"> {severity} </span>
+        </span>
+      ))}
     </span>
   );
 }

@@ -25,7 +25,7 @@ export function Ribbons({ page }: { readonly page: PageState }) {
   const scale = scaleLinear()
     .domain([0, Math.max(farthest, 1e-9)])
     .range([MARGIN, Math.max(width - MARGIN, MARGIN + 1)]);
-  const limit = alongLimit(answer);
+  const limit = alongLimit(answer, shownUnit(view.units.value, "speed").si);
 
   return (
     <section class="pane ribbons" data-pane="ribbons" aria-labelledby="ribbons-title">
@@ -60,7 +60,11 @@ export function Ribbons({ page }: { readonly page: PageState }) {
             axis === "distance" ? shownUnit(view.units.value, "distance").si : null,
             width,
           ).map((tick) => (
-            <g key={tick} transform={`translate(${scale(tick)} 0)`}>
+            <g
+              key={tick}
+              class={scale(tick) > width - 40 ? "at-end" : ""}
+              transform={`translate(${scale(tick)} 0)`}
+            >
               <path d="M0 0V4" />
               <text y="15">{axis === "distance" ? distanceLabel(tick, page) : durationText(tick)}</text>
             </g>

@@ -29,14 +29,18 @@ export function App({ page }: { readonly page: PageState }) {
       <Header page={page} />
       <PlanBar page={page} />
       <main>
-        <section class="pane chart-pane" data-pane="chart" aria-label="Chart and clock">
-          <Chart page={page} />
-          <ClockBar page={page} />
-        </section>
-        <Ribbons page={page} />
-        <Ledger page={page} />
-        <RouteEditor page={page} />
-        <LegTable page={page} />
+        <div class="column">
+          <section class="pane chart-pane" data-pane="chart" aria-label="Chart and clock">
+            <Chart page={page} />
+            <ClockBar page={page} />
+          </section>
+          <Ribbons page={page} />
+          <LegTable page={page} />
+        </div>
+        <div class="column">
+          <Ledger page={page} />
+          <RouteEditor page={page} />
+        </div>
       </main>
       <nav class="pane-tabs" aria-label="Panes">
         {PANES.map(([pane, name]) => (

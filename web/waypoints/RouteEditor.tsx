@@ -88,9 +88,6 @@ export function RouteEditor({ page }: { readonly page: PageState }) {
                 <th scope="col">Speed</th>
                 <th scope="col">Stay</th>
                 <th scope="col">Height</th>
-                <th scope="col">
-                  <span class="unseen">Order and deletion</span>
-                </th>
               </tr>
             </thead>
             <tbody>
@@ -100,27 +97,67 @@ export function RouteEditor({ page }: { readonly page: PageState }) {
                   page={page}
                   index={index}
                   waypoint={waypoint}
-                  last={route.waypoints.length - 1}
                   path={waypoint.path ?? route.path ?? "geodesic"}
                 />
               ))}
             </tbody>
           </table>
-          <button
-            type="button"
-            class="add"
-            onClick={() =>
-              edit("Add waypoint", (plan) => appendNear(plan, chosen), {
-                route: chosen,
-                waypoint: route.waypoints.length,
-              })
-            }
-          >
-            Add waypoint
-          </button>
+          <div class="tools waypoint-tools">
+            <button
+              type="button"
+              onClick={() =>
+                edit("Add waypoint", (plan) => appendNear(plan, chosen), {
+                  route: chosen,
+                  waypoint: route.waypoints.length,
+                })
+              }
+            >
+              Add waypoint
+            </button>
+            <ChosenWaypoint page={page} last={route.waypoints.length - 1} />
+          </div>
         </div>
       )}
     </section>
+  );
+}
+
+/** What can be done to the chosen waypoint. */
+function ChosenWaypoint({ page: { store }, last }: { readonly page: PageState; readonly last: number }) {
+  const { route, waypoint } = store.selection.value;
+  const move = (label: string, to: number): void => {
+    if (waypoint === null) return;
+    store.edit(label, (plan) => moveWaypoint(plan, route, waypoint, to), { select: { route, waypoint: to } });
+  };
+  const name = waypoint === null ? "waypoint" : `waypoint ${waypoint + 1}`;
+  return (
+    <>
+      <button
+        type="button"
+        disabled={waypoint === null || waypoint === 0}
+        aria-label={`Move ${name} up`}
+        onClick={() => move("Move waypoint up", (waypoint ?? 0) - 1)}
+      >
+        Up
+      </button>
+      <button
+        type="button"
+        disabled={waypoint === null || waypoint === last}
+        aria-label={`Move ${name} down`}
+        onClick={() => move("Move waypoint down", (waypoint ?? 0) + 1)}
+      >
+        Down
+      </button>
+      <button
+        type="button"
+        disabled={waypoint === null}
+        onClick={() =>
+          waypoint !== null && store.edit("Delete waypoint", (plan) => deleteWaypoint(plan, route, waypoint))
+        }
+      >
+        Delete {name}
+      </button>
+    </>
   );
 }
 
@@ -128,11 +165,10 @@ interface WaypointRowProps {
   readonly page: PageState;
   readonly index: number;
   readonly waypoint: WaypointDocument;
-  readonly last: number;
   readonly path: "geodesic" | "rhumb";
 }
 
-function WaypointRow({ page, index, waypoint, last, path }: WaypointRowProps) {
+function WaypointRow({ page, index, waypoint, path }: WaypointRowProps) {
   const { store } = page;
   const { route, waypoint: selected } = store.selection.value;
   const select = { route, waypoint: index };
@@ -184,31 +220,6 @@ function WaypointRow({ page, index, waypoint, last, path }: WaypointRowProps) {
       <td>{index > 0 && field("speed", "Speed to")}</td>
       <td>{field("stay", "Stay")}</td>
       <td>{field("height", "Height")}</td>
-      <td class="row-tools">
-        <button
-          type="button"
-          disabled={index === 0}
-          aria-label={`Move waypoint ${index + 1} up`}
-          onClick={() => store.edit("Move up", (plan) => moveWaypoint(plan, route, index, index - 1))}
-        >
-          ↑
-        </button>
-        <button
-          type="button"
-          disabled={index === last}
-          aria-label={`Move waypoint ${index + 1} down`}
-          onClick={() => store.edit("Move down", (plan) => moveWaypoint(plan, route, index, index + 1))}
-        >
-          ↓
-        </button>
-        <button
-          type="button"
-          aria-label={`Delete waypoint ${index + 1}`}
-          onClick={() => store.edit("Delete waypoint", (plan) => deleteWaypoint(plan, route, index))}
-        >
-          ✕
-        </button>
-      </td>
     </tr>
   );
 }
