@@ -212,15 +212,7 @@ class RouteWork {
     const { craft } = this.#conditions;
     const seconds = leg.to.stay_s;
     const wind = this.#wind;
-    if (seconds === 0)
-      return {
-        use: 0,
-        useBound: 0,
-        maxWind: 0,
-        edges: { held: false, filled: false, zero: false },
-        failure: null,
-      };
-    if (craft.moves === "water" || wind === null) return plainStay(craft, seconds);
+    if (seconds === 0 || craft.moves === "water" || wind === null) return plainStay(craft, seconds);
     return hover(craft, wind, leg, this.#step.stations, this.#elapsed + sums.time, seconds);
   }
 
@@ -252,6 +244,7 @@ class RouteWork {
           "the wind has no gusts here, so that the craft's gust limit is not checked",
         ),
       );
+    if (stay !== null) this.#reportStay(leg, stay);
     if (stop !== null) {
       const role = stop.role;
       const moment = departure + 1000 * time;
@@ -264,6 +257,23 @@ class RouteWork {
           stopText(stop.code, role, stop, moment, this.#validity(role)),
         ),
       );
+    }
+  }
+
+  /** What a stay rests on that is not real data, unless the leg before it says so already. */
+  #reportStay(leg: NumberedLeg, { edges }: Stay): void {
+    const length = leg.prepared.track.length;
+    for (const [used, code, what] of [
+      [edges.held, "held-beyond", "the wind ends before the stay does; its last values are held"],
+      [
+        edges.filled,
+        "gap-filled",
+        "the wind has missing values where the craft stays, filled by the plan's gap policy",
+      ],
+      [edges.zero, "zero-outside", "the craft stays outside the wind's area; taken as no wind"],
+    ] as const) {
+      const told = this.#findings.some((finding) => finding.code === code && finding.leg === leg.number);
+      if (used && !told) this.#findings.push(legFinding(code, leg, length, length, what));
     }
   }
 

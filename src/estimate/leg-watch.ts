@@ -71,7 +71,7 @@ export class LegWatch {
     const windAlong = alongAt(wind, i, time);
     const windCross = crossAt(wind, i, time);
     const windSpeed = Math.sqrt(windAlong * windAlong + windCross * windCross);
-    if (wind_m_s !== null) feed(this.#wind, s, windSpeed - wind_m_s, windSpeed);
+    if (wind_m_s !== null) feed(this.#wind, s, above(windSpeed, wind_m_s), windSpeed);
     if (current === null || this.#craft.moves !== "water") return;
     const along = alongAt(current, i, time);
     const cross = crossAt(current, i, time);
@@ -95,7 +95,7 @@ export class LegWatch {
     for (let i = 0; i < STATIONS; i += 1) {
       const gust = gustAt(wind, i, start + (step.elapsed[i] as number), step.stations);
       if (Number.isNaN(gust)) this.gustUnknown = true;
-      else feed(this.#gust, step.stations.s[i] as number, gust - limit, gust);
+      else feed(this.#gust, step.stations.s[i] as number, above(gust, limit), gust);
     }
   }
 
@@ -108,7 +108,7 @@ export class LegWatch {
   /** Wind met while staying at the leg's end. */
   whileStaying(windSpeed: number, place: number): void {
     const limit = this.#craft.limits.wind_m_s;
-    if (limit !== null) feed(this.#wind, place, windSpeed - limit, windSpeed);
+    if (limit !== null) feed(this.#wind, place, above(windSpeed, limit), windSpeed);
   }
 
   /** Everything found, in the order of the contract's severities. */
@@ -135,6 +135,11 @@ export class LegWatch {
       { code: "height-outside-field", role, stretch: edges.height },
     ];
   }
+}
+
+/** How far a speed is above a limit, m/s; exactly at it, but for rounding, is not above. */
+function above(speed: number, limit: number): number {
+  return speed - limit * (1 + 1e-12);
 }
 
 function edgeStretches() {
