@@ -38,42 +38,51 @@ export function onCellLand(shape: Feature<MultiPolygon>, position: LonLat): bool
  * Shares 0..1 of the straight line between two positions at which it meets the rings of a cell, ascending.
  * Only the rings' edges that reach into the line's own box are handed to the search for intersections.
  */
-export function coastCuts(shape: Feature<MultiPolygon>, from: LonLat, to: LonLat): number[] {
-  const edges = shape.geometry.coordinates.flat().flatMap((ring) => edgesNear(ring, from, to));
-  if (edges.length === 0) return [];
-  const met = lineIntersect(lineString([from, to]), multiLineString(edges));
+export function coastCuts(land: Land, cell: number, from: LonLat, to: LonLat): number[] {
   const [x0 = 0, y0 = 0] = from;
   const [x1 = 0, y1 = 0] = to;
   if (x0 === x1 && y0 === y1) return [];
+  const edges: LonLat[][] = [];
+  const end = land.ringRange[2 * cell + 1] ?? 0;
+  for (let ring = land.ringRange[2 * cell] ?? 0; ring < end; ring++)
+    addEdgesNear(land, ring, from, to, edges);
+  if (edges.length === 0) return [];
+  const met = lineIntersect(lineString([from, to]), multiLineString(edges));
   const alongLongitude = Math.abs(x1 - x0) > Math.abs(y1 - y0);
   return met.features
-    .map(
-      ({
-        geometry: {
-          coordinates: [x = 0, y = 0],
-        },
-      }) => (alongLongitude ? (x - x0) / (x1 - x0) : (y - y0) / (y1 - y0)),
-    )
+    .map(({ geometry }) => {
+      const [x = 0, y = 0] = geometry.coordinates;
+      return alongLongitude ? (x - x0) / (x1 - x0) : (y - y0) / (y1 - y0);
+    })
     .sort((a, b) => a - b);
 }
 
-function edgesNear(ring: readonly LonLat[], from: LonLat, to: LonLat): LonLat[][] {
-  const [x0 = 0, y0 = 0] = from;
-  const [x1 = 0, y1 = 0] = to;
-  const [west, east] = x0 < x1 ? [x0, x1] : [x1, x0];
-  const [south, north] = y0 < y1 ? [y0, y1] : [y1, y0];
-  const edges: LonLat[][] = [];
-  for (let i = 1; i < ring.length; i++) {
-    const a = ring[i - 1] as LonLat;
-    const b = ring[i] as LonLat;
-    const [ax = 0, ay = 0] = a;
-    const [bx = 0, by = 0] = b;
-    const apart =
-      (ax < west && bx < west) ||
-      (ax > east && bx > east) ||
-      (ay < south && by < south) ||
-      (ay > north && by > north);
-    if (!apart) edges.push([a, b]);
+function addEdgesNear(land: Land, ring: number, from: LonLat, to: LonLat, edges: LonLat[][]): void {
+  const { xy } = land;
+  const [west, east] = ascending(from[0] ?? 0, to[0] ?? 0);
+  const [south, north] = ascending(from[1] ?? 0, to[1] ?? 0);
+  const start = land.ringStart[ring] ?? 0;
+  const end = land.ringStart[ring + 1] ?? 0;
+  let ax = xy[end - 2] ?? 0;
+  let ay = xy[end - 1] ?? 0;
+  for (let i = start; i < end; i += 2) {
+    const bx = xy[i] ?? 0;
+    const by = xy[i + 1] ?? 0;
+    const reachesIn =
+      (ax >= west || bx >= west) &&
+      (ax <= east || bx <= east) &&
+      (ay >= south || by >= south) &&
+      (ay <= north || by <= north);
+    if (reachesIn)
+      edges.push([
+        [ax, ay],
+        [bx, by],
+      ]);
+    ax = bx;
+    ay = by;
   }
-  return edges;
+}
+
+function ascending(a: number, b: number): [number, number] {
+  return a < b ? [a, b] : [b, a];
 }

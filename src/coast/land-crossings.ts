@@ -77,7 +77,7 @@ function addPart(
     const { lat, lon } = alongChord(chord, share);
     return [lon - turn, lat];
   };
-  const cuts = coastCuts(shape, lonLat(from), lonLat(to)).map((share) => from + share * (to - from));
+  const cuts = coastCuts(land, cell, lonLat(from), lonLat(to)).map((share) => from + share * (to - from));
   let start = from;
   for (const end of [...cuts, to]) {
     if (end - start <= SAME_CUT) continue;
