@@ -1,5 +1,5 @@
 import { checkPlan } from "./core.ts";
-import { messageLine } from "./message.ts";
+import { oneLine } from "./message.ts";
 import { writeResult } from "./output.ts";
 import { openBeside, readText } from "./plan-files.ts";
 
@@ -16,6 +16,6 @@ export async function checkCommand(file: string): Promise<number> {
     counted(legs, "leg"),
     counted(plan.fields.length, "field file"),
   ];
-  await writeResult(messageLine(`${file}: in order; ${parts.join(", ")}, craft ${plan.craft.name}`));
+  await writeResult(`${oneLine(`${file}: in order; ${parts.join(", ")}; craft: ${plan.craft.name}`)}\n`);
   return 0;
 }

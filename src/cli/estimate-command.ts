@@ -9,6 +9,7 @@ import {
   writeJson,
   writeTable,
 } from "./core.ts";
+import { loadLand } from "./load-land.ts";
 import { writeResult } from "./output.ts";
 import { openBeside, readText } from "./plan-files.ts";
 
@@ -45,6 +46,7 @@ export async function estimateCommand(file: string, options: EstimateOptions): P
   const { estimate, plan } = await estimatePlan(await readText(file), {
     file,
     open: openBeside(file),
+    loadLand,
     ...(options.departure === undefined ? {} : { departure: options.departure }),
     ...(options.route === undefined ? {} : { routes: options.route }),
   });

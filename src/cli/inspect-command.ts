@@ -26,8 +26,8 @@ export async function inspectCommand(
   file: string,
   { role, map = [], format }: InspectOptions,
 ): Promise<number> {
-  const inspection = await inspectField(openBeside(file), {
-    file: basename(file),
+  const inspection = await inspectField(() => openBeside(file)(basename(file)), {
+    file,
     columns: columnMap(map),
     ...(role === undefined ? {} : { role }),
   });

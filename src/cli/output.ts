@@ -30,6 +30,9 @@ async function replaceFile(path: string, text: string, mode: number | null): Pro
 
 async function writeTo(file: string, text: string): Promise<void> {
   const there = await standing(file);
+  if (there === null && (await standing(dirname(file)))?.stats.isDirectory() !== true) {
+    throw new InputError("the folder to write it in does not exist", { file });
+  }
   if (there === null) return replaceFile(file, text, null);
   if (there.stats.isDirectory()) throw new InputError("--out names a file; found a folder", { file });
   // A terminal or a pipe cannot be replaced.

@@ -7,14 +7,14 @@ const STATUS_INPUT = 2;
 /** A defect of the program itself: EX_SOFTWARE of sysexits.h. */
 const STATUS_DEFECT = 70;
 
-/** A reader that closes its end, as `head` does, ends the program without a word. */
-function endQuietlyOnClosedPipe(): void {
-  for (const stream of [process.stdout, process.stderr]) {
-    stream.on("error", (fault: NodeJS.ErrnoException) => {
-      if (fault.code !== "EPIPE") throw fault;
-      process.exit();
-    });
-  }
+/** A reader that closes its end, as `head` does, ends the program without a word; a full disk does so with one. */
+function endOnFailedWrite(): void {
+  process.stderr.on("error", () => process.exit(STATUS_INPUT));
+  process.stdout.on("error", (fault: NodeJS.ErrnoException) => {
+    if (fault.code === "EPIPE") process.exit();
+    process.stderr.write(messageLine(`standard output cannot be written: the system answers ${fault.code}`));
+    process.exit(STATUS_INPUT);
+  });
 }
 
 function report(fault: unknown): number {
@@ -35,7 +35,7 @@ function report(fault: unknown): number {
 
 /** Runs one command line (without the program's own name) and gives its exit status. */
 export async function run(argv: readonly string[]): Promise<number> {
-  endQuietlyOnClosedPipe();
+  endOnFailedWrite();
   let status = 0;
   const program = buildProgram((outcome) => {
     status = outcome;

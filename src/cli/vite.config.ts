@@ -1,4 +1,4 @@
-import { chmodSync } from "node:fs";
+import { chmodSync, readFileSync } from "node:fs";
 import { join } from "node:path";
 import { defineConfig, type Plugin } from "vite";
 
@@ -10,11 +10,22 @@ function runBit(): Plugin {
   return { name: "run-bit", writeBundle: ({ dir }) => chmodSync(join(dir ?? outDir, "cli.js"), 0o755) };
 }
 
+/** The coast that `crosses-land` goes by (Natural Earth 1:10m, public domain), as a file beside the command. */
+function coastline(): Plugin {
+  return {
+    name: "coastline",
+    generateBundle() {
+      const source = readFileSync(join(root, "node_modules/world-atlas/land-10m.json"));
+      this.emitFile({ type: "asset", fileName: "coastline/land-10m.json", source });
+    },
+  };
+}
+
 /** Builds dist/cli.js (the command) and dist/index.js (the library), dependencies bundled, Node's own modules left out. */
 export default defineConfig({
   root,
   publicDir: false,
-  plugins: [runBit()],
+  plugins: [coastline(), runBit()],
   ssr: { noExternal: true },
   build: {
     ssr: true,

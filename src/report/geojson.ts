@@ -94,11 +94,9 @@ function routeFeatures(route: RouteEstimate, geometry: Route | undefined): Featu
  * a place. `kind` tells them apart. Heights are above the surface and so stand in the properties, not in the coordinates.
  */
 export function writeGeoJson({ estimate, routes }: ReportInput): string {
-  const collection = {
-    type: "FeatureCollection",
-    title: estimate.plan.title,
-    advisory: estimate.advisory,
-    features: estimate.routes.flatMap((route, index) => routeFeatures(route, routes[index])),
-  };
-  return `${JSON.stringify(collection, refuseNotFinite, 2)}\n`;
+  const features = estimate.routes.flatMap((route, index) => routeFeatures(route, routes[index]));
+  const head = { type: "FeatureCollection", title: estimate.plan.title, advisory: estimate.advisory };
+  const lines = features.map((feature) => JSON.stringify(feature, refuseNotFinite));
+  // One feature a line: short enough to read, and to compare line by line.
+  return `${JSON.stringify(head).slice(0, -1)},"features":[\n${lines.join(",\n")}\n]}\n`;
 }

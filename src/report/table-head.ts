@@ -8,6 +8,11 @@ import { inLastPlace } from "./rounding.ts";
 import type { TableUnits } from "./table-units.ts";
 import { instantText } from "./time-text.ts";
 
+function powerText(watts: number): string {
+  const kilowatts = watts / 1000;
+  return `${kilowatts.toFixed(kilowatts < 10 ? 2 : kilowatts < 100 ? 1 : 0)} kW`;
+}
+
 function paceText(pace: Pace, moves: Medium, units: TableUnits): string {
   const speed = (value: number) => `${(value / units.speed.size).toFixed(1)} ${units.speed.symbol}`;
   switch (pace.hold) {
@@ -16,7 +21,7 @@ function paceText(pace: Pace, moves: Medium, units: TableUnits): string {
     case "ground-speed":
       return `holds ${speed(pace.speed_m_s)} over the ground`;
     case "power":
-      return `holds ${(pace.power_W / 1000).toFixed(2)} kW`;
+      return `holds ${powerText(pace.power_W)}`;
     case "least-energy":
       return "holds the speed of least energy per distance";
   }
@@ -25,7 +30,7 @@ function paceText(pace: Pace, moves: Medium, units: TableUnits): string {
 function fieldText(field: FieldSummary): string {
   const files = field.files.map(plainText).join(", ");
   if (field.validFrom === null || field.validTo === null) return `${files}; steady`;
-  return `${files}; valid ${instantText(field.validFrom, "minute")} to ${instantText(field.validTo, "minute")}`;
+  return `${files}; valid ${instantText(field.validFrom, "minute").replace(" UTC", "")} to ${instantText(field.validTo, "minute")}`;
 }
 
 /** An amount of the store with its unit. */
@@ -35,12 +40,12 @@ export function amountText(amount: number, units: TableUnits): string {
 }
 
 /** What the estimate is of: title, craft and pace, departure, fields with their validity, store. */
-export function tableHead({ estimate, craft, pace }: ReportInput, units: TableUnits): string[] {
+export function tableHead({ estimate, routes, craft, pace }: ReportInput, units: TableUnits): string[] {
   const title = plainText(estimate.plan.title);
   const [first] = estimate.routes;
-  const entries: [string, string][] = [
-    ["Craft", `${plainText(craft.name)}, ${paceText(pace, craft.moves, units)}`],
-  ];
+  const own = routes.some((route) => route.waypoints.some((waypoint) => waypoint.speed_m_s !== null));
+  const held = `${paceText(pace, craft.moves, units)}${own ? ", except where a leg names its own speed" : ""}`;
+  const entries: [string, string][] = [["Craft", `${plainText(craft.name)}, ${held}`]];
   if (first !== undefined) {
     entries.push(["Departure", instantText(first.departure, units.clock)]);
     entries.push(["Store", `${amountText(first.usable, units)} usable`]);

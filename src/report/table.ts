@@ -78,7 +78,7 @@ function routeBlock(
     "",
     ...withinTable(route, craft.moves, units),
     "",
-    ...findingLines(route, units),
+    ...findingLines(route),
   ];
 }
 
@@ -90,7 +90,8 @@ function legend({ craft }: ReportInput): string[] {
       : "TAS true airspeed, GS ground speed";
   return wrapped(
     `Crs course at the start of a leg, Hdg mean heading to steer, T true, M magnetic. Along and Cross: the ${medium}, ` +
-      `+ with the craft, + toward starboard. ${letters}. All times UTC. Rows are rounded so that they add up to the totals.`,
+      `+ with the craft, + toward starboard. ${letters}. All times UTC. 1st order: the line-integral estimate ` +
+      "of along + cross. Rows are rounded so that they add up to the totals.",
     TABLE_WIDTH,
   );
 }

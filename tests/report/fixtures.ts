@@ -332,7 +332,7 @@ export const tenderSketch: PlanSketch = {
           lat: 58.28,
           lon: -6.75,
           message:
-            "wind against current: 8.6 m/s of wind blows within 34° of dead against a current of 0.61 m/s; expect steep seas",
+            "leg 2, from 3.9 km (2.1 NM) to 12.8 km (6.9 NM) after Head: wind against current: 8.6 m/s of wind blows within 34° of dead against a current of 0.61 m/s; expect steep seas",
         }),
         finding({ code: "no-variation", severity: "note", message: "the magnetic model ends on 2029-11-13" }),
       ],

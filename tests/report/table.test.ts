@@ -183,7 +183,7 @@ describe("the leg table", () => {
         "Craft:     Nine-metre tender, holds 12.0 kn through the water",
         "Departure: 2027-05-04 06:00 UTC",
         "Store:     216.0 kWh usable",
-        "Current:   sound-current.csv; valid 2027-05-04 00:00 UTC to 2027-05-05 00:00 UTC",
+        "Current:   sound-current.csv; valid 2027-05-04 00:00 to 2027-05-05 00:00 UTC",
         "Wind:      sound-wind.csv; steady",
         "",
       ].join("\n"),
@@ -210,7 +210,7 @@ describe("the leg table", () => {
       })),
     });
     const table = writeTable(mixed, "sea");
-    expect(table).toContain("STOP    leg 2 at 1.000 NM: first\ncaution leg 1: second\nnote    third\n");
+    expect(table).toContain("STOP    first\ncaution second\nnote    third\n");
   });
 
   it("ends with the advisory, whole", () => {
