@@ -20,6 +20,16 @@ interface Chord {
   readonly b: PathPoint;
 }
 
+/** What is kept along one leg: the shapes of cells already met, and the stretches found so far. */
+interface Walk {
+  readonly land: Land;
+  readonly shapes: Map<number, Feature<MultiPolygon> | null>;
+  readonly stretches: { from_m: number; to_m: number }[];
+}
+
+/** Metres that join two stretches: only the cutting into cells took them apart. */
+const JOINED = 1e-3;
+
 /** Share of a chord below which two cuts are one: some micrometres on a chord across an ocean. */
 const SAME_CUT = 1e-12;
 
@@ -42,57 +52,53 @@ export function isOnLand(land: Land, { lat, lon }: Position): boolean {
  *   50 m of the track (`densify` makes it); `s` is taken as linear between them
  */
 export function landCrossings(land: Land, points: readonly PathPoint[]): LandStretch[] {
-  const shapes = new Map<number, Feature<MultiPolygon> | null>();
-  const stretches: { from_m: number; to_m: number }[] = [];
+  const walk: Walk = { land, shapes: new Map(), stretches: [] };
   for (let i = 1; i < points.length; i++) {
     const chord: Chord = { a: points[i - 1] as PathPoint, b: points[i] as PathPoint };
     const shares = cellCuts(chord);
-    for (let k = 1; k < shares.length; k++) {
-      addPart(land, shapes, chord, shares[k - 1] ?? 0, shares[k] ?? 1, stretches);
-    }
+    for (let k = 1; k < shares.length; k++) walkPart(walk, chord, shares[k - 1] ?? 0, shares[k] ?? 1);
   }
-  return stretches;
+  return walk.stretches;
 }
 
 /** Adds what of a chord between two shares of it, all within one cell, is land. */
-function addPart(
-  land: Land,
-  shapes: Map<number, Feature<MultiPolygon> | null>,
-  chord: Chord,
-  from: number,
-  to: number,
-  stretches: { from_m: number; to_m: number }[],
-): void {
+function walkPart(walk: Walk, chord: Chord, from: number, to: number): void {
   const middle = alongChord(chord, (from + to) / 2);
   const column = Math.floor((middle.lon - WEST) / CELL);
   const cell = cellAt(column, Math.floor((middle.lat - SOUTH) / CELL));
-  let shape = shapes.get(cell);
-  if (shape === undefined) {
-    shape = cellShape(land, cell);
-    shapes.set(cell, shape);
-  }
+  const shape = shapeOf(walk, cell);
   if (shape === null) return;
   const turn = turnOf(column);
   const lonLat = (share: number): LonLat => {
     const { lat, lon } = alongChord(chord, share);
     return [lon - turn, lat];
   };
-  const cuts = coastCuts(land, cell, lonLat(from), lonLat(to)).map((share) => from + share * (to - from));
+  const cuts = coastCuts(walk.land, cell, lonLat(from), lonLat(to)).map(
+    (share) => from + share * (to - from),
+  );
   let start = from;
   for (const end of [...cuts, to]) {
     if (end - start <= SAME_CUT) continue;
     if (onCellLand(shape, lonLat((start + end) / 2))) {
-      addStretch(stretches, alongChord(chord, start).s, alongChord(chord, end).s);
+      addStretch(walk.stretches, alongChord(chord, start).s, alongChord(chord, end).s);
     }
     start = end;
   }
 }
 
-function addStretch(stretches: { from_m: number; to_m: number }[], from_m: number, to_m: number): void {
+function shapeOf({ land, shapes }: Walk, cell: number): Feature<MultiPolygon> | null {
+  let shape = shapes.get(cell);
+  if (shape === undefined) {
+    shape = cellShape(land, cell);
+    shapes.set(cell, shape);
+  }
+  return shape;
+}
+
+function addStretch(stretches: Walk["stretches"], from_m: number, to_m: number): void {
   if (to_m <= from_m) return;
   const last = stretches.at(-1);
-  // A millimetre joins what only the cutting into cells took apart.
-  if (last !== undefined && from_m - last.to_m < 1e-3) last.to_m = to_m;
+  if (last !== undefined && from_m - last.to_m < JOINED) last.to_m = to_m;
   else stretches.push({ from_m, to_m });
 }
 
