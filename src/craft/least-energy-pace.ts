@@ -23,9 +23,10 @@ import { alongThrough, groundSpeedAlong } from "./triangle.ts";
  * is refined to rounding as a root of D (the value J alone would fix V to half the digits), and the least J of these and
  * the ends of the range is the answer; the faster of equals.
  *
- * Where a following flow or wind makes the craft's own way not worth its price, the least J is at the least V of the range,
- * or is the limit V → |c|, at which the craft lies across the flow and is carried at g = a: V = 0 in a flow along the track.
- * With that limit V = |c| is the one case of `PACE_OK` in which V is not above |c|; g is above 0.
+ * Where a following flow or wind makes the craft's own way not worth its price, the least J is at the least V of the range, or
+ * is the limit V → |c|, at which the craft lies across the flow and is carried at g = a (V = 0 in a flow along the track): the
+ * one case of `PACE_OK` in which V is not above |c|. Where a craft whose range begins at 0 spends nothing at rest in a
+ * still medium, not to go is the cheapest, and the status is `PACE_CANNOT_HOLD`.
  */
 export class LeastEnergyPace implements PaceSolver, Residual {
   readonly #propulsion: Propulsion;
@@ -36,6 +37,7 @@ export class LeastEnergyPace implements PaceSolver, Residual {
   readonly #hotel: number;
   readonly #min: number;
   readonly #max: number;
+  readonly #risesOnce: boolean;
   /** The best so far. */
   #v = 0;
   #g = 0;
@@ -53,6 +55,7 @@ export class LeastEnergyPace implements PaceSolver, Residual {
     this.#plainPull = slope.map((value, i) =>
       speed[i] === 0 ? 0 : (value * craft.storePerRate) / (speed[i] as number),
     );
+    this.#risesOnce = risesOnce(slope);
     this.#min = speed[0] as number;
     this.#max = speed[speed.length - 1] as number;
   }
@@ -68,11 +71,10 @@ export class LeastEnergyPace implements PaceSolver, Residual {
     this.#perMetre = Number.POSITIVE_INFINITY;
     this.#atNode(last);
     this.#consider();
-    for (let top = last; top > first; ) {
-      top = this.#rise(top, first);
-      if (top >= first) this.#refine(top);
-    }
+    if (this.#risesOnce && this.#propulsion.plain) this.#refine(this.#onlyRise(last, first));
+    else for (let i = this.#rise(last, first); i >= first; i = this.#rise(i, first)) this.#refine(i);
     this.#endBelow(first);
+    if (this.#g === 0) return refuse(solution, PACE_CANNOT_HOLD, 0, 0);
     return accept(solution, this.#v, this.#g, this.#rate);
   }
 
@@ -94,7 +96,21 @@ export class LeastEnergyPace implements PaceSolver, Residual {
     return -1;
   }
 
+  /** The same where there is at most one. */
+  #onlyRise(last: number, first: number): number {
+    if (!(this.#plainD(last) > 0)) return -1;
+    let low = first - 1;
+    let high = last;
+    while (high - low > 1) {
+      const mid = (low + high) >> 1;
+      if (this.#plainD(mid) > 0) high = mid;
+      else low = mid;
+    }
+    return low < first ? -1 : low;
+  }
+
   #refine(i: number): void {
+    if (i < 0) return;
     const { cross } = this.#propulsion;
     const high = alongThrough(this.#nodes.speed[i + 1] as number, cross);
     const atHigh = this.#atNode(i + 1);
@@ -115,8 +131,12 @@ export class LeastEnergyPace implements PaceSolver, Residual {
     const limit = Math.max(0, -this.#propulsion.along);
     const high = this.#propulsion.q;
     const atLimit = this.residual(limit);
+    // E/g tends to E' where both vanish.
+    const perMetreAtRest = this.#propulsion.change;
     if (!(atLimit > 0)) this.residual(findRoot(this, limit, atLimit, high, atFirst, this.#max));
-    this.#consider();
+    const g = this.#propulsion.along + this.#propulsion.q;
+    if (g > Number.EPSILON * this.#max) this.#consider();
+    else if (perMetreAtRest < this.#perMetre) this.#g = 0;
   }
 
   /** Keeps what the propulsion was asked last, if it is the best so far. */
@@ -154,4 +174,15 @@ export class LeastEnergyPace implements PaceSolver, Residual {
     if (rate === 0) return -Number.MIN_VALUE;
     return (this.#plainPull[i] as number) * q * (along + q) - rate;
   }
+}
+
+/**
+ * Whether D can rise through 0 only once where neither windage nor climb acts: D < 0 where E' <= 0, and elsewhere D' has the sign
+ * of E'' V q² + E' c² (derivatives by V), so it is enough that E' keeps rising once it is above 0.
+ */
+function risesOnce(slope: Float64Array): boolean {
+  return slope.every((here, i) => {
+    const before = i === 0 ? 0 : (slope[i - 1] as number);
+    return before <= 0 || here >= before;
+  });
 }

@@ -44,12 +44,16 @@ function bruteForce(craft: Craft, where: PaceConditions, steps: number): number 
   return best;
 }
 
+/** Numbers with six decimals: nobody measures a flow of 5e-324 m/s. */
+const within = (min: number, max: number) =>
+  fc.double({ min, max, noNaN: true }).map((value) => Math.round(value * 1e6) / 1e6);
+
 const conditions = fc.record({
-  along: fc.double({ min: -4, max: 4, noNaN: true }),
-  cross: fc.double({ min: -4, max: 4, noNaN: true }),
-  windAlong: fc.double({ min: -25, max: 25, noNaN: true }),
-  windCross: fc.double({ min: -25, max: 25, noNaN: true }),
-  climbSlope: fc.double({ min: -0.3, max: 0.3, noNaN: true }),
+  along: within(-4, 4),
+  cross: within(-4, 4),
+  windAlong: within(-25, 25),
+  windCross: within(-25, 25),
+  climbSlope: within(-0.3, 0.3),
 });
 
 const bumpy = tablePower("W", [
@@ -94,6 +98,43 @@ describe("the pace least-energy", () => {
         else expect(Math.abs(truth.rate - solution.rate)).toBeLessThanOrEqual(1e-9 * (truth.rate + 1));
       }),
       { numRuns: 120 },
+    );
+  });
+
+  test("any table, any hotel load, any flow: no speed in the range costs less per metre, by brute force", () => {
+    const steps = fc.array(
+      fc.record({
+        speed: fc.double({ min: 0.05, max: 3, noNaN: true }),
+        rate: fc.oneof(fc.constant(0), within(-4000, 9000)),
+      }),
+      { minLength: 2, maxLength: 8 },
+    );
+    const hotel = fc.oneof(fc.constant(0), within(0, 3000));
+    fc.assert(
+      fc.property(steps, hotel, fc.boolean(), conditions, (given, hotelPerSecond, windy, where) => {
+        let speed = -(given[0]?.speed ?? 0);
+        let rate = 1000;
+        const rows = given.map((row) => {
+          speed += row.speed;
+          rate = Math.max(0, rate + row.rate);
+          return { speed_m_s: speed, rate };
+        });
+        const craft = craftWith(tablePower("W", rows), {
+          hotelPerSecond,
+          windage: windy ? windage : null,
+          speeds: { min: 0, max: speed },
+        });
+        const best = bruteForce(craft, where, 1200);
+        const status = leastEnergy(craft, where);
+        // Without hotel load or rate at rest, the cheapest way through a still medium is not to go.
+        const restIsFree = hotelPerSecond === 0 && rows[0]?.rate === 0 && where.along <= 0;
+        if (!restIsFree) expect(status).toBe(Number.isFinite(best) ? PACE_OK : PACE_CANNOT_HOLD);
+        // Windage is a difference of parts of up to 1e5 W, so that what is left of it keeps 1e-10 W.
+        const slack = windy ? 1e-10 / Math.min(1, solution.groundSpeed) : 1e-300;
+        if (status === PACE_OK)
+          expect(solution.rate / solution.groundSpeed).toBeLessThanOrEqual(best * (1 + 1e-12) + slack);
+      }),
+      { numRuns: 400 },
     );
   });
 
@@ -162,6 +203,18 @@ describe("the pace least-energy", () => {
     expect(solution.throughSpeed).toBeLessThan(1.7);
     expect(leastEnergy({ ...craft, speeds: { min: 2, max: 7 } }, { along: 2, cross: 0 })).toBe(PACE_OK);
     expect(solution).toMatchObject({ throughSpeed: 2, groundSpeed: 4 });
+  });
+
+  test("cannot go where not to go is free, and goes where the range does not begin at 0", () => {
+    const craft = craftWith(cubePower({ referenceSpeed_m_s: 5, referencePower_W: 40000 }), {
+      hotelPerSecond: 0,
+      speeds: { min: 0, max: 7 },
+    });
+    expect(leastEnergy(craft, {})).toBe(PACE_CANNOT_HOLD);
+    expect(solution).toMatchObject({ groundSpeed: 0, rate: 0 });
+    expect(leastEnergy({ ...craft, hotelPerSecond: 1 }, {})).toBe(PACE_OK);
+    expect(leastEnergy({ ...craft, speeds: { min: 2, max: 7 } }, {})).toBe(PACE_OK);
+    expect(solution.throughSpeed).toBe(2);
   });
 
   test("says that no speed of the range holds the track", () => {

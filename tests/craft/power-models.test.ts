@@ -147,8 +147,8 @@ describe("cubePower", () => {
   test.each([
     [{ referenceSpeed_m_s: 0 }, "reference speed is a finite number above 0; found 0 m/s"],
     [{ referencePower_W: -1 }, "reference power is a finite number above 0; found -1 W"],
-    [{ exponent: Number.NaN }, "exponent is a finite number above 0; found NaN"],
-    [{ exponent: 0 }, "exponent is a finite number above 0; found 0"],
+    [{ exponent: Number.NaN }, "exponent is a finite number; found NaN"],
+    [{ exponent: 0.9 }, "the exponent of a power law is at least 1; found 0.9"],
   ])("refuses %j", (fault, message) => {
     const given = { referenceSpeed_m_s: 5, referencePower_W: 10, ...fault };
     expect(() => cubePower(given)).toThrow(new InputError(message));
