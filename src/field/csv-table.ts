@@ -5,6 +5,8 @@ import type { TextBlock } from "./text-blocks.ts";
 /** Text kept while a quoted cell stays open, in UTF-16 units: beyond it the quote is taken as never closed. */
 const OPEN_QUOTE_LIMIT = 1 << 20;
 
+const QUOTE_RULE = "a quoted cell ends with a quote before a separator or a line end; found none";
+
 export type Separator = "," | ";" | "\t";
 
 /** What stands before the rows of a table. */
@@ -62,8 +64,7 @@ export class CsvTable {
     // A fault in the row that the end of the block cuts is looked at again with the next block.
     const fault = errors.find((error) => error.row < data.length);
     if (fault !== undefined) {
-      const rule = "a quoted cell ends with its closing quote; found text after it";
-      throw new InputError(rule, { file: this.file, line: batch.lineOf(fault.row) });
+      throw new InputError(QUOTE_RULE, { file: this.file, line: batch.lineOf(fault.row) });
     }
     this.rest = text.slice(meta.cursor);
     if (this.rest.length > OPEN_QUOTE_LIMIT) this.end();
@@ -73,10 +74,7 @@ export class CsvTable {
   /** To be called after the last block. */
   end(): void {
     if (this.rest !== "") {
-      throw new InputError("a quoted cell has a closing quote; found none", {
-        file: this.file,
-        line: this.line,
-      });
+      throw new InputError(QUOTE_RULE, { file: this.file, line: this.line });
     }
   }
 
@@ -117,10 +115,7 @@ export class CsvTable {
     const header = new Papa.Parser({ ...config, preview: 1, fastMode: false }).parse(text, 0, true);
     const cells = header.data[0];
     const place = { file: this.file, line: this.line };
-    if (cells === undefined) throw new InputError("a quoted header has a closing quote; found none", place);
-    if (header.errors.length > 0) {
-      throw new InputError("a quoted header ends with its closing quote; found text after it", place);
-    }
+    if (cells === undefined || header.errors.length > 0) throw new InputError(QUOTE_RULE, place);
     this.tableHead = { notes, headers: cells.map((cell) => cell.trim()), headerLine: this.line, separator };
     this.parser = new Papa.Parser(config);
     this.line += occurrences(text.slice(0, header.meta.cursor), newline);

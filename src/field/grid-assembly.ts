@@ -132,7 +132,10 @@ class Layout {
     const nodes = this.firstLon.length * this.rowSources.length;
     const whole = slice.missing === 0 && slice.rows === nodes;
     if (this.inPlace && whole) return { values: slice.values, gusts: slice.gusts, mask: null };
-    const values = this.spare?.length === 2 * nodes ? this.spare : new Float64Array(2 * nodes);
+    const values =
+      this.spare === null || this.spare.length < 2 * nodes
+        ? new Float64Array(2 * nodes)
+        : this.spare.subarray(0, 2 * nodes);
     const gusts = slice.gusts === null ? null : new Float64Array(nodes);
     const mask = this.fill(slice, values, gusts);
     this.spare = slice.values;

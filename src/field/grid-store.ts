@@ -7,8 +7,8 @@ export const LEAST_SHARE = 20;
 const FREE_NODES = 1 << 20;
 /** Waiting rows are placed when they are one in so many. */
 const SETTLE_SHARE = 16;
-/** Room grows by this factor while an axis is being learned. */
-const GROWTH = 1.5;
+/** Room grows by this factor while an axis is being learned; 1.5 needs half the grid more memory and reads no faster. */
+const GROWTH = 1.25;
 
 /** A node by the order of first appearance along each axis. */
 export interface NodeIndices {
