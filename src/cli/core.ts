@@ -5,12 +5,9 @@ export { type Land, type LandTopology, prepareLand } from "../coast/land.ts";
 export {
   checkPlan,
   estimatePlan,
-  type FieldInspection,
   InputError,
   inspectField,
   type OpenFile,
-  type Plan,
-  type PlanRequest,
 } from "../index.ts";
 export { writeCsv } from "../report/csv.ts";
 export { writeGeoJson } from "../report/geojson.ts";

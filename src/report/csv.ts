@@ -115,6 +115,9 @@ function rowsOf(route: RouteEstimate, geometry: Route | undefined, advisory: str
 /**
  * The legs of every route as CSV (RFC 4180, CRLF, UTF-8 without BOM): one row a leg, SI units in the headers, full precision
  * (the shortest digits that read back to the same number), an empty cell where there is no figure.
+ *
+ * @example
+ * writeCsv({ estimate: { format: "legwork-estimate/1", advisory: "", plan: { title: "Two marks" }, fields: [], routes: [] }, routes: [], craft: { name: "Tender", moves: "water" }, pace: { hold: "least-energy" } }).slice(0, 23) // → "route,status,leg,from,f"
  */
 export function writeCsv({ estimate, routes }: ReportInput): string {
   const unit = estimate.routes[0]?.storeUnit ?? "J";

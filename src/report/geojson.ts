@@ -92,6 +92,9 @@ function routeFeatures(route: RouteEstimate, geometry: Route | undefined): Featu
  * The estimate as a GeoJSON FeatureCollection (RFC 7946), longitude first, WGS84: a line a leg, within 50 m of the track and cut at
  * the antimeridian (then a MultiLineString), with the leg's figures as in JSON; a point a waypoint; a point a finding that has
  * a place. `kind` tells them apart. Heights are above the surface and so stand in the properties, not in the coordinates.
+ *
+ * @example
+ * JSON.parse(writeGeoJson({ estimate: { format: "legwork-estimate/1", advisory: "", plan: { title: "Two marks" }, fields: [], routes: [] }, routes: [], craft: { name: "Tender", moves: "water" }, pace: { hold: "least-energy" } })).type // → "FeatureCollection"
  */
 export function writeGeoJson({ estimate, routes }: ReportInput): string {
   const features = estimate.routes.flatMap((route, index) => routeFeatures(route, routes[index]));

@@ -76,6 +76,9 @@ function routeElement(route: RouteEstimate, geometry: Route | undefined, number:
 /**
  * The routes as GPX 1.1: a `<rte>` each, its waypoints with the figures of the leg that arrives at them in `<desc>`. Times are in the
  * words only: GPX keeps `<time>` for when a point was made. `<ele>` is the height above the surface, as its `<cmt>` says.
+ *
+ * @example
+ * writeGpx({ estimate: { format: "legwork-estimate/1", advisory: "", plan: { title: "Two marks" }, fields: [], routes: [] }, routes: [], craft: { name: "Tender", moves: "water" }, pace: { hold: "least-energy" } }).includes("<name>Two marks</name>") // → true
  */
 export function writeGpx({ estimate, routes }: ReportInput): string {
   return [

@@ -139,7 +139,12 @@ export function refuseNotFinite(key: string, value: unknown): unknown {
   return value;
 }
 
-/** The estimate as `legwork-estimate/1`: SI units with the unit in the key, keys in a fixed order, two spaces of indent, a final line end. */
+/**
+ * The estimate as `legwork-estimate/1`: SI units with the unit in the key, keys in a fixed order, two spaces of indent, a final line end.
+ *
+ * @example
+ * writeJson({ format: "legwork-estimate/1", advisory: "", plan: { title: "Two marks" }, fields: [], routes: [] }).slice(0, 34) // → "{\n  \"format\": \"legwork-estimate/1\""
+ */
 export function writeJson(estimate: Estimate): string {
   const whole: Estimate = {
     format: estimate.format,

@@ -16,7 +16,7 @@ const SPEED_WIDTH = 5;
 const TIME_WIDTH = 7;
 
 /** The field that the craft moves through: the current of a craft in water, the wind of one in the air. */
-export function mediumAlong(part: Pick<LegEstimate, "wind" | "current">, moves: Medium): FieldAlong | null {
+function mediumAlong(part: Pick<LegEstimate, "wind" | "current">, moves: Medium): FieldAlong | null {
   return moves === "water" ? part.current : part.wind;
 }
 

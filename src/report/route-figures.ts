@@ -15,7 +15,7 @@ export interface RouteFigures {
 }
 
 /** Still + along + cross = time under way; still + penalty = use. */
-export interface LedgerFigures {
+interface LedgerFigures {
   readonly still: RoundedColumn;
   readonly along: RoundedColumn;
   readonly cross: RoundedColumn;

@@ -5,7 +5,7 @@ import { decimalsThatFit } from "./number-text.ts";
 import type { Clock } from "./time-text.ts";
 
 /** A unit of a column: printed figure = SI figure / size, with so many decimals. */
-export interface ColumnUnit {
+interface ColumnUnit {
   readonly symbol: string;
   readonly size: number;
   readonly decimals: number;

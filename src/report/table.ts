@@ -99,6 +99,9 @@ function legend({ craft }: ReportInput): string[] {
 /**
  * The leg table as text, at most 80 columns wide, with a final line end: head, then per route the legs, the ledger, what varies within
  * the legs and the findings; a comparison where there are several routes; the advisory.
+ *
+ * @example
+ * writeTable({ estimate: { format: "legwork-estimate/1", advisory: "", plan: { title: "Two marks" }, fields: [], routes: [] }, routes: [], craft: { name: "Tender", moves: "water" }, pace: { hold: "least-energy" } }, "sea").split("\n")[1] // → "Craft:     Tender, holds the speed of least energy per distance"
  */
 export function writeTable(input: ReportInput, system: Units): string {
   const { estimate } = input;

@@ -6,7 +6,7 @@ import { build, loadConfigFromFile } from "vite";
 const ROOT = new URL("../..", import.meta.url).pathname;
 const CONFIG = join(ROOT, "src/cli/vite.config.ts");
 
-export interface Outcome {
+interface Outcome {
   readonly status: number | null;
   readonly out: string;
   readonly err: string;

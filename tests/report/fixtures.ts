@@ -17,7 +17,7 @@ import type {
 import type { Route, Waypoint } from "../../src/estimate/route.ts";
 import type { ReportInput } from "../../src/report/input.ts";
 
-export interface LegSketch {
+interface LegSketch {
   readonly to: string;
   readonly lat: number;
   readonly lon: number;
@@ -34,7 +34,7 @@ export interface LegSketch {
   readonly other?: readonly [along: number, cross: number];
 }
 
-export interface RouteSketch {
+interface RouteSketch {
   readonly name: string;
   readonly from: {
     readonly name: string;
@@ -269,7 +269,7 @@ export function reportOf(plan: PlanSketch): ReportInput {
   };
 }
 
-export const KNOT = 1852 / 3600;
+const KNOT = 1852 / 3600;
 
 export function finding(part: Partial<Finding> & Pick<Finding, "code" | "severity" | "message">): Finding {
   return { leg: null, at_m: null, to_m: null, lat: null, lon: null, ...part };
