@@ -20,7 +20,7 @@ function checkPolar(polar: Polar): void {
 /**
  * Greatest ratio of lift to drag, 1 / (2 sqrt(k C_D0)): where zero-lift and induced drag are equal.
  * @example
- * maxLiftToDrag({ zeroLiftDrag: 0.02, inducedFactor: 0.05 }).toFixed(6) // → "15.811388"
+ * maxLiftToDrag({ zeroLiftDrag: 0.04, inducedFactor: 0.0625 }) // → 10
  */
 export function maxLiftToDrag(polar: Polar): number {
   checkPolar(polar);

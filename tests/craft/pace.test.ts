@@ -9,6 +9,7 @@ import {
   PACE_OUTSIDE_TABLE,
 } from "../../src/craft/pace-solution.ts";
 import { type PaceConditions, stillConditions } from "../../src/craft/propulsion.ts";
+import { tablePower } from "../../src/craft/table.ts";
 import { InputError } from "../../src/errors.ts";
 import { aeroplane, barge, byVectors, craftWith, drone, tender, tenderTable, windage } from "./crafts.ts";
 
@@ -222,6 +223,57 @@ describe("the pace power", () => {
         }
       }),
       { numRuns: 150 },
+    );
+  });
+
+  test("any table and any power: takes the fastest speed that spends it, by brute force", () => {
+    const solution = emptySolution();
+    const steps = fc.array(
+      fc.record({
+        speed: fc.double({ min: 0.05, max: 3, noNaN: true }),
+        rate: fc.double({ min: -4000, max: 9000, noNaN: true }),
+      }),
+      { minLength: 2, maxLength: 8 },
+    );
+    fc.assert(
+      fc.property(
+        steps,
+        fc.double({ min: 1, max: 2e4, noNaN: true }),
+        fc.boolean(),
+        conditions,
+        (given, power_W, blown, where) => {
+          let speed = -(given[0]?.speed ?? 0);
+          let rate = 1000;
+          const rows = given.map((row) => {
+            speed += row.speed;
+            rate = Math.max(0, rate + row.rate);
+            return { speed_m_s: speed, rate };
+          });
+          const craft = craftWith(tablePower("W", rows), {
+            windage: blown ? windage : null,
+            speeds: { min: 0, max: speed },
+          });
+          const status = paceSolver(craft, { hold: "power", power_W }, true).solve(where, solution);
+          const balance = (v: number) => {
+            const truth = byVectors(craft, v, where);
+            return truth === null ? null : truth.rate - craft.hotelPerSecond - power_W;
+          };
+          const fastest = speed;
+          let above = balance(fastest);
+          for (let i = 999; i >= 0 && above !== null; i--) {
+            const v = (fastest * i) / 1000;
+            const below = balance(v);
+            if (below === null) return;
+            if (below > 0 !== above > 0) {
+              expect(status).toBe(PACE_OK);
+              expect(solution.throughSpeed).toBeGreaterThanOrEqual(v - 1e-9);
+              return;
+            }
+            above = below;
+          }
+        },
+      ),
+      { numRuns: 400 },
     );
   });
 
