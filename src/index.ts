@@ -6,6 +6,7 @@ export { ADVISORY } from "./constants.ts";
 // Craft.
 export type { Craft, Limits, Pace, PowerModel, Reserve, Store, StoreUnit, Windage } from "./craft/craft.ts";
 export { InputError, type Place } from "./errors.ts";
+export type { Conditions } from "./estimate/conditions.ts";
 export {
   type EstimateAnswer,
   type EstimateInput,
@@ -14,7 +15,7 @@ export {
   fieldSummary,
   prepareRoutes,
 } from "./estimate/estimate.ts";
-export { type Conditions, estimateRoute, type RouteRun } from "./estimate/estimate-route.ts";
+export { estimateRoute, type RouteOutcome, type RouteRun, routeOutcome } from "./estimate/estimate-route.ts";
 export { magneticCourse, magneticVariation } from "./estimate/magnetic.ts";
 export { fieldsInUse, type PreparedRoute, prepareRoute } from "./estimate/prepare.ts";
 export type {

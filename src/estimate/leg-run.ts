@@ -82,7 +82,7 @@ function runPanel(run: LegRun, panel: number, start: number, clock: Clock, accep
     const until = resolveAll(flows, panel, Math.max(now, clock.met), step);
     const failing = flows.find((flow) => flow.state !== "data" && flow.state !== "zero");
     if (failing !== undefined) return fieldStop(failing, place);
-    let to = place + longest >= end ? end : place + longest;
+    let to = Math.min(place + longest, end);
     let status = solveStep(step, curve, piece, panel, polar, place, to, now);
     let met = false;
     if (status === PACE_OK && now + step.time > until + TIME_TOLERANCE_S) {
@@ -184,12 +184,23 @@ function motionStop(
   };
 }
 
+/** An `accepted` that adds up time and use and watches the leg, for its outcome alone. */
+export function accountTimes(run: LegRun, sums: LegSums, watch: LegWatch): Accepted {
+  const { step, flows, panels } = run;
+  return (from, to, start, panel) => {
+    addTimes(sums, step, to - from);
+    watch.atStations(step, flows, start);
+    watch.overSpan(flows, panels.polar[panel] === 1, from, to);
+  };
+}
+
 /** An `accepted` that adds everything up for the leg's account. */
 export function accountInto(run: LegRun, sums: LegSums, watch: LegWatch): Accepted {
   const { step, flows, panels } = run;
   return (from, to, start, panel) => {
     addTimes(sums, step, to - from);
-    addStations(sums, step, to - from, flows, watch, start);
+    addStations(sums, step, to - from, flows, start);
+    watch.atStations(step, flows, start);
     watch.overSpan(flows, panels.polar[panel] === 1, from, to);
   };
 }

@@ -2,7 +2,6 @@ import type { FieldRole } from "../field/field.ts";
 import { addDirection, type DirectionRange, makeDirectionRange, startDirection } from "./direction-range.ts";
 import type { Flow } from "./flow.ts";
 import { FIRST_NODE, KRONROD_WEIGHT, LAST_NODE, STATIONS } from "./gauss-kronrod.ts";
-import type { LegWatch } from "./leg-watch.ts";
 import type { Step } from "./step.ts";
 
 /** What the accepted steps of a leg add up to for one field. */
@@ -77,7 +76,6 @@ export function addStations(
   step: Step,
   length: number,
   flows: readonly Flow[],
-  watch: LegWatch,
   start: number,
 ): void {
   const half = length / 2;
@@ -100,7 +98,6 @@ export function addStations(
     if (i >= FIRST_NODE && i <= LAST_NODE) sums.throughDistance += (weight * v) / g;
   }
   for (const flow of flows) addFlow(sums.flows[flow.field.role], flow, step, length, start);
-  watch.atStations(step, flows, start);
 }
 
 function addFlow(sums: FlowSums, flow: Flow, step: Step, length: number, start: number): void {

@@ -14,6 +14,7 @@ export class Samples {
   readonly usePerMetre: number[] = [];
   /** Use per metre just after the sample before this one: the slope at the start of the step that ends here. */
   readonly usePerMetreBefore: number[] = [];
+  readonly #full: boolean;
   readonly #lat: number[] = [];
   readonly #lon: number[] = [];
   readonly #along: number[] = [];
@@ -21,6 +22,11 @@ export class Samples {
   readonly #groundSpeed: number[] = [];
   readonly #throughSpeed: number[] = [];
   readonly #rate: number[] = [];
+
+  /** @param full whether a profile is wanted, or time and use alone */
+  constructor(full: boolean) {
+    this.#full = full;
+  }
 
   /** Keeps what holds at a station (0 or the last) of the step just solved. */
   add(leg: number, step: Step, station: number, time: number, use: number): void {
@@ -31,6 +37,7 @@ export class Samples {
     this.use.push(use);
     this.usePerMetre.push(slope(station));
     this.usePerMetreBefore.push(slope(0));
+    if (!this.#full) return;
     this.#lat.push(step.stations.lat[station] as number);
     this.#lon.push(step.stations.lon[station] as number);
     this.#along.push(step.along[station] as number);
@@ -49,6 +56,7 @@ export class Samples {
     this.use.push(use);
     this.usePerMetre.push(0);
     this.usePerMetreBefore.push(0);
+    if (!this.#full) return;
     for (const list of [this.#lat, this.#lon, this.#along, this.#cross]) list.push(list[last] as number);
     this.#groundSpeed.push(0);
     this.#throughSpeed.push(this.#throughSpeed[last] as number);
