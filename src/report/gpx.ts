@@ -47,13 +47,18 @@ function routePoint(waypoint: Waypoint, leg: LegEstimate | undefined): string[] 
   ];
 }
 
+/** Words, not data: six significant digits, no exponent for amounts below 1e21. */
+function amount(value: number): string {
+  return String(Number(value.toPrecision(6)));
+}
+
 function routeText(route: RouteEstimate): string {
   const { totals } = route;
   const parts = [route.status, `departure ${route.departure}`, `${(totals.distance_m / 1000).toFixed(3)} km`];
   if (totals.time_s !== null) parts.push(`${durationText(Math.round(totals.time_s), "second")} under way`);
   if (route.arrival !== null) parts.push(`ETA ${route.arrival}`);
-  if (totals.use !== null) parts.push(`use ${totals.use} ${route.storeUnit}`);
-  if (totals.remaining !== null) parts.push(`left ${totals.remaining} ${route.storeUnit}`);
+  if (totals.use !== null) parts.push(`use ${amount(totals.use)} ${route.storeUnit}`);
+  if (totals.remaining !== null) parts.push(`left ${amount(totals.remaining)} ${route.storeUnit}`);
   return parts.join(", ");
 }
 

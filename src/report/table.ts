@@ -31,8 +31,8 @@ function reachedText(route: RouteEstimate, units: TableUnits): string {
   const at = `${(reached.at_m / size).toFixed(Math.max(1, decimals))} ${symbol}`;
   const time = durationText(Math.round(reached.time_s), "second");
   return (
-    `Ends on leg ${reached.leg} to ${isolated(plainText(to))}, ${at} along it, ${time} after departure, ` +
-    `${amountText(reached.use, units)} used.`
+    `Ends on leg ${reached.leg} to ${isolated(plainText(to))}, ${at} along it, ${time} after departure: ` +
+    `${amountText(reached.use, units)} used, ${amountText(route.usable - reached.use, units)} left.`
   );
 }
 
