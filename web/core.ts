@@ -1,8 +1,10 @@
 /*
- * The one module through which the page reaches the core, so that what it leans on can be read in one place.
+ * The one module through which the page reaches the core, so that what it leans on can be read in one place. The worker has its own,
+ * with what computes; this one stays small, since it is part of the first load.
  */
 export { ADVISORY } from "../src/constants.ts";
 export type { StoreUnit } from "../src/craft/craft.ts";
+export { InputError } from "../src/errors.ts";
 export type {
   Estimate,
   FieldAlong,
@@ -17,4 +19,7 @@ export type {
   Spread,
 } from "../src/estimate/result.ts";
 export type { FieldRole } from "../src/field/field.ts";
+export type { FieldInspection } from "../src/field/inspect.ts";
 export type { Position } from "../src/geodesy/track.ts";
+export { parseCoordinate } from "../src/plan/position.ts";
+export type { Units } from "../src/report/input.ts";

@@ -5,17 +5,28 @@ import { App } from "./shell/App.tsx";
 import { listenForKeys } from "./shell/keys.ts";
 import { narrowImages } from "./shell/tile-policy.ts";
 import "./shell/style.css";
-import { FIRST_PLAN } from "./shell/first-plan.ts";
+import { openDemo } from "./shell/demo.ts";
+import { EMPTY_PLAN } from "./state/empty-plan.ts";
 import { createPageState } from "./state/page-state.ts";
 import type { Worker as Protocol } from "./worker/protocol.ts";
 
 narrowImages("");
 
 const worker = new Worker(new URL("./worker/worker.ts", import.meta.url), { type: "module" });
-const page = createPageState(FIRST_PLAN, Comlink.wrap<Protocol>(worker));
+const page = createPageState(EMPTY_PLAN, Comlink.wrap<Protocol>(worker));
 
 effect(() => {
   void page.answers.ask(page.store.plan.value);
+});
+// The coast is large: routes are estimated without it first, and held against it once it is there.
+effect(() => {
+  if (!page.answers.answer.value.landPending) return;
+  page.engine.loadLand().then(
+    () => page.answers.ask(page.store.plan.peek()),
+    () => {
+      page.view.announcement.value = "The coast could not be loaded: routes are not held against land.";
+    },
+  );
 });
 effect(() => {
   document.documentElement.dataset["theme"] = page.view.theme.value;
@@ -24,3 +35,5 @@ listenForKeys(page.store);
 
 const root = document.getElementById("page");
 if (root) render(<App page={page} />, root);
+
+void openDemo(page, "islands");

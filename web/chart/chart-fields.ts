@@ -64,7 +64,8 @@ function keepAsked(map: L.Map, page: PageState, run: (instant: number | null, as
   };
   const again = (): void => run(shownInstant(page), ask);
   const stop = effect(() => {
-    page.sheets.value;
+    // A field can be drawn once the plan that names it is answered.
+    page.answers.answer.value.estimate?.fields;
     again();
   });
   map.on("moveend resize", again);

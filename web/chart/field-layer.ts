@@ -34,6 +34,8 @@ export function latticeFor(map: L.Map, role: FieldRole, instant: number, shading
     east: bounds.getEast(),
     stepLat,
     stepLon,
+    // Arrows stand between the barbs, so that neither is taken for a part of the other.
+    phase: role === "current" && !shading ? 0.5 : 0,
   };
 }
 

@@ -109,18 +109,22 @@ function LedgerRow({ page, at, name, route, base, best, end }: LedgerRowProps) {
           <td colSpan={5}>still being drawn</td>
         ) : (
           <>
-            <Cell best={best.arrival.has(at)} difference={arrivalDifference(route, against)}>
+            <Cell label="Arrival" best={best.arrival.has(at)} difference={arrivalDifference(route, against)}>
               {route.arrival === null
                 ? "not reached"
                 : arrivalText(route.arrival, route.departure, view.zone.value)}
             </Cell>
-            <Cell best={false} difference={null}>
+            <Cell label="Time" best={false} difference={null}>
               {durationText(wholeTime(route))}
             </Cell>
-            <Cell best={best.use.has(at)} difference={amountDifference(route, against, "use")}>
+            <Cell label="Use" best={best.use.has(at)} difference={amountDifference(route, against, "use")}>
               {amountText(route.totals.use, route.storeUnit, route.usable)}
             </Cell>
-            <Cell best={best.remaining.has(at)} difference={amountDifference(route, against, "remaining")}>
+            <Cell
+              label="Left"
+              best={best.remaining.has(at)}
+              difference={amountDifference(route, against, "remaining")}
+            >
               {amountText(route.totals.remaining, route.storeUnit, route.usable)}
             </Cell>
             <td>
@@ -140,9 +144,9 @@ function LedgerRow({ page, at, name, route, base, best, end }: LedgerRowProps) {
   );
 }
 
-function Cell(props: { best: boolean; difference: string | null; children: string }) {
+function Cell(props: { label: string; best: boolean; difference: string | null; children: string }) {
   return (
-    <td class={props.best ? "best" : ""}>
+    <td class={props.best ? "best" : ""} data-label={props.label}>
       {props.children}
       {props.best && <span class="best-mark"> best</span>}
       {props.difference !== null && <span class="difference">{props.difference}</span>}

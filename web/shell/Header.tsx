@@ -1,7 +1,7 @@
 import type { PageState } from "../state/page-state.ts";
 import { setPlanText } from "../state/plan-edits.ts";
 import { TextField } from "../waypoints/TextField.tsx";
-import { openPlanFile, savePlan } from "./plan-files.ts";
+import { openPlanFiles, savePlan } from "./plan-files.ts";
 import { Settings } from "./Settings.tsx";
 
 /** The plan's title, its files, undo and redo, and how things are shown. */
@@ -43,10 +43,10 @@ export function Header({ page }: { readonly page: PageState }) {
           <input
             type="file"
             class="unseen"
-            accept=".json,application/json"
+            multiple
+            accept=".json,.csv,application/json,text/csv"
             onChange={({ currentTarget }) => {
-              const file = currentTarget.files?.[0];
-              if (file) void openPlanFile(page, file);
+              void openPlanFiles(page, [...(currentTarget.files ?? [])]);
               currentTarget.value = "";
             }}
           />

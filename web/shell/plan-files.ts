@@ -1,21 +1,27 @@
 import type { PageState } from "../state/page-state.ts";
-import type { PlanDocument } from "../state/plan-document.ts";
+import { openPlan } from "./open-plan.ts";
 
 const LARGEST_PLAN = 5_000_000;
 
-/** Opens a plan file as an edit that can be undone; what is wrong with it is said in the live region. */
-export async function openPlanFile({ store, view }: PageState, file: File): Promise<void> {
-  if (file.size > LARGEST_PLAN) {
-    view.announcement.value = `${file.name} is larger than any plan (${Math.round(file.size / 1e6)} MB)`;
+/** Opens the files that the user chose: a plan, and beside it the craft and the fields that it names. */
+export async function openPlanFiles(page: PageState, files: readonly File[]): Promise<void> {
+  const plan =
+    files.find(({ name }) => name.endsWith(".plan.json")) ?? files.find(({ name }) => name.endsWith(".json"));
+  if (plan === undefined) {
+    page.view.announcement.value = "A plan is a file that ends in .plan.json";
     return;
   }
-  const plan = planOf(await file.text());
-  if (plan === null) {
-    view.announcement.value = `${file.name} is no plan file: "format" is "legwork-plan/1" in one`;
+  if (plan.size > LARGEST_PLAN) {
+    page.view.announcement.value = `${plan.name} is larger than any plan (${Math.round(plan.size / 1e6)} MB)`;
     return;
   }
-  store.open(plan, `Open ${file.name}`);
-  view.announcement.value = `Opened ${file.name}`;
+  const byName = new Map(files.map((file) => [file.name, file]));
+  await openPlan(
+    page,
+    plan.name,
+    await plan.text(),
+    async (file) => byName.get(file.split("/").at(-1) ?? file) ?? null,
+  );
 }
 
 /** Hands the plan to the browser to keep as a file. */
@@ -44,25 +50,4 @@ export function fileStem(title: string): string {
     .replace(/^-+|-+$/g, "")
     .slice(0, 60);
   return stem === "" ? "plan" : stem;
-}
-
-function planOf(text: string): PlanDocument | null {
-  let value: unknown;
-  try {
-    value = JSON.parse(text);
-  } catch {
-    return null;
-  }
-  return isPlan(value) ? value : null;
-}
-
-function isPlan(value: unknown): value is PlanDocument {
-  return (
-    typeof value === "object" &&
-    value !== null &&
-    "format" in value &&
-    value.format === "legwork-plan/1" &&
-    "routes" in value &&
-    Array.isArray(value.routes)
-  );
 }

@@ -12,6 +12,8 @@ export interface Answer {
   readonly drawings: readonly (RouteDrawing | null)[];
   /** The core's sentence about the plan's fault; the figures are then those of the last plan without one. */
   readonly fault: string | null;
+  /** Whether the routes are still to be held against land. */
+  readonly landPending: boolean;
 }
 
 export interface Answers {
@@ -21,7 +23,7 @@ export interface Answers {
   ask(plan: PlanDocument): Promise<void>;
 }
 
-const NONE: Answer = { estimate: null, routes: [], drawings: [], fault: null };
+const NONE: Answer = { estimate: null, routes: [], drawings: [], fault: null, landPending: false };
 
 export function createAnswers(estimate: (plan: PlanDocument) => Promise<EstimateAnswer>): Answers {
   const answer = signal<Answer>(NONE);
@@ -54,6 +56,7 @@ export function createAnswers(estimate: (plan: PlanDocument) => Promise<Estimate
         routes: place.map((at) => found.estimate.routes[at] ?? null),
         drawings: place.map((at) => found.drawings[at] ?? null),
         fault: null,
+        landPending: found.landPending,
       };
     },
   };

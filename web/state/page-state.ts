@@ -1,5 +1,6 @@
-import { type ReadonlySignal, signal } from "@preact/signals";
-import type { FieldSheet, Worker } from "../worker/protocol.ts";
+import { type Signal, signal } from "@preact/signals";
+import type { FieldInspection } from "../core.ts";
+import type { Worker } from "../worker/protocol.ts";
 import { type Answers, createAnswers } from "./answers.ts";
 import { createPageView, type PageView } from "./page-view.ts";
 import type { PlanDocument } from "./plan-document.ts";
@@ -10,14 +11,23 @@ export type Engine = {
   [Call in keyof Worker]: (...args: Parameters<Worker[Call]>) => Promise<Awaited<ReturnType<Worker[Call]>>>;
 };
 
+/** A field file that is being read. */
+export interface Reading {
+  readonly ticket: number;
+  readonly file: string;
+  /** 0..1 */
+  readonly share: number;
+}
+
 /** Everything that the parts of the page share. */
 export interface PageState {
   readonly store: PlanStore;
   readonly view: PageView;
   readonly answers: Answers;
   readonly engine: Engine;
-  /** The fields that are read, in the plan's order. */
-  readonly sheets: ReadonlySignal<readonly FieldSheet[]>;
+  readonly readings: Signal<readonly Reading[]>;
+  /** What each field file that was read holds, by its name. */
+  readonly inspections: Signal<Readonly<Record<string, FieldInspection>>>;
 }
 
 export function createPageState(plan: PlanDocument, engine: Engine): PageState {
@@ -26,7 +36,8 @@ export function createPageState(plan: PlanDocument, engine: Engine): PageState {
     view: createPageView(),
     answers: createAnswers((asked) => engine.estimate(asked)),
     engine,
-    sheets: signal<readonly FieldSheet[]>([]),
+    readings: signal<readonly Reading[]>([]),
+    inspections: signal<Readonly<Record<string, FieldInspection>>>({}),
   };
 }
 

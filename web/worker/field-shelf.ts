@@ -1,60 +1,115 @@
 import type { FieldDocument } from "../state/plan-document.ts";
-import type { FieldAnswer, FieldPreview, FieldProgress, FieldSource } from "./protocol.ts";
+import {
+  type Field,
+  type FieldInspection,
+  type FieldReference,
+  type GridFile,
+  InputError,
+  inspectGrid,
+  mergeField,
+  readGridFile,
+} from "./core.ts";
+import type { FileShelf } from "./file-shelf.ts";
+import type { FieldAnswer, FieldProgress } from "./protocol.ts";
 
-/** The fields that were opened, by the name that plans use. */
+/** Thrown into a reading that the user has cancelled. */
+class Cancelled extends Error {
+  override readonly name = "Cancelled";
+}
+
+/** The grids that were read, each once, and the fields that the plan makes of them. */
 export interface FieldShelf {
   open(
     ticket: number,
-    source: FieldSource,
     field: FieldDocument,
     progress: (progress: FieldProgress) => void,
   ): Promise<FieldAnswer>;
   cancel(ticket: number): void;
-  forget(name: string): void;
-  preview(source: FieldSource, field: FieldDocument): Promise<FieldPreview>;
+  forget(file: string): void;
+  /** The fields of a plan; the same objects as long as its references stay the same. */
+  merged(references: readonly FieldReference[]): Promise<readonly Field[]>;
+  /** The fields merged last. */
+  current(): readonly Field[];
 }
 
-const PREVIEW_BYTES = 16_384;
-const PREVIEW_ROWS = 6;
+type Reading = Pick<FieldReference, "role" | "file" | "columns">;
 
-export function createFieldShelf(): FieldShelf {
+interface Read {
+  readonly file: string;
+  readonly grid: Promise<GridFile>;
+}
+
+export function createFieldShelf(files: FileShelf): FieldShelf {
+  const grids = new Map<string, Read>();
   const cancelled = new Set<number>();
-  const kept = new Map<string, number>();
+  let last: { readonly key: string; readonly fields: readonly Field[] } = { key: "[]", fields: [] };
+
+  const grid = (reading: Reading, onProgress: (bytes: number) => void): Promise<GridFile> => {
+    const { role, file, columns } = reading;
+    const key = JSON.stringify([role, file, columns]);
+    const known = grids.get(key);
+    if (known !== undefined) return known.grid;
+    const read = readGridFile(() => files.open(file), { file, role, columns, onProgress });
+    grids.set(key, { file, grid: read });
+    // What failed is not kept: the file may be given again.
+    read.catch(() => grids.delete(key));
+    return read;
+  };
 
   return {
-    async open(ticket, source, field, progress) {
-      const total = source.content.size;
-      let read = 0;
-      for await (const piece of pieces(source.content)) {
-        if (cancelled.delete(ticket))
-          return { ok: false, fault: `${source.name} was not read`, cancelled: true };
-        read += piece.byteLength;
-        progress({ readBytes: read, totalBytes: total });
+    async open(ticket, { role, file, columns = {} }, progress) {
+      try {
+        const totalBytes = files.size(file);
+        const read = await grid({ role, file, columns }, (readBytes) => {
+          if (cancelled.has(ticket)) throw new Cancelled();
+          progress({ readBytes, totalBytes });
+        });
+        return { ok: true, inspection: inspectionOf(read) };
+      } catch (fault) {
+        if (fault instanceof Cancelled) return { ok: false, fault: `${file} was not read`, cancelled: true };
+        if (fault instanceof InputError) return { ok: false, fault: fault.message, cancelled: false };
+        throw fault;
+      } finally {
+        cancelled.delete(ticket);
       }
-      kept.set(source.name, read);
-      return { ok: false, fault: `${field.file}: the reader of fields is not joined yet`, cancelled: false };
     },
     cancel: (ticket) => cancelled.add(ticket),
-    forget: (name) => kept.delete(name),
-    async preview(source) {
-      const text = await source.content.slice(0, PREVIEW_BYTES).text();
-      const lines = text.split(/\r?\n/).filter((line) => line !== "" && !line.startsWith("#"));
-      const [header = [], ...rows] = lines.slice(0, PREVIEW_ROWS + 1).map((line) => line.split(/[,;\t]/));
-      return { header, rows, recognised: header.map(() => null), fault: null };
+    forget(file) {
+      for (const [key, read] of grids) if (read.file === file) grids.delete(key);
+      last = { key: "[]", fields: [] };
     },
+    async merged(references) {
+      const key = JSON.stringify(references);
+      if (key === last.key) return last.fields;
+      const sources = await Promise.all(
+        references.map(async ({ gaps, beyond, outside, ...reading }) => ({
+          grid: await grid(reading, () => undefined),
+          gaps,
+          beyond,
+          outside,
+        })),
+      );
+      const roles = [...new Set(references.map(({ role }) => role))];
+      const fields = roles.map((role) =>
+        mergeField(
+          role,
+          sources.filter((source) => source.grid.role === role),
+        ),
+      );
+      last = { key, fields };
+      return fields;
+    },
+    current: () => last.fields,
   };
 }
 
-/** A file's bytes in pieces, as the core takes them. */
-export async function* pieces(content: Blob): AsyncGenerator<Uint8Array> {
-  const reader = content.stream().getReader();
-  try {
-    for (;;) {
-      const { done, value } = await reader.read();
-      if (done) return;
-      yield value;
-    }
-  } finally {
-    reader.releaseLock();
-  }
+const inspections = new WeakMap<GridFile, FieldInspection>();
+
+/** Made once, before a gap policy fills the grid. */
+function inspectionOf(grid: GridFile): FieldInspection {
+  const known = inspections.get(grid);
+  if (known !== undefined) return known;
+  const made = inspectGrid(grid);
+  inspections.set(grid, made);
+  return made;
 }

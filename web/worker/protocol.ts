@@ -1,8 +1,8 @@
-import type { Estimate, FieldRole, Profile } from "../core.ts";
+import type { Estimate, FieldInspection, FieldRole, Profile, Units } from "../core.ts";
 import type { FieldDocument, PlanDocument } from "../state/plan-document.ts";
 
 /*
- * What page and worker say to each other. Fields stay in the worker; what comes back is small or is transferred.
+ * What page and worker say to each other. Files and fields stay in the worker; what comes back is small or is transferred.
  */
 
 /** A route as it truly runs, for drawing: the track between waypoints densified, longitudes continuous (not reduced to a turn). */
@@ -13,51 +13,41 @@ export interface RouteDrawing {
   readonly distance_m: Float64Array;
   /** Index into these arrays of each waypoint. */
   readonly waypoints: Int32Array;
-  /** The figures along the route, as far as it came. */
+  /** The figures along the route, as far as it came; its longitudes are continuous with the line's. */
   readonly profile: Profile | null;
 }
 
-export type EstimateAnswer =
-  | { readonly ok: true; readonly estimate: Estimate; readonly drawings: readonly RouteDrawing[] }
-  | { readonly ok: false; readonly fault: string };
-
-export interface FieldSource {
-  /** The name that the plan refers to. */
-  readonly name: string;
-  readonly content: Blob;
+/** What a user can mend comes back as a sentence; a defect is thrown. */
+export interface Fault {
+  readonly ok: false;
+  readonly fault: string;
 }
+
+export interface Estimated {
+  readonly ok: true;
+  readonly estimate: Estimate;
+  readonly drawings: readonly RouteDrawing[];
+  /** Whether the routes were not yet held against land, since the fine coast isn't loaded. */
+  readonly landPending: boolean;
+}
+
+export type EstimateAnswer = Estimated | Fault;
 
 export interface FieldProgress {
   readonly readBytes: number;
   readonly totalBytes: number;
 }
 
-/** What a field file holds, for the list of fields and for the chart. */
-export interface FieldSheet {
-  readonly name: string;
-  readonly role: FieldRole;
-  readonly lat: readonly [number, number];
-  /** West to east; east may exceed 180. */
-  readonly lon: readonly [number, number];
-  /** Valid times, ms since 1970; empty for a steady field. */
-  readonly times: readonly number[];
-  readonly heights_m: readonly number[];
-  readonly nodes: number;
-  readonly missing: number;
-  readonly ignoredColumns: readonly string[];
-  readonly bytes: number;
-}
-
 export type FieldAnswer =
-  | { readonly ok: true; readonly sheet: FieldSheet }
+  | { readonly ok: true; readonly inspection: FieldInspection }
   | { readonly ok: false; readonly fault: string; readonly cancelled: boolean };
 
 /** The first rows of a file as they stand, for the mapping of columns. */
 export interface FieldPreview {
   readonly header: readonly string[];
   readonly rows: readonly (readonly string[])[];
-  /** Our axis or quantity name for each column that was recognised, else `null`. */
-  readonly recognised: readonly (string | null)[];
+  /** Headers that were recognised or mapped. */
+  readonly used: readonly string[];
   /** Why it can't be read as it stands; `null` where it can. */
   readonly fault: string | null;
 }
@@ -74,6 +64,8 @@ export interface LatticeQuestion {
   /** Lattice steps, degrees. */
   readonly stepLat: number;
   readonly stepLon: number;
+  /** Where the lattice stands between whole steps, as a share of one. */
+  readonly phase: number;
 }
 
 /** Where the field has a value, in order; places without one are left out. Components in m/s, the way the medium moves. */
@@ -97,21 +89,36 @@ export interface CoastTile {
 
 export const COAST_EXTENT = 4096;
 
+export type ReportFormat = "table" | "csv" | "json" | "geojson" | "gpx";
+
+export interface ReportQuestion {
+  readonly format: ReportFormat;
+  readonly units: Units;
+  /** Index of the only route to write, in the plan last estimated; `null` for all. */
+  readonly route: number | null;
+}
+
 /** What the worker does for the page. */
 export interface Worker {
-  /** Reads a field file under a ticket, by which it can be cancelled. */
+  /** Keeps a file that a plan may name: a craft, or a field to be read when it is first needed. */
+  keepFile(name: string, content: Blob): void;
+  forgetFile(name: string): void;
+  /** Reads a field file that is kept, under a ticket by which it can be cancelled. */
   openField(
     ticket: number,
-    source: FieldSource,
     field: FieldDocument,
     progress: (progress: FieldProgress) => void,
   ): Promise<FieldAnswer>;
   cancel(ticket: number): void;
-  forgetField(name: string): void;
-  preview(source: FieldSource, field: FieldDocument): Promise<FieldPreview>;
+  /** Tries the head of a field file with a mapping of columns, without keeping anything. */
+  preview(content: Blob, field: FieldDocument): Promise<FieldPreview>;
   estimate(plan: PlanDocument): Promise<EstimateAnswer>;
+  /** Writes the estimate last made, as the command line does; `null` where there is none. */
+  report(question: ReportQuestion): Promise<string | null>;
   lattice(question: LatticeQuestion): Promise<Lattice>;
   coastTile(z: number, x: number, y: number, detail: CoastDetail): Promise<CoastTile>;
-  /** Resolves once the fine coast is indexed. */
+  /** Resolves once the fine coast is there to be drawn. */
   loadFineCoast(): Promise<void>;
+  /** Resolves once routes can be held against the fine coast. */
+  loadLand(): Promise<void>;
 }

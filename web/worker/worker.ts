@@ -2,35 +2,50 @@ import * as Comlink from "comlink";
 import fine from "world-atlas/land-10m.json?url";
 import coarse from "world-atlas/land-50m.json?url";
 import { createCoastShelf } from "./coast-shelf.ts";
+import type { LandTopology } from "./core.ts";
+import { createEstimator } from "./estimator.ts";
+import { previewField } from "./field-preview.ts";
 import { createFieldShelf } from "./field-shelf.ts";
-import type { CoastTile, EstimateAnswer, Lattice, Worker } from "./protocol.ts";
-import { standInEstimate, standInLattice } from "./stand-in.ts";
+import { createFileShelf } from "./file-shelf.ts";
+import { createLandShelf } from "./land-shelf.ts";
+import { answerLattice } from "./lattice.ts";
+import type { CoastDetail, CoastTile, EstimateAnswer, Lattice, Worker } from "./protocol.ts";
 
-const coast = createCoastShelf(async (detail) => {
+async function fetchCoast(detail: CoastDetail): Promise<LandTopology> {
   const answer = await fetch(detail === "10m" ? fine : coarse);
   if (!answer.ok) throw new Error(`the ${detail} coastline could not be loaded (${answer.status})`);
   return answer.json();
-});
-const fields = createFieldShelf();
+}
+
+const coast = createCoastShelf(fetchCoast);
+const land = createLandShelf(() => fetchCoast("10m"));
+const files = createFileShelf();
+const fields = createFieldShelf(files);
+const estimator = createEstimator(files, fields, land);
 
 const worker: Worker = {
-  openField: (ticket, source, field, progress) => fields.open(ticket, source, field, progress),
+  keepFile(name, content) {
+    files.keep(name, content);
+    fields.forget(name);
+  },
+  forgetFile(name) {
+    files.forget(name);
+    fields.forget(name);
+  },
+  openField: (ticket, field, progress) => fields.open(ticket, field, progress),
   cancel: (ticket) => fields.cancel(ticket),
-  forgetField: (name) => fields.forget(name),
-  preview: (source, field) => fields.preview(source, field),
-  async estimate(plan) {
-    return handEstimate(standInEstimate(plan));
-  },
-  async lattice(question) {
-    return handLattice(standInLattice(question));
-  },
-  async coastTile(z, x, y, detail) {
-    return handTile(await coast.tile(z, x, y, detail));
-  },
+  preview: previewField,
+  estimate: async (plan) => handEstimate(await estimator.estimate(plan)),
+  report: async (question) => estimator.report(question),
+  lattice: async (question) => handLattice(answerLattice(fields.current(), question)),
+  coastTile: async (z, x, y, detail) => handTile(await coast.tile(z, x, y, detail)),
   async loadFineCoast() {
     await coast.load("10m");
   },
+  loadLand: () => land.load(),
 };
+
+/* The arrays that an answer was made for are handed over; those that are kept here are copied. */
 
 function handTile(tile: CoastTile): CoastTile {
   return Comlink.transfer(tile, [tile.points.buffer, tile.ends.buffer]);
@@ -42,7 +57,11 @@ function handLattice(lattice: Lattice): Lattice {
 }
 
 function handEstimate(answer: EstimateAnswer): EstimateAnswer {
-  return answer;
+  if (!answer.ok) return answer;
+  const buffers = answer.drawings.flatMap(({ profile }) =>
+    profile === null ? [] : Object.values(profile).map((column: Float64Array | Int32Array) => column.buffer),
+  );
+  return Comlink.transfer(answer, [...new Set(buffers)]);
 }
 
 Comlink.expose(worker);

@@ -1,0 +1,74 @@
+import type { PageState } from "../state/page-state.ts";
+import type { PlanDocument } from "../state/plan-document.ts";
+import { readFieldFile } from "./read-field-file.ts";
+
+/**
+ * Opens a plan's text with the files that it names. `find` gives a file by the plan's name for it, or `null` where the user has
+ * yet to give it; the estimate then says which one it misses.
+ *
+ * @returns whether it was a plan
+ */
+export async function openPlan(
+  page: PageState,
+  name: string,
+  text: string,
+  find: (file: string) => Promise<Blob | null>,
+): Promise<boolean> {
+  const plan = planOf(text);
+  if (plan === null) {
+    page.view.announcement.value = `${name} is no plan file: its "format" is "legwork-plan/1"`;
+    return false;
+  }
+  const { craft, fields = [] } = plan;
+  if ("file" in craft && typeof craft.file === "string") await keep(page, craft.file, find);
+  for (const field of fields) {
+    if (await keep(page, field.file, find)) await readFieldFile(page, field);
+  }
+  page.view.instant.value = null;
+  page.store.open(plan, `Open ${name}`);
+  page.view.announcement.value = `Opened ${name}`;
+  return true;
+}
+
+async function keep(
+  page: PageState,
+  file: string,
+  find: (file: string) => Promise<Blob | null>,
+): Promise<boolean> {
+  const content = await find(file);
+  if (content === null) return false;
+  await page.engine.keepFile(file, content);
+  return true;
+}
+
+function planOf(text: string): PlanDocument | null {
+  let value: unknown;
+  try {
+    value = JSON.parse(text);
+  } catch {
+    return null;
+  }
+  return isPlan(value) ? value : null;
+}
+
+/** Enough of a plan to be shown and mended; the estimate says what else is wrong with it. */
+function isPlan(value: unknown): value is PlanDocument {
+  if (typeof value !== "object" || value === null) return false;
+  const { format, routes, craft, departure } = value as Record<string, unknown>;
+  const isRoute = (route: unknown): boolean =>
+    typeof route === "object" &&
+    route !== null &&
+    "name" in route &&
+    typeof route.name === "string" &&
+    "waypoints" in route &&
+    Array.isArray(route.waypoints) &&
+    route.waypoints.every((waypoint: unknown) => typeof waypoint === "object" && waypoint !== null);
+  return (
+    format === "legwork-plan/1" &&
+    typeof departure === "string" &&
+    typeof craft === "object" &&
+    craft !== null &&
+    Array.isArray(routes) &&
+    routes.every(isRoute)
+  );
+}

@@ -1,0 +1,37 @@
+/*
+ * The one module through which the worker reaches the core.
+ */
+export { type Land, type LandTopology, prepareLand } from "../../src/coast/land.ts";
+export {
+  LATTICE_COVERED,
+  LATTICE_FILLED,
+  LATTICE_HELD,
+  sampleLattice,
+} from "../../src/field/lattice.ts";
+export {
+  densify,
+  type EstimateInput,
+  estimatePrepared,
+  type Field,
+  type FieldInspection,
+  type FieldReference,
+  fieldsInUse,
+  type GridFile,
+  InputError,
+  inspectField,
+  inspectGrid,
+  mergeField,
+  type Plan,
+  type PreparedRoute,
+  type Profile,
+  prepareRoute,
+  type Route,
+  readGridFile,
+} from "../../src/index.ts";
+export { readPlanDocument } from "../../src/plan/read-plan.ts";
+export { writeCsv } from "../../src/report/csv.ts";
+export { writeGeoJson } from "../../src/report/geojson.ts";
+export { writeGpx } from "../../src/report/gpx.ts";
+export type { ReportInput, Units } from "../../src/report/input.ts";
+export { writeJson } from "../../src/report/json.ts";
+export { writeTable } from "../../src/report/table.ts";
