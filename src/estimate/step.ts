@@ -85,11 +85,8 @@ export function makeStep(stations: Stations, motion: Motion): Step {
 }
 
 const MOST_PASSES = 24;
-/**
- * A pass that moves no station by more than this share of the step's time ends the iteration: the figures are then taken
- * once more at the new times, which gains at least another factor of ten.
- */
-const SETTLED = 1e-13;
+/** The iteration ends when what it leaves open in the step's time is below this share of it. */
+const SETTLED = 2e-15;
 
 /** Solves the stretch from..to of piece p for the time at every station; `start` is seconds since departure. */
 export function solveStep(
@@ -114,11 +111,17 @@ function solveTimes(step: Step, from: number, to: number, start: number): StepSt
   for (let i = 0; i < STATIONS; i += 1)
     elapsed[i] = ((stations.s[i] as number) - from) / step.lastGroundSpeed;
   const implicit = isImplicit(step);
+  let before = Number.POSITIVE_INFINITY;
   for (let pass = 0; pass < MOST_PASSES; pass += 1) {
     const status = groundSpeeds(step, start);
     if (status !== PACE_OK) return status;
     const moved = integrateTimes(elapsed, groundSpeed, step.slowness, half);
-    if (!implicit || moved <= SETTLED * (elapsed[STATIONS - 1] as number)) return finish(step, start, half);
+    // The next move is about moved²/before, and the figures at the new times are one more such factor better.
+    const gain = moved / before;
+    if (!implicit || moved * gain * gain <= SETTLED * (elapsed[STATIONS - 1] as number)) {
+      return finish(step, start, half);
+    }
+    before = moved;
   }
   return UNSETTLED;
 }
