@@ -43,6 +43,7 @@ const AT_SEA: [string, number, number][] = [
   ["the Southern Ocean", -62, 40],
   ["the English Channel", 50, -2],
   ["the Caspian Sea, which the data cuts out", 42, 50.5],
+  ["the Ross Ice Shelf, which is no land", -81, -175],
 ];
 
 describe("land of Natural Earth 1:10m", () => {

@@ -186,7 +186,7 @@ export function islandsWind(seed) {
   return csv(notesFor("Sea breeze over invented islands at 10 m; knots, and degrees that the wind blows from."), header, rows);
 }
 
-/** A nine-tonne boat; the reasoning behind each figure is in data/README.md. */
+/** A boat of 14 t; the reasoning behind each figure is in data/README.md. */
 export const WORKBOAT = {
   name: "Battery workboat, 12 m",
   moves: "water",
@@ -243,7 +243,7 @@ export const ISLANDS_PLAN = {
     {
       name: "East about",
       path: "rhumb",
-      waypoints: [PIER, { name: "Orrin foot", ...at(8, -10) }, { name: "Orrin east", ...at(12.4, 0.5) }, { name: "Orrin head", ...at(8, 12) }, LIGHT],
+      waypoints: [PIER, { name: "Orrin foot", ...at(8, -10) }, { name: "Orrin east", ...at(11, 0.5) }, { name: "Orrin head", ...at(8, 12) }, LIGHT],
     },
   ],
 };

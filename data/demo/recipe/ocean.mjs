@@ -134,25 +134,25 @@ export const OCEAN_PLAN = {
   ],
   routes: [
     {
-      name: "Great ellipse",
+      name: "Great circle",
       path: "geodesic",
       waypoints: [
-        { name: "Departure", lat: "35°40.0'N", lon: "152°30.0'E" },
-        { name: "Vertex", lat: "41°30.0'N", lon: "178°30.0'E" },
-        { name: "Arrival", lat: "38°30.0'N", lon: "164°00.0'W" },
+        { name: "Departure", lat: "37°00.0'N", lon: "152°30.0'E" },
+        { name: "Antimeridian", lat: "40°51.2'N", lon: 180 },
+        { name: "Arrival", lat: "40°00.0'N", lon: "164°00.0'W" },
       ],
     },
     {
       name: "Down the stream",
       path: "rhumb",
       waypoints: [
-        { name: "Departure", lat: "35°40.0'N", lon: "152°30.0'E" },
+        { name: "Departure", lat: "37°00.0'N", lon: "152°30.0'E" },
         { name: "Crest", lat: 36.6, lon: 154.5 },
         { name: "Trough", lat: 35.85, lon: 159 },
         { name: "Second crest", lat: 36.6, lon: 165.5 },
         { name: "Second trough", lat: 36.5, lon: 171 },
         { name: "Stream end", lat: 36.95, lon: 179 },
-        { name: "Arrival", lat: "38°30.0'N", lon: "164°00.0'W", path: "geodesic" },
+        { name: "Arrival", lat: "40°00.0'N", lon: "164°00.0'W", path: "geodesic" },
       ],
     },
   ],
