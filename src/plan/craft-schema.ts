@@ -67,7 +67,7 @@ const cubeModel = objectOf(
       },
       "The known point of the curve.",
     ),
-    exponent: bareNumber("exponent", POSITIVE, "Power of the speed; 3 unless given.").optional(),
+    exponent: bareNumber("exponent", { above: 0, atMost: 10 }, "Power of the speed; 3 unless given.").optional(),
   },
   "Power as a power of the speed.",
 );

@@ -21,8 +21,9 @@ const ESCAPES: Readonly<Record<string, string>> = {
 };
 
 /**
- * Reads JSON text (RFC 8259). Stricter than `JSON.parse` in one thing, a key given twice in an object, and the same in
- * every browser in telling where a fault stands. A byte order mark before the text is left out.
+ * Reads JSON text (RFC 8259). Stricter than `JSON.parse` in two things, a key given twice in an object and a number
+ * that would be infinite, and the same in every browser in telling where a fault stands. A byte order mark before the text
+ * is left out.
  *
  * @throws InputError with the line, and the column counted from 1 in UTF-16 units, of the first fault
  */

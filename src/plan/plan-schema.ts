@@ -60,7 +60,7 @@ const waypoint = objectOf(
     path: path.optional(),
     speed: speed("Speed of the leg that arrives here.").optional(),
     height: quantity(["length"], "height", NOT_NEGATIVE, "Height above the surface here.").optional(),
-    stay: quantity(["time"], "stay", POSITIVE, "Time spent here before the next leg.").optional(),
+    stay: quantity(["time"], "stay", { above: 0, atMost: 1e9 }, "Time spent here before the next leg.").optional(),
   },
   "A waypoint; path, speed and height belong to the leg that arrives at it.",
 );

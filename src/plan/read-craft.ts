@@ -7,7 +7,7 @@ import { tablePower } from "../craft/table.ts";
 import { wingPower } from "../craft/wing.ts";
 import { InputError } from "../errors.ts";
 import { quoted } from "../found.ts";
-import type { Quantity } from "../units.ts";
+import { type Quantity, toUnit } from "../units.ts";
 import { type CraftDocument, type CraftParts, craftSchema } from "./craft-schema.ts";
 import { type Fault, firstIssue, placeOf } from "./first-issue.ts";
 import { parseJson } from "./json-text.ts";
@@ -168,9 +168,9 @@ export function checkOrderedSpeed(
   fault: (text: string) => InputError,
 ): void {
   if (speed.value >= power.min && speed.value <= power.max) return;
-  const range = power.max === Number.POSITIVE_INFINITY ? `from ${power.min}` : `${power.min} to ${power.max}`;
+  const shown = (value: number) => Number(toUnit(value, speed.symbol).toPrecision(6));
   throw fault(
-    `a speed ordered lies within the rows of the power table, ${range} m/s; found ${quoted(speed.text)}, ${speed.value} m/s`,
+    `a speed ordered lies within the rows of the power table, ${shown(power.min)} to ${shown(power.max)} ${speed.symbol}; found ${quoted(speed.text)}`,
   );
 }
 

@@ -74,7 +74,7 @@ function paceOf(parts: PlanParts, craft: Craft, fault: Fault): Pace {
     if (craft.power.model === "constant")
       throw fault(
         ["pace", "hold"],
-        'no speed follows from a power that is the same at every speed; found "power" beside the constant model',
+        'no speed follows from a power that is the same at every speed; found the constant model beside "power"',
       );
     if (craft.storePerJoule === null)
       throw fault(

@@ -1,7 +1,14 @@
 import * as z from "zod";
 import { InputError } from "../errors.ts";
 import { foundText, quoted } from "../found.ts";
-import { acceptedText, type Dimension, type Quantity, quantityPattern, readQuantity } from "../units.ts";
+import {
+  acceptedText,
+  type Dimension,
+  INNER_UNITS,
+  type Quantity,
+  quantityPattern,
+  readQuantity,
+} from "../units.ts";
 import { nearestKey } from "./nearest-key.ts";
 
 /*
@@ -22,6 +29,13 @@ export const NOT_NEGATIVE: Bounds = { atLeast: 0 };
 /** An efficiency or another share that cannot be nothing. */
 export const POSITIVE_SHARE: Bounds = { above: 0, atMost: 1 };
 
+/**
+ * Sizes that a figure may have beside 0, in the dimension's inner unit. Far wider than any craft or place, and narrow enough
+ * that no product of figures in the models overflows or becomes NaN.
+ */
+const SIZES = { least: 1e-15, most: 1e15 };
+const SPEED_SIZES = { least: 1e-3, most: 1e5 };
+
 /** A text with a number and its unit, turned into a {@link Quantity}. */
 export function quantity(
   dimensions: readonly Dimension[],
@@ -35,7 +49,10 @@ export function quantity(
     .meta({ pattern: quantityPattern(dimensions), description })
     .transform((text, context): Quantity => {
       const read = caught(() => readQuantity(text, dimensions, name));
-      const broken = read instanceof InputError ? read.message : brokenBound(read.value, bounds, asText);
+      const broken =
+        read instanceof InputError
+          ? read.message
+          : (brokenBound(read.value, bounds, asText) ?? brokenSize(read.value, read.dimension));
       if (read instanceof InputError || broken !== null) {
         context.addIssue(read instanceof InputError ? read.message : sentence(name, broken ?? "", text));
         return z.NEVER;
@@ -54,7 +71,7 @@ export function bareNumber(name: string, bounds: Bounds, description: string) {
     .number({ error: (issue) => sentence(name, "takes a number without a unit", issue.input) })
     .meta({ ...limits, description })
     .superRefine((value, context) => {
-      const broken = brokenBound(value, bounds, String);
+      const broken = brokenBound(value, bounds, String) ?? brokenSize(value);
       if (broken !== null) context.addIssue(sentence(name, broken, value));
     });
 }
@@ -136,8 +153,18 @@ function brokenBound(value: number, { above, atLeast, atMost }: Bounds, text: (v
   return null;
 }
 
+function brokenSize(value: number, dimension?: Dimension): string | null {
+  const { least, most } = dimension === "speed" ? SPEED_SIZES : SIZES;
+  const size = Math.abs(value);
+  if (size === 0 || (size >= least && size <= most)) return null;
+  const unit = dimension === undefined || dimension === "share" ? "" : ` ${INNER_UNITS[dimension]}`;
+  return size > most ? `is at most ${most}${unit}` : `is 0 or at least ${least}${unit}`;
+}
+
 function boundText(value: number, dimensions: readonly Dimension[]): string {
-  return dimensions.length === 1 && dimensions[0] === "share" ? `${value * 100} %` : String(value);
+  const only = dimensions.length === 1 ? dimensions[0] : undefined;
+  if (only === "share") return `${value * 100} %`;
+  return only === undefined || value === 0 ? String(value) : `${value} ${INNER_UNITS[only]}`;
 }
 
 /** What a reader gives, or the InputError that it throws. */

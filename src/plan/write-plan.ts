@@ -1,3 +1,4 @@
+import * as z from "zod";
 import { type CraftDocument, craftSchema } from "./craft-schema.ts";
 import { type PlanDocument, planSchema } from "./plan-schema.ts";
 
@@ -9,58 +10,41 @@ const WIDTH = 110;
  * keys that are `undefined` are left out; quantities, times and positions stay as the user wrote them.
  */
 export function serializePlan(document: PlanDocument): string {
-  const { craft } = document;
-  const ordered = inOrder(document, Object.keys(planSchema.shape), {
-    craft: "file" in craft ? craft : orderedCraft(craft),
-    ...(document.pace === undefined ? {} : { pace: inOrder(document.pace, ["hold", "speed", "power"]) }),
-    ...(document.fields === undefined
-      ? {}
-      : { fields: document.fields.map((field) => inOrder(field, FIELD_KEYS)) }),
-    routes: document.routes.map((route) =>
-      inOrder(route, ROUTE_KEYS, {
-        waypoints: route.waypoints.map((waypoint) => inOrder(waypoint, WAYPOINT_KEYS)),
-      }),
-    ),
-  });
-  return `${jsonText(ordered, "")}\n`;
+  return `${jsonText(inOrder(document, planSchema), "")}\n`;
 }
 
 /** Writes a craft document as the text of its file, as {@link serializePlan} does. */
 export function serializeCraft(document: CraftDocument): string {
-  return `${jsonText(orderedCraft(document), "")}\n`;
+  return `${jsonText(inOrder(document, craftSchema), "")}\n`;
 }
 
-const routeSchema = planSchema.shape.routes.element;
-const ROUTE_KEYS = Object.keys(routeSchema.shape);
-const WAYPOINT_KEYS = Object.keys(routeSchema.shape.waypoints.element.shape);
-const FIELD_KEYS = Object.keys(planSchema.shape.fields.unwrap().element.shape);
-
-function orderedCraft(craft: CraftDocument): object {
-  const { shape } = craftSchema;
-  const model = shape.power.options.find((option) => option.shape.model.safeParse(craft.power.model).success);
-  return inOrder(craft, Object.keys(shape), {
-    power: inOrder(craft.power, Object.keys(model?.shape ?? {})),
-    ...(craft.windage === undefined
-      ? {}
-      : { windage: inOrder(craft.windage, Object.keys(shape.windage.unwrap().shape)) }),
-    ...(craft.speeds === undefined ? {} : { speeds: inOrder(craft.speeds, ["min", "max"]) }),
-    store: inOrder(craft.store, Object.keys(shape.store.shape)),
-    ...(craft.limits === undefined
-      ? {}
-      : { limits: inOrder(craft.limits, Object.keys(shape.limits.unwrap().shape)) }),
-  });
+/** A copy with the keys of every object in the order of its schema; keys that the schema lacks follow in their own. */
+function inOrder(value: unknown, schema: unknown): unknown {
+  if (schema instanceof z.ZodOptional) return inOrder(value, schema.unwrap());
+  if (Array.isArray(value)) {
+    const item = schema instanceof z.ZodArray ? schema.element : undefined;
+    return value.map((each) => inOrder(each, item));
+  }
+  if (typeof value !== "object" || value === null) return value;
+  const { shape } = objectSchema(value, schema) ?? { shape: {} };
+  const known = Object.keys(shape).filter((key) => Object.hasOwn(value, key));
+  const others = Object.keys(value).filter((key) => !Object.hasOwn(shape, key));
+  return Object.fromEntries(
+    [...known, ...others].map((key) => [key, inOrder(Reflect.get(value, key), Reflect.get(shape, key))]),
+  );
 }
 
-/** A copy with its keys in an order, some values replaced; keys outside the order follow in their own. */
-function inOrder(
-  given: object,
-  order: readonly string[],
-  replaced: Readonly<Record<string, unknown>> = {},
-): object {
-  const values = { ...given, ...replaced };
-  const known = order.filter((key) => Object.hasOwn(values, key));
-  const others = Object.keys(values).filter((key) => !order.includes(key));
-  return Object.fromEntries([...known, ...others].map((key) => [key, Reflect.get(values, key)]));
+/** The object schema that a value is written to: of a union, the first whose words and keys are the value's. */
+function objectSchema(value: object, schema: unknown): z.ZodObject | undefined {
+  if (schema instanceof z.ZodObject) return schema;
+  if (!(schema instanceof z.ZodUnion)) return undefined;
+  const options = schema.options.filter((option): option is z.ZodObject => option instanceof z.ZodObject);
+  return options.find(({ shape }) =>
+    Object.entries(value).every(([key, item]) => {
+      const known: unknown = Reflect.get(shape, key);
+      return known instanceof z.ZodEnum ? known.safeParse(item).success : known !== undefined;
+    }),
+  );
 }
 
 function jsonText(value: unknown, indent: string): string {

@@ -1,0 +1,538 @@
+import { describe, expect, test } from "vitest";
+import { readCraft } from "../../src/plan/read-craft.ts";
+import { type Change, CUBE, changed, faultOf, ROTOR, TENDER, WING } from "./documents.ts";
+
+type Case = readonly [what: string, changes: readonly Change[], key: string, accepted: string, found: string];
+
+const SPEED = 'takes a number with one of m/s, km/h, kn, ft/min, as "12 kn"';
+const FUEL_ROWS = [
+  { speed: "0 kn", rate: "2 kg/h" },
+  { speed: "12 kn", rate: "30 kg/h" },
+];
+const VOLUME_ROWS = [
+  { speed: "0 kn", rate: "2 L/h" },
+  { speed: "12 kn", rate: "30 L/h" },
+];
+const flying = (power: object): readonly Change[] => [
+  ["moves", "air"],
+  ["windage", undefined],
+  ["power", power],
+];
+const fuel = (rows: object, store: object): readonly Change[] => [
+  ["power.rows", rows],
+  ["store", store],
+  ["hotel", undefined],
+  ["windage", undefined],
+];
+
+const WHOLE: readonly Case[] = [
+  ["no name", [["name", undefined]], "name", "takes a text of one line, not empty", "nothing"],
+  ["a blank name", [["name", "  "]], "name", "takes a text of one line, not empty", '"  "'],
+  ["no medium", [["moves", undefined]], "moves", 'takes one of "water", "air"', "nothing"],
+  ["another medium", [["moves", "land"]], "moves", 'takes one of "water", "air"', '"land"'],
+  ["a misspelt key", [["hotell", "1 kW"]], "hotell", 'the nearest that it has is "hotel"', '"hotell"'],
+  ["a speed without a unit", [["speed", 12]], "speed", `speed ${SPEED}`, "12"],
+  ["a speed as text without a unit", [["speed", "12"]], "speed", `speed ${SPEED}`, '"12" (without a unit)'],
+  [
+    "a speed in the wrong case",
+    [["speed", "12 KN"]],
+    "speed",
+    `speed ${SPEED}`,
+    '"12 KN" (did you mean kn?)',
+  ],
+  [
+    "a speed with a comma",
+    [["speed", "12,5 kn"]],
+    "speed",
+    `speed ${SPEED}`,
+    '"12,5 kn" (the decimal sign is a point)',
+  ],
+  ["a speed of nothing", [["speed", "0 kn"]], "speed", "speed is above 0", '"0 kn"'],
+  [
+    "a speed outside the table",
+    [["speed", "25 km/h"]],
+    "speed",
+    "lies within the rows of the power table, 0 to 22.224 km/h",
+    '"25 km/h"',
+  ],
+  ["speeds without a least", [["speeds.min", undefined]], "speeds.min", `least speed ${SPEED}`, "nothing"],
+  [
+    "speeds the wrong way round",
+    [["speeds", { min: "5 kn", max: "4 kn" }]],
+    "speeds.min",
+    'the least speed is below the greatest, "4 kn"',
+    '"5 kn"',
+  ],
+  [
+    "speeds of no width",
+    [["speeds", { min: "5 kn", max: "5 kn" }]],
+    "speeds.min",
+    "the least speed is below the greatest",
+    '"5 kn"',
+  ],
+  [
+    "speeds apart from the table",
+    [["speeds", { min: "15 kn", max: "20 kn" }]],
+    "speeds",
+    "the range of speeds meets the rows of the table",
+    '"15 kn" to "20 kn"',
+  ],
+  ["a hotel load below nothing", [["hotel", "-1 kW"]], "hotel", "hotel load is not below 0", '"-1 kW"'],
+  [
+    "a hotel load in joules",
+    [["hotel", "1 kJ"]],
+    "hotel",
+    "hotel load takes a number with one of W, kW, kg/h, t/d, L/h",
+    '"1 kJ" (kJ is a unit of energy)',
+  ],
+  [
+    "a hotel load of fuel beside a battery",
+    [["hotel", "1 kg/h"]],
+    "hotel",
+    "the hotel load spends what the store holds",
+    'a rate of fuel beside a store of energy, "240 kWh"',
+  ],
+  ["limits that are a list", [["limits", []]], "limits", "limits is an object", "an empty list"],
+  [
+    "a misspelt limit",
+    [["limits.gusts", "3 m/s"]],
+    "limits.gusts",
+    'the nearest that it has is "gust"',
+    '"gusts"',
+  ],
+  ["a wind limit of nothing", [["limits.wind", "0 m/s"]], "limits.wind", "wind limit is above 0", '"0 m/s"'],
+  [
+    "an opposed wind below nothing",
+    [["limits.opposedWind", "-1 m/s"]],
+    "limits.opposedWind",
+    "opposed wind is not below 0",
+    '"-1 m/s"',
+  ],
+];
+
+const POWER: readonly Case[] = [
+  ["no power", [["power", undefined]], "power", "is an object with a model", "nothing"],
+  ["a power that is a number", [["power", 3]], "power", "is an object with a model", "3"],
+  [
+    "a power without a model",
+    [["power.model", undefined]],
+    "power.model",
+    'takes one of "table", "cube", "rotor", "wing", "constant"',
+    "nothing",
+  ],
+  ["a misspelt model", [["power.model", "tabel"]], "power.model", 'takes one of "table"', '"tabel"'],
+  ["a model that is a list", [["power.model", ["table"]]], "power.model", 'takes one of "table"', "a list"],
+  [
+    "a table without rows",
+    [["power.rows", undefined]],
+    "power.rows",
+    "takes a list of at least 2 rows",
+    "nothing",
+  ],
+  ["an empty table", [["power.rows", []]], "power.rows", "takes a list of at least 2 rows", "0"],
+  [
+    "a table of one row",
+    [["power.rows", [FUEL_ROWS[0]]]],
+    "power.rows",
+    "takes a list of at least 2 rows",
+    "1",
+  ],
+  [
+    "a row that is a number",
+    [["power.rows[1]", 3]],
+    "power.rows[1]",
+    "a row of a power table is an object",
+    "3",
+  ],
+  [
+    "a row without a rate",
+    [["power.rows[1].rate", undefined]],
+    "power.rows[1].rate",
+    "rate takes a number with one of W, kW, kg/h, t/d, L/h",
+    "nothing",
+  ],
+  [
+    "a row with power for rate",
+    [["power.rows[1].power", "9 kW"]],
+    "power.rows[1].power",
+    "a row of a power table has no key",
+    '"power"',
+  ],
+  [
+    "a row backward",
+    [["power.rows[0].speed", "-1 kn"]],
+    "power.rows[0].speed",
+    "speed is not below 0",
+    '"-1 kn"',
+  ],
+  [
+    "a row that gives power",
+    [["power.rows[0].rate", "-1 kW"]],
+    "power.rows[0].rate",
+    "rate is not below 0",
+    '"-1 kW"',
+  ],
+  [
+    "rows of one speed",
+    [["power.rows[1].speed", "12 kn"]],
+    "power.rows[2].speed",
+    "the speeds of a table differ",
+    '"12 kn" after "12 kn" in another row',
+  ],
+  [
+    "rows of one speed in two units",
+    [["power.rows[1].speed", "22.224 km/h"]],
+    "power.rows[2].speed",
+    "the speeds of a table differ",
+    '"12 kn" after "22.224 km/h" in another row',
+  ],
+  [
+    "rates of two kinds",
+    [["power.rows[1].rate", "9 kg/h"]],
+    "power.rows[1].rate",
+    "the rates of a table are of one kind, power as in its first row",
+    '"9 kg/h"',
+  ],
+  [
+    "fuel of mass and of volume",
+    [...fuel([FUEL_ROWS[0], VOLUME_ROWS[1]], { capacity: "1 t" })],
+    "power.rows[1].rate",
+    "fuel rate by mass as in its first row",
+    '"30 L/h"',
+  ],
+  [
+    "a cube's rows",
+    [["power", { ...CUBE, rows: [] }]],
+    "power.rows",
+    "a cube power model has no key",
+    '"rows"',
+  ],
+  [
+    "a cube without a reference",
+    [["power", { model: "cube" }]],
+    "power.reference",
+    "a reference is an object",
+    "nothing",
+  ],
+  [
+    "a cube's reference at rest",
+    [["power", { model: "cube", reference: { speed: "0 kn", power: "1 kW" } }]],
+    "power.reference.speed",
+    "speed is above 0",
+    '"0 kn"',
+  ],
+  [
+    "a cube's power as fuel",
+    [["power", { model: "cube", reference: { speed: "9 kn", power: "1 kg/h" } }]],
+    "power.reference.power",
+    "power takes a number with one of W, kW",
+    '"1 kg/h" (kg/h is a unit of fuel rate by mass)',
+  ],
+  [
+    "an exponent as text",
+    [["power", { ...CUBE, exponent: "3" }]],
+    "power.exponent",
+    "exponent takes a number without a unit",
+    '"3"',
+  ],
+  [
+    "an exponent of nothing",
+    [["power", { ...CUBE, exponent: 0 }]],
+    "power.exponent",
+    "exponent is above 0",
+    "0",
+  ],
+  [
+    "an exponent out of hand",
+    [["power", { ...CUBE, exponent: 300 }]],
+    "power.exponent",
+    "exponent is at most 10",
+    "300",
+  ],
+  [
+    "a rotor in water",
+    [["power", ROTOR]],
+    "power.model",
+    "a rotor moves through air",
+    'it beside moves "water"',
+  ],
+  [
+    "a wing in water",
+    [["power", WING]],
+    "power.model",
+    "a wing moves through air",
+    'it beside moves "water"',
+  ],
+  [
+    "a rotor without a tip speed",
+    [...flying({ ...ROTOR, tipSpeed: undefined })],
+    "power.tipSpeed",
+    `tip speed ${SPEED}`,
+    "nothing",
+  ],
+  [
+    "a rotor's solidity as a share",
+    [...flying({ ...ROTOR, solidity: "5 %" })],
+    "power.solidity",
+    "solidity takes a number without a unit",
+    '"5 %"',
+  ],
+  [
+    "a rotor's efficiency as a number",
+    [...flying({ ...ROTOR, efficiency: 0.8 })],
+    "power.efficiency",
+    "efficiency takes a number with the unit %",
+    "0.8",
+  ],
+  [
+    "a rotor more than perfect",
+    [...flying({ ...ROTOR, efficiency: "101 %" })],
+    "power.efficiency",
+    "efficiency is at most 100 %",
+    '"101 %"',
+  ],
+  [
+    "a rotor's air without density",
+    [...flying({ ...ROTOR, airDensity: "0 kg/m3" })],
+    "power.airDensity",
+    "air density is above 0",
+    '"0 kg/m3"',
+  ],
+  [
+    "a rotor's disc in metres",
+    [...flying({ ...ROTOR, discArea: "1 m" })],
+    "power.discArea",
+    "disc area takes a number with the unit m2",
+    '"1 m" (m is a unit of length)',
+  ],
+  [
+    "a wing without efficiency",
+    [...flying({ ...WING, efficiency: undefined })],
+    "power.efficiency",
+    "efficiency takes a number with the unit %",
+    "nothing",
+  ],
+  ["a wing without mass", [...flying({ ...WING, mass: "0 kg" })], "power.mass", "mass is above 0", '"0 kg"'],
+  [
+    "a wing with a negative drag",
+    [...flying({ ...WING, zeroLiftDrag: -0.03 })],
+    "power.zeroLiftDrag",
+    "zero-lift drag is above 0",
+    "-0.03",
+  ],
+  [
+    "a wing's span",
+    [...flying({ ...WING, wingSpan: "3 m" })],
+    "power.wingSpan",
+    'the nearest that it has is "wingArea"',
+    '"wingSpan"',
+  ],
+  [
+    "a constant without a rate",
+    [["power", { model: "constant" }]],
+    "power.rate",
+    "rate takes a number with one of W, kW, kg/h, t/d, L/h",
+    "nothing",
+  ],
+];
+
+const STORE: readonly Case[] = [
+  ["no store", [["store", undefined]], "store", "a store is an object", "nothing"],
+  [
+    "a store without a capacity",
+    [["store.capacity", undefined]],
+    "store.capacity",
+    "capacity takes a number with one of J, kJ, MJ, Wh, kWh, kg, t, lb, L, m3",
+    "nothing",
+  ],
+  ["an empty store", [["store.capacity", "0 kWh"]], "store.capacity", "capacity is above 0", '"0 kWh"'],
+  [
+    "a store in watts",
+    [["store.capacity", "240 kW"]],
+    "store.capacity",
+    "capacity takes a number with one of",
+    '"240 kW" (kW is a unit of power)',
+  ],
+  [
+    "a store too large for a number",
+    [["store.capacity", "1e400 kWh"]],
+    "store.capacity",
+    "capacity takes a number with one of",
+    '"1e400 kWh" (too large a number)',
+  ],
+  [
+    "a store larger than any",
+    [["store.capacity", "1e30 kWh"]],
+    "store.capacity",
+    "capacity is at most 1000000000000000 J",
+    '"1e30 kWh"',
+  ],
+  ["nothing usable", [["store.usable", "0 %"]], "store.usable", "usable share is above 0 %", '"0 %"'],
+  [
+    "more usable than all",
+    [["store.usable", "100.1 %"]],
+    "store.usable",
+    "usable share is at most 100 %",
+    '"100.1 %"',
+  ],
+  [
+    "usable as a number",
+    [["store.usable", 0.9]],
+    "store.usable",
+    'usable share takes a number with the unit %, as "20 %"',
+    "0.9",
+  ],
+  [
+    "a battery's density",
+    [["store.density", "1 kg/L"]],
+    "store.density",
+    "density belongs to a store of fuel",
+    '"1 kg/L" beside the capacity "240 kWh"',
+  ],
+  [
+    "a battery's consumption",
+    [["store.specificConsumption", "210 g/kWh"]],
+    "store.specificConsumption",
+    "specificConsumption belongs to a store of fuel",
+    '"210 g/kWh" beside the capacity "240 kWh"',
+  ],
+  [
+    "power from fuel without consumption",
+    [["store", { capacity: "2 t" }]],
+    "store.specificConsumption",
+    'the power model needs a specificConsumption, as "210 g/kWh"',
+    "nothing",
+  ],
+  [
+    "power from a volume without density",
+    [["store", { capacity: "200 L", specificConsumption: "210 g/kWh" }]],
+    "store.density",
+    'the power model needs a density, as "0.85 kg/L"',
+    "nothing",
+  ],
+  [
+    "consumption in kg/h",
+    [["store", { capacity: "2 t", specificConsumption: "21 kg/h" }]],
+    "store.specificConsumption",
+    "specific consumption takes a number with the unit g/kWh",
+    '"21 kg/h" (kg/h is a unit of fuel rate by mass)',
+  ],
+  [
+    "fuel from a battery",
+    [...fuel(FUEL_ROWS, { capacity: "240 kWh" })],
+    "power",
+    "the power model spends what the store holds",
+    'a rate of fuel beside a store of energy, "240 kWh"',
+  ],
+  [
+    "fuel by mass from a volume without density",
+    [...fuel(FUEL_ROWS, { capacity: "200 L" })],
+    "store.density",
+    "the power model needs a density",
+    "nothing",
+  ],
+  [
+    "fuel by volume from a mass without density",
+    [...fuel(VOLUME_ROWS, { capacity: "2 t" })],
+    "store.density",
+    "the power model needs a density",
+    "nothing",
+  ],
+  [
+    "a hotel load in watts beside a rate of fuel",
+    [...fuel(FUEL_ROWS, { capacity: "2 t" }), ["hotel", "1 kW"]],
+    "store.specificConsumption",
+    "the hotel load needs a specificConsumption",
+    "nothing",
+  ],
+  [
+    "a hotel load in watts beside litres an hour",
+    [...fuel(VOLUME_ROWS, { capacity: "200 L", specificConsumption: "210 g/kWh" }), ["hotel", "1 kW"]],
+    "store.density",
+    "the hotel load needs a density",
+    "nothing",
+  ],
+  [
+    "windage beside a rate of fuel",
+    [...fuel(FUEL_ROWS, { capacity: "2 t" }), ["windage", TENDER.windage]],
+    "store.specificConsumption",
+    "windage needs a specificConsumption",
+    "nothing",
+  ],
+  [
+    "windage beside litres an hour",
+    [
+      ...fuel(VOLUME_ROWS, { capacity: "200 L", specificConsumption: "210 g/kWh" }),
+      ["windage", TENDER.windage],
+    ],
+    "store.density",
+    "windage needs a density",
+    "nothing",
+  ],
+];
+
+const WINDAGE: readonly Case[] = [
+  [
+    "windage in air",
+    [["moves", "air"]],
+    "windage",
+    "windage belongs to a craft that moves through water",
+    'it beside moves "air"',
+  ],
+  [
+    "windage without an area",
+    [["windage.frontalArea", undefined]],
+    "windage.frontalArea",
+    "frontal area takes a number with the unit m2",
+    "nothing",
+  ],
+  [
+    "windage on no area",
+    [["windage.frontalArea", "0 m2"]],
+    "windage.frontalArea",
+    "frontal area is above 0",
+    '"0 m2"',
+  ],
+  [
+    "a drag coefficient as text",
+    [["windage.dragCoefficient", "0.9"]],
+    "windage.dragCoefficient",
+    "drag coefficient takes a number without a unit",
+    '"0.9"',
+  ],
+  [
+    "a negative drag coefficient",
+    [["windage.dragCoefficient", -1]],
+    "windage.dragCoefficient",
+    "drag coefficient is above 0",
+    "-1",
+  ],
+  [
+    "a propulsion of no efficiency",
+    [["windage.efficiency", "0 %"]],
+    "windage.efficiency",
+    "efficiency is above 0 %",
+    '"0 %"',
+  ],
+  [
+    "a propulsion without efficiency",
+    [["windage.efficiency", undefined]],
+    "windage.efficiency",
+    "efficiency takes a number with the unit %",
+    "nothing",
+  ],
+];
+
+describe("a malformed craft", () => {
+  test.each([...WHOLE, ...POWER, ...STORE, ...WINDAGE])(
+    "with %s is refused",
+    async (_, changes, key, accepted, found) => {
+      const text = JSON.stringify(changed(TENDER, ...changes));
+      const message = await faultOf(() => readCraft(text, "tender.craft.json"));
+      expect(message.startsWith(`tender.craft.json, ${key}: `)).toBe(true);
+      expect(message).toContain(accepted);
+      expect(message.endsWith(`found ${found}`) || message.includes(`has no key ${found};`)).toBe(true);
+      expect(message).not.toMatch(/[\n\r]/);
+    },
+  );
+});
