@@ -37,6 +37,9 @@ const SAME_CUT = 1e-12;
  * Whether a position is on land.
  *
  * @param position latitude and longitude in degrees, any turn
+ *
+ * @example
+ * isOnLand(prepareLand({ type: "Topology", arcs: [[[10, -9], [20, -9], [20, 9], [10, 9], [10, -9]]], objects: { land: { type: "Polygon", arcs: [[0]] } } }), { lat: 1, lon: 375 }) // → true
  */
 export function isOnLand(land: Land, { lat, lon }: Position): boolean {
   const column = Math.floor((lon - WEST) / CELL);
@@ -50,6 +53,9 @@ export function isOnLand(land: Land, { lat, lon }: Position): boolean {
  *
  * @param points the leg as a line straight in longitude and latitude between neighbours, ascending in `s`, within about
  *   50 m of the track (`densify` makes it); `s` is taken as linear between them
+ *
+ * @example
+ * landCrossings(prepareLand({ type: "Topology", arcs: [[[10, -9], [20, -9], [20, 9], [10, 9], [10, -9]]], objects: { land: { type: "Polygon", arcs: [[0]] } } }), [{ s: 0, lat: 1, lon: 9 }, { s: 4000, lat: 1, lon: 13 }]) // → [{ from_m: 1000, to_m: 4000 }]
  */
 export function landCrossings(land: Land, points: readonly PathPoint[]): LandStretch[] {
   const walk: Walk = { land, shapes: new Map(), stretches: [] };

@@ -5,6 +5,7 @@ import { slicedRing, unrolledRing } from "./ring.ts";
 /** A TopoJSON topology with an object named `land`, as Natural Earth's land is published in world-atlas. */
 export interface LandTopology {
   readonly type: "Topology";
+  readonly arcs: readonly unknown[];
   readonly objects: { readonly land: object };
 }
 
@@ -50,6 +51,9 @@ export function cellAt(column: number, row: number): number {
  *
  * @param topology for example the parsed `land-10m.json` of the package world-atlas; it is not changed or kept
  * @throws TypeError where the topology has no land
+ *
+ * @example
+ * prepareLand({ type: "Topology", arcs: [[[1, 1], [2, 1], [2, 2], [1, 1]]], objects: { land: { type: "Polygon", arcs: [[0]] } } }).ringPolygon.length // → 3
  */
 export function prepareLand(topology: LandTopology): Land {
   const cells = new Map<number, RingPart[]>();

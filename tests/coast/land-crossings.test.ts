@@ -31,7 +31,7 @@ const block = prepareLand({
     ],
   ],
   objects: { land: { type: "Polygon", arcs: [[0]] } },
-} as Parameters<typeof prepareLand>[0]);
+});
 
 describe("land crossings of a rectangular land", () => {
   const points: PathPoint[] = [

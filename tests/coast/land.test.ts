@@ -126,7 +126,7 @@ describe("land of a made topology", () => {
       type: "Topology",
       arcs: [square(10), square(12)],
       objects: { land: { type: "MultiPolygon", arcs: [[[0]], [[1]]] } },
-    } as Parameters<typeof prepareLand>[0]);
+    });
     for (const lon of [11, 13, 15]) expect(isOnLand(made, { lat: 2, lon })).toBe(true);
     expect(isOnLand(made, { lat: 2, lon: 17 })).toBe(false);
   });
