@@ -40,8 +40,8 @@ export default defineConfig({
     outDir: new URL("../dist/page", import.meta.url).pathname,
     emptyOutDir: true,
     target: "es2022",
-    // A coastline inlined as text would be in the first load.
-    assetsInlineLimit: 2048,
+    // What is inlined could not be fetched under the policy.
+    assetsInlineLimit: 0,
     modulePreload: { polyfill: false },
   },
 });

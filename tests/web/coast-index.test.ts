@@ -30,6 +30,22 @@ describe("the coastline index", () => {
     expect(Math.max(...xs)).toBeGreaterThanOrEqual(4096);
   });
 
+  test("draws no line around the world where land crosses the antimeridian", () => {
+    // A ring that stepped across it would span a tile of the whole world from side to side; only Antarctica's does.
+    const { points, ends } = index.tile(0, 0, 0);
+    let start = 0;
+    const wide: number[] = [];
+    for (const end of ends) {
+      const xs = points.slice(2 * start, 2 * end).filter((_, at) => at % 2 === 0);
+      const ys = points.slice(2 * start, 2 * end).filter((_, at) => at % 2 === 1);
+      if (Math.max(...xs) - Math.min(...xs) > 4000) wide.push(Math.min(...ys));
+      start = end;
+    }
+    expect(wide.length).toBe(1);
+    // 63° S, the tip of the peninsula, stands at about 0.73 of the square.
+    expect(wide[0]).toBeGreaterThan(0.7 * 4096);
+  });
+
   test("is empty in the middle of an ocean", () => {
     expect(index.tile(6, 5, 32).ends.length).toBe(0);
   });

@@ -231,12 +231,15 @@ function followTheme(chart: ChartMap, { view }: PageState): () => void {
   };
 }
 
+/** Room for the tools at the top and for names to the right of waypoints. */
+const FIT: L.FitBoundsOptions = { paddingTopLeft: [40, 62], paddingBottomRight: [80, 26], animate: false };
+
 function showAll(map: L.Map, { store, answers }: PageState): void {
   const points = drawnRoutes(store.plan.value, answers.answer.value, 0).flatMap(({ drawing }) => {
     const shift = shiftFor(map, drawing.lon);
     return Array.from(drawing.lat, (lat, at): L.LatLngTuple => [lat, (drawing.lon[at] ?? 0) + shift]);
   });
-  if (points.length > 0) map.fitBounds(L.latLngBounds(points), { padding: [48, 48], animate: false });
+  if (points.length > 0) map.fitBounds(L.latLngBounds(points), FIT);
 }
 
 /** Opens on the whole plan, or on the world where the plan is empty; says whether there was a plan to show. */
@@ -246,7 +249,7 @@ function firstView(map: L.Map, { store }: PageState): boolean {
     .routes.flatMap((route) => handlesOf(route) ?? [])
     .map(({ lat, lon }): L.LatLngTuple => [lat, lon]);
   if (points.length < 2) map.setView([25, 0], 2);
-  else map.fitBounds(L.latLngBounds(points), { padding: [48, 48], animate: false });
+  else map.fitBounds(L.latLngBounds(points), FIT);
   return points.length >= 2;
 }
 

@@ -34,7 +34,7 @@ export class CoastlineLayer extends L.GridLayer {
     if (fine) this.wantFine();
     this.source(coords.z, coords.x, coords.y, fine ? "10m" : "50m").then(
       (tile) => {
-        drawTile(canvas, tile, coords);
+        drawTile(canvas, tile);
         done(undefined, canvas);
       },
       (fault: unknown) => done(fault instanceof Error ? fault : new Error(String(fault)), canvas),
@@ -43,7 +43,7 @@ export class CoastlineLayer extends L.GridLayer {
   }
 }
 
-function drawTile(canvas: HTMLCanvasElement, tile: CoastTile, coords: L.Coords): void {
+function drawTile(canvas: HTMLCanvasElement, tile: CoastTile): void {
   const context = canvas.getContext("2d");
   if (!context || tile.ends.length === 0) return;
   const scale = canvas.width / COAST_EXTENT;
@@ -52,8 +52,9 @@ function drawTile(canvas: HTMLCanvasElement, tile: CoastTile, coords: L.Coords):
   context.strokeStyle = cssColour("--coast");
   context.lineWidth = (window.devicePixelRatio * 0.9) / scale;
   context.lineJoin = "round";
-  context.fill(landPath(tile), "evenodd");
-  context.stroke(shorePath(tile, coords));
+  const land = landPath(tile);
+  context.fill(land, "evenodd");
+  context.stroke(land);
 }
 
 function landPath({ points, ends }: CoastTile): Path2D {
@@ -63,25 +64,6 @@ function landPath({ points, ends }: CoastTile): Path2D {
     path.moveTo(points[2 * at] ?? 0, points[2 * at + 1] ?? 0);
     for (at += 1; at < end; at += 1) path.lineTo(points[2 * at] ?? 0, points[2 * at + 1] ?? 0);
     path.closePath();
-  }
-  return path;
-}
-
-/** The rings without the cut along the antimeridian, which is no shore. */
-function shorePath({ points, ends }: CoastTile, { x, z }: L.Coords): Path2D {
-  const seams = [x === 0 ? 0 : null, x === 2 ** z - 1 ? COAST_EXTENT : null];
-  const path = new Path2D();
-  let at = 0;
-  for (const end of ends) {
-    let lastX = points[2 * at] ?? 0;
-    path.moveTo(lastX, points[2 * at + 1] ?? 0);
-    for (at += 1; at < end; at += 1) {
-      const nextX = points[2 * at] ?? 0;
-      const nextY = points[2 * at + 1] ?? 0;
-      if (nextX === lastX && seams.includes(nextX)) path.moveTo(nextX, nextY);
-      else path.lineTo(nextX, nextY);
-      lastX = nextX;
-    }
   }
   return path;
 }

@@ -146,9 +146,15 @@ function LedgerRow({ page, at, name, route, base, best, end }: LedgerRowProps) {
 
 function Cell(props: { label: string; best: boolean; difference: string | null; children: string }) {
   return (
-    <td class={props.best ? "best" : ""} data-label={props.label}>
-      {props.children}
-      {props.best && <span class="best-mark"> best</span>}
+    <td data-label={props.label}>
+      {props.best ? (
+        <span class="best-figure">
+          {props.children}
+          <span class="unseen"> (best)</span>
+        </span>
+      ) : (
+        props.children
+      )}
       {props.difference !== null && <span class="difference">{props.difference}</span>}
     </td>
   );
@@ -158,7 +164,7 @@ function BarLegend() {
   return (
     <p class="bar-legend" aria-hidden="true">
       <span class="key still" /> still <span class="key along" /> along, against <span class="key cross" />{" "}
-      cross <span class="key gain" /> saved by a following flow
+      cross <span class="key gain" /> saved by a following flow <span class="key best" /> best
     </p>
   );
 }

@@ -27,16 +27,21 @@ export function legColumns(route: RouteEstimate, preset: UnitsPreset, zone: stri
     ...fieldColumns(route, "current", speed),
     ...fieldColumns(route, "wind", speed),
     plain("through", "Through", speed.symbol, (leg) => inUnit(leg.throughSpeed_m_s?.mean ?? null, speed)),
-    plain("ground", "Over ground", speed.symbol, (leg) => inUnit(leg.groundSpeed_m_s?.mean ?? null, speed)),
+    plain("ground", "Ground", speed.symbol, (leg) => inUnit(leg.groundSpeed_m_s?.mean ?? null, speed)),
     plain("heading", "Heading", "°T", (leg) => courseText(leg.heading_deg?.mean ?? null)),
     plain("time", "Time", "", ({ time_s }) => durationText(time_s)),
-    plain("stay", "Stay", "", ({ stay_s }) => (stay_s === 0 ? "" : durationText(stay_s))),
+    ...stayColumn(route),
     plain("eta", "ETA", zoneName, ({ arrival }) =>
       arrival === null ? "–" : clockText(arrival, zone, false),
     ),
     plain("use", "Use", amount.symbol, ({ use }) => inUnit(use, amount)),
     plain("left", "Left", amount.symbol, ({ remaining }) => inUnit(remaining, amount)),
   ];
+}
+
+function stayColumn(route: RouteEstimate): LegColumn[] {
+  if (route.totals.stay_s === 0) return [];
+  return [plain("stay", "Stay", "", ({ stay_s }) => (stay_s === 0 ? "" : durationText(stay_s)))];
 }
 
 function fieldColumns(route: RouteEstimate, role: "wind" | "current", speed: ShownUnit): LegColumn[] {

@@ -9,10 +9,10 @@ import type { RouteDrawing } from "../worker/protocol.ts";
 import { ribbonRuns } from "./ribbon-runs.ts";
 
 const STORE_TOP = 3;
-const STORE_HEIGHT = 24;
+const STORE_HEIGHT = 20;
 const BAND_TOP = STORE_TOP + STORE_HEIGHT + 2;
 const BAND_HEIGHT = 11;
-const HEIGHT = BAND_TOP + BAND_HEIGHT + 15;
+const HEIGHT = BAND_TOP + BAND_HEIGHT + 16;
 
 interface RibbonProps {
   readonly page: PageState;

@@ -25,7 +25,9 @@ export async function openPlan(
     if (await keep(page, field.file, find)) await readFieldFile(page, field);
   }
   page.view.instant.value = null;
-  page.store.open(plan, `Open ${name}`);
+  // There is nothing to go back to where nothing was.
+  if (page.store.plan.peek().routes.length === 0) page.store.restart(plan);
+  else page.store.open(plan, `Open ${name}`);
   page.view.announcement.value = `Opened ${name}`;
   return true;
 }

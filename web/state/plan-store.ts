@@ -36,6 +36,8 @@ export interface PlanStore {
   select(selection: Selection): void;
   /** Replaces the plan, as an edit that can be undone; the new plan counts as saved. */
   open(plan: PlanDocument, label: string): void;
+  /** Begins anew with a plan: nothing before it can be undone. */
+  restart(plan: PlanDocument): void;
   markSaved(): void;
 }
 
@@ -81,6 +83,10 @@ export function createPlanStore(initial: PlanDocument): PlanStore {
     },
     open(plan, label) {
       write(label, { plan, selection: { route: 0, waypoint: null } }, null);
+      saved.value = plan;
+    },
+    restart(plan) {
+      history.value = beginHistory({ plan, selection: { route: 0, waypoint: null } });
       saved.value = plan;
     },
     markSaved() {

@@ -1,5 +1,7 @@
+import type { MultiPolygon, Polygon, Position } from "geojson";
 import GeoJSONVT from "geojson-vt";
 import { feature } from "topojson-client";
+import { unrolledRing } from "./core.ts";
 import { COAST_EXTENT, type CoastDetail, type CoastTile } from "./protocol.ts";
 
 /** The finest level that tiles are cut at; the chart zooms no further. */
@@ -17,7 +19,7 @@ export interface CoastIndex {
 /** @throws Error where the topology holds no `land` */
 export function indexCoast(topology: unknown, detail: CoastDetail): CoastIndex {
   if (!isLand(topology)) throw new Error(`no land in the ${detail} coastline`);
-  const index = new GeoJSONVT(feature(topology, topology.objects.land), {
+  const index = new GeoJSONVT(planarLand(topology), {
     maxZoom: COAST_MAX_ZOOM,
     indexMaxZoom: 4,
     tolerance: 2,
@@ -27,6 +29,48 @@ export function indexCoast(topology: unknown, detail: CoastDetail): CoastIndex {
   return {
     tile: (z, x, y) => packRings(index.getTileRaw(z, x, y)?.features ?? [], detail),
   };
+}
+
+/**
+ * The land in a plane of continuous longitude: the packed rings step across the antimeridian, which the tile cutter, working in
+ * a plane, would take for a line around the world. It brings back by itself what lies beyond ±180°.
+ */
+function planarLand(topology: LandTopology): MultiPolygon {
+  const found = feature(topology, topology.objects.land);
+  const features = found.type === "FeatureCollection" ? found.features : [found];
+  const polygons = features.flatMap(({ geometry }) => {
+    if (geometry.type === "Polygon") return [geometry.coordinates];
+    return geometry.type === "MultiPolygon" ? geometry.coordinates : [];
+  });
+  return { type: "MultiPolygon", coordinates: polygons.map(planarPolygon) };
+}
+
+/** The outer ring on the turn around Greenwich, and its holes on the turn that puts them inside it. */
+function planarPolygon([outer = [], ...holes]: Polygon["coordinates"]): Polygon["coordinates"] {
+  const shell = onTurn(unrolledRing(outer), 0);
+  const middle = middleOf(shell);
+  return [shell, ...holes.map((hole) => onTurn(unrolledRing(hole), middle))];
+}
+
+/** A flat ring as positions, closed, shifted by whole turns so that its middle is nearest to a longitude. */
+function onTurn(flat: readonly number[], near: number): Position[] {
+  const ring: Position[] = [];
+  for (let at = 0; at + 1 < flat.length; at += 2) ring.push([flat[at] ?? 0, flat[at + 1] ?? 0]);
+  const [first] = ring;
+  const last = ring.at(-1);
+  if (first && last && (first[0] !== last[0] || first[1] !== last[1])) ring.push([...first]);
+  const turn = 360 * Math.round((near - middleOf(ring)) / 360);
+  return turn === 0 ? ring : ring.map(([lon = 0, lat = 0]) => [lon + turn, lat]);
+}
+
+function middleOf(ring: readonly Position[]): number {
+  let west = Number.POSITIVE_INFINITY;
+  let east = Number.NEGATIVE_INFINITY;
+  for (const [lon = 0] of ring) {
+    west = Math.min(west, lon);
+    east = Math.max(east, lon);
+  }
+  return (west + east) / 2;
 }
 
 function isLand(topology: unknown): topology is LandTopology {

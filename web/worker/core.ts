@@ -2,6 +2,7 @@
  * The one module through which the worker reaches the core.
  */
 export { type Land, type LandTopology, prepareLand } from "../../src/coast/land.ts";
+export { unrolledRing } from "../../src/coast/ring.ts";
 export {
   LATTICE_COVERED,
   LATTICE_FILLED,
