@@ -1,6 +1,7 @@
 import * as z from "zod";
 import { columnNames } from "../field/column-names.ts";
 import { craftSchema } from "./craft-schema.ts";
+import { paceSchema } from "./pace-schema.ts";
 import { parseCoordinate } from "./position.ts";
 import {
   fileName,
@@ -49,7 +50,6 @@ const path = oneOf(
   ["geodesic", "rhumb"],
   "Shortest line, or line of constant course; geodesic unless given.",
 );
-const speed = (description: string) => quantity(["speed"], "speed", POSITIVE, description);
 
 const waypoint = objectOf(
   "a waypoint",
@@ -58,9 +58,14 @@ const waypoint = objectOf(
     lat: coordinate("lat", "Latitude: degrees, north positive, or a text as 50°21.5'N."),
     lon: coordinate("lon", "Longitude: degrees, east positive, or a text as 4°09'03\"W."),
     path: path.optional(),
-    speed: speed("Speed of the leg that arrives here.").optional(),
+    speed: quantity(["speed"], "speed", POSITIVE, "Speed of the leg that arrives here.").optional(),
     height: quantity(["length"], "height", NOT_NEGATIVE, "Height above the surface here.").optional(),
-    stay: quantity(["time"], "stay", { above: 0, atMost: 1e9 }, "Time spent here before the next leg.").optional(),
+    stay: quantity(
+      ["time"],
+      "stay",
+      { above: 0, atMost: 1e9 },
+      "Time spent here before the next leg.",
+    ).optional(),
   },
   "A waypoint; path, speed and height belong to the leg that arrives at it.",
 );
@@ -80,59 +85,6 @@ const route = objectOf(
   },
   "A route.",
 );
-
-const pace = z
-  .discriminatedUnion(
-    "hold",
-    [
-      objectOf(
-        "a pace that holds the through-speed",
-        {
-          hold: oneOf("hold", ["through-speed"], "Hold the speed through the medium."),
-          speed: speed("Speed through the medium; the craft's own unless given.").optional(),
-        },
-        "Hold the speed through the medium.",
-      ),
-      objectOf(
-        "a pace that holds the ground-speed",
-        {
-          hold: oneOf("hold", ["ground-speed"], "Hold the speed over the ground."),
-          speed: speed("Speed over the ground; the craft's own speed unless given.").optional(),
-        },
-        "Hold the speed over the ground.",
-      ),
-      objectOf(
-        "a pace that holds the power",
-        {
-          hold: oneOf("hold", ["power"], "Hold the power, hotel load apart."),
-          power: quantity(["power"], "power", POSITIVE, "The power to hold, hotel load apart."),
-        },
-        "Hold the power.",
-      ),
-      objectOf(
-        "a pace of least energy",
-        {
-          hold: oneOf(
-            "hold",
-            ["least-energy"],
-            "At each point the speed of least energy for the ground made good.",
-          ),
-        },
-        "The speed of least energy over the ground.",
-      ),
-    ],
-    {
-      error: (issue) =>
-        issue.code === "invalid_union"
-          ? sentence(
-              "hold",
-              'takes one of "through-speed", "ground-speed", "power", "least-energy"',
-              (issue.input as { hold?: unknown } | undefined)?.hold,
-            )
-          : sentence("pace", "is an object with the key hold", issue.input),
-    },
-  )
-  .meta({ description: "The rule by which the craft chooses its speed." });
 
 const COLUMN_NAMES = [
   ...new Set([...columnNames("wind").values(), ...columnNames("current").values()].flat()),
@@ -185,7 +137,7 @@ export const planSchema = objectOf(
         error: (issue) => sentence("craft", "is an object: { file } or the craft itself", issue.input),
       })
       .meta({ description: "The craft: its file, or the craft itself." }),
-    pace: pace.optional(),
+    pace: paceSchema.optional(),
     reserve: quantity(
       ["share", "energy", "mass", "volume", "time"],
       "reserve",

@@ -8,7 +8,7 @@ import { wingPower } from "../craft/wing.ts";
 import { InputError } from "../errors.ts";
 import { quoted } from "../found.ts";
 import { type Quantity, toUnit } from "../units.ts";
-import { type CraftDocument, type CraftParts, craftSchema } from "./craft-schema.ts";
+import { type CraftParts, craftSchema } from "./craft-schema.ts";
 import { type Fault, firstIssue, placeOf } from "./first-issue.ts";
 import { parseJson } from "./json-text.ts";
 import { storeFigures } from "./store-figures.ts";
@@ -30,15 +30,12 @@ export function readCraft(text: string, file = ""): Craft {
 /**
  * Reads a craft that is already an object, as a page edits it or a plan holds it.
  *
+ * @param document a CraftDocument, or anything that claims to be one
  * @param file name of the file that it stands in, for messages
  * @param prefix path of the craft inside that file, as `["craft"]`
  * @throws InputError for the first thing wrong with it
  */
-export function readCraftDocument(
-  document: CraftDocument | unknown,
-  file = "",
-  prefix: readonly PropertyKey[] = [],
-): Craft {
+export function readCraftDocument(document: unknown, file = "", prefix: readonly PropertyKey[] = []): Craft {
   const result = craftSchema.safeParse(document);
   if (!result.success) throw firstIssue(result.error.issues, document, file, prefix);
   return craftOf(result.data, (path, text) => new InputError(text, placeOf(file, [...prefix, ...path])));

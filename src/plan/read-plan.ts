@@ -30,12 +30,11 @@ export async function readPlan(text: string, options: ReadPlanOptions): Promise<
 /**
  * Reads a plan that is already an object, as a page edits it.
  *
+ * @param document a PlanDocument, or anything that claims to be one; it stays as it is
+ *
  * Errors: as {@link readPlan}.
  */
-export async function readPlanDocument(
-  document: PlanDocument | unknown,
-  options: ReadPlanOptions,
-): Promise<Plan> {
+export async function readPlanDocument(document: unknown, options: ReadPlanOptions): Promise<Plan> {
   const { file = "", open } = options;
   const result = planSchema.safeParse(document);
   if (!result.success) throw firstIssue(result.error.issues, document, file, []);

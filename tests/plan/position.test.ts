@@ -3,6 +3,7 @@ import { describe, expect, test } from "vitest";
 import { InputError } from "../../src/errors.ts";
 import { parseCoordinate } from "../../src/plan/position.ts";
 import { formatCoordinate, formatPosition } from "../../src/plan/position-format.ts";
+import { parsePosition } from "../../src/plan/position-pair.ts";
 
 describe("latitude and longitude", () => {
   const northern = 50 + 21.5 / 60;
@@ -187,6 +188,60 @@ describe("positions written", () => {
         },
       ),
       { numRuns: 1000 },
+    );
+  });
+});
+
+describe("a position in one text", () => {
+  test.each([
+    "50°30'N 4°15'W",
+    "50°30'N, 4°15'W",
+    "50°30'N4°15'W",
+    "50 30 N / 4 15 W",
+    "N50°30' W4°15'",
+    "N50°30'W004°15'",
+    "n 50 30, w 4 15",
+    "50.5, -4.25",
+    "50.5;-4.25",
+    "50.5 -4.25",
+    "50.5N 4.25W",
+    "+50.5-004.25/",
+    "+50.5-004.25",
+    " 50°30'00\"N  004°15'00\"W ",
+  ])("%j is 50.5 north, 4.25 west", (text) => {
+    expect(parsePosition(text)).toEqual({ lat: 50.5, lon: -4.25 });
+  });
+
+  test.each([
+    ["", "a position takes latitude and longitude"],
+    ["50.5", "a position takes latitude and longitude"],
+    ["50°30'N", "a position takes latitude and longitude"],
+    ["50 30", "a position takes latitude and longitude"],
+    ["4°15'W 50°30'N", "a position takes latitude and longitude"],
+    ["+5030-00415/", "a position takes latitude and longitude"],
+    ["50.5, -4.25, 10", "a position takes latitude and longitude"],
+    ["50,5 4,25", "a position takes latitude and longitude"],
+    ["95.5, -4.25", "latitude is in -90..90"],
+    ["50°30'N 4°75'W", "longitude takes minutes below 60"],
+  ])("%j is refused: %s", (text, rule) => {
+    expect(() => parsePosition(text)).toThrow(InputError);
+    expect(() => parsePosition(text)).toThrow(rule);
+  });
+
+  test("what formatPosition writes is read back, to half a unit of the last decimal", () => {
+    fc.assert(
+      fc.property(
+        fc.double({ min: -90, max: 90, noNaN: true }),
+        fc.double({ min: -180, max: 180, noNaN: true }),
+        fc.constantFrom("minutes", "decimal"),
+        (lat, lon, style) => {
+          const back = parsePosition(formatPosition(lat, lon, style));
+          const half = style === "minutes" ? 8.34e-5 : 5.01e-6;
+          expect(Math.abs(back.lat - lat)).toBeLessThanOrEqual(half);
+          expect(Math.abs(back.lon - lon)).toBeLessThanOrEqual(half);
+        },
+      ),
+      { numRuns: 500 },
     );
   });
 });
