@@ -3,9 +3,14 @@
  */
 
 export { ADVISORY } from "./constants.ts";
-// Craft.
-export type { Craft, Limits, Pace, PowerModel, Reserve, Store, StoreUnit, Windage } from "./craft/craft.ts";
 export { InputError, type Place } from "./errors.ts";
+export { type Dimension, fromUnit, parseQuantity, symbolsOf, toUnit } from "./units.ts";
+
+// The main job: a plan's text in, an estimate out.
+export { checkPlan, estimatePlan, type PlanAnswer, type PlanRequest } from "./plan/estimate-plan.ts";
+export { type InspectRequest, inspectField } from "./plan/inspect-field.ts";
+
+// The estimate in two halves, for sweeps and for dragging.
 export type { Conditions } from "./estimate/conditions.ts";
 export {
   type EstimateAnswer,
@@ -19,6 +24,7 @@ export { estimateRoute, type RouteOutcome, type RouteRun, routeOutcome } from ".
 export { magneticCourse, magneticVariation } from "./estimate/magnetic.ts";
 export { fieldsInUse, type PreparedRoute, prepareRoute } from "./estimate/prepare.ts";
 export type {
+  ErrorBound,
   Estimate,
   FieldAlong,
   FieldSummary,
@@ -32,26 +38,92 @@ export type {
   RouteStatus,
   Severity,
   Spread,
+  Still,
   Totals,
 } from "./estimate/result.ts";
 export type { Route, Waypoint } from "./estimate/route.ts";
 
+// Reports.
+export { writeCsv } from "./report/csv.ts";
+export { writeGeoJson } from "./report/geojson.ts";
+export { writeGpx } from "./report/gpx.ts";
+export type { ReportInput, Units } from "./report/input.ts";
+export { writeInspection } from "./report/inspection-text.ts";
+export { writeJson } from "./report/json.ts";
+export { writeTable } from "./report/table.ts";
+
+// Plans and craft.
+export type { FieldReference, OpenFile, Plan } from "./plan/plan.ts";
+export { parseCoordinate } from "./plan/position.ts";
+export { formatPosition } from "./plan/position-format.ts";
+export { readCraft } from "./plan/read-craft.ts";
+export { readPlan, readPlanDocument } from "./plan/read-plan.ts";
+export { formatTime, parseTime } from "./plan/time.ts";
+export { serializeCraft, serializePlan } from "./plan/write-plan.ts";
+
+// Craft: the triangle and the power models.
+export { constantPower } from "./craft/constant.ts";
+export type {
+  Craft,
+  Limits,
+  Medium,
+  Pace,
+  PowerModel,
+  Reserve,
+  Store,
+  StoreUnit,
+  Windage,
+} from "./craft/craft.ts";
+export { cubePower } from "./craft/cube.ts";
+export { madeGood } from "./craft/made-good.ts";
+export { bladeProfilePower, glauertInducedSpeed, inducedPower, rotorPower } from "./craft/rotor.ts";
+export { tablePower } from "./craft/table.ts";
+export {
+  componentsFromCurrent,
+  componentsFromWind,
+  currentSet,
+  solveTriangle,
+  throughSpeedFor,
+  windFrom,
+} from "./craft/triangle.ts";
+export { windageResistance } from "./craft/windage.ts";
+export { wingPower } from "./craft/wing.ts";
+export {
+  bestGlideSpeed,
+  breguetEndurance,
+  breguetRange,
+  leastPowerSpeed,
+  maxLiftThreeHalvesToDrag,
+  maxLiftToDrag,
+} from "./craft/wing-performance.ts";
+
 // Fields.
 export { readGridFile } from "./field/csv.ts";
 export type { BeyondPolicy, Field, FieldRole, GapPolicy, OutsidePolicy, Tile } from "./field/field.ts";
+export { applyGapPolicy } from "./field/gaps.ts";
 export type { GridFile } from "./field/grid-file.ts";
 export { type FieldInspection, inspectGrid } from "./field/inspect.ts";
+export { sampleLattice } from "./field/lattice.ts";
 export { type FieldSource, mergeField } from "./field/merge.ts";
-export { sampleField } from "./field/sample.ts";
-export { cutAtAntimeridian, densify } from "./geodesy/drawn-line.ts";
+export { type FieldSample, sampleField } from "./field/sample.ts";
+export { pressureAltitude, type StandardAir, standardAir } from "./field/standard-atmosphere.ts";
+
+// Coarse land.
+export { type Land, type LandTopology, prepareLand } from "./coast/land.ts";
+export { type LandStretch, landCrossings } from "./coast/land-crossings.ts";
 
 // Geodesy.
+export { type DrawnPoint, cutAtAntimeridian, densify } from "./geodesy/drawn-line.ts";
+export {
+  type Ellipsoid,
+  ellipsoid,
+  meridianArc,
+  meridionalParts,
+  meridionalRadius,
+  transverseRadius,
+  WGS84,
+} from "./geodesy/ellipsoid.ts";
 export { geodesicDirect, geodesicInverse } from "./geodesy/geodesic.ts";
-export { makeTrack } from "./geodesy/make-track.ts";
+export { makeTrack, makeTrackOn } from "./geodesy/make-track.ts";
+export { rhumbDirect, rhumbInverse } from "./geodesy/rhumb.ts";
 export type { PathKind, Position, Track, TrackPoint } from "./geodesy/track.ts";
-// The main job.
-export { checkPlan, estimatePlan, type PlanAnswer, type PlanRequest } from "./plan/estimate-plan.ts";
-export { type InspectRequest, inspectField } from "./plan/inspect-field.ts";
-
-// Plans.
-export type { FieldReference, OpenFile, Plan } from "./plan/plan.ts";
