@@ -1,29 +1,24 @@
+import { SPELLINGS } from "../unit-table.ts";
+import { type Dimension, fromUnit, symbolsOf } from "../units.ts";
 import type { Quantity } from "./column-names.ts";
 
-/** Length of an international foot, m. */
-const FOOT = 0.3048;
-/** Length of a nautical mile, m. */
-const NAUTICAL_MILE = 1852;
-
-/** Symbol of a unit → its size in the unit used inside. The first is the one taken where a header has no bracket. */
+/** Symbol of a unit → its size in the unit used inside. */
 type Units = Readonly<Record<string, number>>;
 
 /** In m/s; `m s-1` is how CF writes it. */
-const SPEED: Units = {
-  "m/s": 1,
-  "km/h": 1 / 3.6,
-  kn: NAUTICAL_MILE / 3600,
-  "ft/min": FOOT / 60,
-  "m s-1": 1,
-};
+const SPEED: Units = { ...sizesOf("speed"), "m s-1": 1 };
 /** In m. */
-const LENGTH: Units = { m: 1, km: 1000, NM: NAUTICAL_MILE, ft: FOOT };
+const LENGTH: Units = sizesOf("length");
 /** In hPa. */
 const PRESSURE: Units = { hPa: 1, Pa: 0.01 };
 /** In degrees; the long forms are CF's. */
-const ANGLE: Units = { deg: 1, degree: 1, degrees: 1 };
+const ANGLE: Units = { ...sizesOf("angle"), degree: 1, degrees: 1 };
 const LATITUDE: Units = { ...ANGLE, degrees_north: 1, degree_north: 1 };
 const LONGITUDE: Units = { ...ANGLE, degrees_east: 1, degree_east: 1 };
+
+function sizesOf(dimension: Dimension): Units {
+  return Object.fromEntries(symbolsOf(dimension).map((symbol) => [symbol, fromUnit(1, symbol)]));
+}
 
 const UNITS: Readonly<Partial<Record<Quantity, Units>>> = {
   latitude: LATITUDE,
@@ -59,4 +54,13 @@ export function unitsText(quantity: Quantity): string {
   const symbols = Object.keys(UNITS[quantity] ?? {}).filter((symbol) => !/[ _]|^degree/.test(symbol));
   const last = symbols.pop() ?? "";
   return symbols.length === 0 ? last : `${symbols.join(", ")} or ${last}`;
+}
+
+/** The unit that another spelling stands for where the quantity takes it, as `kn` for `knots`. */
+export function likelyUnit(quantity: Quantity, unit: string): string | undefined {
+  const accepted = Object.keys(UNITS[quantity] ?? {});
+  const lower = unit.toLowerCase();
+  const byCase = accepted.find((symbol) => symbol.toLowerCase() === lower);
+  const spelt = Object.keys(SPELLINGS).find((spelling) => spelling.toLowerCase() === lower);
+  return byCase ?? accepted.find((symbol) => spelt !== undefined && symbol === SPELLINGS[spelt]);
 }

@@ -1,6 +1,7 @@
 import { InputError } from "../errors.ts";
+import { quoted } from "../found.ts";
 import { columnNames, isNameOfOnly, namesText, type Quantity, quantityOf } from "./column-names.ts";
-import { splitHeader, unitSize, unitsText } from "./column-units.ts";
+import { likelyUnit, splitHeader, unitSize, unitsText } from "./column-units.ts";
 import type { TableHead } from "./csv-table.ts";
 import type { FieldRole } from "./field.ts";
 import { nearestName } from "./nearest-name.ts";
@@ -94,7 +95,7 @@ class ColumnFinder {
     for (const header of this.headers) {
       const key = header.toLowerCase();
       if (header !== "" && seen.has(key))
-        throw this.fault(`each header stands once; found "${header}" twice`);
+        throw this.fault(`each header stands once; found ${quoted(header)} twice`);
       seen.add(key);
     }
   }
@@ -109,12 +110,13 @@ class ColumnFinder {
       if (index < 0) {
         const found = `found ${this.headersText()}`;
         throw this.fault(
-          `the column mapping of "${name}" names a header of the file; "${header}" is none: ${found}`,
+          `the column mapping of ${quoted(name)} names a header of the file; ${quoted(header)} is none: ${found}`,
         );
       }
-      if (result.has(index)) throw this.fault(`a column holds one quantity; "${header}" is mapped to two`);
+      if (result.has(index))
+        throw this.fault(`a column holds one quantity; ${quoted(header)} is mapped to two`);
       if (this.mapped.has(quantity))
-        throw this.fault(`a quantity is mapped once; found "${name}" mapped again`);
+        throw this.fault(`a quantity is mapped once; found ${quoted(name)} mapped again`);
       this.mapped.add(quantity);
       result.set(index, quantity);
     }
@@ -138,14 +140,16 @@ class ColumnFinder {
       if (quantity === undefined) continue;
       const earlier = found.get(quantity);
       if (earlier !== undefined) {
-        const both = `"${earlier.header}" and "${header}"`;
+        const both = `${quoted(earlier.header)} and ${quoted(header)}`;
         throw this.fault(`one column gives the ${quantity}; found ${both} (a column mapping settles which)`);
       }
       const size = unitSize(quantity, unit);
       if (size === undefined) {
         const accepted = unitsText(quantity);
         const rule = accepted === "" ? "takes no unit" : `has a unit of ${accepted}`;
-        throw this.fault(`the column "${header}" ${rule}; found [${unit}]`);
+        const likely = likelyUnit(quantity, unit ?? "");
+        const hint = likely === undefined ? "" : ` (did you mean ${likely}?)`;
+        throw this.fault(`the column ${quoted(header)} ${rule}; found ${quoted(unit ?? "")}${hint}`);
       }
       found.set(quantity, { index, header, unit: size });
     }
@@ -158,7 +162,7 @@ class ColumnFinder {
     if (components !== null && polar !== null) {
       const componentsMapped = this.isMapped("eastward", "northward");
       if (componentsMapped === this.isMapped("speed", "direction")) {
-        const headers = [...components, ...polar].map(({ header }) => `"${header}"`).join(", ");
+        const headers = [...components, ...polar].map(({ header }) => quoted(header)).join(", ");
         throw this.fault(
           `the ${this.role} is given as components or as speed and direction, not as both; found ${headers} (a column mapping settles which)`,
         );
@@ -197,7 +201,7 @@ class ColumnFinder {
     const [east, north, speed, direction] = quantities.map((quantity) => namesText(quantity, role));
     const columns = `columns for the ${role}: ${east} with ${north}, or ${speed} with ${direction}`;
     if (strangers.length === 0) return this.missing(columns, wanted);
-    const names = strangers.map((header) => `"${header}"`).join(", ");
+    const names = strangers.map((header) => quoted(header)).join(", ");
     return this.missing(`${columns}; ${names} is of a ${other}, while the file's role is ${role}`, []);
   }
 
@@ -206,7 +210,7 @@ class ColumnFinder {
     const unused = this.headers.map((header) => splitHeader(header).name);
     const guesses = unused.flatMap((name) => {
       const near = quantityOf(name, this.role) === undefined ? nearestName(name, names) : null;
-      return near === null ? [] : [`"${name}" is near to ${near}`];
+      return near === null ? [] : [`${quoted(name)} is near to ${near}`];
     });
     const guess = guesses.length === 0 ? "" : `; ${guesses.slice(0, 3).join(", ")}`;
     return this.fault(`the file has ${what}; found the headers ${this.headersText()}${guess}`);
@@ -216,11 +220,11 @@ class ColumnFinder {
     const names = [...columnNames(this.role).values()].flat();
     const near = nearestName(name, names);
     const hint = near === null ? "" : `; the nearest is ${near}`;
-    return this.fault(`a column mapping names one of ${names.join(", ")}; found "${name}"${hint}`);
+    return this.fault(`a column mapping names one of ${names.join(", ")}; found ${quoted(name)}${hint}`);
   }
 
   private headersText(): string {
-    const text = this.headers.map((header) => `"${header}"`).join(", ");
+    const text = this.headers.map((header) => quoted(header)).join(", ");
     return text.length <= 400 ? text : `${text.slice(0, 400)}…`;
   }
 

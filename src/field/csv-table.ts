@@ -80,7 +80,7 @@ export class CsvTable {
 
   private batch(rows: string[][], text: string, newline: string, cursor: number): RowBatch {
     const first = this.line;
-    const quoted = text.lastIndexOf('"', cursor) >= 0;
+    const quoted = text.includes('"');
     this.line += quoted ? occurrences(text.slice(0, cursor), newline) : rows.length;
     const lineOf = (row: number): number => {
       if (!quoted) return first + row;

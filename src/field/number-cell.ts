@@ -1,3 +1,5 @@
+import { quoted } from "../found.ts";
+
 /** A cell that breaks a rule: what the rule says and what was found. The reader adds file, line and column. */
 export class CellFault extends Error {}
 
@@ -46,15 +48,8 @@ function numberCellInFull(cell: string, decimalComma: boolean): number {
   if (trimmed === "" || /^nan$/i.test(trimmed)) return Number.NaN;
   const text = decimalComma ? trimmed.replace(",", ".") : trimmed;
   if (!/^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i.test(text))
-    throw new CellFault(`is a number; found "${shown(trimmed)}"`);
+    throw new CellFault(`is a number; found ${quoted(trimmed)}`);
   const value = Number(text);
-  if (!Number.isFinite(value)) throw new CellFault(`is finite; found "${shown(trimmed)}"`);
+  if (!Number.isFinite(value)) throw new CellFault(`is finite; found ${quoted(trimmed)}`);
   return value;
-}
-
-/** A cell's text as a message shows it: at most 40 characters, control characters as `?`. */
-export function shown(text: string): string {
-  // biome-ignore lint/suspicious/noControlCharactersInRegex: control characters are what it looks for
-  const printable = text.replace(/[\u0000-\u001f\u007f-\u009f]/g, "?");
-  return printable.length <= 40 ? printable : `${printable.slice(0, 40)}…`;
 }

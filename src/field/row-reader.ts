@@ -1,11 +1,12 @@
 import { InputError } from "../errors.ts";
+import { quoted } from "../found.ts";
+import { sinCosDegrees } from "../geodesy/angle.ts";
 import { AxisLearner } from "./axis-learner.ts";
 import type { Column, Columns } from "./columns.ts";
 import type { RowBatch, Separator } from "./csv-table.ts";
 import type { FieldRole } from "./field.ts";
 import type { FoundAxes } from "./grid-assembly.ts";
-import { CellFault, numberCell, shown } from "./number-cell.ts";
-import { sinCosDegrees } from "./polar-vector.ts";
+import { CellFault, numberCell } from "./number-cell.ts";
 import { pressureAltitude, STANDARD_PRESSURE_RANGE } from "./standard-atmosphere.ts";
 import { timeCell } from "./time-cell.ts";
 
@@ -86,10 +87,10 @@ export class RowReader {
     let u = this.number(row, first);
     let v = this.number(row, second);
     if (form === "polar") {
-      const [sine, cosine] = sinCosDegrees(this.direction(v, second));
+      const { sin, cos } = sinCosDegrees(this.direction(v, second));
       const toward = this.role === "wind" ? -notNegative(u, first) : notNegative(u, first);
-      u = toward * sine + 0; // + 0 turns -0 into 0
-      v = toward * cosine + 0;
+      u = toward * sin + 0; // + 0 turns -0 into 0
+      v = toward * cos + 0;
     }
     const gust = columns.gust === null ? 0 : this.gust(row, columns.gust);
     if (!(Math.abs(u) <= SPEED_LIMIT && Math.abs(v) <= SPEED_LIMIT)) {
@@ -132,7 +133,7 @@ export class RowReader {
     const member = cell.trim();
     this.member ??= member;
     if (member === this.member) return;
-    const found = `found "${shown(this.member)}" and "${shown(member)}" in the column "${column.header}"`;
+    const found = `found ${quoted(this.member)} and ${quoted(member)} in the column ${quoted(column.header)}`;
     throw new CellFault(`the file holds one member, more are not read yet; ${found}`);
   }
 
@@ -150,7 +151,7 @@ export class RowReader {
     return new AxisLearner((cell) =>
       inColumn(column, () => {
         const value = numberCell(cell, this.decimalComma) * column.unit;
-        if (!isWithin(value)) throw new CellFault(`${rule}; found "${shown(cell.trim())}"`);
+        if (!isWithin(value)) throw new CellFault(`${rule}; found ${quoted(cell.trim())}`);
         return value;
       }),
     );
@@ -180,5 +181,5 @@ function named(fault: unknown, column: Column): unknown {
 }
 
 function cellOf(column: Column): string {
-  return `a cell of "${column.header}"`;
+  return `a cell of ${quoted(column.header)}`;
 }

@@ -1,4 +1,5 @@
-import { CellFault, shown } from "./number-cell.ts";
+import { quoted } from "../found.ts";
+import { CellFault } from "./number-cell.ts";
 
 const ISO_8601 =
   /^(\d{4})-(\d\d)-(\d\d)[Tt ](\d\d):(\d\d)(?::(\d\d)(?:[.,](\d{1,9}))?)?\s?([Zz]|[+-]\d\d(?::?\d\d)?)?$/;
@@ -14,10 +15,10 @@ export function timeCell(cell: string): number {
   const text = cell.trim();
   const match = ISO_8601.exec(text) ?? ISO_8601_BASIC.exec(text);
   if (match === null) {
-    throw new CellFault(`is a date and time of ISO 8601, as 2027-05-04T06:00:00Z; found "${shown(text)}"`);
+    throw new CellFault(`is a date and time of ISO 8601, as 2027-05-04T06:00:00Z; found ${quoted(text)}`);
   }
   const zone = match[8];
-  if (zone === undefined) throw new CellFault(`has an explicit zone, as Z or +02:00; found "${shown(text)}"`);
+  if (zone === undefined) throw new CellFault(`has an explicit zone, as Z or +02:00; found ${quoted(text)}`);
   const [year, month, day, hour, minute, second] = match
     .slice(1, 7)
     .map((part) => Number(part ?? 0)) as number[];
@@ -26,7 +27,7 @@ export function timeCell(cell: string): number {
   date.setUTCFullYear(year as number, (month as number) - 1, day);
   const inCalendar = date.getUTCMonth() + 1 === month && date.getUTCDate() === day;
   const inDay = (hour as number) < 24 && (minute as number) < 60 && (second as number) < 60;
-  if (!inCalendar || !inDay) throw new CellFault(`is in the calendar; found "${shown(text)}"`);
+  if (!inCalendar || !inDay) throw new CellFault(`is in the calendar; found ${quoted(text)}`);
   date.setUTCHours(hour as number, minute, second, millisecond);
   return date.getTime() - zoneOffset(zone, text);
 }
@@ -36,6 +37,6 @@ function zoneOffset(zone: string, text: string): number {
   if (zone === "Z" || zone === "z") return 0;
   const hours = Number(zone.slice(1, 3));
   const minutes = Number(zone.slice(3).replace(":", "") || "0");
-  if (hours > 23 || minutes > 59) throw new CellFault(`has a zone within a day; found "${shown(text)}"`);
+  if (hours > 23 || minutes > 59) throw new CellFault(`has a zone within a day; found ${quoted(text)}`);
   return (zone.startsWith("-") ? -1 : 1) * (hours * 60 + minutes) * 60_000;
 }

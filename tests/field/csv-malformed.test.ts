@@ -149,16 +149,21 @@ describe("columns that are missing or at odds are told with what was looked for 
     [
       "an unknown unit",
       "lat,lon,u [mph],v\n",
-      'the column "u [mph]" has a unit of m/s, km/h, kn or ft/min; found [mph]',
+      'the column "u [mph]" has a unit of m/s, km/h, kn or ft/min; found "mph"',
     ],
     [
       "a unit of another kind",
       "lat,lon,height [hPa],u,v\n",
-      'the column "height [hPa]" has a unit of m, km, NM or ft; found [hPa]',
+      'the column "height [hPa]" has a unit of m, km, NM or ft; found "hPa"',
     ],
-    ["a unit of an angle", "lat [rad],lon,u,v\n", 'the column "lat [rad]" has a unit of deg; found [rad]'],
-    ["a unit from the prototype", "lat,lon,u [constructor],v\n", "found [constructor]"],
-    ["a unit of time", "time [h],lat,lon,u,v\n", 'the column "time [h]" takes no unit; found [h]'],
+    ["a unit of an angle", "lat [rad],lon,u,v\n", 'the column "lat [rad]" has a unit of deg; found "rad"'],
+    ["a unit from the prototype", "lat,lon,u [constructor],v\n", 'found "constructor"'],
+    [
+      "another spelling of a unit",
+      "lat,lon,u [knots],v\n",
+      `has a unit of m/s, km/h, kn or ft/min; found "knots" (did you mean kn?)`,
+    ],
+    ["a unit of time", "time [h],lat,lon,u,v\n", 'the column "time [h]" takes no unit; found "h"'],
     ["an empty unit", "lat,lon,u [],v\n", 'the column "u []" has a unit of'],
     [
       "a mapping from an unknown name",
@@ -232,8 +237,8 @@ describe("a cell that breaks its rule is told with its line, its column and what
     ["a point alone", `${HEAD}0,0,.,1\n`, 'found "."'],
     ["two points", `${HEAD}0,0,1.2.3,1\n`, 'found "1.2.3"'],
     ["two numbers", `${HEAD}0,0,1 2,1\n`, 'found "1 2"'],
-    ["control characters, shown as question marks", `${HEAD}0,0,\u0007\u0000,1\n`, 'found "??"'],
-    ["a long text, cut", `${HEAD}0,0,${"x".repeat(99)},1\n`, `found "${"x".repeat(40)}…"`],
+    ["control characters, shown escaped", `${HEAD}0,0,\u0007\u0000,1\n`, 'found "\\u0007\\u0000"'],
+    ["a long text, cut", `${HEAD}0,0,${"x".repeat(99)},1\n`, `found "${"x".repeat(59)}…"`],
     ["an empty latitude", `${HEAD},0,1,1\n`, 'a cell of "lat" is a latitude in -90..90; found ""'],
     ["no latitude", `${HEAD}NaN,0,1,1\n`, 'a cell of "lat" is a latitude in -90..90; found "NaN"'],
     [

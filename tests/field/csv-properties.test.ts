@@ -116,7 +116,7 @@ describe("a grid does not depend on how its file is written", () => {
 
   test("pieces and blocks cut at any byte give the same grid in a file of many blocks", async () => {
     const rows = Array.from(
-      { length: 30_000 },
+      { length: 20_000 },
       (_, row) => `${(row % 173) / 2},${Math.floor(row / 173)},${row % 13},"${row % 7}"`,
     );
     const file = ["lat,lon,u,v", ...rows].join("\n");
@@ -125,7 +125,7 @@ describe("a grid does not depend on how its file is written", () => {
       expect(await readText(file, { pieceBytes }), `pieces of ${pieceBytes} bytes`).toEqual(whole);
     }
     // A note of every length up to a row's moves every cut of a block through a row.
-    for (let shift = 0; shift < 24; shift++) {
+    for (let shift = 0; shift < 12; shift++) {
       const grid = await readText(`#${"x".repeat(shift)}\n${file}`);
       expect(nodesOf(grid), `shifted by ${shift} bytes`).toEqual(nodesOf(whole));
     }
