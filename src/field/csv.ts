@@ -26,6 +26,10 @@ export interface GridFileOptions {
  *
  * Errors (InputError with the file, and the line where there is one): text that is not UTF-8 or not a table, columns
  * missing or at odds, a cell that breaks its rule, a node given twice, rows that are not a grid, no rows at all.
+ *
+ * @example
+ * const open = async function* () { yield new TextEncoder().encode("lat,lon,u,v\n50,-5,3,4\n50,-4,5,6"); };
+ * [...(await readGridFile(open, { file: "wind.csv", role: "wind" })).lon] // → [-5, -4]
  */
 export async function readGridFile(
   open: () => AsyncIterable<Uint8Array>,

@@ -17,6 +17,13 @@ const STEPS: readonly (readonly [east: number, north: number])[] = stepsByDistan
  *
  * The grid's slices are taken over and changed in place (a copy would double the memory); the masks are new. A policy can
  * be applied again in place of another: filled nodes count as missing.
+ *
+ * @example
+ * const lon = Float64Array.of(-5, -4);
+ * const lat = Float64Array.of(50);
+ * const nodes = { lon, lat, height: null, times: null, slices: [Float64Array.of(3, 4, 0, 0)], gusts: null, masks: [Uint8Array.of(0, 2)] };
+ * const grid = { file: "wind.csv", role: "wind", ...nodes, global: false, ignoredColumns: [], notes: [], bytes: 0 };
+ * [...applyGapPolicy(grid, "nearest").slices[0]] // → [3, 4, 3, 4]
  */
 export function applyGapPolicy(grid: GridFile, policy: GapPolicy): GridFile {
   const plans = new Map<Uint8Array, FillPlan>();
@@ -38,7 +45,7 @@ interface FillPlan {
 }
 
 function planOf(mask: Uint8Array, grid: GridFile, policy: GapPolicy): FillPlan {
-  const targets = Int32Array.from(missingNodes(mask));
+  const targets = missingNodes(mask);
   const sources = new Int32Array(targets.length).fill(-1);
   const planned = new Uint8Array(mask.length);
   for (const [index, target] of targets.entries()) {
@@ -50,8 +57,11 @@ function planOf(mask: Uint8Array, grid: GridFile, policy: GapPolicy): FillPlan {
   return { mask: planned, targets, sources };
 }
 
-function* missingNodes(mask: Uint8Array): Generator<number> {
-  for (const [node, state] of mask.entries()) if (state !== NODE_GIVEN) yield node;
+function missingNodes(mask: Uint8Array): Int32Array {
+  const nodes = new Int32Array(mask.length);
+  let count = 0;
+  for (let node = 0; node < mask.length; node++) if (mask[node] !== NODE_GIVEN) nodes[count++] = node;
+  return nodes.slice(0, count);
 }
 
 /** The given node that a missing one takes its value from, or -1. */

@@ -50,7 +50,14 @@ export interface FieldInspection {
 /** Steps that differ by less than this share are one regular spacing: the digits of a printed axis. */
 const REGULAR = 1e-6;
 
-/** Tells what a file's grid holds. To be called before a gap policy fills the grid: filled nodes count as missing too. */
+/** Tells what a file's grid holds. To be called before a gap policy fills the grid: filled nodes count as missing too. *
+ * @example
+ * const lon = Float64Array.of(-5, -4);
+ * const lat = Float64Array.of(50);
+ * const nodes = { lon, lat, height: null, times: null, slices: [Float64Array.of(3, 4, 0, 0)], gusts: null, masks: [Uint8Array.of(0, 2)] };
+ * const grid = { file: "wind.csv", role: "wind", ...nodes, global: false, ignoredColumns: [], notes: [], bytes: 0 };
+ * inspectGrid(grid).speed // → { min: 5, max: 5 }
+ */
 export function inspectGrid(grid: GridFile): FieldInspection {
   const meridians = grid.global ? grid.lon.subarray(0, -1) : grid.lon;
   const { nodes, missing, ranges } = surveyNodes(grid, meridians.length);

@@ -23,6 +23,14 @@ export interface LatticeSample {
 /**
  * The field at every pair of a latitude and a longitude (degrees, any turn), at one height (m, `null` for the lowest level)
  * and one time (ms since 1970-01-01T00:00Z): the values of `sampleField`, at a fraction of its time.
+ *
+ * @example
+ * const lon = Float64Array.of(-5, -4);
+ * const lat = Float64Array.of(50, 51);
+ * const slices = [Float64Array.of(0, 0, 4, 0, 0, 0, 4, 0)];
+ * const tile = { files: [], lon, lat, height: null, times: null, slices, gusts: null, masks: [null], global: false, beyond: "stop" };
+ * const field = { role: "wind", tiles: [tile], outside: "stop" };
+ * [...sampleLattice(field, [50.5], [-4.75, -4.5, 355.75], null, 0).u] // → [1, 2, 3]
  */
 export function sampleLattice(
   field: Field,

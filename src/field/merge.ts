@@ -19,6 +19,13 @@ export interface FieldSource {
  * out. Every other file is a tile of its own. Nothing is copied: the grids' slices are taken over, with gaps filled in place.
  *
  * `beyond` of a joined tile is that of the file with its last time; `outside` is `zero` where any file says so.
+ *
+ * @example
+ * const lon = Float64Array.of(-5, -4);
+ * const lat = Float64Array.of(50);
+ * const nodes = { lon, lat, height: null, times: null, slices: [Float64Array.of(3, 4, 0, 0)], gusts: null, masks: [Uint8Array.of(0, 2)] };
+ * const grid = { file: "wind.csv", role: "wind", ...nodes, global: false, ignoredColumns: [], notes: [], bytes: 0 };
+ * mergeField("wind", [{ grid, gaps: "zero", beyond: "stop", outside: "stop" }]).tiles.length // → 1
  */
 export function mergeField(role: FieldRole, sources: readonly FieldSource[]): Field {
   const groups: FieldSource[][] = [];

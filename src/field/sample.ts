@@ -35,6 +35,14 @@ export interface NoSample {
  * @param time ms since 1970-01-01T00:00Z
  * @returns the value, or the reason why there is none; of tiles that overlap the earliest in the list that has the time, and
  * where none has it the earliest that holds beyond its last
+ *
+ * @example
+ * const lon = Float64Array.of(-5, -4);
+ * const lat = Float64Array.of(50, 51);
+ * const slices = [Float64Array.of(0, 0, 4, 0, 0, 0, 4, 0)];
+ * const tile = { files: [], lon, lat, height: null, times: null, slices, gusts: null, masks: [null], global: false, beyond: "stop" };
+ * const field = { role: "wind", tiles: [tile], outside: "stop" };
+ * sampleField(field, 50.5, -4.75, null, 0).u // → 1
  */
 export function sampleField(
   field: Field,

@@ -3,6 +3,7 @@ import { expect, test } from "vitest";
 import { mergeField } from "../../src/field/merge.ts";
 import { sampleField } from "../../src/field/sample.ts";
 import { makeGrid } from "../field/make-grid.ts";
+import { between, seeded } from "../seeded.ts";
 
 /** A Python that has SciPy; where there is none, the test fails and says what to install. */
 function pythonWithScipy(): string {
@@ -25,19 +26,10 @@ values = [np.array(component).reshape([len(axis) for axis in axes]) for componen
 json.dump([RegularGridInterpolator(axes, component)(points).tolist() for component in values], sys.stdout)
 `;
 
-/** Numbers in 0..1 that are the same in every run (Park & Miller, Comm. ACM 31(10), 1988: the minimal standard generator). */
-function minimalStandard(seed: number): () => number {
-  let state = seed;
-  return () => {
-    state = (state * 16807) % 2147483647;
-    return state / 2147483647;
-  };
-}
-
 test("4,000 samples of a random timed field on heights are SciPy's", () => {
-  const random = minimalStandard(20270504);
+  const random = seeded(20270504);
   const axis = (from: number, to: number, count: number) => {
-    const inner = Array.from({ length: count - 2 }, () => from + (to - from) * random());
+    const inner = Array.from({ length: count - 2 }, () => between(random, from, to));
     return [from, ...inner, to].sort((a, b) => a - b);
   };
   const times = axis(0, 86_400_000, 5);
@@ -47,14 +39,13 @@ test("4,000 samples of a random timed field on heights are SciPy's", () => {
   const wind = new Map<string, readonly [number, number]>();
   const at = (...place: number[]) => {
     const key = place.join();
-    const vector = wind.get(key) ?? ([40 * random() - 20, 40 * random() - 20] as const);
+    const vector = wind.get(key) ?? ([between(random, -20, 20), between(random, -20, 20)] as const);
     wind.set(key, vector);
     return vector;
   };
   const grid = makeGrid({ lon, lat, height, times, at });
   const field = mergeField("wind", [{ grid, gaps: "stop", beyond: "stop", outside: "stop" }]);
-  const within = (values: readonly number[]) =>
-    (values[0] as number) + ((values.at(-1) as number) - (values[0] as number)) * random();
+  const within = (values: readonly number[]) => between(random, values[0] as number, values.at(-1) as number);
   const points = Array.from(
     { length: 4000 },
     () => [times, height, lat, lon].map(within) as [number, number, number, number],
