@@ -1,10 +1,10 @@
 import { InputError } from "../errors.ts";
 import { quoted } from "../found.ts";
-import { columnNames, isNameOfOnly, namesText, type Quantity, quantityOf } from "./column-names.ts";
+import { type Quantity, quantityOf } from "./column-names.ts";
 import { likelyUnit, splitHeader, unitSize, unitsText } from "./column-units.ts";
 import type { TableHead } from "./csv-table.ts";
 import type { FieldRole } from "./field.ts";
-import { nearestName } from "./nearest-name.ts";
+import { headersText, missingColumnText, missingVectorText, unknownNameText } from "./missing-columns.ts";
 
 /** Where a quantity stands in a row, and the size of its unit in m/s, m, hPa or degrees. */
 export interface Column {
@@ -105,10 +105,10 @@ class ColumnFinder {
     const result = new Map<number, Quantity>();
     for (const [name, header] of Object.entries(mapping)) {
       const quantity = quantityOf(name, this.role);
-      if (quantity === undefined) throw this.unknownName(name);
+      if (quantity === undefined) throw this.fault(unknownNameText(name, this.role));
       const index = this.indexOfHeader(header);
       if (index < 0) {
-        const found = `found ${this.headersText()}`;
+        const found = `found ${headersText(this.headers)}`;
         throw this.fault(
           `the column mapping of ${quoted(name)} names a header of the file; ${quoted(header)} is none: ${found}`,
         );
@@ -171,7 +171,7 @@ class ColumnFinder {
     }
     if (components !== null) return { first: components[0], second: components[1], form: "components" };
     if (polar !== null) return { first: polar[0], second: polar[1], form: "polar" };
-    throw this.missingVector();
+    throw this.fault(missingVectorText(this.headers, this.role, new Set(this.found.keys())));
   }
 
   private pair(first: Quantity, second: Quantity): readonly [Column, Column] | null {
@@ -187,45 +187,7 @@ class ColumnFinder {
   private needed(quantity: Quantity): Column {
     const column = this.found.get(quantity);
     if (column !== undefined) return column;
-    throw this.missing(`a ${quantity} column (${namesText(quantity, this.role)})`, [quantity]);
-  }
-
-  private missingVector(): InputError {
-    const { role } = this;
-    const other = role === "wind" ? "current" : "wind";
-    const strangers = this.headers.filter((header) => isNameOfOnly(splitHeader(header).name, other));
-    const quantities: Quantity[] = ["eastward", "northward", "speed", "direction"];
-    const partial = quantities.filter((quantity) => this.found.has(quantity));
-    const wanted =
-      partial.length === 0 ? quantities : quantities.filter((quantity) => !this.found.has(quantity));
-    const [east, north, speed, direction] = quantities.map((quantity) => namesText(quantity, role));
-    const columns = `columns for the ${role}: ${east} with ${north}, or ${speed} with ${direction}`;
-    if (strangers.length === 0) return this.missing(columns, wanted);
-    const names = strangers.map((header) => quoted(header)).join(", ");
-    return this.missing(`${columns}; ${names} is of a ${other}, while the file's role is ${role}`, []);
-  }
-
-  private missing(what: string, quantities: readonly Quantity[]): InputError {
-    const names = quantities.flatMap((quantity) => columnNames(this.role).get(quantity) ?? []);
-    const unused = this.headers.map((header) => splitHeader(header).name);
-    const guesses = unused.flatMap((name) => {
-      const near = quantityOf(name, this.role) === undefined ? nearestName(name, names) : null;
-      return near === null ? [] : [`${quoted(name)} is near to ${near}`];
-    });
-    const guess = guesses.length === 0 ? "" : `; ${guesses.slice(0, 3).join(", ")}`;
-    return this.fault(`the file has ${what}; found the headers ${this.headersText()}${guess}`);
-  }
-
-  private unknownName(name: string): InputError {
-    const names = [...columnNames(this.role).values()].flat();
-    const near = nearestName(name, names);
-    const hint = near === null ? "" : `; the nearest is ${near}`;
-    return this.fault(`a column mapping names one of ${names.join(", ")}; found ${quoted(name)}${hint}`);
-  }
-
-  private headersText(): string {
-    const text = this.headers.map((header) => quoted(header)).join(", ");
-    return text.length <= 400 ? text : `${text.slice(0, 400)}…`;
+    throw this.fault(missingColumnText(this.headers, this.role, quantity));
   }
 
   private fault(sentence: string): InputError {

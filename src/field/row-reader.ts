@@ -5,7 +5,7 @@ import { AxisLearner } from "./axis-learner.ts";
 import type { Column, Columns } from "./columns.ts";
 import type { RowBatch, Separator } from "./csv-table.ts";
 import type { FieldRole } from "./field.ts";
-import type { FoundAxes } from "./grid-assembly.ts";
+import type { FoundAxes } from "./grid-layout.ts";
 import { CellFault, numberCell } from "./number-cell.ts";
 import { pressureAltitude, STANDARD_PRESSURE_RANGE } from "./standard-atmosphere.ts";
 import { timeCell } from "./time-cell.ts";

@@ -1,0 +1,68 @@
+import { quoted } from "../found.ts";
+import { columnNames, isNameOfOnly, namesText, type Quantity, quantityOf } from "./column-names.ts";
+import { splitHeader } from "./column-units.ts";
+import type { FieldRole } from "./field.ts";
+import { nearestName } from "./nearest-name.ts";
+
+/** Characters of a list of headers that a message shows. */
+const HEADERS_SHOWN = 400;
+
+/** What a message says where a file has no column for a quantity that every field needs. */
+export function missingColumnText(headers: readonly string[], role: FieldRole, quantity: Quantity): string {
+  return missingText(`a ${quantity} column (${namesText(quantity, role)})`, headers, role, [quantity]);
+}
+
+/** What a message says where a file has no whole vector; where its columns are those of the other role, that. */
+export function missingVectorText(
+  headers: readonly string[],
+  role: FieldRole,
+  found: ReadonlySet<Quantity>,
+): string {
+  const other = role === "wind" ? "current" : "wind";
+  const quantities: readonly Quantity[] = ["eastward", "northward", "speed", "direction"];
+  const [east, north, speed, direction] = quantities.map((quantity) => namesText(quantity, role));
+  const columns = `columns for the ${role}: ${east} with ${north}, or ${speed} with ${direction}`;
+  const strangers = headers.filter((header) => isNameOfOnly(splitHeader(header).name, other));
+  if (strangers.length > 0) {
+    const names = strangers.map(quoted).join(", ");
+    return missingText(
+      `${columns}; ${names} is of a ${other}, while the file's role is ${role}`,
+      headers,
+      role,
+      [],
+    );
+  }
+  const wanted = quantities.filter((quantity) => !found.has(quantity));
+  return missingText(columns, headers, role, wanted);
+}
+
+/** What a message says where a column mapping gives a header to a name that the role does not have. */
+export function unknownNameText(name: string, role: FieldRole): string {
+  const names = [...columnNames(role).values()].flat();
+  const near = nearestName(name, names);
+  const hint = near === null ? "" : `; the nearest is ${near}`;
+  return `a column mapping names one of ${names.join(", ")}; found ${quoted(name)}${hint}`;
+}
+
+/** A file's headers in quotes, cut where they are many. */
+export function headersText(headers: readonly string[]): string {
+  const text = headers.map(quoted).join(", ");
+  return text.length <= HEADERS_SHOWN ? text : `${text.slice(0, HEADERS_SHOWN)}…`;
+}
+
+/** Names, with what was looked for and what was found, the headers that are near to a name looked for. */
+function missingText(
+  what: string,
+  headers: readonly string[],
+  role: FieldRole,
+  wanted: readonly Quantity[],
+): string {
+  const names = wanted.flatMap((quantity) => columnNames(role).get(quantity) ?? []);
+  const guesses = headers.flatMap((header) => {
+    const { name } = splitHeader(header);
+    const near = quantityOf(name, role) === undefined ? nearestName(name, names) : null;
+    return near === null ? [] : [`${quoted(name)} is near to ${near}`];
+  });
+  const guess = guesses.length === 0 ? "" : `; ${guesses.slice(0, 3).join(", ")}`;
+  return `the file has ${what}; found the headers ${headersText(headers)}${guess}`;
+}
