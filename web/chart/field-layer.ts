@@ -13,7 +13,7 @@ const BARB_LENGTH = 26;
 const BARB_GAP = 68;
 const ARROW_GAP = 50;
 const ARROW_LENGTH = 30;
-const SHADE_CELL = 8;
+const SHADE_CELL = 6;
 
 /** What a field's symbols or shading need to know of the map's view. */
 export function latticeFor(map: L.Map, role: FieldRole, instant: number, shading: boolean): LatticeQuestion {
@@ -34,8 +34,8 @@ export function latticeFor(map: L.Map, role: FieldRole, instant: number, shading
     east: bounds.getEast(),
     stepLat,
     stepLon,
-    // Arrows stand between the barbs, so that neither is taken for a part of the other.
-    phase: role === "current" && !shading ? 0.5 : 0,
+    // Symbols stand off the graticule, and arrows off the barbs, so that none is taken for a part of another.
+    phase: role === "wind" ? 0.25 : 0.75,
   };
 }
 

@@ -10,7 +10,7 @@ export function continuousLongitudes(lons: readonly number[]): number[] {
 
 /** Whole turns, in degrees, that bring a line with its middle at `middle` nearest to a chart centred on `centre`. */
 export function turnsToward(middle: number, centre: number): number {
-  return 360 * Math.round((centre - middle) / 360);
+  return 360 * Math.round((centre - middle) / 360) + 0;
 }
 
 function withinHalfTurn(difference: number): number {

@@ -132,12 +132,22 @@ export class WaypointHandles {
       this.gestures.remove(index);
       this.focus(Math.max(index - 1, 0));
     } else if (event.key === "Insert" || event.key === "+") {
-      this.middles[index]?.fire("click");
+      this.insertOn(index);
     } else {
       return;
     }
     event.preventDefault();
     event.stopPropagation();
+  }
+
+  /** Inserts a waypoint at the middle of the leg that begins at a waypoint, and puts the keyboard on it. */
+  private insertOn(index: number): void {
+    const middle = this.middles[index]?.getLatLng();
+    if (middle === undefined) return;
+    const before = index + 1;
+    this.gestures.insert(before, middle.lat, middle.lng - this.shift);
+    this.moveTo(before, middle, true);
+    this.focus(before);
   }
 
   private showMiddles(middles: readonly LegMiddle[]): void {
@@ -159,9 +169,7 @@ export class WaypointHandles {
     const before = at + 1;
     marker.on("click", (event) => {
       L.DomEvent.stopPropagation(event);
-      const { lat, lng } = marker.getLatLng();
-      this.gestures.insert(before, lat, lng - this.shift);
-      this.gestures.move(before, lat, lng - this.shift, true);
+      this.insertOn(at);
     });
     marker.on("dragstart", () => {
       this.dragged = marker;

@@ -9,6 +9,16 @@ export function clockText(instant: number | string, zone: string, withDay: boole
   return withDay ? `${parts.weekday} ${Number(parts.day)} ${parts.month} ${clock}` : clock;
 }
 
+/** `06:00` on the day of another instant, else with its date: `7 Nov 06:00`. */
+export function clockSince(instant: string, since: string | null, zone: string): string {
+  const { day, month, hour, minute } = partsIn(new Date(instant), zone);
+  const start = since === null ? null : partsIn(new Date(since), zone);
+  const clock = `${hour}:${minute}`;
+  return start !== null && start.day === day && start.month === month
+    ? clock
+    : `${Number(day)} ${month} ${clock}`;
+}
+
 /** The zone's label beside a time: `UTC`, or its name and offset at that instant. */
 export function zoneText(instant: number | string, zone: string): string {
   if (zone === "UTC") return "UTC";

@@ -1,5 +1,5 @@
 import { ADVISORY, type RouteEstimate, type StoreUnit } from "../core.ts";
-import { clockText, durationText, signedDurationText, zoneText } from "../format/time-text.ts";
+import { clockSince, durationText, signedDurationText, zoneText } from "../format/time-text.ts";
 import { inUnit, signedInUnit, storeUnit } from "../format/units.ts";
 import { Swatch } from "../ribbon/Ribbon.tsx";
 import type { PageState } from "../state/page-state.ts";
@@ -112,7 +112,7 @@ function LedgerRow({ page, at, name, route, base, best, end }: LedgerRowProps) {
             <Cell label="Arrival" best={best.arrival.has(at)} difference={arrivalDifference(route, against)}>
               {route.arrival === null
                 ? "not reached"
-                : arrivalText(route.arrival, route.departure, view.zone.value)}
+                : clockSince(route.arrival, route.departure, view.zone.value)}
             </Cell>
             <Cell label="Time" best={false} difference={null}>
               {durationText(wholeTime(route))}
@@ -167,14 +167,6 @@ function BarLegend() {
       cross <span class="key gain" /> saved by a following flow <span class="key best" /> best
     </p>
   );
-}
-
-/** The clock alone where the route arrives on the day that it departs. */
-function arrivalText(arrival: string, departure: string, zone: string): string {
-  const full = clockText(arrival, zone, true);
-  const clock = clockText(arrival, zone, false);
-  const sameDay = full.slice(0, -clock.length) === clockText(departure, zone, true).slice(0, -clock.length);
-  return sameDay ? clock : full;
 }
 
 function wholeTime({ totals }: RouteEstimate): number | null {

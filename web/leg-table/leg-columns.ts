@@ -1,5 +1,5 @@
 import type { LegEstimate, RouteEstimate } from "../core.ts";
-import { clockText, durationText } from "../format/time-text.ts";
+import { clockSince, durationText } from "../format/time-text.ts";
 import { inUnit, number, type ShownUnit, shownUnit, signedInUnit, storeUnit } from "../format/units.ts";
 import type { UnitsPreset } from "../state/page-view.ts";
 
@@ -32,7 +32,7 @@ export function legColumns(route: RouteEstimate, preset: UnitsPreset, zone: stri
     plain("time", "Time", "", ({ time_s }) => durationText(time_s)),
     ...stayColumn(route),
     plain("eta", "ETA", zoneName, ({ arrival }) =>
-      arrival === null ? "–" : clockText(arrival, zone, false),
+      arrival === null ? "–" : clockSince(arrival, route.departure, zone),
     ),
     plain("use", "Use", amount.symbol, ({ use }) => inUnit(use, amount)),
     plain("left", "Left", amount.symbol, ({ remaining }) => inUnit(remaining, amount)),

@@ -40,7 +40,7 @@ export function Ribbon({ page, route, scale, width, limit }: RibbonProps) {
       onClick={() => store.select({ route, waypoint: null })}
     >
       <Swatch route={route} />
-      {document.name}
+      <span>{document.name}</span>
     </button>
   );
   if (!drawing?.profile || estimate === null) {
@@ -189,6 +189,7 @@ function Ticks({ page, route, drawing, axis, scale }: TicksProps) {
   const { profile } = drawing;
   const waypoints = page.store.plan.value.routes[route]?.waypoints ?? [];
   if (!profile) return null;
+  const end = scale(axis.at(-1) ?? 0);
   let named = Number.NEGATIVE_INFINITY;
   return (
     <g class="ribbon-ticks">
@@ -196,9 +197,9 @@ function Ticks({ page, route, drawing, axis, scale }: TicksProps) {
         const along = drawing.distance_m[sample] ?? 0;
         if (along > (profile.distance_m.at(-1) ?? 0)) return null;
         const x = scale(valueAtDistance(profile.distance_m, axis, along) ?? 0);
-        const hasRoom = x - named >= NAME_GAP;
-        if (hasRoom) named = x;
         const last = at === drawing.waypoints.length - 1;
+        const hasRoom = x - named >= NAME_GAP && (last || at === 0 || end - x >= NAME_GAP);
+        if (hasRoom) named = x;
         return (
           <g key={at} transform={`translate(${x} ${BAND_TOP})`}>
             <path d={`M0 -2V${BAND_HEIGHT + 3}`} />

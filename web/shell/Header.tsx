@@ -1,6 +1,7 @@
 import type { PageState } from "../state/page-state.ts";
 import { setPlanText } from "../state/plan-edits.ts";
 import { TextField } from "../waypoints/TextField.tsx";
+import { MoreMenu } from "./MoreMenu.tsx";
 import { openPlanFiles, savePlan } from "./plan-files.ts";
 import { Settings } from "./Settings.tsx";
 
@@ -54,9 +55,7 @@ export function Header({ page }: { readonly page: PageState }) {
         <button type="button" onClick={() => savePlan(page)}>
           Save
         </button>
-        <button type="button" onClick={() => window.print()}>
-          Print
-        </button>
+        <MoreMenu page={page} />
       </div>
       <Settings page={page} />
     </header>

@@ -1,0 +1,34 @@
+import { Blob as NodeBlob } from "node:buffer";
+import { readFileSync } from "node:fs";
+import { dirname, join } from "node:path";
+import { fileURLToPath } from "node:url";
+import type { PlanDocument } from "../../web/state/plan-document.ts";
+import { createEstimator, type Estimator } from "../../web/worker/estimator.ts";
+import { createFieldShelf, type FieldShelf } from "../../web/worker/field-shelf.ts";
+import { createFileShelf } from "../../web/worker/file-shelf.ts";
+import { createLandShelf } from "../../web/worker/land-shelf.ts";
+
+/** The worker's parts without a worker, with a demo's files in it. */
+export interface DemoEngine {
+  readonly plan: PlanDocument;
+  readonly estimator: Estimator;
+  readonly fields: FieldShelf;
+}
+
+export function demoEngine(name: "islands" | "survey" | "ocean"): DemoEngine {
+  const plan: PlanDocument = JSON.parse(readFileSync(join(demos, `${name}.plan.json`), "utf8"));
+  const files = createFileShelf();
+  const { craft, fields: references = [] } = plan;
+  if ("file" in craft && typeof craft.file === "string") files.keep(craft.file, demoFile(craft.file));
+  for (const { file } of references) files.keep(file, demoFile(file));
+  const fields = createFieldShelf(files);
+  const land = createLandShelf(() => Promise.reject(new Error("no land in this test")));
+  return { plan, fields, estimator: createEstimator(files, fields, land) };
+}
+
+const demos = join(dirname(fileURLToPath(import.meta.url)), "../../data/demo");
+
+/** Node's own Blob, since a stand-in for a browser may bring one without streams. */
+function demoFile(name: string): Blob {
+  return new NodeBlob([readFileSync(join(demos, name))]) as unknown as Blob;
+}

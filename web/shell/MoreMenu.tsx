@@ -1,0 +1,41 @@
+import type { PageState } from "../state/page-state.ts";
+import type { ReportFormat } from "../worker/protocol.ts";
+import { DEMOS, openDemo } from "./demo.ts";
+import { copyLegTable, exportRoute } from "./exports.ts";
+import { Menu } from "./Menu.tsx";
+
+const FORMATS: readonly (readonly [ReportFormat, string])[] = [
+  ["csv", "CSV"],
+  ["geojson", "GeoJSON"],
+  ["gpx", "GPX"],
+  ["json", "Estimate (JSON)"],
+];
+
+/** What is done now and then: exports, print, demos. */
+export function MoreMenu({ page }: { readonly page: PageState }) {
+  const { store, answers } = page;
+  const route = store.plan.value.routes[store.selection.value.route];
+  const ready = answers.answer.value.routes[store.selection.value.route] != null;
+  return (
+    <Menu name="More">
+      <h3>Leg table{route === undefined ? "" : ` of ${route.name}`}</h3>
+      <button type="button" disabled={!ready} onClick={() => void copyLegTable(page)}>
+        Copy as text
+      </button>
+      {FORMATS.map(([format, name]) => (
+        <button key={format} type="button" disabled={!ready} onClick={() => void exportRoute(page, format)}>
+          Export {name}
+        </button>
+      ))}
+      <button type="button" onClick={() => window.print()}>
+        Print
+      </button>
+      <h3>Demos, all invented</h3>
+      {DEMOS.map(({ name, title }) => (
+        <button key={name} type="button" onClick={() => void openDemo(page, name)}>
+          {title}
+        </button>
+      ))}
+    </Menu>
+  );
+}
