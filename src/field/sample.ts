@@ -6,7 +6,7 @@ import { WeightedNodes } from "./weighted-nodes.ts";
 export type SampleEdge = "gap-filled" | "held-beyond" | "zero-outside" | "height-outside-field";
 
 /** Why a field has no value somewhere, by the name of its finding. */
-export type NoSampleReason = "outside-area" | "outside-time" | "gap";
+type NoSampleReason = "outside-area" | "outside-time" | "gap";
 
 export interface FieldSample {
   readonly none: null;
@@ -64,7 +64,7 @@ export function sampleField(
  * has every time), or else the first whose area has the place and that holds beyond its last time; or the reason why there
  * is none.
  */
-export function tileAt(
+function tileAt(
   field: Field,
   lat: number,
   lon: number,
