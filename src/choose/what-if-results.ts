@@ -1,0 +1,98 @@
+import type { Conditions } from "../estimate/conditions.ts";
+import { routeOutcome } from "../estimate/estimate-route.ts";
+import { routeFinding, statusOf } from "../estimate/findings.ts";
+import type { PreparedRoute } from "../estimate/prepare.ts";
+import type { Finding, Reached, RouteEstimate, RouteStatus } from "../estimate/result.ts";
+import { underWhatIf, type WhatIf, whatIfFields } from "./what-if.ts";
+import { cellOf, type WindowCell } from "./window-cell.ts";
+
+/** What a route comes to under a what-if: a true estimate, with the figures of a window's cell. */
+export interface WhatIfResult extends Omit<WindowCell, "route" | "speed_m_s"> {
+  readonly name: string;
+  /** How far it comes, where it stops on the way. */
+  readonly reached: Reached | null;
+}
+
+/**
+ * Estimates a prepared route under each what-if.
+ *
+ * @param prepared every route that the answer is about, so that changed fields serve them all
+ * @param conditions one per route
+ * @returns per route, in the order of the what-ifs
+ * @throws InputError for a what-if that the pace or the craft does not allow
+ */
+export function whatIfResults(
+  prepared: readonly PreparedRoute[],
+  conditions: readonly Conditions[],
+  whatIfs: readonly WhatIf[],
+): WhatIfResult[][] {
+  const results: WhatIfResult[][] = prepared.map(() => []);
+  for (const whatIf of whatIfs) {
+    const fields = whatIfFields(whatIf, conditions[0]?.fields ?? [], prepared);
+    for (const [index, route] of prepared.entries())
+      results[index]?.push(whatIfResult(whatIf, route, conditions[index] as Conditions, fields));
+  }
+  return results;
+}
+
+function whatIfResult(
+  whatIf: WhatIf,
+  route: PreparedRoute,
+  base: Conditions,
+  fields: Conditions["fields"],
+): WhatIfResult {
+  const { prepared, conditions } = underWhatIf(whatIf, route, base, fields);
+  const outcome = routeOutcome(prepared, conditions);
+  const { route: _, speed_m_s: __, ...figures } = cellOf(prepared, conditions.departure, null, outcome);
+  return { name: whatIf.name, ...figures, reached: outcome.reached };
+}
+
+const RANK: Readonly<Record<RouteStatus, number>> = { clear: 0, caution: 1, stop: 2 };
+
+/** A variant of a route, for {@link withWorst}. */
+export interface Variant {
+  /** As a finding begins: `what if wind × 1.2`. */
+  readonly label: string;
+  readonly status: RouteStatus;
+  readonly remaining: number | null;
+  readonly worst: WindowCell["worst"];
+}
+
+/** Variants of a route under its what-ifs. */
+export function whatIfVariants(results: readonly WhatIfResult[]): Variant[] {
+  return results.map(({ name, status, remaining, worst }) => ({
+    label: `what if ${name}`,
+    status,
+    remaining,
+    worst,
+  }));
+}
+
+/**
+ * A route whose status is decided by the worst of its variants: where one is worse than the route itself, a finding of the
+ * variant's own code, which says which variant it is, and how many others are as bad.
+ */
+export function withWorst<Route extends RouteEstimate>(route: Route, variants: readonly Variant[]): Route {
+  const finding = worstVariant(route, variants);
+  if (finding === null) return route;
+  const findings = [finding, ...route.findings];
+  return { ...route, status: statusOf(findings), findings };
+}
+
+function worstVariant(route: RouteEstimate, variants: readonly Variant[]): Finding | null {
+  const worse = variants.filter(({ status }) => RANK[status] > RANK[route.status]);
+  const status = worse.reduce<RouteStatus>(
+    (so, each) => (RANK[each.status] > RANK[so] ? each.status : so),
+    "clear",
+  );
+  const worst = worse.filter((each) => each.status === status);
+  // Of equals the one that does not arrive, or else arrives with the least.
+  const left = ({ remaining }: Variant) => remaining ?? Number.NEGATIVE_INFINITY;
+  const first = worst.reduce<Variant | null>(
+    (so, each) => (so === null || left(each) < left(so) ? each : so),
+    null,
+  );
+  if (first === null || first.worst === null) return null;
+  const others = worst.length === 1 ? "" : ` (and ${worst.length - 1} more)`;
+  return routeFinding(first.worst.code, `${first.label}${others}: ${first.worst.message}`);
+}
