@@ -16,6 +16,8 @@ export interface EstimateInput {
   readonly departure: number;
   readonly craft: Craft;
   readonly pace: Pace;
+  /** One per route, in place of `pace`. */
+  readonly paces?: readonly Pace[];
   readonly reserve: Reserve | null;
   /** All fields of the plan; those that do not act on the craft are named in a note. */
   readonly fields: readonly Field[];
@@ -50,11 +52,12 @@ export function prepareRoutes(input: EstimateInput): PreparedRoute[] {
 /** The second half for all routes. */
 export function estimatePrepared(prepared: readonly PreparedRoute[], input: EstimateInput): EstimateAnswer {
   const fields = fieldsInUse(input.craft, input.fields);
-  const { departure, craft, pace, reserve } = input;
+  const { departure, craft, reserve } = input;
   const notes = fieldNotes(input, fields);
-  const runs = prepared.map((route) =>
-    withNotes(estimateRoute(route, { departure, craft, pace, reserve, fields }), notes),
-  );
+  const runs = prepared.map((route, index) => {
+    const pace = input.paces?.[index] ?? input.pace;
+    return withNotes(estimateRoute(route, { departure, craft, pace, reserve, fields }), notes);
+  });
   return {
     estimate: {
       format: "legwork-estimate/1",

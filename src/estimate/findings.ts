@@ -16,6 +16,7 @@ const SEVERITIES: Readonly<Record<FindingCode, Severity>> = {
   "reserve-broken": "stop",
   "wind-limit": "stop",
   "gust-limit": "stop",
+  "arrival-missed": "stop",
   "gap-filled": "caution",
   "held-beyond": "caution",
   "zero-outside": "caution",
@@ -28,6 +29,7 @@ const SEVERITIES: Readonly<Record<FindingCode, Severity>> = {
   "field-unused": "note",
   "no-field": "note",
   "no-variation": "note",
+  "pace-found": "note",
 };
 
 /** A leg with its number, as findings speak of it. */

@@ -21,6 +21,7 @@ export type FindingCode =
   | "reserve-broken"
   | "wind-limit"
   | "gust-limit"
+  | "arrival-missed"
   | "gap-filled"
   | "held-beyond"
   | "zero-outside"
@@ -32,7 +33,8 @@ export type FindingCode =
   | "near-pole"
   | "field-unused"
   | "no-field"
-  | "no-variation";
+  | "no-variation"
+  | "pace-found";
 
 /** Something that the estimate wants read: where on the route, and by how much. `leg` is `null` for the whole route. */
 export interface Finding {
@@ -138,6 +140,30 @@ export interface Reached {
   readonly use: number;
 }
 
+/** A constant through-speed that arrives when it should. */
+export interface ArrivalSolution {
+  readonly speed_m_s: number;
+  readonly arrival: string;
+  readonly use: number;
+  readonly remaining: number;
+  readonly status: RouteStatus;
+}
+
+/** The through-speeds at which a route arrives when the pace asks for it. */
+export interface ArrivalAnswer {
+  /** ISO 8601; `null` where arriving early is no fault. Both are equal where one time is asked for. */
+  readonly notBefore: string | null;
+  readonly notAfter: string;
+  /** Ascending in speed. */
+  readonly solutions: readonly ArrivalSolution[];
+  /** Index of the cheapest solution; `null` where there is none. */
+  readonly chosen: number | null;
+  /** Where there is none: the achievable arrival nearest to those asked for; `null` where no speed completes the route. */
+  readonly nearest: ArrivalSolution | null;
+  /** Where there is none: why. */
+  readonly reason: string | null;
+}
+
 export interface RouteEstimate {
   readonly name: string;
   readonly status: RouteStatus;
@@ -148,6 +174,8 @@ export interface RouteEstimate {
   /** The reserve in store units; 0 where the plan names none; `null` where it is a time at a rate that was not reached. */
   readonly reserve: number | null;
   readonly reached?: Reached;
+  /** Where the pace asks for an arrival. */
+  readonly arrive?: ArrivalAnswer;
   readonly totals: Totals;
   readonly legs: readonly LegEstimate[];
   readonly findings: readonly Finding[];

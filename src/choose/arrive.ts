@@ -1,0 +1,151 @@
+import { InputError } from "../errors.ts";
+import { durationText, momentText, speedText } from "../estimate/finding-text.ts";
+import { isoTime } from "../estimate/leg-result.ts";
+import type { PreparedRoute } from "../estimate/prepare.ts";
+import type { ArrivalAnswer, ArrivalSolution } from "../estimate/result.ts";
+import { minimaOf, rootsOf, type Sample, scan } from "./line-search.ts";
+import { evenlyInTime } from "./speed-range.ts";
+import { type PacelessConditions, SpeedTrials } from "./speed-trials.ts";
+import { worstFinding } from "./window-cell.ts";
+
+/** When to arrive, ms since 1970-01-01T00:00Z: at one time where both are equal, else between them; `null`: not too late is enough. */
+export interface ArrivalWindow {
+  readonly notBefore: number | null;
+  readonly notAfter: number;
+}
+
+/** How near to the time asked a root is found, s. */
+const ACCURACY = 1e-6;
+/** By how much an end of the arrival window may be missed and still count as met, s. */
+const SLACK = 1e-3;
+
+/**
+ * The constant through-speeds within the craft's range at which a route arrives when it should: for one time every speed that
+ * does, for a window of times every speed there of locally least use. The one of least use among those that are not a `stop`
+ * is chosen, else that of least use. Legs that name their own speed keep it.
+ *
+ * Search: 64 steps of the range, evenly spaced in passage time, with the edges between speeds that complete the route and speeds
+ * that do not; roots by bracketing to a microsecond. Since dx/dt = g(x, t; V) rises with V at every place and time, a
+ * faster craft that completes the route is ahead all along it, and one arrival time has at most one speed; the scan does not rest on that.
+ *
+ * @throws InputError where the craft's speeds have no bound, or as `estimateRoute` does
+ */
+export function solveArrival(
+  prepared: PreparedRoute,
+  conditions: PacelessConditions,
+  wanted: ArrivalWindow,
+): ArrivalAnswer {
+  checkArrival(wanted);
+  const trials = new SpeedTrials(prepared, conditions);
+  const target = (time: number) => (time - conditions.departure) / 1000;
+  const latest = target(wanted.notAfter);
+  const earliest = wanted.notBefore === null ? Number.NEGATIVE_INFINITY : target(wanted.notBefore);
+  const samples = scan(trials.passage, evenlyInTime(trials.range));
+  const speeds =
+    earliest === latest
+      ? speedsAt(trials, samples, latest)
+      : cheapestBetween(trials, samples, earliest, latest);
+  const solutions = speeds.map((speed) => solutionAt(trials, speed, conditions.departure));
+  const chosen = cheapest(solutions);
+  const asked = {
+    notBefore: wanted.notBefore === null ? null : isoTime(wanted.notBefore),
+    notAfter: isoTime(wanted.notAfter),
+  };
+  if (chosen !== null) return { ...asked, solutions, chosen, nearest: null, reason: null };
+  const missed = nearestTo(prepared, trials, samples, earliest, latest, conditions.departure);
+  return { ...asked, solutions, chosen, ...missed };
+}
+
+/** @throws InputError where the window ends before it begins */
+export function checkArrival({ notBefore, notAfter }: ArrivalWindow): void {
+  if (notBefore !== null && !(notBefore <= notAfter))
+    throw new InputError(
+      `an arrival's notBefore is not after its notAfter; found ${isoTime(notBefore)} and ${isoTime(notAfter)}`,
+    );
+}
+
+function speedsAt({ passage }: SpeedTrials, samples: readonly Sample[], target: number): number[] {
+  const off = (value: number | null) => (value === null ? null : value - target);
+  return rootsOf(
+    (speed) => off(passage(speed)),
+    samples.map(({ x, value }) => ({ x, value: off(value) })),
+    ACCURACY,
+  );
+}
+
+function cheapestBetween(
+  trials: SpeedTrials,
+  samples: readonly Sample[],
+  earliest: number,
+  latest: number,
+): number[] {
+  const ends = [earliest, latest].flatMap((target) =>
+    Number.isFinite(target) ? speedsAt(trials, samples, target) : [],
+  );
+  const inside = (speed: number): number | null => {
+    const passage = trials.passage(speed);
+    const isInside = passage !== null && passage >= earliest - SLACK && passage <= latest + SLACK;
+    return isInside ? trials.use(speed) : null;
+  };
+  const places = [...new Set([...samples.map(({ x }) => x), ...ends])].sort((a, b) => a - b);
+  const uses = places.map((x) => ({ x, value: inside(x) }));
+  return minimaOf(inside, uses);
+}
+
+function solutionAt(trials: SpeedTrials, speed: number, departure: number): ArrivalSolution {
+  const passage = trials.passage(speed);
+  const { use, remaining, status } = trials.at(speed);
+  if (passage === null || use === null || remaining === null) throw new Error("a solution does not arrive");
+  return { speed_m_s: speed, arrival: isoTime(departure + 1000 * passage), use, remaining, status };
+}
+
+/** Index of the solution of least use among those that are not a stop, else of least use; `null` where there is none. */
+function cheapest(solutions: readonly ArrivalSolution[]): number | null {
+  const isStop = ({ status }: ArrivalSolution) => Number(status === "stop");
+  const order = solutions.map((solution, index) => ({ solution, index }));
+  order.sort((a, b) => isStop(a.solution) - isStop(b.solution) || a.solution.use - b.solution.use);
+  return order[0]?.index ?? null;
+}
+
+type Missed = Pick<ArrivalAnswer, "nearest" | "reason">;
+
+/** The achievable arrival nearest to those asked for, and why none of them is. */
+function nearestTo(
+  { legs }: PreparedRoute,
+  trials: SpeedTrials,
+  samples: readonly Sample[],
+  earliest: number,
+  latest: number,
+  departure: number,
+): Missed {
+  const { min, max } = trials.range;
+  const whole = `${speedText(min)} to ${speedText(max)}`;
+  const missBy = (passage: number) => Math.max(earliest - passage, passage - latest);
+  const complete = samples.filter((sample): sample is { x: number; value: number } => sample.value !== null);
+  const best = complete.reduce<{ x: number; value: number } | null>(
+    (so, each) => (so === null || missBy(each.value) < missBy(so.value) ? each : so),
+    null,
+  );
+  const whyNot = (speed: number) => worstFinding(trials.at(speed).findings)?.message ?? "";
+  if (best === null)
+    return {
+      nearest: null,
+      reason: `no speed of the craft's range, ${whole}, completes the route; at the highest, ${whyNot(max)}`,
+    };
+  const nearest = solutionAt(trials, best.x, departure);
+  const late = best.value > latest;
+  const by = `${durationText(missBy(best.value))} too ${late ? "late" : "early"}`;
+  const arrives = `arrives ${momentText(Date.parse(nearest.arrival))}, ${by}`;
+  if (legs.every(({ to }) => to.speed_m_s !== null))
+    return { nearest, reason: `every leg names its own speed, and the route ${arrives}` };
+  const beyond = samples.filter(({ x, value }) => value === null && (late ? x > best.x : x < best.x));
+  const next = beyond[late ? 0 : beyond.length - 1];
+  if (next === undefined) {
+    const end = late ? "the highest" : "the lowest";
+    return { nearest, reason: `${end} speed of the craft's range, ${speedText(best.x)}, ${arrives}` };
+  }
+  return {
+    nearest,
+    reason: `the nearest, at ${speedText(best.x)}, ${arrives}; ${late ? "above" : "below"} that speed the route is not completed: ${whyNot(next.x)}`,
+  };
+}

@@ -1,0 +1,44 @@
+import { type EstimateAnswer, type EstimateInput, estimatePrepared } from "../estimate/estimate.ts";
+import { routeFinding, statusOf } from "../estimate/findings.ts";
+import { fieldsInUse, type PreparedRoute } from "../estimate/prepare.ts";
+import type { ArrivalAnswer, RouteEstimate } from "../estimate/result.ts";
+import { arrivalSpeed, foundText, missedText } from "./arrival-answer.ts";
+import { type ArrivalWindow, solveArrival } from "./arrive.ts";
+import { speedRange } from "./speed-range.ts";
+
+/**
+ * Estimates every route at the cheapest constant through-speed that arrives when it should, each at its own, and says so in a
+ * note and under `arrive`. A route without such a speed is estimated at that of the nearest arrival (at the highest, where
+ * none completes it) and is a `stop`.
+ *
+ * @param prepared by `prepareRoutes`, from the same input
+ * @param input its pace is not used
+ * @throws InputError where the craft's speeds have no bound, the wanted window ends before it begins, or as `estimate` does
+ */
+export function estimateArriving(
+  prepared: readonly PreparedRoute[],
+  input: EstimateInput,
+  wanted: ArrivalWindow,
+): EstimateAnswer {
+  const { departure, craft, reserve } = input;
+  const conditions = { departure, craft, reserve, fields: fieldsInUse(craft, input.fields) };
+  const answers = prepared.map((route) => solveArrival(route, conditions, wanted));
+  const { max } = speedRange(craft);
+  const paces = answers.map(
+    (answer) => ({ hold: "through-speed", speed_m_s: arrivalSpeed(answer) ?? max }) as const,
+  );
+  const { estimate, profiles } = estimatePrepared(prepared, { ...input, paces });
+  const routes = estimate.routes.map((route, index) =>
+    withArrival(route, answers[index] as ArrivalAnswer, departure),
+  );
+  return { estimate: { ...estimate, routes }, profiles };
+}
+
+function withArrival(route: RouteEstimate, arrive: ArrivalAnswer, departure: number): RouteEstimate {
+  const finding =
+    arrive.chosen === null
+      ? routeFinding("arrival-missed", missedText(arrive))
+      : routeFinding("pace-found", foundText(arrive, departure));
+  const findings = [finding, ...route.findings];
+  return { ...route, status: statusOf(findings), arrive, findings };
+}

@@ -1,0 +1,115 @@
+import type { Pace } from "../craft/craft.ts";
+import { InputError } from "../errors.ts";
+import type { Conditions } from "../estimate/conditions.ts";
+import { type RouteOutcome, routeOutcome } from "../estimate/estimate-route.ts";
+import { isoTime } from "../estimate/leg-result.ts";
+import type { PreparedRoute } from "../estimate/prepare.ts";
+import type { Finding, FindingCode, RouteStatus } from "../estimate/result.ts";
+
+/** One route at one departure and speed: the figures of a lone estimate, bit for bit. */
+export interface WindowCell {
+  readonly route: string;
+  /** ISO 8601, UTC. */
+  readonly departure: string;
+  /** The speed tried in place of the pace's, m/s; `null` where the plan's own pace holds. */
+  readonly speed_m_s: number | null;
+  /** At the last waypoint; `null` where the route stops on the way, and so are the figures below. */
+  readonly arrival: string | null;
+  /** Under way, s. */
+  readonly time_s: number | null;
+  /** From departure to arrival, s, stays on the way included. */
+  readonly passage_s: number | null;
+  /** In store units, as what follows. */
+  readonly use: number | null;
+  readonly remaining: number | null;
+  readonly reserve: number | null;
+  readonly status: RouteStatus;
+  /** The gravest finding, see {@link worstFinding}; `null` where there are notes at most. */
+  readonly worst: CellFinding | null;
+}
+
+/** A finding as a cell holds it. */
+export type CellFinding = Pick<Finding, "code" | "severity" | "leg" | "at_m" | "message">;
+
+/** What ends a route on the way comes first, then what breaks the store, then the limits. */
+const GRAVITY: readonly FindingCode[] = [
+  "cannot-hold-track",
+  "outside-area",
+  "outside-time",
+  "gap",
+  "outside-power-table",
+  "store-empty",
+  "reserve-broken",
+];
+
+/** The gravest of a route's findings, the first along the route of equals; `null` where there are notes at most. */
+export function worstFinding(findings: readonly Finding[]): CellFinding | null {
+  const grave = findings.filter(({ severity }) => severity !== "note");
+  const rank = ({ code, severity }: Finding) => {
+    const place = GRAVITY.indexOf(code);
+    return severity === "caution" ? GRAVITY.length + 1 : place < 0 ? GRAVITY.length : place;
+  };
+  const worst = grave.reduce<Finding | null>(
+    (so, each) => (so === null || rank(each) < rank(so) ? each : so),
+    null,
+  );
+  if (worst === null) return null;
+  const { code, severity, leg, at_m, message } = worst;
+  return { code, severity, leg, at_m, message };
+}
+
+/**
+ * Estimates a prepared route at one departure, and at one speed in place of its pace's.
+ *
+ * @param departure ms since 1970-01-01T00:00Z
+ * @param speed m/s, through the medium or over the ground as the pace holds it; `null` for the pace as it is. A leg that
+ *   names its own speed keeps it.
+ * @throws InputError where a speed is given and the pace holds none, or as `estimateRoute` does
+ */
+export function windowCell(
+  prepared: PreparedRoute,
+  conditions: Conditions,
+  departure: number,
+  speed: number | null,
+): WindowCell {
+  const pace = speed === null ? conditions.pace : paceAt(conditions.pace, speed);
+  return cellOf(prepared, departure, speed, routeOutcome(prepared, { ...conditions, departure, pace }));
+}
+
+/** A cell from a route's outcome. */
+export function cellOf(
+  prepared: PreparedRoute,
+  departure: number,
+  speed: number | null,
+  outcome: RouteOutcome,
+): WindowCell {
+  return {
+    route: prepared.route.name,
+    departure: isoTime(departure),
+    speed_m_s: speed,
+    arrival: outcome.arrival === null ? null : isoTime(outcome.arrival),
+    time_s: outcome.time_s,
+    passage_s: passageTime(prepared, outcome),
+    use: outcome.use,
+    remaining: outcome.remaining,
+    reserve: outcome.reserve,
+    status: outcome.status,
+    worst: worstFinding(outcome.findings),
+  };
+}
+
+/** From departure to arrival, s, stays on the way included and one at the last waypoint not; `null` where there is no arrival. */
+export function passageTime({ legs }: PreparedRoute, { time_s }: RouteOutcome): number | null {
+  if (time_s === null) return null;
+  const stays = legs.slice(0, -1).reduce((sum, { to }) => sum + to.stay_s, 0);
+  return time_s + stays;
+}
+
+/** The pace with another speed. */
+export function paceAt(pace: Pace, speed: number): Pace {
+  if (pace.hold === "through-speed" || pace.hold === "ground-speed")
+    return { hold: pace.hold, speed_m_s: speed };
+  throw new InputError(
+    `speeds to try belong to a pace that holds a through-speed or a ground-speed; found the pace "${pace.hold}"`,
+  );
+}

@@ -1,0 +1,127 @@
+import type { FindingCode } from "../estimate/result.ts";
+import type { CellFinding, WindowCell } from "./window-cell.ts";
+
+/** The best of some cells, among those that are not a `stop`; `null` where there is none. */
+export interface WindowBest {
+  /** Shortest from departure to arrival; of equals the earlier departure. */
+  readonly time: WindowCell | null;
+  /** Least use; of equals the shorter. */
+  readonly use: WindowCell | null;
+  /** Latest departure; of equals the shorter passage. */
+  readonly latest: WindowCell | null;
+  /** What stops the departure after the latest, at the same route and speed; `null` where the window ends there. */
+  readonly closedBy: CellFinding | null;
+}
+
+/** Why some cells of a route cannot be done: their gravest finding. */
+export interface Refusal {
+  readonly code: FindingCode;
+  readonly cells: number;
+  /** First and last departure among them. */
+  readonly from: string;
+  readonly to: string;
+  /** What the first of them says. */
+  readonly message: string;
+}
+
+export interface RouteSummary {
+  readonly route: string;
+  readonly cells: number;
+  /** How many are not a `stop`. */
+  readonly possible: number;
+  readonly best: WindowBest;
+  /** The commonest first. */
+  readonly refused: readonly Refusal[];
+}
+
+export interface WindowSummary {
+  readonly cells: number;
+  readonly possible: number;
+  readonly best: WindowBest;
+  /** In the order in which the cells name them. */
+  readonly routes: readonly RouteSummary[];
+}
+
+/** The bests of a window's cells, of all and per route, and what stops the others; over as many cells as there are yet. */
+export function summariseWindow(cells: readonly WindowCell[]): WindowSummary {
+  const byRoute = new Map<string, WindowCell[]>();
+  for (const cell of cells) {
+    const own = byRoute.get(cell.route);
+    if (own === undefined) byRoute.set(cell.route, [cell]);
+    else own.push(cell);
+  }
+  return {
+    cells: cells.length,
+    possible: cells.filter(isPossible).length,
+    best: bestOf(cells),
+    routes: [...byRoute].map(([route, own]) => ({
+      route,
+      cells: own.length,
+      possible: own.filter(isPossible).length,
+      best: bestOf(own),
+      refused: refusals(own),
+    })),
+  };
+}
+
+/** Whether a cell can be done. */
+export function isPossible({ status }: WindowCell): boolean {
+  return status !== "stop";
+}
+
+/** The best of cells by time, by use and by latest departure. */
+export function bestOf(cells: readonly WindowCell[]): WindowBest {
+  const possible = cells.filter(isPossible);
+  const latest = least(possible, (cell) => -Date.parse(cell.departure), passage);
+  return {
+    time: least(possible, passage, (cell) => Date.parse(cell.departure)),
+    use: least(possible, (cell) => cell.use ?? Number.POSITIVE_INFINITY, passage),
+    latest,
+    closedBy: latest === null ? null : nextAfter(cells, latest),
+  };
+}
+
+const passage = ({ passage_s }: WindowCell): number => passage_s ?? Number.POSITIVE_INFINITY;
+
+type Figure = (cell: WindowCell) => number;
+
+/** The first cell with the least figure, by the second figure among equals. */
+export function least(cells: readonly WindowCell[], of: Figure, then: Figure): WindowCell | null {
+  return cells.reduce<WindowCell | null>((best, cell) => {
+    if (best === null) return cell;
+    const more = of(cell) - of(best) || then(cell) - then(best);
+    return more < 0 ? cell : best;
+  }, null);
+}
+
+function nextAfter(cells: readonly WindowCell[], latest: WindowCell): CellFinding | null {
+  const after = cells.filter(
+    ({ route, speed_m_s, departure }) =>
+      route === latest.route && speed_m_s === latest.speed_m_s && departure > latest.departure,
+  );
+  return least(after, (cell) => Date.parse(cell.departure), passage)?.worst ?? null;
+}
+
+function refusals(cells: readonly WindowCell[]): Refusal[] {
+  const byCode = new Map<FindingCode, WindowCell[]>();
+  for (const cell of cells) {
+    if (isPossible(cell) || cell.worst === null) continue;
+    const own = byCode.get(cell.worst.code);
+    if (own === undefined) byCode.set(cell.worst.code, [cell]);
+    else own.push(cell);
+  }
+  return [...byCode]
+    .map(([code, own]) => {
+      const inTime = [...own].sort((a, b) => (a.departure < b.departure ? -1 : 1));
+      const first = inTime[0] as WindowCell;
+      const last = inTime[inTime.length - 1] as WindowCell;
+      return {
+        code,
+        cells: own.length,
+        from: first.departure,
+        to: last.departure,
+        message: first.worst?.message ?? "",
+      };
+    })
+    .sort((a, b) => b.cells - a.cells);
+}

@@ -1,0 +1,78 @@
+import type { Craft, Pace } from "../craft/craft.ts";
+import { InputError } from "../errors.ts";
+import type { Conditions } from "../estimate/conditions.ts";
+import type { EstimateInput } from "../estimate/estimate.ts";
+import { fieldsInUse, type PreparedRoute } from "../estimate/prepare.ts";
+import { arrivalCell } from "./arrival-cell.ts";
+import type { ArrivalWindow } from "./arrive.ts";
+import { checkWindow, type DepartureWindow, windowDepartures } from "./departure-window.ts";
+import { paceAt, type WindowCell, windowCell } from "./window-cell.ts";
+
+/** What a window of departures is worked out for: the routes, prepared once, and what the plan says. */
+export interface Sweep {
+  readonly prepared: readonly PreparedRoute[];
+  readonly conditions: Conditions;
+  /** The arrival that the plan's pace asks for; `null` where its pace says how fast. */
+  readonly arrive: ArrivalWindow | null;
+}
+
+/** @param prepared by `prepareRoutes`, from the same input */
+export function makeSweep(
+  prepared: readonly PreparedRoute[],
+  { craft, departure, pace, reserve, fields }: EstimateInput,
+  arrive: ArrivalWindow | null = null,
+): Sweep {
+  return {
+    prepared,
+    conditions: { departure, craft, pace, reserve, fields: fieldsInUse(craft, fields) },
+    arrive,
+  };
+}
+
+/**
+ * Every route × departure × speed, one by one in the order departure, route, speed: ask for as many as are wanted. Nothing
+ * but the preparation of the routes is shared between cells, so that each equals a lone estimate to the last bit.
+ *
+ * A speed takes the place of the pace's speed; a leg that names its own keeps it. Where the pace asks for an arrival and
+ * the window names no speeds, each cell is at the cheapest speed that makes it.
+ *
+ * @throws InputError for a window that {@link checkWindow} refuses, speeds beside a pace that holds none, or a speed
+ *   outside the craft's power model
+ */
+export function windowCells(sweep: Sweep, window: DepartureWindow): Generator<WindowCell, void, undefined> {
+  checkWindow(window, sweep.prepared.length);
+  checkSpeeds(sweep, window.speeds_m_s);
+  return cells(sweep, window);
+}
+
+function* cells(sweep: Sweep, window: DepartureWindow): Generator<WindowCell, void, undefined> {
+  const speeds = window.speeds_m_s ?? [null];
+  for (const departure of windowDepartures(window)) {
+    for (const prepared of sweep.prepared) {
+      for (const speed of speeds) yield sweepCell(sweep, prepared, departure, speed);
+    }
+  }
+}
+
+/** One cell of a sweep; `speed` in m/s, `null` for the plan's own pace. */
+export function sweepCell(
+  { conditions, arrive }: Sweep,
+  prepared: PreparedRoute,
+  departure: number,
+  speed: number | null,
+): WindowCell {
+  if (arrive !== null && speed === null) return arrivalCell(prepared, { ...conditions, departure }, arrive);
+  return windowCell(prepared, conditions, departure, speed);
+}
+
+function checkSpeeds({ conditions }: Sweep, speeds: readonly number[] | null): void {
+  for (const speed of speeds ?? []) checkSpeed(conditions.craft, conditions.pace, speed);
+}
+
+function checkSpeed({ power, name }: Craft, pace: Pace, speed: number): void {
+  const { hold } = paceAt(pace, speed);
+  if (!(speed > 0) || (hold === "through-speed" && !(speed >= power.min && speed <= power.max)))
+    throw new InputError(
+      `a speed of a window lies within the power model of ${name}, ${power.min} to ${power.max} m/s; found ${speed} m/s`,
+    );
+}
