@@ -18,6 +18,7 @@ export type {
   Severity,
   Spread,
 } from "../src/estimate/result.ts";
+export { columnNames } from "../src/field/column-names.ts";
 export type { FieldRole } from "../src/field/field.ts";
 export type { FieldInspection } from "../src/field/inspect.ts";
 export type { Position } from "../src/geodesy/track.ts";

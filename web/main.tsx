@@ -1,6 +1,7 @@
 import { effect } from "@preact/signals";
 import * as Comlink from "comlink";
 import { render } from "preact";
+import { listenForDrops } from "./files/drop-target.ts";
 import { App } from "./shell/App.tsx";
 import { listenForKeys } from "./shell/keys.ts";
 import { narrowImages } from "./shell/tile-policy.ts";
@@ -32,6 +33,7 @@ effect(() => {
   document.documentElement.dataset["theme"] = page.view.theme.value;
 });
 listenForKeys(page.store);
+listenForDrops(page);
 
 const root = document.getElementById("page");
 if (root) render(<App page={page} />, root);

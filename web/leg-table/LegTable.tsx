@@ -34,7 +34,8 @@ export function LegTable({ page }: { readonly page: PageState }) {
           {route.name}
         </span>
       </header>
-      <div class="scroll">
+      {/* biome-ignore lint/a11y/noNoninteractiveTabindex: what scrolls must be reached by keyboard (WCAG 2.1.1) */}
+      <section class="scroll" aria-label={`Legs of ${route.name}`} tabIndex={0}>
         <table class="leg-table">
           <thead>
             <tr>
@@ -59,7 +60,7 @@ export function LegTable({ page }: { readonly page: PageState }) {
             ))}
           </tbody>
         </table>
-      </div>
+      </section>
       <p class="leg-totals">
         {route.name}: {inUnit(route.totals.distance_m, shownUnit(view.units.value, "distance"))}{" "}
         {shownUnit(view.units.value, "distance").symbol}, {durationText(route.totals.time_s)} under way,{" "}

@@ -1,4 +1,5 @@
 import { Chart } from "../chart/Chart.tsx";
+import { FieldDialog } from "../files/FieldDialog.tsx";
 import { Ledger } from "../ledger/Ledger.tsx";
 import { LegTable } from "../leg-table/LegTable.tsx";
 import { Ribbons } from "../ribbon/Ribbons.tsx";
@@ -27,7 +28,21 @@ export function App({ page }: { readonly page: PageState }) {
         <a href="#legs-title">Leg table</a>
       </nav>
       <Header page={page} />
+      {view.notice.value !== null && (
+        <div class="notice" role="alert">
+          {view.notice.value}
+          <button
+            type="button"
+            onClick={() => {
+              view.notice.value = null;
+            }}
+          >
+            Dismiss
+          </button>
+        </div>
+      )}
       <PlanBar page={page} />
+      <FieldDialog page={page} />
       <main>
         <div class="column">
           <section class="pane chart-pane" data-pane="chart" aria-label="Chart and clock">

@@ -1,8 +1,9 @@
+import { takeFiles } from "../files/take-files.ts";
 import type { PageState } from "../state/page-state.ts";
 import { setPlanText } from "../state/plan-edits.ts";
 import { TextField } from "../waypoints/TextField.tsx";
 import { MoreMenu } from "./MoreMenu.tsx";
-import { openPlanFiles, savePlan } from "./plan-files.ts";
+import { savePlan } from "./plan-files.ts";
 import { Settings } from "./Settings.tsx";
 
 /** The plan's title, its files, undo and redo, and how things are shown. */
@@ -45,9 +46,9 @@ export function Header({ page }: { readonly page: PageState }) {
             type="file"
             class="unseen"
             multiple
-            accept=".json,.csv,application/json,text/csv"
+            accept=".json,.csv,.tsv,.txt,application/json,text/csv"
             onChange={({ currentTarget }) => {
-              void openPlanFiles(page, [...(currentTarget.files ?? [])]);
+              void takeFiles(page, [...(currentTarget.files ?? [])]);
               currentTarget.value = "";
             }}
           />

@@ -1,3 +1,4 @@
+import { Readings } from "../files/Readings.tsx";
 import { clockText, fromLocalInput, localInput, zoneText } from "../format/time-text.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { PaceDocument } from "../state/plan-document.ts";
@@ -61,7 +62,8 @@ export function PlanBar({ page }: { readonly page: PageState }) {
               </button>
             </li>
           ))}
-          {(plan.fields ?? []).length === 0 && <li>none: a still-medium estimate</li>}
+          <Readings page={page} />
+          {(plan.fields ?? []).length === 0 && <li>none: a still-medium estimate; drop a CSV here</li>}
         </ul>
       </div>
     </section>

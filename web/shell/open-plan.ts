@@ -16,13 +16,15 @@ export async function openPlan(
 ): Promise<boolean> {
   const plan = planOf(text);
   if (plan === null) {
-    page.view.announcement.value = `${name} is no plan file: its "format" is "legwork-plan/1"`;
+    page.view.notice.value = `${name} is no plan file: the "format" of one is "legwork-plan/1"`;
     return false;
   }
   const { craft, fields = [] } = plan;
   if ("file" in craft && typeof craft.file === "string") await keep(page, craft.file, find);
   for (const field of fields) {
-    if (await keep(page, field.file, find)) await readFieldFile(page, field);
+    if (!(await keep(page, field.file, find))) continue;
+    const answer = await readFieldFile(page, field);
+    if (!answer.ok && !answer.cancelled) page.view.notice.value = answer.fault;
   }
   page.view.instant.value = null;
   // There is nothing to go back to where nothing was.

@@ -1,28 +1,4 @@
 import type { PageState } from "../state/page-state.ts";
-import { openPlan } from "./open-plan.ts";
-
-const LARGEST_PLAN = 5_000_000;
-
-/** Opens the files that the user chose: a plan, and beside it the craft and the fields that it names. */
-export async function openPlanFiles(page: PageState, files: readonly File[]): Promise<void> {
-  const plan =
-    files.find(({ name }) => name.endsWith(".plan.json")) ?? files.find(({ name }) => name.endsWith(".json"));
-  if (plan === undefined) {
-    page.view.announcement.value = "A plan is a file that ends in .plan.json";
-    return;
-  }
-  if (plan.size > LARGEST_PLAN) {
-    page.view.announcement.value = `${plan.name} is larger than any plan (${Math.round(plan.size / 1e6)} MB)`;
-    return;
-  }
-  const byName = new Map(files.map((file) => [file.name, file]));
-  await openPlan(
-    page,
-    plan.name,
-    await plan.text(),
-    async (file) => byName.get(file.split("/").at(-1) ?? file) ?? null,
-  );
-}
 
 /** Hands the plan to the browser to keep as a file. */
 export function savePlan({ store, view }: PageState): void {

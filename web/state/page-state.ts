@@ -3,7 +3,7 @@ import type { FieldInspection } from "../core.ts";
 import type { Worker } from "../worker/protocol.ts";
 import { type Answers, createAnswers } from "./answers.ts";
 import { createPageView, type PageView } from "./page-view.ts";
-import type { PlanDocument } from "./plan-document.ts";
+import type { FieldDocument, PlanDocument } from "./plan-document.ts";
 import { createPlanStore, type PlanStore } from "./plan-store.ts";
 
 /** The worker as the page sees it: every call answers later. */
@@ -19,12 +19,20 @@ export interface Reading {
   readonly share: number;
 }
 
+/** A field file whose meaning the user is asked. */
+export interface FieldQuestion {
+  readonly content: File;
+  /** Ends the question; `null` leaves the file out. */
+  answer(field: FieldDocument | null): void;
+}
+
 /** Everything that the parts of the page share. */
 export interface PageState {
   readonly store: PlanStore;
   readonly view: PageView;
   readonly answers: Answers;
   readonly engine: Engine;
+  readonly asking: Signal<FieldQuestion | null>;
   readonly readings: Signal<readonly Reading[]>;
   /** What each field file that was read holds, by its name. */
   readonly inspections: Signal<Readonly<Record<string, FieldInspection>>>;
@@ -36,6 +44,7 @@ export function createPageState(plan: PlanDocument, engine: Engine): PageState {
     view: createPageView(),
     answers: createAnswers((asked) => engine.estimate(asked)),
     engine,
+    asking: signal<FieldQuestion | null>(null),
     readings: signal<readonly Reading[]>([]),
     inspections: signal<Readonly<Record<string, FieldInspection>>>({}),
   };

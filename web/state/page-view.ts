@@ -34,6 +34,8 @@ export interface PageView {
   readonly shading: Signal<"none" | "wind" | "current">;
   /** The user's own raster tile address with {z}, {x}, {y}; empty for none. */
   readonly tiles: Signal<string>;
+  /** What went wrong with something that the user did, in a sentence, until it is dismissed. */
+  readonly notice: Signal<string | null>;
   /** What the live region says. */
   readonly announcement: Signal<string>;
 }
@@ -52,6 +54,7 @@ export function createPageView(): PageView {
     adding: signal(false),
     shading: signal<"none" | "wind" | "current">("none"),
     tiles: signal(""),
+    notice: signal<string | null>(null),
     announcement: signal(""),
   };
 }

@@ -1,0 +1,101 @@
+import type { FieldRole } from "../core.ts";
+import { openPlan } from "../shell/open-plan.ts";
+import { readFieldFile } from "../shell/read-field-file.ts";
+import type { PageState } from "../state/page-state.ts";
+import type { FieldDocument } from "../state/plan-document.ts";
+import { addField, changeField, setCraft } from "../state/plan-edits.ts";
+
+const LARGEST_PLAN = 5_000_000;
+
+/**
+ * Takes the files that the user chose or dropped: a plan with the craft and fields that it names, a craft for the plan on the page,
+ * or fields to add to it.
+ */
+export async function takeFiles(page: PageState, files: readonly File[]): Promise<void> {
+  const plan = files.find(({ name }) => name.endsWith(".plan.json"));
+  if (plan !== undefined) {
+    await takePlan(page, plan, files);
+    return;
+  }
+  for (const file of files) {
+    const name = file.name.toLowerCase();
+    if (name.endsWith(".json")) await takeJson(page, file);
+    else if (name.endsWith(".csv") || name.endsWith(".txt") || name.endsWith(".tsv"))
+      await takeField(page, file);
+    else page.view.notice.value = `${file.name}: a file is a plan or craft (.json) or a field (.csv)`;
+  }
+}
+
+async function takePlan(page: PageState, plan: File, files: readonly File[]): Promise<void> {
+  if (isTooLarge(page, plan)) return;
+  const byName = new Map(files.map((file) => [file.name, file]));
+  await openPlan(page, plan.name, await plan.text(), async (name) => byName.get(lastPart(name)) ?? null);
+}
+
+/** A JSON file that is not named as a plan: a plan all the same, or a craft. */
+async function takeJson(page: PageState, file: File): Promise<void> {
+  if (isTooLarge(page, file)) return;
+  const text = await file.text();
+  if (text.includes('"legwork-plan/1"')) {
+    await openPlan(page, file.name, text, async () => null);
+    return;
+  }
+  await page.engine.keepFile(file.name, file);
+  page.store.edit("Change craft", (plan) => setCraft(plan, { file: file.name }));
+  page.view.announcement.value = `The craft is now that of ${file.name}`;
+}
+
+async function takeField(page: PageState, file: File): Promise<void> {
+  const known = (page.store.plan.value.fields ?? []).find(({ file: name }) => lastPart(name) === file.name);
+  const field = known ?? (await roleOf(page, file)) ?? (await askField(page, file));
+  if (field === null) return;
+  await page.engine.keepFile(field.file, file);
+  const answer = await readFieldFile(page, field);
+  if (!answer.ok) {
+    if (!answer.cancelled) page.view.notice.value = answer.fault;
+    return;
+  }
+  page.view.announcement.value = `Read ${file.name}`;
+  if (known === undefined) page.store.edit("Add field", (plan) => addField(plan, field));
+  // The same reference with other bytes behind it: the plan is the same, and must be answered anew.
+  else await page.answers.ask(page.store.plan.peek());
+}
+
+/** The field as a file with one possible reading gives it; `null` where the user must say what it is. */
+async function roleOf({ engine }: PageState, file: File): Promise<FieldDocument | null> {
+  const roles: readonly FieldRole[] = ["wind", "current"];
+  const possible: FieldDocument[] = [];
+  for (const role of roles) {
+    const field = { role, file: file.name };
+    if ((await engine.preview(file, field)).fault === null) possible.push(field);
+  }
+  return possible.length === 1 ? (possible[0] ?? null) : null;
+}
+
+/** Asks in the dialogue; `null` where the user thinks better of it. */
+function askField({ asking }: PageState, content: File): Promise<FieldDocument | null> {
+  return new Promise((resolve) => {
+    asking.value = {
+      content,
+      answer(field) {
+        asking.value = null;
+        resolve(field);
+      },
+    };
+  });
+}
+
+/** Adds to a field of the plan how its gaps and edges are treated. */
+export function setFieldPolicy(page: PageState, index: number, change: Partial<FieldDocument>): void {
+  page.store.edit("Change field", (plan) => changeField(plan, index, change));
+}
+
+function isTooLarge({ view }: PageState, file: File): boolean {
+  if (file.size <= LARGEST_PLAN) return false;
+  view.notice.value = `${file.name} is larger than any plan or craft (${Math.round(file.size / 1e6)} MB)`;
+  return true;
+}
+
+function lastPart(name: string): string {
+  return name.split("/").at(-1) ?? name;
+}
