@@ -32,8 +32,11 @@ export function longitudeAxis(found: readonly number[]): LongitudeAxis {
   for (const [index, opening] of openings.entries()) {
     if (opening > (openings[widest] as number) + SAME_MERIDIAN) widest = index;
   }
-  const otherSteps = openings.filter((_, index) => index !== widest);
-  const global = count > 1 && (openings[widest] as number) <= Math.max(...otherSteps) + SAME_MERIDIAN;
+  const widestOther = openings.reduce(
+    (most, opening, index) => (index === widest ? most : Math.max(most, opening)),
+    0,
+  );
+  const global = count > 1 && (openings[widest] as number) <= widestOther + SAME_MERIDIAN;
   const ordered = meridians.map((_, offset) => {
     const index = (widest + 1 + offset) % count;
     const { lon, sources } = meridians[index] as Meridian;

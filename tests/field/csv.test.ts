@@ -304,7 +304,7 @@ describe("missing values", () => {
 
 describe("longitudes of any turn", () => {
   const row = (lon: number, value: number) => `0,${lon},${value},0`;
-  const read = (lons: readonly number[], values: readonly number[] = lons.map((_, index) => index)) =>
+  const read = (lons: readonly number[], values: readonly number[] = lons.map((_, index) => index % 400)) =>
     readText(text(["lat,lon,u,v", ...lons.map((lon, index) => row(lon, values[index] as number))]));
 
   test("run across the antimeridian", async () => {
@@ -336,6 +336,12 @@ describe("longitudes of any turn", () => {
     const grid = await read([0, 60, 120, 180, 240]);
     expect(grid.global).toBe(false);
     expect([...grid.lon]).toEqual([0, 60, 120, 180, 240]);
+  });
+
+  test("may be 150,000 on one parallel", async () => {
+    const grid = await read(Array.from({ length: 150_000 }, (_, index) => index / 1000));
+    expect(grid.lon.length).toBe(150_000);
+    expect(grid.slices[0]?.[2 * 149_999]).toBe(149_999 % 400);
   });
 
   test("that meet at 0 and 360 must agree, and are one meridian", async () => {
