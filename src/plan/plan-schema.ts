@@ -15,22 +15,8 @@ import {
   readBy,
   sentence,
 } from "./schema-parts.ts";
-import { parseTime } from "./time.ts";
-
-const time = (name: string, description: string) =>
-  readBy(
-    z
-      .string({
-        error: (issue) =>
-          sentence(
-            name,
-            'takes an ISO 8601 date and time with its zone, as "2027-05-04T06:00:00Z"',
-            issue.input,
-          ),
-      })
-      .meta({ description }),
-    (text) => parseTime(text, name),
-  );
+import { time } from "./time-schema.ts";
+import { windowSchema } from "./window-schema.ts";
 
 const coordinate = (axis: "lat" | "lon", description: string) => {
   const rule =
@@ -86,6 +72,22 @@ const route = objectOf(
   "A route.",
 );
 
+const alternate = objectOf(
+  "an alternate",
+  {
+    name: lineOfText("name", "Name of the alternate.").optional(),
+    lat: coordinate("lat", "Latitude: degrees, north positive, or a text as 50°21.5'N."),
+    lon: coordinate("lon", "Longitude: degrees, east positive, or a text as 4°09'03\"W."),
+    height: quantity(
+      ["length"],
+      "height",
+      NOT_NEGATIVE,
+      "Height above the surface there; that of the place of turning off unless given.",
+    ).optional(),
+  },
+  "A place to go to in place of the destination.",
+);
+
 const COLUMN_NAMES = [
   ...new Set([...columnNames("wind").values(), ...columnNames("current").values()].flat()),
 ];
@@ -138,6 +140,7 @@ export const planSchema = objectOf(
       })
       .meta({ description: "The craft: its file, or the craft itself." }),
     pace: paceSchema.optional(),
+    window: windowSchema.optional(),
     reserve: quantity(
       ["share", "energy", "mass", "volume", "time"],
       "reserve",
@@ -152,6 +155,13 @@ export const planSchema = objectOf(
       "Files of wind and current; the earlier wins where two overlap.",
     ).optional(),
     routes: listOf("routes", route, 1, "route", "The candidate routes."),
+    alternates: listOf(
+      "alternates",
+      alternate,
+      0,
+      "alternates",
+      "Places to turn off to; with any, the estimate says how far each route can still turn back.",
+    ).optional(),
   },
   "A plan: departure, craft, pace, fields and candidate routes.",
 );

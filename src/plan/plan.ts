@@ -1,3 +1,4 @@
+import type { Alternate } from "../choose/alternate.ts";
 import type { Craft, Pace, Reserve } from "../craft/craft.ts";
 import type { Route } from "../estimate/route.ts";
 import type { BeyondPolicy, FieldRole, GapPolicy, OutsidePolicy } from "../field/field.ts";
@@ -24,6 +25,8 @@ export interface Plan {
   readonly reserve: Reserve | null;
   readonly fields: readonly FieldReference[];
   readonly routes: readonly Route[];
+  /** Places to turn off to; left out where the plan names none. */
+  readonly alternates?: readonly Alternate[];
 }
 
 /** Yields a named file's bytes in pieces; the name is as the plan writes it. Rejects with an InputError where there is none. */

@@ -6,6 +6,7 @@ import { type Fault, firstIssue, placeOf } from "./first-issue.ts";
 import { parseJson } from "./json-text.ts";
 import type { FieldReference, OpenFile, Plan } from "./plan.ts";
 import { type PlanDocument, type PlanParts, planSchema } from "./plan-schema.ts";
+import { readAlternates } from "./read-alternates.ts";
 import { checkOrderedSpeed, readCraft, readCraftDocument } from "./read-craft.ts";
 import { readRoutes } from "./read-routes.ts";
 import { readText } from "./text-file.ts";
@@ -63,6 +64,7 @@ function planOf(parts: PlanParts, craft: Craft, fault: Fault): Plan {
     reserve: parts.reserve === undefined ? null : reserveOf(parts.reserve, craft, fault),
     fields: (parts.fields ?? []).map(fieldOf),
     routes: readRoutes(parts, craft, fault),
+    ...(parts.alternates === undefined ? {} : { alternates: readAlternates(parts.alternates, fault) }),
   };
 }
 
