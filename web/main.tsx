@@ -2,6 +2,7 @@ import { effect } from "@preact/signals";
 import * as Comlink from "comlink";
 import { render } from "preact";
 import { listenForDrops } from "./files/drop-target.ts";
+import { keepPlan, restorePlan, warnBeforeLoss } from "./keeping/keep-plan.ts";
 import { App } from "./shell/App.tsx";
 import { listenForKeys } from "./shell/keys.ts";
 import { narrowImages } from "./shell/tile-policy.ts";
@@ -38,4 +39,7 @@ listenForDrops(page);
 const root = document.getElementById("page");
 if (root) render(<App page={page} />, root);
 
-void openDemo(page, "islands");
+// What the device holds comes back; a first visit begins with a demo. Only then is anything kept, so that nothing is kept over it.
+restorePlan(page)
+  .then((restored) => (restored ? undefined : openDemo(page, "islands")))
+  .finally(() => warnBeforeLoss(page, keepPlan(page)));

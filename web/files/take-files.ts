@@ -1,6 +1,7 @@
 import type { FieldRole } from "../core.ts";
 import { openPlan } from "../shell/open-plan.ts";
 import { readFieldFile } from "../shell/read-field-file.ts";
+import { keepFile } from "../state/keep-file.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { FieldDocument } from "../state/plan-document.ts";
 import { addField, changeField, setCraft } from "../state/plan-edits.ts";
@@ -40,7 +41,7 @@ async function takeJson(page: PageState, file: File): Promise<void> {
     await openPlan(page, file.name, text, async () => null);
     return;
   }
-  await page.engine.keepFile(file.name, file);
+  await keepFile(page, file.name, file);
   page.store.edit("Change craft", (plan) => setCraft(plan, { file: file.name }));
   page.view.announcement.value = `The craft is now that of ${file.name}`;
 }
@@ -49,7 +50,7 @@ async function takeField(page: PageState, file: File): Promise<void> {
   const known = (page.store.plan.value.fields ?? []).find(({ file: name }) => lastPart(name) === file.name);
   const field = known ?? (await roleOf(page, file)) ?? (await askField(page, file));
   if (field === null) return;
-  await page.engine.keepFile(field.file, file);
+  await keepFile(page, field.file, file);
   const answer = await readFieldFile(page, field);
   if (!answer.ok) {
     if (!answer.cancelled) page.view.notice.value = answer.fault;

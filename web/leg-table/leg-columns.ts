@@ -22,7 +22,7 @@ export function legColumns(route: RouteEstimate, preset: UnitsPreset, zone: stri
     plain("leg", "Leg", "", ({ leg }) => String(leg)),
     { ...plain("to", "To", "", ({ to }) => to), numeric: false },
     plain("course", "Course", "°T", ({ initialCourse_deg }) => courseText(initialCourse_deg)),
-    plain("magnetic", "Magnetic", "°M", ({ magneticCourse_deg }) => courseText(magneticCourse_deg)),
+    plain("magnetic", "Course", "°M", ({ magneticCourse_deg }) => courseText(magneticCourse_deg)),
     plain("distance", "Distance", distance.symbol, ({ distance_m }) => inUnit(distance_m, distance)),
     ...fieldColumns(route, "current", speed),
     ...fieldColumns(route, "wind", speed),

@@ -1,7 +1,7 @@
 import { Readings } from "../files/Readings.tsx";
 import { clockText, fromLocalInput, localInput, zoneText } from "../format/time-text.ts";
 import type { PageState } from "../state/page-state.ts";
-import type { PaceDocument } from "../state/plan-document.ts";
+import type { PaceDocument, PlanDocument } from "../state/plan-document.ts";
 import { deleteField, setDeparture, setPace, setPlanText } from "../state/plan-edits.ts";
 import { TextField } from "../waypoints/TextField.tsx";
 
@@ -35,7 +35,7 @@ export function PlanBar({ page }: { readonly page: PageState }) {
       </label>
       <div class="plan-item">
         <span>Craft</span>
-        <strong>{craftName(plan.craft)}</strong>
+        <strong>{craftName(plan.craft, page.craftNames.value)}</strong>
       </div>
       <PaceFields page={page} />
       <div class="plan-item short">
@@ -117,9 +117,9 @@ function PaceFields({ page: { store } }: { readonly page: PageState }) {
   );
 }
 
-function craftName(craft: PageState["store"]["plan"]["value"]["craft"]): string {
+function craftName(craft: PlanDocument["craft"], names: Readonly<Record<string, string>>): string {
   if ("name" in craft && typeof craft.name === "string") return craft.name;
-  if ("file" in craft && typeof craft.file === "string") return craft.file;
+  if ("file" in craft && typeof craft.file === "string") return names[craft.file] ?? craft.file;
   return "not named";
 }
 

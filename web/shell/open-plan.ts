@@ -1,3 +1,4 @@
+import { keepFile } from "../state/keep-file.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { PlanDocument } from "../state/plan-document.ts";
 import { readFieldFile } from "./read-field-file.ts";
@@ -41,7 +42,7 @@ async function keep(
 ): Promise<boolean> {
   const content = await find(file);
   if (content === null) return false;
-  await page.engine.keepFile(file, content);
+  await keepFile(page, file, content);
   return true;
 }
 

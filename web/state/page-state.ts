@@ -33,6 +33,10 @@ export interface PageState {
   readonly answers: Answers;
   readonly engine: Engine;
   readonly asking: Signal<FieldQuestion | null>;
+  /** The files that the user gave, by the names that plans use. */
+  readonly files: Signal<ReadonlyMap<string, Blob>>;
+  /** Names of the craft in craft files, by the file. */
+  readonly craftNames: Signal<Readonly<Record<string, string>>>;
   readonly readings: Signal<readonly Reading[]>;
   /** What each field file that was read holds, by its name. */
   readonly inspections: Signal<Readonly<Record<string, FieldInspection>>>;
@@ -45,6 +49,8 @@ export function createPageState(plan: PlanDocument, engine: Engine): PageState {
     answers: createAnswers((asked) => engine.estimate(asked)),
     engine,
     asking: signal<FieldQuestion | null>(null),
+    files: signal<ReadonlyMap<string, Blob>>(new Map()),
+    craftNames: signal<Readonly<Record<string, string>>>({}),
     readings: signal<readonly Reading[]>([]),
     inspections: signal<Readonly<Record<string, FieldInspection>>>({}),
   };
