@@ -1,6 +1,7 @@
+import { estimateArriving } from "../choose/arriving-estimate.ts";
 import type { Land } from "../coast/land.ts";
 import { InputError } from "../errors.ts";
-import { type EstimateAnswer, type EstimateInput, estimate } from "../estimate/estimate.ts";
+import { type EstimateAnswer, type EstimateInput, estimate, prepareRoutes } from "../estimate/estimate.ts";
 import type { OpenFile, Plan } from "./plan.ts";
 import { type FileProgress, readFields } from "./read-fields.ts";
 import { readPlan } from "./read-plan.ts";
@@ -35,7 +36,12 @@ export interface PlanAnswer extends EstimateAnswer {
 export async function estimatePlan(text: string, request: PlanRequest): Promise<PlanAnswer> {
   const plan = await checkPlanText(text, request);
   const input = await readInput(plan, request);
-  return { ...estimate(input), plan, input };
+  return { ...answerOf(plan, input), plan, input };
+}
+
+/** Estimates what is read: at the plan's pace, or at the speeds that make the arrival it asks for. */
+function answerOf({ arrive }: Plan, input: EstimateInput): EstimateAnswer {
+  return arrive === undefined ? estimate(input) : estimateArriving(prepareRoutes(input), input, arrive);
 }
 
 /**

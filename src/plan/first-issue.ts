@@ -60,8 +60,19 @@ function flattened(issue: Issue, document: unknown, before: Path): { issue: Issu
  */
 function meantBranch(branches: readonly (readonly Issue[])[], input: object): readonly Issue[] {
   const count = Object.keys(input).length;
-  const known = branches.find((issues) => count > unknownAtTop(issues));
+  const known = branches.find((issues) => count > unknownAtTop(issues) && !lacksWord(issues, input));
   return known ?? branches[0] ?? [];
+}
+
+/** Whether a branch is itself a union that a word tells apart, and the object lacks its key. */
+function lacksWord(issues: readonly Issue[], input: object): boolean {
+  return issues.some(
+    (issue) =>
+      issue.code === "invalid_union" &&
+      "discriminator" in issue &&
+      issue.path.length === 1 &&
+      !Object.hasOwn(input, issue.path[0] as PropertyKey),
+  );
 }
 
 /** Whether a branch takes no objects at all. */

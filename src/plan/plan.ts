@@ -1,4 +1,6 @@
 import type { Alternate } from "../choose/alternate.ts";
+import type { ArrivalWindow } from "../choose/arrive.ts";
+import type { DepartureWindow } from "../choose/departure-window.ts";
 import type { Craft, Pace, Reserve } from "../craft/craft.ts";
 import type { Route } from "../estimate/route.ts";
 import type { BeyondPolicy, FieldRole, GapPolicy, OutsidePolicy } from "../field/field.ts";
@@ -21,7 +23,12 @@ export interface Plan {
   /** ms since 1970-01-01T00:00Z. */
   readonly departure: number;
   readonly craft: Craft;
+  /** Where `arrive` is set: a stand-in at the craft's own speed, or at its highest. */
   readonly pace: Pace;
+  /** The arrival that the pace asks for in place of a speed. */
+  readonly arrive?: ArrivalWindow;
+  /** Departures to compare. */
+  readonly window?: DepartureWindow;
   readonly reserve: Reserve | null;
   readonly fields: readonly FieldReference[];
   readonly routes: readonly Route[];

@@ -1,3 +1,5 @@
+import { checkArrival } from "../choose/arrive.ts";
+import { speedRange } from "../choose/speed-range.ts";
 import type { Craft, Pace, Reserve } from "../craft/craft.ts";
 import { InputError } from "../errors.ts";
 import { quoted } from "../found.ts";
@@ -9,7 +11,12 @@ import { type PlanDocument, type PlanParts, planSchema } from "./plan-schema.ts"
 import { readAlternates } from "./read-alternates.ts";
 import { checkOrderedSpeed, readCraft, readCraftDocument } from "./read-craft.ts";
 import { readRoutes } from "./read-routes.ts";
+import { windowOf } from "./read-window.ts";
 import { readText } from "./text-file.ts";
+
+type PaceParts = NonNullable<PlanParts["pace"]>;
+type Arriving = Extract<PaceParts, { arrive: unknown }>;
+type Holding = Exclude<PaceParts, Arriving>;
 
 /** What reading a plan needs besides its text. */
 export interface ReadPlanOptions {
@@ -56,11 +63,13 @@ async function craftOf(
 }
 
 function planOf(parts: PlanParts, craft: Craft, fault: Fault): Plan {
+  const window = windowOf(parts, craft, fault);
   return {
     title: parts.title ?? "",
     departure: parts.departure,
     craft,
-    pace: paceOf(parts, craft, fault),
+    ...paceOf(parts, craft, fault),
+    ...(window === undefined ? {} : { window }),
     reserve: parts.reserve === undefined ? null : reserveOf(parts.reserve, craft, fault),
     fields: (parts.fields ?? []).map(fieldOf),
     routes: readRoutes(parts, craft, fault),
@@ -68,8 +77,26 @@ function planOf(parts: PlanParts, craft: Craft, fault: Fault): Plan {
   };
 }
 
-function paceOf(parts: PlanParts, craft: Craft, fault: Fault): Pace {
+function paceOf(parts: PlanParts, craft: Craft, fault: Fault): Pick<Plan, "pace" | "arrive"> {
   const pace = parts.pace ?? { hold: "through-speed" };
+  return "arrive" in pace ? arrivalOf(pace.arrive, craft, fault) : { pace: holdOf(pace, craft, fault) };
+}
+
+function arrivalOf(asked: Arriving["arrive"], craft: Craft, fault: Fault): Pick<Plan, "pace" | "arrive"> {
+  const arrive =
+    typeof asked === "number"
+      ? { notBefore: asked, notAfter: asked }
+      : { notBefore: asked.notBefore ?? null, notAfter: asked.notAfter };
+  try {
+    checkArrival(arrive);
+    const speed_m_s = craft.speed_m_s ?? speedRange(craft).max;
+    return { pace: { hold: "through-speed", speed_m_s }, arrive };
+  } catch (error) {
+    throw error instanceof InputError ? fault(["pace", "arrive"], error.message) : error;
+  }
+}
+
+function holdOf(pace: Holding, craft: Craft, fault: Fault): Pace {
   if (pace.hold === "power") {
     checkSpeeds(pace.hold, craft, fault);
     if (craft.power.model === "constant")

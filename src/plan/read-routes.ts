@@ -72,7 +72,7 @@ function waypointsOf(
 
 function checkSpeed({ speed }: WaypointParts, parts: PlanParts, craft: Craft, at: Fault): void {
   if (speed === undefined) return;
-  const hold = parts.pace?.hold ?? "through-speed";
+  const hold = parts.pace !== undefined && "hold" in parts.pace ? parts.pace.hold : "through-speed";
   if (hold === "power" || hold === "least-energy")
     throw at(
       ["speed"],

@@ -38,8 +38,7 @@ function inOrder(value: unknown, schema: unknown): unknown {
 function objectSchema(value: object, schema: unknown): z.ZodObject | undefined {
   if (schema instanceof z.ZodObject) return schema;
   if (!(schema instanceof z.ZodUnion)) return undefined;
-  const options = schema.options.filter((option): option is z.ZodObject => option instanceof z.ZodObject);
-  return options.find(({ shape }) =>
+  return objectOptions(schema).find(({ shape }) =>
     Object.entries(value).every(([key, item]) => {
       const known: unknown = Reflect.get(shape, key);
       return known instanceof z.ZodEnum ? known.safeParse(item).success : known !== undefined;
@@ -62,4 +61,12 @@ function jsonText(value: unknown, indent: string): string {
   const isFlat = !entries.some(([, item]) => typeof item === "object" && item !== null);
   if (isFlat && indent.length + line.length <= WIDTH) return line;
   return `${open}\n${items.map((item) => deeper + item).join(",\n")}\n${indent}${close}`;
+}
+
+/** The object schemas of a union and of the unions in it. */
+function objectOptions(union: z.ZodUnion): z.ZodObject[] {
+  return union.options.flatMap((option) => {
+    if (option instanceof z.ZodUnion) return objectOptions(option);
+    return option instanceof z.ZodObject ? [option] : [];
+  });
 }

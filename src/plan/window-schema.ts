@@ -1,0 +1,20 @@
+import { listOf, objectOf, POSITIVE, quantity } from "./schema-parts.ts";
+import { time } from "./time-schema.ts";
+
+/** Departures to compare. */
+export const windowSchema = objectOf(
+  "a window",
+  {
+    from: time("from", "First departure."),
+    to: time("to", "Last departure."),
+    every: quantity(["time"], "every", POSITIVE, "Step from one departure to the next."),
+    speeds: listOf(
+      "speeds",
+      quantity(["speed"], "speed", POSITIVE, "A speed to try."),
+      1,
+      "speeds",
+      "Speeds to try in place of the pace's.",
+    ).optional(),
+  },
+  "Departures to compare, and speeds.",
+);
