@@ -111,7 +111,7 @@ function solveTimes(step: Step, from: number, to: number, start: number): StepSt
   for (let i = 0; i < STATIONS; i += 1)
     elapsed[i] = ((stations.s[i] as number) - from) / step.lastGroundSpeed;
   const implicit = isImplicit(step);
-  let before = Number.POSITIVE_INFINITY;
+  let before = elapsed[STATIONS - 1] as number;
   for (let pass = 0; pass < MOST_PASSES; pass += 1) {
     const status = groundSpeeds(step, start);
     if (status !== PACE_OK) return status;
