@@ -70,7 +70,7 @@ export function turnLimit(goal: number, stretches: readonly ReachStretch[]): Tur
   return {
     goal,
     last: stretches[index]?.to ?? null,
-    throughout: index === stretches.length - 1,
+    beyond: notReachable(stretches[index + 1]?.reach),
     notKnownFrom: unknown?.from ?? null,
     reason: unknown?.reason ?? null,
   };
@@ -84,20 +84,24 @@ export function anyLimit(
   const furthest = limits.reduce((best, limit) =>
     (limit.last?.time_s ?? -1) > (best.last?.time_s ?? -1) ? limit : best,
   );
-  const last = furthest.last;
-  const beyond = last?.time_s ?? -1;
+  const { last } = furthest;
+  const time = last?.time_s ?? -1;
   const unknown = stretches
     .flat()
-    .filter(({ reach, to }) => reach === "unknown" && to.time_s > beyond)
+    .filter(({ reach, to }) => reach === "unknown" && to.time_s > time)
     .sort((a, b) => a.from.time_s - b.from.time_s)[0];
-  const from = unknown === undefined || last === null || unknown.from.time_s > beyond ? unknown?.from : last;
+  const isAtOnce = unknown !== undefined && unknown.from.time_s <= time;
   return {
     goal: null,
     last,
-    throughout: furthest.throughout,
-    notKnownFrom: from ?? null,
+    beyond: isAtOnce && furthest.beyond !== null ? "unknown" : furthest.beyond,
+    notKnownFrom: isAtOnce ? last : (unknown?.from ?? null),
     reason: unknown?.reason ?? null,
   };
+}
+
+function notReachable(reach: Reach | undefined): TurnLimit["beyond"] {
+  return reach === undefined || reach === "reachable" ? null : reach;
 }
 
 /** Where no goal at all is reachable, or that is not known of some while none is known to be. */

@@ -81,8 +81,11 @@ export interface TurnLimit {
   readonly goal: number | null;
   /** The last place from which it is reachable so; `null` where it is from none that is known. */
   readonly last: RoutePlace | null;
-  /** Whether `last` is where the route ends: then there is no point of no return on it. */
-  readonly throughout: boolean;
+  /**
+   * What becomes of going there from just beyond `last`: `short` or `cannot` make `last` the point of no return; `null` where
+   * the route ends there, so that it has none.
+   */
+  readonly beyond: Exclude<Reach, "reachable"> | null;
   /** First place after `last` from which it is not known, and the code of why; `null` where all is known. */
   readonly notKnownFrom: RoutePlace | null;
   readonly reason: FindingCode | null;

@@ -19,6 +19,7 @@ export interface EstimateOptions {
   readonly format: "table" | "csv" | "json" | "geojson" | "gpx";
   readonly units?: Units;
   readonly out?: string;
+  readonly turnBack?: boolean;
 }
 
 function written(input: ReportInput, { format, units }: EstimateOptions): string {
@@ -48,6 +49,7 @@ export async function estimateCommand(file: string, options: EstimateOptions): P
     open: openBeside(file),
     loadLand,
     ...(options.departure === undefined ? {} : { departure: options.departure }),
+    ...(options.turnBack === undefined ? {} : { turnBack: options.turnBack }),
     ...(options.route === undefined ? {} : { routes: options.route }),
   });
   const { routes, craft, pace } = plan;

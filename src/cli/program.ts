@@ -56,6 +56,7 @@ function addEstimate(program: Command, settle: Settle): void {
     .addOption(
       new Option("--units <units>", "of the table (default: by the craft)").choices(["sea", "air", "metric"]),
     )
+    .option("--turn-back", "add points of no return and equal-time points, as a plan with alternates does")
     .option("--out <file>", "write there, not to standard output")
     .addHelpText(
       "after",

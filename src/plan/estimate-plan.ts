@@ -1,7 +1,15 @@
 import { estimateArriving } from "../choose/arriving-estimate.ts";
+import type { DecidedEstimate } from "../choose/decided.ts";
+import { withTurnBack } from "../choose/turn-back-estimate.ts";
 import type { Land } from "../coast/land.ts";
 import { InputError } from "../errors.ts";
-import { type EstimateAnswer, type EstimateInput, estimate, prepareRoutes } from "../estimate/estimate.ts";
+import {
+  type EstimateAnswer,
+  type EstimateInput,
+  estimatePrepared,
+  prepareRoutes,
+} from "../estimate/estimate.ts";
+import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { OpenFile, Plan } from "./plan.ts";
 import { type FileProgress, readFields } from "./read-fields.ts";
 import { readPlan } from "./read-plan.ts";
@@ -20,10 +28,14 @@ export interface PlanRequest {
   /** Loads the coarse land for the hint `crosses-land`; called for craft in water only. */
   readonly loadLand?: () => Promise<Land | null>;
   readonly onProgress?: FileProgress;
+  /** Work out turning back for every route, alternates or not. */
+  readonly turnBack?: boolean;
 }
 
 /** An answered plan: what was asked, and the figures. */
 export interface PlanAnswer extends EstimateAnswer {
+  /** Its routes carry `turnBack` where the plan has alternates or the request asks for it. */
+  readonly estimate: DecidedEstimate;
   readonly plan: Plan;
   readonly input: EstimateInput;
 }
@@ -36,12 +48,20 @@ export interface PlanAnswer extends EstimateAnswer {
 export async function estimatePlan(text: string, request: PlanRequest): Promise<PlanAnswer> {
   const plan = await checkPlanText(text, request);
   const input = await readInput(plan, request);
-  return { ...answerOf(plan, input), plan, input };
+  const prepared = prepareRoutes(input);
+  const answer = answerOf(plan, input, prepared);
+  const { alternates = [] } = plan;
+  const isAsked = alternates.length > 0 || request.turnBack === true;
+  return { ...(isAsked ? withTurnBack(answer, prepared, input, alternates) : answer), plan, input };
 }
 
 /** Estimates what is read: at the plan's pace, or at the speeds that make the arrival it asks for. */
-function answerOf({ arrive }: Plan, input: EstimateInput): EstimateAnswer {
-  return arrive === undefined ? estimate(input) : estimateArriving(prepareRoutes(input), input, arrive);
+function answerOf(
+  { arrive }: Plan,
+  input: EstimateInput,
+  prepared: readonly PreparedRoute[],
+): EstimateAnswer {
+  return arrive === undefined ? estimatePrepared(prepared, input) : estimateArriving(prepared, input, arrive);
 }
 
 /**

@@ -1,3 +1,5 @@
+import type { DecidedRoute } from "../choose/decided.ts";
+import type { RoutePlace } from "../choose/turn-back-result.ts";
 import type { LegEstimate, RouteEstimate } from "../estimate/result.ts";
 import type { Route, Waypoint } from "../estimate/route.ts";
 import { reduceTurn } from "../geodesy/angle.ts";
@@ -5,6 +7,8 @@ import { cutAtAntimeridian, densify, type LonLat } from "../geodesy/drawn-line.t
 import { makeTrack } from "../geodesy/make-track.ts";
 import type { ReportInput } from "./input.ts";
 import { findingJson, legJson, refuseNotFinite } from "./json.ts";
+import { placeJson } from "./turn-back-json.ts";
+import { noReturn } from "./turn-back-text.ts";
 
 /** How far, m, the drawn line may stand from the track. */
 const DRAWN_WITHIN = 50;
@@ -76,7 +80,35 @@ function findingFeatures(route: RouteEstimate): Feature[] {
   );
 }
 
-function routeFeatures(route: RouteEstimate, geometry: Route | undefined): Feature[] {
+function turnFeatures({ name, turnBack }: DecidedRoute): Feature[] {
+  if (turnBack === undefined) return [];
+  const { goals, limits, equalTime } = turnBack;
+  const feature = (place: RoutePlace, properties: Feature["properties"]): Feature => ({
+    type: "Feature",
+    geometry: point(place.lat, place.lon),
+    properties: { ...properties, route: name, ...placeJson(place) },
+  });
+  const nameOf = (goal: number) => goals[goal]?.name ?? "";
+  const kindOf = (goal: number) => goals[goal]?.kind ?? "";
+  return [
+    ...limits.flatMap((limit) => {
+      const place = noReturn(limit);
+      const to = limit.goal === null ? "any" : kindOf(limit.goal);
+      const goal = limit.goal === null ? null : nameOf(limit.goal);
+      return place === null ? [] : [feature(place, { kind: "point-of-no-return", to, goal })];
+    }),
+    ...equalTime.map(({ between, place, time_s }) =>
+      feature(place, {
+        kind: "equal-time-point",
+        to: between.map(kindOf),
+        goals: between.map(nameOf),
+        timeToGo_s: time_s,
+      }),
+    ),
+  ];
+}
+
+function routeFeatures(route: DecidedRoute, geometry: Route | undefined): Feature[] {
   const waypoints = geometry?.waypoints ?? [];
   const legs = route.legs.map((leg, index) => {
     const from = waypoints[index];
@@ -85,13 +117,14 @@ function routeFeatures(route: RouteEstimate, geometry: Route | undefined): Featu
     return legFeature(route, leg, from, to);
   });
   const points = waypoints.map((waypoint, index) => waypointFeature(route, waypoint, index));
-  return [...legs, ...points, ...findingFeatures(route)];
+  return [...legs, ...points, ...findingFeatures(route), ...turnFeatures(route)];
 }
 
 /**
  * The estimate as a GeoJSON FeatureCollection (RFC 7946), longitude first, WGS84: a line a leg, within 50 m of the track and cut at
  * the antimeridian (then a MultiLineString), with the leg's figures as in JSON; a point a waypoint; a point a finding that has
- * a place. `kind` tells them apart. Heights are above the surface and so stand in the properties, not in the coordinates.
+ * a place; where turning back was asked for, a point a point of no return and an equal-time point. `kind` tells them apart.
+ * Heights are above the surface and so stand in the properties, not in the coordinates.
  *
  * @example
  * JSON.parse(writeGeoJson({ estimate: { format: "legwork-estimate/1", advisory: "", plan: { title: "Two marks" }, fields: [], routes: [] }, routes: [], craft: { name: "Tender", moves: "water" }, pace: { hold: "least-energy" } })).type // → "FeatureCollection"

@@ -1,10 +1,10 @@
+import type { DecidedEstimate } from "../choose/decided.ts";
 import type { Craft, Pace } from "../craft/craft.ts";
-import type { Estimate } from "../estimate/result.ts";
 import type { Route } from "../estimate/route.ts";
 
 /** What every writer of this room takes: the answer, and what it was asked about. */
 export interface ReportInput {
-  readonly estimate: Estimate;
+  readonly estimate: DecidedEstimate;
   /** Geometry of the estimate's routes: as many, in the same order. */
   readonly routes: readonly Route[];
   readonly craft: Pick<Craft, "name" | "moves">;

@@ -1,17 +1,19 @@
+import type { DecidedEstimate, DecidedRoute } from "../choose/decided.ts";
 import type {
+  ArrivalAnswer,
+  ArrivalSolution,
   ErrorBound,
-  Estimate,
   FieldAlong,
   FieldSummary,
   Finding,
   LegEstimate,
   Penalty,
   Reached,
-  RouteEstimate,
   Spread,
   Still,
   Totals,
 } from "../estimate/result.ts";
+import { turnBackJson } from "./turn-back-json.ts";
 
 /*
  * Keys are written out one by one: their order is part of what is promised, and what an estimate may one day carry besides
@@ -110,9 +112,28 @@ export function findingJson(value: Finding): Finding {
   };
 }
 
+const solution = (value: ArrivalSolution): ArrivalSolution => ({
+  speed_m_s: value.speed_m_s,
+  arrival: value.arrival,
+  use: value.use,
+  remaining: value.remaining,
+  status: value.status,
+});
+
+function arrive(value: ArrivalAnswer): ArrivalAnswer {
+  return {
+    notBefore: value.notBefore,
+    notAfter: value.notAfter,
+    solutions: value.solutions.map(solution),
+    chosen: value.chosen,
+    nearest: value.nearest && solution(value.nearest),
+    reason: value.reason,
+  };
+}
+
 const reached = ({ leg: on, at_m, time_s, use }: Reached): Reached => ({ leg: on, at_m, time_s, use });
 
-function route(value: RouteEstimate): RouteEstimate {
+function route(value: DecidedRoute): DecidedRoute {
   return {
     name: value.name,
     status: value.status,
@@ -122,13 +143,16 @@ function route(value: RouteEstimate): RouteEstimate {
     usable: value.usable,
     reserve: value.reserve,
     ...(value.reached === undefined ? {} : { reached: reached(value.reached) }),
+    ...(value.arrive === undefined ? {} : { arrive: arrive(value.arrive) }),
     totals: totals(value.totals),
     legs: value.legs.map(legJson),
     findings: value.findings.map(findingJson),
+    ...(value.turnBack === undefined ? {} : { turnBack: turnBackJson(value.turnBack) }),
   };
 }
 
-function field(value: FieldSummary): FieldSummary {
+/** A field's summary with its keys in the order of the format. */
+export function fieldJson(value: FieldSummary): FieldSummary {
   return { role: value.role, files: [...value.files], validFrom: value.validFrom, validTo: value.validTo };
 }
 
@@ -145,12 +169,12 @@ export function refuseNotFinite(key: string, value: unknown): unknown {
  * @example
  * writeJson({ format: "legwork-estimate/1", advisory: "", plan: { title: "Two marks" }, fields: [], routes: [] }).slice(0, 34) // → "{\n  \"format\": \"legwork-estimate/1\""
  */
-export function writeJson(estimate: Estimate): string {
-  const whole: Estimate = {
+export function writeJson(estimate: DecidedEstimate): string {
+  const whole: DecidedEstimate = {
     format: estimate.format,
     advisory: estimate.advisory,
     plan: { title: estimate.plan.title },
-    fields: estimate.fields.map(field),
+    fields: estimate.fields.map(fieldJson),
     routes: estimate.routes.map(route),
   };
   return `${JSON.stringify(whole, refuseNotFinite, 2)}\n`;

@@ -1,3 +1,4 @@
+import type { DecidedRoute } from "../choose/decided.ts";
 import type { RouteEstimate, RouteStatus } from "../estimate/result.ts";
 import type { Route } from "../estimate/route.ts";
 import { rule, TABLE_WIDTH } from "./columns.ts";
@@ -12,6 +13,7 @@ import { type RouteFigures, routeFigures } from "./route-figures.ts";
 import { amountText, tableHead } from "./table-head.ts";
 import { type TableUnits, tableUnits } from "./table-units.ts";
 import { durationText, instantText } from "./time-text.ts";
+import { turnBackTable } from "./turn-back-rows.ts";
 import { withinTable } from "./within-rows.ts";
 
 const STATUS: Record<RouteStatus, string> = { clear: "clear", caution: "with cautions", stop: "STOP" };
@@ -62,7 +64,7 @@ function outcome(route: RouteEstimate, units: TableUnits): string[] {
 }
 
 function routeBlock(
-  route: RouteEstimate,
+  route: DecidedRoute,
   geometry: Route,
   figures: RouteFigures,
   { craft }: ReportInput,
@@ -78,6 +80,7 @@ function routeBlock(
     "",
     ...withinTable(route, craft.moves, units),
     "",
+    ...(route.turnBack === undefined ? [] : [...turnBackTable(route, units), ""]),
     ...findingLines(route),
   ];
 }
