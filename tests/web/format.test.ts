@@ -5,6 +5,7 @@ import { latText, lonText } from "../../web/format/position-text.ts";
 import {
   clockSince,
   clockText,
+  dateText,
   durationText,
   fromLocalInput,
   localInput,
@@ -52,6 +53,11 @@ describe("times as text", () => {
     expect(zoneText(at, "UTC")).toBe("UTC");
     expect(zoneText(at, "Asia/Kolkata")).toBe("Asia/Kolkata (UTC+05:30)");
     expect(zoneText(at, "America/St_Johns")).toBe("America/St_Johns (UTC−02:30)");
+  });
+
+  test("have a date in the zone", () => {
+    expect(dateText(Date.UTC(2027, 11, 31, 23, 30), "UTC")).toBe("2027-12-31");
+    expect(dateText(Date.UTC(2027, 11, 31, 23, 30), "Asia/Kolkata")).toBe("2028-01-01");
   });
 
   test("carry the date where it is another day than the departure's", () => {

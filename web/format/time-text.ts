@@ -9,6 +9,11 @@ export function clockText(instant: number | string, zone: string, withDay: boole
   return withDay ? `${parts.weekday} ${Number(parts.day)} ${parts.month} ${clock}` : clock;
 }
 
+/** The date in a zone as ISO 8601 writes it: `2027-05-04`. */
+export function dateText(instant: number, zone: string): string {
+  return localInput(instant, zone).slice(0, 10);
+}
+
 /** `06:00` on the day of another instant, else with its date: `7 Nov 06:00`. */
 export function clockSince(instant: string, since: string | null, zone: string): string {
   const { day, month, hour, minute } = partsIn(new Date(instant), zone);

@@ -9,6 +9,7 @@ import { RouteEditor } from "../waypoints/RouteEditor.tsx";
 import { ClockBar } from "./ClockBar.tsx";
 import { Header } from "./Header.tsx";
 import { PlanBar } from "./PlanBar.tsx";
+import { PrintHead } from "./PrintHead.tsx";
 
 const PANES: readonly (readonly [Pane, string])[] = [
   ["chart", "Chart"],
@@ -27,6 +28,7 @@ export function App({ page }: { readonly page: PageState }) {
         <a href="#route-title">Route</a>
         <a href="#legs-title">Leg table</a>
       </nav>
+      <PrintHead page={page} />
       <Header page={page} />
       {view.notice.value !== null && (
         <div class="notice" role="alert">

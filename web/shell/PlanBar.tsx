@@ -1,16 +1,10 @@
 import { Readings } from "../files/Readings.tsx";
-import { clockText, fromLocalInput, localInput, zoneText } from "../format/time-text.ts";
+import { fromLocalInput, localInput, zoneText } from "../format/time-text.ts";
 import type { PageState } from "../state/page-state.ts";
-import type { PaceDocument, PlanDocument } from "../state/plan-document.ts";
+import type { PaceDocument } from "../state/plan-document.ts";
 import { deleteField, setDeparture, setPace, setPlanText } from "../state/plan-edits.ts";
 import { TextField } from "../waypoints/TextField.tsx";
-
-const PACES: readonly (readonly [PaceDocument["hold"], string])[] = [
-  ["through-speed", "hold speed through the medium"],
-  ["ground-speed", "hold ground speed"],
-  ["power", "hold power"],
-  ["least-energy", "least energy"],
-];
+import { craftName, PACES } from "./plan-words.ts";
 
 /** What holds for all routes: departure, craft, pace, reserve, fields. */
 export function PlanBar({ page }: { readonly page: PageState }) {
@@ -115,16 +109,4 @@ function PaceFields({ page: { store } }: { readonly page: PageState }) {
       )}
     </>
   );
-}
-
-function craftName(craft: PlanDocument["craft"], names: Readonly<Record<string, string>>): string {
-  if ("name" in craft && typeof craft.name === "string") return craft.name;
-  if ("file" in craft && typeof craft.file === "string") return names[craft.file] ?? craft.file;
-  return "not named";
-}
-
-/** The departure in words, for the print and the header. */
-export function departureText(departure: string, zone: string): string {
-  const instant = Date.parse(departure);
-  return Number.isNaN(instant) ? departure : `${clockText(instant, zone, true)} ${zoneText(instant, zone)}`;
 }

@@ -14,12 +14,15 @@ export async function readFieldFile(
   const ticket = tickets;
   const { file } = field;
   const others = () => readings.value.filter((reading) => reading.ticket !== ticket);
+  let done = false;
   readings.value = [...others(), { ticket, file, share: 0 }];
   try {
     const answer = await engine.openField(
       ticket,
       field,
       Comlink.proxy(({ readBytes, totalBytes }) => {
+        // The last word of progress may come after the answer.
+        if (done) return;
         const share = totalBytes === 0 ? 1 : readBytes / totalBytes;
         readings.value = [...others(), { ticket, file, share }];
       }),
@@ -27,6 +30,7 @@ export async function readFieldFile(
     if (answer.ok) inspections.value = { ...inspections.value, [file]: answer.inspection };
     return answer;
   } finally {
+    done = true;
     readings.value = others();
   }
 }
