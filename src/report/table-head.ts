@@ -1,11 +1,12 @@
+import { wantedText } from "../choose/arrival-answer.ts";
 import type { Medium, Pace } from "../craft/craft.ts";
-import type { FieldSummary } from "../estimate/result.ts";
+import type { ArrivalAnswer, FieldSummary } from "../estimate/result.ts";
 import { TABLE_WIDTH } from "./columns.ts";
 import type { ReportInput } from "./input.ts";
 import { placedText } from "./number-text.ts";
 import { plainText, wrapped } from "./plain-text.ts";
 import { inLastPlace } from "./rounding.ts";
-import type { TableUnits } from "./table-units.ts";
+import type { ColumnUnit, TableUnits } from "./table-units.ts";
 import { instantText } from "./time-text.ts";
 
 function powerText(watts: number): string {
@@ -13,8 +14,9 @@ function powerText(watts: number): string {
   return `${kilowatts.toFixed(kilowatts < 10 ? 2 : kilowatts < 100 ? 1 : 0)} kW`;
 }
 
-function paceText(pace: Pace, moves: Medium, units: TableUnits): string {
-  const speed = (value: number) => `${(value / units.speed.size).toFixed(1)} ${units.speed.symbol}`;
+/** How the craft chooses its speed, in words after its name. */
+export function paceText(pace: Pace, moves: Medium, unit: ColumnUnit): string {
+  const speed = (value: number) => `${(value / unit.size).toFixed(1)} ${unit.symbol}`;
   switch (pace.hold) {
     case "through-speed":
       return `holds ${speed(pace.speed_m_s)} through the ${moves}`;
@@ -27,7 +29,13 @@ function paceText(pace: Pace, moves: Medium, units: TableUnits): string {
   }
 }
 
-function fieldText(field: FieldSummary): string {
+/** As {@link paceText}, where the pace asks for an arrival. */
+export function arriveText(asked: Pick<ArrivalAnswer, "notBefore" | "notAfter">, moves: Medium): string {
+  return `holds what speed through the ${moves} arrives ${wantedText(asked)}, each route its own`;
+}
+
+/** Files of a field and their validity. */
+export function fieldText(field: FieldSummary): string {
   const files = field.files.map(plainText).join(", ");
   if (field.validFrom === null || field.validTo === null) return `${files}; steady`;
   return `${files}; valid ${instantText(field.validFrom, "minute").replace(" UTC", "")} to ${instantText(field.validTo, "minute")}`;
@@ -44,7 +52,11 @@ export function tableHead({ estimate, routes, craft, pace }: ReportInput, units:
   const title = plainText(estimate.plan.title);
   const [first] = estimate.routes;
   const own = routes.some((route) => route.waypoints.some((waypoint) => waypoint.speed_m_s !== null));
-  const held = `${paceText(pace, craft.moves, units)}${own ? ", except where a leg names its own speed" : ""}`;
+  const how =
+    first?.arrive === undefined
+      ? paceText(pace, craft.moves, units.speed)
+      : arriveText(first.arrive, craft.moves);
+  const held = `${how}${own ? ", except where a leg names its own speed" : ""}`;
   const entries: [string, string][] = [["Craft", `${plainText(craft.name)}, ${held}`]];
   if (first !== undefined) {
     entries.push(["Departure", instantText(first.departure, units.clock)]);

@@ -5,7 +5,7 @@ import { decimalsThatFit } from "./number-text.ts";
 import type { Clock } from "./time-text.ts";
 
 /** A unit of a column: printed figure = SI figure / size, with so many decimals. */
-interface ColumnUnit {
+export interface ColumnUnit {
   readonly symbol: string;
   readonly size: number;
   readonly decimals: number;
@@ -62,9 +62,13 @@ const LEDGER_SECONDS_UP_TO = 99 * 3600;
 function storeUnit(routes: readonly RouteEstimate[]): ColumnUnit {
   const amounts = routes.flatMap((route) => [route.usable, ...route.legs.map((leg) => leg.remaining ?? 0)]);
   const spent = routes.flatMap((route) => [route.totals.use ?? 0, route.totals.still.use]);
-  const largest = Math.max(0, ...amounts.map(Math.abs), ...spent);
-  const choices = STORE[routes[0]?.storeUnit ?? "J"];
-  const choice = choices.find((unit) => largest >= unit.from) ?? { symbol: "", size: 1 };
+  return storeColumn(routes[0]?.storeUnit ?? "J", Math.max(0, ...amounts.map(Math.abs), ...spent));
+}
+
+/** Unit of a column of amounts of a store, the largest given in the store's own unit. */
+export function storeColumn(unit: StoreUnit, largest: number): ColumnUnit {
+  const choices = STORE[unit];
+  const choice = choices.find((each) => largest >= each.from) ?? { symbol: "", size: 1 };
   const wanted = largest / choice.size < 10 ? 2 : 1;
   return { ...choice, decimals: decimalsThatFit(largest / choice.size, wanted, STORE_WIDTH) };
 }
@@ -76,10 +80,15 @@ function lengthUnit(system: Units, longest: number): ColumnUnit {
   return { symbol, size, decimals: decimalsThatFit(value, wanted, LENGTH_WIDTH + 1) };
 }
 
+/** Unit of speeds. */
+export function speedColumn(system: Units): ColumnUnit {
+  const [symbol, size] = SPEED[system];
+  return { symbol, size, decimals: 1 };
+}
+
 /** Units for an estimate's tables. */
 export function tableUnits(estimate: Estimate, system: Units): TableUnits {
   const { routes } = estimate;
-  const [speed, speedSize] = SPEED[system];
   const [height, heightSize] = HEIGHT[system];
   const legs = routes.flatMap((route) => route.legs);
   const longest = Math.max(0, ...routes.map((route) => route.totals.distance_m));
@@ -92,7 +101,7 @@ export function tableUnits(estimate: Estimate, system: Units): TableUnits {
   return {
     system,
     length: lengthUnit(system, longest),
-    speed: { symbol: speed, size: speedSize, decimals: 1 },
+    speed: speedColumn(system),
     height: { symbol: height, size: heightSize, decimals: 0 },
     store: storeUnit(routes),
     clock: lasts < SECONDS_UP_TO ? "second" : "minute",
