@@ -18,8 +18,7 @@ export function PrintHead({ page }: { readonly page: PageState }) {
   const plan = page.store.plan.value;
   const zone = page.view.zone.value;
   const fields = page.answers.answer.value.estimate?.fields ?? [];
-  const time = (instant: string | number): string =>
-    `${clockText(instant, zone, true)} ${zoneText(instant, zone)}`;
+  const time = (instant: string): string => instantText(instant, zone);
   return (
     <section class="print-head only-print">
       <h1>{plan.title ?? "Untitled plan"}</h1>
