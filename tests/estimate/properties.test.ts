@@ -133,7 +133,7 @@ describe("whatever the route, the grid and the pace", () => {
           expect(totals.remaining).toBeCloseTo(estimate.usable - (totals.use ?? 0), 3);
         }
       }),
-      { numRuns: 60 },
+      { numRuns: 60, endOnFailure: true },
     );
   });
 
@@ -151,7 +151,7 @@ describe("whatever the route, the grid and the pace", () => {
         // The bound itself stays below the goal of 1e-10 for every pace but least-energy, whose speed has kinks where it meets its range.
         if (pace.hold !== "least-energy") expect((a.error?.time_s ?? 0) / a.time_s).toBeLessThan(1e-10);
       }),
-      { numRuns: 200 },
+      { numRuns: 200, endOnFailure: true },
     );
   });
 
@@ -175,7 +175,7 @@ describe("whatever the route, the grid and the pace", () => {
         expect(outcome.reached ?? undefined).toEqual(full.reached);
         expect(outcome.findings).toEqual(full.findings);
       }),
-      { numRuns: 40 },
+      { numRuns: 40, endOnFailure: true },
     );
   });
 
@@ -205,7 +205,7 @@ describe("whatever the route, the grid and the pace", () => {
           );
         },
       ),
-      { numRuns: 40 },
+      { numRuns: 40, endOnFailure: true },
     );
   });
 });
