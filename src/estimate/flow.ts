@@ -10,8 +10,6 @@ import {
 } from "./panels.ts";
 import type { Stations } from "./stations.ts";
 
-const RADIANS = Math.PI / 180;
-
 /*
  * A field as one leg sees it: in a panel and between two valid times every component is a polynomial in the place times a straight
  * line in time. `resolve` picks tile, cell and slices by the policies; `project` turns them, station by station, into
@@ -47,6 +45,9 @@ export interface Flow {
 
   /** Corner values of the cell: (slice, level) × (u, v) × (west, east) × (south, north minus south). */
   readonly corners: Float64Array;
+  /** Per station: shares of the way across the cell, eastward and northward. */
+  readonly shareEast: Float64Array;
+  readonly shareNorth: Float64Array;
   /** Components found by the last look-up, m/s eastward and northward. */
   u: number;
   v: number;
@@ -76,6 +77,8 @@ export function makeFlow(field: Field, departure: number): Flow {
     filled: false,
     beyondLevels: false,
     corners: new Float64Array(32),
+    shareEast: new Float64Array(STATIONS),
+    shareNorth: new Float64Array(STATIONS),
     u: 0,
     v: 0,
     along: new Float64Array(STATIONS),
@@ -232,99 +235,13 @@ function share(axis: Float64Array, cell: number, value: number): number {
   return (value - start) / ((axis[cell + 1] as number) - start);
 }
 
-/** Fills the along- and cross-track components of a resolved flow at every station of the panel. */
-export function project(flow: Flow, panel: number, polar: boolean, stations: Stations): void {
-  if (flow.tile < 0) {
-    flow.along.fill(0);
-    flow.alongChange.fill(0);
-    flow.cross.fill(0);
-    flow.crossChange.fill(0);
-    return;
-  }
-  const tile = flow.field.tiles[flow.tile] as Tile;
-  const cells = flow.cells[flow.tile] as PanelCells;
-  const between = cells.levelState[panel] === LEVEL_BETWEEN;
-  const steady = flow.nextSlice === flow.slice;
-  const column = cells.column[panel] as number;
-  const row = cells.row[panel] as number;
-  const turn = cells.turn[panel] as number;
-  const west = tile.lon[column] as number;
-  const perLon = tile.lon.length === 1 ? 0 : 1 / ((tile.lon[column + 1] as number) - west);
-  const south = tile.lat[row] as number;
-  const perLat = tile.lat.length === 1 ? 0 : 1 / ((tile.lat[row + 1] as number) - south);
-  for (let i = 0; i < STATIONS; i += 1) {
-    const lon = (stations.lon[i] as number) + turn;
-    const fx = (lon - west) * perLon;
-    const fy = ((stations.lat[i] as number) - south) * perLat;
-    const fh = between ? levelShare(flow, tile, cells, panel, stations.share[i] as number) : 0;
-    const sin = stations.sin[i] as number;
-    const cos = stations.cos[i] as number;
-    const pole = polar ? Math.sign(stations.lat[i] as number) : 0;
-    atSlice(flow, 0, fx, fy, fh, between, pole, lon - west, perLon);
-    const along = flow.u * sin + flow.v * cos;
-    const cross = flow.u * cos - flow.v * sin;
-    flow.along[i] = along;
-    flow.cross[i] = cross;
-    if (steady) {
-      flow.alongChange[i] = 0;
-      flow.crossChange[i] = 0;
-    } else {
-      atSlice(flow, 16, fx, fy, fh, between, pole, lon - west, perLon);
-      flow.alongChange[i] = flow.u * sin + flow.v * cos - along;
-      flow.crossChange[i] = flow.u * cos - flow.v * sin - cross;
-    }
-  }
-}
-
-function levelShare(flow: Flow, tile: Tile, cells: PanelCells, panel: number, share: number): number {
+/** Share of the way from the level below to the one above at a share of the leg. */
+export function levelShare(flow: Flow, tile: Tile, cells: PanelCells, panel: number, share: number): number {
   const levels = tile.height as Float64Array;
   const level = cells.level[panel] as number;
   const below = levels[level] as number;
   const above = levels[level + 1] as number;
   return (heightAt(flow.heights, tile, share) - below) / (above - below);
-}
-
-/**
- * Components at one slice: linear in latitude on both meridians of the cell, linear in height, then linear in longitude.
- * Beyond 85° the vectors of each meridian are first turned into the point's own frame by Δ = (λ_corner - λ_point) · sign φ:
- * u' = u cos Δ - v sin Δ, v' = u sin Δ + v cos Δ.
- */
-function atSlice(
-  flow: Flow,
-  offset: number,
-  fx: number,
-  fy: number,
-  fh: number,
-  between: boolean,
-  pole: number,
-  eastOfWest: number,
-  perLon: number,
-): void {
-  const c = flow.corners;
-  let westU = (c[offset] as number) + fy * (c[offset + 1] as number);
-  let eastU = (c[offset + 2] as number) + fy * (c[offset + 3] as number);
-  let westV = (c[offset + 4] as number) + fy * (c[offset + 5] as number);
-  let eastV = (c[offset + 6] as number) + fy * (c[offset + 7] as number);
-  if (between) {
-    westU += fh * ((c[offset + 8] as number) + fy * (c[offset + 9] as number) - westU);
-    eastU += fh * ((c[offset + 10] as number) + fy * (c[offset + 11] as number) - eastU);
-    westV += fh * ((c[offset + 12] as number) + fy * (c[offset + 13] as number) - westV);
-    eastV += fh * ((c[offset + 14] as number) + fy * (c[offset + 15] as number) - eastV);
-  }
-  if (pole !== 0) {
-    const west = -eastOfWest * pole * RADIANS;
-    const east = perLon === 0 ? west : (1 / perLon - eastOfWest) * pole * RADIANS;
-    [westU, westV] = turned(westU, westV, west);
-    [eastU, eastV] = turned(eastU, eastV, east);
-  }
-  flow.u = westU + fx * (eastU - westU);
-  flow.v = westV + fx * (eastV - westV);
-}
-
-function turned(u: number, v: number, angle: number): [number, number] {
-  const cos = Math.cos(angle);
-  const sin = Math.sin(angle);
-  return [u * cos - v * sin, u * sin + v * cos];
 }
 
 /** Gust speed at a station and a time since departure, linear like the wind itself; NaN where a corner in use has none. */

@@ -1,8 +1,9 @@
 import { stayRate } from "../craft/consumption.ts";
 import type { Craft } from "../craft/craft.ts";
-import { type Flow, project, resolve, shareOf } from "./flow.ts";
+import { type Flow, resolve, shareOf } from "./flow.ts";
 import { FIRST_NODE, GAUSS_WEIGHT, KRONROD_WEIGHT, LAST_NODE, STATION_X, STATIONS } from "./gauss-kronrod.ts";
 import type { PreparedLeg } from "./prepare.ts";
+import { project } from "./project.ts";
 import type { FindingCode } from "./result.ts";
 import { layMiddle, layStations, type Stations } from "./stations.ts";
 

@@ -1,5 +1,5 @@
 import { STATION_X, STATIONS } from "./gauss-kronrod.ts";
-import { COS, evaluate, LAT, LON, SIN, STRIDE, type TrackCurve } from "./track-curve.ts";
+import { COS, evaluate, evaluateAll, LAT, LON, SIN, STRIDE, type TrackCurve } from "./track-curve.ts";
 
 /** The stations of the stretch in work: places and courses, fixed before time is solved. */
 export interface Stations {
@@ -13,6 +13,8 @@ export interface Stations {
   readonly cos: Float64Array;
   /** Share of the leg's length, 0..1. */
   readonly share: Float64Array;
+  /** The variable ξ of the track's piece. */
+  readonly x: Float64Array;
   /** Middle of the whole panel, for the weights of its corners. */
   middleLon: number;
   middleLat: number;
@@ -26,6 +28,7 @@ export function makeStations(): Stations {
     sin: new Float64Array(STATIONS),
     cos: new Float64Array(STATIONS),
     share: new Float64Array(STATIONS),
+    x: new Float64Array(STATIONS),
     middleLon: 0,
     middleLat: 0,
   };
@@ -42,18 +45,18 @@ export function layStations(
   const start = curve.starts[p] as number;
   const scale = 2 / ((curve.starts[p + 1] as number) - start);
   const length = curve.starts[curve.starts.length - 1] as number;
-  const coefficients = curve.coefficients;
-  const base = p * STRIDE;
+  const { s, x, share } = stations;
   for (let i = 0; i < STATIONS; i += 1) {
-    const s = from + ((to - from) * ((STATION_X[i] as number) + 1)) / 2;
-    const x = (s - start) * scale - 1;
-    stations.s[i] = s;
-    stations.share[i] = s / length;
-    stations.lon[i] = evaluate(coefficients, base + LON, x);
-    stations.lat[i] = evaluate(coefficients, base + LAT, x);
-    stations.sin[i] = evaluate(coefficients, base + SIN, x);
-    stations.cos[i] = evaluate(coefficients, base + COS, x);
+    const place = from + ((to - from) * ((STATION_X[i] as number) + 1)) / 2;
+    s[i] = place;
+    share[i] = place / length;
+    x[i] = (place - start) * scale - 1;
   }
+  const base = p * STRIDE;
+  evaluateAll(curve.coefficients, base + LON, x, stations.lon);
+  evaluateAll(curve.coefficients, base + LAT, x, stations.lat);
+  evaluateAll(curve.coefficients, base + SIN, x, stations.sin);
+  evaluateAll(curve.coefficients, base + COS, x, stations.cos);
 }
 
 /** Sets the middle of a panel from..to (metres) of piece p. */

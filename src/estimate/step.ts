@@ -1,14 +1,17 @@
 import { PACE_CANNOT_HOLD, PACE_OK, type PaceStatus } from "../craft/pace-solution.ts";
-import { type Flow, project } from "./flow.ts";
+import { integrateTimes } from "./collocation.ts";
+import type { Flow } from "./flow.ts";
 import {
+  AT_END,
+  BEYOND_NODES,
   FIRST_NODE,
   GAUSS_WEIGHT,
-  INTEGRAL_TO_STATION,
   KRONROD_WEIGHT,
   LAST_NODE,
   STATIONS,
 } from "./gauss-kronrod.ts";
 import { type Motion, move } from "./motion.ts";
+import { project } from "./project.ts";
 import { layStations, type Stations } from "./stations.ts";
 import type { TrackCurve } from "./track-curve.ts";
 
@@ -107,15 +110,15 @@ export function solveStep(
 
 function solveTimes(step: Step, from: number, to: number, start: number): StepStatus {
   const half = (to - from) / 2;
-  const { elapsed, groundSpeed, stations } = step;
+  const { elapsed, stations } = step;
   for (let i = 0; i < STATIONS; i += 1)
     elapsed[i] = ((stations.s[i] as number) - from) / step.lastGroundSpeed;
   const implicit = isImplicit(step);
   let before = elapsed[STATIONS - 1] as number;
   for (let pass = 0; pass < MOST_PASSES; pass += 1) {
-    const status = groundSpeeds(step, start);
+    const status = slownesses(step, start);
     if (status !== PACE_OK) return status;
-    const moved = integrateTimes(elapsed, groundSpeed, step.slowness, half);
+    const moved = integrateTimes(elapsed, step.slowness, half);
     // The next move is about moved²/before, and the figures at the new times are one more such factor better.
     const gain = moved / before;
     if (!implicit || moved * gain * gain <= SETTLED * (elapsed[STATIONS - 1] as number)) {
@@ -158,14 +161,38 @@ function readFlow(
   }
 }
 
-/** Ground speeds at the nodes, as the iteration needs them. */
-function groundSpeeds(step: Step, start: number): PaceStatus {
+/** Slownesses 1/g at the nodes at their present times, as the iteration needs them. */
+function slownesses(step: Step, start: number): PaceStatus {
+  const { medium, slowness, groundSpeed } = step;
   const speed = step.motion.throughSpeed;
-  if (speed === 0) return moveStations(step, start, FIRST_NODE, LAST_NODE);
-  const { medium, along, cross } = step;
-  if (medium !== null) readFlow(medium, step.elapsed, start, along, cross, FIRST_NODE, LAST_NODE);
-  if (step.alongOnly) cross.fill(0);
-  return heldSpeeds(step, speed, FIRST_NODE, LAST_NODE);
+  if (speed > 0 && medium !== null) return heldSlownesses(step, medium, speed, start);
+  const status = moveStations(step, start, FIRST_NODE, LAST_NODE);
+  if (status !== PACE_OK) return status;
+  for (let i = FIRST_NODE; i <= LAST_NODE; i += 1) slowness[i] = 1 / (groundSpeed[i] as number);
+  return PACE_OK;
+}
+
+/** The same at a held speed through the medium, in one pass over the nodes: most of an estimate's time is spent here. */
+function heldSlownesses(step: Step, medium: Flow, speed: number, start: number): PaceStatus {
+  const { elapsed, slowness, alongOnly } = step;
+  const { along, alongChange, cross, crossChange, perSecond } = medium;
+  const sinceSlice = start - medium.from;
+  for (let i = FIRST_NODE; i <= LAST_NODE; i += 1) {
+    const share = (sinceSlice + (elapsed[i] as number)) * perSecond;
+    const a = (along[i] as number) + share * (alongChange[i] as number);
+    const c = alongOnly ? 0 : (cross[i] as number) + share * (crossChange[i] as number);
+    const square = (speed - c) * (speed + c);
+    const g = square > 0 ? a + Math.sqrt(square) : 0;
+    if (!(g > 0)) {
+      step.along[i] = a;
+      step.cross[i] = c;
+      step.failedAt = i;
+      step.motion.solution.throughSpeed = speed;
+      return PACE_CANNOT_HOLD;
+    }
+    slowness[i] = 1 / g;
+  }
+  return PACE_OK;
 }
 
 /** g = a + sqrt(V² - c²) at a range of stations (methods: section 3). */
@@ -213,28 +240,6 @@ function moveStations(step: Step, start: number, first: number, last: number): P
   return PACE_OK;
 }
 
-/** Puts the integral of 1/g up to each station into `elapsed`; returns the largest change. */
-function integrateTimes(
-  elapsed: Float64Array,
-  groundSpeed: Float64Array,
-  slowness: Float64Array,
-  half: number,
-): number {
-  let largest = 0;
-  for (let j = FIRST_NODE; j <= LAST_NODE; j += 1) slowness[j] = 1 / (groundSpeed[j] as number);
-  for (let i = FIRST_NODE; i < STATIONS; i += 1) {
-    let sum = 0;
-    for (let j = FIRST_NODE; j <= LAST_NODE; j += 1) {
-      sum += (INTEGRAL_TO_STATION[i * STATIONS + j] as number) * (slowness[j] as number);
-    }
-    const time = half * sum;
-    const moved = Math.abs(time - (elapsed[i] as number));
-    if (moved > largest) largest = moved;
-    elapsed[i] = time;
-  }
-  return largest;
-}
-
 function finish(step: Step, start: number, half: number): StepStatus {
   // The nodes at their settled times, and both ends.
   const status = moveStations(step, start, 0, STATIONS - 1);
@@ -262,8 +267,33 @@ function finish(step: Step, start: number, half: number): StepStatus {
   step.use = half * use;
   step.useError = half * Math.abs(use - useGauss);
   step.growth = half * growth;
+  // A held speed at a steady rate has no kinks of its own inside a panel; every other pace may have.
+  if (step.motion.steadyRate < 0) addEndErrors(step, half);
   step.lastGroundSpeed = groundSpeed[STATIONS - 1] as number;
   return PACE_OK;
+}
+
+/**
+ * A pace may change its rule between the outermost node and the end of a step, where neither sum looks. What the nodes'
+ * polynomial misses of the true value at each end, over that distance, joins the error.
+ */
+function addEndErrors(step: Step, half: number): void {
+  const { groundSpeed, rate } = step;
+  const last = STATIONS - 1;
+  let startTime = -1 / (groundSpeed[0] as number);
+  let endTime = -1 / (groundSpeed[last] as number);
+  let startUse = startTime * (rate[0] as number);
+  let endUse = endTime * (rate[last] as number);
+  for (let j = FIRST_NODE; j <= LAST_NODE; j += 1) {
+    const slowness = 1 / (groundSpeed[j] as number);
+    const spending = slowness * (rate[j] as number);
+    endTime += (AT_END[j] as number) * slowness;
+    endUse += (AT_END[j] as number) * spending;
+    startTime += (AT_END[last - j] as number) * slowness;
+    startUse += (AT_END[last - j] as number) * spending;
+  }
+  step.timeError += half * BEYOND_NODES * (Math.abs(startTime) + Math.abs(endTime));
+  step.useError += half * BEYOND_NODES * (Math.abs(startUse) + Math.abs(endUse));
 }
 
 /** A bound on |∂g/∂t| at a station: |∂a/∂t| + |∂c/∂t| |c| / sqrt(V² - c²). */
