@@ -4,7 +4,7 @@ import { readGridFile } from "../../src/field/csv.ts";
 
 /*
  * One reading of a file in a process of its own, so that the peak of memory is its own too.
- * Called as `node csv-run.js papaparse|grid FILE`; writes { seconds, peak_MB, grid_MB, rows }.
+ * Called as `node read-csv.mjs papaparse|grid FILE`; writes { seconds, peak_MB, grid_MB, rows }.
  */
 
 const [, , way, file] = process.argv as [string, string, string, string];
