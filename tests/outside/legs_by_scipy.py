@@ -5,6 +5,8 @@ positions along geodesics come from PROJ (pyproj), those along rhumb lines from 
 form of the isometric latitude, the field from RegularGridInterpolator (linear), and the integrals from adaptive Runge-Kutta of
 order 8 (DOP853), or from Gauss-Legendre where nothing depends on time, panel by panel between the field's kinks.
 
+A field is given by its nodes, or as a CSV file with the names of its columns, which is then read here as well.
+
 A leg: path, from and to [lat, lon], heights [m] or null, fields (role, lon, lat, height, times in s since departure, u and v as
 [time][level][lat][lon], pole), speed_m_s or another pace, and the craft's figures.
 """
@@ -77,10 +79,35 @@ class Rhumb:
         return np.degrees(phi), lon, course
 
 
+def nodes_of_file(given):
+    """A steady field of one level from a CSV file: components, or speed and the direction that the wind comes from."""
+    with open(given["file"], encoding="utf-8") as lines:
+        rows = np.genfromtxt((x for x in lines if not x.startswith("#")), delimiter=",", names=True)
+    columns = given["columns"]
+    lat, lon = rows[columns["lat"]], rows[columns["lon"]]
+    if "from" in columns:
+        speed, angle = rows[columns["speed"]], np.radians(rows[columns["from"]])
+        u, v = -speed * np.sin(angle), -speed * np.cos(angle)
+    else:
+        u, v = rows[columns["u"]], rows[columns["v"]]
+    lats, lons = np.unique(lat), np.unique(lon)
+    grids = np.full((2, len(lats), len(lons)), np.nan)
+    for grid, values in zip(grids, (u, v)):
+        grid[np.searchsorted(lats, lat), np.searchsorted(lons, lon)] = values
+    assert not np.any(np.isnan(grids))
+    if given["global"]:
+        lons = np.append(lons, lons[0] + 360)
+        grids = np.concatenate([grids, grids[:, :, :1]], axis=2)
+    nodes = {"lon": lons, "lat": lats, "height": None, "times": None, "u": [[grids[0]]], "v": [[grids[1]]]}
+    return {**nodes, "role": given["role"], "pole": given["pole"]}
+
+
 class Field:
     """Linear between nodes; beyond 85 degrees in a frame that does not turn with the meridian."""
 
     def __init__(self, given):
+        if "file" in given:
+            given = nodes_of_file(given)
         self.role = given["role"]
         self.lon, self.lat = np.array(given["lon"]), np.array(given["lat"])
         self.height, self.times = given["height"], given["times"]

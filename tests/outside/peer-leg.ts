@@ -16,6 +16,18 @@ export interface PeerLeg {
   readonly fields: readonly Field[];
   /** The craft's power model as the peer knows it. */
   readonly power: Readonly<Record<string, unknown>>;
+  /** A file that the peer reads for itself, in place of the nodes of `fields`. */
+  readonly peerFile?: PeerFile;
+}
+
+/** A field file with the names of its columns; a steady wind of one level. */
+export interface PeerFile {
+  readonly file: string;
+  readonly role: "wind";
+  readonly columns: Readonly<Record<string, string>>;
+  readonly global: boolean;
+  /** The pole about which directions turn: 1 north, -1 south. */
+  readonly pole: 1 | -1;
 }
 
 interface PeerAnswer {
@@ -29,7 +41,7 @@ export function integrateByPeer(legs: readonly PeerLeg[]): PeerAnswer[] {
   return runPython("legs_by_scipy.py", legs.map(peerInput)) as PeerAnswer[];
 }
 
-function peerInput({ route, craft, pace, fields, power }: PeerLeg) {
+function peerInput({ route, craft, pace, fields, power, peerFile }: PeerLeg) {
   const [from, to] = route.waypoints;
   if (from === undefined || to === undefined) throw new Error("a peer leg has two waypoints");
   const { windage } = craft;
@@ -38,7 +50,7 @@ function peerInput({ route, craft, pace, fields, power }: PeerLeg) {
     from: [from.lat, from.lon],
     to: [to.lat, to.lon],
     heights: from.height_m === null || to.height_m === null ? null : [from.height_m, to.height_m],
-    fields: fields.map(peerField),
+    fields: peerFile === undefined ? fields.map(peerField) : [peerFile],
     pace: {
       hold: pace.hold,
       speed: "speed_m_s" in pace ? pace.speed_m_s : null,
@@ -90,7 +102,10 @@ function peerField({ role, tiles }: Field) {
   };
 }
 
-/** Time, use, distance through the medium and line integrals agree to 1e-10, and time and use within the bounds reported. */
+/** Just above the achieved 1.4e-12 (a line integral in which the field nearly cancels); times and uses agree to 2e-13. */
+const AGREEMENT = 5e-12;
+
+/** Time, use, distance through the medium and line integrals agree, and time and use within the bounds reported. */
 export function expectAgreement(given: PeerLeg, answer: PeerAnswer): void {
   const run = estimateOf(given.route, given).estimate;
   const leg = run.legs[0] as LegEstimate;
@@ -106,14 +121,16 @@ export function expectAgreement(given: PeerLeg, answer: PeerAnswer): void {
   for (const [name, theirs] of Object.entries(values)) {
     const ours = figures[name] as number;
     const apart = Math.abs(ours - theirs);
-    expect(apart / Math.abs(theirs), `${name}: ours ${ours}, theirs ${theirs}`).toBeLessThanOrEqual(1e-10);
+    expect(apart / Math.abs(theirs), `${name}: ours ${ours}, theirs ${theirs}`).toBeLessThanOrEqual(
+      AGREEMENT,
+    );
   }
   const bounds = { time: leg.error?.time_s as number, use: leg.error?.use as number };
   for (const name of ["time", "use"] as const) {
     const apart = Math.abs((figures[name] as number) - (values[name] as number));
     const allowed = bounds[name] + (errors[name] as number);
     expect(apart, `${name}: bound ${bounds[name]}, the peer's ${errors[name]}`).toBeLessThanOrEqual(allowed);
-    // The goal for the bound itself.
-    expect(bounds[name]).toBeLessThanOrEqual(1e-10 * (figures[name] as number));
+    // The bound itself says little more than is achieved.
+    expect(bounds[name]).toBeLessThanOrEqual(AGREEMENT * (figures[name] as number));
   }
 }

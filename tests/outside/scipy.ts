@@ -13,7 +13,7 @@ const MODULES = [
  * @throws Error with one sentence that names the Debian package, if Python or a module is not installed
  */
 export function runPython(program: string, input: unknown): unknown {
-  const python = pythonWithModules();
+  const python = pythonWith(MODULES);
   const path = fileURLToPath(new URL(program, import.meta.url));
   const run = spawnSync(python, [path], {
     input: JSON.stringify(input),
@@ -26,10 +26,16 @@ export function runPython(program: string, input: unknown): unknown {
   return JSON.parse(run.stdout);
 }
 
-function pythonWithModules(): string {
+/**
+ * The first python3 that has these modules.
+ *
+ * @param modules each with the Debian package that brings it
+ * @throws Error with one sentence that names the packages, if there is none
+ */
+export function pythonWith(modules: readonly (readonly [module: string, debianPackage: string])[]): string {
   const missing = new Set<string>();
   for (const python of ["/usr/bin/python3", "python3"]) {
-    const lacking = MODULES.filter(([module]) => spawnSync(python, ["-c", `import ${module}`]).status !== 0);
+    const lacking = modules.filter(([module]) => spawnSync(python, ["-c", `import ${module}`]).status !== 0);
     if (lacking.length === 0) return python;
     for (const [, debianPackage] of lacking) missing.add(debianPackage);
   }
