@@ -87,12 +87,12 @@ export function timeDifference(journeys: Journeys, a: number, b: number, spot: S
   return Math.abs(difference) <= 1e-6 + 1e-11 * (first + second) ? 0 : difference;
 }
 
-/** Whether a parabola through three values of one sign, its extreme among them, comes within its own sag of zero. */
+/** Whether values of one sign, least in the middle, may touch zero on either side of it: the two slopes, drawn on as a tent, do. */
 function mayTouchZero(before: number | null, here: number | null, after: number | null): boolean {
   if (before === null || here === null || after === null) return false;
   const sign = Math.sign(here);
   const nearest = here * sign;
   const sides = [before * sign, after * sign];
   const bend = (sides[0] as number) + (sides[1] as number) - 2 * nearest;
-  return sign !== 0 && sides.every((side) => side >= nearest) && nearest < bend / 4;
+  return sign !== 0 && sides.every((side) => side >= nearest) && nearest < bend / 2;
 }
