@@ -24,6 +24,8 @@ export { estimateRoute, type RouteOutcome, type RouteRun, routeOutcome } from ".
 export { magneticCourse, magneticVariation } from "./estimate/magnetic.ts";
 export { fieldsInUse, type PreparedRoute, prepareRoute } from "./estimate/prepare.ts";
 export type {
+  ArrivalAnswer,
+  ArrivalSolution,
   ErrorBound,
   Estimate,
   FieldAlong,
@@ -43,6 +45,26 @@ export type {
 } from "./estimate/result.ts";
 export type { Route, Waypoint } from "./estimate/route.ts";
 
+// Deciding: when to leave and how fast.
+export { type ArrivalWindow, solveArrival } from "./choose/arrive.ts";
+export { estimateArriving } from "./choose/arriving-estimate.ts";
+export { type DepartureWindow, windowDepartures } from "./choose/departure-window.ts";
+export { type LatestDeparture, latestDeparture } from "./choose/latest-departure.ts";
+export { fastestWithReserve, leastUseSpeed, type PaceCurve, paceCurve } from "./choose/pace-curve.ts";
+export { type RefinedWindow, refineWindow } from "./choose/refine.ts";
+export { type SpeedRange, speedRange } from "./choose/speed-range.ts";
+export type { PacelessConditions } from "./choose/speed-trials.ts";
+export { makeSweep, type Sweep, sweepCell, windowCells } from "./choose/window.ts";
+export { type CellFinding, type WindowCell, windowCell } from "./choose/window-cell.ts";
+export {
+  type Refusal,
+  type RouteSummary,
+  summariseWindow,
+  type WindowBest,
+  type WindowSummary,
+} from "./choose/window-summary.ts";
+export { type WindowAnswer, type WindowRequest, windowPlan } from "./plan/window-plan.ts";
+
 // Reports.
 export { writeCsv } from "./report/csv.ts";
 export { writeGeoJson } from "./report/geojson.ts";
@@ -51,6 +73,10 @@ export type { ReportInput, Units } from "./report/input.ts";
 export { writeInspection } from "./report/inspection-text.ts";
 export { writeJson } from "./report/json.ts";
 export { writeTable } from "./report/table.ts";
+export { writeWindowCsv } from "./report/window-csv.ts";
+export type { WindowReport } from "./report/window-input.ts";
+export { writeWindowJson } from "./report/window-json.ts";
+export { writeWindowTable } from "./report/window-table.ts";
 
 // Plans and craft.
 export type { FieldReference, OpenFile, Plan } from "./plan/plan.ts";

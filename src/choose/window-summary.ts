@@ -3,9 +3,9 @@ import type { CellFinding, WindowCell } from "./window-cell.ts";
 
 /** The best of some cells, among those that are not a `stop`; `null` where there is none. */
 export interface WindowBest {
-  /** Shortest from departure to arrival; of equals the earlier departure. */
+  /** Shortest from departure to arrival, to the millisecond; of equals the earlier departure. */
   readonly time: WindowCell | null;
-  /** Least use; of equals the shorter. */
+  /** Least use, to ten digits; of equals the shorter. */
   readonly use: WindowCell | null;
   /** Latest departure; of equals the shorter passage. */
   readonly latest: WindowCell | null;
@@ -75,13 +75,23 @@ export function bestOf(cells: readonly WindowCell[]): WindowBest {
   const latest = least(possible, (cell) => -Date.parse(cell.departure), passage);
   return {
     time: least(possible, passage, (cell) => Date.parse(cell.departure)),
-    use: least(possible, (cell) => cell.use ?? Number.POSITIVE_INFINITY, passage),
+    use: least(possible, use, passage),
     latest,
     closedBy: latest === null ? null : nextAfter(cells, latest),
   };
 }
 
-const passage = ({ passage_s }: WindowCell): number => passage_s ?? Number.POSITIVE_INFINITY;
+/*
+ * Figures are ranked to the millisecond and to ten digits, so that in a steady field rounding does not choose the departure.
+ */
+
+function passage({ passage_s }: WindowCell): number {
+  return passage_s === null ? Number.POSITIVE_INFINITY : Math.round(1000 * passage_s) / 1000;
+}
+
+function use({ use: spent }: WindowCell): number {
+  return spent === null ? Number.POSITIVE_INFINITY : Number(spent.toPrecision(10));
+}
 
 type Figure = (cell: WindowCell) => number;
 

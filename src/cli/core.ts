@@ -4,6 +4,7 @@
 export {
   checkPlan,
   estimatePlan,
+  fieldSummary,
   InputError,
   inspectField,
   type Land,
@@ -12,10 +13,14 @@ export {
   prepareLand,
   type ReportInput,
   type Units,
+  windowPlan,
   writeCsv,
   writeGeoJson,
   writeGpx,
   writeInspection,
   writeJson,
   writeTable,
+  writeWindowCsv,
+  writeWindowJson,
+  writeWindowTable,
 } from "../index.ts";

@@ -4,10 +4,11 @@ import { ADVISORY } from "./advisory.ts";
 import type { EstimateOptions } from "./estimate-command.ts";
 import type { InspectOptions } from "./inspect-command.ts";
 import { messageLine } from "./message.ts";
+import type { WindowOptions } from "./window-command.ts";
 
 const HELP_WIDTH = 80;
 /** The commands, for messages. */
-export const COMMANDS = "estimate, inspect, check or demo";
+export const COMMANDS = "estimate, window, inspect, check or demo";
 
 const collect = (value: string, before: readonly string[] = []): readonly string[] => [...before, value];
 
@@ -69,6 +70,42 @@ function addEstimate(program: Command, settle: Settle): void {
     .action(async (plan: string, options: EstimateOptions) => {
       const { estimateCommand } = await import("./estimate-command.ts");
       settle(await estimateCommand(plan, options));
+    });
+}
+
+function addWindow(program: Command, settle: Settle): void {
+  program
+    .command("window")
+    .summary("departures and speeds compared, route by route")
+    .description(
+      "Estimates every route of a plan at every departure of a window, and at every speed named: arrival, what is left, the " +
+        "best by time, by use and the latest departure that can be done, and why others cannot. Exit status: 0 some departure " +
+        "can be done, 1 none can, 2 bad input.",
+    )
+    .argument("<plan>", "plan file (*.plan.json); options take the place of its key window")
+    .option("--from <time>", "first departure: ISO 8601 with its zone")
+    .option("--to <time>", "last departure")
+    .option("--every <step>", "from one departure to the next, as 30min")
+    .option("--speeds <speeds>", "in place of the pace's speed, as 8kn,10kn; a leg's own speed stays")
+    .option("--route <name>", "only this route (repeatable)", collect)
+    .option("--refine", "find the bests to the minute")
+    .addOption(
+      new Option("--format <format>", "what to write").choices(["table", "csv", "json"]).default("table"),
+    )
+    .addOption(
+      new Option("--units <units>", "of the table (default: by the craft)").choices(["sea", "air", "metric"]),
+    )
+    .option("--out <file>", "write there, not to standard output")
+    .addHelpText(
+      "after",
+      ending([
+        "legwork window demo/islands.plan.json --from 2027-05-04T06:00Z \\",
+        "    --to 2027-05-04T18:00Z --every 30min --speeds 6kn,8kn --refine",
+      ]),
+    )
+    .action(async (plan: string, options: WindowOptions) => {
+      const { windowCommand } = await import("./window-command.ts");
+      settle(await windowCommand(plan, options));
     });
 }
 
@@ -140,6 +177,7 @@ export function buildProgram(settle: Settle): Command {
     })
     .allowExcessArguments(false);
   addEstimate(program, settle);
+  addWindow(program, settle);
   addInspect(program, settle);
   addCheck(program, settle);
   addDemo(program, settle);

@@ -36,6 +36,12 @@ export function etaText(iso: string | null, clock: Clock): string {
   return clock === "minute" ? `${text.slice(-16, -14)} ${text.slice(-13, -8)}` : text.slice(-13, -5);
 }
 
+/** The time of day of an instant in UTC: `07:31`, or with its seconds. */
+export function clockText(iso: string, clock: Clock): string {
+  const text = roundedInstant(iso, clock);
+  return clock === "minute" ? text.slice(-13, -8) : text.slice(-13, -5);
+}
+
 /** An instant in words: `2027-05-04 07:31 UTC`, with seconds where the clock has them. */
 export function instantText(iso: string | null, clock: Clock): string {
   if (iso === null) return NO_FIGURE;

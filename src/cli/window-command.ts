@@ -1,0 +1,55 @@
+import {
+  fieldSummary,
+  InputError,
+  type Units,
+  windowPlan,
+  writeWindowCsv,
+  writeWindowJson,
+  writeWindowTable,
+} from "./core.ts";
+import { loadLand } from "./load-land.ts";
+import { writeResult } from "./output.ts";
+import { openBeside, readText } from "./plan-files.ts";
+
+export interface WindowOptions {
+  readonly from?: string;
+  readonly to?: string;
+  readonly every?: string;
+  /** Separated by commas. */
+  readonly speeds?: string;
+  readonly route?: readonly string[];
+  readonly refine?: boolean;
+  readonly format: "table" | "csv" | "json";
+  readonly units?: Units;
+  readonly out?: string;
+}
+
+/** Compares the departures of a plan's window and writes them; 1 where none can be done. */
+export async function windowCommand(file: string, options: WindowOptions): Promise<number> {
+  const { from, to, every, speeds, route, refine = false, format, units, out } = options;
+  if (units !== undefined && format !== "table") {
+    throw new InputError(`--units belongs to --format table; found --format ${format}, whose units are SI`);
+  }
+  const answer = await windowPlan(await readText(file), {
+    file,
+    open: openBeside(file),
+    loadLand,
+    refine,
+    ...(from === undefined ? {} : { from }),
+    ...(to === undefined ? {} : { to }),
+    ...(every === undefined ? {} : { every }),
+    ...(speeds === undefined ? {} : { speeds: speeds.split(",") }),
+    ...(route === undefined ? {} : { routes: route }),
+  });
+  const { plan, input, window, cells, summary, refined } = answer;
+  const { title, craft, pace, arrive = null } = plan;
+  const fields = input.fields.map(fieldSummary);
+  const report = { title, fields, craft, pace, arrive, window, cells, summary, refined };
+  const text = {
+    table: () => writeWindowTable(report, units ?? (craft.moves === "air" ? "air" : "sea")),
+    csv: () => writeWindowCsv(report),
+    json: () => writeWindowJson(report),
+  }[format]();
+  await writeResult(text, out);
+  return summary.possible > 0 ? 0 : 1;
+}

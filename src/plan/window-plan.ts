@@ -1,0 +1,70 @@
+import type { DepartureWindow } from "../choose/departure-window.ts";
+import { type RefinedWindow, refineWindow } from "../choose/refine.ts";
+import { makeSweep, windowCells } from "../choose/window.ts";
+import type { WindowCell } from "../choose/window-cell.ts";
+import { summariseWindow, type WindowSummary } from "../choose/window-summary.ts";
+import { InputError } from "../errors.ts";
+import { type EstimateInput, prepareRoutes } from "../estimate/estimate.ts";
+import { parseQuantity } from "../units.ts";
+import { checkPlan, type PlanRequest } from "./estimate-plan.ts";
+import type { Plan } from "./plan.ts";
+import { parseTime } from "./time.ts";
+
+/** What a door hands over beside the plan's text; parts of the window given here take the place of the plan's. */
+export interface WindowRequest extends PlanRequest {
+  /** First and last departure, ISO 8601 with a zone. */
+  readonly from?: string;
+  readonly to?: string;
+  /** Step, as `30 min`. */
+  readonly every?: string;
+  /** Speeds to try, as `8 kn`. */
+  readonly speeds?: readonly string[];
+  /** Whether the bests are refined to the minute. */
+  readonly refine?: boolean;
+}
+
+/** A window of departures, answered. */
+export interface WindowAnswer {
+  readonly plan: Plan;
+  readonly input: EstimateInput;
+  readonly window: DepartureWindow;
+  readonly cells: readonly WindowCell[];
+  readonly summary: WindowSummary;
+  readonly refined: RefinedWindow | null;
+}
+
+/**
+ * Compares departures: reads a plan with its craft and fields and estimates every route × departure × speed of its window.
+ *
+ * Errors: an InputError in one sentence for whatever is wrong in what the user gave.
+ */
+export async function windowPlan(text: string, request: WindowRequest): Promise<WindowAnswer> {
+  const { plan, input } = await checkPlan(text, request);
+  const window = windowAsked(plan.window, request);
+  const sweep = makeSweep(prepareRoutes(input), input, plan.arrive ?? null);
+  const cells = [...windowCells(sweep, window)];
+  const refined = request.refine === true ? refineWindow(sweep, window, cells) : null;
+  return { plan, input, window, cells, summary: summariseWindow(cells), refined };
+}
+
+function windowAsked(
+  planned: DepartureWindow | undefined,
+  { file, from, to, every, speeds }: WindowRequest,
+): DepartureWindow {
+  const needed = (what: string, value: number | undefined): number => {
+    if (value !== undefined) return value;
+    throw new InputError(
+      `a window of departures needs from, to and every, in the plan or beside it; found no ${what} in either`,
+      { file, key: "window" },
+    );
+  };
+  return {
+    from: needed("from", from === undefined ? planned?.from : parseTime(from, "from")),
+    to: needed("to", to === undefined ? planned?.to : parseTime(to, "to")),
+    every_s: needed("every", every === undefined ? planned?.every_s : parseQuantity(every, "time", "every")),
+    speeds_m_s:
+      speeds === undefined
+        ? (planned?.speeds_m_s ?? null)
+        : speeds.map((speed) => parseQuantity(speed, "speed", "speeds")),
+  };
+}

@@ -1,0 +1,113 @@
+import type { WindowCell } from "../choose/window-cell.ts";
+import type { RouteSummary, WindowBest } from "../choose/window-summary.ts";
+import { type Column, laidOut, TABLE_WIDTH } from "./columns.ts";
+import { NO_FIGURE, placedText } from "./number-text.ts";
+import { clipped, displayWidth, isolated, plainText, wrapped } from "./plain-text.ts";
+import { inLastPlace, leftInLastPlace } from "./rounding.ts";
+import { clockSeconds, durationText, etaText, instantText } from "./time-text.ts";
+import type { WindowReport } from "./window-input.ts";
+import { reasonWord } from "./window-matrix.ts";
+import type { WindowUnits } from "./window-units.ts";
+
+const STORE_WIDTH = 7;
+
+interface Row {
+  readonly what: string;
+  readonly cell: WindowCell;
+}
+
+function rowsOf(best: WindowBest): Row[] {
+  const all: readonly [string, WindowCell | null][] = [
+    ["least time", best.time],
+    ["least use", best.use],
+    ["latest", best.latest],
+  ];
+  return all.flatMap(([what, cell]) => (cell === null ? [] : [{ what, cell }]));
+}
+
+function columnsOf(rows: readonly Row[], units: WindowUnits): Column[] {
+  const { speed, store, clock } = units;
+  const amount = (value: number | null, round: (value: number, decimals: number) => number) =>
+    placedText(
+      value === null ? null : round(value / store.size, store.decimals),
+      store.decimals,
+      STORE_WIDTH,
+    );
+  const speedText = ({ speed_m_s }: WindowCell) =>
+    speed_m_s === null ? NO_FIGURE : (speed_m_s / speed.size).toFixed(speed.decimals);
+  const timeText = ({ passage_s }: WindowCell) =>
+    durationText(passage_s === null ? null : Math.round(passage_s / clockSeconds(clock)), clock, 8);
+  const speeds: Column[] = units.speeds
+    ? [{ head: ["Speed", speed.symbol], cells: rows.map(({ cell }) => speedText(cell)) }]
+    : [];
+  return [
+    ...speeds,
+    { head: ["ETD", "dd hh:mm"], cells: rows.map(({ cell }) => etaText(cell.departure, "minute")) },
+    {
+      head: ["ETA", clock === "minute" ? "dd hh:mm" : "hh:mm:ss"],
+      cells: rows.map(({ cell }) => etaText(cell.arrival, clock)),
+    },
+    {
+      head: ["Time", clock === "minute" ? "h:mm" : "h:mm:ss"],
+      cells: rows.map(({ cell }) => timeText(cell)),
+    },
+    { head: ["Use", store.symbol], cells: rows.map(({ cell }) => amount(cell.use, inLastPlace)) },
+    { head: ["Left", store.symbol], cells: rows.map(({ cell }) => amount(cell.remaining, leftInLastPlace)) },
+  ];
+}
+
+/** The bests of all cells, and of each route where there are several, to the minute where that was asked for. */
+export function windowBests({ summary, refined }: WindowReport, units: WindowUnits): string[] {
+  const own = refined?.routes ?? summary.routes;
+  const several = own.length > 1;
+  const overall = rowsOf(refined?.best ?? summary.best);
+  const rows = [...overall, ...(several ? own.flatMap(({ best }) => rowsOf(best)) : [])];
+  if (rows.length === 0) return ["Nothing in the window can be done."];
+  const rest = columnsOf(rows, units);
+  const whats = rows.map(({ what }, index) => (index < overall.length ? `of all, ${what}` : what));
+  const width = [
+    { head: ["", "Best"], cells: several ? whats : rows.map(({ what }) => what) },
+    ...rest,
+  ].reduce((sum, column) => sum + Math.max(...[...column.head, ...column.cells].map(displayWidth)) + 1, 0);
+  const names = rows.map(({ cell }) => isolated(clipped(plainText(cell.route), TABLE_WIDTH - width)));
+  const { head, rows: lines } = laidOut(
+    [
+      { head: ["", "Best"], cells: several ? whats : rows.map(({ what }) => what), align: "left" },
+      { head: ["", "Route"], cells: names, align: "left" },
+      ...rest,
+    ],
+    0,
+  );
+  return [...head, ...lines, ...closing(refined?.best ?? summary.best)];
+}
+
+function closing({ latest, closedBy }: WindowBest): string[] {
+  if (latest === null) return [];
+  const text =
+    closedBy === null
+      ? "The window ends with the latest departure: later ones were not tried."
+      : `After the latest departure, on the same route: ${plainText(closedBy.message)}.`;
+  return wrapped(text, TABLE_WIDTH);
+}
+
+/** Why cells cannot be done, route by route; nothing where all can. */
+export function refusalLines(routes: readonly RouteSummary[]): string[] {
+  const lines = routes.flatMap(({ route, cells, possible, refused }) => {
+    if (refused.length === 0) return [];
+    const name = isolated(clipped(plainText(route), 40));
+    return [
+      `${name}: ${cells - possible} of ${cells} cannot be done`,
+      ...refused.flatMap(({ code, cells: count, from, to, message }) => {
+        const first = instantText(from, "minute");
+        const span =
+          from === to ? first : `first ${first.replace(" UTC", "")}, last ${instantText(to, "minute")}`;
+        return wrapped(
+          `${count}, ${span}: ${plainText(message)}`,
+          TABLE_WIDTH,
+          `  ${reasonWord(code).padEnd(12)}`,
+        );
+      }),
+    ];
+  });
+  return lines.length === 0 ? [] : ["Why", ...lines];
+}

@@ -1,0 +1,63 @@
+import type { WindowCell } from "../choose/window-cell.ts";
+import type { WindowBest } from "../choose/window-summary.ts";
+import { ADVISORY } from "../constants.ts";
+import { csvCell } from "./csv.ts";
+import type { WindowReport } from "./window-input.ts";
+
+type CsvColumn = readonly [header: string, cell: (cell: WindowCell) => string | number | null];
+
+function columns(unit: string, best: WindowBest): readonly CsvColumn[] {
+  return [
+    ["route", ({ route }) => route],
+    ["departure [UTC]", ({ departure }) => departure],
+    ["speed [m/s]", ({ speed_m_s }) => speed_m_s],
+    ["status", ({ status }) => status],
+    ["arrival [UTC]", ({ arrival }) => arrival],
+    ["time under way [s]", ({ time_s }) => time_s],
+    ["departure to arrival [s]", ({ passage_s }) => passage_s],
+    [`use [${unit}]`, ({ use }) => use],
+    [`left [${unit}]`, ({ remaining }) => remaining],
+    [`reserve [${unit}]`, ({ reserve }) => reserve],
+    ["best", (cell) => bestWords(cell, best)],
+    ["finding", ({ worst }) => worst?.code ?? null],
+    ["message", ({ worst }) => worst?.message ?? null],
+    ["advisory", () => ADVISORY],
+  ];
+}
+
+/** What a cell is the best by: `time`, `use`, `latest departure`. */
+export function bestWords(cell: WindowCell, { time, use, latest }: WindowBest): string {
+  const words: readonly [WindowCell | null, string][] = [
+    [time, "time"],
+    [use, "use"],
+    [latest, "latest departure"],
+  ];
+  return words
+    .filter(([best]) => best !== null && isSameCell(best, cell))
+    .map(([, word]) => word)
+    .join(", ");
+}
+
+export function isSameCell(a: WindowCell, b: WindowCell): boolean {
+  return a.route === b.route && a.departure === b.departure && a.speed_m_s === b.speed_m_s;
+}
+
+/**
+ * A window of departures as CSV (RFC 4180, CRLF, UTF-8 without BOM): one row a cell, SI units in the headers, full precision, an
+ * empty cell where there is no figure; the bests to the minute, where they were asked for, follow as rows of their own.
+ */
+export function writeWindowCsv({ craft, cells, summary, refined }: WindowReport): string {
+  const best = refined?.best ?? summary.best;
+  const found = [best.time, best.use, best.latest].filter((cell) => cell !== null);
+  const added = found.filter(
+    (cell, index) =>
+      !cells.some((known) => isSameCell(known, cell)) &&
+      !found.slice(0, index).some((known) => isSameCell(known, cell)),
+  );
+  const all = columns(craft.store.unit, best);
+  const lines = [
+    all.map(([header]) => csvCell(header)),
+    ...[...cells, ...added].map((cell) => all.map(([, of]) => csvCell(of(cell)))),
+  ];
+  return lines.map((line) => `${line.join(",")}\r\n`).join("");
+}
