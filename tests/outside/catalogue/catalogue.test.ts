@@ -9,6 +9,7 @@ import { LEFT_OUT, NOT_YET_COVERED } from "./not-covered.ts";
 import { sailings } from "./sailings.ts";
 import { standards } from "./standards.ts";
 import { straightZermeloGroundSpeed, triangles } from "./triangles.ts";
+import { turningBack } from "./turning-back.ts";
 
 /*
  * Every case of checks.json against our figures: one test a quantity (more where it is reached in several ways), its tolerances
@@ -23,6 +24,7 @@ const ANSWERS: Answers = {
   ...griddedWinds,
   ...energy,
   ...standards,
+  ...turningBack,
 };
 
 const answersTo = (id: string, quantity: string): readonly Answer[] => {

@@ -11,7 +11,6 @@ export const NOT_YET_COVERED: Readonly<Record<string, string>> = {
     "no wind profile law: heights between levels are interpolated, outside them the nearest level holds",
   "PRO-03":
     "no wind profile law: heights between levels are interpolated, outside them the nearest level holds",
-  "PNR-02": "the point of no return is not offered yet",
   "UNIT-03": "the Beaufort scale is not used: winds are in knots or metres a second",
   "SAFE-01": "stages of a voyage plan, for the wording of caveats only",
   "SAFE-02": "no state's reserve rule is built in: the reserve is the user's own",
@@ -28,6 +27,4 @@ export const LEFT_OUT: Readonly<Record<string, string>> = {
   "ATM-03.rule_of_thumb_ft": "a rule of thumb that is not offered",
   "ATM-05.geopotential_m": "heights are not changed from geometric to geopotential: taken from the case",
   "UNIT-02.authalic_R2_m": "the authalic radius is not used",
-  "PNR-01.etp_from_departure_nm": "the equal-time point is not offered yet",
-  "PNR-01.time_each_way_min": "the equal-time point is not offered yet",
 };

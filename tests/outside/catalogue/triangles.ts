@@ -14,7 +14,7 @@ import { type Answers, given } from "./catalogue.ts";
 type Flow = { readonly u: number; readonly v: number };
 
 /** The triangle of a course at a speed, which must be one that can be held. */
-function held(course_deg: number, throughSpeed: number, flow: Flow): HeldTriangle {
+export function held(course_deg: number, throughSpeed: number, flow: Flow): HeldTriangle {
   const triangle = solveTriangle({ course_deg, throughSpeed, ...flow });
   if (!triangle.holdable) throw new Error(`course ${course_deg} cannot be held`);
   return triangle;
@@ -92,22 +92,6 @@ const zermelo = () => {
   const straight = currentSet(displacement[0] as number, displacement[1] as number);
   const triangle = held(straight.set_deg, V, current);
   return { time: straight.drift / triangle.groundSpeed, heading: triangle.heading_deg };
-};
-
-const pnr01 = (head: number) => {
-  const { tas_kn, headwind_kn } = given("PNR-01");
-  return held(90, tas_kn as number, componentsFromWind(headwind_kn as number, head > 0 ? 90 : 270))
-    .groundSpeed;
-};
-
-const airDistance = () => {
-  const { ground_distance_nm, tas_kn, gs_kn } = given("PNR-04");
-  const headwind = fromUnit((tas_kn as number) - (gs_kn as number), "kn");
-  const run = equatorLeg(fromUnit(ground_distance_nm as number, "NM"), {
-    speed: fromUnit(tas_kn as number, "kn"),
-    fields: [uniformWind({ u: -headwind, v: 0 })],
-  });
-  return toUnit(run.estimate.legs[0]?.throughDistance_m as number, "NM");
 };
 
 export const triangles: Answers = {
@@ -194,13 +178,6 @@ export const triangles: Answers = {
   "ZER-04": {
     time: { words: "time of the straight leg in a uniform current", ours: () => zermelo().time },
     heading_deg: { words: "heading of the straight leg", ours: () => zermelo().heading },
-  },
-  "PNR-01": {
-    gs_out: { words: "ground speed out", ours: () => pnr01(1) },
-    gs_home: { words: "ground speed home", ours: () => pnr01(-1) },
-  },
-  "PNR-04": {
-    net_air_distance_nm: { words: "distance through the air of a whole leg", ours: airDistance },
   },
 };
 
