@@ -1,6 +1,7 @@
 import * as z from "zod";
 import { columnNames } from "../field/column-names.ts";
 import { craftSchema } from "./craft-schema.ts";
+import { errorSchema } from "./error-schema.ts";
 import { paceSchema } from "./pace-schema.ts";
 import { parseCoordinate } from "./position.ts";
 import {
@@ -16,6 +17,7 @@ import {
   sentence,
 } from "./schema-parts.ts";
 import { time } from "./time-schema.ts";
+import { whatIfSchema } from "./what-if-schema.ts";
 import { windowSchema } from "./window-schema.ts";
 
 const coordinate = (axis: "lat" | "lon", description: string) => {
@@ -116,6 +118,7 @@ const field = objectOf(
     ).optional(),
     beyond: oneOf("beyond", ["stop", "hold"], "After the last valid time; stop unless given.").optional(),
     outside: oneOf("outside", ["stop", "zero"], "Outside the grid's area; stop unless given.").optional(),
+    error: errorSchema.optional(),
   },
   "A file of gridded wind or current.",
 );
@@ -155,6 +158,13 @@ export const planSchema = objectOf(
       "Files of wind and current; the earlier wins where two overlap.",
     ).optional(),
     routes: listOf("routes", route, 1, "route", "The candidate routes."),
+    whatIf: listOf(
+      "whatIf",
+      whatIfSchema,
+      0,
+      "what-ifs",
+      "Changes whose consequences are estimated beside each route.",
+    ).optional(),
     alternates: listOf(
       "alternates",
       alternate,

@@ -1,6 +1,8 @@
 import type { Alternate } from "../choose/alternate.ts";
 import type { ArrivalWindow } from "../choose/arrive.ts";
 import type { DepartureWindow } from "../choose/departure-window.ts";
+import type { ForecastError } from "../choose/forecast-error.ts";
+import type { WhatIf } from "../choose/what-if.ts";
 import type { Craft, Pace, Reserve } from "../craft/craft.ts";
 import type { Route } from "../estimate/route.ts";
 import type { BeyondPolicy, FieldRole, GapPolicy, OutsidePolicy } from "../field/field.ts";
@@ -32,6 +34,10 @@ export interface Plan {
   readonly reserve: Reserve | null;
   readonly fields: readonly FieldReference[];
   readonly routes: readonly Route[];
+  /** Stated errors of the fields, one a role at most; left out where the plan names none. */
+  readonly errors?: readonly ForecastError[];
+  /** Changes to see the consequences of; left out where the plan names none. */
+  readonly whatIfs?: readonly WhatIf[];
   /** Places to turn off to; left out where the plan names none. */
   readonly alternates?: readonly Alternate[];
 }

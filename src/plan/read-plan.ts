@@ -10,7 +10,9 @@ import type { FieldReference, OpenFile, Plan } from "./plan.ts";
 import { type PlanDocument, type PlanParts, planSchema } from "./plan-schema.ts";
 import { readAlternates } from "./read-alternates.ts";
 import { checkOrderedSpeed, readCraft, readCraftDocument } from "./read-craft.ts";
+import { readErrors } from "./read-errors.ts";
 import { readRoutes } from "./read-routes.ts";
+import { readWhatIfs } from "./read-what-ifs.ts";
 import { windowOf } from "./read-window.ts";
 import { readText } from "./text-file.ts";
 
@@ -64,15 +66,22 @@ async function craftOf(
 
 function planOf(parts: PlanParts, craft: Craft, fault: Fault): Plan {
   const window = windowOf(parts, craft, fault);
+  const pace = paceOf(parts, craft, fault);
+  const fields = (parts.fields ?? []).map(fieldOf);
+  const errors = readErrors(parts.fields ?? [], fault);
   return {
     title: parts.title ?? "",
     departure: parts.departure,
     craft,
-    ...paceOf(parts, craft, fault),
+    ...pace,
     ...(window === undefined ? {} : { window }),
     reserve: parts.reserve === undefined ? null : reserveOf(parts.reserve, craft, fault),
-    fields: (parts.fields ?? []).map(fieldOf),
+    fields,
     routes: readRoutes(parts, craft, fault),
+    ...(errors.length === 0 ? {} : { errors }),
+    ...(parts.whatIf === undefined
+      ? {}
+      : { whatIfs: readWhatIfs(parts.whatIf, { pace: pace.pace, fields }, fault) }),
     ...(parts.alternates === undefined ? {} : { alternates: readAlternates(parts.alternates, fault) }),
   };
 }
