@@ -3,8 +3,11 @@ import { describe, expect, test } from "vitest";
 import { estimatePlan } from "../../src/index.ts";
 import { writeCsv } from "../../src/report/csv.ts";
 import { placeWaypoint } from "../../web/state/waypoint-edits.ts";
+import type { Estimator } from "../../web/worker/estimator.ts";
 import { previewField } from "../../web/worker/field-preview.ts";
 import { answerLattice } from "../../web/worker/lattice.ts";
+import type { ReportQuestion } from "../../web/worker/protocol.ts";
+import { writeReport } from "../../web/worker/write-report.ts";
 import { demoEngine } from "./demo-engine.ts";
 
 async function* bytesOf(name: string): AsyncGenerator<Uint8Array> {
@@ -19,7 +22,7 @@ describe("the worker's estimate", () => {
     const own = await estimatePlan(JSON.stringify(plan), { file: "islands.plan.json", open: bytesOf });
     expect(answer.estimate).toEqual(own.estimate);
     const { routes, craft, pace } = own.plan;
-    const text = estimator.report({ format: "csv", units: "sea", route: null });
+    const text = reportOf(estimator, { format: "csv", units: "sea", route: null });
     expect(text).toBe(writeCsv({ estimate: own.estimate, routes, craft, pace }));
     expect(answer.landPending).toBe(true);
   });
@@ -61,9 +64,9 @@ describe("the worker's estimate", () => {
 
   test("writes the chosen route alone", async () => {
     const { plan, estimator } = demoEngine("islands");
-    expect(estimator.report({ format: "csv", units: "sea", route: 0 })).toBeNull();
+    expect(estimator.answered()).toBeNull();
     await estimator.estimate(plan);
-    const text = estimator.report({ format: "table", units: "metric", route: 1 }) ?? "";
+    const text = reportOf(estimator, { format: "table", units: "metric", route: 1 });
     expect(text).toContain(plan.routes[1]?.name ?? "?");
     expect(text).not.toContain(`== ${plan.routes[0]?.name}`);
   });
@@ -132,6 +135,12 @@ describe("the worker's fields", () => {
     expect(mapped.used).toEqual(["zeit", "breite", "laenge", "u", "v"]);
   });
 });
+
+function reportOf(estimator: Estimator, question: ReportQuestion): string {
+  const input = estimator.answered();
+  if (input === null) throw new Error("nothing was estimated");
+  return writeReport(input, question);
+}
 
 function rows(): string[] {
   return [50, 51].flatMap((lat) => [0, 1].map((lon) => `2027-05-04T06:00Z,${lat},${lon},1,2\n`));

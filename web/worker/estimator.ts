@@ -11,22 +11,18 @@ import {
   type ReportInput,
   type Route,
   readPlanDocument,
-  writeCsv,
-  writeGeoJson,
-  writeGpx,
-  writeJson,
-  writeTable,
 } from "./core.ts";
 import type { FieldShelf } from "./field-shelf.ts";
 import type { FileShelf } from "./file-shelf.ts";
 import type { LandShelf } from "./land-shelf.ts";
-import type { EstimateAnswer, ReportQuestion } from "./protocol.ts";
+import type { EstimateAnswer } from "./protocol.ts";
 import { drawRoute } from "./route-drawing.ts";
 
 /** Answers plans, keeping what it prepared for routes that did not change. */
 export interface Estimator {
   estimate(plan: PlanDocument): Promise<EstimateAnswer>;
-  report(question: ReportQuestion): string | null;
+  /** What the estimate last made can be written from; `null` where there is none. */
+  answered(): ReportInput | null;
 }
 
 export function createEstimator(files: FileShelf, fields: FieldShelf, land: LandShelf): Estimator {
@@ -66,7 +62,7 @@ export function createEstimator(files: FileShelf, fields: FieldShelf, land: Land
         throw fault;
       }
     },
-    report: (question) => (last === null ? null : written(last, question)),
+    answered: () => last,
   };
 }
 
@@ -92,30 +88,5 @@ function createPreparation(): (
       kept.set(key, prepared);
       return prepared;
     });
-  };
-}
-
-function written(all: ReportInput, { format, units, route }: ReportQuestion): string {
-  const input = route === null ? all : onlyRoute(all, route);
-  switch (format) {
-    case "table":
-      return writeTable(input, units);
-    case "csv":
-      return writeCsv(input);
-    case "json":
-      return writeJson(input.estimate);
-    case "geojson":
-      return writeGeoJson(input);
-    case "gpx":
-      return writeGpx(input);
-  }
-}
-
-function onlyRoute(input: ReportInput, route: number): ReportInput {
-  const keep = <T>(list: readonly T[]): readonly T[] => list.slice(route, route + 1);
-  return {
-    ...input,
-    routes: keep(input.routes),
-    estimate: { ...input.estimate, routes: keep(input.estimate.routes) },
   };
 }

@@ -36,7 +36,12 @@ const worker: Worker = {
   cancel: (ticket) => fields.cancel(ticket),
   preview: previewField,
   estimate: async (plan) => handEstimate(await estimator.estimate(plan)),
-  report: async (question) => estimator.report(question),
+  async report(question) {
+    const input = estimator.answered();
+    if (input === null) return null;
+    const { writeReport } = await import("./write-report.ts");
+    return writeReport(input, question);
+  },
   lattice: async (question) => handLattice(answerLattice(fields.current(), question)),
   coastTile: async (z, x, y, detail) => handTile(await coast.tile(z, x, y, detail)),
   async loadFineCoast() {
