@@ -61,7 +61,7 @@ function toldIn({ code }: Example): Told[] {
   });
 }
 
-async function valueOf({ before, expression }: Told, file: string): Promise<unknown> {
+async function evaluated({ before, expression }: Told, file: string): Promise<unknown> {
   const own = (await import(join(root, file))) as Record<string, unknown>;
   const scope: Record<string, unknown> = { ...surface, ...own };
   const Async = Object.getPrototypeOf(async () => undefined).constructor as new (
@@ -92,7 +92,7 @@ describe("the examples in the docstrings", () => {
       const all = toldIn(example);
       expect(all.length, "an example tells a value behind // →").toBeGreaterThan(0);
       for (const one of all) {
-        const value = await valueOf(one, example.file);
+        const value = await evaluated(one, example.file);
         const expected: unknown = new Function(`return (${one.told});`)();
         expect(agrees(value, expected, one.told), `${one.expression} is ${JSON.stringify(value)}`).toBe(true);
       }
