@@ -1,6 +1,8 @@
 import { estimateArriving } from "../choose/arriving-estimate.ts";
 import type { DecidedEstimate } from "../choose/decided.ts";
+import type { SensitivityProfile } from "../choose/sensitivity-profile.ts";
 import { withTurnBack } from "../choose/turn-back-estimate.ts";
+import { withUncertainty } from "../choose/uncertain-estimate.ts";
 import type { Land } from "../coast/land.ts";
 import { InputError } from "../errors.ts";
 import {
@@ -36,6 +38,8 @@ export interface PlanRequest {
 export interface PlanAnswer extends EstimateAnswer {
   /** Its routes carry `turnBack` where the plan has alternates or the request asks for it. */
   readonly estimate: DecidedEstimate;
+  /** Per route, where a wrong forecast would hurt most; left out where the plan states no error. */
+  readonly sensitivities?: readonly (SensitivityProfile | null)[];
   readonly plan: Plan;
   readonly input: EstimateInput;
 }
@@ -52,7 +56,10 @@ export async function estimatePlan(text: string, request: PlanRequest): Promise<
   const answer = answerOf(plan, input, prepared);
   const { alternates = [] } = plan;
   const isAsked = alternates.length > 0 || request.turnBack === true;
-  return { ...(isAsked ? withTurnBack(answer, prepared, input, alternates) : answer), plan, input };
+  const turned = isAsked ? withTurnBack(answer, prepared, input, alternates) : answer;
+  const { whatIfs = [], errors = [] } = plan;
+  if (whatIfs.length === 0 && errors.length === 0) return { ...turned, plan, input };
+  return { ...withUncertainty(turned, prepared, input, { whatIfs, errors }), plan, input };
 }
 
 /** Estimates what is read: at the plan's pace, or at the speeds that make the arrival it asks for. */

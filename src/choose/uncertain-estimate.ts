@@ -1,0 +1,73 @@
+import type { Pace } from "../craft/craft.ts";
+import type { Conditions } from "../estimate/conditions.ts";
+import type { EstimateAnswer, EstimateInput } from "../estimate/estimate.ts";
+import { fieldsInUse, type PreparedRoute } from "../estimate/prepare.ts";
+import type { Profile, RouteEstimate } from "../estimate/result.ts";
+import { arrivalSpeed } from "./arrival-answer.ts";
+import type { DecidedEstimate, DecidedRoute } from "./decided.ts";
+import { errorSpread } from "./error-spread.ts";
+import type { ForecastError } from "./forecast-error.ts";
+import type { SensitivityProfile } from "./sensitivity-profile.ts";
+import { speedRange } from "./speed-range.ts";
+import type { WhatIf } from "./what-if.ts";
+import { whatIfResults, whatIfVariants, withWorst } from "./what-if-results.ts";
+
+/** What is asked about how sure an estimate is. */
+export interface UncertaintyAsked {
+  readonly whatIfs: readonly WhatIf[];
+  readonly errors: readonly ForecastError[];
+}
+
+export interface UncertainAnswer extends EstimateAnswer {
+  readonly estimate: DecidedEstimate;
+  /** Per route, where a wrong forecast would hurt most; `null` where there is no spread. */
+  readonly sensitivities: readonly (SensitivityProfile | null)[];
+}
+
+/**
+ * An estimate with what-ifs and the spread under the stated forecast error worked out for each of its routes, at the pace at
+ * which it was estimated. The worst what-if decides the status of a route that is better itself.
+ *
+ * @param prepared by `prepareRoutes`, from the same input
+ * @throws InputError for a what-if that the pace or the craft does not allow
+ */
+export function withUncertainty(
+  { estimate, profiles }: EstimateAnswer & { readonly estimate: DecidedEstimate },
+  prepared: readonly PreparedRoute[],
+  input: EstimateInput,
+  { whatIfs, errors }: UncertaintyAsked,
+): UncertainAnswer {
+  const conditions = estimate.routes.map((route, index) => conditionsOf(route, input, index));
+  const results = whatIfResults(prepared, conditions, whatIfs);
+  const spreads = estimate.routes.map((route, index) => {
+    const run = { estimate: route, profile: profiles[index] as Profile };
+    const given = conditions[index] as Conditions;
+    return errors.length === 0 ? null : errorSpread(prepared[index] as PreparedRoute, given, run, errors);
+  });
+  const routes = estimate.routes.map((route, index): DecidedRoute => {
+    const whatIf = results[index] ?? [];
+    const told = {
+      ...route,
+      ...(errors.length === 0 ? {} : { spread: spreads[index]?.spread ?? null }),
+      ...(whatIfs.length === 0 ? {} : { whatIf }),
+    };
+    return withWorst(told, whatIfVariants(whatIf));
+  });
+  return {
+    estimate: { ...estimate, routes },
+    profiles,
+    sensitivities: spreads.map((spread) => spread?.profile ?? null),
+  };
+}
+
+/** A route's conditions, at the pace at which it was estimated. */
+export function conditionsOf(route: RouteEstimate, input: EstimateInput, index: number): Conditions {
+  const { departure, craft, reserve, fields } = input;
+  return { departure, craft, reserve, fields: fieldsInUse(craft, fields), pace: paceOf(route, input, index) };
+}
+
+/** A route that should arrive at some time was estimated at the speed found for that. */
+function paceOf({ arrive }: RouteEstimate, { craft, pace, paces }: EstimateInput, index: number): Pace {
+  if (arrive === undefined) return paces?.[index] ?? pace;
+  return { hold: "through-speed", speed_m_s: arrivalSpeed(arrive) ?? speedRange(craft).max };
+}
