@@ -47,14 +47,14 @@ interface Pieces {
  * around it, so fine that what the straight lines between nodes leave is below the case's tolerance. One grid of that step for
  * the whole line would have 10^9 nodes: both lines pass 2.5° from the pole, where each node's east and north turn apart.
  */
-function cutIntoLegs(track: Track, step: number, speed: number, flow: Vector): Pieces {
+function cutIntoLegs(track: Track, speed: number, flow: Vector): Pieces {
   const sums = { integral: 0, time: 0, leastAlong: Number.POSITIVE_INFINITY, greatestAlong: 0 };
   let a = track.at(0);
   for (let s = 0; s < track.length; ) {
     const shrink = cosine(a.lat);
     s = Math.min(s + LEG_M * shrink, track.length);
     const b = track.at(s);
-    const grid = { lon: axisAround(a.lon, b.lon, step), lat: axisAround(a.lat, b.lat, step * shrink) };
+    const grid = { lon: axisAround(a.lon, b.lon, STEP), lat: axisAround(a.lat, b.lat, STEP * shrink) };
     const field = gridField("wind", grid, flow);
     const leg = flown(straight(a, b, track.path), { speed, fields: [field] });
     sums.integral += integral(leg);
@@ -69,12 +69,8 @@ function cutIntoLegs(track: Track, step: number, speed: number, flow: Vector): P
 }
 /** Length of a leg at the equator, m; legs and steps of latitude shrink toward the pole as the parallels do. */
 const LEG_M = 6000;
-/*
- * Steps between nodes, degrees of longitude, and at the equator of latitude: h²/12 of the wind's second derivatives is left, which
- * are 10 to 100 times larger in LINE-04.
- */
-const LINE_01_STEP = 0.0018;
-const LINE_04_STEP = 0.001;
+/** Step between nodes, degrees of longitude, and at the equator of latitude: h²/12 of the second derivatives is left. */
+const STEP = 0.0018;
 
 function axisAround(x: number, y: number, step: number): number[] {
   const low = Math.min(x, y) - step / 3;
@@ -91,7 +87,7 @@ const rotatingGeodesic = (back: boolean) => {
   const { from, to } = endsOf("LINE-01");
   const speed = given("LINE-01").tas_ms as number;
   const track = makeTrack(back ? to : from, back ? from : to, "geodesic");
-  return cutIntoLegs(track, LINE_01_STEP, speed, rotation);
+  return cutIntoLegs(track, speed, rotation);
 };
 const rotatingOut = once(() => rotatingGeodesic(false));
 const rotatingBack = once(() => rotatingGeodesic(true));
@@ -127,7 +123,7 @@ const gradient: Vector = (lon, lat) => {
 };
 const alongGradient = (path: PathKind): number => {
   const { from, to } = endsOf("LINE-04");
-  return cutIntoLegs(makeTrack(from, to, path), LINE_04_STEP, 100, gradient).integral;
+  return cutIntoLegs(makeTrack(from, to, path), 100, gradient).integral;
 };
 
 /** LINE-04 again, by way of the meridian of the start and the parallel of the destination, on grid lines that follow them. */
@@ -136,12 +132,12 @@ function alongDetour(): number {
   const corner = { lat: to.lat, lon: from.lon };
   const meridian = gridField(
     "wind",
-    { lon: [from.lon - 1, from.lon, from.lon + 1], lat: spaced(to.lat, from.lat, 40_000) },
+    { lon: [from.lon - 1, from.lon, from.lon + 1], lat: spaced(to.lat, from.lat, 20_000) },
     gradient,
   );
   const parallel = gridField(
     "wind",
-    { lon: spaced(from.lon, to.lon, 200_000), lat: [to.lat - 1, to.lat, to.lat + 1] },
+    { lon: spaced(from.lon, to.lon, 100_000), lat: [to.lat - 1, to.lat, to.lat + 1] },
     gradient,
   );
   const south = flown(straight(from, corner, "geodesic"), { speed: 100, fields: [meridian] });
@@ -156,10 +152,10 @@ const equator = (flow: (lon: number) => readonly [number, number]) =>
     fields: [gridField("wind", { lon: [0, 4, 10], lat: [-1, 0, 1] }, flow)],
   });
 
-/** LINE-09: the sine as straight lines between times ten seconds apart. */
+/** LINE-09: the sine as straight lines between times five seconds apart. */
 const tidal = once(() => {
   const { V_kn, amplitude_kn, period_h, distance_nm } = given("LINE-09") as Record<string, number>;
-  const hours = spaced(0, 13, 4680);
+  const hours = spaced(0, 13, 9360);
   const stream = gridField("wind", { lon: [0, 2], lat: [-1, 1], hours }, (_lon, _lat, hour) => [
     fromUnit((amplitude_kn as number) * Math.sin((2 * Math.PI * hour) / (period_h as number)), "kn"),
     0,
@@ -172,7 +168,7 @@ const tidal = once(() => {
 const williamson = (to: Position) => {
   const a = given("LINE-12").a_m as number;
   const u0 = caseOf("LINE-12").expected.u0_ms?.value as number;
-  const field = gridField("wind", { lon: [-100, 0, 100], lat: spaced(-1, 90, 91_000) }, (_, lat) => [
+  const field = gridField("wind", { lon: [-100, 0, 100], lat: spaced(-1, 90, 45_500) }, (_, lat) => [
     u0 * cosine(lat),
     0,
   ]);
