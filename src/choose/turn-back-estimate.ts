@@ -12,6 +12,14 @@ import { turnBack } from "./turn-back.ts";
  * An estimate with turning back and off worked out for each of its routes, at the pace at which it was estimated.
  *
  * @param prepared by `prepareRoutes`, from the same input
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "constant", "rate": "1 kW" }, "store": { "capacity": "10 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const routes = [{ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 3)] }];
+ * const input = { title: "East", departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 5 }, reserve: null, fields: [], routes, land: null };
+ * const prepared = prepareRoutes(input);
+ * withTurnBack(estimatePrepared(prepared, input), prepared, input, []).estimate.routes[0].turnBack.equalTime[0].place.lon.toFixed(6) // → "1.500000"
  */
 export function withTurnBack(
   { estimate, profiles }: EstimateAnswer,

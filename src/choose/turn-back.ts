@@ -21,6 +21,13 @@ import { RouteWalk, type Spot } from "./turn-back-walk.ts";
  *
  * @param prepared the route on the fields in use
  * @throws InputError where the pace has no speed on the route even with every field at zero
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "constant", "rate": "1 kW" }, "store": { "capacity": "10 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const prepared = prepareRoute({ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 3)] }, []);
+ * const conditions = { departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 5 }, reserve: null, fields: [] };
+ * turnBack(prepared, conditions).limits[0].last.distance_m.toFixed(3) // → "90000.000"
  */
 export function turnBack(
   prepared: PreparedRoute,

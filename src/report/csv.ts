@@ -1,10 +1,13 @@
+import type { DecidedRoute } from "../choose/decided.ts";
 import type { FieldAlong, LegEstimate, RouteEstimate, Spread } from "../estimate/result.ts";
 import type { Route, Waypoint } from "../estimate/route.ts";
 import { reduceTurn } from "../geodesy/angle.ts";
 import type { ReportInput } from "./input.ts";
+import { TURN_BACK_COLUMNS } from "./turn-back-columns.ts";
+import { uncertaintyColumns } from "./uncertainty-columns.ts";
 
 interface Row {
-  readonly route: RouteEstimate;
+  readonly route: DecidedRoute;
   readonly leg: LegEstimate;
   readonly from: Waypoint;
   readonly to: Waypoint;
@@ -82,6 +85,11 @@ function accountColumns(unit: string): CsvColumn[] {
   ];
 }
 
+const TURN_BACK: readonly CsvColumn[] = TURN_BACK_COLUMNS.map(([header, cell]) => [
+  header,
+  ({ route, leg }) => cell(route, leg.leg),
+]);
+
 /** Codes of the findings on a leg; those of the whole route stand on its first leg. */
 function findingCodes(route: RouteEstimate, leg: LegEstimate): string {
   const here = route.findings.filter((finding) => (finding.leg ?? 1) === leg.leg);
@@ -103,7 +111,7 @@ export function csvCell(cell: Cell): string {
   return NEEDS_QUOTES.test(safe) ? `"${safe.replaceAll('"', '""')}"` : safe;
 }
 
-function rowsOf(route: RouteEstimate, geometry: Route | undefined, advisory: string): Row[] {
+function rowsOf(route: DecidedRoute, geometry: Route | undefined, advisory: string): Row[] {
   return route.legs.map((leg, index) => {
     const from = geometry?.waypoints[index];
     const to = geometry?.waypoints[index + 1];
@@ -114,14 +122,19 @@ function rowsOf(route: RouteEstimate, geometry: Route | undefined, advisory: str
 
 /**
  * The legs of every route as CSV (RFC 4180, CRLF, UTF-8 without BOM): one row a leg, SI units in the headers, full precision
- * (the shortest digits that read back to the same number), an empty cell where there is no figure.
+ * (the shortest digits that read back to the same number), an empty cell where there is no figure. Where turning back was
+ * asked for, columns at the end say where on the leg its points are.
  *
  * @example
  * writeCsv({ estimate: { format: "legwork-estimate/1", advisory: "", plan: { title: "Two marks" }, fields: [], routes: [] }, routes: [], craft: { name: "Tender", moves: "water" }, pace: { hold: "least-energy" } }).slice(0, 23) // → "route,status,leg,from,f"
  */
 export function writeCsv({ estimate, routes }: ReportInput): string {
   const unit = estimate.routes[0]?.storeUnit ?? "J";
-  const columns = [...PLACE, ...MOTION, ...accountColumns(unit)];
+  const turns = estimate.routes.some(({ turnBack }) => turnBack !== undefined) ? TURN_BACK : [];
+  const uncertain = uncertaintyColumns(estimate.routes, unit).map(
+    ([header, cell]): CsvColumn => [header, ({ route, leg }) => cell(route, leg.leg)],
+  );
+  const columns = [...PLACE, ...MOTION, ...accountColumns(unit), ...turns, ...uncertain];
   const rows = estimate.routes.flatMap((route, index) => rowsOf(route, routes[index], estimate.advisory));
   const lines = [
     columns.map(([header]) => csvCell(header)),

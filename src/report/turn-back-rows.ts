@@ -23,7 +23,9 @@ function rowsOf(turn: TurnBack): Row[] {
   const name = (goal: number) => goalText(turn.goals[goal] as Goal);
   const limits = turn.limits.flatMap((limit) => {
     const place = noReturn(limit);
-    return place === null ? [] : [{ what: `No return: ${limitText(turn, limit)}`, place, toGo: null }];
+    // Where any of them is last reached, the one that is stands in the table already.
+    if (place === null || limit.goal === null) return [];
+    return [{ what: `No return: ${limitText(turn, limit)}`, place, toGo: null }];
   });
   const equal = turn.equalTime.map(({ between: [a, b], place, time_s }) => ({
     what: `Equal: ${name(a)}, ${name(b)}`,
@@ -48,9 +50,24 @@ function sentence(turn: TurnBack, limit: TurnLimit, units: TableUnits): string[]
   if (last !== null && beyond === null) return [`${goal}: in reach from the whole way.`];
   if (last === null && notKnownFrom === null) return [`${goal}: in reach from nowhere on the way.`];
   if (notKnownFrom === null) return [];
-  const { size, decimals, symbol } = units.length;
-  const from = `${(notKnownFrom.distance_m / size).toFixed(decimals)} ${symbol} from the start`;
+  const from = distanceText(notKnownFrom.distance_m, units);
   return [`${goal}: not known from ${from} on, ${reasonText(reason)} on the way there.`];
+}
+
+/** Where a limit of the craft is first broken on the way to a goal that is arrived at. */
+function brokenLimits({ goals, samples }: TurnBack, units: TableUnits): string[] {
+  return samples.goals.flatMap(({ limit }, goal) => {
+    const first = limit.findIndex((code) => code !== null);
+    if (first < 0) return [];
+    const code = limit[first] === "gust-limit" ? "gust" : "wind";
+    const name = goalText(goals[goal] as Goal);
+    const from = distanceText(samples.distance_m[first] ?? 0, units);
+    return [`The way to ${name} breaks the craft's ${code} limit, first from the sample ${from}.`];
+  });
+}
+
+function distanceText(distance: number, { length }: TableUnits): string {
+  return `${(distance / length.size).toFixed(length.decimals)} ${length.symbol} from the start`;
 }
 
 /** How far a route can still turn back or off: points of no return, equal-time points, and where nothing is in reach. */
@@ -90,8 +107,9 @@ export function turnBackTable({ turnBack: turn }: DecidedRoute, units: TableUnit
   return [
     "Turning back, at once and without stays, the reserve kept",
     ...(rows.length === 0 ? [] : [...head, ...lines]),
-    ...turn.limits
-      .flatMap((limit) => sentence(turn, limit, units))
-      .flatMap((text) => wrapped(text, TABLE_WIDTH)),
+    ...[
+      ...turn.limits.flatMap((limit) => sentence(turn, limit, units)),
+      ...brokenLimits(turn, units),
+    ].flatMap((text) => wrapped(text, TABLE_WIDTH)),
   ];
 }
