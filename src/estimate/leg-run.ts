@@ -80,8 +80,8 @@ function runPanel(run: LegRun, panel: number, start: number, clock: Clock, accep
   while (place < end) {
     const now = start + clock.elapsed;
     const until = resolveAll(flows, panel, Math.max(now, clock.met), step);
-    const failing = flows.find((flow) => flow.state !== "data" && flow.state !== "zero");
-    if (failing !== undefined) return fieldStop(failing, place);
+    for (const flow of flows)
+      if (flow.state !== "data" && flow.state !== "zero") return fieldStop(flow, place);
     let to = Math.min(place + longest, end);
     let status = solveStep(step, curve, piece, panel, polar, place, to, now);
     let met = false;

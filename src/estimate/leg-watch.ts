@@ -48,22 +48,21 @@ export class LegWatch {
 
   /** Reads speeds and fields at the stations of an accepted step that started at `start` seconds. */
   atStations(step: Step, flows: readonly Flow[], start: number): void {
-    const limits = this.#craft.limits;
-    const wind = flows.find((flow) => flow.field.role === "wind") ?? null;
-    const current = flows.find((flow) => flow.field.role === "current") ?? null;
+    const { groundSpeed_m_s, wind_m_s, gust_m_s } = this.#craft.limits;
+    const wind = flowOf(flows, "wind");
+    const current = this.#craft.moves === "water" ? flowOf(flows, "current") : null;
     const stemming = step.motion.groundSpeedFixed;
-    for (let i = 0; i < STATIONS; i += 1) {
-      const s = step.stations.s[i] as number;
-      const time = start + (step.elapsed[i] as number);
-      const g = step.groundSpeed[i] as number;
-      if (limits.groundSpeed_m_s !== null) {
-        const short = limits.groundSpeed_m_s - g;
-        feed(this.#slow, s, short, short);
+    const windCounts = wind !== null && (wind_m_s !== null || current !== null);
+    if (groundSpeed_m_s !== null || stemming || windCounts) {
+      for (let i = 0; i < STATIONS; i += 1) {
+        const s = step.stations.s[i] as number;
+        const g = step.groundSpeed[i] as number;
+        if (groundSpeed_m_s !== null) feed(this.#slow, s, groundSpeed_m_s - g, groundSpeed_m_s - g);
+        if (stemming) feed(this.#stems, s, (step.along[i] as number) - g, step.along[i] as number);
+        if (windCounts) this.#readWind(wind, current, i, s, start + (step.elapsed[i] as number));
       }
-      if (stemming) feed(this.#stems, s, (step.along[i] as number) - g, step.along[i] as number);
-      if (wind !== null) this.#readWind(wind, current, i, s, time);
     }
-    if (wind !== null && limits.gust_m_s !== null) this.#readGusts(step, wind, start, limits.gust_m_s);
+    if (wind !== null && gust_m_s !== null) this.#readGusts(step, wind, start, gust_m_s);
   }
 
   #readWind(wind: Flow, current: Flow | null, i: number, s: number, time: number): void {
@@ -72,7 +71,7 @@ export class LegWatch {
     const windCross = crossAt(wind, i, time);
     const windSpeed = Math.sqrt(windAlong * windAlong + windCross * windCross);
     if (wind_m_s !== null) feed(this.#wind, s, above(windSpeed, wind_m_s), windSpeed);
-    if (current === null || this.#craft.moves !== "water") return;
+    if (current === null) return;
     const along = alongAt(current, i, time);
     const cross = crossAt(current, i, time);
     const speed = Math.sqrt(along * along + cross * cross);
@@ -135,6 +134,11 @@ export class LegWatch {
       { code: "height-outside-field", role, stretch: edges.height },
     ];
   }
+}
+
+function flowOf(flows: readonly Flow[], role: FieldRole): Flow | null {
+  for (const flow of flows) if (flow.field.role === role) return flow;
+  return null;
 }
 
 /** How far a speed is above a limit, m/s; exactly at it, but for rounding, is not above. */
