@@ -2,6 +2,7 @@ import { writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { type Flow, makeFlow, resolve, shareOf } from "../../src/estimate/flow.ts";
 import { STATIONS } from "../../src/estimate/gauss-kronrod.ts";
+import type { PreparedRoute } from "../../src/estimate/prepare.ts";
 import { project } from "../../src/estimate/project.ts";
 import { layMiddle, layStations, makeStations, type Stations } from "../../src/estimate/stations.ts";
 import { sampleLattice } from "../../src/field/lattice.ts";
@@ -13,6 +14,9 @@ import { type Contestant, inProcess, type Timing, takeTurns } from "./timing.ts"
 
 const ROUNDS = 9;
 const DEPARTURE_S = 600;
+const ROUTE = 2;
+/** Times that the points are gone through in a round. */
+const REPEATS = 20;
 /** Speed over ground that gives the points their times, m/s. */
 const ADVANCE = 16;
 const NS = [1e-9, "ns a pair"] as const;
@@ -28,14 +32,14 @@ interface Stretch {
   readonly times: Float64Array;
 }
 
-/** (u, v) pairs along the tracks of the five routes, place and time given. */
+/** (u, v) pairs along the track of a route, place and time given. */
 export async function interpolation(ocean: Ocean, folder: string, peer: PythonPeer | null): Promise<Part> {
-  const routes = ocean.prepared.map((_, route) => stretchesOf(ocean, route));
-  const count = routes.flat().length * STATIONS;
+  const stretches = stretchesOf(ocean);
+  const count = stretches.length * STATIONS * REPEATS;
   const lattice = latticePoints();
   const contestants: Contestant[] = [
-    inProcess("project, station by station", count, () => alongTracks(ocean, routes)),
-    inProcess("sampleField", count, () => samples(ocean, routes)),
+    inProcess("project, station by station", count, () => alongTrack(ocean, stretches)),
+    inProcess("sampleField", count, () => samples(ocean, stretches)),
     inProcess("sampleLattice", lattice.lats.length * lattice.lons.length, () => {
       const time = oceanConditions(ocean.wind, 5000).departure;
       return sampleLattice(ocean.wind, lattice.lats, lattice.lons, null, time).u.reduce((a, b) => a + b, 0);
@@ -43,7 +47,7 @@ export async function interpolation(ocean: Ocean, folder: string, peer: PythonPe
   ];
   if (peer !== null) {
     const file = join(folder, "points.f64");
-    writeFileSync(file, pointTable(routes));
+    writeFileSync(file, pointTable(stretches));
     await peer.ask("points", { file });
     contestants.push({
       name: "RegularGridInterpolator",
@@ -63,9 +67,9 @@ export async function interpolation(ocean: Ocean, folder: string, peer: PythonPe
   };
 }
 
-function stretchesOf({ prepared }: Ocean, route: number): Stretch[] {
+function stretchesOf({ prepared }: Ocean): Stretch[] {
   let sailed = 0;
-  return (prepared[route]?.legs ?? []).flatMap(({ track, curve, panels }, leg) => {
+  return (prepared[ROUTE] as PreparedRoute).legs.flatMap(({ track, curve, panels }, leg) => {
     const begun = sailed / ADVANCE;
     sailed += track.length;
     return Array.from(panels.piece, (piece, panel): Stretch => {
@@ -81,12 +85,13 @@ function stretchesOf({ prepared }: Ocean, route: number): Stretch[] {
 }
 
 /** The engine's own path: data resolved once a panel, projected at its stations, read at their times. */
-function alongTracks({ wind, prepared }: Ocean, routes: readonly (readonly Stretch[])[]): number {
+function alongTrack({ wind, prepared }: Ocean, stretches: readonly Stretch[]): number {
   let sum = 0;
   const flow: Flow = makeFlow(wind, oceanConditions(wind, DEPARTURE_S).departure);
-  for (const [route, stretches] of routes.entries()) {
+  const { legs } = prepared[ROUTE] as PreparedRoute;
+  for (let repeat = 0; repeat < REPEATS; repeat += 1) {
     for (const { leg, panel, polar, stations, start, times } of stretches) {
-      flow.cells = prepared[route]?.legs[leg]?.cells[0] ?? [];
+      flow.cells = legs[leg]?.cells[0] ?? [];
       resolve(flow, panel, start, stations);
       project(flow, panel, polar, stations);
       for (let i = 0; i < STATIONS; i += 1) {
@@ -99,10 +104,10 @@ function alongTracks({ wind, prepared }: Ocean, routes: readonly (readonly Stret
   return sum;
 }
 
-function samples({ wind }: Ocean, routes: readonly (readonly Stretch[])[]): number {
+function samples({ wind }: Ocean, stretches: readonly Stretch[]): number {
   let sum = 0;
   const { departure } = oceanConditions(wind, DEPARTURE_S);
-  for (const stretches of routes) {
+  for (let repeat = 0; repeat < REPEATS; repeat += 1) {
     for (const { stations, times } of stretches) {
       for (let i = 0; i < STATIONS; i += 1) {
         const time = departure + 1000 * (times[i] as number);
@@ -115,17 +120,15 @@ function samples({ wind }: Ocean, routes: readonly (readonly Stretch[])[]): numb
 }
 
 /** (time, lat, lon) in rows, time in seconds from the first valid one. */
-function pointTable(routes: readonly (readonly Stretch[])[]): Float64Array {
-  const rows = routes
-    .flat()
-    .flatMap(({ stations, times }) =>
-      Array.from(times, (time, i) => [
-        DEPARTURE_S + time,
-        stations.lat[i] as number,
-        stations.lon[i] as number,
-      ]),
-    );
-  return Float64Array.from(rows.flat());
+function pointTable(stretches: readonly Stretch[]): Float64Array {
+  const rows = stretches.flatMap(({ stations, times }) =>
+    Array.from(times, (time, i) => [
+      DEPARTURE_S + time,
+      stations.lat[i] as number,
+      stations.lon[i] as number,
+    ]),
+  );
+  return Float64Array.from(Array.from({ length: REPEATS }, () => rows.flat()).flat());
 }
 
 function latticePoints() {
