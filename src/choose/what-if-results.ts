@@ -79,6 +79,11 @@ export function withWorst<Route extends RouteEstimate>(route: Route, variants: r
   return { ...route, status: statusOf(findings), findings };
 }
 
+/** Whether a finding is one that {@link withWorst} added. */
+export function isOfVariant({ leg, message }: Finding): boolean {
+  return leg === null && /^(what if|member) /.test(message);
+}
+
 function worstVariant(route: RouteEstimate, variants: readonly Variant[]): Finding | null {
   const worse = variants.filter(({ status }) => RANK[status] > RANK[route.status]);
   const status = worse.reduce<RouteStatus>(

@@ -14,6 +14,7 @@ import type {
   Totals,
 } from "../estimate/result.ts";
 import { turnBackJson } from "./turn-back-json.ts";
+import { spreadJson, whatIfJson } from "./uncertainty-json.ts";
 
 /*
  * Keys are written out one by one: their order is part of what is promised, and what an estimate may one day carry besides
@@ -147,6 +148,8 @@ function route(value: DecidedRoute): DecidedRoute {
     totals: totals(value.totals),
     legs: value.legs.map(legJson),
     findings: value.findings.map(findingJson),
+    ...(value.spread === undefined ? {} : { spread: value.spread && spreadJson(value.spread) }),
+    ...(value.whatIf === undefined ? {} : { whatIf: value.whatIf.map(whatIfJson) }),
     ...(value.turnBack === undefined ? {} : { turnBack: turnBackJson(value.turnBack) }),
   };
 }

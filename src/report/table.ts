@@ -10,10 +10,12 @@ import { legTable, stayText } from "./leg-rows.ts";
 import { NO_FIGURE } from "./number-text.ts";
 import { clipped, displayWidth, isolated, plainText, wrapped } from "./plain-text.ts";
 import { type RouteFigures, routeFigures } from "./route-figures.ts";
+import { spreadTable } from "./spread-rows.ts";
 import { amountText, tableHead } from "./table-head.ts";
 import { type TableUnits, tableUnits } from "./table-units.ts";
 import { durationText, instantText } from "./time-text.ts";
 import { turnBackTable } from "./turn-back-rows.ts";
+import { whatIfTable } from "./what-if-rows.ts";
 import { withinTable } from "./within-rows.ts";
 
 const STATUS: Record<RouteStatus, string> = { clear: "clear", caution: "with cautions", stop: "STOP" };
@@ -80,6 +82,8 @@ function routeBlock(
     "",
     ...withinTable(route, craft.moves, units),
     "",
+    ...(route.spread === undefined ? [] : [...spreadTable(route, units), ""]),
+    ...(route.whatIf === undefined ? [] : [...whatIfTable(route, units), ""]),
     ...(route.turnBack === undefined ? [] : [...turnBackTable(route, units), ""]),
     ...findingLines(route),
   ];

@@ -1,0 +1,70 @@
+import type { DecidedRoute } from "../choose/decided.ts";
+import type { ErrorSpread } from "../choose/error-spread.ts";
+import type { WeakPlace } from "../choose/sensitivity-profile.ts";
+import type { RouteEstimate } from "../estimate/result.ts";
+import { laidOut, TABLE_WIDTH } from "./columns.ts";
+import { placedText } from "./number-text.ts";
+import { isolated, plainText, wrapped } from "./plain-text.ts";
+import { inLastPlace } from "./rounding.ts";
+import { amountText } from "./table-head.ts";
+import { STORE_WIDTH, type TableUnits } from "./table-units.ts";
+import { durationText } from "./time-text.ts";
+
+/** The spread of a route under the stated forecast error; nothing where the plan states none. */
+export function spreadTable(route: DecidedRoute, units: TableUnits): string[] {
+  const { spread } = route;
+  if (spread === undefined) return [];
+  if (spread === null)
+    return ["Spread under the forecast error: none, since the route ends short or no error acts on it."];
+  return [
+    "Spread under the forecast error (one standard deviation, to first order)",
+    ...legRows(route, spread, units),
+    ...wrapped(`${chanceText(route, spread, units)} ${weakText(route, spread, units)}`, TABLE_WIDTH),
+  ];
+}
+
+function legRows(route: RouteEstimate, spread: ErrorSpread, units: TableUnits): string[] {
+  const { store } = units;
+  const time = (seconds: number) => durationText(Math.round(seconds), "second", 9);
+  const amount = (value: number) =>
+    placedText(inLastPlace(value / store.size, store.decimals), store.decimals, STORE_WIDTH);
+  const legs = [...spread.legs, { ...spread, leg: "All" }];
+  const names = [...route.legs.map(({ to }) => isolated(plainText(to))), ""];
+  const { head, rows } = laidOut(
+    [
+      { head: ["", "Leg"], cells: legs.map(({ leg }) => String(leg)) },
+      { head: ["", "to"], cells: names.map((name) => name.slice(0, 24)), align: "left" },
+      { head: ["Time ±", "h:mm:ss"], cells: legs.map(({ time_s }) => time(time_s)) },
+      { head: ["ETA ±", "h:mm:ss"], cells: legs.map(({ arrival_s }) => time(arrival_s)) },
+      { head: ["Use ±", store.symbol], cells: legs.map(({ use }) => amount(use)) },
+      { head: ["Left ±", store.symbol], cells: legs.map(({ remaining }) => amount(remaining)) },
+    ],
+    0,
+  );
+  return [...head, ...rows];
+}
+
+function chanceText(route: RouteEstimate, { reserveHolds, margin }: ErrorSpread, units: TableUnits): string {
+  const what = route.reserve === 0 ? "The store lasts" : "The reserve holds";
+  return `${what} with a probability of ${percentText(reserveHolds)} (what is left above it ± ${amountText(margin, units)}, taken as normal).`;
+}
+
+/** `93 %`; never 0 % or 100 % unless it is. */
+export function percentText(share: number): string {
+  const percent = share * 100;
+  if (share > 0 && percent < 0.1) return "less than 0.1 %";
+  if (share < 1 && percent > 99.9) return "more than 99.9 %";
+  return `${percent.toFixed(percent > 1 && percent < 99 ? 0 : 1)} %`;
+}
+
+function weakText(route: RouteEstimate, { weakest }: ErrorSpread, units: TableUnits): string {
+  const time = placeText(route, weakest.time, units);
+  const use = placeText(route, weakest.use, units);
+  if (time === use) return `A wrong forecast hurts most ${time}.`;
+  return `A wrong forecast hurts the arrival most ${time}, the use most ${use}.`;
+}
+
+function placeText(route: RouteEstimate, { leg, at_m }: WeakPlace, { length }: TableUnits): string {
+  const from = isolated(plainText(route.legs[leg - 1]?.from ?? ""));
+  return `on leg ${leg}, ${(at_m / length.size).toFixed(Math.min(1, length.decimals))} ${length.symbol} after ${from}`;
+}
