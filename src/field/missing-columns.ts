@@ -1,8 +1,8 @@
 import { quoted } from "../found.ts";
+import { nearest } from "../nearest.ts";
 import { columnNames, isNameOfOnly, namesText, type Quantity, quantityOf } from "./column-names.ts";
 import { splitHeader } from "./column-units.ts";
 import type { FieldRole } from "./field.ts";
-import { nearestName } from "./nearest-name.ts";
 
 /** Characters of a list of headers that a message shows. */
 const HEADERS_SHOWN = 400;
@@ -65,4 +65,11 @@ function missingText(
   });
   const guess = guesses.length === 0 ? "" : `; ${guesses.slice(0, 3).join(", ")}`;
   return `the file has ${what}; found the headers ${headersText(headers)}${guess}`;
+}
+
+/** The name that a header may have been meant as; `null` where even that is more than a third of its letters away. */
+function nearestName(found: string, names: readonly string[]): string | null {
+  if (names.length === 0) return null;
+  const { name, distance } = nearest(found, names);
+  return distance <= Math.max(1, name.length / 3) ? name : null;
 }

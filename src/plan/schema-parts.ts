@@ -1,6 +1,7 @@
 import * as z from "zod";
 import { InputError } from "../errors.ts";
 import { foundText, quoted } from "../found.ts";
+import { nearest } from "../nearest.ts";
 import {
   acceptedText,
   type Dimension,
@@ -9,7 +10,6 @@ import {
   quantityPattern,
   readQuantity,
 } from "../units.ts";
-import { nearestKey } from "./nearest-key.ts";
 
 /*
  * The parts that the schemas of plan and craft are made of. Each gives whole sentences, since zod's own would name neither
@@ -142,7 +142,7 @@ export function sentence(what: string, rule: string, input: unknown): string {
 }
 
 function unknownKeySentence(what: string, key: string, known: readonly string[]): string {
-  return `${what} has no key ${quoted(key)}; the nearest that it has is ${quoted(nearestKey(key, known))}`;
+  return `${what} has no key ${quoted(key)}; the nearest that it has is ${quoted(nearest(key, known).name)}`;
 }
 
 /** The rule that a value breaks, or `null`. */

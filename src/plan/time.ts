@@ -1,11 +1,19 @@
 import { InputError, type Place } from "../errors.ts";
 import { foundText } from "../found.ts";
-
-const DATE_TIME =
-  /^(\d{4})-(\d\d)-(\d\d)[Tt](\d\d):(\d\d)(?::(\d\d)(?:[.,](\d+))?)?(?:([Zz])|([+-])(\d\d)(?::?(\d\d))?)?$/;
+import { EXTENDED_FORMAT, type InstantFault, readInstant } from "../instant.ts";
 
 const TAKES = "an ISO 8601 date and time with its zone";
 const EXAMPLE = 'as "2027-05-04T06:00:00Z"';
+
+const RULES: Readonly<Record<InstantFault, string>> = {
+  form: `takes ${TAKES}, ${EXAMPLE}`,
+  calendar: "takes a date of the calendar",
+  hour: "takes an hour of 00 to 23",
+  minute: "takes a minute of 00 to 59",
+  second: "takes a second of 00 to 59, without leap seconds",
+  "no-zone": "takes an explicit zone: add Z for UTC, or +hh:mm",
+  zone: "takes a zone within a day of UTC, as +02:00",
+};
 
 /**
  * Reads an instant: a date and time in ISO 8601's extended format with an explicit zone (`Z`, `+02:00`, `+0200`, `+02`).
@@ -18,24 +26,9 @@ const EXAMPLE = 'as "2027-05-04T06:00:00Z"';
  * parseTime("1970-01-01T02:00:01+02:00") // → 1000
  */
 export function parseTime(text: unknown, name = "time", place: Place = {}): number {
-  const fault = (rule: string) => new InputError(`${name} ${rule}; found ${foundText(text)}`, place);
-  const match = typeof text === "string" ? DATE_TIME.exec(text.trim()) : null;
-  if (match === null) throw fault(`takes ${TAKES}, ${EXAMPLE}`);
-  const part = (group: number) => Number(match[group] ?? 0);
-  const midnight = new Date(0);
-  midnight.setUTCFullYear(part(1), part(2) - 1, part(3));
-  if (midnight.getUTCMonth() + 1 !== part(2) || midnight.getUTCDate() !== part(3))
-    throw fault("takes a date of the calendar");
-  if (part(4) > 23) throw fault("takes an hour of 00 to 23");
-  if (part(5) > 59) throw fault("takes a minute of 00 to 59");
-  if (part(6) > 59) throw fault("takes a second of 00 to 59, without leap seconds");
-  const sign = match[9];
-  if (match[8] === undefined && sign === undefined)
-    throw fault("takes an explicit zone: add Z for UTC, or +hh:mm");
-  if (part(10) > 23 || part(11) > 59) throw fault("takes a zone within a day of UTC, as +02:00");
-  const lead = (sign === "-" ? -1 : 1) * (part(10) * 60 + part(11));
-  const milliseconds = Math.round(Number(`0.${match[7] ?? "0"}`) * 1000);
-  return midnight.getTime() + ((part(4) * 60 + part(5) - lead) * 60 + part(6)) * 1000 + milliseconds;
+  const read = typeof text === "string" ? readInstant(text.trim(), [EXTENDED_FORMAT]) : "form";
+  if (typeof read === "number") return read;
+  throw new InputError(`${name} ${RULES[read]}; found ${foundText(text)}`, place);
 }
 
 /**

@@ -1,23 +1,26 @@
 /**
- * The known key that takes the fewest insertions, deletions, replacements and exchanges of neighbours to become the one
+ * The known name that takes the fewest insertions, deletions, replacements and exchanges of neighbours to become the one
  * found (optimal string alignment: Damerau, Comm. ACM 7, 1964; Levenshtein, Soviet Physics Doklady 10, 1966), whatever the
- * letters' case; the first of equals.
+ * letters' case; the first of equals, with its distance.
  *
  * @param known at least one
  */
-export function nearestKey(found: string, known: readonly string[]): string {
-  let nearest = known[0] ?? "";
+export function nearest(
+  found: string,
+  known: readonly string[],
+): { readonly name: string; readonly distance: number } {
+  let name = known[0] ?? "";
   let least = Number.POSITIVE_INFINITY;
-  // A longer text is further from every key than any key is long; cutting it bounds the work and not the order.
+  // A longer text is further from every name than any name is long; cutting it bounds the work and not the order.
   const wanted = found.slice(0, 80).toLowerCase();
-  for (const key of known) {
-    const distance = alignmentDistance(wanted, key.toLowerCase());
+  for (const candidate of known) {
+    const distance = alignmentDistance(wanted, candidate.toLowerCase());
     if (distance < least) {
-      nearest = key;
+      name = candidate;
       least = distance;
     }
   }
-  return nearest;
+  return { name, distance: least };
 }
 
 function alignmentDistance(a: string, b: string): number {

@@ -1,5 +1,5 @@
 import { describe, expect, test } from "vitest";
-import { nearestKey } from "../../src/plan/nearest-key.ts";
+import { nearest as nearestOf } from "../src/nearest.ts";
 
 describe("the nearest known key", () => {
   test.each([
@@ -11,14 +11,14 @@ describe("the nearest known key", () => {
     ["", ["title", "lat"], "lat"],
     ["nothing alike", ["format"], "format"],
   ])("of %j among %j is %j", (found, known, nearest) => {
-    expect(nearestKey(found, known)).toBe(nearest);
+    expect(nearestOf(found, known).name).toBe(nearest);
   });
 
   test("the first of equals is taken", () => {
-    expect(nearestKey("lax", ["lat", "lay"])).toBe("lat");
+    expect(nearestOf("lax", ["lat", "lay"]).name).toBe("lat");
   });
 
   test("a very long key is answered at once", () => {
-    expect(nearestKey("x".repeat(1_000_000), ["lat", "departure"])).toBe("lat");
+    expect(nearestOf("x".repeat(1_000_000), ["lat", "departure"]).name).toBe("lat");
   });
 });
