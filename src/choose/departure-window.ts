@@ -1,4 +1,5 @@
 import { InputError } from "../errors.ts";
+import { speedText } from "../estimate/finding-text.ts";
 
 /** Departures to compare, and speeds where they are to be compared too. */
 export interface DepartureWindow {
@@ -43,7 +44,8 @@ export function checkWindow(window: DepartureWindow, routes: number): void {
   const speeds = speeds_m_s ?? [0];
   if (speeds.length === 0) throw new InputError("the speeds of a window are one or more; found none");
   const twice = speeds.find((speed, index) => speeds.indexOf(speed) !== index);
-  if (twice !== undefined) throw new InputError(`the speeds of a window differ; found ${twice} m/s twice`);
+  if (twice !== undefined)
+    throw new InputError(`the speeds of a window differ; found ${speedText(twice)} twice`);
   const cells = departureCount(window) * routes * speeds.length;
   if (cells > MOST_CELLS)
     throw new InputError(

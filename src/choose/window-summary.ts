@@ -106,10 +106,12 @@ export function least(cells: readonly WindowCell[], of: Figure, then: Figure): W
 
 function nextAfter(cells: readonly WindowCell[], latest: WindowCell): CellFinding | null {
   const after = cells.filter(
-    ({ route, speed_m_s, departure }) =>
-      route === latest.route && speed_m_s === latest.speed_m_s && departure > latest.departure,
+    ({ route, departure }) => route === latest.route && departure > latest.departure,
   );
-  return least(after, (cell) => Date.parse(cell.departure), passage)?.worst ?? null;
+  // Where each departure has a speed found for it, hardly any two are at the same.
+  const same = after.filter(({ speed_m_s }) => speed_m_s === latest.speed_m_s);
+  const next = least(same.length > 0 ? same : after, (cell) => Date.parse(cell.departure), passage);
+  return next?.worst ?? null;
 }
 
 function refusals(cells: readonly WindowCell[]): Refusal[] {

@@ -2,6 +2,7 @@ import type { Craft, Pace } from "../craft/craft.ts";
 import { InputError } from "../errors.ts";
 import type { Conditions } from "../estimate/conditions.ts";
 import type { EstimateInput } from "../estimate/estimate.ts";
+import { speedText } from "../estimate/finding-text.ts";
 import { fieldsInUse, type PreparedRoute } from "../estimate/prepare.ts";
 import { arrivalCell } from "./arrival-cell.ts";
 import type { ArrivalWindow } from "./arrive.ts";
@@ -73,6 +74,6 @@ function checkSpeed({ power, name }: Craft, pace: Pace, speed: number): void {
   const { hold } = paceAt(pace, speed);
   if (!(speed > 0) || (hold === "through-speed" && !(speed >= power.min && speed <= power.max)))
     throw new InputError(
-      `a speed of a window lies within the power model of ${name}, ${power.min} to ${power.max} m/s; found ${speed} m/s`,
+      `a speed of a window lies within the power model of ${name}, ${speedText(power.min)} to ${speedText(power.max)}; found ${speedText(speed)}`,
     );
 }

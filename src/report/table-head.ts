@@ -31,7 +31,7 @@ export function paceText(pace: Pace, moves: Medium, unit: ColumnUnit): string {
 
 /** As {@link paceText}, where the pace asks for an arrival. */
 export function arriveText(asked: Pick<ArrivalAnswer, "notBefore" | "notAfter">, moves: Medium): string {
-  return `holds what speed through the ${moves} arrives ${wantedText(asked)}, each route its own`;
+  return `holds the speed through the ${moves} that arrives ${wantedText(asked)}, each route its own`;
 }
 
 /** Files of a field and their validity. */

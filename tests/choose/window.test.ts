@@ -183,8 +183,12 @@ describe("a window", () => {
       /^a window has at most 100000 cells .* found 2 × 86401 × 1 = 172802: take a longer step or a shorter window$/,
     ],
     ["without a speed", { speeds_m_s: [] }, /^the speeds of a window are one or more; found none$/],
-    ["with a speed twice", { speeds_m_s: [4, 5, 4] }, /^the speeds of a window differ; found 4 m\/s twice$/],
-    ["with a speed of 0", { speeds_m_s: [0] }, /found 0 m\/s$/],
+    [
+      "with a speed twice",
+      { speeds_m_s: [4, 5, 4] },
+      /^the speeds of a window differ; found 4\.0 m\/s \(7\.8 kn\) twice$/,
+    ],
+    ["with a speed of 0", { speeds_m_s: [0] }, /found 0\.0 m\/s/],
   ])("%s is refused in one sentence", (_, change, message) => {
     expect(() => windowCells(sweepOf(inputOf()), { ...day, ...change })).toThrow(message);
   });
@@ -196,7 +200,7 @@ describe("a window", () => {
     ]);
     const table = sweepOf(inputOf({ craft: { ...boat, power } }));
     expect(() => windowCells(table, { ...day, speeds_m_s: [5, 7] })).toThrow(
-      "a speed of a window lies within the power model of Craft, 1 to 6 m/s; found 7 m/s",
+      "a speed of a window lies within the power model of Craft, 1.0 m/s (1.9 kn) to 6.0 m/s (11.7 kn); found 7.0 m/s (13.6 kn)",
     );
     const held = sweepOf(inputOf({ pace: { hold: "least-energy" } }));
     expect(() => windowCells(held, { ...day, speeds_m_s: [5] })).toThrow(
