@@ -71,6 +71,14 @@ export const GAUSS_WEIGHT = Float64Array.of(
  */
 export const INTEGRAL_TO_STATION = collocationMatrix();
 
+/** Per node: the value at the end (x = 1) of its Lagrange polynomial; in reverse order, at the start. */
+export const AT_END = Float64Array.from({ length: STATIONS }, (_, j) =>
+  j >= FIRST_NODE && j <= LAST_NODE ? lagrange(j, 1) : 0,
+);
+
+/** Share of the half panel beyond the outermost node. */
+export const BEYOND_NODES = 1 - INNER[3];
+
 function collocationMatrix(): Float64Array {
   const matrix = new Float64Array(STATIONS * STATIONS);
   for (let i = 0; i < STATIONS; i += 1) {
