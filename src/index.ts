@@ -2,18 +2,72 @@
  * The public surface of Legwork: explicit names, one core behind the page, the command and `import`.
  */
 
-// Deciding: how far out one can still turn back.
-export type { Alternate } from "./choose/alternate.ts";
+export { ADVISORY } from "./constants.ts";
+export { InputError, type Place } from "./errors.ts";
+export { type Dimension, fromUnit, parseQuantity, symbolsOf, toUnit } from "./units.ts";
+
+// The main job: a plan's text in, an estimate out.
+export { checkPlan, estimatePlan, type PlanAnswer, type PlanRequest } from "./plan/estimate-plan.ts";
+export { type InspectRequest, inspectField } from "./plan/inspect-field.ts";
+
+// The estimate in two halves, for sweeps and for dragging.
+export type { Conditions } from "./estimate/conditions.ts";
+export {
+  type EstimateAnswer,
+  type EstimateInput,
+  estimate,
+  estimatePrepared,
+  fieldSummary,
+  prepareRoutes,
+} from "./estimate/estimate.ts";
+export { estimateRoute, type RouteOutcome, type RouteRun, routeOutcome } from "./estimate/estimate-route.ts";
+export { magneticCourse, magneticVariation } from "./estimate/magnetic.ts";
+export { fieldsInUse, type PreparedRoute, prepareRoute } from "./estimate/prepare.ts";
+export type {
+  ArrivalAnswer,
+  ArrivalSolution,
+  ErrorBound,
+  Estimate,
+  FieldAlong,
+  FieldSummary,
+  Finding,
+  FindingCode,
+  LegEstimate,
+  Penalty,
+  Profile,
+  Reached,
+  RouteEstimate,
+  RouteStatus,
+  Severity,
+  Spread,
+  Still,
+  Totals,
+} from "./estimate/result.ts";
+export type { Route, Waypoint } from "./estimate/route.ts";
+
 // Deciding: when to leave and how fast.
 export { type ArrivalWindow, solveArrival } from "./choose/arrive.ts";
 export { estimateArriving } from "./choose/arriving-estimate.ts";
-export type { DecidedEstimate, DecidedRoute } from "./choose/decided.ts";
 export { type DepartureWindow, windowDepartures } from "./choose/departure-window.ts";
 export { type LatestDeparture, latestDeparture } from "./choose/latest-departure.ts";
 export { fastestWithReserve, leastUseSpeed, type PaceCurve, paceCurve } from "./choose/pace-curve.ts";
 export { type RefinedWindow, refineWindow } from "./choose/refine.ts";
 export { type SpeedRange, speedRange } from "./choose/speed-range.ts";
 export type { PacelessConditions } from "./choose/speed-trials.ts";
+export { makeSweep, type Sweep, sweepCell, windowCells } from "./choose/window.ts";
+export { type CellFinding, type WindowCell, windowCell } from "./choose/window-cell.ts";
+export {
+  type Refusal,
+  type RouteSummary,
+  summariseWindow,
+  type WindowBest,
+  type WindowSummary,
+} from "./choose/window-summary.ts";
+export { type WindowAnswer, type WindowRequest, windowPlan } from "./plan/window-plan.ts";
+
+// Deciding: how far out one can still turn back.
+export type { Alternate } from "./choose/alternate.ts";
+export type { DecidedEstimate, DecidedRoute } from "./choose/decided.ts";
 export { turnBack } from "./choose/turn-back.ts";
 export { withTurnBack } from "./choose/turn-back-estimate.ts";
 export type {
@@ -28,19 +82,29 @@ export type {
   TurnBackSamples,
   TurnLimit,
 } from "./choose/turn-back-result.ts";
-export { makeSweep, type Sweep, sweepCell, windowCells } from "./choose/window.ts";
-export { type CellFinding, type WindowCell, windowCell } from "./choose/window-cell.ts";
-export {
-  type Refusal,
-  type RouteSummary,
-  summariseWindow,
-  type WindowBest,
-  type WindowSummary,
-} from "./choose/window-summary.ts";
-// Coarse land.
-export { type Land, type LandTopology, prepareLand } from "./coast/land.ts";
-export { type LandStretch, landCrossings } from "./coast/land-crossings.ts";
-export { ADVISORY } from "./constants.ts";
+
+// Reports.
+export { writeCsv } from "./report/csv.ts";
+export { writeGeoJson } from "./report/geojson.ts";
+export { writeGpx } from "./report/gpx.ts";
+export type { ReportInput, Units } from "./report/input.ts";
+export { writeInspection } from "./report/inspection-text.ts";
+export { writeJson } from "./report/json.ts";
+export { writeTable } from "./report/table.ts";
+export { writeWindowCsv } from "./report/window-csv.ts";
+export type { WindowReport } from "./report/window-input.ts";
+export { writeWindowJson } from "./report/window-json.ts";
+export { writeWindowTable } from "./report/window-table.ts";
+
+// Plans and craft.
+export type { FieldReference, OpenFile, Plan } from "./plan/plan.ts";
+export { parseCoordinate } from "./plan/position.ts";
+export { formatPosition } from "./plan/position-format.ts";
+export { readCraft } from "./plan/read-craft.ts";
+export { readPlan, readPlanDocument } from "./plan/read-plan.ts";
+export { formatTime, parseTime } from "./plan/time.ts";
+export { serializeCraft, serializePlan } from "./plan/write-plan.ts";
+
 // Craft: the triangle and the power models.
 export { constantPower } from "./craft/constant.ts";
 export type {
@@ -76,41 +140,7 @@ export {
   maxLiftThreeHalvesToDrag,
   maxLiftToDrag,
 } from "./craft/wing-performance.ts";
-export { InputError, type Place } from "./errors.ts";
-// The estimate in two halves, for sweeps and for dragging.
-export type { Conditions } from "./estimate/conditions.ts";
-export {
-  type EstimateAnswer,
-  type EstimateInput,
-  estimate,
-  estimatePrepared,
-  fieldSummary,
-  prepareRoutes,
-} from "./estimate/estimate.ts";
-export { estimateRoute, type RouteOutcome, type RouteRun, routeOutcome } from "./estimate/estimate-route.ts";
-export { magneticCourse, magneticVariation } from "./estimate/magnetic.ts";
-export { fieldsInUse, type PreparedRoute, prepareRoute } from "./estimate/prepare.ts";
-export type {
-  ArrivalAnswer,
-  ArrivalSolution,
-  ErrorBound,
-  Estimate,
-  FieldAlong,
-  FieldSummary,
-  Finding,
-  FindingCode,
-  LegEstimate,
-  Penalty,
-  Profile,
-  Reached,
-  RouteEstimate,
-  RouteStatus,
-  Severity,
-  Spread,
-  Still,
-  Totals,
-} from "./estimate/result.ts";
-export type { Route, Waypoint } from "./estimate/route.ts";
+
 // Fields.
 export { readGridFile } from "./field/csv.ts";
 export type { BeyondPolicy, Field, FieldRole, GapPolicy, OutsidePolicy, Tile } from "./field/field.ts";
@@ -121,8 +151,13 @@ export { sampleLattice } from "./field/lattice.ts";
 export { type FieldSource, mergeField } from "./field/merge.ts";
 export { type FieldSample, sampleField } from "./field/sample.ts";
 export { pressureAltitude, type StandardAir, standardAir } from "./field/standard-atmosphere.ts";
+
+// Coarse land.
+export { type Land, type LandTopology, prepareLand } from "./coast/land.ts";
+export { type LandStretch, landCrossings } from "./coast/land-crossings.ts";
+
 // Geodesy.
-export { cutAtAntimeridian, type DrawnPoint, densify } from "./geodesy/drawn-line.ts";
+export { type DrawnPoint, cutAtAntimeridian, densify } from "./geodesy/drawn-line.ts";
 export {
   type Ellipsoid,
   ellipsoid,
@@ -136,28 +171,3 @@ export { geodesicDirect, geodesicInverse } from "./geodesy/geodesic.ts";
 export { makeTrack, makeTrackOn } from "./geodesy/make-track.ts";
 export { rhumbDirect, rhumbInverse } from "./geodesy/rhumb.ts";
 export type { PathKind, Position, Track, TrackPoint } from "./geodesy/track.ts";
-// The main job: a plan's text in, an estimate out.
-export { checkPlan, estimatePlan, type PlanAnswer, type PlanRequest } from "./plan/estimate-plan.ts";
-export { type InspectRequest, inspectField } from "./plan/inspect-field.ts";
-// Plans and craft.
-export type { FieldReference, OpenFile, Plan } from "./plan/plan.ts";
-export { parseCoordinate } from "./plan/position.ts";
-export { formatPosition } from "./plan/position-format.ts";
-export { readCraft } from "./plan/read-craft.ts";
-export { readPlan, readPlanDocument } from "./plan/read-plan.ts";
-export { formatTime, parseTime } from "./plan/time.ts";
-export { type WindowAnswer, type WindowRequest, windowPlan } from "./plan/window-plan.ts";
-export { serializeCraft, serializePlan } from "./plan/write-plan.ts";
-// Reports.
-export { writeCsv } from "./report/csv.ts";
-export { writeGeoJson } from "./report/geojson.ts";
-export { writeGpx } from "./report/gpx.ts";
-export type { ReportInput, Units } from "./report/input.ts";
-export { writeInspection } from "./report/inspection-text.ts";
-export { writeJson } from "./report/json.ts";
-export { writeTable } from "./report/table.ts";
-export { writeWindowCsv } from "./report/window-csv.ts";
-export type { WindowReport } from "./report/window-input.ts";
-export { writeWindowJson } from "./report/window-json.ts";
-export { writeWindowTable } from "./report/window-table.ts";
-export { type Dimension, fromUnit, parseQuantity, symbolsOf, toUnit } from "./units.ts";
