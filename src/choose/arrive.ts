@@ -24,9 +24,10 @@ const SLACK = 1e-3;
  * does, for a window of times every speed there of locally least use. The one of least use among those that are not a `stop`
  * is chosen, else that of least use. Legs that name their own speed keep it.
  *
- * Search: 64 steps of the range, evenly spaced in passage time, with the edges between speeds that complete the route and speeds
- * that do not; roots by bracketing to a microsecond. Since dx/dt = g(x, t; V) rises with V at every place and time, a
- * faster craft that completes the route is ahead all along it, and one arrival time has at most one speed; the scan does not rest on that.
+ * Search: since dx/dt = g(x, t; V) rises with V at every place and time, a faster craft that completes the route is ahead all along it,
+ * so the passage falls with the speed and one arrival time has at most one speed: it is bracketed from the fastest down and found
+ * to a microsecond. Where some speed on the way does not complete the route, or none arrives then, 64 steps of the range, evenly
+ * spaced in passage time, are scanned with the edges between speeds that complete the route and speeds that do not.
  *
  * @throws InputError where the craft's speeds have no bound, or as `estimateRoute` does
  */
@@ -40,11 +41,12 @@ export function solveArrival(
   const target = (time: number) => (time - conditions.departure) / 1000;
   const latest = target(wanted.notAfter);
   const earliest = wanted.notBefore === null ? Number.NEGATIVE_INFINITY : target(wanted.notBefore);
-  const samples = scan(trials.passage, evenlyInTime(trials.range));
+  const isOneTime = earliest === latest;
+  const quick = isOneTime ? quickSpeedsAt(trials, latest) : quickCheapest(trials, earliest, latest);
+  const samples = quick === null ? scan(trials.passage, evenlyInTime(trials.range)) : [];
   const speeds =
-    earliest === latest
-      ? speedsAt(trials, samples, latest)
-      : cheapestBetween(trials, samples, earliest, latest);
+    quick ??
+    (isOneTime ? speedsAt(trials, samples, latest) : cheapestBetween(trials, samples, earliest, latest));
   const solutions = speeds.map((speed) => solutionAt(trials, speed, conditions.departure));
   const chosen = cheapest(solutions);
   const asked = {
@@ -62,6 +64,39 @@ export function checkArrival({ notBefore, notAfter }: ArrivalWindow): void {
     throw new InputError(
       `an arrival's notBefore is not after its notAfter; found ${isoTime(notBefore)} and ${isoTime(notAfter)}`,
     );
+}
+
+/** Steps from the fastest down in which a quick search looks for a bracket. */
+const QUICK_STEPS = 8;
+/** Steps of a quick search for the least use between two speeds. */
+const QUICK_USES = 16;
+
+/** The speed for one arrival time where every speed met on the way to it completes the route; `null` where that is not settled. */
+function quickSpeedsAt(trials: SpeedTrials, target: number): number[] | null {
+  const slower: Sample[] = [];
+  for (const x of evenlyInTime(trials.range, QUICK_STEPS).reverse()) {
+    const value = trials.passage(x);
+    if (value === null) return null;
+    slower.unshift({ x, value });
+    if (value >= target) break;
+  }
+  const roots = speedsAt(trials, slower.slice(0, 2), target);
+  return roots.length === 1 ? roots : null;
+}
+
+/** As {@link quickSpeedsAt}, the speeds of locally least use between two arrival times. */
+function quickCheapest(trials: SpeedTrials, earliest: number, latest: number): number[] | null {
+  const { min, max } = trials.range;
+  const isEarlyEnough = (trials.passage(max) ?? Number.NEGATIVE_INFINITY) >= earliest;
+  const fastest = isEarlyEnough ? max : quickSpeedsAt(trials, earliest)?.[0];
+  const slowest =
+    (trials.passage(min) ?? Number.POSITIVE_INFINITY) <= latest ? min : quickSpeedsAt(trials, latest)?.[0];
+  if (fastest === undefined || slowest === undefined || !(slowest < fastest)) return null;
+  const samples = evenlyInTime({ min: slowest, max: fastest }, QUICK_USES).map((x) => ({
+    x,
+    value: trials.use(x),
+  }));
+  return samples.some(({ value }) => value === null) ? null : minimaOf(trials.use, samples);
 }
 
 function speedsAt({ passage }: SpeedTrials, samples: readonly Sample[], target: number): number[] {
