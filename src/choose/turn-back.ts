@@ -1,6 +1,7 @@
 import type { Conditions } from "../estimate/conditions.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { Alternate } from "./alternate.ts";
+import { requireClimb } from "./turn-back-climb.ts";
 import { equalTimePoints } from "./turn-back-equal-time.ts";
 import { Journeys } from "./turn-back-journey.ts";
 import { anyLimit, nowhereStretches, reachStretches, turnLimit } from "./turn-back-reach.ts";
@@ -20,7 +21,8 @@ import { RouteWalk, type Spot } from "./turn-back-walk.ts";
  * trace at either is not seen.
  *
  * @param prepared the route on the fields in use
- * @throws InputError where the pace has no speed on the route even with every field at zero
+ * @throws InputError where the pace has no speed on the route even with every field at zero, or the way back climbs and the
+ * craft's rotor model has no mass
  *
  * @example
  * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "constant", "rate": "1 kW" }, "store": { "capacity": "10 kWh" } }', "boat.craft.json");
@@ -34,6 +36,7 @@ export function turnBack(
   conditions: Conditions,
   alternates: readonly Alternate[] = [],
 ): TurnBack {
+  requireClimb(prepared.route, conditions.craft, alternates);
   const walk = new RouteWalk(prepared, conditions);
   const journeys = new Journeys(walk, alternates);
   const { goals } = journeys;

@@ -5,6 +5,8 @@ import { turnBack } from "../../src/choose/turn-back.ts";
 import type { RoutePlace, TurnBack } from "../../src/choose/turn-back-result.ts";
 import type { Craft, Pace, Reserve } from "../../src/craft/craft.ts";
 import { cubePower } from "../../src/craft/cube.ts";
+import { rotorPower } from "../../src/craft/rotor.ts";
+import { InputError } from "../../src/errors.ts";
 import { fieldsInUse, prepareRoute } from "../../src/estimate/prepare.ts";
 import type { Route, Waypoint } from "../../src/estimate/route.ts";
 import type { Field } from "../../src/field/field.ts";
@@ -457,6 +459,78 @@ describe("where no answer is", () => {
         },
       ),
       { numRuns: 12 },
+    );
+  });
+});
+
+describe("everywhere on the globe", () => {
+  test("a way across the antimeridian comes out as anywhere else", () => {
+    const moved = (shift: number) =>
+      turned(routeOf(waypoint("start", 10, 178 + shift), waypoint("end", 12, 184 + shift)), {
+        craft: withStore(40e3 * RATE),
+        alternates: [alternate("Isle", 9, -179.5 + shift)],
+      });
+    const [across, inland] = [moved(0), moved(-150)];
+    const places = (turn: TurnBack) =>
+      [...turn.limits.map(({ last }) => last), ...turn.equalTime.map(({ place }) => place)].map(
+        (place) => place?.distance_m ?? -1,
+      );
+    expect(places(across).length).toBeGreaterThan(5);
+    places(inland).forEach((distance, n) => {
+      expect(places(across)[n]).toBeCloseTo(distance, 3);
+    });
+    for (const lon of across.samples.lon) expect(Math.abs(lon)).toBeLessThanOrEqual(180);
+  });
+
+  test("a way over the pole turns back over it", () => {
+    const turn = turned(routeOf(waypoint("start", 88, 20), waypoint("end", 89, -160)), {
+      craft: withStore(40e3 * RATE),
+    });
+    expect(between(turn, 0, 1)[0]?.place.distance_m).toBeCloseTo(turn.end.distance_m / 2, 3);
+    expect(limitTo(turn, 0)?.last?.distance_m).toBeCloseTo(200e3, 3);
+  });
+
+  test("a rhumb line is gone back along itself", () => {
+    const route = routeOf(waypoint("start", 60, 0), waypoint("end", 60, 90, { path: "rhumb" }));
+    const turn = turned(route);
+    const back = turn.samples.goals[0]?.time_s ?? [];
+    turn.samples.distance_m.forEach((distance, n) => {
+      expect(10 * (back[n] as number)).toBeCloseTo(distance, 4);
+    });
+  });
+});
+
+describe("what cannot be asked", () => {
+  const rotor = rotorPower({
+    bladeProfilePower_W: 80,
+    inducedPower_W: 88,
+    tipSpeed_m_s: 120,
+    hoverInducedSpeed_m_s: 4,
+    fuselageDragRatio: 0.6,
+    solidity: 0.05,
+    discArea_m2: 0.5,
+    airDensity_kg_m3: 1.225,
+    efficiency: 1,
+  });
+  const drone = craftOf({ power: rotor });
+
+  test("the way back of a route that descends needs the rotor's mass", () => {
+    const route = routeOf(waypoint("A", 0, 0, { height_m: 80 }), waypoint("B", 0, 1, { height_m: 20 }));
+    expect(() => turned(route, { craft: drone })).toThrow(
+      new InputError(
+        "the way back of a route that descends is a climb, which needs the mass of the craft's rotor model; found a climb to 80 m and no mass",
+      ),
+    );
+  });
+
+  test("so does the way up to an alternate, and neither does a level way", () => {
+    const route = routeOf(waypoint("A", 0, 0, { height_m: 20 }), waypoint("B", 0, 1, { height_m: 20 }));
+    const high = [alternate("Hill", 0.1, 0.5, 90)];
+    expect(() => turned(route, { craft: drone, alternates: high })).toThrow(
+      /a way to an alternate is a climb/,
+    );
+    expect(turned(route, { craft: drone, alternates: [alternate("Level", 0.1, 0.5)] }).limits).toHaveLength(
+      3,
     );
   });
 });

@@ -568,8 +568,75 @@ const ROUTES: readonly Case[] = [
   ],
 ];
 
+const ALTERNATES: readonly Case[] = [
+  [
+    "alternates that are none",
+    [["alternates", "Isle"]],
+    "alternates",
+    "takes a list of alternates",
+    '"Isle"',
+  ],
+  [
+    "an alternate that is a text",
+    [["alternates", ["Isle"]]],
+    "alternates[0]",
+    "an alternate is an object",
+    '"Isle"',
+  ],
+  [
+    "an alternate without a latitude",
+    [["alternates", [{ lon: 1 }]]],
+    "alternates[0].lat",
+    "latitude takes degrees",
+    "nothing",
+  ],
+  [
+    "an alternate beyond the pole",
+    [["alternates", [{ lat: 91, lon: 1 }]]],
+    "alternates[0].lat",
+    "latitude is in",
+    "91",
+  ],
+  [
+    "an alternate with an unknown key",
+    [["alternates", [{ lat: 1, lon: 1, path: "rhumb" }]]],
+    "alternates[0].path",
+    "the nearest that it has is",
+    '"path"',
+  ],
+  [
+    "an alternate's height without a unit",
+    [["alternates", [{ lat: 1, lon: 1, height: 30 }]]],
+    "alternates[0].height",
+    "height takes a number with one of",
+    "30",
+  ],
+  [
+    "an alternate below the surface",
+    [["alternates", [{ lat: 1, lon: 1, height: "-3 m" }]]],
+    "alternates[0].height",
+    "height is not below 0",
+    '"-3 m"',
+  ],
+  [
+    "two alternates of one name",
+    [
+      [
+        "alternates",
+        [
+          { name: "Isle", lat: 1, lon: 1 },
+          { name: "Isle", lat: 2, lon: 1 },
+        ],
+      ],
+    ],
+    "alternates[1].name",
+    'alternates have different names; found "Isle", the name of',
+    '"Isle", the name of alternates[0]',
+  ],
+];
+
 describe("a malformed plan", () => {
-  test.each([...TOP, ...PACE, ...FIELDS, ...ROUTES])(
+  test.each([...TOP, ...PACE, ...FIELDS, ...ROUTES, ...ALTERNATES])(
     "with %s is refused",
     async (_, changes, key, accepted, found) => {
       const message = await faultOf(() => read(changed(SUPPLY_RUN, ...changes)));
