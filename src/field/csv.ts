@@ -115,10 +115,12 @@ async function repeatedNode(
     put: (time, level, lat, lon) =>
       !(time === node.time && level === node.level && lat === node.lat && lon === node.lon),
   }));
-  const { lat, lon, times, height } = reader.axes;
+  const { lat, lon, times, height, members } = reader.axes;
+  const of = members === null ? { time: node.time, member: 0 } : members.slices.of(node.time);
   const parts = [`latitude ${lat[node.lat]}`, `longitude ${lon[node.lon]}`];
   if (height !== null) parts.push(`height ${Math.round(height[node.level] as number)} m`);
-  if (times !== null) parts.push(`time ${new Date(times[node.time] as number).toISOString()}`);
+  if (times !== null) parts.push(`time ${new Date(times[of.time] as number).toISOString()}`);
+  if (members !== null) parts.push(`member ${members.numbers[of.member]}`);
   const found = `found ${parts.join(", ")} on lines ${toldLines.join(" and ")}`;
   return new InputError(`a node is given once; ${found}`, {
     file: options.file,

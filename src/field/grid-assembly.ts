@@ -1,5 +1,5 @@
 import { InputError } from "../errors.ts";
-import type { GridFile } from "./grid-file.ts";
+import type { GridFile, GridMember } from "./grid-file.ts";
 import { type FoundAxes, GridLayout, type OrderedAxis } from "./grid-layout.ts";
 import type { GridSlice } from "./grid-slice.ts";
 import { type GridStore, LEAST_SHARE } from "./grid-store.ts";
@@ -7,14 +7,14 @@ import { longitudeAxis } from "./longitude-axis.ts";
 
 export type AssembledGrid = Pick<
   GridFile,
-  "lon" | "lat" | "height" | "times" | "slices" | "gusts" | "masks" | "global"
+  "lon" | "lat" | "height" | "times" | "slices" | "gusts" | "masks" | "members" | "global"
 >;
 
 /** Error: fewer than one node in twenty given. */
 export function refuseScattered(share: number, axes: FoundAxes, file: string): void {
   if (share * LEAST_SHARE >= 1) return;
-  const sizes = [axes.times, axes.height, axes.lat, axes.lon].flatMap((axis) =>
-    axis === null ? [] : [axis.length],
+  const sizes = [axes.members?.numbers ?? null, axes.times, axes.height, axes.lat, axes.lon].flatMap(
+    (axis) => (axis === null ? [] : [axis.length]),
   );
   const found = `one in ${Math.round(1 / share)} of ${sizes.join(" × ")}`;
   throw new InputError(
@@ -34,26 +34,68 @@ export function assembleGrid(store: GridStore, axes: FoundAxes, file: string): A
   const height = axes.height === null ? null : ordered(axes.height);
   const times = axes.times === null ? null : ordered(axes.times);
   const layout = new GridLayout(store, sources, lat, height, { file, axes });
-  const slices: Float64Array[] = [];
-  const gusts: Float64Array[] = [];
-  const masks: (Uint8Array | null)[] = [];
-  for (const index of times?.sources ?? [0]) {
-    const slice = layout.take(store.slices[index] as GridSlice);
-    delete store.slices[index];
-    slices.push(slice.values);
-    if (slice.gusts !== null) gusts.push(slice.gusts);
-    masks.push(shared(slice.mask, masks.at(-1) ?? null));
-  }
+  const members: GridMember[] = [];
+  for (const { member, slices } of orderedSlices(times, axes, file))
+    members.push(takeMember(member, slices, store, layout, members.at(-1)?.masks.at(-1) ?? null));
+  const { member: _, ...control } = members[0] as GridMember;
   return {
     lon,
     lat: lat.values,
     height: height?.values ?? null,
     times: times?.values ?? null,
-    slices,
-    gusts: gusts.length === 0 ? null : gusts,
-    masks,
+    ...control,
+    ...(axes.members === null ? {} : { members }),
     global,
   };
+}
+
+/** Indices of a member's slices in the order of the times. */
+interface MemberOrder {
+  readonly member: number;
+  readonly slices: readonly number[];
+}
+
+/** The slices of every member in order; of the one member 0 where the file has no members. */
+function orderedSlices(times: OrderedAxis | null, { members }: FoundAxes, file: string): MemberOrder[] {
+  const order = [...(times?.sources ?? [0])];
+  if (members === null) return [{ member: 0, slices: order }];
+  const { values, sources } = ordered(members.numbers);
+  return Array.from(sources, (source, index) => {
+    const member = values[index] as number;
+    const slices = order.map((time, at) => {
+      const slice = members.slices.find(source, time);
+      if (slice !== undefined) return slice;
+      const moment = new Date(times?.values[at] as number).toISOString();
+      throw new InputError(
+        `every member has every valid time; found none of ${moment} for member ${member}`,
+        {
+          file,
+        },
+      );
+    });
+    return { member, slices };
+  });
+}
+
+/** @param before the mask of the slice before, which serves again where it is the same */
+function takeMember(
+  member: number,
+  order: readonly number[],
+  store: GridStore,
+  layout: GridLayout,
+  before: Uint8Array | null,
+): GridMember {
+  const slices: Float64Array[] = [];
+  const gusts: Float64Array[] = [];
+  const masks: (Uint8Array | null)[] = [];
+  for (const index of order) {
+    const slice = layout.take(store.slices[index] as GridSlice);
+    delete store.slices[index];
+    slices.push(slice.values);
+    if (slice.gusts !== null) gusts.push(slice.gusts);
+    masks.push(shared(slice.mask, masks.length === 0 ? before : (masks.at(-1) ?? null)));
+  }
+  return { member, slices, gusts: gusts.length === 0 ? null : gusts, masks };
 }
 
 function ordered(found: readonly number[]): OrderedAxis {

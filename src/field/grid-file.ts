@@ -1,5 +1,13 @@
 import type { FieldRole } from "./field.ts";
 
+/** One member of an ensemble: its own values on the axes of its file. */
+export interface GridMember {
+  readonly member: number;
+  readonly slices: readonly Float64Array[];
+  readonly gusts: readonly Float64Array[] | null;
+  readonly masks: readonly (Uint8Array | null)[];
+}
+
 /**
  * One file's grid, as read: nodes as in `Tile`, missing ones at 0 and told by the masks.
  * Slices with the same missing nodes share a mask.
@@ -14,6 +22,11 @@ export interface GridFile {
   readonly slices: readonly Float64Array[];
   readonly gusts: readonly Float64Array[] | null;
   readonly masks: readonly (Uint8Array | null)[];
+  /**
+   * The members, ascending, of a file that has them; the slices, gusts and masks above are those of the first, the control.
+   * Left out where the file has no column of members.
+   */
+  readonly members?: readonly GridMember[];
   readonly global: boolean;
   /** Headers of columns that were not used, as written. */
   readonly ignoredColumns: readonly string[];

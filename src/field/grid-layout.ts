@@ -2,6 +2,7 @@ import { InputError } from "../errors.ts";
 import { NODE_MISSING } from "./field.ts";
 import type { GridSlice } from "./grid-slice.ts";
 import type { GridStore } from "./grid-store.ts";
+import type { MemberSlices } from "./member-slices.ts";
 
 /** Vectors and gusts on one meridian given under two longitudes agree within this, m/s: the rounding of a direction. */
 const AGREEMENT = 1e-6;
@@ -14,6 +15,8 @@ export interface FoundAxes {
   readonly height: readonly number[] | null;
   /** ms since 1970-01-01T00:00Z; `null` where the field is steady. */
   readonly times: readonly number[] | null;
+  /** Numbers of the members, and which slice is of which member and time; `null` where the file has no members. */
+  readonly members: { readonly numbers: readonly number[]; readonly slices: MemberSlices } | null;
 }
 
 export interface OrderedAxis {

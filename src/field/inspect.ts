@@ -30,7 +30,9 @@ export interface FieldInspection {
   readonly time:
     | (Omit<AxisInspection, "first" | "last"> & { readonly first: string; readonly last: string })
     | null;
-  /** Nodes over all times and levels, and those of them without a vector. */
+  /** Numbers of the members of an ensemble, ascending; left out where the file has no column of them. */
+  readonly members?: readonly number[];
+  /** Nodes over all members, times and levels, and those of them without a vector. */
   readonly nodes: number;
   readonly missing: number;
   /** Share of the nodes with a vector, 0..1. */
@@ -69,6 +71,7 @@ export function inspectGrid(grid: GridFile): FieldInspection {
     height: grid.height === null ? null : axisInspection(grid.height),
     global: grid.global,
     time: grid.times === null ? null : timeInspection(grid.times),
+    ...(grid.members === undefined ? {} : { members: grid.members.map(({ member }) => member) }),
     nodes,
     missing,
     coverage: (nodes - missing) / nodes,
@@ -120,9 +123,10 @@ function surveyNodes(grid: GridFile, meridians: number) {
   const ranges = { speed: new Range(), eastward: new Range(), northward: new Range(), gust: new Range() };
   const columns = grid.lon.length;
   let [nodes, missing] = [0, 0];
-  for (const [time, values] of grid.slices.entries()) {
-    const mask = grid.masks[time] ?? null;
-    const gusts = grid.gusts?.[time] ?? null;
+  const dated = (grid.members ?? [grid]).flatMap(({ slices, masks, gusts }) =>
+    slices.map((values, time) => ({ values, mask: masks[time] ?? null, gusts: gusts?.[time] ?? null })),
+  );
+  for (const { values, mask, gusts } of dated) {
     for (let node = 0; node < values.length / 2; node++) {
       if (node % columns >= meridians) continue;
       nodes++;
@@ -140,7 +144,13 @@ function surveyNodes(grid: GridFile, meridians: number) {
   return { nodes, missing, ranges };
 }
 
-function memoryOf({ lon, lat, height, times, slices, gusts, masks }: GridFile): number {
-  const arrays = new Set([lon, lat, height, times, ...slices, ...(gusts ?? []), ...masks]);
+function memoryOf(grid: GridFile): number {
+  const { lon, lat, height, times } = grid;
+  const values = (grid.members ?? [grid]).flatMap(({ slices, gusts, masks }) => [
+    ...slices,
+    ...(gusts ?? []),
+    ...masks,
+  ]);
+  const arrays = new Set([lon, lat, height, times, ...values]);
   return [...arrays].reduce((bytes, array) => bytes + (array?.byteLength ?? 0), 0);
 }

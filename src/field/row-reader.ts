@@ -6,6 +6,7 @@ import type { Column, Columns } from "./columns.ts";
 import type { RowBatch, Separator } from "./csv-table.ts";
 import type { FieldRole } from "./field.ts";
 import type { FoundAxes } from "./grid-layout.ts";
+import { MemberSlices } from "./member-slices.ts";
 import { CellFault, numberCell } from "./number-cell.ts";
 import { pressureAltitude, STANDARD_PRESSURE_RANGE } from "./standard-atmosphere.ts";
 import { timeCell } from "./time-cell.ts";
@@ -17,7 +18,7 @@ const LONGITUDE_LIMIT = 1080;
 /** Heights taken, m. */
 const HEIGHT_LIMIT = 100_000;
 
-/** Takes a node's vector by its indices in the order of first appearance; answers `false` where the row is to be told. */
+/** Takes a node's vector by its indices in the order of first appearance (`time`: of time and member); answers `false` where the row is to be told. */
 export interface NodeSink {
   put(time: number, level: number, lat: number, lon: number, u: number, v: number, gust: number): boolean;
 }
@@ -32,15 +33,18 @@ export class RowReader {
   private readonly level: AxisLearner | null;
   private readonly lat: AxisLearner;
   private readonly lon: AxisLearner;
-  private member: string | null = null;
+  private readonly member: AxisLearner | null;
+  private readonly slices = new MemberSlices();
 
   constructor(columns: Columns, separator: Separator, role: FieldRole, file: string) {
     this.columns = columns;
     this.role = role;
     this.file = file;
     this.decimalComma = separator === ";";
-    const { time, level } = columns;
+    const { time, level, member } = columns;
     this.time = time === null ? null : new AxisLearner((cell) => inColumn(time, () => timeCell(cell)));
+    this.member =
+      member === null ? null : this.axisLearner(member, isMember, "is a member's whole number, not below 0");
     this.level = level === null ? null : this.levelLearner(level.column, level.kind);
     this.lat = this.axisLearner(columns.latitude, (lat) => Math.abs(lat) <= 90, "is a latitude in -90..90");
     const turns = `is a longitude in -${LONGITUDE_LIMIT}..${LONGITUDE_LIMIT}`;
@@ -56,6 +60,7 @@ export class RowReader {
       lat: this.lat.values,
       height: levels !== null && isPressure ? levels.map((hPa) => pressureAltitude(100 * hPa)) : levels,
       times: this.time?.values ?? null,
+      members: this.member === null ? null : { numbers: this.member.values, slices: this.slices },
     };
   }
 
@@ -77,8 +82,9 @@ export class RowReader {
   private readRow(row: readonly string[], sink: NodeSink): boolean {
     const { columns } = this;
     if (row.length !== columns.width) return skipBlank(row, columns.width);
-    if (columns.member !== null) this.checkMember(row[columns.member.index] as string, columns.member);
-    const time = this.time === null ? 0 : this.time.indexOf(row[(columns.time as Column).index] as string);
+    let time = this.time === null ? 0 : this.time.indexOf(row[(columns.time as Column).index] as string);
+    if (this.member !== null)
+      time = this.slices.indexOf(this.member.indexOf(row[(columns.member as Column).index] as string), time);
     const level =
       this.level === null ? 0 : this.level.indexOf(row[columns.level?.column.index as number] as string);
     const lat = this.lat.indexOf(row[columns.latitude.index] as string);
@@ -128,15 +134,6 @@ export class RowReader {
     throw new CellFault(`${cellOf(column)} ${rule}; found ${speed} m/s`);
   }
 
-  private checkMember(cell: string, column: Column): void {
-    if (cell === this.member) return;
-    const member = cell.trim();
-    this.member ??= member;
-    if (member === this.member) return;
-    const found = `found ${quoted(this.member)} and ${quoted(member)} in the column ${quoted(column.header)}`;
-    throw new CellFault(`the file holds one member, more are not read yet; ${found}`);
-  }
-
   private levelLearner(column: Column, kind: "height" | "air_pressure"): AxisLearner {
     if (kind === "height") {
       const rule = `is a height within ${HEIGHT_LIMIT} m`;
@@ -156,6 +153,10 @@ export class RowReader {
       }),
     );
   }
+}
+
+function isMember(value: number): boolean {
+  return Number.isSafeInteger(value) && value >= 0;
 }
 
 function skipBlank(row: readonly string[], width: number): true {

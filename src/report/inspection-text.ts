@@ -48,6 +48,14 @@ function percent(share: number): string {
   return `${(Math.floor(share * 1000) / 10).toFixed(1)} %`;
 }
 
+/** `50: 0 to 49`, or the numbers themselves where some between are left out. */
+function membersText(members: readonly number[]): string {
+  const first = members[0] as number;
+  const last = members[members.length - 1] as number;
+  const isWhole = last - first + 1 === members.length;
+  return `${members.length}: ${isWhole && members.length > 2 ? `${first} to ${last}` : members.join(", ")}`;
+}
+
 /** What a field file holds, as text of at most 80 columns with a final line end. Speeds in m/s, the way the medium moves. */
 export function writeInspection(field: FieldInspection): string {
   const gaps =
@@ -60,7 +68,11 @@ export function writeInspection(field: FieldInspection): string {
   ];
   if (field.height !== null) entries.push(["Height", axis(field.height, "m")]);
   entries.push(["Times", times(field.time)]);
-  entries.push(["Nodes", `${field.nodes} over all times, ${gaps}`]);
+  if (field.members !== undefined) entries.push(["Members", membersText(field.members)]);
+  entries.push([
+    "Nodes",
+    `${field.nodes} over all ${field.members === undefined ? "" : "members and "}times, ${gaps}`,
+  ]);
   entries.push(["Speed", range(field.speed)]);
   entries.push(["Eastward", range(field.eastward)], ["Northward", range(field.northward)]);
   if (field.gust !== null) entries.push(["Gusts", range(field.gust)]);

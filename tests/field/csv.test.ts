@@ -367,10 +367,4 @@ describe("members of an ensemble", () => {
   test("are taken where the file holds one", async () => {
     expect((await readText("member,lat,lon,u,v\n3,0,0,1,1\n3,0,1,1,1\n")).lon.length).toBe(2);
   });
-
-  test("are refused where it holds more", async () => {
-    expect(await messageOf("member,lat,lon,u,v\n0,0,0,1,1\n1,0,0,1,1\n")).toBe(
-      'winds.csv, line 3: the file holds one member, more are not read yet; found "0" and "1" in the column "member"',
-    );
-  });
 });
