@@ -1,6 +1,5 @@
 import {
   estimatePlan,
-  InputError,
   type ReportInput,
   type Units,
   writeCsv,
@@ -12,6 +11,7 @@ import {
 import { loadLand } from "./load-land.ts";
 import { writeResult } from "./output.ts";
 import { openBeside, readText } from "./plan-files.ts";
+import { noteUnits } from "./units-note.ts";
 
 export interface EstimateOptions {
   readonly route?: readonly string[];
@@ -39,11 +39,7 @@ function written(input: ReportInput, { format, units }: EstimateOptions): string
 
 /** Estimates a plan and writes the answer; 1 where some route ends in a stop. */
 export async function estimateCommand(file: string, options: EstimateOptions): Promise<number> {
-  if (options.units !== undefined && options.format !== "table") {
-    throw new InputError(
-      `--units belongs to --format table; found --format ${options.format}, whose units are SI`,
-    );
-  }
+  noteUnits(options.units, options.format);
   const { estimate, plan } = await estimatePlan(await readText(file), {
     file,
     open: openBeside(file),

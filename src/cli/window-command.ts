@@ -1,6 +1,5 @@
 import {
   fieldSummary,
-  InputError,
   type Units,
   windowPlan,
   writeWindowCsv,
@@ -10,6 +9,7 @@ import {
 import { loadLand } from "./load-land.ts";
 import { writeResult } from "./output.ts";
 import { openBeside, readText } from "./plan-files.ts";
+import { noteUnits } from "./units-note.ts";
 
 export interface WindowOptions {
   readonly from?: string;
@@ -27,9 +27,7 @@ export interface WindowOptions {
 /** Compares the departures of a plan's window and writes them; 1 where none can be done. */
 export async function windowCommand(file: string, options: WindowOptions): Promise<number> {
   const { from, to, every, speeds, route, refine = false, format, units, out } = options;
-  if (units !== undefined && format !== "table") {
-    throw new InputError(`--units belongs to --format table; found --format ${format}, whose units are SI`);
-  }
+  noteUnits(units, format);
   const answer = await windowPlan(await readText(file), {
     file,
     open: openBeside(file),

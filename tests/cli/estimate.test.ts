@@ -152,6 +152,14 @@ describe("legwork estimate", () => {
     expect(readFileSync(file, "utf8")).toBe(legwork.run(["estimate", islands, "--format", "csv"]).out);
   });
 
+  it("says that units change nothing where the format is not the table", () => {
+    const plain = legwork.run(["estimate", islands, "--format", "csv"]);
+    const asked = legwork.run(["estimate", islands, "--format", "csv", "--units", "sea"]);
+    expect(asked.out).toBe(plain.out);
+    expect(asked.status).toBe(plain.status);
+    expect(asked.err).toBe("legwork: --units is for the table alone; csv is in its own units\n");
+  });
+
   it("leaves --out alone on bad input, whether a file is there or not", () => {
     const there = join(folder, "there.txt");
     writeFileSync(there, "mine");

@@ -72,10 +72,6 @@ describe("a fault of usage", () => {
     ],
     [["estimate", "x", "--units", "imperial"], "Allowed choices are sea, air, metric"],
     [["estimate", "x", "--route"], "option '--route <name>' argument missing"],
-    [
-      ["estimate", "x", "--format", "csv", "--units", "sea"],
-      "--units belongs to --format table; found --format csv",
-    ],
     [["inspect", "x.csv", "--role", "rain"], "Allowed choices are wind, current"],
     [["inspect", "x.csv", "--map", "lon"], '--map is AXIS=HEADER, as lon=longitude; found "lon"'],
     [["inspect", "x.csv", "--map", "=x"], '--map is AXIS=HEADER, as lon=longitude; found "=x"'],
