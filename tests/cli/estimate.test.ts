@@ -126,6 +126,22 @@ describe("legwork estimate", () => {
     expect(legwork.run(["estimate", islands, "--route", "West about"]).status).toBe(0);
   });
 
+  it("tells how far one can still turn back, where the plan has alternates or the option asks for it", () => {
+    const plain = smallPlan("plain");
+    const named = smallPlan("named", (plan) => {
+      plan.alternates = [{ name: "Field", lat: 10.2, lon: 20 }];
+    });
+    const turns = (file: string, ...args: string[]) =>
+      JSON.parse(legwork.run(["estimate", file, "--format", "json", ...args]).out).routes[0].turnBack;
+    expect(turns(plain)).toBeUndefined();
+    expect(turns(plain, "--turn-back").equalTime).toHaveLength(1);
+    expect(turns(named).goals.map((goal: { name: string }) => goal.name)).toEqual(["A", "B", "Field"]);
+    const { out, status } = legwork.run(["estimate", named]);
+    expect(status).toBe(0);
+    expect(out).toContain("\nTurning back, at once and without stays, the reserve kept\n");
+    expect(Math.max(...out.split("\n").map(displayWidth))).toBeLessThanOrEqual(80);
+  });
+
   it("names the routes there are where one is not", () => {
     const { status, out, err } = legwork.run(["estimate", islands, "--route", "west"]);
     expect({ status, out }).toEqual({ status: 2, out: "" });
