@@ -59,9 +59,9 @@ describe("help and version", () => {
 
 describe("a fault of usage", () => {
   const faults: readonly [args: readonly string[], message: string][] = [
-    [[], "a command is needed: estimate, inspect, check or demo"],
+    [[], "a command is needed: estimate, window, inspect, check or demo"],
     [["estmate", "x"], "unknown command 'estmate' (Did you mean estimate?)"],
-    [["frobnicate"], "the command is estimate, inspect, check or demo"],
+    [["frobnicate"], "the command is estimate, window, inspect, check or demo"],
     [["--versoin"], "(Did you mean --version?)"],
     [["estimate"], "missing required argument 'plan'"],
     [["estimate", "a", "b"], "Expected 1 argument but got 2"],
