@@ -13,10 +13,10 @@ export interface DepartureWindow {
 }
 
 /** Most cells (routes × departures × speeds) of a window. */
-export const MOST_CELLS = 100_000;
+const MOST_CELLS = 100_000;
 
 /** Number of departures in a window. */
-export function departureCount({ from, to, every_s }: DepartureWindow): number {
+function departureCount({ from, to, every_s }: DepartureWindow): number {
   return Math.floor((to - from) / Math.round(1000 * every_s)) + 1;
 }
 

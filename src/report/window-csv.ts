@@ -38,7 +38,7 @@ export function bestWords(cell: WindowCell, { time, use, latest }: WindowBest): 
     .join(", ");
 }
 
-export function isSameCell(a: WindowCell, b: WindowCell): boolean {
+function isSameCell(a: WindowCell, b: WindowCell): boolean {
   return a.route === b.route && a.departure === b.departure && a.speed_m_s === b.speed_m_s;
 }
 

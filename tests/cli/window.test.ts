@@ -132,9 +132,7 @@ describe("legwork estimate with a pace that asks for an arrival", () => {
       document.pace = { arrive: "2027-05-04T14:30Z" };
     });
     const { out } = legwork.run(["estimate", plan]);
-    expect(out).toMatch(
-      /that\s+arrives\s+at\s+2027-05-04\s+14:30\s+UTC,\s+each\s+route\s+its\s+own/,
-    );
+    expect(out).toMatch(/that\s+arrives\s+at\s+2027-05-04\s+14:30\s+UTC,\s+each\s+route\s+its\s+own/);
     expect(out).toMatch(/note\s+3\.7 m\/s \(7\.1 kn\) through the medium arrives 2027-05-04 14:30 UTC/);
     const json = JSON.parse(legwork.run(["estimate", plan, "--route", "Sound", "--format", "json"]).out);
     const [route] = json.routes;
