@@ -5,6 +5,13 @@ import { fieldsInUse, type PreparedRoute } from "../estimate/prepare.ts";
 import type { Profile, RouteEstimate } from "../estimate/result.ts";
 import { arrivalSpeed } from "./arrival-answer.ts";
 import type { DecidedEstimate, DecidedRoute } from "./decided.ts";
+import {
+  type EnsembleMember,
+  ensembleResult,
+  type MemberRun,
+  memberRun,
+  memberVariants,
+} from "./ensemble.ts";
 import { errorSpread } from "./error-spread.ts";
 import type { ForecastError } from "./forecast-error.ts";
 import type { SensitivityProfile } from "./sensitivity-profile.ts";
@@ -16,6 +23,8 @@ import { whatIfResults, whatIfVariants, withWorst } from "./what-if-results.ts";
 export interface UncertaintyAsked {
   readonly whatIfs: readonly WhatIf[];
   readonly errors: readonly ForecastError[];
+  /** Every member of an ensemble with all of the plan's fields, ascending; empty for none. */
+  readonly members: readonly EnsembleMember[];
 }
 
 export interface UncertainAnswer extends EstimateAnswer {
@@ -25,8 +34,9 @@ export interface UncertainAnswer extends EstimateAnswer {
 }
 
 /**
- * An estimate with what-ifs and the spread under the stated forecast error worked out for each of its routes, at the pace at
- * which it was estimated. The worst what-if decides the status of a route that is better itself.
+ * An estimate with what-ifs, the spread under the stated forecast error and every member of an ensemble worked out for each of
+ * its routes, at the pace at which it was estimated. The worst what-if or member decides the status of a route that is better
+ * itself.
  *
  * @param prepared by `prepareRoutes`, from the same input
  * @throws InputError for a what-if that the pace or the craft does not allow
@@ -35,7 +45,7 @@ export function withUncertainty(
   { estimate, profiles }: EstimateAnswer & { readonly estimate: DecidedEstimate },
   prepared: readonly PreparedRoute[],
   input: EstimateInput,
-  { whatIfs, errors }: UncertaintyAsked,
+  { whatIfs, errors, members }: UncertaintyAsked,
 ): UncertainAnswer {
   const conditions = estimate.routes.map((route, index) => conditionsOf(route, input, index));
   const results = whatIfResults(prepared, conditions, whatIfs);
@@ -44,20 +54,33 @@ export function withUncertainty(
     const given = conditions[index] as Conditions;
     return errors.length === 0 ? null : errorSpread(prepared[index] as PreparedRoute, given, run, errors);
   });
+  const runs = conditions.map((given, index) => memberRuns(prepared[index] as PreparedRoute, given, members));
   const routes = estimate.routes.map((route, index): DecidedRoute => {
+    const own = runs[index] ?? [];
     const whatIf = results[index] ?? [];
     const told = {
       ...route,
       ...(errors.length === 0 ? {} : { spread: spreads[index]?.spread ?? null }),
+      ...(own.length === 0 ? {} : { ensemble: ensembleResult(own) }),
       ...(whatIfs.length === 0 ? {} : { whatIf }),
     };
-    return withWorst(told, whatIfVariants(whatIf));
+    return withWorst(told, [...memberVariants(own), ...whatIfVariants(whatIf)]);
   });
   return {
     estimate: { ...estimate, routes },
     profiles,
     sensitivities: spreads.map((spread) => spread?.profile ?? null),
   };
+}
+
+function memberRuns(
+  prepared: PreparedRoute,
+  given: Conditions,
+  members: readonly EnsembleMember[],
+): MemberRun[] {
+  return members.map(({ member, fields }) =>
+    memberRun(prepared, given, { member, fields: fieldsInUse(given.craft, fields) }),
+  );
 }
 
 /** A route's conditions, at the pace at which it was estimated. */

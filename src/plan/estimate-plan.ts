@@ -13,7 +13,7 @@ import {
 } from "../estimate/estimate.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { OpenFile, Plan } from "./plan.ts";
-import { type FileProgress, readFields } from "./read-fields.ts";
+import { type FileProgress, type MemberFields, readMembers } from "./read-fields.ts";
 import { readPlan } from "./read-plan.ts";
 import { parseTime } from "./time.ts";
 
@@ -44,22 +44,30 @@ export interface PlanAnswer extends EstimateAnswer {
   readonly input: EstimateInput;
 }
 
+/** A plan with everything that it names read. */
+export interface PlanChecked {
+  readonly plan: Plan;
+  /** Of an ensemble, with the control's fields: the member of the lowest number. */
+  readonly input: EstimateInput;
+  /** Every member of an ensemble; empty where there are fewer than two. */
+  readonly members: readonly MemberFields[];
+}
+
 /**
  * The main job: reads a plan with its craft and fields and estimates its routes.
  *
  * @throws InputError in one sentence with file, line or key for whatever is wrong in what the user gave
  */
 export async function estimatePlan(text: string, request: PlanRequest): Promise<PlanAnswer> {
-  const plan = await checkPlanText(text, request);
-  const input = await readInput(plan, request);
+  const { plan, input, members } = await checkPlan(text, request);
   const prepared = prepareRoutes(input);
   const answer = answerOf(plan, input, prepared);
   const { alternates = [] } = plan;
   const isAsked = alternates.length > 0 || request.turnBack === true;
   const turned = isAsked ? withTurnBack(answer, prepared, input, alternates) : answer;
   const { whatIfs = [], errors = [] } = plan;
-  if (whatIfs.length === 0 && errors.length === 0) return { ...turned, plan, input };
-  return { ...withUncertainty(turned, prepared, input, { whatIfs, errors }), plan, input };
+  if (whatIfs.length + errors.length + members.length === 0) return { ...turned, plan, input };
+  return { ...withUncertainty(turned, prepared, input, { whatIfs, errors, members }), plan, input };
 }
 
 /** Estimates what is read: at the plan's pace, or at the speeds that make the arrival it asks for. */
@@ -76,12 +84,9 @@ function answerOf(
  *
  * @throws InputError as {@link estimatePlan} does
  */
-export async function checkPlan(
-  text: string,
-  request: PlanRequest,
-): Promise<{ readonly plan: Plan; readonly input: EstimateInput }> {
+export async function checkPlan(text: string, request: PlanRequest): Promise<PlanChecked> {
   const plan = await checkPlanText(text, request);
-  return { plan, input: await readInput(plan, request) };
+  return { plan, ...(await readInput(plan, request)) };
 }
 
 async function checkPlanText(text: string, { file, open, departure, routes }: PlanRequest): Promise<Plan> {
@@ -100,9 +105,12 @@ function routeNamed(plan: Plan, name: string, file: string): Plan["routes"][numb
   throw new InputError(`a route is one of ${names}; found "${name}"`, { file, key: "routes" });
 }
 
-async function readInput(plan: Plan, { open, loadLand, onProgress }: PlanRequest): Promise<EstimateInput> {
+async function readInput(
+  plan: Plan,
+  { open, loadLand, onProgress }: PlanRequest,
+): Promise<Omit<PlanChecked, "plan">> {
   const { title, departure, craft, pace, reserve, routes } = plan;
-  const fields = await readFields(plan.fields, open, onProgress);
+  const { fields, members } = await readMembers(plan.fields, open, onProgress);
   const land = craft.moves === "water" && loadLand !== undefined ? await loadLand() : null;
-  return { title, departure, craft, pace, reserve, fields, routes, land };
+  return { input: { title, departure, craft, pace, reserve, fields, routes, land }, members };
 }

@@ -15,6 +15,7 @@ import {
   quantity,
   readBy,
   sentence,
+  wholeNumber,
 } from "./schema-parts.ts";
 import { time } from "./time-schema.ts";
 import { whatIfSchema } from "./what-if-schema.ts";
@@ -119,6 +120,7 @@ const field = objectOf(
     beyond: oneOf("beyond", ["stop", "hold"], "After the last valid time; stop unless given.").optional(),
     outside: oneOf("outside", ["stop", "zero"], "Outside the grid's area; stop unless given.").optional(),
     error: errorSchema.optional(),
+    member: wholeNumber("member", "Number of the ensemble's member that the file is.").optional(),
   },
   "A file of gridded wind or current.",
 );

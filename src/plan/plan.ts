@@ -17,6 +17,8 @@ export interface FieldReference {
   readonly gaps: GapPolicy;
   readonly beyond: BeyondPolicy;
   readonly outside: OutsidePolicy;
+  /** Number of the ensemble's member that the file is, where the plan names it. */
+  readonly member?: number;
 }
 
 /** A plan, checked, in SI units, with its craft read. */

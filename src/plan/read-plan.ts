@@ -173,5 +173,6 @@ function fieldOf(field: NonNullable<PlanParts["fields"]>[number]): FieldReferenc
     gaps: field.gaps ?? "nearest",
     beyond: field.beyond ?? "stop",
     outside: field.outside ?? "stop",
+    ...(field.member === undefined ? {} : { member: field.member }),
   };
 }

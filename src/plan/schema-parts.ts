@@ -76,6 +76,17 @@ export function bareNumber(name: string, bounds: Bounds, description: string) {
     });
 }
 
+/** A number without a fraction, not below 0. */
+export function wholeNumber(name: string, description: string) {
+  const rule = "takes a whole number, not below 0";
+  return z
+    .number({ error: (issue) => sentence(name, rule, issue.input) })
+    .meta({ minimum: 0, multipleOf: 1, description })
+    .superRefine((value, context) => {
+      if (!Number.isSafeInteger(value) || value < 0) context.addIssue(sentence(name, rule, value));
+    });
+}
+
 /** A text that a sentence or a table can show: one line, without control characters. */
 export function lineOfText(name: string, description: string, mayBeEmpty = false) {
   const rule = `takes a text of one line${mayBeEmpty ? "" : ", not empty"}`;

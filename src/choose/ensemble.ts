@@ -1,0 +1,142 @@
+import type { Conditions } from "../estimate/conditions.ts";
+import { estimateRoute } from "../estimate/estimate-route.ts";
+import { isoTime } from "../estimate/leg-result.ts";
+import { type PreparedRoute, prepareRoute } from "../estimate/prepare.ts";
+import type { RouteEstimate } from "../estimate/result.ts";
+import type { Field } from "../field/field.ts";
+import { type Quantiles, quantiles } from "./quantiles.ts";
+import type { Variant } from "./what-if-results.ts";
+import { worstFinding } from "./window-cell.ts";
+
+/** A member of an ensemble: its own fields, those in use by the craft. */
+export interface EnsembleMember {
+  readonly member: number;
+  readonly fields: readonly Field[];
+}
+
+/** Figures over the members that come so far; `null` where none does. */
+export interface EnsembleFigures {
+  /** How many members the figures are of. */
+  readonly count: number;
+  /** Time under way, s; arrival, ISO 8601 in UTC; use and what is left, store units. */
+  readonly time_s: Quantiles | null;
+  readonly arrival: Quantiles<string> | null;
+  readonly use: Quantiles | null;
+  readonly remaining: Quantiles | null;
+}
+
+export interface EnsembleLeg extends EnsembleFigures {
+  readonly leg: number;
+}
+
+/** A route under every member of an ensemble. */
+export interface EnsembleResult extends EnsembleFigures {
+  /** Ascending; the first is the control, of which the route's own figures are. */
+  readonly members: readonly number[];
+  /** Share of all members in which the route arrives with the reserve kept, 0..1. */
+  readonly reserveHolds: number;
+  /** Members in which the route arrives and the reserve is broken, and those in which it does not arrive. */
+  readonly breaksReserve: readonly number[];
+  readonly doesNotArrive: readonly number[];
+  readonly legs: readonly EnsembleLeg[];
+}
+
+/** One member's own estimate of a route. */
+export interface MemberRun {
+  readonly member: number;
+  readonly estimate: RouteEstimate;
+}
+
+/**
+ * Estimates a route under one member: to the last bit the estimate on that member's fields alone.
+ *
+ * @param prepared for fields of the ensemble; prepared anew for a member with other axes
+ */
+export function memberRun(
+  prepared: PreparedRoute,
+  conditions: Conditions,
+  { member, fields }: EnsembleMember,
+): MemberRun {
+  const own = haveSameAxes(conditions.fields, fields) ? prepared : preparedAnew(prepared, fields);
+  return { member, estimate: estimateRoute(own, { ...conditions, fields }).estimate };
+}
+
+/** The land stays as it was found. */
+function preparedAnew(prepared: PreparedRoute, fields: readonly Field[]): PreparedRoute {
+  const anew = prepareRoute(prepared.route, fields);
+  const legs = anew.legs.map((leg, n) => ({ ...leg, land: prepared.legs[n]?.land ?? [] }));
+  return { ...anew, legs };
+}
+
+function haveSameAxes(a: readonly Field[], b: readonly Field[]): boolean {
+  const same = (p: Float64Array | null, q: Float64Array | null) =>
+    p === q || (p !== null && q !== null && p.length === q.length && p.every((value, n) => value === q[n]));
+  return a.every((field, n) => {
+    const other = b[n]?.tiles ?? [];
+    const tilesAgree = field.tiles.every((tile, t) => {
+      const twin = other[t];
+      return (
+        twin !== undefined &&
+        same(tile.lon, twin.lon) &&
+        same(tile.lat, twin.lat) &&
+        same(tile.height, twin.height)
+      );
+    });
+    return field.tiles.length === other.length && tilesAgree;
+  });
+}
+
+/** What the runs of all members come to; `runs` ascending by member. */
+export function ensembleResult(runs: readonly MemberRun[]): EnsembleResult {
+  const arrived = runs.filter(({ estimate }) => estimate.arrival !== null);
+  const broken = arrived.filter(({ estimate }) => !holds(estimate));
+  const legCount = runs[0]?.estimate.legs.length ?? 0;
+  return {
+    members: runs.map(({ member }) => member),
+    reserveHolds: (arrived.length - broken.length) / runs.length,
+    breaksReserve: broken.map(({ member }) => member),
+    doesNotArrive: runs.filter(({ estimate }) => estimate.arrival === null).map(({ member }) => member),
+    ...figures(arrived.map(({ estimate: { totals, arrival } }) => ({ ...totals, arrival }))),
+    legs: Array.from({ length: legCount }, (_, n) => ({
+      leg: n + 1,
+      ...figures(
+        runs.flatMap(({ estimate }) => estimate.legs[n] ?? []).filter(({ arrival }) => arrival !== null),
+      ),
+    })),
+  };
+}
+
+function holds({ totals, reserve }: RouteEstimate): boolean {
+  return (totals.remaining as number) >= (reserve as number);
+}
+
+type Figured = Pick<RouteEstimate["legs"][number], "time_s" | "arrival" | "use" | "remaining">;
+
+function figures(of: readonly Figured[]): EnsembleFigures {
+  const numbers = (figure: (one: Figured) => number | null) =>
+    quantiles(of.map((one) => figure(one) as number));
+  const arrivals = quantiles(of.map(({ arrival }) => Date.parse(arrival as string)));
+  return {
+    count: of.length,
+    time_s: numbers(({ time_s }) => time_s),
+    arrival: arrivals && {
+      min: isoTime(arrivals.min),
+      p10: isoTime(arrivals.p10),
+      p50: isoTime(arrivals.p50),
+      p90: isoTime(arrivals.p90),
+      max: isoTime(arrivals.max),
+    },
+    use: numbers(({ use }) => use),
+    remaining: numbers(({ remaining }) => remaining),
+  };
+}
+
+/** Members as variants that may decide a route's status. */
+export function memberVariants(runs: readonly MemberRun[]): Variant[] {
+  return runs.map(({ member, estimate }) => ({
+    label: `member ${member}`,
+    status: estimate.status,
+    remaining: estimate.totals.remaining,
+    worst: worstFinding(estimate.findings),
+  }));
+}
