@@ -1,6 +1,5 @@
-import { bracketEdge } from "./turn-back-edge.ts";
+import { spotsAtEdge } from "./turn-back-between.ts";
 import type { Journeys } from "./turn-back-journey.ts";
-import { FINE } from "./turn-back-reach.ts";
 import type { EqualTimePoint } from "./turn-back-result.ts";
 import { pairsOf, timeDifference } from "./turn-back-spots.ts";
 import type { RouteWalk, Spot } from "./turn-back-walk.ts";
@@ -59,23 +58,10 @@ function zeroBetween(
   b: Spot,
   difference: (spot: Spot) => number | null,
 ): Spot | null {
-  const length = walk.span(a, b);
-  const found = new Map<number, Spot>([
-    [0, a],
-    [length, b],
-  ]);
-  const at = (x: number) => {
-    const spot = walk.inside(a, b, x);
-    if (spot === null) return null;
-    found.set(x, spot);
-    return difference(spot);
-  };
-  const start = difference(a) as number;
   // Within rounding the difference is 0, and that is near enough.
-  const { inside, outside } = bracketEdge(at, length, start, difference(b), FINE, FINE, 0);
-  const sides = [inside, outside].map((x) => found.get(x) as Spot);
-  const sizes = sides.map((spot) => Math.abs(difference(spot) ?? Number.POSITIVE_INFINITY));
-  const [near = 0, far = 0] = sizes;
-  const isJump = near > 0 && !Number.isFinite(near + far);
-  return isJump ? null : ((near <= far ? sides[0] : sides[1]) as Spot);
+  const { inside, outside } = spotsAtEdge(walk, a, b, difference, 0);
+  const near = Math.abs(difference(inside) as number);
+  const far = difference(outside);
+  if (near > 0 && far === null) return null;
+  return far === null || near <= Math.abs(far) ? inside : outside;
 }

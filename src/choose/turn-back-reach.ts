@@ -1,12 +1,10 @@
-import { bracketEdge } from "./turn-back-edge.ts";
+import { spotsAtEdge } from "./turn-back-between.ts";
 import type { Journeys } from "./turn-back-journey.ts";
 import type { Reach, ReachStretch, RoutePlace, TurnLimit } from "./turn-back-result.ts";
 import type { RouteWalk, Spot } from "./turn-back-walk.ts";
 
-/** Where a margin is zero is found to this, m or, in a stay, s. */
-export const FINE = 1e-6;
-/** Where a journey ceases to be possible or known, likewise. */
-const COARSE = 1;
+/** Two sides of an edge are no farther apart than this, m or, in a stay, s. */
+const EDGE_WIDTH = 1;
 /** Most changes looked for between two neighbouring spots. */
 const MOST_CHANGES = 8;
 
@@ -44,23 +42,13 @@ function stretch(journeys: Journeys, goal: number, from: Spot, to: Spot): ReachS
 
 /** Both sides of the first change found on the way from `a` to `b`, whose reach differs. */
 function edgeOf(walk: RouteWalk, journeys: Journeys, goal: number, a: Spot, b: Spot): [Spot, Spot] {
-  const found = new Map<number, Spot>([
-    [0, a],
-    [walk.span(a, b), b],
-  ]);
   const { reach, margin } = journeys.to(goal, a);
-  const value = (spot: Spot) => {
+  const figure = (spot: Spot) => {
     const journey = journeys.to(goal, spot);
     return margin === null ? (journey.reach === reach ? 1 : null) : journey.margin;
   };
-  const at = (x: number) => {
-    const spot = walk.inside(a, b, x);
-    if (spot === null) return null;
-    found.set(x, spot);
-    return value(spot);
-  };
-  const { inside, outside } = bracketEdge(at, walk.span(a, b), value(a) as number, value(b), FINE, COARSE);
-  return [found.get(inside) ?? a, found.get(outside) ?? b];
+  const { inside, outside } = spotsAtEdge(walk, a, b, figure);
+  return [inside, outside];
 }
 
 /** How far along the route a goal is reachable, from its stretches. */
@@ -141,5 +129,5 @@ function append(whole: ReachStretch[], next: ReachStretch): void {
 /** Between the two sides of one edge. */
 function isSliver(from: RoutePlace, to: RoutePlace): boolean {
   const width = from.distance_m === to.distance_m ? to.time_s - from.time_s : to.distance_m - from.distance_m;
-  return width <= COARSE;
+  return width <= EDGE_WIDTH;
 }

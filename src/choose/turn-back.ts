@@ -17,8 +17,9 @@ import { RouteWalk, type Spot } from "./turn-back-walk.ts";
  *
  * The way back takes each leg's own path and ordered speed; heights run linearly. A reserve of time is counted at the
  * final leg's rate of the journey at hand. Places with a margin of zero or equal times are roots of the true functions,
- * bracketed to a micrometre; edges of what is known or possible to a metre; what happens between two samples and leaves no
- * trace at either is not seen.
+ * bracketed to a micrometre; edges of what is known or possible to a metre. They are looked for between samples: every waypoint,
+ * before and after its stay, and at least 60 even places, closer where a figure comes near zero; what leaves no trace at
+ * any of them is not seen.
  *
  * @param prepared the route on the fields in use
  * @throws InputError where the pace has no speed on the route even with every field at zero, or the way back climbs and the
