@@ -3,6 +3,8 @@ import * as Comlink from "comlink";
 import { render } from "preact";
 import { listenForDrops } from "./files/drop-target.ts";
 import { keepPlan, restorePlan, warnBeforeLoss } from "./keeping/keep-plan.ts";
+import { offerNewer } from "./offline/NewerVersion.tsx";
+import { keepOffline } from "./offline/newer-version.ts";
 import { App } from "./shell/App.tsx";
 import { listenForKeys } from "./shell/keys.ts";
 import { narrowImages } from "./shell/tile-policy.ts";
@@ -42,4 +44,8 @@ if (root) render(<App page={page} />, root);
 // What the device holds comes back; a first visit begins with a demo. Only then is anything kept, so that nothing is kept over it.
 restorePlan(page)
   .then((restored) => (restored ? undefined : openDemo(page, "islands")))
-  .finally(() => warnBeforeLoss(page, keepPlan(page)));
+  .finally(() => {
+    const keeping = keepPlan(page);
+    warnBeforeLoss(page, keeping);
+    if (import.meta.env.PROD) void keepOffline((useIt) => offerNewer(page, keeping, useIt));
+  });

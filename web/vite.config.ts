@@ -1,4 +1,5 @@
 import { defineConfig, type Plugin } from "vite";
+import { precache } from "./offline/precache.ts";
 
 /*
  * Images may come from elsewhere only because a user may enter a tile address of their own; shell/tile-policy.ts narrows this to
@@ -34,7 +35,7 @@ function contentPolicy(): Plugin {
 export default defineConfig({
   root: new URL(".", import.meta.url).pathname,
   base: "./",
-  plugins: [contentPolicy()],
+  plugins: [contentPolicy(), precache()],
   worker: { format: "es" },
   build: {
     outDir: new URL("../dist/page", import.meta.url).pathname,
@@ -43,5 +44,15 @@ export default defineConfig({
     // What is inlined could not be fetched under the policy.
     assetsInlineLimit: 0,
     modulePreload: { polyfill: false },
+    rollupOptions: {
+      input: {
+        index: new URL("index.html", import.meta.url).pathname,
+        "service-worker": new URL("worker/service-worker.ts", import.meta.url).pathname,
+      },
+      output: {
+        // A service worker is found again by its address, and holds sway from its folder down.
+        entryFileNames: ({ name }) => (name === "service-worker" ? "[name].js" : "assets/[name]-[hash].js"),
+      },
+    },
   },
 });

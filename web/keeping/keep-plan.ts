@@ -1,17 +1,24 @@
 import { effect } from "@preact/signals";
-import { createStore, del, get, keys, set } from "idb-keyval";
+import { createStore, del, get, keys, set, setMany } from "idb-keyval";
 import { openPlan } from "../shell/open-plan.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { PlanDocument } from "../state/plan-document.ts";
+import { writeBehind } from "./write-behind.ts";
 
 /** A plan is written this long after the last change, ms: a drag is one write. */
-const SETTLED = 400;
+const SETTLED = 300;
+/** However long changes go on, no more than so much is lost in a crash, ms. */
+const AT_MOST = 2000;
 const PLAN = "plan";
+/** Whether the plan kept is in no file yet. */
+const UNSAVED = "unsaved";
 const FILE = "file:";
 
 /** Whether the device holds what the page shows. */
 export interface Keeping {
   readonly safe: () => boolean;
+  /** Writes what is not yet written; says whether the device now holds it all. */
+  readonly flush: () => Promise<boolean>;
 }
 
 const database = () => createStore("legwork", "plan");
@@ -22,10 +29,18 @@ export async function restorePlan(page: PageState): Promise<boolean> {
     const store = database();
     const plan = await get<PlanDocument>(PLAN, store);
     if (plan === undefined) return false;
-    return await openPlan(page, "the plan kept on this device", JSON.stringify(plan), async (name) => {
-      const file = await get<Blob>(FILE + name, store);
-      return file ?? null;
-    });
+    const unsaved = await get<boolean>(UNSAVED, store);
+    const opened = await openPlan(
+      page,
+      "the plan kept on this device",
+      JSON.stringify(plan),
+      async (name) => {
+        const file = await get<Blob>(FILE + name, store);
+        return file ?? null;
+      },
+    );
+    if (opened && unsaved === true) page.store.markUnsaved();
+    return opened;
   } catch {
     // A browser may deny the storage altogether; the page then begins as on a first visit.
     return false;
@@ -35,21 +50,29 @@ export async function restorePlan(page: PageState): Promise<boolean> {
 /** Keeps the plan and its files on the device from now on. */
 export function keepPlan(page: PageState): Keeping {
   const store = database();
-  let waiting: ReturnType<typeof setTimeout> | undefined;
-  let safe = true;
   const kept = new Map<string, Blob>();
+  let safe = true;
 
   const write = async (): Promise<void> => {
+    const plan = page.store.plan.peek();
+    const files = page.files.peek();
+    const unsaved = page.store.unsaved.peek();
     try {
-      const plan = page.store.plan.peek();
-      for (const [name, content] of page.files.peek()) {
+      for (const [name, content] of files) {
         if (kept.get(name) === content) continue;
         await set(FILE + name, content, store);
         kept.set(name, content);
       }
-      await set(PLAN, plan, store);
+      // Together, so that a crash leaves either the plan before or the plan after.
+      await setMany(
+        [
+          [PLAN, plan],
+          [UNSAVED, unsaved],
+        ],
+        store,
+      );
       await forgetUnnamed(plan);
-      safe = plan === page.store.plan.peek();
+      safe = plan === page.store.plan.peek() && files === page.files.peek();
     } catch {
       safe = false;
     }
@@ -62,19 +85,26 @@ export function keepPlan(page: PageState): Keeping {
       kept.delete(key.slice(FILE.length));
     }
   };
+  const writing = writeBehind(write, SETTLED, AT_MOST);
 
   effect(() => {
     page.store.plan.value;
+    page.store.unsaved.value;
     page.files.value;
     safe = false;
-    clearTimeout(waiting);
-    waiting = setTimeout(() => void write(), SETTLED);
+    writing.later();
   });
   // A page that is hidden may never be shown again.
   document.addEventListener("visibilitychange", () => {
-    if (document.visibilityState === "hidden" && !safe) void write();
+    if (document.visibilityState === "hidden" && !safe) void writing.now();
   });
-  return { safe: () => safe };
+  return {
+    safe: () => safe,
+    async flush() {
+      if (!safe) await writing.now();
+      return safe;
+    },
+  };
 }
 
 /** Asks before the page is left while something is neither in a file nor on the device. */

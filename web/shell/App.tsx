@@ -2,6 +2,7 @@ import { Chart } from "../chart/Chart.tsx";
 import { FieldDialog } from "../files/FieldDialog.tsx";
 import { Ledger } from "../ledger/Ledger.tsx";
 import { LegTable } from "../leg-table/LegTable.tsx";
+import { NewerVersion } from "../offline/NewerVersion.tsx";
 import { Ribbons } from "../ribbon/Ribbons.tsx";
 import type { PageState } from "../state/page-state.ts";
 import type { Pane } from "../state/page-view.ts";
@@ -43,6 +44,7 @@ export function App({ page }: { readonly page: PageState }) {
           </button>
         </div>
       )}
+      <NewerVersion page={page} />
       <PlanBar page={page} />
       <FieldDialog page={page} />
       <main>

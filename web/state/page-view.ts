@@ -36,6 +36,8 @@ export interface PageView {
   readonly tiles: Signal<string>;
   /** What went wrong with something that the user did, in a sentence, until it is dismissed. */
   readonly notice: Signal<string | null>;
+  /** Brings in a newer version of the page; `null` where none waits. */
+  readonly newer: Signal<(() => Promise<void>) | null>;
   /** What the live region says. */
   readonly announcement: Signal<string>;
 }
@@ -55,6 +57,7 @@ export function createPageView(): PageView {
     shading: signal<"none" | "wind" | "current">("none"),
     tiles: signal(""),
     notice: signal<string | null>(null),
+    newer: signal<(() => Promise<void>) | null>(null),
     announcement: signal(""),
   };
 }

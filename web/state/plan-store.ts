@@ -39,11 +39,13 @@ export interface PlanStore {
   /** Begins anew with a plan: nothing before it can be undone. */
   restart(plan: PlanDocument): void;
   markSaved(): void;
+  /** Says that the plan as it stands is in no file. */
+  markUnsaved(): void;
 }
 
 export function createPlanStore(initial: PlanDocument): PlanStore {
   const history = signal(beginHistory<Held>({ plan: initial, selection: { route: 0, waypoint: null } }));
-  const saved = signal(initial);
+  const saved = signal<PlanDocument | null>(initial);
   const held = computed(() => history.value.present);
 
   const write = (label: string, next: Held, merge: string | null): void => {
@@ -91,6 +93,9 @@ export function createPlanStore(initial: PlanDocument): PlanStore {
     },
     markSaved() {
       saved.value = history.peek().present.plan;
+    },
+    markUnsaved() {
+      saved.value = null;
     },
   };
 }
