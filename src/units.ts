@@ -6,7 +6,12 @@ export { type Dimension, INNER_UNITS } from "./unit-table.ts";
 
 const NUMBER = /^[+-]?(?:\d+(?:\.\d+)?|\.\d+)(?:[eE][+-]?\d+)?/;
 
-/** Symbols that a dimension takes, in the order in which messages name them. */
+/**
+ * Symbols that a dimension takes, in the order in which messages name them.
+ *
+ * @example
+ * symbolsOf("speed") // → ["m/s", "km/h", "kn", "ft/min"]
+ */
 export function symbolsOf(dimension: Dimension): readonly string[] {
   return UNITS.filter((each) => each.dimension === dimension).map((each) => each.symbol);
 }

@@ -113,6 +113,13 @@ export function glauertInducedSpeed(
  * P₀ = (δ/8) ρ s A Ω³ R³, the power in W that turns the blades against their own drag in hover (Zeng et al. 2019, Table I).
  *
  * @param given δ, ρ (kg/m³), s, A (m²), Ω (rad/s), R (m), each above 0
+ * @throws InputError where one is out of its range
+ *
+ * @example
+ * bladeProfilePower({
+ *   profileDragCoefficient: 0.012, airDensity_kg_m3: 1.225, solidity: 0.05, discArea_m2: 0.503,
+ *   bladeSpeed_rad_s: 300, rotorRadius_m: 0.4,
+ * }) // → 79.856
  */
 export function bladeProfilePower(given: {
   readonly profileDragCoefficient: number;
@@ -136,6 +143,10 @@ export function bladeProfilePower(given: {
  * P_i = (1 + k) W^(3/2) / sqrt(2 ρ A), the power in W that carries the weight in hover (Zeng et al. 2019, Table I).
  *
  * @param given k not below 0; W (N), ρ (kg/m³), A (m²), each above 0
+ * @throws InputError where one is out of its range
+ *
+ * @example
+ * inducedPower({ inducedCorrection: 0.1, weight_N: 20, airDensity_kg_m3: 1.225, discArea_m2: 0.503 }) // → 88.628
  */
 export function inducedPower(given: {
   readonly inducedCorrection: number;

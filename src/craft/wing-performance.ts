@@ -27,14 +27,29 @@ export function maxLiftToDrag(polar: Polar): number {
   return 1 / (2 * Math.sqrt(polar.inducedFactor * polar.zeroLiftDrag));
 }
 
-/** Greatest C_L^(3/2) / C_D = (3 C_D0 / k)^(3/4) / (4 C_D0): where induced drag is three times the zero-lift drag. */
+/**
+ * Greatest C_L^(3/2) / C_D = (3 C_D0 / k)^(3/4) / (4 C_D0): where induced drag is three times the zero-lift drag.
+ *
+ * @throws InputError where a figure is not above 0
+ *
+ * @example
+ * maxLiftThreeHalvesToDrag({ zeroLiftDrag: 0.04, inducedFactor: 0.0625 }) // → 10.194
+ */
 export function maxLiftThreeHalvesToDrag(polar: Polar): number {
   checkPolar(polar);
   const { zeroLiftDrag, inducedFactor } = polar;
   return ((3 * zeroLiftDrag) / inducedFactor) ** 0.75 / (4 * zeroLiftDrag);
 }
 
-/** Speed of the greatest lift-to-drag ratio in m/s, V = sqrt(2 W / (ρ S) · sqrt(k / C_D0)): farthest glide and range. */
+/**
+ * Speed of the greatest lift-to-drag ratio in m/s, V = sqrt(2 W / (ρ S) · sqrt(k / C_D0)): farthest glide and range.
+ *
+ * @throws InputError where a figure is not above 0
+ *
+ * @example
+ * const polar = { zeroLiftDrag: 0.04, inducedFactor: 0.0625 };
+ * bestGlideSpeed({ ...polar, mass_kg: 10, wingArea_m2: 1, airDensity_kg_m3: 1.225 }) // → 14.147
+ */
 export function bestGlideSpeed(wing: Wing): number {
   checkPolar(wing);
   const weight = requirePositive(wing.mass_kg, "mass", "kg") * STANDARD_GRAVITY;
@@ -43,7 +58,15 @@ export function bestGlideSpeed(wing: Wing): number {
   return Math.sqrt(((2 * weight) / (density * area)) * Math.sqrt(wing.inducedFactor / wing.zeroLiftDrag));
 }
 
-/** Speed of least power required in m/s, 3^(-1/4) of the best glide speed: longest endurance. */
+/**
+ * Speed of least power required in m/s, 3^(-1/4) of the best glide speed: longest endurance.
+ *
+ * @throws InputError where a figure is not above 0
+ *
+ * @example
+ * const polar = { zeroLiftDrag: 0.04, inducedFactor: 0.0625 };
+ * leastPowerSpeed({ ...polar, mass_kg: 10, wingArea_m2: 1, airDensity_kg_m3: 1.225 }) // → 10.749
+ */
 export function leastPowerSpeed(wing: Wing): number {
   return bestGlideSpeed(wing) / 3 ** 0.25;
 }
@@ -74,7 +97,12 @@ function checkBreguet(given: BreguetParameters): void {
  * Range in m at a constant lift-to-drag ratio, η / (c g₀) · L/D · ln(m₀ / m₁).
  *
  * @param liftToDrag above 0; `maxLiftToDrag` gives the longest range
+ * @throws InputError where one is out of its range
  * @see Breguet; Anderson, Introduction to Flight, section 6.12
+ *
+ * @example
+ * const fuel = { startMass_kg: 1000, endMass_kg: 900, propellerEfficiency: 0.8, specificConsumption_kg_J: 8e-8 };
+ * breguetRange(fuel, 10) // → 1074378.3
  */
 export function breguetRange(given: BreguetParameters, liftToDrag: number): number {
   checkBreguet(given);
@@ -87,7 +115,12 @@ export function breguetRange(given: BreguetParameters, liftToDrag: number): numb
  * Endurance in s at a constant lift coefficient, η / (c g₀) · C_L^(3/2)/C_D · sqrt(2 ρ S) (W₁^(-1/2) - W₀^(-1/2)).
  *
  * @param liftThreeHalvesToDrag above 0; `maxLiftThreeHalvesToDrag` gives the longest endurance
+ * @throws InputError where one is out of its range
  * @see Breguet; Anderson, Introduction to Flight, section 6.12
+ *
+ * @example
+ * const fuel = { startMass_kg: 1000, endMass_kg: 900, propellerEfficiency: 0.8, specificConsumption_kg_J: 8e-8 };
+ * breguetEndurance({ ...fuel, wingArea_m2: 15, airDensity_kg_m3: 1.225 }, 10) // → 33766.4
  */
 export function breguetEndurance(
   given: BreguetParameters & Pick<WingParameters, "wingArea_m2" | "airDensity_kg_m3">,

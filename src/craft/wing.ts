@@ -26,6 +26,10 @@ const LEAST_SPEED = 1e-6;
  *
  * @throws InputError where a parameter is out of its range
  * @see Anderson, Introduction to Flight, chapter 6, power required; any performance text
+ *
+ * @example
+ * const wing = { mass_kg: 10, wingArea_m2: 1, zeroLiftDrag: 0.04, inducedFactor: 0.0625, airDensity_kg_m3: 1.225 };
+ * wingPower({ ...wing, efficiency: 0.5 }).perSecond(20) // → 490.133
  */
 export function wingPower(given: WingParameters): PowerModel {
   const mass = requirePositive(given.mass_kg, "mass", "kg");

@@ -23,6 +23,17 @@ export interface RouteRun {
  *
  * @throws InputError where the pace has no speed even with every field at zero
  * @throws Error where the fields are not those that the route was prepared for
+ *
+ * @example
+ * const craft = readCraft(
+ *   `{ "name": "Boat", "moves": "water", "power": { "model": "constant", "rate": "1 kW" },
+ *      "store": { "capacity": "10 kWh" } }`,
+ * );
+ * const waypoint = (name, lon) => (
+ *   { name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const route = { name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] };
+ * const conditions = { departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 5 }, reserve: null, fields: [] };
+ * estimateRoute(prepareRoute(route, []), conditions).estimate.arrival // → "1970-01-01T06:11:03.898Z"
  */
 export function estimateRoute(prepared: PreparedRoute, conditions: Conditions): RouteRun {
   const work = runRoute(prepared, conditions, true);
@@ -66,6 +77,19 @@ export interface RouteOutcome {
  * on dates without a magnetic model.
  *
  * @throws as {@link estimateRoute} does
+ *
+ * @example
+ * const craft = readCraft(
+ *   `{ "name": "Boat", "moves": "water", "power": { "model": "constant", "rate": "1 kW" },
+ *      "store": { "capacity": "10 kWh" } }`,
+ * );
+ * const waypoint = (name, lon) => (
+ *   { name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const route = { name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] };
+ * const prepared = prepareRoute(route, []);
+ * const conditions = { departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 5 }, reserve: null, fields: [] };
+ * const { status, use } = routeOutcome(prepared, conditions);
+ * [status, use] // → ["clear", 22263898.2]
  */
 export function routeOutcome(prepared: PreparedRoute, conditions: Conditions): RouteOutcome {
   const work = runRoute(prepared, conditions, false);

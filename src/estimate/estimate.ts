@@ -36,20 +36,72 @@ export interface EstimateAnswer {
  * Estimates every route of a plan: the main job.
  *
  * @throws InputError where a position is not on the globe, or the pace has no speed even with every field at zero
+ *
+ * @example
+ * const craft = readCraft(
+ *   `{ "name": "Boat", "moves": "water", "power": { "model": "constant", "rate": "1 kW" },
+ *      "store": { "capacity": "10 kWh" } }`,
+ * );
+ * const waypoint = (name, lon) => (
+ *   { name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const route = { name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] };
+ * const pace = { hold: "through-speed", speed_m_s: 5 };
+ * const still = { reserve: null, fields: [], land: null };
+ * const input = { title: "East", departure: 0, craft, pace, routes: [route], ...still };
+ * estimate(input).estimate.routes[0].totals.time_s // → 22263.898
  */
 export function estimate(input: EstimateInput): EstimateAnswer {
   const prepared = prepareRoutes(input);
   return estimatePrepared(prepared, input);
 }
 
-/** The first half for all routes: reuse it while routes, the grids' axes and the craft's medium stay the same. */
+/**
+ * The first half for all routes, one prepared route a route of the input: reuse it while routes, the grids' axes and the
+ * craft's medium stay the same.
+ *
+ * @throws InputError where a waypoint's position is not on the globe
+ *
+ * @example
+ * const craft = readCraft(
+ *   `{ "name": "Boat", "moves": "water", "power": { "model": "constant", "rate": "1 kW" },
+ *      "store": { "capacity": "10 kWh" } }`,
+ * );
+ * const waypoint = (name, lon) => (
+ *   { name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const route = { name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] };
+ * const pace = { hold: "through-speed", speed_m_s: 5 };
+ * const still = { reserve: null, fields: [], land: null };
+ * const input = { title: "East", departure: 0, craft, pace, routes: [route], ...still };
+ * prepareRoutes(input)[0].legs[0].track.length // → 111319.491
+ */
 export function prepareRoutes(input: EstimateInput): PreparedRoute[] {
   const fields = fieldsInUse(input.craft, input.fields);
   const land = input.craft.moves === "water" ? input.land : null;
   return input.routes.map((route) => prepareRoute(route, fields, land));
 }
 
-/** The second half for all routes. */
+/**
+ * The second half for all routes.
+ *
+ * @param prepared by `prepareRoutes`, from an input with the same routes, axes and medium
+ * @throws InputError where the pace has no speed even with every field at zero
+ * @throws Error where the fields are not those that the routes were prepared for
+ *
+ * @example
+ * const craft = readCraft(
+ *   `{ "name": "Boat", "moves": "water", "power": { "model": "constant", "rate": "1 kW" },
+ *      "store": { "capacity": "10 kWh" } }`,
+ * );
+ * const waypoint = (name, lon) => (
+ *   { name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const route = { name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] };
+ * const pace = { hold: "through-speed", speed_m_s: 5 };
+ * const still = { reserve: null, fields: [], land: null };
+ * const input = { title: "East", departure: 0, craft, pace, routes: [route], ...still };
+ * const prepared = prepareRoutes(input);
+ * const at = (speed_m_s) => estimatePrepared(prepared, { ...input, pace: { hold: "through-speed", speed_m_s } });
+ * [5, 10].map((speed) => at(speed).estimate.routes[0].totals.time_s) // → [22263.898, 11131.949]
+ */
 export function estimatePrepared(prepared: readonly PreparedRoute[], input: EstimateInput): EstimateAnswer {
   const fields = fieldsInUse(input.craft, input.fields);
   const { departure, craft, reserve } = input;
@@ -95,7 +147,17 @@ function fieldNotes({ craft, fields }: EstimateInput, used: readonly Field[]): F
   return notes;
 }
 
-/** Files and validity of a field: from its first valid time to its last; `null` where no tile of it is timed. */
+/**
+ * Files and validity of a field: from its first valid time to its last; `null` where no tile of it is timed.
+ *
+ * @example
+ * async function* open() {
+ *   yield new TextEncoder().encode(
+ *     "time,lat,lon,u,v\n2027-05-04T00:00:00Z,0,0,1,0\n2027-05-04T06:00:00Z,0,0,2,0\n");
+ * }
+ * const grid = await readGridFile(open, { file: "stream.csv", role: "current" });
+ * fieldSummary(mergeField("current", [{ grid, gaps: "nearest", beyond: "stop", outside: "stop" }])) // → { files: ["stream.csv"], validFrom: "2027-05-04T00:00:00.000Z", validTo: "2027-05-04T06:00:00.000Z" }
+ */
 export function fieldSummary({ role, tiles }: Field): FieldSummary {
   const times = tiles.flatMap((tile) =>
     tile.times === null ? [] : [tile.times[0] as number, tile.times[tile.times.length - 1] as number],

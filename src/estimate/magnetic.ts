@@ -21,7 +21,15 @@ export function magneticVariation(position: Position, height_m: number, time: nu
   return geomagnetism.model(new Date(time)).point([position.lat, lon, height_m / 1000]).decl;
 }
 
-/** Magnetic course from a true one and the variation: variation east, magnetic least. Degrees, 0 <= c < 360. */
+/**
+ * Magnetic course from a true one and the variation: variation east, magnetic least. Degrees clockwise, 0 <= c < 360.
+ *
+ * @param trueCourse degrees clockwise from true north
+ * @param variation degrees, east positive
+ *
+ * @example
+ * magneticCourse(2, 5) // → 357
+ */
 export function magneticCourse(trueCourse: number, variation: number): number {
   return normaliseCourse(trueCourse - variation);
 }

@@ -40,6 +40,12 @@ export interface PreparedRoute {
  * @param fields those that the craft uses (see {@link fieldsInUse})
  * @param land coarse land to hold the route against, for craft in water; `null` for none
  * @throws InputError where a waypoint's position is not on the globe
+ *
+ * @example
+ * const waypoint = (name, lon) => (
+ *   { name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const route = { name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] };
+ * prepareRoute(route, []).legs[0].track.length // → 111319.491
  */
 export function prepareRoute(
   route: Route,
@@ -62,7 +68,17 @@ function prepareLeg(from: Waypoint, to: Waypoint, fields: readonly Field[], land
   return { from, to, track, curve, panels, heights, cells, land: stretches };
 }
 
-/** The fields that act on a craft: a current in the plan of a craft in the air is left out. */
+/**
+ * The fields that act on a craft: a current in the plan of a craft in the air is left out.
+ *
+ * @example
+ * const craft = readCraft(
+ *   `{ "name": "Kite", "moves": "air", "power": { "model": "constant", "rate": "1 kW" },
+ *      "store": { "capacity": "1 kWh" } }`,
+ * );
+ * const fields = [{ role: "current", tiles: [] }, { role: "wind", tiles: [] }];
+ * fieldsInUse(craft, fields).map(({ role }) => role) // → ["wind"]
+ */
 export function fieldsInUse(craft: Craft, fields: readonly Field[]): Field[] {
   return fields.filter(({ role }) => craft.moves === "water" || role === "wind");
 }

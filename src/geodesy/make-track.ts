@@ -15,7 +15,14 @@ export function makeTrack(from: Position, to: Position, path: PathKind): Track {
   return makeTrackOn(WGS84, from, to, path);
 }
 
-/** The track of a leg on any ellipsoid; see {@link makeTrack}. */
+/**
+ * The track of a leg on any ellipsoid; see {@link makeTrack}.
+ *
+ * @throws InputError as {@link makeTrack} does
+ *
+ * @example
+ * makeTrackOn(ellipsoid(6371000, 0), { lat: 0, lon: 0 }, { lat: 0, lon: 90 }, "geodesic").length // → 10007543.398
+ */
 export function makeTrackOn(ellipsoid: Ellipsoid, from: Position, to: Position, path: PathKind): Track {
   return path === "geodesic" ? geodesicTrack(ellipsoid, from, to) : rhumbTrack(ellipsoid, from, to);
 }

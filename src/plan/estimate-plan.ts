@@ -57,6 +57,22 @@ export interface PlanChecked {
  * The main job: reads a plan with its craft and fields and estimates its routes.
  *
  * @throws InputError in one sentence with file, line or key for whatever is wrong in what the user gave
+ *
+ * @example
+ * const plan = JSON.stringify({
+ *   format: "legwork-plan/1", departure: "2027-05-04T06:00:00Z",
+ *   craft: {
+ *     name: "Boat", moves: "water", speed: "5 m/s",
+ *     power: { model: "constant", rate: "1 kW" }, store: { capacity: "10 kWh" },
+ *   },
+ *   fields: [{ role: "current", file: "stream.csv" }],
+ *   routes: [{ name: "East", waypoints: [{ name: "A", lat: 0, lon: 0 }, { name: "B", lat: 0, lon: 1 }] }],
+ * });
+ * async function* open() {
+ *   yield new TextEncoder().encode("lat,lon,u,v\n-1,0,1,0\n-1,1,1,0\n1,0,1,0\n1,1,1,0\n");
+ * }
+ * const answer = await estimatePlan(plan, { file: "east.plan.json", open });
+ * answer.estimate.routes[0].totals.time_s // → 18553.248
  */
 export async function estimatePlan(text: string, request: PlanRequest): Promise<PlanAnswer> {
   const { plan, input, members } = await checkPlan(text, request);
@@ -83,6 +99,22 @@ function answerOf(
  * Reads and checks everything that a plan names, and computes nothing.
  *
  * @throws InputError as {@link estimatePlan} does
+ *
+ * @example
+ * const plan = JSON.stringify({
+ *   format: "legwork-plan/1", departure: "2027-05-04T06:00:00Z",
+ *   craft: {
+ *     name: "Boat", moves: "water", speed: "5 m/s",
+ *     power: { model: "constant", rate: "1 kW" }, store: { capacity: "10 kWh" },
+ *   },
+ *   fields: [{ role: "current", file: "stream.csv" }],
+ *   routes: [{ name: "East", waypoints: [{ name: "A", lat: 0, lon: 0 }, { name: "B", lat: 0, lon: 1 }] }],
+ * });
+ * async function* open() {
+ *   yield new TextEncoder().encode("lat,lon,u,v\n-1,0,1,0\n-1,1,1,0\n1,0,1,0\n1,1,1,0\n");
+ * }
+ * const { input } = await checkPlan(plan, { file: "east.plan.json", open });
+ * [input.craft.store.usable, input.fields[0].role] // → [36e6, "current"]
  */
 export async function checkPlan(text: string, request: PlanRequest): Promise<PlanChecked> {
   const plan = await checkPlanText(text, request);

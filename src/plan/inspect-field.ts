@@ -16,6 +16,13 @@ export interface InspectRequest {
  * Says what a field file holds: axes, valid times, coverage, gaps, ranges, ignored columns, memory.
  *
  * @throws InputError with the line where the file breaks a rule
+ *
+ * @example
+ * async function* open() {
+ *   yield new TextEncoder().encode("lat,lon,u,v\n50,-5,3,4\n50,-4,0,\n51,-5,6,8\n51,-4,0,0\n");
+ * }
+ * const { role, longitude, missing, speed } = await inspectField(open, { file: "wind.csv" });
+ * [role, longitude.count, missing, speed.max] // → ["wind", 2, 1, 10]
  */
 export async function inspectField(
   open: () => AsyncIterable<Uint8Array>,

@@ -22,6 +22,12 @@ const OPPOSED_CURRENT = 0.5;
  *
  * @param file its name, for messages
  * @throws InputError for the first thing wrong with it
+ *
+ * @example
+ * readCraft(
+ *   `{ "name": "Boat", "moves": "water", "power": { "model": "constant", "rate": "1 kW" },
+ *      "store": { "capacity": "10 kWh" } }`,
+ * ).store // → { unit: "J", usable: 36e6 }
  */
 export function readCraft(text: string, file = ""): Craft {
   return readCraftDocument(parseJson(text, file), file);

@@ -32,6 +32,19 @@ export interface ReadPlanOptions {
  * Reads a plan's text, and the craft file that it names, into SI units with everything checked.
  *
  * Errors: an InputError for the first thing wrong with either, with its file and line or key; those of `open`.
+ *
+ * @example
+ * const plan = JSON.stringify({
+ *   format: "legwork-plan/1", departure: "2027-05-04T06:00:00Z",
+ *   craft: {
+ *     name: "Boat", moves: "water", speed: "5 m/s",
+ *     power: { model: "constant", rate: "1 kW" }, store: { capacity: "10 kWh" },
+ *   },
+ *   fields: [{ role: "current", file: "stream.csv" }],
+ *   routes: [{ name: "East", waypoints: [{ name: "A", lat: 0, lon: 0 }, { name: "B", lat: 0, lon: 1 }] }],
+ * });
+ * const { departure, fields } = await readPlan(plan, { open: async function* () {} });
+ * [departure, fields[0].gaps] // → [1809410400000, "nearest"]
  */
 export async function readPlan(text: string, options: ReadPlanOptions): Promise<Plan> {
   return readPlanDocument(parseJson(text, options.file), options);
@@ -43,6 +56,18 @@ export async function readPlan(text: string, options: ReadPlanOptions): Promise<
  * @param document a PlanDocument, or anything that claims to be one; it stays as it is
  *
  * Errors: as {@link readPlan}.
+ *
+ * @example
+ * const plan = {
+ *   format: "legwork-plan/1", departure: "2027-05-04T06:00:00Z",
+ *   craft: {
+ *     name: "Boat", moves: "water", speed: "5 m/s",
+ *     power: { model: "constant", rate: "1 kW" }, store: { capacity: "10 kWh" },
+ *   },
+ *   routes: [{ name: "East", waypoints: [{ name: "A", lat: 0, lon: 0 }, { name: "B", lat: 0, lon: 1 }] }],
+ * };
+ * const { pace } = await readPlanDocument(plan, { open: async function* () {} });
+ * pace // → { hold: "through-speed", speed_m_s: 5 }
  */
 export async function readPlanDocument(document: unknown, options: ReadPlanOptions): Promise<Plan> {
   const { file = "", open } = options;

@@ -8,12 +8,30 @@ const WIDTH = 110;
 /**
  * Writes a plan document as the text of its file: keys in the order of the schema, so that the same plan gives the same bytes;
  * keys that are `undefined` are left out; quantities, times and positions stay as the user wrote them.
+ *
+ * @example
+ * const plan = {
+ *   format: "legwork-plan/1", departure: "2027-05-04T06:00:00Z",
+ *   craft: {
+ *     name: "Boat", moves: "water", speed: "5 m/s",
+ *     power: { model: "constant", rate: "1 kW" }, store: { capacity: "10 kWh" },
+ *   },
+ *   routes: [{ name: "East", waypoints: [{ name: "A", lat: 0, lon: 0 }, { name: "B", lat: 0, lon: 1 }] }],
+ * };
+ * serializePlan(plan).split("\n")[1] // → '  "format": "legwork-plan/1",'
  */
 export function serializePlan(document: PlanDocument): string {
   return `${jsonText(inOrder(document, planSchema), "")}\n`;
 }
 
-/** Writes a craft document as the text of its file, as {@link serializePlan} does. */
+/**
+ * Writes a craft document as the text of its file, as {@link serializePlan} does.
+ *
+ * @example
+ * const power = { model: "constant", rate: "1 kW" };
+ * const text = serializeCraft({ store: { capacity: "10 kWh" }, power, moves: "water", name: "Boat" });
+ * text.split("\n")[1] // → '  "name": "Boat",'
+ */
 export function serializeCraft(document: CraftDocument): string {
   return `${jsonText(inOrder(document, craftSchema), "")}\n`;
 }

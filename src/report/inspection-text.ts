@@ -56,7 +56,15 @@ function membersText(members: readonly number[]): string {
   return `${members.length}: ${isWhole && members.length > 2 ? `${first} to ${last}` : members.join(", ")}`;
 }
 
-/** What a field file holds, as text of at most 80 columns with a final line end. Speeds in m/s, the way the medium moves. */
+/**
+ * What a field file holds, as text of at most 80 columns with a final line end. Speeds in m/s, the way the medium moves.
+ *
+ * @example
+ * async function* open() {
+ *   yield new TextEncoder().encode("lat,lon,u,v\n50,-5,3,4\n50,-4,0,0\n");
+ * }
+ * writeInspection(await inspectField(open, { file: "wind.csv" })).split("\n")[2] // → "Longitude: 2: -5 to -4 deg, every 1 deg"
+ */
 export function writeInspection(field: FieldInspection): string {
   const gaps =
     field.missing === 0 ? "no gaps" : `${field.missing} missing, coverage ${percent(field.coverage)}`;
