@@ -49,6 +49,7 @@ export type { Route, Waypoint } from "./estimate/route.ts";
 export { type ArrivalWindow, solveArrival } from "./choose/arrive.ts";
 export { estimateArriving } from "./choose/arriving-estimate.ts";
 export { type DepartureWindow, windowDepartures } from "./choose/departure-window.ts";
+export { type InTime, latestInTime, type RouteInTime } from "./choose/in-time.ts";
 export { type LatestDeparture, latestDeparture } from "./choose/latest-departure.ts";
 export { fastestWithReserve, leastUseSpeed, type PaceCurve, paceCurve } from "./choose/pace-curve.ts";
 export { type RefinedWindow, refineWindow } from "./choose/refine.ts";

@@ -10,6 +10,8 @@ export interface DepartureWindow {
   readonly every_s: number;
   /** In place of the pace's speed, m/s; `null` for the pace as it is. */
   readonly speeds_m_s: readonly number[] | null;
+  /** An arrival to keep, ms since 1970-01-01T00:00Z, for which the latest departure is looked for. */
+  readonly arriveBy?: number;
 }
 
 /** Most cells (routes × departures × speeds) of a window. */

@@ -88,6 +88,7 @@ function addWindow(program: Command, settle: Settle): void {
     .option("--every <step>", "from one departure to the next, as 30min")
     .option("--speeds <speeds>", "in place of the pace's speed, as 8kn,10kn; a leg's own speed stays")
     .option("--route <name>", "only this route (repeatable)", collect)
+    .option("--arrive-by <time>", "find the latest departure that arrives by then")
     .option("--refine", "find the bests to the minute")
     .addOption(
       new Option("--format <format>", "what to write").choices(["table", "csv", "json"]).default("table"),

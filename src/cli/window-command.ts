@@ -18,6 +18,7 @@ export interface WindowOptions {
   /** Separated by commas. */
   readonly speeds?: string;
   readonly route?: readonly string[];
+  readonly arriveBy?: string;
   readonly refine?: boolean;
   readonly format: "table" | "csv" | "json";
   readonly units?: Units;
@@ -26,7 +27,7 @@ export interface WindowOptions {
 
 /** Compares the departures of a plan's window and writes them; 1 where none can be done. */
 export async function windowCommand(file: string, options: WindowOptions): Promise<number> {
-  const { from, to, every, speeds, route, refine = false, format, units, out } = options;
+  const { from, to, every, speeds, route, refine = false, arriveBy, format, units, out } = options;
   noteUnits(units, format);
   const answer = await windowPlan(await readText(file), {
     file,
@@ -37,12 +38,13 @@ export async function windowCommand(file: string, options: WindowOptions): Promi
     ...(to === undefined ? {} : { to }),
     ...(every === undefined ? {} : { every }),
     ...(speeds === undefined ? {} : { speeds: speeds.split(",") }),
+    ...(arriveBy === undefined ? {} : { arriveBy }),
     ...(route === undefined ? {} : { routes: route }),
   });
-  const { plan, input, window, cells, summary, refined } = answer;
+  const { plan, input, window, cells, summary, refined, inTime } = answer;
   const { title, craft, pace, arrive = null } = plan;
   const fields = input.fields.map(fieldSummary);
-  const report = { title, fields, craft, pace, arrive, window, cells, summary, refined };
+  const report = { title, fields, craft, pace, arrive, window, cells, summary, refined, inTime };
   const text = {
     table: () => writeWindowTable(report, units ?? (craft.moves === "air" ? "air" : "sea")),
     csv: () => writeWindowCsv(report),

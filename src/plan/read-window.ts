@@ -29,6 +29,7 @@ export function windowOf(parts: PlanParts, craft: Craft, fault: Fault): Departur
     to: window.to,
     every_s: window.every.value,
     speeds_m_s: window.speeds?.map(({ value }) => value) ?? null,
+    ...(window.arriveBy === undefined ? {} : { arriveBy: window.arriveBy }),
   };
   try {
     checkWindow(read, parts.routes.length);

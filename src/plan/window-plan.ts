@@ -1,4 +1,5 @@
 import type { DepartureWindow } from "../choose/departure-window.ts";
+import { type InTime, latestInTime } from "../choose/in-time.ts";
 import { type RefinedWindow, refineWindow } from "../choose/refine.ts";
 import { makeSweep, windowCells } from "../choose/window.ts";
 import type { WindowCell } from "../choose/window-cell.ts";
@@ -19,6 +20,8 @@ export interface WindowRequest extends PlanRequest {
   readonly every?: string;
   /** Speeds to try, as `8 kn`. */
   readonly speeds?: readonly string[];
+  /** An arrival to keep, ISO 8601 with a zone: the latest departure for it is looked for. */
+  readonly arriveBy?: string;
   /** Whether the bests are refined to the minute. */
   readonly refine?: boolean;
 }
@@ -31,6 +34,8 @@ export interface WindowAnswer {
   readonly cells: readonly WindowCell[];
   readonly summary: WindowSummary;
   readonly refined: RefinedWindow | null;
+  /** The latest departures that arrive in time; `null` where no arrival is to be kept. */
+  readonly inTime: InTime | null;
 }
 
 /**
@@ -42,14 +47,15 @@ export async function windowPlan(text: string, request: WindowRequest): Promise<
   const { plan, input } = await checkPlan(text, request);
   const window = windowAsked(plan.window, request);
   const sweep = makeSweep(prepareRoutes(input), input, plan.arrive ?? null);
+  const inTime = latestInTime(sweep, window);
   const cells = [...windowCells(sweep, window)];
   const refined = request.refine === true ? refineWindow(sweep, window, cells) : null;
-  return { plan, input, window, cells, summary: summariseWindow(cells), refined };
+  return { plan, input, window, cells, summary: summariseWindow(cells), refined, inTime };
 }
 
 function windowAsked(
   planned: DepartureWindow | undefined,
-  { file, from, to, every, speeds }: WindowRequest,
+  { file, from, to, every, speeds, arriveBy }: WindowRequest,
 ): DepartureWindow {
   const needed = (what: string, value: number | undefined): number => {
     if (value !== undefined) return value;
@@ -58,7 +64,9 @@ function windowAsked(
       { file, key: "window" },
     );
   };
+  const keep = arriveBy === undefined ? planned?.arriveBy : parseTime(arriveBy, "arriveBy");
   return {
+    ...(keep === undefined ? {} : { arriveBy: keep }),
     from: needed("from", from === undefined ? planned?.from : parseTime(from, "from")),
     to: needed("to", to === undefined ? planned?.to : parseTime(to, "to")),
     every_s: needed("every", every === undefined ? planned?.every_s : parseQuantity(every, "time", "every")),

@@ -1,4 +1,4 @@
-import { listOf, objectOf, POSITIVE, quantity } from "./schema-parts.ts";
+import { listOf, objectOf, optional, POSITIVE, quantity } from "./schema-parts.ts";
 import { time } from "./time-schema.ts";
 
 /** Departures to compare. */
@@ -8,13 +8,14 @@ export const windowSchema = objectOf(
     from: time("from", "First departure."),
     to: time("to", "Last departure."),
     every: quantity(["time"], "every", POSITIVE, "Step from one departure to the next."),
-    speeds: listOf(
+    speeds: optional(listOf(
       "speeds",
       quantity(["speed"], "speed", POSITIVE, "A speed to try."),
       1,
       "speeds",
       "Speeds to try in place of the pace's.",
-    ).optional(),
+    )),
+    arriveBy: optional(time("arriveBy", "An arrival to keep: the latest departure for it is looked for.")),
   },
   "Departures to compare, and speeds.",
 );

@@ -56,13 +56,34 @@ function columnsOf(rows: readonly Row[], units: WindowUnits): Column[] {
   ];
 }
 
+/** The latest departures that arrive in time, as rows, and a line for every route and speed that has none. */
+function inTimeOf({ inTime }: WindowReport, units: WindowUnits): { rows: Row[]; missed: string[] } {
+  const found = inTime?.routes ?? [];
+  const rows = found.flatMap(({ latest }) => (latest === null ? [] : [{ what: "in time", cell: latest }]));
+  const missed = found.flatMap(({ route, speed_m_s, latest, earliest }) => {
+    if (latest !== null || inTime === null) return [];
+    const { speed } = units;
+    const at =
+      speed_m_s === null ? "" : ` at ${(speed_m_s / speed.size).toFixed(speed.decimals)} ${speed.symbol}`;
+    const why =
+      earliest.arrival === null || earliest.status === "stop"
+        ? (earliest.worst?.message ?? "")
+        : `it arrives ${instantText(earliest.arrival, "minute")}`;
+    const text = `${plainText(route)}${at}: no departure arrives by ${instantText(inTime.notAfter, "minute")}; the first, ${instantText(earliest.departure, "minute")}: ${plainText(why)}.`;
+    return wrapped(text, TABLE_WIDTH);
+  });
+  return { rows, missed };
+}
+
 /** The bests of all cells, and of each route where there are several, to the minute where that was asked for. */
-export function windowBests({ summary, refined }: WindowReport, units: WindowUnits): string[] {
+export function windowBests(report: WindowReport, units: WindowUnits): string[] {
+  const { summary, refined, inTime } = report;
   const own = refined?.routes ?? summary.routes;
   const several = own.length > 1;
   const overall = rowsOf(refined?.best ?? summary.best);
-  const rows = [...overall, ...(several ? own.flatMap(({ best }) => rowsOf(best)) : [])];
-  if (rows.length === 0) return ["Nothing in the window can be done."];
+  const late = inTimeOf(report, units);
+  const rows = [...overall, ...(several ? own.flatMap(({ best }) => rowsOf(best)) : []), ...late.rows];
+  if (rows.length === 0) return ["Nothing in the window can be done.", ...late.missed];
   const rest = columnsOf(rows, units);
   const whats = rows.map(({ what }, index) => (index < overall.length ? `of all, ${what}` : what));
   const width = [
@@ -78,7 +99,11 @@ export function windowBests({ summary, refined }: WindowReport, units: WindowUni
     ],
     0,
   );
-  return [...head, ...lines, ...closing(refined?.best ?? summary.best)];
+  const kept =
+    inTime === null
+      ? []
+      : [`In time: the latest departure that arrives by ${instantText(inTime.notAfter, "minute")}.`];
+  return [...head, ...lines, ...closing(refined?.best ?? summary.best), ...kept, ...late.missed];
 }
 
 function closing({ latest, closedBy }: WindowBest): string[] {

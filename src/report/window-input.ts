@@ -1,5 +1,6 @@
 import type { ArrivalWindow } from "../choose/arrive.ts";
 import type { DepartureWindow } from "../choose/departure-window.ts";
+import type { InTime } from "../choose/in-time.ts";
 import type { RefinedWindow } from "../choose/refine.ts";
 import type { WindowCell } from "../choose/window-cell.ts";
 import type { WindowSummary } from "../choose/window-summary.ts";
@@ -19,4 +20,6 @@ export interface WindowReport {
   readonly summary: WindowSummary;
   /** The bests to the minute; `null` where they were not asked for. */
   readonly refined: RefinedWindow | null;
+  /** The latest departures that arrive in time; `null` where no arrival is to be kept. */
+  readonly inTime: InTime | null;
 }

@@ -1,3 +1,4 @@
+import type { InTime } from "../choose/in-time.ts";
 import type { RefinedWindow } from "../choose/refine.ts";
 import type { CellFinding, WindowCell } from "../choose/window-cell.ts";
 import type { Refusal, RouteSummary, WindowBest } from "../choose/window-summary.ts";
@@ -71,6 +72,18 @@ function refined(value: RefinedWindow): RefinedWindow {
   };
 }
 
+function inTime({ notAfter, routes }: InTime): InTime {
+  return {
+    notAfter,
+    routes: routes.map(({ route: name, speed_m_s, latest, earliest }) => ({
+      route: name,
+      speed_m_s,
+      latest: latest && cell(latest),
+      earliest: cell(earliest),
+    })),
+  };
+}
+
 const iso = (time: number): string => new Date(time).toISOString();
 
 /**
@@ -102,6 +115,7 @@ export function writeWindowJson({ title, fields, craft, arrive, window, ...rest 
     best: best(rest.summary.best),
     routes: rest.summary.routes.map(route),
     ...(rest.refined === null ? {} : { refined: refined(rest.refined) }),
+    ...(rest.inTime === null ? {} : { inTime: inTime(rest.inTime) }),
     cells: rest.cells.map(cell),
   };
   return `${JSON.stringify(whole, refuseNotFinite, 2)}\n`;

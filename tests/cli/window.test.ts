@@ -92,6 +92,12 @@ describe("legwork window", () => {
     expect(readFileSync(out, "utf8").split("\r\n")).toHaveLength(1 + 39 + 1);
   });
 
+  it("finds the latest departure that arrives in time", () => {
+    const { out } = legwork.run(["window", islands, ...DAY, "--arrive-by", "2027-05-04T18:00Z"]);
+    expect(out).toMatch(/in time +Sound +04 16:03 +04 17:59/);
+    expect(out).toContain("In time: the latest departure that arrives by 2027-05-04 18:00 UTC.");
+  });
+
   it("ends with 1 where no departure can be done", () => {
     const { status, out } = legwork.run(["window", islands, ...DAY, "--route", "East about"]);
     expect(status).toBe(1);

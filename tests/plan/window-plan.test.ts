@@ -211,6 +211,39 @@ describe("a plan's window worked out", () => {
     expect(cells).toHaveLength(8);
   });
 
+  test("finds the latest departure that arrives in time, whatever the end of the window", async () => {
+    const window = {
+      ...WINDOW,
+      to: "2027-05-04T07:00Z",
+      speeds: ["6 kn", "8 kn"],
+      arriveBy: "2027-05-04T18:00Z",
+    };
+    const { inTime, input } = await windowPlan(textOf(["window", window]), request);
+    expect(inTime?.notAfter).toBe("2027-05-04T18:00:00.000Z");
+    expect(inTime?.routes.map(({ speed_m_s }) => speed_m_s)).toEqual([knots(6), knots(8)]);
+    const [prepared] = prepareRoutes(input);
+    for (const { speed_m_s, latest } of inTime?.routes ?? []) {
+      if (prepared === undefined || latest === null) throw new Error("no departure in time");
+      const { craft, pace, reserve, fields } = input;
+      const given = { departure: 0, craft, pace, reserve, fields };
+      const departure = Date.parse(latest.departure);
+      expect(windowCell(prepared, given, departure, speed_m_s)).toEqual(latest);
+      expect(Date.parse(latest.arrival ?? "")).toBeLessThanOrEqual(parseTime("2027-05-04T18:00Z"));
+      const later = windowCell(prepared, given, departure + 60_000, speed_m_s);
+      expect(Date.parse(later.arrival ?? "")).toBeGreaterThan(parseTime("2027-05-04T18:00Z"));
+    }
+    const early = await windowPlan(textOf(["window", WINDOW]), { ...request, arriveBy: "2027-05-04T06:30Z" });
+    expect(early.inTime?.routes[0]?.latest).toBeNull();
+    expect(early.inTime?.routes[0]?.earliest.departure).toBe("2027-05-04T06:00:00.000Z");
+    expect(
+      await faultOf(() => windowPlan(textOf(["window", WINDOW]), { ...request, arriveBy: WINDOW.from })),
+    ).toContain("an arrival is after the earliest departure considered");
+    const asked = textOf(["window", WINDOW], ["pace", { arrive: "2027-05-04T12:00Z" }]);
+    expect(await faultOf(() => windowPlan(asked, { ...request, arriveBy: "2027-05-04T12:00Z" }))).toMatch(
+      /^an arriveBy of a window belongs to a pace that says how fast/,
+    );
+  });
+
   test("asks for what neither names", async () => {
     expect(await faultOf(() => windowPlan(textOf(), { ...request, from: WINDOW.from, every: "1 h" }))).toBe(
       "run.plan.json, window: a window of departures needs from, to and every, in the plan or beside it; found no to in either",

@@ -1,5 +1,6 @@
 import { describe, expect, test } from "vitest";
 import type { DepartureWindow } from "../../src/choose/departure-window.ts";
+import { latestInTime } from "../../src/choose/in-time.ts";
 import { refineWindow } from "../../src/choose/refine.ts";
 import { makeSweep, windowCells } from "../../src/choose/window.ts";
 import { summariseWindow } from "../../src/choose/window-summary.ts";
@@ -57,6 +58,7 @@ function reportOf(
     cells,
     summary: summariseWindow(cells),
     refined,
+    inTime: latestInTime(sweep, window),
   };
 }
 
