@@ -13,6 +13,7 @@ import type {
   Still,
   Totals,
 } from "../estimate/result.ts";
+import { ensembleJson } from "./ensemble-json.ts";
 import { turnBackJson } from "./turn-back-json.ts";
 import { spreadJson, whatIfJson } from "./uncertainty-json.ts";
 
@@ -149,6 +150,7 @@ function route(value: DecidedRoute): DecidedRoute {
     legs: value.legs.map(legJson),
     findings: value.findings.map(findingJson),
     ...(value.spread === undefined ? {} : { spread: value.spread && spreadJson(value.spread) }),
+    ...(value.ensemble === undefined ? {} : { ensemble: ensembleJson(value.ensemble) }),
     ...(value.whatIf === undefined ? {} : { whatIf: value.whatIf.map(whatIfJson) }),
     ...(value.turnBack === undefined ? {} : { turnBack: turnBackJson(value.turnBack) }),
   };

@@ -54,7 +54,7 @@ export function percentText(share: number): string {
   const percent = share * 100;
   if (share > 0 && percent < 0.1) return "less than 0.1 %";
   if (share < 1 && percent > 99.9) return "more than 99.9 %";
-  return `${percent.toFixed(percent > 1 && percent < 99 ? 0 : 1)} %`;
+  return `${percent.toFixed(share === 0 || share === 1 || (percent > 1 && percent < 99) ? 0 : 1)} %`;
 }
 
 function weakText(route: RouteEstimate, { weakest }: ErrorSpread, units: TableUnits): string {

@@ -3,6 +3,7 @@ import type { RouteEstimate, RouteStatus } from "../estimate/result.ts";
 import type { Route } from "../estimate/route.ts";
 import { rule, TABLE_WIDTH } from "./columns.ts";
 import { comparisonTable } from "./comparison.ts";
+import { ensembleTable } from "./ensemble-rows.ts";
 import { findingLines } from "./findings-text.ts";
 import type { ReportInput, Units } from "./input.ts";
 import { ledgerTable } from "./ledger-rows.ts";
@@ -83,6 +84,7 @@ function routeBlock(
     ...withinTable(route, craft.moves, units),
     "",
     ...(route.spread === undefined ? [] : [...spreadTable(route, units), ""]),
+    ...(route.ensemble === undefined ? [] : [...ensembleTable(route, units), ""]),
     ...(route.whatIf === undefined ? [] : [...whatIfTable(route, units), ""]),
     ...(route.turnBack === undefined ? [] : [...turnBackTable(route, units), ""]),
     ...findingLines(route),

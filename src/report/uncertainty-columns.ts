@@ -1,5 +1,7 @@
 import type { DecidedRoute } from "../choose/decided.ts";
+import type { EnsembleLeg } from "../choose/ensemble.ts";
 import type { LegSpread } from "../choose/error-spread.ts";
+import type { Quantiles } from "../choose/quantiles.ts";
 import { plainText } from "./plain-text.ts";
 
 type Column = readonly [header: string, cell: (route: DecidedRoute, leg: number) => number | string | null];
@@ -8,7 +10,8 @@ type Column = readonly [header: string, cell: (route: DecidedRoute, leg: number)
 export function uncertaintyColumns(routes: readonly DecidedRoute[], unit: string): Column[] {
   const spread = routes.some((route) => route.spread !== undefined) ? spreadColumns(unit) : [];
   const names = routes[0]?.whatIf?.map(({ name }) => name) ?? [];
-  return [...spread, ...names.flatMap((name, index) => whatIfColumns(name, index, unit))];
+  const ensemble = routes.some((route) => route.ensemble !== undefined) ? ensembleColumns(unit) : [];
+  return [...spread, ...ensemble, ...names.flatMap((name, index) => whatIfColumns(name, index, unit))];
 }
 
 function spreadColumns(unit: string): Column[] {
@@ -24,6 +27,31 @@ function spreadColumns(unit: string): Column[] {
     [`standard deviation of use [${unit}]`, ofLeg(({ use }) => use)],
     [`standard deviation of left [${unit}]`, ofLeg(({ remaining }) => remaining)],
     ["probability that the reserve holds [1]", ({ spread }) => spread?.reserveHolds ?? null],
+  ];
+}
+
+function ensembleColumns(unit: string): Column[] {
+  const keys = ["min", "p10", "p50", "p90", "max"] as const;
+  const ofLeg = <F extends string | number>(
+    name: string,
+    figure: (leg: EnsembleLeg) => Quantiles<F> | null,
+  ): Column[] =>
+    keys.map((key) => [
+      `ensemble ${key} of ${name}`,
+      ({ ensemble }, leg) => {
+        const found = ensemble?.legs[leg - 1];
+        return found === undefined ? null : (figure(found)?.[key] ?? null);
+      },
+    ]);
+  return [
+    ["ensemble members that end the leg [1]", ({ ensemble }, leg) => ensemble?.legs[leg - 1]?.count ?? null],
+    ...ofLeg("time under way [s]", ({ time_s }) => time_s),
+    ...ofLeg("arrival [UTC]", ({ arrival }) => arrival),
+    ...ofLeg(`use [${unit}]`, ({ use }) => use),
+    ...ofLeg(`left [${unit}]`, ({ remaining }) => remaining),
+    ["ensemble share in which the reserve holds [1]", ({ ensemble }) => ensemble?.reserveHolds ?? null],
+    ["ensemble members that break the reserve", ({ ensemble }) => ensemble?.breaksReserve.join(" ") ?? null],
+    ["ensemble members that do not arrive", ({ ensemble }) => ensemble?.doesNotArrive.join(" ") ?? null],
   ];
 }
 
