@@ -88,8 +88,9 @@ export function makeStep(stations: Stations, motion: Motion): Step {
 }
 
 const MOST_PASSES = 24;
+const MIDDLE = (STATIONS - 1) / 2;
 /** The iteration ends when what it leaves open in the step's time is below this share of it. */
-const SETTLED = 2e-15;
+const SETTLED = 2e-14;
 
 /** Solves the stretch from..to of piece p for the time at every station; `start` is seconds since departure. */
 export function solveStep(
@@ -110,23 +111,52 @@ export function solveStep(
 
 function solveTimes(step: Step, from: number, to: number, start: number): StepStatus {
   const half = (to - from) / 2;
-  const { elapsed, stations } = step;
-  for (let i = 0; i < STATIONS; i += 1)
-    elapsed[i] = ((stations.s[i] as number) - from) / step.lastGroundSpeed;
+  const { elapsed } = step;
+  guessTimes(step, from, to - from, start);
   const implicit = isImplicit(step);
-  let before = elapsed[STATIONS - 1] as number;
+  let before = 0;
   for (let pass = 0; pass < MOST_PASSES; pass += 1) {
     const status = slownesses(step, start);
     if (status !== PACE_OK) return status;
     const moved = integrateTimes(elapsed, step.slowness, half);
-    // The next move is about moved²/before, and the figures at the new times are one more such factor better.
-    const gain = moved / before;
-    if (!implicit || moved * gain * gain <= SETTLED * (elapsed[STATIONS - 1] as number)) {
-      return finish(step, start, half);
-    }
+    // The next move is at most about moved²/before, and the figures at the new times are one more such factor better. (The first
+    // move tells how good the guess was, not how fast the passes converge.)
+    const open = moved * moved * moved;
+    const settled = SETTLED * (elapsed[STATIONS - 1] as number) * before * before;
+    if (!implicit || (pass > 0 && open <= settled)) return finish(step, start, half);
     before = moved;
   }
   return UNSETTLED;
+}
+
+/** First guess: the slowness quadratic through both ends and the middle where the speed through the medium is held, else constant. */
+function guessTimes(step: Step, from: number, length: number, start: number): void {
+  const { elapsed, stations } = step;
+  elapsed[0] = 0;
+  const first = slownessAt(step, 0, start);
+  elapsed[MIDDLE] = (length / 2) * first;
+  const middle = slownessAt(step, MIDDLE, start);
+  elapsed[STATIONS - 1] = length * middle;
+  const last = slownessAt(step, STATIONS - 1, start);
+  const linear = (4 * middle - 3 * first - last) / 2;
+  const square = (2 * (first + last - 2 * middle)) / 3;
+  for (let i = FIRST_NODE; i < STATIONS; i += 1) {
+    const distance = (stations.s[i] as number) - from;
+    const share = distance / length;
+    elapsed[i] = distance * (first + share * (linear + share * square));
+  }
+}
+
+/** Slowness at a station for the first guess: that of the step before where it would have to be asked for. */
+function slownessAt(step: Step, i: number, start: number): number {
+  const { medium, elapsed, alongOnly, lastGroundSpeed } = step;
+  const speed = step.motion.throughSpeed;
+  if (speed === 0 || medium === null) return 1 / lastGroundSpeed;
+  const share = (start - medium.from + (elapsed[i] as number)) * medium.perSecond;
+  const a = (medium.along[i] as number) + share * (medium.alongChange[i] as number);
+  const c = alongOnly ? 0 : (medium.cross[i] as number) + share * (medium.crossChange[i] as number);
+  const g = a + Math.sqrt(Math.max((speed - c) * (speed + c), 0));
+  return 1 / (g > 0 ? g : lastGroundSpeed);
 }
 
 /** Whether the ground speed depends on the time that is being solved for. */
@@ -299,8 +329,8 @@ function addEndErrors(step: Step, half: number): void {
 /** A bound on |∂g/∂t| at a station: |∂a/∂t| + |∂c/∂t| |c| / sqrt(V² - c²). */
 function changePerSecond(step: Step, medium: Flow, i: number): number {
   const cross = Math.abs(step.cross[i] as number);
-  const speed = step.throughSpeed[i] as number;
-  const lever = cross / Math.sqrt(Math.max(speed * speed - cross * cross, 1e-12));
+  // sqrt(V² - c²) = g - a.
+  const lever = cross / Math.max((step.groundSpeed[i] as number) - (step.along[i] as number), 1e-6);
   const alongChange = Math.abs(medium.alongChange[i] as number);
   const crossChange = step.alongOnly ? 0 : Math.abs(medium.crossChange[i] as number);
   return (alongChange + lever * crossChange) * medium.perSecond;
