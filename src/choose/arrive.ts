@@ -30,6 +30,13 @@ const SLACK = 1e-3;
  * spaced in passage time, are scanned with the edges between speeds that complete the route and speeds that do not.
  *
  * @throws InputError where the craft's speeds have no bound, or as `estimateRoute` does
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "100 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const prepared = prepareRoute({ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }, []);
+ * const conditions = { departure: 0, craft, reserve: null, fields: [] };
+ * solveArrival(prepared, conditions, { notBefore: null, notAfter: 36000000 }).solutions[0].speed_m_s.toFixed(6) // → "3.092208"
  */
 export function solveArrival(
   prepared: PreparedRoute,

@@ -14,6 +14,14 @@ import { speedRange } from "./speed-range.ts";
  * @param prepared by `prepareRoutes`, from the same input
  * @param input its pace is not used
  * @throws InputError where the craft's speeds have no bound, the wanted window ends before it begins, or as `estimate` does
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "100 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const routes = [{ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }];
+ * const input = { title: "", departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 5 }, reserve: null, fields: [], routes, land: null };
+ * const wanted = { notBefore: 36000000, notAfter: 36000000 };
+ * estimateArriving(prepareRoutes(input), input, wanted).estimate.routes[0].arrival // → "1970-01-01T10:00:00.000Z"
  */
 export function estimateArriving(
   prepared: readonly PreparedRoute[],

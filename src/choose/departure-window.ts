@@ -22,7 +22,12 @@ function departureCount({ from, to, every_s }: DepartureWindow): number {
   return Math.floor((to - from) / Math.round(1000 * every_s)) + 1;
 }
 
-/** The departures of a window, ms since 1970-01-01T00:00Z, ascending. */
+/**
+ * The departures of a window, ms since 1970-01-01T00:00Z, ascending.
+ *
+ * @example
+ * windowDepartures({ from: 0, to: 4000000, every_s: 1800, speeds_m_s: null }) // → [0, 1800000, 3600000]
+ */
 export function windowDepartures(window: DepartureWindow): number[] {
   const step = Math.round(1000 * window.every_s);
   return Array.from({ length: departureCount(window) }, (_, n) => window.from + n * step);

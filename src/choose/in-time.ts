@@ -33,6 +33,15 @@ export interface RouteInTime {
  *
  * @returns `null` where the window names no `arriveBy`
  * @throws InputError where it is not after the first departure, or the pace itself asks for an arrival
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "200 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const routes = [{ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }];
+ * const input = { title: "", departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 5 }, reserve: null, fields: [], routes, land: null };
+ * const sweep = makeSweep(prepareRoutes(input), input);
+ * const window = { from: 0, to: 3600000, every_s: 1800, speeds_m_s: null, arriveBy: 86400000 };
+ * latestInTime(sweep, window).routes[0].latest.departure // → "1970-01-01T17:48:00.000Z"
  */
 export function latestInTime(
   { prepared, conditions, arrive }: Sweep,

@@ -24,6 +24,14 @@ export interface LatestDeparture {
  * @param earliest first departure considered, ms since 1970-01-01T00:00Z
  * @param notAfter the arrival to keep, ms since 1970-01-01T00:00Z
  * @throws InputError where `notAfter` is not after `earliest`
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "200 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const prepared = prepareRoute({ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }, []);
+ * const pace = { hold: "through-speed", speed_m_s: 5 };
+ * const conditions = { departure: 0, craft, pace, reserve: null, fields: [] };
+ * latestDeparture(prepared, conditions, 0, 86400000).latest.departure // → "1970-01-01T17:48:56.101Z"
  */
 export function latestDeparture(
   prepared: PreparedRoute,

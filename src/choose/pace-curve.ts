@@ -19,6 +19,13 @@ export interface PaceCurve {
  *
  * @param speeds m/s; left out, 33 over the craft's range, evenly spaced
  * @throws InputError where no speeds are given and the craft's have no bound, or as `estimateRoute` does
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "100 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const prepared = prepareRoute({ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }, []);
+ * const conditions = { departure: 0, craft, reserve: null, fields: [] };
+ * paceCurve(prepared, conditions, [4, 8]).points.map(({ use }) => (use / 3.6e6).toFixed(3)) // → ["79.161", "316.642"]
  */
 export function paceCurve(
   prepared: PreparedRoute,
@@ -39,6 +46,13 @@ export function paceCurve(
  * search in every valley.
  *
  * @throws InputError where the craft's speeds have no bound, or as `estimateRoute` does
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "100 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const prepared = prepareRoute({ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }, []);
+ * const conditions = { departure: 0, craft, reserve: null, fields: [] };
+ * leastUseSpeed(prepared, conditions).speed_m_s // → 2
  */
 export function leastUseSpeed(prepared: PreparedRoute, conditions: PacelessConditions): WindowCell | null {
   const trials = new SpeedTrials(prepared, conditions);
@@ -62,6 +76,13 @@ const NUDGE = 1e-13;
  * The fastest constant through-speed that keeps the reserve and is not otherwise a `stop`; `null` where none does.
  *
  * @throws InputError where the craft's speeds have no bound, or as `estimateRoute` does
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "100 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const prepared = prepareRoute({ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }, []);
+ * const conditions = { departure: 0, craft, reserve: { kind: "share", share: 0.2 }, fields: [] };
+ * fastestWithReserve(prepared, conditions).speed_m_s.toFixed(6) // → "4.021153"
  */
 export function fastestWithReserve(
   prepared: PreparedRoute,

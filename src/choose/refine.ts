@@ -22,6 +22,15 @@ export interface RefinedWindow {
  * shows is not seen: the step of the window is the resolution.
  *
  * @param cells all of the window
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "100 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const routes = [{ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }];
+ * const input = { title: "", departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 5 }, reserve: null, fields: [], routes, land: null };
+ * const sweep = makeSweep(prepareRoutes(input), input);
+ * const window = { from: 0, to: 3600000, every_s: 1800, speeds_m_s: [4, 5] };
+ * refineWindow(sweep, window, [...windowCells(sweep, window)]).best.use.speed_m_s // → 4
  */
 export function refineWindow(
   sweep: Sweep,

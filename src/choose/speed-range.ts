@@ -16,6 +16,10 @@ const LEAST_SHARE = 0.02;
  * The through-speeds that a choice is made among: the craft's `speeds`, else the domain of its power model.
  *
  * @throws InputError where neither is bounded above
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "100 kWh" } }', "boat.craft.json");
+ * speedRange(craft) // → { min: 2, max: 8 }
  */
 export function speedRange({ name, speeds, power }: Craft): SpeedRange {
   const low = Math.max(speeds?.min ?? power.min, power.min);

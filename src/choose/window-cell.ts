@@ -65,6 +65,13 @@ export function worstFinding(findings: readonly Finding[]): CellFinding | null {
  * @param speed m/s, through the medium or over the ground as the pace holds it; `null` for the pace as it is. A leg that
  *   names its own speed keeps it.
  * @throws InputError where a speed is given and the pace holds none, or as `estimateRoute` does
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "100 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const prepared = prepareRoute({ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }, []);
+ * const pace = { hold: "through-speed", speed_m_s: 5 };
+ * windowCell(prepared, { departure: 0, craft, pace, reserve: null, fields: [] }, 3600000, 4).arrival // → "1970-01-01T08:43:49.873Z"
  */
 export function windowCell(
   prepared: PreparedRoute,

@@ -17,7 +17,16 @@ export interface Sweep {
   readonly arrive: ArrivalWindow | null;
 }
 
-/** @param prepared by `prepareRoutes`, from the same input */
+/**
+ * @param prepared by `prepareRoutes`, from the same input
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "100 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const routes = [{ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }];
+ * const input = { title: "", departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 5 }, reserve: null, fields: [], routes, land: null };
+ * makeSweep(prepareRoutes(input), input).prepared.length // → 1
+ */
 export function makeSweep(
   prepared: readonly PreparedRoute[],
   { craft, departure, pace, reserve, fields }: EstimateInput,
@@ -39,6 +48,15 @@ export function makeSweep(
  *
  * @throws InputError for a window that {@link checkWindow} refuses, speeds beside a pace that holds none, or a speed
  *   outside the craft's power model
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "100 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const routes = [{ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }];
+ * const input = { title: "", departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 5 }, reserve: null, fields: [], routes, land: null };
+ * const sweep = makeSweep(prepareRoutes(input), input);
+ * const window = { from: 0, to: 3600000, every_s: 1800, speeds_m_s: [4, 5] };
+ * [...windowCells(sweep, window)].length // → 6
  */
 export function windowCells(sweep: Sweep, window: DepartureWindow): Generator<WindowCell, void, undefined> {
   checkWindow(window, sweep.prepared.length);
@@ -55,7 +73,17 @@ function* cells(sweep: Sweep, window: DepartureWindow): Generator<WindowCell, vo
   }
 }
 
-/** One cell of a sweep; `speed` in m/s, `null` for the plan's own pace. */
+/**
+ * One cell of a sweep; `speed` in m/s, `null` for the plan's own pace.
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "100 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const routes = [{ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }];
+ * const input = { title: "", departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 5 }, reserve: null, fields: [], routes, land: null };
+ * const sweep = makeSweep(prepareRoutes(input), input);
+ * sweepCell(sweep, sweep.prepared[0], 0, null).passage_s.toFixed(3) // → "22263.898"
+ */
 export function sweepCell(
   { conditions, arrive }: Sweep,
   prepared: PreparedRoute,

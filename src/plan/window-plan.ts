@@ -42,6 +42,20 @@ export interface WindowAnswer {
  * Compares departures: reads a plan with its craft and fields and estimates every route × departure × speed of its window.
  *
  * Errors: an InputError in one sentence for whatever is wrong in what the user gave.
+ *
+ * @example
+ * const plan = JSON.stringify({
+ *   format: "legwork-plan/1", departure: "2027-05-04T06:00:00Z",
+ *   craft: {
+ *     name: "Boat", moves: "water", speed: "5 m/s",
+ *     power: { model: "constant", rate: "1 kW" }, store: { capacity: "10 kWh" },
+ *   },
+ *   window: { from: "2027-05-04T06:00Z", to: "2027-05-04T12:00Z", every: "2 h" },
+ *   routes: [{ name: "East", waypoints: [{ name: "A", lat: 0, lon: 0 }, { name: "B", lat: 0, lon: 1 }] }],
+ * });
+ * async function* open() {}
+ * const answer = await windowPlan(plan, { file: "east.plan.json", open });
+ * answer.cells.map(({ departure }) => departure.slice(11, 16)) // → ["06:00", "08:00", "10:00", "12:00"]
  */
 export async function windowPlan(text: string, request: WindowRequest): Promise<WindowAnswer> {
   const { plan, input } = await checkPlan(text, request);

@@ -45,6 +45,10 @@ function isSameCell(a: WindowCell, b: WindowCell): boolean {
 /**
  * A window of departures as CSV (RFC 4180, CRLF, UTF-8 without BOM): one row a cell, SI units in the headers, full precision, an
  * empty cell where there is no figure; the bests to the minute, where they were asked for, follow as rows of their own.
+ *
+ * @example
+ * const report = { title: "Two marks", fields: [], craft: { name: "Tender", moves: "water", store: { unit: "J", usable: 36000000 } }, pace: { hold: "least-energy" }, arrive: null, window: { from: 0, to: 0, every_s: 60, speeds_m_s: null }, cells: [], summary: summariseWindow([]), refined: null, inTime: null };
+ * writeWindowCsv(report).split(",")[1] // → "departure [UTC]"
  */
 export function writeWindowCsv({ craft, cells, summary, refined }: WindowReport): string {
   const best = refined?.best ?? summary.best;

@@ -89,6 +89,10 @@ const iso = (time: number): string => new Date(time).toISOString();
 /**
  * A window of departures as `legwork-window/1`: SI units with the unit in the key, one cell a route × departure × speed in the
  * order departure, route, speed; keys in a fixed order, two spaces of indent, a final line end.
+ *
+ * @example
+ * const report = { title: "Two marks", fields: [], craft: { name: "Tender", moves: "water", store: { unit: "J", usable: 36000000 } }, pace: { hold: "least-energy" }, arrive: null, window: { from: 0, to: 0, every_s: 60, speeds_m_s: null }, cells: [], summary: summariseWindow([]), refined: null, inTime: null };
+ * JSON.parse(writeWindowJson(report)).format // → "legwork-window/1"
  */
 export function writeWindowJson({ title, fields, craft, arrive, window, ...rest }: WindowReport): string {
   const whole = {
