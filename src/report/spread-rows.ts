@@ -4,11 +4,13 @@ import type { WeakPlace } from "../choose/sensitivity-profile.ts";
 import type { RouteEstimate } from "../estimate/result.ts";
 import { laidOut, TABLE_WIDTH } from "./columns.ts";
 import { placedText } from "./number-text.ts";
-import { isolated, plainText, wrapped } from "./plain-text.ts";
+import { clipped, isolated, plainText, wrapped } from "./plain-text.ts";
 import { inLastPlace } from "./rounding.ts";
 import { amountText } from "./table-head.ts";
 import { STORE_WIDTH, type TableUnits } from "./table-units.ts";
 import { durationText } from "./time-text.ts";
+
+const NAME_WIDTH = 24;
 
 /** The spread of a route under the stated forecast error; nothing where the plan states none. */
 export function spreadTable(route: DecidedRoute, units: TableUnits): string[] {
@@ -29,11 +31,11 @@ function legRows(route: RouteEstimate, spread: ErrorSpread, units: TableUnits): 
   const amount = (value: number) =>
     placedText(inLastPlace(value / store.size, store.decimals), store.decimals, STORE_WIDTH);
   const legs = [...spread.legs, { ...spread, leg: "All" }];
-  const names = [...route.legs.map(({ to }) => isolated(plainText(to))), ""];
+  const names = [...route.legs.map(({ to }) => isolated(clipped(plainText(to), NAME_WIDTH))), ""];
   const { head, rows } = laidOut(
     [
       { head: ["", "Leg"], cells: legs.map(({ leg }) => String(leg)) },
-      { head: ["", "to"], cells: names.map((name) => name.slice(0, 24)), align: "left" },
+      { head: ["", "to"], cells: names, align: "left" },
       { head: ["Time ±", "h:mm:ss"], cells: legs.map(({ time_s }) => time(time_s)) },
       { head: ["ETA ±", "h:mm:ss"], cells: legs.map(({ arrival_s }) => time(arrival_s)) },
       { head: ["Use ±", store.symbol], cells: legs.map(({ use }) => amount(use)) },
