@@ -24,7 +24,7 @@ const WAVES = [
 ] as const;
 
 /** The wind, made in place: u = Σ A sin(p i + w t) cos(q j), v = Σ A cos(p i - w t) sin(q j). */
-export function oceanWind(): Field {
+function oceanWind(): Field {
   const slices = Array.from({ length: TIMES }, (_, t) => slice(t));
   return {
     role: "wind",
@@ -65,7 +65,7 @@ function slice(t: number): Float64Array {
 }
 
 /** Five zigzag routes that bend to either side, each 3,000 NM long. */
-export function oceanRoutes(): Route[] {
+function oceanRoutes(): Route[] {
   return [-2, -1, 0, 1, 2].map((bend) => {
     let scale = 1;
     for (let pass = 0; pass < 30; pass += 1) scale *= ROUTE_M / lengthOf(routeOf(bend, scale));
