@@ -26,16 +26,20 @@ function rounded<T extends { readonly raw: readonly number[] }>(timing: T): T {
   return { ...timing, raw: timing.raw.map((seconds) => Number(seconds.toPrecision(4))) };
 }
 
+/** A table as the formatter lays it out: every column as wide as its widest cell. */
 function markdown(comparisons: readonly Comparison[]): string {
-  const row = ({ what, peer, ratio, goal, met }: Comparison): string => {
-    const against = peer.split(":")[0] ?? "";
-    return `| ${what} | ${against} | ${ratio} | ${goal} | ${verdict(met)} |`;
-  };
-  return [
-    "| what | peer | ratio | goal | met |",
-    "| --- | --- | --- | --- | --- |",
-    ...comparisons.map(row),
-  ].join("\n");
+  const rows = comparisons.map(({ what, peer, ratio, goal, met }) => [
+    what,
+    peer.split(":")[0] ?? "",
+    ratio,
+    goal,
+    verdict(met),
+  ]);
+  const head = ["what", "peer", "ratio", "goal", "met"];
+  const widths = head.map((_, column) => Math.max(...[head, ...rows].map((row) => row[column]?.length ?? 0)));
+  const line = (cells: readonly string[]) =>
+    `| ${cells.map((cell, column) => cell.padEnd(widths[column] ?? 0)).join(" | ")} |`;
+  return [line(head), line(widths.map((width) => "-".repeat(width))), ...rows.map(line)].join("\n");
 }
 
 /** Whether a goal is met, in a word. */

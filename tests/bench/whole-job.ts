@@ -74,7 +74,14 @@ function accuracy(route: PreparedRoute, wind: Field, scipy: number | undefined):
   const bound = (totals.error?.time_s ?? Number.NaN) / exact;
   const peer = scipy === undefined ? "" : `SciPy RK45, rtol 1e-8: ${figure(error(scipy))}`;
   const ours = error(totals.time_s ?? Number.NaN);
-  return atMost("relative error of time", ours, 1e-10, "", peer, `bound reported: ${figure(bound)}`);
+  return atMost(
+    "relative error of time",
+    ours,
+    1e-10,
+    "",
+    peer,
+    `${figure(ours)} (bound reported: ${figure(bound)})`,
+  );
 }
 
 async function departureSweep({ wind, prepared }: Ocean, peer: PythonPeer | null): Promise<Part> {
