@@ -1,4 +1,5 @@
-import geomagnetism from "geomagnetism";
+import wmm2025 from "geomagnetism/data/wmm-2025.json" with { type: "json" };
+import Model from "geomagnetism/lib/model.js";
 import { normaliseCourse } from "../geodesy/angle.ts";
 import type { Position } from "../geodesy/track.ts";
 
@@ -18,7 +19,7 @@ const TO = Date.UTC(2029, 10, 13, 3);
 export function magneticVariation(position: Position, height_m: number, time: number): number | null {
   if (!(time >= FROM && time <= TO)) return null;
   const lon = position.lon > 180 ? position.lon - 360 : position.lon;
-  return geomagnetism.model(new Date(time)).point([position.lat, lon, height_m / 1000]).decl;
+  return new Model(wmm2025).getTimedModel(new Date(time)).point([position.lat, lon, height_m / 1000]).decl;
 }
 
 /**

@@ -1,4 +1,4 @@
-import type * as z from "zod";
+import type * as z from "zod/mini";
 import { airDensity, efficiency, powerSchema, RATE } from "./power-schema.ts";
 import {
   bareNumber,
@@ -6,6 +6,7 @@ import {
   NOT_NEGATIVE,
   objectOf,
   oneOf,
+  optional,
   POSITIVE,
   POSITIVE_SHARE,
   quantity,
@@ -17,7 +18,7 @@ const windage = objectOf(
     frontalArea: quantity(["area"], "frontal area", POSITIVE, "Frontal area above the water."),
     dragCoefficient: bareNumber("drag coefficient", POSITIVE, "Drag coefficient of that area."),
     efficiency: efficiency("propulsive"),
-    airDensity: airDensity.optional(),
+    airDensity: optional(airDensity),
   },
   "Added resistance of the wind, for a craft in water.",
 );
@@ -31,19 +32,18 @@ const store = objectOf(
       POSITIVE,
       "Energy, or mass or volume of fuel.",
     ),
-    usable: quantity(
-      ["share"],
-      "usable share",
-      POSITIVE_SHARE,
-      "Share of the capacity; 100 % unless given.",
-    ).optional(),
-    specificConsumption: quantity(
-      ["specific consumption"],
-      "specific consumption",
-      POSITIVE,
-      "Fuel for the energy at the shaft.",
-    ).optional(),
-    density: quantity(["density"], "density", POSITIVE, "Density of the fuel.").optional(),
+    usable: optional(
+      quantity(["share"], "usable share", POSITIVE_SHARE, "Share of the capacity; 100 % unless given."),
+    ),
+    specificConsumption: optional(
+      quantity(
+        ["specific consumption"],
+        "specific consumption",
+        POSITIVE,
+        "Fuel for the energy at the shaft.",
+      ),
+    ),
+    density: optional(quantity(["density"], "density", POSITIVE, "Density of the fuel.")),
   },
   "Fuel or battery aboard.",
 );
@@ -51,26 +51,27 @@ const store = objectOf(
 const limits = objectOf(
   "limits",
   {
-    wind: quantity(["speed"], "wind limit", POSITIVE, "Greatest wind.").optional(),
-    gust: quantity(["speed"], "gust limit", POSITIVE, "Greatest gust.").optional(),
-    groundSpeed: quantity(
-      ["speed"],
-      "ground speed limit",
-      POSITIVE,
-      "Least speed over the ground.",
-    ).optional(),
-    opposedWind: quantity(
-      ["speed"],
-      "opposed wind",
-      NOT_NEGATIVE,
-      "Wind from which on wind against current is told; 8 m/s unless given.",
-    ).optional(),
-    opposedCurrent: quantity(
-      ["speed"],
-      "opposed current",
-      NOT_NEGATIVE,
-      "Current from which on wind against current is told; 0.5 m/s unless given.",
-    ).optional(),
+    wind: optional(quantity(["speed"], "wind limit", POSITIVE, "Greatest wind.")),
+    gust: optional(quantity(["speed"], "gust limit", POSITIVE, "Greatest gust.")),
+    groundSpeed: optional(
+      quantity(["speed"], "ground speed limit", POSITIVE, "Least speed over the ground."),
+    ),
+    opposedWind: optional(
+      quantity(
+        ["speed"],
+        "opposed wind",
+        NOT_NEGATIVE,
+        "Wind from which on wind against current is told; 8 m/s unless given.",
+      ),
+    ),
+    opposedCurrent: optional(
+      quantity(
+        ["speed"],
+        "opposed current",
+        NOT_NEGATIVE,
+        "Current from which on wind against current is told; 0.5 m/s unless given.",
+      ),
+    ),
   },
   "Limits of the craft and of its crew.",
 );
@@ -79,33 +80,29 @@ const limits = objectOf(
 export const craftSchema = objectOf(
   "a craft",
   {
-    $schema: lineOfText("$schema", "Address of this schema, for editors.").optional(),
+    $schema: optional(lineOfText("$schema", "Address of this schema, for editors.")),
     name: lineOfText("name", "Name of the craft."),
     moves: oneOf("moves", ["water", "air"], "The medium that the craft moves through."),
-    speed: quantity(
-      ["speed"],
-      "speed",
-      POSITIVE,
-      "Speed through the medium where the pace names none.",
-    ).optional(),
+    speed: optional(
+      quantity(["speed"], "speed", POSITIVE, "Speed through the medium where the pace names none."),
+    ),
     power: powerSchema,
-    windage: windage.optional(),
-    speeds: objectOf(
-      "speeds",
-      {
-        min: quantity(["speed"], "least speed", NOT_NEGATIVE, "Least speed through the medium."),
-        max: quantity(["speed"], "greatest speed", POSITIVE, "Greatest speed through the medium."),
-      },
-      "Range of speeds for the paces power and least-energy.",
-    ).optional(),
-    hotel: quantity(
-      RATE,
-      "hotel load",
-      NOT_NEGATIVE,
-      "What is spent all the time, under way and staying.",
-    ).optional(),
+    windage: optional(windage),
+    speeds: optional(
+      objectOf(
+        "speeds",
+        {
+          min: quantity(["speed"], "least speed", NOT_NEGATIVE, "Least speed through the medium."),
+          max: quantity(["speed"], "greatest speed", POSITIVE, "Greatest speed through the medium."),
+        },
+        "Range of speeds for the paces power and least-energy.",
+      ),
+    ),
+    hotel: optional(
+      quantity(RATE, "hotel load", NOT_NEGATIVE, "What is spent all the time, under way and staying."),
+    ),
     store,
-    limits: limits.optional(),
+    limits: optional(limits),
   },
   "A craft: how it moves, what it spends, what it carries.",
 );

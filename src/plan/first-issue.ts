@@ -1,4 +1,4 @@
-import type * as z from "zod";
+import type * as z from "zod/mini";
 import { InputError, type Place } from "../errors.ts";
 import { quoted } from "../found.ts";
 

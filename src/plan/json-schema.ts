@@ -1,4 +1,4 @@
-import * as z from "zod";
+import * as z from "zod/mini";
 import { craftSchema } from "./craft-schema.ts";
 import { planSchema } from "./plan-schema.ts";
 

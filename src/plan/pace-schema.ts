@@ -1,5 +1,5 @@
-import * as z from "zod";
-import { objectOf, oneOf, POSITIVE, quantity, sentence } from "./schema-parts.ts";
+import * as z from "zod/mini";
+import { objectOf, oneOf, optional, POSITIVE, quantity, sentence } from "./schema-parts.ts";
 import { time } from "./time-schema.ts";
 
 const speed = (description: string) => quantity(["speed"], "speed", POSITIVE, description);
@@ -11,7 +11,7 @@ const holding = z.discriminatedUnion(
       "a pace that holds the through-speed",
       {
         hold: oneOf("hold", ["through-speed"], "Hold the speed through the medium."),
-        speed: speed("Speed through the medium; the craft's own unless given.").optional(),
+        speed: optional(speed("Speed through the medium; the craft's own unless given.")),
       },
       "Hold the speed through the medium.",
     ),
@@ -19,7 +19,7 @@ const holding = z.discriminatedUnion(
       "a pace that holds the ground-speed",
       {
         hold: oneOf("hold", ["ground-speed"], "Hold the speed over the ground."),
-        speed: speed("Speed over the ground; the craft's own speed unless given.").optional(),
+        speed: optional(speed("Speed over the ground; the craft's own speed unless given.")),
       },
       "Hold the speed over the ground.",
     ),
@@ -58,7 +58,7 @@ const holding = z.discriminatedUnion(
 const arrivalWindow = objectOf(
   "an arrival",
   {
-    notBefore: time("notBefore", "Earliest arrival wanted.").optional(),
+    notBefore: optional(time("notBefore", "Earliest arrival wanted.")),
     notAfter: time("notAfter", "Latest arrival wanted."),
   },
   "An arrival between two times.",
@@ -76,7 +76,7 @@ const arriving = objectOf(
             issue.input,
           ),
       })
-      .meta({ description: "When to arrive." }),
+      .check(z.meta({ description: "When to arrive." })),
   },
   "The constant through-speed that arrives when it should, within the craft's speeds.",
 );
@@ -86,4 +86,4 @@ export const paceSchema = z
   .union([holding, arriving], {
     error: (issue) => sentence("pace", "is an object with the key hold", issue.input),
   })
-  .meta({ description: "The rule by which the craft chooses its speed." });
+  .check(z.meta({ description: "The rule by which the craft chooses its speed." }));

@@ -1,4 +1,4 @@
-import * as z from "zod";
+import * as z from "zod/mini";
 import { columnNames } from "../field/column-names.ts";
 import { craftSchema } from "./craft-schema.ts";
 import { errorSchema } from "./error-schema.ts";
@@ -11,6 +11,7 @@ import {
   NOT_NEGATIVE,
   objectOf,
   oneOf,
+  optional,
   POSITIVE,
   quantity,
   readBy,
@@ -29,7 +30,7 @@ const coordinate = (axis: "lat" | "lon", description: string) => {
       .union([z.number(), z.string()], {
         error: (issue) => sentence(axis === "lat" ? "latitude" : "longitude", rule, issue.input),
       })
-      .meta({ description }),
+      .check(z.meta({ description })),
     (value) => parseCoordinate(value, axis),
   );
 };
@@ -43,18 +44,15 @@ const path = oneOf(
 const waypoint = objectOf(
   "a waypoint",
   {
-    name: lineOfText("name", "Name of the waypoint.").optional(),
+    name: optional(lineOfText("name", "Name of the waypoint.")),
     lat: coordinate("lat", "Latitude: degrees, north positive, or a text as 50°21.5'N."),
     lon: coordinate("lon", "Longitude: degrees, east positive, or a text as 4°09'03\"W."),
-    path: path.optional(),
-    speed: quantity(["speed"], "speed", POSITIVE, "Speed of the leg that arrives here.").optional(),
-    height: quantity(["length"], "height", NOT_NEGATIVE, "Height above the surface here.").optional(),
-    stay: quantity(
-      ["time"],
-      "stay",
-      { above: 0, atMost: 1e9 },
-      "Time spent here before the next leg.",
-    ).optional(),
+    path: optional(path),
+    speed: optional(quantity(["speed"], "speed", POSITIVE, "Speed of the leg that arrives here.")),
+    height: optional(quantity(["length"], "height", NOT_NEGATIVE, "Height above the surface here.")),
+    stay: optional(
+      quantity(["time"], "stay", { above: 0, atMost: 1e9 }, "Time spent here before the next leg."),
+    ),
   },
   "A waypoint; path, speed and height belong to the leg that arrives at it.",
 );
@@ -62,8 +60,8 @@ const waypoint = objectOf(
 const route = objectOf(
   "a route",
   {
-    name: lineOfText("name", "Name of the route.").optional(),
-    path: path.optional(),
+    name: optional(lineOfText("name", "Name of the route.")),
+    path: optional(path),
     waypoints: listOf(
       "waypoints",
       waypoint,
@@ -78,15 +76,17 @@ const route = objectOf(
 const alternate = objectOf(
   "an alternate",
   {
-    name: lineOfText("name", "Name of the alternate.").optional(),
+    name: optional(lineOfText("name", "Name of the alternate.")),
     lat: coordinate("lat", "Latitude: degrees, north positive, or a text as 50°21.5'N."),
     lon: coordinate("lon", "Longitude: degrees, east positive, or a text as 4°09'03\"W."),
-    height: quantity(
-      ["length"],
-      "height",
-      NOT_NEGATIVE,
-      "Height above the surface there; that of the place of turning off unless given.",
-    ).optional(),
+    height: optional(
+      quantity(
+        ["length"],
+        "height",
+        NOT_NEGATIVE,
+        "Height above the surface there; that of the place of turning off unless given.",
+      ),
+    ),
   },
   "A place to go to in place of the destination.",
 );
@@ -100,7 +100,7 @@ const columns = objectOf(
   Object.fromEntries(
     COLUMN_NAMES.map((name) => [
       name,
-      lineOfText("a header", `Header of the column that holds ${name}.`).optional(),
+      optional(lineOfText("a header", `Header of the column that holds ${name}.`)),
     ]),
   ),
   "Name of an axis or quantity, and the header that it has in the file.",
@@ -111,16 +111,14 @@ const field = objectOf(
   {
     role: oneOf("role", ["wind", "current"], "What the field is."),
     file: fileName("Name of a CSV file, relative to the plan."),
-    columns: columns.optional(),
-    gaps: oneOf(
-      "gaps",
-      ["nearest", "zero", "stop"],
-      "What a missing value does; nearest unless given.",
-    ).optional(),
-    beyond: oneOf("beyond", ["stop", "hold"], "After the last valid time; stop unless given.").optional(),
-    outside: oneOf("outside", ["stop", "zero"], "Outside the grid's area; stop unless given.").optional(),
-    error: errorSchema.optional(),
-    member: wholeNumber("member", "Number of the ensemble's member that the file is.").optional(),
+    columns: optional(columns),
+    gaps: optional(
+      oneOf("gaps", ["nearest", "zero", "stop"], "What a missing value does; nearest unless given."),
+    ),
+    beyond: optional(oneOf("beyond", ["stop", "hold"], "After the last valid time; stop unless given.")),
+    outside: optional(oneOf("outside", ["stop", "zero"], "Outside the grid's area; stop unless given.")),
+    error: optional(errorSchema),
+    member: optional(wholeNumber("member", "Number of the ensemble's member that the file is.")),
   },
   "A file of gridded wind or current.",
 );
@@ -135,45 +133,47 @@ const craftReference = objectOf(
 export const planSchema = objectOf(
   "a plan",
   {
-    $schema: lineOfText("$schema", "Address of this schema, for editors.").optional(),
+    $schema: optional(lineOfText("$schema", "Address of this schema, for editors.")),
     format: oneOf("format", ["legwork-plan/1"], "Format and version of the file."),
-    title: lineOfText("title", "Title of the plan.", true).optional(),
+    title: optional(lineOfText("title", "Title of the plan.", true)),
     departure: time("departure", "Date and time of departure, ISO 8601 with its zone."),
     craft: z
       .union([craftReference, craftSchema], {
         error: (issue) => sentence("craft", "is an object: { file } or the craft itself", issue.input),
       })
-      .meta({ description: "The craft: its file, or the craft itself." }),
-    pace: paceSchema.optional(),
-    window: windowSchema.optional(),
-    reserve: quantity(
-      ["share", "energy", "mass", "volume", "time"],
-      "reserve",
-      NOT_NEGATIVE,
-      "A share of the usable store, an amount in its kind, or a time at the final leg's rate under way.",
-    ).optional(),
-    fields: listOf(
-      "fields",
-      field,
-      0,
-      "fields",
-      "Files of wind and current; the earlier wins where two overlap.",
-    ).optional(),
+      .check(z.meta({ description: "The craft: its file, or the craft itself." })),
+    pace: optional(paceSchema),
+    window: optional(windowSchema),
+    reserve: optional(
+      quantity(
+        ["share", "energy", "mass", "volume", "time"],
+        "reserve",
+        NOT_NEGATIVE,
+        "A share of the usable store, an amount in its kind, or a time at the final leg's rate under way.",
+      ),
+    ),
+    fields: optional(
+      listOf("fields", field, 0, "fields", "Files of wind and current; the earlier wins where two overlap."),
+    ),
     routes: listOf("routes", route, 1, "route", "The candidate routes."),
-    whatIf: listOf(
-      "whatIf",
-      whatIfSchema,
-      0,
-      "what-ifs",
-      "Changes whose consequences are estimated beside each route.",
-    ).optional(),
-    alternates: listOf(
-      "alternates",
-      alternate,
-      0,
-      "alternates",
-      "Places to turn off to; with any, the estimate says how far each route can still turn back.",
-    ).optional(),
+    whatIf: optional(
+      listOf(
+        "whatIf",
+        whatIfSchema,
+        0,
+        "what-ifs",
+        "Changes whose consequences are estimated beside each route.",
+      ),
+    ),
+    alternates: optional(
+      listOf(
+        "alternates",
+        alternate,
+        0,
+        "alternates",
+        "Places to turn off to; with any, the estimate says how far each route can still turn back.",
+      ),
+    ),
   },
   "A plan: departure, craft, pace, fields and candidate routes.",
 );

@@ -1,10 +1,11 @@
-import * as z from "zod";
+import * as z from "zod/mini";
 import {
   bareNumber,
   listOf,
   NOT_NEGATIVE,
   objectOf,
   oneOf,
+  optional,
   POSITIVE,
   POSITIVE_SHARE,
   quantity,
@@ -70,11 +71,9 @@ const cubeModel = objectOf(
       },
       "The known point of the curve.",
     ),
-    exponent: bareNumber(
-      "exponent",
-      { above: 0, atMost: 10 },
-      "Power of the speed; 3 unless given.",
-    ).optional(),
+    exponent: optional(
+      bareNumber("exponent", { above: 0, atMost: 10 }, "Power of the speed; 3 unless given."),
+    ),
   },
   "Power as a power of the speed.",
 );
@@ -95,9 +94,9 @@ const rotorModel = objectOf(
     fuselageDragRatio: bareNumber("fuselage drag ratio", NOT_NEGATIVE, "Fuselage drag ratio."),
     solidity: bareNumber("solidity", POSITIVE, "Rotor solidity."),
     discArea: quantity(["area"], "disc area", POSITIVE, "Rotor disc area."),
-    airDensity: airDensity.optional(),
-    efficiency: efficiency("from store to rotor; 100 % unless given").optional(),
-    mass: quantity(["mass"], "mass", POSITIVE, "Mass, needed where a route climbs.").optional(),
+    airDensity: optional(airDensity),
+    efficiency: optional(efficiency("from store to rotor; 100 % unless given")),
+    mass: optional(quantity(["mass"], "mass", POSITIVE, "Mass, needed where a route climbs.")),
   },
   "Rotary-wing power in forward flight.",
 );
@@ -111,7 +110,7 @@ const wingModel = objectOf(
     zeroLiftDrag: bareNumber("zero-lift drag", POSITIVE, "Zero-lift drag coefficient."),
     inducedFactor: bareNumber("induced factor", POSITIVE, "Factor k of the drag polar."),
     efficiency: efficiency("from store to air"),
-    airDensity: airDensity.optional(),
+    airDensity: optional(airDensity),
   },
   "Fixed-wing power from a parabolic drag polar.",
 );
@@ -132,4 +131,4 @@ export const powerSchema = z
         ? sentence("model", `takes one of ${MODELS}`, (issue.input as { model?: unknown } | undefined)?.model)
         : sentence("power", "is an object with a model", issue.input),
   })
-  .meta({ description: "What the craft spends as a function of its speed through the medium." });
+  .check(z.meta({ description: "What the craft spends as a function of its speed through the medium." }));

@@ -1,4 +1,4 @@
-import * as z from "zod";
+import * as z from "zod/mini";
 import { InputError } from "../errors.ts";
 import { foundText, quoted } from "../found.ts";
 import { nearest } from "../nearest.ts";
@@ -44,21 +44,15 @@ export function quantity(
   description: string,
 ) {
   const asText = (value: number) => boundText(value, dimensions);
-  return z
+  const text = z
     .string({ error: (issue) => sentence(name, `takes ${acceptedText(dimensions)}`, issue.input) })
-    .meta({ pattern: quantityPattern(dimensions), description })
-    .transform((text, context): Quantity => {
-      const read = caught(() => readQuantity(text, dimensions, name));
-      const broken =
-        read instanceof InputError
-          ? read.message
-          : (brokenBound(read.value, bounds, asText) ?? brokenSize(read.value, read.dimension));
-      if (read instanceof InputError || broken !== null) {
-        context.addIssue(read instanceof InputError ? read.message : sentence(name, broken ?? "", text));
-        return z.NEVER;
-      }
-      return read;
-    });
+    .check(z.meta({ pattern: quantityPattern(dimensions), description }));
+  return readBy(text, (written): Quantity => {
+    const read = readQuantity(written, dimensions, name);
+    const broken = brokenBound(read.value, bounds, asText) ?? brokenSize(read.value, read.dimension);
+    if (broken !== null) throw new InputError(sentence(name, broken, written));
+    return read;
+  });
 }
 
 /** A number without a unit. */
@@ -69,11 +63,13 @@ export function bareNumber(name: string, bounds: Bounds, description: string) {
   };
   return z
     .number({ error: (issue) => sentence(name, "takes a number without a unit", issue.input) })
-    .meta({ ...limits, description })
-    .superRefine((value, context) => {
-      const broken = brokenBound(value, bounds, String) ?? brokenSize(value);
-      if (broken !== null) context.addIssue(sentence(name, broken, value));
-    });
+    .check(z.meta({ ...limits, description }))
+    .check(
+      unbroken((value) => {
+        const broken = brokenBound(value, bounds, String) ?? brokenSize(value);
+        return broken === null ? null : sentence(name, broken, value);
+      }),
+    );
 }
 
 /** A number without a fraction, not below 0. */
@@ -81,10 +77,10 @@ export function wholeNumber(name: string, description: string) {
   const rule = "takes a whole number, not below 0";
   return z
     .number({ error: (issue) => sentence(name, rule, issue.input) })
-    .meta({ minimum: 0, multipleOf: 1, description })
-    .superRefine((value, context) => {
-      if (!Number.isSafeInteger(value) || value < 0) context.addIssue(sentence(name, rule, value));
-    });
+    .check(z.meta({ minimum: 0, multipleOf: 1, description }))
+    .check(
+      unbroken((value) => (Number.isSafeInteger(value) && value >= 0 ? null : sentence(name, rule, value))),
+    );
 }
 
 /** A text that a sentence or a table can show: one line, without control characters. */
@@ -92,19 +88,23 @@ export function lineOfText(name: string, description: string, mayBeEmpty = false
   const rule = `takes a text of one line${mayBeEmpty ? "" : ", not empty"}`;
   return z
     .string({ error: (issue) => sentence(name, rule, issue.input) })
-    .meta({ description, ...(mayBeEmpty ? {} : { minLength: 1 }) })
-    .superRefine((text, context) => {
-      if (/[\p{Cc}\u2028\u2029]/u.test(text) || (!mayBeEmpty && text.trim() === ""))
-        context.addIssue(sentence(name, rule, text));
-    });
+    .check(z.meta({ description, ...(mayBeEmpty ? {} : { minLength: 1 }) }))
+    .check(
+      unbroken((text) => {
+        const isLine = !/[\p{Cc}\u2028\u2029]/u.test(text) && (mayBeEmpty || text.trim() !== "");
+        return isLine ? null : sentence(name, rule, text);
+      }),
+    );
 }
 
 /** The name of a file beside the plan: relative, since a plan moves together with its files. */
 export function fileName(description: string) {
-  return lineOfText("file", description).superRefine((name, context) => {
-    if (/^(?:[/\\~]|[A-Za-z][A-Za-z0-9+.-]*:)/.test(name))
-      context.addIssue(sentence("file", "takes a name relative to the plan", name));
-  });
+  return lineOfText("file", description).check(
+    unbroken((name) => {
+      const isAbsolute = /^(?:[/\\~]|[A-Za-z][A-Za-z0-9+.-]*:)/.test(name);
+      return isAbsolute ? sentence("file", "takes a name relative to the plan", name) : null;
+    }),
+  );
 }
 
 /** One of a few words. */
@@ -114,11 +114,13 @@ export function oneOf<const T extends readonly [string, ...string[]]>(
   description: string,
 ) {
   const rule = `takes ${words.length === 1 ? "" : "one of "}${words.map(quoted).join(", ")}`;
-  return z.enum(words, { error: (issue) => sentence(name, rule, issue.input) }).meta({ description });
+  return z
+    .enum(words, { error: (issue) => sentence(name, rule, issue.input) })
+    .check(z.meta({ description }));
 }
 
 /** An object with these keys and no others. `what` names it with its article, as `a waypoint`. */
-export function objectOf<T extends z.ZodRawShape>(what: string, shape: T, description: string) {
+export function objectOf<T extends z.core.$ZodShape>(what: string, shape: T, description: string) {
   const keys = Object.keys(shape);
   return z
     .strictObject(shape, {
@@ -127,11 +129,11 @@ export function objectOf<T extends z.ZodRawShape>(what: string, shape: T, descri
         return unknownKeySentence(what, issue.keys[0] ?? "", keys);
       },
     })
-    .meta({ description });
+    .check(z.meta({ description }));
 }
 
 /** A list of at least so many items. `what` names it, as `routes`. */
-export function listOf<T extends z.ZodType>(
+export function listOf<T extends z.ZodMiniType>(
   what: string,
   item: T,
   least: number,
@@ -139,12 +141,23 @@ export function listOf<T extends z.ZodType>(
   description: string,
 ) {
   const rule = least === 0 ? `takes a list of ${items}` : `takes a list of at least ${least} ${items}`;
-  return z
-    .array(item, { error: (issue) => sentence(what, rule, issue.input) })
-    .min(least, {
+  return z.array(item, { error: (issue) => sentence(what, rule, issue.input) }).check(
+    z.minLength(least, {
       error: (issue) => `${what} ${rule}; found ${(issue.input as unknown[] | undefined)?.length ?? 0}`,
-    })
-    .meta({ description });
+    }),
+    z.meta({ description }),
+  );
+}
+
+/** A key that may be left out. */
+export const optional = z.optional;
+
+/** A rule of its own: a function that gives the sentence of what breaks it, or `null`. */
+function unbroken<T extends string | number>(broken: (value: T) => string | null) {
+  return z.check<T>(({ value, issues }) => {
+    const message = broken(value);
+    if (message !== null) issues.push({ code: "custom", message, input: value });
+  });
 }
 
 /** `<what> <rule>; found <input>`. */
@@ -178,22 +191,18 @@ function boundText(value: number, dimensions: readonly Dimension[]): string {
   return only === undefined || value === 0 ? String(value) : `${value} ${INNER_UNITS[only]}`;
 }
 
-/** What a reader gives, or the InputError that it throws. */
-function caught<T>(read: () => T): T | InputError {
-  try {
-    return read();
-  } catch (error) {
-    if (error instanceof InputError) return error;
-    throw error;
-  }
-}
-
 /** A text or number that a reader takes, which throws an InputError with the sentence. */
-export function readBy<T, Input extends z.ZodType>(input: Input, read: (value: z.output<Input>) => T) {
-  return input.transform((value, context): T => {
-    const result = caught(() => read(value));
-    if (!(result instanceof InputError)) return result;
-    context.addIssue(result.message);
-    return z.NEVER;
-  });
+export function readBy<T, Input extends z.ZodMiniType>(input: Input, read: (value: z.output<Input>) => T) {
+  return z.pipe(
+    input,
+    z.transform((value: z.output<Input>, context): T => {
+      try {
+        return read(value);
+      } catch (error) {
+        if (!(error instanceof InputError)) throw error;
+        context.issues.push({ code: "custom", message: error.message, input: value });
+        return z.NEVER;
+      }
+    }),
+  );
 }

@@ -1,4 +1,4 @@
-import * as z from "zod";
+import * as z from "zod/mini";
 import { readBy, sentence } from "./schema-parts.ts";
 import { parseTime } from "./time.ts";
 
@@ -14,7 +14,7 @@ export function time(name: string, description: string) {
             issue.input,
           ),
       })
-      .meta({ description }),
+      .check(z.meta({ description })),
     (text) => parseTime(text, name),
   );
 }

@@ -1,4 +1,4 @@
-import * as z from "zod";
+import * as z from "zod/mini";
 import { type CraftDocument, craftSchema } from "./craft-schema.ts";
 import { type PlanDocument, planSchema } from "./plan-schema.ts";
 
@@ -38,9 +38,9 @@ export function serializeCraft(document: CraftDocument): string {
 
 /** A copy with the keys of every object in the order of its schema; keys that the schema lacks follow in their own. */
 function inOrder(value: unknown, schema: unknown): unknown {
-  if (schema instanceof z.ZodOptional) return inOrder(value, schema.unwrap());
+  if (schema instanceof z.ZodMiniOptional) return inOrder(value, schema.def.innerType);
   if (Array.isArray(value)) {
-    const item = schema instanceof z.ZodArray ? schema.element : undefined;
+    const item = schema instanceof z.ZodMiniArray ? schema.def.element : undefined;
     return value.map((each) => inOrder(each, item));
   }
   if (typeof value !== "object" || value === null) return value;
@@ -53,13 +53,13 @@ function inOrder(value: unknown, schema: unknown): unknown {
 }
 
 /** The object schema that a value is written to: of a union, the first whose words and keys are the value's. */
-function objectSchema(value: object, schema: unknown): z.ZodObject | undefined {
-  if (schema instanceof z.ZodObject) return schema;
-  if (!(schema instanceof z.ZodUnion)) return undefined;
+function objectSchema(value: object, schema: unknown): z.ZodMiniObject | undefined {
+  if (schema instanceof z.ZodMiniObject) return schema;
+  if (!(schema instanceof z.core.$ZodUnion)) return undefined;
   return objectOptions(schema).find(({ shape }) =>
     Object.entries(value).every(([key, item]) => {
       const known: unknown = Reflect.get(shape, key);
-      return known instanceof z.ZodEnum ? known.safeParse(item).success : known !== undefined;
+      return known instanceof z.ZodMiniEnum ? known.safeParse(item).success : known !== undefined;
     }),
   );
 }
@@ -82,9 +82,9 @@ function jsonText(value: unknown, indent: string): string {
 }
 
 /** The object schemas of a union and of the unions in it. */
-function objectOptions(union: z.ZodUnion): z.ZodObject[] {
-  return union.options.flatMap((option) => {
-    if (option instanceof z.ZodUnion) return objectOptions(option);
-    return option instanceof z.ZodObject ? [option] : [];
+function objectOptions(union: z.core.$ZodUnion): z.ZodMiniObject[] {
+  return union._zod.def.options.flatMap((option) => {
+    if (option instanceof z.core.$ZodUnion) return objectOptions(option);
+    return option instanceof z.ZodMiniObject ? [option] : [];
   });
 }
