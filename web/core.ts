@@ -4,6 +4,7 @@
  */
 export { ADVISORY } from "../src/constants.ts";
 export type { StoreUnit } from "../src/craft/craft.ts";
+export type { StillCurve, StillPoint } from "../src/craft/still-curve.ts";
 export { InputError } from "../src/errors.ts";
 export type {
   Estimate,
@@ -24,3 +25,5 @@ export type { FieldInspection } from "../src/field/inspect.ts";
 export type { Position } from "../src/geodesy/track.ts";
 export { parseCoordinate } from "../src/plan/position.ts";
 export type { Units } from "../src/report/input.ts";
+export { storeColumn } from "../src/report/table-units.ts";
+export { type Dimension, dimensionOf, fromUnit, symbolsOf, toUnit } from "../src/units.ts";

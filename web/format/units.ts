@@ -1,4 +1,4 @@
-import type { StoreUnit } from "../core.ts";
+import { fromUnit, type StoreUnit, storeColumn } from "../core.ts";
 import type { UnitsPreset } from "../state/page-view.ts";
 
 /** How a kind of quantity is shown: the number of SI units in one of the shown ones, its symbol, and decimals. */
@@ -10,35 +10,32 @@ export interface ShownUnit {
 
 export type ShownKind = "distance" | "speed" | "height";
 
-const NAUTICAL_MILE: ShownUnit = { symbol: "NM", si: 1852, decimals: 1 };
-const KNOT: ShownUnit = { symbol: "kn", si: 1852 / 3600, decimals: 1 };
-const METRE: ShownUnit = { symbol: "m", si: 1, decimals: 0 };
-
 const SHOWN: Record<UnitsPreset, Record<ShownKind, ShownUnit>> = {
-  sea: { distance: NAUTICAL_MILE, speed: KNOT, height: METRE },
-  air: { distance: NAUTICAL_MILE, speed: KNOT, height: { symbol: "ft", si: 0.3048, decimals: 0 } },
-  metric: {
-    distance: { symbol: "km", si: 1000, decimals: 1 },
-    speed: { symbol: "m/s", si: 1, decimals: 1 },
-    height: METRE,
-  },
+  sea: { distance: unitOf("NM", 1), speed: unitOf("kn", 1), height: unitOf("m", 0) },
+  air: { distance: unitOf("NM", 1), speed: unitOf("kn", 1), height: unitOf("ft", 0) },
+  metric: { distance: unitOf("km", 1), speed: unitOf("m/s", 1), height: unitOf("m", 0) },
 };
 
-const STORE: Record<StoreUnit, ShownUnit> = {
-  J: { symbol: "kWh", si: 3.6e6, decimals: 1 },
-  kg: { symbol: "t", si: 1000, decimals: 2 },
-  L: { symbol: "L", si: 1, decimals: 1 },
-};
+/** A unit of the core's by its symbol, with so many decimals. */
+export function unitOf(symbol: string, decimals: number): ShownUnit {
+  return { symbol, si: fromUnit(1, symbol), decimals };
+}
 
 export function shownUnit(preset: UnitsPreset, kind: ShownKind): ShownUnit {
   return SHOWN[preset][kind];
 }
 
-/** The unit for amounts of a store, small enough that the largest of them shows three figures. */
+/** The unit for amounts of a store up to the largest, as the command line's tables choose it. */
 export function storeUnit(unit: StoreUnit, largest: number): ShownUnit {
-  if (unit === "J" && largest < 3.6e6) return { symbol: "Wh", si: 3600, decimals: largest < 360e3 ? 1 : 0 };
-  if (unit === "kg" && largest < 5000) return { symbol: "kg", si: 1, decimals: largest < 100 ? 1 : 0 };
-  return STORE[unit];
+  const { symbol, decimals } = storeColumn(unit, largest);
+  return unitOf(symbol, decimals);
+}
+
+/** The unit for rates of a store up to the largest, in the store's unit per second. */
+export function rateUnit(unit: StoreUnit, largest: number): ShownUnit {
+  if (unit === "kg") return unitOf("kg/h", 1);
+  if (unit === "L") return unitOf("L/h", 1);
+  return largest < fromUnit(2, "kW") ? unitOf("W", 0) : unitOf("kW", 1);
 }
 
 /** A number in a shown unit, without its symbol; a dash for what is not known. */

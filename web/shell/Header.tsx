@@ -53,7 +53,7 @@ export function Header({ page }: { readonly page: PageState }) {
             }}
           />
         </label>
-        <button type="button" onClick={() => savePlan(page)}>
+        <button type="button" onClick={() => void savePlan(page)}>
           Save
         </button>
         <MoreMenu page={page} />

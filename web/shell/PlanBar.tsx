@@ -1,10 +1,11 @@
 import { Readings } from "../files/Readings.tsx";
 import { fromLocalInput, localInput, zoneText } from "../format/time-text.ts";
 import type { PageState } from "../state/page-state.ts";
-import type { PaceDocument } from "../state/plan-document.ts";
-import { deleteField, setDeparture, setPace, setPlanText } from "../state/plan-edits.ts";
+import { deleteField, setDeparture, setPlanText } from "../state/plan-edits.ts";
 import { TextField } from "../waypoints/TextField.tsx";
-import { craftName, PACES } from "./plan-words.ts";
+import { CraftButton } from "./CraftButton.tsx";
+import { PaceFields } from "./PaceFields.tsx";
+import { craftName } from "./plan-words.ts";
 
 /** What holds for all routes: departure, craft, pace, reserve, fields. */
 export function PlanBar({ page }: { readonly page: PageState }) {
@@ -29,7 +30,7 @@ export function PlanBar({ page }: { readonly page: PageState }) {
       </label>
       <div class="plan-item">
         <span>Craft</span>
-        <strong>{craftName(plan.craft, page.craftNames.value)}</strong>
+        <CraftButton page={page} name={craftName(plan.craft, page.craftNames.value)} />
       </div>
       <PaceFields page={page} />
       <div class="plan-item short">
@@ -61,52 +62,5 @@ export function PlanBar({ page }: { readonly page: PageState }) {
         </ul>
       </div>
     </section>
-  );
-}
-
-function PaceFields({ page: { store } }: { readonly page: PageState }) {
-  const pace = store.plan.value.pace ?? { hold: "through-speed" };
-  const change = (next: PaceDocument): void => store.edit("Change pace", (plan) => setPace(plan, next));
-  return (
-    <>
-      <label>
-        <span>Pace</span>
-        <select
-          value={pace.hold}
-          onChange={({ currentTarget: { value } }) => {
-            const hold = PACES.find(([key]) => key === value)?.[0];
-            if (hold) change({ ...pace, hold });
-          }}
-        >
-          {PACES.map(([key, text]) => (
-            <option key={key} value={key}>
-              {text}
-            </option>
-          ))}
-        </select>
-      </label>
-      {(pace.hold === "through-speed" || pace.hold === "ground-speed") && (
-        <div class="plan-item short">
-          <span>Speed</span>
-          <TextField
-            label="Speed"
-            value={pace.speed ?? ""}
-            placeholder="the craft's"
-            onText={(speed) => change({ ...pace, speed })}
-          />
-        </div>
-      )}
-      {pace.hold === "power" && (
-        <div class="plan-item short">
-          <span>Power</span>
-          <TextField
-            label="Power"
-            value={pace.power ?? ""}
-            placeholder="40 kW"
-            onText={(power) => change({ ...pace, power })}
-          />
-        </div>
-      )}
-    </>
   );
 }

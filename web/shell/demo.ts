@@ -22,6 +22,18 @@ export async function openDemo(page: PageState, name: DemoName): Promise<void> {
   await openPlan(page, `${name}.plan.json`, text, demoFile);
 }
 
+/** Invented craft to start from. */
+export const DEMO_CRAFTS = [
+  { file: "workboat.craft.json", title: "Battery workboat" },
+  { file: "ship.craft.json", title: "Multi-purpose ship" },
+  { file: "drone.craft.json", title: "Survey drone" },
+] as const;
+
+/** The text of one of the demos' craft files. */
+export async function demoCraft(file: string): Promise<string> {
+  return (await demoFile(file)).text();
+}
+
 async function demoFile(name: string): Promise<Blob> {
   const address = ADDRESSES[`../../data/demo/${name}`];
   if (address === undefined) throw new Error(`the demo has no ${name}`);

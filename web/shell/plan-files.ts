@@ -1,11 +1,12 @@
 import type { PageState } from "../state/page-state.ts";
 
-/** Hands the plan to the browser to keep as a file. */
-export function savePlan({ store, view }: PageState): void {
+/** Hands the plan to the browser to keep as a file, written as the library writes plans. */
+export async function savePlan({ store, view, engine }: PageState): Promise<void> {
   const plan = store.plan.value;
   const name = `${fileStem(plan.title ?? "plan")}.plan.json`;
-  saveFile(name, `${JSON.stringify(plan, null, 2)}\n`, "application/json");
-  store.markSaved();
+  saveFile(name, await engine.planText(plan), "application/json");
+  // What was changed while it was being written is not in the file.
+  if (store.plan.peek() === plan) store.markSaved();
   view.announcement.value = `Saved ${name}`;
 }
 

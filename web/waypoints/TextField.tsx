@@ -6,10 +6,12 @@ interface TextFieldProps {
   /** Called with the new text on Enter or when the field is left, not at every key. */
   readonly onText: (text: string) => void;
   readonly placeholder?: string;
+  /** The element that says what is wrong with the text. */
+  readonly faultId?: string;
 }
 
 /** A field that speaks when its text is finished, and shows the plan's text again on Escape. */
-export function TextField({ label, value, onText, placeholder }: TextFieldProps) {
+export function TextField({ label, value, onText, placeholder, faultId }: TextFieldProps) {
   const input = useRef<HTMLInputElement>(null);
   useEffect(() => {
     if (input.current && document.activeElement !== input.current) input.current.value = value;
@@ -24,6 +26,7 @@ export function TextField({ label, value, onText, placeholder }: TextFieldProps)
       aria-label={label}
       defaultValue={value}
       {...(placeholder === undefined ? {} : { placeholder })}
+      {...(faultId === undefined ? {} : { "aria-invalid": true, "aria-describedby": faultId })}
       autocomplete="off"
       spellcheck={false}
       onBlur={(event) => {

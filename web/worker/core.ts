@@ -3,6 +3,7 @@
  */
 export { type Land, type LandTopology, prepareLand } from "../../src/coast/land.ts";
 export { unrolledRing } from "../../src/coast/ring.ts";
+export { type StillPoint, stillCurve, stillPoint } from "../../src/craft/still-curve.ts";
 export {
   LATTICE_COVERED,
   LATTICE_FILLED,
@@ -22,6 +23,7 @@ export {
   inspectField,
   inspectGrid,
   mergeField,
+  type Pace,
   type Plan,
   type PreparedRoute,
   type Profile,
@@ -29,7 +31,9 @@ export {
   type Route,
   readGridFile,
 } from "../../src/index.ts";
+export { readCraftDocument } from "../../src/plan/read-craft.ts";
 export { readPlanDocument } from "../../src/plan/read-plan.ts";
+export { serializeCraft, serializePlan } from "../../src/plan/write-plan.ts";
 export { writeCsv } from "../../src/report/csv.ts";
 export { writeGeoJson } from "../../src/report/geojson.ts";
 export { writeGpx } from "../../src/report/gpx.ts";

@@ -1,5 +1,13 @@
-import type { Estimate, FieldInspection, FieldRole, Profile, Units } from "../core.ts";
-import type { FieldDocument, PlanDocument } from "../state/plan-document.ts";
+import type {
+  Estimate,
+  FieldInspection,
+  FieldRole,
+  Profile,
+  StillCurve,
+  StillPoint,
+  Units,
+} from "../core.ts";
+import type { CraftDocument, FieldDocument, PlanDocument } from "../state/plan-document.ts";
 
 /*
  * What page and worker say to each other. Files and fields stay in the worker; what comes back is small or is transferred.
@@ -89,6 +97,22 @@ export interface CoastTile {
 
 export const COAST_EXTENT = 4096;
 
+/** A craft as read, with what it spends in a still medium; or its first fault, with the key that it stands at. */
+export type CraftAnswer =
+  | {
+      readonly ok: true;
+      /** `null` where nothing bounds the craft's speed. */
+      readonly curve: StillCurve | null;
+      /** Where the plan's pace runs on the curve; `null` where it finds no speed. */
+      readonly point: StillPoint | null;
+      readonly paceFault: string | null;
+      /** The speed of least use per metre within the craft's range; `null` where it has no range. */
+      readonly least: StillPoint | null;
+      /** The craft's least ground speed, m/s. */
+      readonly limit: number | null;
+    }
+  | { readonly ok: false; readonly key: string | null; readonly fault: string };
+
 export type ReportFormat = "table" | "csv" | "json" | "geojson" | "gpx";
 
 export interface ReportQuestion {
@@ -115,6 +139,11 @@ export interface Worker {
   estimate(plan: PlanDocument): Promise<EstimateAnswer>;
   /** Writes the estimate last made, as the command line does; `null` where there is none. */
   report(question: ReportQuestion): Promise<string | null>;
+  /** Reads a craft as its form holds it; the pace is that of the estimate last made. */
+  studyCraft(craft: CraftDocument): CraftAnswer;
+  /** The text of a plan's or a craft's file. */
+  planText(plan: PlanDocument): string;
+  craftText(craft: CraftDocument): string;
   lattice(question: LatticeQuestion): Promise<Lattice>;
   coastTile(z: number, x: number, y: number, detail: CoastDetail): Promise<CoastTile>;
   /** Resolves once the fine coast is there to be drawn. */

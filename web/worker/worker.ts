@@ -3,6 +3,8 @@ import fine from "world-atlas/land-10m.json?url";
 import coarse from "world-atlas/land-50m.json?url";
 import { createCoastShelf } from "./coast-shelf.ts";
 import type { LandTopology } from "./core.ts";
+import { serializeCraft, serializePlan } from "./core.ts";
+import { studyCraft } from "./craft-study.ts";
 import { createEstimator } from "./estimator.ts";
 import { previewField } from "./field-preview.ts";
 import { createFieldShelf } from "./field-shelf.ts";
@@ -42,6 +44,9 @@ const worker: Worker = {
     const { writeReport } = await import("./write-report.ts");
     return writeReport(input, question);
   },
+  studyCraft: (craft) => studyCraft(craft, estimator.answered()?.pace ?? null),
+  planText: (plan) => serializePlan(plan as Parameters<typeof serializePlan>[0]),
+  craftText: (craft) => serializeCraft(craft as Parameters<typeof serializeCraft>[0]),
   lattice: async (question) => handLattice(answerLattice(fields.current(), question)),
   coastTile: async (z, x, y, detail) => handTile(await coast.tile(z, x, y, detail)),
   async loadFineCoast() {

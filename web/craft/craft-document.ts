@@ -1,0 +1,25 @@
+import type { PageState } from "../state/page-state.ts";
+import type { CraftDocument, PlanDocument } from "../state/plan-document.ts";
+
+/** The craft of a plan that holds it itself; `null` where the plan names a file. */
+export function inlineCraft({ craft }: PlanDocument): CraftDocument | null {
+  return "file" in craft && typeof craft.file === "string" ? null : craft;
+}
+
+/** The craft of the plan, from its file where the plan names one; `null` where there is none that is a craft. */
+export async function craftOf({ store, files }: PageState): Promise<CraftDocument | null> {
+  const { craft } = store.plan.peek();
+  if (!("file" in craft && typeof craft.file === "string")) return craft;
+  const content = files.peek().get(craft.file);
+  return content === undefined ? null : craftInText(await content.text());
+}
+
+/** A craft file's object; what is wrong inside it the core says. */
+export function craftInText(text: string): CraftDocument | null {
+  try {
+    const value: unknown = JSON.parse(text);
+    return typeof value === "object" && value !== null && !Array.isArray(value) ? { ...value } : null;
+  } catch {
+    return null;
+  }
+}
