@@ -2,73 +2,35 @@
  * The public surface of Legwork: explicit names, one core behind the page, the command and `import`.
  */
 
-export { ADVISORY } from "./constants.ts";
-export { InputError, type Place } from "./errors.ts";
-export { type Dimension, fromUnit, parseQuantity, symbolsOf, toUnit } from "./units.ts";
-
-// The main job: a plan's text in, an estimate out.
-export { checkPlan, estimatePlan, type PlanAnswer, type PlanRequest } from "./plan/estimate-plan.ts";
-export { type InspectRequest, inspectField } from "./plan/inspect-field.ts";
-
-// The estimate in two halves, for sweeps and for dragging.
-export type { Conditions } from "./estimate/conditions.ts";
-export {
-  type EstimateAnswer,
-  type EstimateInput,
-  estimate,
-  estimatePrepared,
-  fieldSummary,
-  prepareRoutes,
-} from "./estimate/estimate.ts";
-export { estimateRoute, type RouteOutcome, type RouteRun, routeOutcome } from "./estimate/estimate-route.ts";
-export { magneticCourse, magneticVariation } from "./estimate/magnetic.ts";
-export { fieldsInUse, type PreparedRoute, prepareRoute } from "./estimate/prepare.ts";
-export type {
-  ArrivalAnswer,
-  ArrivalSolution,
-  ErrorBound,
-  Estimate,
-  FieldAlong,
-  FieldSummary,
-  Finding,
-  FindingCode,
-  LegEstimate,
-  Penalty,
-  Profile,
-  Reached,
-  RouteEstimate,
-  RouteStatus,
-  Severity,
-  Spread,
-  Still,
-  Totals,
-} from "./estimate/result.ts";
-export type { Route, Waypoint } from "./estimate/route.ts";
-
+// Deciding: how far out one can still turn back.
+export type { Alternate } from "./choose/alternate.ts";
 // Deciding: when to leave and how fast.
 export { type ArrivalWindow, solveArrival } from "./choose/arrive.ts";
 export { estimateArriving } from "./choose/arriving-estimate.ts";
+export type { DecidedEstimate, DecidedRoute } from "./choose/decided.ts";
 export { type DepartureWindow, windowDepartures } from "./choose/departure-window.ts";
+// Deciding: how sure it is.
+export {
+  type EnsembleFigures,
+  type EnsembleLeg,
+  type EnsembleMember,
+  type EnsembleResult,
+  ensembleResult,
+  type MemberRun,
+  memberRun,
+} from "./choose/ensemble.ts";
+export { type ErrorSpread, errorSpread, type LegSpread, type SpreadAnswer } from "./choose/error-spread.ts";
+export type { ForecastError } from "./choose/forecast-error.ts";
 export { type InTime, latestInTime, type RouteInTime } from "./choose/in-time.ts";
 export { type LatestDeparture, latestDeparture } from "./choose/latest-departure.ts";
+export { erfc, normalProbability } from "./choose/normal-distribution.ts";
 export { fastestWithReserve, leastUseSpeed, type PaceCurve, paceCurve } from "./choose/pace-curve.ts";
+export { type Quantiles, quantiles } from "./choose/quantiles.ts";
 export { type RefinedWindow, refineWindow } from "./choose/refine.ts";
+export type { SensitivityProfile, WeakPlace } from "./choose/sensitivity-profile.ts";
+export { type RoutePaces, routePaces } from "./choose/route-paces.ts";
 export { type SpeedRange, speedRange } from "./choose/speed-range.ts";
 export type { PacelessConditions } from "./choose/speed-trials.ts";
-export { makeSweep, type Sweep, sweepCell, windowCells } from "./choose/window.ts";
-export { type CellFinding, type WindowCell, windowCell } from "./choose/window-cell.ts";
-export {
-  type Refusal,
-  type RouteSummary,
-  summariseWindow,
-  type WindowBest,
-  type WindowSummary,
-} from "./choose/window-summary.ts";
-export { type WindowAnswer, type WindowRequest, windowPlan } from "./plan/window-plan.ts";
-
-// Deciding: how far out one can still turn back.
-export type { Alternate } from "./choose/alternate.ts";
-export type { DecidedEstimate, DecidedRoute } from "./choose/decided.ts";
 export { turnBack } from "./choose/turn-back.ts";
 export { withTurnBack } from "./choose/turn-back-estimate.ts";
 export type {
@@ -83,29 +45,26 @@ export type {
   TurnBackSamples,
   TurnLimit,
 } from "./choose/turn-back-result.ts";
-
-// Reports.
-export { writeCsv } from "./report/csv.ts";
-export { writeGeoJson } from "./report/geojson.ts";
-export { writeGpx } from "./report/gpx.ts";
-export type { ReportInput, Units } from "./report/input.ts";
-export { writeInspection } from "./report/inspection-text.ts";
-export { writeJson } from "./report/json.ts";
-export { writeTable } from "./report/table.ts";
-export { writeWindowCsv } from "./report/window-csv.ts";
-export type { WindowReport } from "./report/window-input.ts";
-export { writeWindowJson } from "./report/window-json.ts";
-export { writeWindowTable } from "./report/window-table.ts";
-
-// Plans and craft.
-export type { FieldReference, OpenFile, Plan } from "./plan/plan.ts";
-export { parseCoordinate } from "./plan/position.ts";
-export { formatPosition } from "./plan/position-format.ts";
-export { readCraft } from "./plan/read-craft.ts";
-export { readPlan, readPlanDocument } from "./plan/read-plan.ts";
-export { formatTime, parseTime } from "./plan/time.ts";
-export { serializeCraft, serializePlan } from "./plan/write-plan.ts";
-
+export {
+  type UncertainAnswer,
+  type UncertaintyAsked,
+  withUncertainty,
+} from "./choose/uncertain-estimate.ts";
+export { type WhatIf, whatIfText } from "./choose/what-if.ts";
+export { type WhatIfResult, whatIfResults } from "./choose/what-if-results.ts";
+export { makeSweep, type Sweep, sweepCell, windowCells } from "./choose/window.ts";
+export { type CellFinding, type WindowCell, windowCell } from "./choose/window-cell.ts";
+export {
+  type Refusal,
+  type RouteSummary,
+  summariseWindow,
+  type WindowBest,
+  type WindowSummary,
+} from "./choose/window-summary.ts";
+// Coarse land.
+export { type Land, type LandTopology, prepareLand } from "./coast/land.ts";
+export { type LandStretch, landCrossings } from "./coast/land-crossings.ts";
+export { ADVISORY } from "./constants.ts";
 // Craft: the triangle and the power models.
 export { constantPower } from "./craft/constant.ts";
 export type {
@@ -141,24 +100,54 @@ export {
   maxLiftThreeHalvesToDrag,
   maxLiftToDrag,
 } from "./craft/wing-performance.ts";
-
+export { InputError, type Place } from "./errors.ts";
+// The estimate in two halves, for sweeps and for dragging.
+export type { Conditions } from "./estimate/conditions.ts";
+export {
+  type EstimateAnswer,
+  type EstimateInput,
+  estimate,
+  estimatePrepared,
+  fieldSummary,
+  prepareRoutes,
+} from "./estimate/estimate.ts";
+export { estimateRoute, type RouteOutcome, type RouteRun, routeOutcome } from "./estimate/estimate-route.ts";
+export { magneticCourse, magneticVariation } from "./estimate/magnetic.ts";
+export { fieldsInUse, type PreparedRoute, prepareRoute } from "./estimate/prepare.ts";
+export type {
+  ArrivalAnswer,
+  ArrivalSolution,
+  ErrorBound,
+  Estimate,
+  FieldAlong,
+  FieldSummary,
+  Finding,
+  FindingCode,
+  LegEstimate,
+  Penalty,
+  Profile,
+  Reached,
+  RouteEstimate,
+  RouteStatus,
+  Severity,
+  Spread,
+  Still,
+  Totals,
+} from "./estimate/result.ts";
+export type { Route, Waypoint } from "./estimate/route.ts";
 // Fields.
 export { readGridFile } from "./field/csv.ts";
 export type { BeyondPolicy, Field, FieldRole, GapPolicy, OutsidePolicy, Tile } from "./field/field.ts";
 export { applyGapPolicy } from "./field/gaps.ts";
-export type { GridFile } from "./field/grid-file.ts";
+export type { GridFile, GridMember } from "./field/grid-file.ts";
 export { type FieldInspection, inspectGrid } from "./field/inspect.ts";
 export { sampleLattice } from "./field/lattice.ts";
+export { memberGrid } from "./field/member-grid.ts";
 export { type FieldSource, mergeField } from "./field/merge.ts";
 export { type FieldSample, sampleField } from "./field/sample.ts";
 export { pressureAltitude, type StandardAir, standardAir } from "./field/standard-atmosphere.ts";
-
-// Coarse land.
-export { type Land, type LandTopology, prepareLand } from "./coast/land.ts";
-export { type LandStretch, landCrossings } from "./coast/land-crossings.ts";
-
 // Geodesy.
-export { type DrawnPoint, cutAtAntimeridian, densify } from "./geodesy/drawn-line.ts";
+export { cutAtAntimeridian, type DrawnPoint, densify } from "./geodesy/drawn-line.ts";
 export {
   type Ellipsoid,
   ellipsoid,
@@ -172,3 +161,35 @@ export { geodesicDirect, geodesicInverse } from "./geodesy/geodesic.ts";
 export { makeTrack, makeTrackOn } from "./geodesy/make-track.ts";
 export { rhumbDirect, rhumbInverse } from "./geodesy/rhumb.ts";
 export type { PathKind, Position, Track, TrackPoint } from "./geodesy/track.ts";
+// The main job: a plan's text in, an estimate out.
+export {
+  checkPlan,
+  estimatePlan,
+  type PlanAnswer,
+  type PlanChecked,
+  type PlanRequest,
+} from "./plan/estimate-plan.ts";
+export { type InspectRequest, inspectField } from "./plan/inspect-field.ts";
+// Plans and craft.
+export type { FieldReference, OpenFile, Plan } from "./plan/plan.ts";
+export { parseCoordinate } from "./plan/position.ts";
+export { formatPosition } from "./plan/position-format.ts";
+export { readCraft } from "./plan/read-craft.ts";
+export { type FieldsRead, type MemberFields, readMembers } from "./plan/read-fields.ts";
+export { readPlan, readPlanDocument } from "./plan/read-plan.ts";
+export { formatTime, parseTime } from "./plan/time.ts";
+export { type WindowAnswer, type WindowRequest, windowPlan } from "./plan/window-plan.ts";
+export { serializeCraft, serializePlan } from "./plan/write-plan.ts";
+// Reports.
+export { writeCsv } from "./report/csv.ts";
+export { writeGeoJson } from "./report/geojson.ts";
+export { writeGpx } from "./report/gpx.ts";
+export type { ReportInput, Units } from "./report/input.ts";
+export { writeInspection } from "./report/inspection-text.ts";
+export { writeJson } from "./report/json.ts";
+export { writeTable } from "./report/table.ts";
+export { writeWindowCsv } from "./report/window-csv.ts";
+export type { WindowReport } from "./report/window-input.ts";
+export { writeWindowJson } from "./report/window-json.ts";
+export { writeWindowTable } from "./report/window-table.ts";
+export { type Dimension, fromUnit, parseQuantity, symbolsOf, toUnit } from "./units.ts";

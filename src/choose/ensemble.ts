@@ -51,6 +51,23 @@ export interface MemberRun {
  * Estimates a route under one member: to the last bit the estimate on that member's fields alone.
  *
  * @param prepared for fields of the ensemble; prepared anew for a member with other axes
+ *
+ * @example
+ * const craft = readCraft(
+ *   `{ "name": "Drone", "moves": "air", "power": { "model": "constant", "rate": "1 kW" },
+ *      "store": { "capacity": "10 kWh" } }`,
+ * );
+ * const waypoint = (name, lon) => (
+ *   { name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const wind = (u) => {
+ *   const slices = [Float64Array.of(u, 0, u, 0, u, 0, u, 0)];
+ *   const axes = { lon: Float64Array.of(-1, 2), lat: Float64Array.of(-1, 1), height: null, times: null };
+ *   const tile = { files: [], ...axes, slices, gusts: null, masks: [null], global: false, beyond: "stop" };
+ *   return { role: "wind", tiles: [tile], outside: "stop" };
+ * };
+ * const conditions = { departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 10 }, reserve: null, fields: [wind(0)] };
+ * const prepared = prepareRoute({ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }, [wind(0)]);
+ * memberRun(prepared, conditions, { member: 3, fields: [wind(2)] }).estimate.totals.time_s // → 9276.62
  */
 export function memberRun(
   prepared: PreparedRoute,
@@ -86,8 +103,31 @@ function haveSameAxes(a: readonly Field[], b: readonly Field[]): boolean {
   });
 }
 
-/** What the runs of all members come to; `runs` ascending by member. */
+/**
+ * What the runs of all members come to.
+ *
+ * @param runs at least one, ascending by member
+ *
+ * @example
+ * const craft = readCraft(
+ *   `{ "name": "Drone", "moves": "air", "power": { "model": "constant", "rate": "1 kW" },
+ *      "store": { "capacity": "10 kWh" } }`,
+ * );
+ * const waypoint = (name, lon) => (
+ *   { name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const wind = (u) => {
+ *   const slices = [Float64Array.of(u, 0, u, 0, u, 0, u, 0)];
+ *   const axes = { lon: Float64Array.of(-1, 2), lat: Float64Array.of(-1, 1), height: null, times: null };
+ *   const tile = { files: [], ...axes, slices, gusts: null, masks: [null], global: false, beyond: "stop" };
+ *   return { role: "wind", tiles: [tile], outside: "stop" };
+ * };
+ * const conditions = { departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 10 }, reserve: null, fields: [wind(0)] };
+ * const prepared = prepareRoute({ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }, [wind(0)]);
+ * const runs = [0, 2].map((u, member) => memberRun(prepared, conditions, { member, fields: [wind(u)] }));
+ * ensembleResult(runs).time_s.p50 // → 10204.29
+ */
 export function ensembleResult(runs: readonly MemberRun[]): EnsembleResult {
+  if (runs.length === 0) throw new Error("an ensemble has at least one member");
   const arrived = runs.filter(({ estimate }) => estimate.arrival !== null);
   const broken = arrived.filter(({ estimate }) => !holds(estimate));
   const legCount = runs[0]?.estimate.legs.length ?? 0;

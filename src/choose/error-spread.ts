@@ -60,6 +60,24 @@ const MOST_CELLS = 3000;
  * @param run the route's estimate under these conditions
  * @param errors one a role at most; those of fields that do not act on the craft add nothing
  * @returns `null` where the route stops on the way, no error acts on it, or it runs along the edge of what its pace or field has
+ *
+ * @example
+ * const craft = readCraft(
+ *   `{ "name": "Drone", "moves": "air", "power": { "model": "constant", "rate": "1 kW" },
+ *      "store": { "capacity": "10 kWh" } }`,
+ * );
+ * const waypoint = (name, lon) => (
+ *   { name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const wind = (u) => {
+ *   const slices = [Float64Array.of(u, 0, u, 0, u, 0, u, 0)];
+ *   const axes = { lon: Float64Array.of(-1, 2), lat: Float64Array.of(-1, 1), height: null, times: null };
+ *   const tile = { files: [], ...axes, slices, gusts: null, masks: [null], global: false, beyond: "stop" };
+ *   return { role: "wind", tiles: [tile], outside: "stop" };
+ * };
+ * const conditions = { departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 10 }, reserve: null, fields: [wind(0)] };
+ * const prepared = prepareRoute({ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }, [wind(0)]);
+ * const errors = [{ role: "wind", speed_m_s: 1, length_m: 100000, time_s: 21600 }];
+ * errorSpread(prepared, conditions, estimateRoute(prepared, conditions), errors).spread.time_s // → 878.05
  */
 export function errorSpread(
   prepared: PreparedRoute,

@@ -40,6 +40,28 @@ export interface UncertainAnswer extends EstimateAnswer {
  *
  * @param prepared by `prepareRoutes`, from the same input
  * @throws InputError for a what-if that the pace or the craft does not allow
+ *
+ * @example
+ * const craft = readCraft(
+ *   `{ "name": "Drone", "moves": "air", "power": { "model": "constant", "rate": "1 kW" },
+ *      "store": { "capacity": "10 kWh" } }`,
+ * );
+ * const waypoint = (name, lon) => (
+ *   { name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const wind = (u) => {
+ *   const slices = [Float64Array.of(u, 0, u, 0, u, 0, u, 0)];
+ *   const axes = { lon: Float64Array.of(-1, 2), lat: Float64Array.of(-1, 1), height: null, times: null };
+ *   const tile = { files: [], ...axes, slices, gusts: null, masks: [null], global: false, beyond: "stop" };
+ *   return { role: "wind", tiles: [tile], outside: "stop" };
+ * };
+ * const routes = [{ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }];
+ * const pace = { hold: "through-speed", speed_m_s: 10 };
+ * const input = { title: "", departure: 0, craft, pace, reserve: null, fields: [wind(0)], routes, land: null };
+ * const prepared = prepareRoutes(input);
+ * const members = [0, 2].map((u, member) => ({ member, fields: [wind(u)] }));
+ * const asked = { whatIfs: [], errors: [], members };
+ * const answer = withUncertainty(estimatePrepared(prepared, input), prepared, input, asked);
+ * answer.estimate.routes[0].ensemble.members // → [0, 1]
  */
 export function withUncertainty(
   { estimate, profiles }: EstimateAnswer & { readonly estimate: DecidedEstimate },

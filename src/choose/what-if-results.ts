@@ -20,6 +20,24 @@ export interface WhatIfResult extends Omit<WindowCell, "route" | "speed_m_s"> {
  * @param conditions one per route
  * @returns per route, in the order of the what-ifs
  * @throws InputError for a what-if that the pace or the craft does not allow
+ *
+ * @example
+ * const craft = readCraft(
+ *   `{ "name": "Drone", "moves": "air", "power": { "model": "constant", "rate": "1 kW" },
+ *      "store": { "capacity": "10 kWh" } }`,
+ * );
+ * const waypoint = (name, lon) => (
+ *   { name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const wind = (u) => {
+ *   const slices = [Float64Array.of(u, 0, u, 0, u, 0, u, 0)];
+ *   const axes = { lon: Float64Array.of(-1, 2), lat: Float64Array.of(-1, 1), height: null, times: null };
+ *   const tile = { files: [], ...axes, slices, gusts: null, masks: [null], global: false, beyond: "stop" };
+ *   return { role: "wind", tiles: [tile], outside: "stop" };
+ * };
+ * const conditions = { departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 10 }, reserve: null, fields: [wind(0)] };
+ * const prepared = prepareRoute({ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }, [wind(0)]);
+ * const whatIf = { name: "Headwind", wind: 1, current: 1, veer_deg: 0, speed_m_s: -1, consumption: 0, late_s: 0 };
+ * whatIfResults([prepared], [conditions], [whatIf])[0][0].time_s // → 12368.83
  */
 export function whatIfResults(
   prepared: readonly PreparedRoute[],

@@ -22,7 +22,12 @@ export interface WhatIf {
   readonly late_s: number;
 }
 
-/** The changes of a what-if in words, where the plan gives it no name: `wind × 1.2, 1 h late`. */
+/**
+ * The changes of a what-if in words, where the plan gives it no name.
+ *
+ * @example
+ * whatIfText({ wind: 1.2, current: 1, veer_deg: -20, speed_m_s: 0, consumption: 0, late_s: 3600 }) // → "wind × 1.2, wind backed 20°, 1 h 00 min late"
+ */
 export function whatIfText(change: Omit<WhatIf, "name">): string {
   const { wind, current, veer_deg, speed_m_s, consumption, late_s } = change;
   const parts: string[] = [];

@@ -42,6 +42,11 @@ export async function readFields(
  *
  * @throws InputError with file and line where a file is not there or breaks a rule, or where the members of two files or roles
  *   are not the same
+ *
+ * @example
+ * const open = async function* () { yield new TextEncoder().encode("member,lat,lon,u,v\n4,50,-5,3,4\n9,50,-5,5,6"); };
+ * const reference = { role: "wind", file: "wind.csv", columns: {}, gaps: "stop", beyond: "stop", outside: "stop" };
+ * (await readMembers([reference], open)).members.map(({ member }) => member) // → [4, 9]
  */
 export async function readMembers(
   references: readonly FieldReference[],
