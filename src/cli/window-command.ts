@@ -41,10 +41,10 @@ export async function windowCommand(file: string, options: WindowOptions): Promi
     ...(arriveBy === undefined ? {} : { arriveBy }),
     ...(route === undefined ? {} : { routes: route }),
   });
-  const { plan, input, window, cells, summary, refined, inTime } = answer;
+  const { plan, input, window, cells, summary, refined, inTime, paces } = answer;
   const { title, craft, pace, arrive = null } = plan;
   const fields = input.fields.map(fieldSummary);
-  const report = { title, fields, craft, pace, arrive, window, cells, summary, refined, inTime };
+  const report = { title, fields, craft, pace, arrive, window, cells, summary, refined, inTime, paces };
   const text = {
     table: () => writeWindowTable(report, units ?? (craft.moves === "air" ? "air" : "sea")),
     csv: () => writeWindowCsv(report),

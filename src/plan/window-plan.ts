@@ -1,6 +1,7 @@
 import type { DepartureWindow } from "../choose/departure-window.ts";
 import { type InTime, latestInTime } from "../choose/in-time.ts";
 import { type RefinedWindow, refineWindow } from "../choose/refine.ts";
+import { type RoutePaces, routePaces } from "../choose/route-paces.ts";
 import { makeSweep, windowCells } from "../choose/window.ts";
 import type { WindowCell } from "../choose/window-cell.ts";
 import { summariseWindow, type WindowSummary } from "../choose/window-summary.ts";
@@ -36,6 +37,8 @@ export interface WindowAnswer {
   readonly refined: RefinedWindow | null;
   /** The latest departures that arrive in time; `null` where no arrival is to be kept. */
   readonly inTime: InTime | null;
+  /** The choice of pace per route; `null` unless the bests are refined, the window names speeds and the pace holds a through-speed. */
+  readonly paces: readonly RoutePaces[] | null;
 }
 
 /**
@@ -64,7 +67,11 @@ export async function windowPlan(text: string, request: WindowRequest): Promise<
   const inTime = latestInTime(sweep, window);
   const cells = [...windowCells(sweep, window)];
   const refined = request.refine === true ? refineWindow(sweep, window, cells) : null;
-  return { plan, input, window, cells, summary: summariseWindow(cells), refined, inTime };
+  const summary = summariseWindow(cells);
+  const isPaceOpen = refined !== null && window.speeds_m_s !== null && plan.pace.hold === "through-speed";
+  const hasRange = Number.isFinite(plan.craft.speeds?.max ?? plan.craft.power.max);
+  const paces = isPaceOpen && hasRange ? routePaces(sweep, summary) : null;
+  return { plan, input, window, cells, summary, refined, inTime, paces };
 }
 
 function windowAsked(

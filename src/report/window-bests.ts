@@ -75,6 +75,14 @@ function inTimeOf({ inTime }: WindowReport, units: WindowUnits): { rows: Row[]; 
   return { rows, missed };
 }
 
+/** Per route and at its best departure by use, the bests among all speeds of the craft's range. */
+function pacesOf({ paces }: WindowReport): Row[] {
+  return (paces ?? []).flatMap(({ leastUse, fastest }) => [
+    ...(leastUse === null ? [] : [{ what: "any speed, use", cell: leastUse }]),
+    ...(fastest === null ? [] : [{ what: "any, fastest", cell: fastest }]),
+  ]);
+}
+
 /** The bests of all cells, and of each route where there are several, to the minute where that was asked for. */
 export function windowBests(report: WindowReport, units: WindowUnits): string[] {
   const { summary, refined, inTime } = report;
@@ -82,7 +90,12 @@ export function windowBests(report: WindowReport, units: WindowUnits): string[] 
   const several = own.length > 1;
   const overall = rowsOf(refined?.best ?? summary.best);
   const late = inTimeOf(report, units);
-  const rows = [...overall, ...(several ? own.flatMap(({ best }) => rowsOf(best)) : []), ...late.rows];
+  const rows = [
+    ...overall,
+    ...(several ? own.flatMap(({ best }) => rowsOf(best)) : []),
+    ...late.rows,
+    ...pacesOf(report),
+  ];
   if (rows.length === 0) return ["Nothing in the window can be done.", ...late.missed];
   const rest = columnsOf(rows, units);
   const whats = rows.map(({ what }, index) => (index < overall.length ? `of all, ${what}` : what));
@@ -103,7 +116,15 @@ export function windowBests(report: WindowReport, units: WindowUnits): string[] 
     inTime === null
       ? []
       : [`In time: the latest departure that arrives by ${instantText(inTime.notAfter, "minute")}.`];
-  return [...head, ...lines, ...closing(refined?.best ?? summary.best), ...kept, ...late.missed];
+  const any = pacesText(report);
+  return [...head, ...lines, ...closing(refined?.best ?? summary.best), ...kept, ...any, ...late.missed];
+}
+
+function pacesText({ paces }: WindowReport): string[] {
+  if (paces === null) return [];
+  const text =
+    "Any speed: of the craft's whole range, at the route's departure of least use; least use, and the fastest that keeps the reserve.";
+  return wrapped(text, TABLE_WIDTH);
 }
 
 function closing({ latest, closedBy }: WindowBest): string[] {

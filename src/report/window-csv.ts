@@ -47,7 +47,7 @@ function isSameCell(a: WindowCell, b: WindowCell): boolean {
  * empty cell where there is no figure; the bests to the minute, where they were asked for, follow as rows of their own.
  *
  * @example
- * const report = { title: "Two marks", fields: [], craft: { name: "Tender", moves: "water", store: { unit: "J", usable: 36000000 } }, pace: { hold: "least-energy" }, arrive: null, window: { from: 0, to: 0, every_s: 60, speeds_m_s: null }, cells: [], summary: summariseWindow([]), refined: null, inTime: null };
+ * const report = { title: "Two marks", fields: [], craft: { name: "Tender", moves: "water", store: { unit: "J", usable: 36000000 } }, pace: { hold: "least-energy" }, arrive: null, window: { from: 0, to: 0, every_s: 60, speeds_m_s: null }, cells: [], summary: summariseWindow([]), refined: null, inTime: null, paces: null };
  * writeWindowCsv(report).split(",")[1] // → "departure [UTC]"
  */
 export function writeWindowCsv({ craft, cells, summary, refined }: WindowReport): string {

@@ -2,6 +2,7 @@ import type { ArrivalWindow } from "../choose/arrive.ts";
 import type { DepartureWindow } from "../choose/departure-window.ts";
 import type { InTime } from "../choose/in-time.ts";
 import type { RefinedWindow } from "../choose/refine.ts";
+import type { RoutePaces } from "../choose/route-paces.ts";
 import type { WindowCell } from "../choose/window-cell.ts";
 import type { WindowSummary } from "../choose/window-summary.ts";
 import type { Craft, Pace } from "../craft/craft.ts";
@@ -22,4 +23,6 @@ export interface WindowReport {
   readonly refined: RefinedWindow | null;
   /** The latest departures that arrive in time; `null` where no arrival is to be kept. */
   readonly inTime: InTime | null;
+  /** The choice of pace per route; `null` where it was not asked for. */
+  readonly paces: readonly RoutePaces[] | null;
 }

@@ -1,5 +1,6 @@
 import type { InTime } from "../choose/in-time.ts";
 import type { RefinedWindow } from "../choose/refine.ts";
+import type { RoutePaces } from "../choose/route-paces.ts";
 import type { CellFinding, WindowCell } from "../choose/window-cell.ts";
 import type { Refusal, RouteSummary, WindowBest } from "../choose/window-summary.ts";
 import { ADVISORY } from "../constants.ts";
@@ -84,6 +85,10 @@ function inTime({ notAfter, routes }: InTime): InTime {
   };
 }
 
+function paces({ route: name, departure, leastUse, fastest }: RoutePaces): RoutePaces {
+  return { route: name, departure, leastUse: leastUse && cell(leastUse), fastest: fastest && cell(fastest) };
+}
+
 const iso = (time: number): string => new Date(time).toISOString();
 
 /**
@@ -91,7 +96,7 @@ const iso = (time: number): string => new Date(time).toISOString();
  * order departure, route, speed; keys in a fixed order, two spaces of indent, a final line end.
  *
  * @example
- * const report = { title: "Two marks", fields: [], craft: { name: "Tender", moves: "water", store: { unit: "J", usable: 36000000 } }, pace: { hold: "least-energy" }, arrive: null, window: { from: 0, to: 0, every_s: 60, speeds_m_s: null }, cells: [], summary: summariseWindow([]), refined: null, inTime: null };
+ * const report = { title: "Two marks", fields: [], craft: { name: "Tender", moves: "water", store: { unit: "J", usable: 36000000 } }, pace: { hold: "least-energy" }, arrive: null, window: { from: 0, to: 0, every_s: 60, speeds_m_s: null }, cells: [], summary: summariseWindow([]), refined: null, inTime: null, paces: null };
  * JSON.parse(writeWindowJson(report)).format // → "legwork-window/1"
  */
 export function writeWindowJson({ title, fields, craft, arrive, window, ...rest }: WindowReport): string {
@@ -120,6 +125,7 @@ export function writeWindowJson({ title, fields, craft, arrive, window, ...rest 
     routes: rest.summary.routes.map(route),
     ...(rest.refined === null ? {} : { refined: refined(rest.refined) }),
     ...(rest.inTime === null ? {} : { inTime: inTime(rest.inTime) }),
+    ...(rest.paces === null ? {} : { paces: rest.paces.map(paces) }),
     cells: rest.cells.map(cell),
   };
   return `${JSON.stringify(whole, refuseNotFinite, 2)}\n`;

@@ -72,7 +72,7 @@ function legend({ window, arrive, refined }: WindowReport, units: WindowUnits): 
  * the bests; why the others cannot be done; the advisory.
  *
  * @example
- * const report = { title: "Two marks", fields: [], craft: { name: "Tender", moves: "water", store: { unit: "J", usable: 36000000 } }, pace: { hold: "least-energy" }, arrive: null, window: { from: 0, to: 0, every_s: 60, speeds_m_s: null }, cells: [], summary: summariseWindow([]), refined: null, inTime: null };
+ * const report = { title: "Two marks", fields: [], craft: { name: "Tender", moves: "water", store: { unit: "J", usable: 36000000 } }, pace: { hold: "least-energy" }, arrive: null, window: { from: 0, to: 0, every_s: 60, speeds_m_s: null }, cells: [], summary: summariseWindow([]), refined: null, inTime: null, paces: null };
  * writeWindowTable(report, "sea").split("\n")[2] // → "Store:     10.0 kWh usable"
  */
 export function writeWindowTable(report: WindowReport, system: Units): string {

@@ -244,6 +244,25 @@ describe("a plan's window worked out", () => {
     );
   });
 
+  test("refined over speeds, tells the least use and the fastest of all speeds of the range", async () => {
+    const window = { ...WINDOW, speeds: ["6 kn", "9 kn", "12 kn"] };
+    const text = textOf(["window", window], ["reserve", "70 %"]);
+    const { paces, summary, cells } = await windowPlan(text, { ...request, refine: true });
+    const [own] = paces ?? [];
+    const best = summary.routes[0]?.best.use;
+    expect(own?.departure).toBe(best?.departure);
+    expect(own?.leastUse?.use ?? Infinity).toBeLessThanOrEqual(best?.use ?? 0);
+    // In still water the use rises with the speed here: the reserve shuts the range from above.
+    expect(own?.fastest?.status).not.toBe("stop");
+    // To a billionth of the store, the accuracy of the search.
+    expect((own?.fastest?.remaining ?? 0) / (own?.fastest?.reserve ?? 1)).toBeCloseTo(1, 8);
+    const at = (speed: number) =>
+      cells.find(({ speed_m_s }) => Math.abs((speed_m_s ?? 0) - knots(speed)) < 1e-9);
+    expect(at(6)?.status).not.toBe("stop");
+    expect(at(12)?.status).toBe("stop");
+    expect((await windowPlan(text, request)).paces).toBeNull();
+  });
+
   test("asks for what neither names", async () => {
     expect(await faultOf(() => windowPlan(textOf(), { ...request, from: WINDOW.from, every: "1 h" }))).toBe(
       "run.plan.json, window: a window of departures needs from, to and every, in the plan or beside it; found no to in either",

@@ -59,6 +59,7 @@ function reportOf(
     summary: summariseWindow(cells),
     refined,
     inTime: latestInTime(sweep, window),
+    paces: null,
   };
 }
 
