@@ -1,11 +1,12 @@
-import type { LinearScale } from "d3-scale";
-import { area, line } from "d3-shape";
 import type { Profile, RouteEstimate } from "../core.ts";
+import type { LinearScale } from "../format/linear-scale.ts";
 import { alongColour, routeHue } from "../format/palette.ts";
+import { areaPath, linePath } from "../format/svg-path.ts";
 import { inUnit, number, shownUnit, storeUnit } from "../format/units.ts";
-import { placeAtTime, valueAtDistance } from "../state/along-route.ts";
+import { valueAtDistance } from "../state/along-route.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { RouteDrawing } from "../worker/protocol.ts";
+import { axisOf, distanceAt } from "./along-axis.ts";
 import { ribbonRuns } from "./ribbon-runs.ts";
 
 const STORE_TOP = 3;
@@ -51,7 +52,9 @@ export function Ribbon({ page, route, scale, width, limit }: RibbonProps) {
       </div>
     );
   }
-  const axis = view.axis.value === "distance" ? drawing.profile.distance_m : drawing.profile.time_s;
+  const { profile } = drawing;
+  const byTime = view.axis.value === "time";
+  const axis = axisOf(profile, byTime);
   const pointed = view.pointed.value?.route === route ? view.pointed.value.distance_m : null;
   const point = (distance_m: number | null): void => {
     view.pointed.value = distance_m === null ? null : { route, distance_m };
@@ -68,9 +71,7 @@ export function Ribbon({ page, route, scale, width, limit }: RibbonProps) {
         aria-valuemax={100}
         aria-valuenow={Math.round((100 * (pointed ?? 0)) / (drawing.distance_m.at(-1) ?? 1))}
         aria-valuetext={placeText(page, drawing.profile, estimate, pointed ?? 0)}
-        onPointerMove={(event) =>
-          point(distanceAt(drawing, axis, scale.invert(event.offsetX), view.axis.value === "time"))
-        }
+        onPointerMove={(event) => point(distanceAt(profile, byTime, scale.invert(event.offsetX)))}
         onPointerLeave={() => point(null)}
         onFocus={() => point(pointed ?? 0)}
         onBlur={() => point(null)}
@@ -156,15 +157,12 @@ function StoreLine({ profile, axis, scale, estimate, route }: StoreLineProps) {
   const bottom = STORE_TOP + STORE_HEIGHT;
   const level = (amount: number): number =>
     bottom - (Math.min(Math.max(amount / estimate.usable, 0), 1) * STORE_HEIGHT || 0);
-  const samples = Array.from(axis, (_, at) => at);
   const x = (at: number): number => scale(axis[at] ?? 0);
   const y = (at: number): number => level(profile.remaining[at] ?? 0);
-  const fill = area<number>().x(x).y0(bottom).y1(y)(samples);
-  const edge = line<number>().x(x).y(y)(samples);
   return (
     <g>
-      <path class="store-fill" d={fill ?? ""} />
-      <path d={edge ?? ""} fill="none" stroke={routeHue(route)} stroke-width="1.8" />
+      <path class="store-fill" d={areaPath(axis.length, x, y, bottom)} />
+      <path d={linePath(axis.length, x, y)} fill="none" stroke={routeHue(route)} stroke-width="1.8" />
       {estimate.reserve !== null && estimate.reserve > 0 && (
         <path
           class="store-reserve"
@@ -213,18 +211,6 @@ function Ticks({ page, route, drawing, axis, scale }: TicksProps) {
       })}
     </g>
   );
-}
-
-/** The distance along the route that a value of the axis stands for. */
-function distanceAt(
-  drawing: RouteDrawing,
-  axis: Float64Array,
-  value: number,
-  byTime: boolean,
-): number | null {
-  const held = Math.min(Math.max(value, 0), axis.at(-1) ?? 0);
-  if (!byTime || !drawing.profile) return held;
-  return placeAtTime(drawing.profile, held)?.distance_m ?? null;
 }
 
 /** Where a key leads: arrows by a hundredth of the route, with Shift by a thousandth. */
