@@ -16,8 +16,12 @@ export function TextField({ label, value, onText, placeholder, faultId }: TextFi
   useEffect(() => {
     if (input.current && document.activeElement !== input.current) input.current.value = value;
   }, [value]);
+  // Leaving the field after Enter must not tell the same text again: it would be another step to undo.
+  const told = useRef<string | null>(null);
   const finish = (text: string): void => {
-    if (text !== value) onText(text);
+    if (text === value || text === told.current) return;
+    told.current = text;
+    onText(text);
   };
   return (
     <input
@@ -29,6 +33,9 @@ export function TextField({ label, value, onText, placeholder, faultId }: TextFi
       {...(faultId === undefined ? {} : { "aria-invalid": true, "aria-describedby": faultId })}
       autocomplete="off"
       spellcheck={false}
+      onInput={() => {
+        told.current = null;
+      }}
       onBlur={(event) => {
         finish(event.currentTarget.value);
         event.currentTarget.value = value;
