@@ -1,6 +1,7 @@
 import { InputError } from "../errors.ts";
 import { readGridFile } from "../field/csv.ts";
 import type { Field, FieldRole } from "../field/field.ts";
+import type { GridFile } from "../field/grid-file.ts";
 import { memberGrid } from "../field/member-grid.ts";
 import { type FieldSource, mergeField } from "../field/merge.ts";
 import { holdsSeveral, membersOf, type RoleSource } from "./field-members.ts";
@@ -54,8 +55,19 @@ export async function readMembers(
   onProgress: FileProgress = () => undefined,
 ): Promise<FieldsRead> {
   const roles = [...new Set(references.map(({ role }) => role))];
-  const sources: RoleSource[][] = [];
-  for (const role of roles) sources.push(await readRole(role, references, open, onProgress));
+  const sources: RoleSource[] = [];
+  for (const role of roles) sources.push(...(await readRole(role, references, open, onProgress)));
+  return mergeSources(sources);
+}
+
+/**
+ * The fields that files make once they are read, the roles in the order in which they first come.
+ *
+ * @throws InputError where the members of two files or roles are not the same
+ */
+export function mergeSources(all: readonly RoleSource[]): FieldsRead {
+  const roles = [...new Set(all.map(({ grid }) => grid.role))];
+  const sources = roles.map((role) => all.filter(({ grid }) => grid.role === role));
   const numbers = membersOf(sources.flat());
   const shared = sources.map((own, n) =>
     own.some(({ members }) => members !== null) ? null : fieldOf(roles[n] as FieldRole, own, null),
@@ -75,24 +87,34 @@ async function readRole(
   const sources: RoleSource[] = [];
   for (const reference of references) {
     if (reference.role !== role) continue;
-    const { file, columns, member } = reference;
+    const { file, columns } = reference;
     const grid = await readGridFile(() => open(file), {
       file,
       role,
       columns,
       onProgress: (bytes) => onProgress(file, bytes),
     });
-    if (member !== undefined && holdsSeveral(grid))
-      throw new InputError(
-        `members are named by the file's own column or by the plan; found both, "member": ${member} in the plan`,
-        { file },
-      );
-    const named = member === undefined ? null : [member];
-    const members = holdsSeveral(grid) ? (grid.members ?? []).map((each) => each.member) : named;
-    sources.push({ grid, reference, members });
+    sources.push(roleSource(grid, reference));
   }
   if (sources.length === 0) throw new InputError(`the plan names a ${role} file; found none`);
   return sources;
+}
+
+/**
+ * A file as read, with the members that it holds.
+ *
+ * @throws InputError where both its own column and the plan name members
+ */
+export function roleSource(grid: GridFile, reference: FieldReference): RoleSource {
+  const { file, member } = reference;
+  if (member !== undefined && holdsSeveral(grid))
+    throw new InputError(
+      `members are named by the file's own column or by the plan; found both, "member": ${member} in the plan`,
+      { file },
+    );
+  const named = member === undefined ? null : [member];
+  const members = holdsSeveral(grid) ? (grid.members ?? []).map((each) => each.member) : named;
+  return { grid, reference, members };
 }
 
 /** The field of one member, of the files that have it or have no members. */
