@@ -13,6 +13,7 @@ export {
 export {
   densify,
   type EstimateInput,
+  estimateArriving,
   estimatePrepared,
   type Field,
   type FieldInspection,

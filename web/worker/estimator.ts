@@ -1,56 +1,36 @@
 import type { PlanDocument } from "../state/plan-document.ts";
-import {
-  type EstimateInput,
-  estimatePrepared,
-  type Field,
-  fieldsInUse,
-  InputError,
-  type Land,
-  type PreparedRoute,
-  prepareRoute,
-  type ReportInput,
-  type Route,
-  readPlanDocument,
-} from "./core.ts";
-import type { FieldShelf } from "./field-shelf.ts";
-import type { FileShelf } from "./file-shelf.ts";
-import type { LandShelf } from "./land-shelf.ts";
+import { type EstimateAnswer as CoreAnswer, estimatePrepared, InputError, type ReportInput } from "./core.ts";
+import type { PlanRead, PlanReader } from "./plan-reader.ts";
 import type { EstimateAnswer } from "./protocol.ts";
 import { drawRoute } from "./route-drawing.ts";
 
-/** Answers plans, keeping what it prepared for routes that did not change. */
+/** Answers plans. */
 export interface Estimator {
   estimate(plan: PlanDocument): Promise<EstimateAnswer>;
-  /** What the estimate last made can be written from; `null` where there is none. */
-  answered(): ReportInput | null;
+  /** What the estimate last made can be written from, with what the plan wants decided; `null` where there is none. */
+  answered(): Promise<ReportInput | null>;
+  /** The pace of the estimate last made. */
+  pace(): ReportInput["pace"] | null;
 }
 
-export function createEstimator(files: FileShelf, fields: FieldShelf, land: LandShelf): Estimator {
-  const prepare = createPreparation();
-  let last: ReportInput | null = null;
+export function createEstimator(reader: PlanReader): Estimator {
+  let last: { readonly read: PlanRead; readonly answer: CoreAnswer } | null = null;
 
   const answer = async (document: PlanDocument): Promise<EstimateAnswer> => {
-    const plan = await readPlanDocument(document, { open: files.open });
-    const { title, departure, craft, pace, reserve, routes } = plan;
-    const isWater = craft.moves === "water";
-    const input: EstimateInput = {
-      title,
-      departure,
-      craft,
-      pace,
-      reserve,
-      routes,
-      fields: await fields.merged(plan.fields),
-      land: isWater ? land.ready() : null,
-    };
-    const prepared = prepare(routes, fieldsInUse(craft, input.fields), input.land);
-    const { estimate, profiles } = estimatePrepared(prepared, input);
-    last = { estimate, routes, craft, pace };
-    const drawings = prepared.flatMap((route, at) => {
-      const profile = profiles[at];
+    const read = await reader.read(document);
+    const found = await estimateRead(read);
+    last = { read, answer: found };
+    const drawings = read.prepared.flatMap((route, at) => {
+      const profile = found.profiles[at];
       return profile === undefined ? [] : [drawRoute(route, profile)];
     });
-    return { ok: true, estimate, drawings, landPending: isWater && input.land === null };
+    const { craft, land } = read.input;
+    return {
+      ok: true,
+      estimate: found.estimate,
+      drawings,
+      landPending: craft.moves === "water" && land === null,
+    };
   };
 
   return {
@@ -62,31 +42,27 @@ export function createEstimator(files: FileShelf, fields: FieldShelf, land: Land
         throw fault;
       }
     },
-    answered: () => last,
+    async answered() {
+      if (last === null) return null;
+      const { read, answer: found } = last;
+      const { routes, craft, pace } = read.input;
+      return { estimate: await decidedEstimate(read, found), routes, craft, pace };
+    },
+    pace: () => last?.read.input.pace ?? null,
   };
 }
 
-/** Prepares routes; those that are as they were on the same fields and land are not prepared again. */
-function createPreparation(): (
-  routes: readonly Route[],
-  fields: readonly Field[],
-  land: Land | null,
-) => PreparedRoute[] {
-  let kept = new Map<string, PreparedRoute>();
-  let on: { readonly fields: readonly Field[]; readonly land: Land | null } = { fields: [], land: null };
-  return (routes, fields, land) => {
-    const same =
-      land === on.land &&
-      fields.length === on.fields.length &&
-      fields.every((field, at) => field === on.fields[at]);
-    const known: ReadonlyMap<string, PreparedRoute> = same ? kept : new Map();
-    on = { fields, land };
-    kept = new Map();
-    return routes.map((route) => {
-      const key = JSON.stringify(route);
-      const prepared = known.get(key) ?? prepareRoute(route, fields, land);
-      kept.set(key, prepared);
-      return prepared;
-    });
-  };
+/** At the plan's pace, or at the speeds that make the arrival it asks for. What searches is loaded when it is first wanted. */
+async function estimateRead({ plan, input, prepared }: PlanRead): Promise<CoreAnswer> {
+  if (plan.arrive === undefined) return estimatePrepared(prepared, input);
+  const { estimateArriving } = await import("./choose.ts");
+  return estimateArriving(prepared, input, plan.arrive);
+}
+
+async function decidedEstimate(read: PlanRead, answer: CoreAnswer): Promise<ReportInput["estimate"]> {
+  const { plan, members } = read;
+  const wanted = [plan.alternates, plan.whatIfs, plan.errors, members].some((list) => (list ?? []).length > 0);
+  if (!wanted) return answer.estimate;
+  const { decide } = await import("./decide.ts");
+  return decide(read, answer, false).estimate;
 }
