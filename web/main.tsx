@@ -3,6 +3,7 @@ import * as Comlink from "comlink";
 import { render } from "preact";
 import { listenForDrops } from "./files/drop-target.ts";
 import { keepPlan, restorePlan, warnBeforeLoss } from "./keeping/keep-plan.ts";
+import { keepView, restoreView, viewStorage } from "./keeping/keep-view.ts";
 import { offerNewer } from "./offline/NewerVersion.tsx";
 import { keepOffline } from "./offline/newer-version.ts";
 import { App } from "./shell/App.tsx";
@@ -14,10 +15,12 @@ import { EMPTY_PLAN } from "./state/empty-plan.ts";
 import { createPageState } from "./state/page-state.ts";
 import type { Worker as Protocol } from "./worker/protocol.ts";
 
-narrowImages("");
-
 const worker = new Worker(new URL("./worker/worker.ts", import.meta.url), { type: "module" });
 const page = createPageState(EMPTY_PLAN, Comlink.wrap<Protocol>(worker));
+
+restoreView(page.view, viewStorage());
+narrowImages(page.view.tiles.peek());
+keepView(page.view, viewStorage());
 
 effect(() => {
   void page.answers.ask(page.store.plan.value);

@@ -1,6 +1,6 @@
-import { scaleLinear } from "d3-scale";
-import { line } from "d3-shape";
 import type { StillCurve, StillPoint } from "../core.ts";
+import { linearScale } from "../format/linear-scale.ts";
+import { linePath } from "../format/svg-path.ts";
 import { durationText } from "../format/time-text.ts";
 import { inUnit, number, rateUnit, type ShownUnit, shownUnit, storeUnit } from "../format/units.ts";
 import { useWidth } from "../shell/use-width.ts";
@@ -69,18 +69,15 @@ interface PlotProps {
 function Plot({ study, curve, units, width, title, values, unit, of }: PlotProps) {
   const speed = shownUnit(units, "speed");
   const { speed_m_s: speeds, range } = curve;
-  const x = scaleLinear()
-    .domain([0, (speeds.at(-1) ?? 0) / speed.si])
-    .range([LEFT, width - RIGHT]);
-  const y = scaleLinear()
-    .domain([0, heightOf(values, unit)])
-    .range([HEIGHT - BOTTOM, TOP]);
+  const x = linearScale([0, (speeds.at(-1) ?? 1) / speed.si], [LEFT, width - RIGHT]);
+  const y = linearScale([0, heightOf(values, unit)], [HEIGHT - BOTTOM, TOP]);
   const at = (v: number): number => x(v / speed.si);
   const high = (value: number): number => Math.max(y(value / unit.si), TOP);
-  const samples = Array.from(speeds, (_, n) => n);
-  const path = line<number>()
-    .x((n) => at(speeds[n] ?? 0))
-    .y((n) => high(values[n] ?? 0))(samples);
+  const path = linePath(
+    speeds.length,
+    (n) => at(speeds[n] ?? 0),
+    (n) => high(values[n] ?? 0),
+  );
   const floor = HEIGHT - BOTTOM;
   const { point, least, limit } = study;
   return (
@@ -118,7 +115,7 @@ function Plot({ study, curve, units, width, title, values, unit, of }: PlotProps
           through speed, {speed.symbol}
         </text>
         {limit !== null && <path class="plot-limit" d={`M${at(limit)} ${TOP}V${floor}`} />}
-        <path class="plot-curve" d={path ?? ""} />
+        <path class="plot-curve" d={path} />
         {point !== null && <path class="plot-pace" d={`M${at(point.speed_m_s)} ${TOP}V${floor}`} />}
         {least !== null && <circle class="plot-least" cx={at(least.speed_m_s)} cy={high(of(least))} r="5" />}
         {point !== null && (

@@ -1,6 +1,7 @@
 import { ADVISORY, type LegEstimate } from "../core.ts";
 import { durationText } from "../format/time-text.ts";
 import { inUnit, shownUnit, storeUnit } from "../format/units.ts";
+import { Profile } from "../ribbon/Profile.tsx";
 import { Swatch } from "../ribbon/Ribbon.tsx";
 import type { PageState } from "../state/page-state.ts";
 import type { RouteDrawing } from "../worker/protocol.ts";
@@ -26,16 +27,18 @@ export function LegTable({ page }: { readonly page: PageState }) {
   const pointed = view.pointed.value?.route === chosen ? view.pointed.value.distance_m : null;
   const marked = pointed === null || drawing === null ? null : legAt(drawing, pointed);
   return (
-    <section class="pane legs" data-pane="legs" aria-labelledby="legs-title">
+    <section class="pane legs" data-pane="legs" data-part={view.routePart.value} aria-labelledby="legs-title">
       <header class="pane-head">
-        <h2 id="legs-title">Leg table</h2>
+        <h2 id="legs-title">{view.routePart.value === "table" ? "Leg table" : "Profile"}</h2>
         <span class="leg-route">
           <Swatch route={chosen} />
           {route.name}
         </span>
+        <PartChoice page={page} />
       </header>
+      {view.routePart.value === "profile" && <Profile page={page} />}
       {/* biome-ignore lint/a11y/noNoninteractiveTabindex: what scrolls must be reached by keyboard (WCAG 2.1.1) */}
-      <section class="scroll" aria-label={`Legs of ${route.name}`} tabIndex={0}>
+      <section class="scroll leg-part" aria-label={`Legs of ${route.name}`} tabIndex={0}>
         <table class="leg-table">
           <thead>
             <tr>
@@ -61,7 +64,7 @@ export function LegTable({ page }: { readonly page: PageState }) {
           </tbody>
         </table>
       </section>
-      <p class="leg-totals">
+      <p class="leg-totals leg-part">
         {route.name}: {inUnit(route.totals.distance_m, shownUnit(view.units.value, "distance"))}{" "}
         {shownUnit(view.units.value, "distance").symbol}, {durationText(route.totals.time_s)} under way,{" "}
         {inUnit(route.totals.use, storeUnit(route.storeUnit, route.usable))}{" "}
@@ -69,6 +72,27 @@ export function LegTable({ page }: { readonly page: PageState }) {
       </p>
       <p class="advisory only-print">{ADVISORY}</p>
     </section>
+  );
+}
+
+function PartChoice({ page: { view } }: { readonly page: PageState }) {
+  return (
+    <fieldset class="choice">
+      <legend class="unseen">Shown of the chosen route</legend>
+      {(["table", "profile"] as const).map((part) => (
+        <label key={part}>
+          <input
+            type="radio"
+            name="route-part"
+            checked={view.routePart.value === part}
+            onChange={() => {
+              view.routePart.value = part;
+            }}
+          />
+          <span>{part === "table" ? "Table" : "Profile"}</span>
+        </label>
+      ))}
+    </fieldset>
   );
 }
 

@@ -1,5 +1,3 @@
-import { linearScale } from "../format/linear-scale.ts";
-import { durationText } from "../format/time-text.ts";
 import { shownUnit } from "../format/units.ts";
 import { useWidth } from "../shell/use-width.ts";
 import { alongLimit } from "../state/along-scale.ts";
@@ -15,7 +13,8 @@ export function Ribbons({ page }: { readonly page: PageState }) {
   const { view, store, answers } = page;
   const answer = answers.answer.value;
   const axis = view.axis.value;
-  const scale = alongScale(farthest(answer, axis === "time"), width);
+  const end = farthest(answer, axis === "time");
+  const scale = alongScale(end, width);
   const limit = alongLimit(answer, shownUnit(view.units.value, "speed").si);
 
   return (
@@ -45,7 +44,7 @@ export function Ribbons({ page }: { readonly page: PageState }) {
         {store.plan.value.routes.map((_, route) => (
           <Ribbon key={route} page={page} route={route} scale={scale} width={width} limit={limit} />
         ))}
-        <AlongAxis page={page} scale={scale} width={width} />
+        <AlongAxis page={page} scale={scale} end={end} width={width} />
       </div>
     </section>
   );

@@ -5,6 +5,16 @@ export type Theme = "auto" | "light" | "dark";
 export type RibbonAxis = "distance" | "time";
 export type Pane = "chart" | "ribbons" | "ledger" | "route" | "legs";
 
+/** What the pane of the chosen route shows: its leg table or its profile. */
+export type RoutePart = "table" | "profile";
+
+/** Units of the leg table's own, by their symbols; those left out are the preset's. */
+export interface LegUnits {
+  readonly distance?: string;
+  readonly speed?: string;
+  readonly amount?: string;
+}
+
 /** A place on a route that the pointer or the keyboard points at, shown alike on chart, ribbons and table. */
 export interface Pointed {
   readonly route: number;
@@ -32,6 +42,14 @@ export interface PageView {
   readonly adding: Signal<boolean>;
   /** Which field is shaded by speed on the chart. */
   readonly shading: Signal<"none" | "wind" | "current">;
+  /** Height of the fields on the chart, m above the surface; `null` for their lowest level. */
+  readonly level: Signal<number | null>;
+  readonly routePart: Signal<RoutePart>;
+  /** Keys of the leg table's columns that are left out. */
+  readonly hiddenColumns: Signal<readonly string[]>;
+  readonly legUnits: Signal<LegUnits>;
+  /** Whether the hint for a first visit was dismissed. */
+  readonly hintSeen: Signal<boolean>;
   /** The user's own raster tile address with {z}, {x}, {y}; empty for none. */
   readonly tiles: Signal<string>;
   /** What went wrong with something that the user did, in a sentence, until it is dismissed. */
@@ -55,6 +73,11 @@ export function createPageView(): PageView {
     lookAt: signal<{ readonly lat: number; readonly lon: number } | null>(null),
     adding: signal(false),
     shading: signal<"none" | "wind" | "current">("none"),
+    level: signal<number | null>(null),
+    routePart: signal<RoutePart>("table"),
+    hiddenColumns: signal<readonly string[]>([]),
+    legUnits: signal<LegUnits>({}),
+    hintSeen: signal(false),
     tiles: signal(""),
     notice: signal<string | null>(null),
     newer: signal<(() => Promise<void>) | null>(null),
