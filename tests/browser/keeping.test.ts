@@ -1,0 +1,136 @@
+import type { Page } from "playwright-core";
+import { afterAll, beforeAll, expect, test } from "vitest";
+import { builtFiles } from "./built-page.ts";
+import { type PageServer, servePage } from "./serve-page.ts";
+import { openDemo, ready, visit } from "./visit.ts";
+
+let server: PageServer;
+
+beforeAll(async () => {
+  server = await servePage(builtFiles());
+});
+
+afterAll(() => server.close());
+
+test("after a crash the plan comes back with its fields, as it was last changed", async () => {
+  const { page, reopen, expectFault } = await visit();
+  expectFault(/crash/i);
+  await openDemo(page, "Survey drone", "survey");
+  await rename(page, "Mast, second try");
+  const before = await figures(page);
+  await kept(page);
+  const devtools = await page.context().newCDPSession(page);
+  const crashed = page.waitForEvent("crash");
+  // Its answer never comes.
+  void devtools.send("Page.crash").catch(() => undefined);
+  await crashed;
+  const again = await reopen();
+  expect(await titleOf(again)).toBe("Mast, second try");
+  await expect.poll(() => figures(again)).toEqual(before);
+  expect(await again.locator(".plan-item.fields").textContent()).toContain("survey-wind.csv");
+});
+
+test("after a reload the plan is still said not to be in a file", async () => {
+  const { page } = await visit();
+  await rename(page, "Another title");
+  await kept(page);
+  await page.reload();
+  await ready(page);
+  expect(await titleOf(page)).toBe("Another title");
+  expect(await page.locator(".saved-state").textContent()).toContain("not saved");
+});
+
+test("after the first visit the page opens without a network, demos and coast as well", async () => {
+  const { page, context } = await visit({ address: server.address });
+  await installed(page);
+  await rename(page, "Far from anywhere");
+  const before = await figures(page);
+  await kept(page);
+  await context.setOffline(true);
+  await page.reload();
+  await page.locator(".leg-table tbody tr").first().waitFor();
+  expect(await titleOf(page)).toBe("Far from anywhere");
+  await expect.poll(() => figures(page)).toEqual(before);
+  await openDemo(page, "Ocean passage", "ocean");
+  await page.getByRole("button", { name: "Zoom in" }).click();
+});
+
+test("a newer version says so, waits until it is asked for, and loses nothing", async () => {
+  const { page } = await visit({ address: server.address });
+  await installed(page);
+  const served = new Map(server.files);
+  try {
+    newerVersion(server.files);
+    await page.reload();
+    const offer = page.locator(".notice.newer");
+    await offer.waitFor();
+    expect(await offer.textContent()).toContain("newer version");
+    expect(await page.title()).toBe("Legwork");
+    await rename(page, "Half done");
+    await Promise.all([page.waitForEvent("load"), offer.getByRole("button", { name: "Use it now" }).click()]);
+    await expect.poll(() => page.title()).toBe("Legwork, newer");
+    await ready(page);
+    expect(await titleOf(page)).toBe("Half done");
+  } finally {
+    for (const [name, content] of served) server.files.set(name, content);
+  }
+});
+
+/** Another version of the page: another title, and a list of files with another version in it. */
+function newerVersion(files: Map<string, Buffer>): void {
+  const edit = (name: string, from: RegExp, to: string): void => {
+    const text = files.get(name)?.toString("utf8") ?? "";
+    expect(text).toMatch(from);
+    files.set(name, Buffer.from(text.replace(from, to)));
+  };
+  edit("index.html", /<title>Legwork<\/title>/, "<title>Legwork, newer</title>");
+  edit("service-worker.js", /"version":"[0-9a-f]+"/, '"version":"0123456789abcdef"');
+}
+
+/** Waits until the device holds every file of the page and a worker answers for it. */
+async function installed(page: Page): Promise<void> {
+  await page.evaluate(async () => {
+    const { serviceWorker } = navigator;
+    await serviceWorker.ready;
+    if (serviceWorker.controller === null) {
+      await new Promise((resolve) =>
+        serviceWorker.addEventListener("controllerchange", resolve, { once: true }),
+      );
+    }
+  });
+}
+
+/** Waits until the device holds the title that the page shows. */
+async function kept(page: Page): Promise<void> {
+  const title = await titleOf(page);
+  const onDevice = () =>
+    page.evaluate(
+      () =>
+        new Promise<unknown>((resolve, reject) => {
+          const opening = indexedDB.open("legwork");
+          opening.onerror = () => reject(opening.error);
+          opening.onsuccess = () => {
+            const reading = opening.result.transaction("plan").objectStore("plan").get("plan");
+            reading.onsuccess = () => {
+              opening.result.close();
+              resolve(reading.result?.title);
+            };
+          };
+        }),
+    );
+  await expect.poll(onDevice, { timeout: 10_000 }).toBe(title);
+}
+
+async function rename(page: Page, title: string): Promise<void> {
+  const field = page.getByLabel("Title of the plan");
+  await field.fill(title);
+  await field.press("Enter");
+}
+
+function titleOf(page: Page): Promise<string> {
+  return page.getByLabel("Title of the plan").inputValue();
+}
+
+function figures(page: Page): Promise<string[]> {
+  return page.locator(".leg-table td").allInnerTexts();
+}
