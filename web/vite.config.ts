@@ -36,6 +36,9 @@ export default defineConfig({
   root: new URL(".", import.meta.url).pathname,
   base: "./",
   plugins: [contentPolicy(), precache()],
+  resolve: {
+    alias: [{ find: /^leaflet$/, replacement: new URL("chart/leaflet-parts.mjs", import.meta.url).pathname }],
+  },
   worker: { format: "es" },
   build: {
     outDir: new URL("../dist/page", import.meta.url).pathname,

@@ -1,4 +1,4 @@
-import { type CoastIndex, indexCoast } from "./coast-index.ts";
+import type { CoastIndex } from "./coast-index.ts";
 import type { CoastDetail, CoastTile } from "./protocol.ts";
 
 /** The two coastlines, each fetched and indexed once, when first asked for. */
@@ -15,7 +15,10 @@ export function createCoastShelf(fetchCoast: (detail: CoastDetail) => Promise<un
   const load = (detail: CoastDetail): Promise<CoastIndex> => {
     const begun = loading.get(detail);
     if (begun !== undefined) return begun;
-    const index = fetchCoast(detail).then((topology) => indexCoast(topology, detail));
+    // What cuts tiles travels with the coast: it is of no use before.
+    const index = Promise.all([fetchCoast(detail), import("./coast-index.ts")]).then(
+      ([topology, { indexCoast }]) => indexCoast(topology, detail),
+    );
     loading.set(detail, index);
     index.then(
       (ready) => {

@@ -1,5 +1,6 @@
 import type { FieldDocument } from "../state/plan-document.ts";
-import { InputError, inspectField } from "./core.ts";
+import { InputError } from "./core.ts";
+import { inspectField } from "./field-reading.ts";
 import { pieces } from "./file-shelf.ts";
 import type { FieldPreview } from "./protocol.ts";
 

@@ -5,9 +5,7 @@ import {
   type FieldReference,
   type GridFile,
   InputError,
-  inspectGrid,
   mergeField,
-  readGridFile,
 } from "./core.ts";
 import type { FileShelf } from "./file-shelf.ts";
 import type { FieldAnswer, FieldProgress } from "./protocol.ts";
@@ -49,7 +47,9 @@ export function createFieldShelf(files: FileShelf): FieldShelf {
     const key = JSON.stringify([role, file, columns]);
     const known = grids.get(key);
     if (known !== undefined) return known.grid;
-    const read = readGridFile(() => files.open(file), { file, role, columns, onProgress });
+    const read = import("./field-reading.ts").then(({ readGridFile }) =>
+      readGridFile(() => files.open(file), { file, role, columns, onProgress }),
+    );
     grids.set(key, { file, grid: read });
     // What failed is not kept: the file may be given again.
     read.catch(() => grids.delete(key));
@@ -64,7 +64,7 @@ export function createFieldShelf(files: FileShelf): FieldShelf {
           if (cancelled.has(ticket)) throw new Cancelled();
           progress({ readBytes, totalBytes });
         });
-        return { ok: true, inspection: inspectionOf(read) };
+        return { ok: true, inspection: await inspectionOf(read) };
       } catch (fault) {
         if (fault instanceof Cancelled) return { ok: false, fault: `${file} was not read`, cancelled: true };
         if (fault instanceof InputError) return { ok: false, fault: fault.message, cancelled: false };
@@ -106,9 +106,10 @@ export function createFieldShelf(files: FileShelf): FieldShelf {
 const inspections = new WeakMap<GridFile, FieldInspection>();
 
 /** Made once, before a gap policy fills the grid. */
-function inspectionOf(grid: GridFile): FieldInspection {
+async function inspectionOf(grid: GridFile): Promise<FieldInspection> {
   const known = inspections.get(grid);
   if (known !== undefined) return known;
+  const { inspectGrid } = await import("./field-reading.ts");
   const made = inspectGrid(grid);
   inspections.set(grid, made);
   return made;

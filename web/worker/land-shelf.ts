@@ -1,4 +1,4 @@
-import { type Land, type LandTopology, prepareLand } from "./core.ts";
+import type { Land, LandTopology } from "./core.ts";
 
 /** The fine coast as land to hold routes against, made when first asked for. */
 export interface LandShelf {
@@ -12,8 +12,8 @@ export function createLandShelf(topology: () => Promise<LandTopology>): LandShel
   return {
     ready: () => land,
     load() {
-      loading ??= topology().then(
-        (found) => {
+      loading ??= Promise.all([topology(), import("./land.ts")]).then(
+        ([found, { prepareLand }]) => {
           land = prepareLand(found);
         },
         (fault: unknown) => {

@@ -6,7 +6,6 @@ import type { LandTopology } from "./core.ts";
 import { serializeCraft, serializePlan } from "./core.ts";
 import { studyCraft } from "./craft-study.ts";
 import { createEstimator } from "./estimator.ts";
-import { previewField } from "./field-preview.ts";
 import { createFieldShelf } from "./field-shelf.ts";
 import { createFileShelf } from "./file-shelf.ts";
 import { createLandShelf } from "./land-shelf.ts";
@@ -36,7 +35,10 @@ const worker: Worker = {
   },
   openField: (ticket, field, progress) => fields.open(ticket, field, progress),
   cancel: (ticket) => fields.cancel(ticket),
-  preview: previewField,
+  async preview(content, field) {
+    const { previewField } = await import("./field-preview.ts");
+    return previewField(content, field);
+  },
   estimate: async (plan) => handEstimate(await estimator.estimate(plan)),
   async report(question) {
     const input = estimator.answered();
