@@ -19,16 +19,17 @@ export {
   type MemberRun,
   memberRun,
 } from "./choose/ensemble.ts";
-export { type ErrorSpread, errorSpread, type LegSpread, type SpreadAnswer } from "./choose/error-spread.ts";
+export { type ErrorSpread, errorSpread, type SpreadAnswer } from "./choose/error-spread.ts";
 export type { ForecastError } from "./choose/forecast-error.ts";
 export { type InTime, latestInTime, type RouteInTime } from "./choose/in-time.ts";
 export { type LatestDeparture, latestDeparture } from "./choose/latest-departure.ts";
+export type { LegSpread } from "./choose/leg-spreads.ts";
 export { erfc, normalProbability } from "./choose/normal-distribution.ts";
 export { fastestWithReserve, leastUseSpeed, type PaceCurve, paceCurve } from "./choose/pace-curve.ts";
 export { type Quantiles, quantiles } from "./choose/quantiles.ts";
 export { type RefinedWindow, refineWindow } from "./choose/refine.ts";
-export type { SensitivityProfile, WeakPlace } from "./choose/sensitivity-profile.ts";
 export { type RoutePaces, routePaces } from "./choose/route-paces.ts";
+export type { SensitivityProfile, WeakPlace } from "./choose/sensitivity-profile.ts";
 export { type SpeedRange, speedRange } from "./choose/speed-range.ts";
 export type { PacelessConditions } from "./choose/speed-trials.ts";
 export { turnBack } from "./choose/turn-back.ts";

@@ -19,8 +19,8 @@ import type { Sensitivities } from "./sensitivity.ts";
 
 /** Mean radius (2a + b)/3, m. */
 const MEAN_RADIUS = WGS84_A * (1 - WGS84_F / 3);
-/** Beyond so many correlation lengths nothing is left (4e-18). */
-const NEGLIGIBLE = 40;
+/** Beyond so many correlation lengths nothing that counts is left (2e-9). */
+const NEGLIGIBLE = 20;
 
 /** Covariances of time with time, time with use, and use with use. */
 export interface Covariance {
@@ -76,54 +76,75 @@ function placesOf(cells: readonly TrackCell[]): Float64Array {
 
 function addError(
   sums: ErrorCovariance,
-  { cells, timeEastNorth: time, useEastNorth: use }: Sensitivities,
+  found: Sensitivities,
   places: Float64Array,
   { speed_m_s, length_m, time_s }: ForecastError,
   pair: number,
 ): void {
-  const sizes = cells.map(({ from, to, duration }) => (to - from) / length_m + duration / time_s);
+  const { cells } = found;
+  const sizes = Float64Array.from(
+    cells,
+    ({ from, to, duration }) => (to - from) / length_m + duration / time_s,
+  );
   const spreads = sizes.map((h) => (h < 1e-4 ? 1 : Math.sinh(h / 2) / (h / 2)));
+  const ages = Float64Array.from(cells, ({ time }) => time / time_s);
   const variance = speed_m_s * speed_m_s;
-  const dot = (a: Float64Array, i: number, b: Float64Array, j: number): number => {
-    const p = i * COMPONENTS + pair;
-    const q = j * COMPONENTS + pair;
-    return (a[p] as number) * (b[q] as number) + (a[p + 1] as number) * (b[q + 1] as number);
-  };
-  for (const [i, cell] of cells.entries()) {
-    const { own, before } = sums.legs[cell.leg - 1] as LegCovariance;
-    for (let j = 0; j <= i; j += 1) {
-      const other = cells[j] as TrackCell;
-      const apart =
-        i === j ? 0 : separation(places, i, j) / length_m + Math.abs(cell.time - other.time) / time_s;
+  for (let i = 0; i < cells.length; i += 1) {
+    addCells(sums, found, i, i, pair, variance * selfMean(sizes[i] as number));
+    for (let j = 0; j < i; j += 1) {
+      const late = (ages[i] as number) - (ages[j] as number);
+      if (late > NEGLIGIBLE) continue;
+      const apart = separation(places, i, j) / length_m + late;
       if (apart > NEGLIGIBLE) continue;
-      const covariance =
-        variance *
-        (i === j
-          ? selfMean(sizes[i] as number)
-          : Math.exp(-apart) * (spreads[i] as number) * (spreads[j] as number));
-      const tt = covariance * dot(time, j, time, i);
-      const uu = covariance * dot(use, j, use, i);
-      const tu = covariance * dot(time, j, use, i);
-      const ut = covariance * dot(use, j, time, i);
-      sums.timePart[i] = (sums.timePart[i] as number) + tt;
-      sums.usePart[i] = (sums.usePart[i] as number) + uu;
-      if (i !== j) {
-        sums.timePart[j] = (sums.timePart[j] as number) + tt;
-        sums.usePart[j] = (sums.usePart[j] as number) + uu;
-      }
-      if (other.leg !== cell.leg) {
-        before.tt += tt;
-        before.uu += uu;
-        before.tu += tu;
-        before.ut += ut;
-      } else {
-        const times = i === j ? 1 : 2;
-        own.tt += times * tt;
-        own.uu += times * uu;
-        own.tu += i === j ? tu : tu + ut;
-      }
+      const correlation = Math.exp(-apart) * (spreads[i] as number) * (spreads[j] as number);
+      addCells(sums, found, j, i, pair, variance * correlation);
     }
   }
+}
+
+/** Adds what two cells, j not after i, have in common, given the covariance of a component between them. */
+function addCells(
+  sums: ErrorCovariance,
+  { cells, timeEastNorth: time, useEastNorth: use }: Sensitivities,
+  j: number,
+  i: number,
+  pair: number,
+  covariance: number,
+): void {
+  const tt = covariance * product(time, j, time, i, pair);
+  const uu = covariance * product(use, j, use, i, pair);
+  const tu = covariance * product(time, j, use, i, pair);
+  const ut = covariance * product(use, j, time, i, pair);
+  addAt(sums.timePart, i, tt);
+  addAt(sums.usePart, i, uu);
+  if (i !== j) {
+    addAt(sums.timePart, j, tt);
+    addAt(sums.usePart, j, uu);
+  }
+  const leg = (cells[i] as TrackCell).leg;
+  const { own, before } = sums.legs[leg - 1] as LegCovariance;
+  if ((cells[j] as TrackCell).leg !== leg) {
+    before.tt += tt;
+    before.uu += uu;
+    before.tu += tu;
+    before.ut += ut;
+  } else {
+    const times = i === j ? 1 : 2;
+    own.tt += times * tt;
+    own.uu += times * uu;
+    own.tu += i === j ? tu : tu + ut;
+  }
+}
+
+function addAt(list: Float64Array, index: number, part: number): void {
+  list[index] = (list[index] as number) + part;
+}
+
+/** Product of two cells' sensitivities, summed over both components. */
+function product(a: Float64Array, i: number, b: Float64Array, j: number, pair: number): number {
+  const p = i * COMPONENTS + pair;
+  const q = j * COMPONENTS + pair;
+  return (a[p] as number) * (b[q] as number) + (a[p + 1] as number) * (b[q + 1] as number);
 }
 
 /** Mean of exp(-|x - x'|) over a cell of length h. */

@@ -3,11 +3,11 @@ import type { Conditions } from "../estimate/conditions.ts";
 import type { RouteRun } from "../estimate/estimate-route.ts";
 import { mediumRole, type PreparedRoute } from "../estimate/prepare.ts";
 import type { RouteEstimate } from "../estimate/result.ts";
-import type { Covariance, ErrorCovariance } from "./error-covariance.ts";
-import { errorCovariance } from "./error-covariance.ts";
+import { type ErrorCovariance, errorCovariance } from "./error-covariance.ts";
 import type { ForecastError } from "./forecast-error.ts";
+import { type LegSpread, legSpreads } from "./leg-spreads.ts";
 import { normalProbability } from "./normal-distribution.ts";
-import { type DelayWeights, type Sensitivities, sensitivities } from "./sensitivity.ts";
+import { type Sensitivities, sensitivities } from "./sensitivity.ts";
 import {
   type SensitivityProfile,
   sensitivityProfile,
@@ -15,17 +15,6 @@ import {
   weakestPlace,
 } from "./sensitivity-profile.ts";
 import { trackCells } from "./track-cells.ts";
-
-/** Standard deviations of a leg's figures under the forecast's stated error: s, and store units. */
-export interface LegSpread {
-  readonly leg: number;
-  /** Of the time under way and of the use on the leg. */
-  readonly time_s: number;
-  readonly use: number;
-  /** Of the arrival at its waypoint, and of what is left after it. */
-  readonly arrival_s: number;
-  readonly remaining: number;
-}
 
 /** Standard deviations of a route's figures under the forecast's stated error, to first order. */
 export interface ErrorSpread {
@@ -117,31 +106,7 @@ function spreadOf(
   errors: readonly ForecastError[],
   reserve: Reserve | null,
 ): ErrorSpread {
-  const legs: LegSpread[] = [];
-  const sum: Covariance = { tt: 0, tu: 0, uu: 0 };
-  let before: DelayWeights = { time: 1, use: 0 };
-  let margin = 0;
-  for (const [index, { own, before: mixed }] of covariance.legs.entries()) {
-    const end = found.delayAtLegEnd[index] as DelayWeights;
-    const blocks: Blocks = { sum: { ...sum }, own, mixed };
-    // What acts on the leg alone: the parts of the time and the use up to its end less those up to its start.
-    const time = { bt: 1 / end.time - 1 / before.time, bu: 0, ot: 1 / end.time, ou: 0 };
-    const use = { bt: before.use / before.time - end.use / end.time, bu: 0, ot: -end.use / end.time, ou: 1 };
-    const arrival = { bt: 1 / end.time, bu: 0, ot: 1 / end.time, ou: 0 };
-    const spent = { bt: -end.use / end.time, bu: 1, ot: -end.use / end.time, ou: 1 };
-    legs.push({
-      leg: index + 1,
-      time_s: deviation(blocks, time),
-      use: deviation(blocks, use),
-      arrival_s: deviation(blocks, arrival),
-      remaining: deviation(blocks, spent),
-    });
-    margin = deviation(blocks, marginWeights(estimate, reserve, time, use, spent));
-    sum.tt += 2 * mixed.tt + own.tt;
-    sum.uu += 2 * mixed.uu + own.uu;
-    sum.tu += mixed.tu + mixed.ut + own.tu;
-    before = end;
-  }
+  const { legs, margin } = legSpreads(estimate, found, covariance, reserve);
   const last = legs[legs.length - 1] as LegSpread;
   const left = (estimate.totals.remaining as number) - (estimate.reserve as number);
   return {
@@ -161,47 +126,4 @@ function spreadOf(
 function probability(margin: number, deviation: number): number {
   if (deviation === 0) return margin >= 0 ? 1 : 0;
   return normalProbability(margin / deviation);
-}
-
-/** Weights of time and use on the legs before (b) and on the leg itself (o). */
-interface Weights {
-  readonly bt: number;
-  readonly bu: number;
-  readonly ot: number;
-  readonly ou: number;
-}
-
-interface Blocks {
-  /** Among the legs before, between them and the leg, and within the leg. */
-  readonly sum: Covariance;
-  readonly mixed: ErrorCovariance["legs"][number]["before"];
-  readonly own: Covariance;
-}
-
-/**
- * What is left above the reserve, on the last leg. A reserve of a time R at the leg's rate u/t moves by R (δu/t - u δt/t²); a
- * stay at the last waypoint counts with the leg here.
- */
-function marginWeights(
-  estimate: RouteEstimate,
-  reserve: Reserve | null,
-  time: Weights,
-  use: Weights,
-  spent: Weights,
-): Weights {
-  const last = estimate.legs[estimate.legs.length - 1];
-  if (reserve?.kind !== "time" || !last?.time_s) return spent;
-  const perUse = reserve.time_s / last.time_s;
-  const perTime = -(estimate.reserve as number) / last.time_s;
-  const weight = (key: keyof Weights) => spent[key] + perUse * use[key] + perTime * time[key];
-  return { bt: weight("bt"), bu: weight("bu"), ot: weight("ot"), ou: weight("ou") };
-}
-
-/** Standard deviation of bt T + bu U over the legs before plus ot T + ou U on the leg. */
-function deviation({ sum, mixed, own }: Blocks, { bt, bu, ot, ou }: Weights): number {
-  const before = bt * bt * sum.tt + 2 * bt * bu * sum.tu + bu * bu * sum.uu;
-  const between = bt * ot * mixed.tt + bt * ou * mixed.tu + bu * ot * mixed.ut + bu * ou * mixed.uu;
-  const here = ot * ot * own.tt + 2 * ot * ou * own.tu + ou * ou * own.uu;
-  // Rounding may leave a variance of nothing a hair below 0.
-  return Math.sqrt(Math.max(0, before + 2 * between + here));
 }

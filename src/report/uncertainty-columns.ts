@@ -1,6 +1,6 @@
 import type { DecidedRoute } from "../choose/decided.ts";
 import type { EnsembleLeg } from "../choose/ensemble.ts";
-import type { LegSpread } from "../choose/error-spread.ts";
+import type { LegSpread } from "../choose/leg-spreads.ts";
 import type { Quantiles } from "../choose/quantiles.ts";
 import { plainText } from "./plain-text.ts";
 

@@ -1,5 +1,6 @@
-import type { ErrorSpread, LegSpread } from "../choose/error-spread.ts";
+import type { ErrorSpread } from "../choose/error-spread.ts";
 import type { ForecastError } from "../choose/forecast-error.ts";
+import type { LegSpread } from "../choose/leg-spreads.ts";
 import type { WeakPlace } from "../choose/sensitivity-profile.ts";
 import type { WhatIfResult } from "../choose/what-if-results.ts";
 
