@@ -13,7 +13,11 @@ const axis = (from: number, to: number) =>
   fc.array(fc.double({ min: 0.2, max: 1, noNaN: true }), { minLength: 2, maxLength: 8 }).map((steps) => {
     const whole = steps.reduce((sum, step) => sum + step, 0);
     let at = 0;
-    return [from, ...steps.map((step) => from + ((to - from) * (at += step)) / whole)];
+    const nodes = steps.map((step) => {
+      at += step;
+      return from + ((to - from) * at) / whole;
+    });
+    return [from, ...nodes];
   });
 
 const wave = fc.record({

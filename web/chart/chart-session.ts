@@ -288,7 +288,8 @@ function onceAtATime(run: () => Promise<void>): () => void {
   let running: Promise<void> | null = null;
   return () => {
     // After a failure the next zoom tries again; after success there is nothing left to do.
-    running ??= run().catch(() => {
+    if (running !== null) return;
+    running = run().catch(() => {
       running = null;
     });
   };

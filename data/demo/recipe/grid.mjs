@@ -17,7 +17,8 @@ export const DEGREE_KM = EARTH_RADIUS_KM * RAD;
  * @param {number} step
  * @param {number} count
  */
-export const axis = (first, step, count) => Array.from({ length: count }, (_, i) => round(first + i * step, 6));
+export const axis = (first, step, count) =>
+  Array.from({ length: count }, (_, i) => round(first + i * step, 6));
 
 /** @param {number} value @param {number} decimals */
 export const round = (value, decimals) => Math.round(value * 10 ** decimals) / 10 ** decimals;

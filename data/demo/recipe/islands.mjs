@@ -3,7 +3,18 @@
  *
  * The islands are invented and lie in open ocean, so that no real coast is near. x is km east, y km north of ORIGIN.
  */
-import { axis, csv, fixed, isoMinutes, isoSeconds, notesFor, planeAbout, polarFrom, RAD, velocityFromStream } from "./grid.mjs";
+import {
+  axis,
+  csv,
+  fixed,
+  isoMinutes,
+  isoSeconds,
+  notesFor,
+  planeAbout,
+  polarFrom,
+  RAD,
+  velocityFromStream,
+} from "./grid.mjs";
 import { smoothRandom } from "./seeded.mjs";
 
 const ORIGIN = { lat: 53.55, lon: -13.6 };
@@ -68,12 +79,21 @@ function roundIslands(open) {
  * 2014, chapter 6). The stream is strongest in the shallows about the islands and weaker to seaward.
  */
 const M2_HOURS = 12.42;
-const TIDE = { peak: 0.86, seaward: 0.26, width: 9, minorShare: 0.3, axisTurn: -6, southGoingPeak: Date.UTC(2027, 4, 4, 12, 15) };
+const TIDE = {
+  peak: 0.86,
+  seaward: 0.26,
+  width: 9,
+  minorShare: 0.3,
+  axisTurn: -6,
+  southGoingPeak: Date.UTC(2027, 4, 4, 12, 15),
+};
 
 /** ψ of the stream along the major axis at its peak toward the north, km·m/s. @param {number} x @param {number} y */
 function majorStream(x, y) {
   const across = x * Math.cos(TIDE.axisTurn * RAD) + y * Math.sin(TIDE.axisTurn * RAD);
-  return TIDE.peak * (TIDE.seaward * across + (1 - TIDE.seaward) * TIDE.width * Math.tanh(across / TIDE.width));
+  return (
+    TIDE.peak * (TIDE.seaward * across + (1 - TIDE.seaward) * TIDE.width * Math.tanh(across / TIDE.width))
+  );
 }
 
 /** ψ of the stream along the minor axis at its peak toward the east. @param {number} x @param {number} y */
@@ -121,8 +141,16 @@ export function islandsCurrent(seed) {
       }
     }
   }
-  const notes = [...notesFor("Tidal stream among invented islands; components in m/s, the way the water moves; empty cells are land.")];
-  return csv(notes, ["time", "latitude", "longitude", "eastward_sea_water_velocity", "northward_sea_water_velocity"], rows);
+  const notes = [
+    ...notesFor(
+      "Tidal stream among invented islands; components in m/s, the way the water moves; empty cells are land.",
+    ),
+  ];
+  return csv(
+    notes,
+    ["time", "latitude", "longitude", "eastward_sea_water_velocity", "northward_sea_water_velocity"],
+    rows,
+  );
 }
 
 /**
@@ -130,7 +158,14 @@ export function islandsCurrent(seed) {
  * Earth's rotation f: dW/dt + (k + i f) W = F₀ (m + (1 - m) cos Ω(t - t₀)), W = u + i v (Haurwitz, J. Meteorology 4, 1947, 1-8);
  * the mean share m stands for the day's heating being stronger than the night's cooling. It blows onshore in the afternoon and veers.
  */
-const BREEZE = { force: 2.3e-3, mean: 0.3, friction: 0.9e-4, forcePeak: Date.UTC(2027, 4, 4, 14, 30), reach: 45, coast: 30 };
+const BREEZE = {
+  force: 2.3e-3,
+  mean: 0.3,
+  friction: 0.9e-4,
+  forcePeak: Date.UTC(2027, 4, 4, 14, 30),
+  reach: 45,
+  coast: 30,
+};
 const DAY_RATE = (2 * Math.PI) / 86400;
 const CORIOLIS = 2 * 7.2921e-5 * Math.sin(ORIGIN.lat * RAD);
 
@@ -168,22 +203,45 @@ export function islandsWind(seed) {
     const breeze = breezeAt(time);
     for (const lat of WIND_AXES.lat) {
       for (const lon of WIND_AXES.lon) {
-        const { x, y } = plane(lat, lon - 360);
+        const { x } = plane(lat, lon - 360);
         const share = Math.exp((x - BREEZE.coast) / BREEZE.reach);
         const drift = ((time - BREEZE.forcePeak) / 3600e3) * 6;
-        const eddy = velocityFromStream((p, l) => ripple(plane(p, l - 360).x - drift, plane(p, l - 360).y), { lat, lon, dLat: 0.05, dLon: 0.1 });
+        const eddy = velocityFromStream((p, l) => ripple(plane(p, l - 360).x - drift, plane(p, l - 360).y), {
+          lat,
+          lon,
+          dLat: 0.05,
+          dLon: 0.1,
+        });
         const { speed, from } = polarFrom({
           u: BACKGROUND.u + share * breeze.u + eddy.u,
           v: BACKGROUND.v + share * breeze.v + eddy.v,
         });
         // Gust factor over the sea by day: common practice.
         const gust = 1.32 * speed + 0.4;
-        rows.push([isoSeconds(time), fixed(lat, 2), fixed(lon, 1), fixed(speed / KNOT, 1), fixed(from, 0), fixed(gust / KNOT, 1)]);
+        rows.push([
+          isoSeconds(time),
+          fixed(lat, 2),
+          fixed(lon, 1),
+          fixed(speed / KNOT, 1),
+          fixed(from, 0),
+          fixed(gust / KNOT, 1),
+        ]);
       }
     }
   }
-  const header = ["time", "lat", "lon", "wind_speed [kn]", "wind_from_direction [deg]", "wind_speed_of_gust [kn]"];
-  return csv(notesFor("Sea breeze over invented islands at 10 m; knots, and degrees that the wind blows from."), header, rows);
+  const header = [
+    "time",
+    "lat",
+    "lon",
+    "wind_speed [kn]",
+    "wind_from_direction [deg]",
+    "wind_speed_of_gust [kn]",
+  ];
+  return csv(
+    notesFor("Sea breeze over invented islands at 10 m; knots, and degrees that the wind blows from."),
+    header,
+    rows,
+  );
 }
 
 /** A boat of 14 t; the reasoning behind each figure is in data/README.md. */
@@ -208,7 +266,13 @@ export const WORKBOAT = {
   speeds: { min: "4 kn", max: "9.5 kn" },
   hotel: "1.2 kW",
   store: { capacity: "120 kWh", usable: "85 %" },
-  limits: { wind: "14 m/s", gust: "18 m/s", groundSpeed: "3 kn", opposedWind: "6 m/s", opposedCurrent: "0.5 m/s" },
+  limits: {
+    wind: "14 m/s",
+    gust: "18 m/s",
+    groundSpeed: "3 kn",
+    opposedWind: "6 m/s",
+    opposedCurrent: "0.5 m/s",
+  },
 };
 
 /** Position of plane coordinates, to 4 decimals. @param {number} x @param {number} y */
@@ -234,16 +298,32 @@ export const ISLANDS_PLAN = {
   routes: [
     {
       name: "Sound",
-      waypoints: [PIER, { name: "Sound south", ...at(-0.6, -9) }, { name: "Sound north", ...at(-0.2, 9.5) }, LIGHT],
+      waypoints: [
+        PIER,
+        { name: "Sound south", ...at(-0.6, -9) },
+        { name: "Sound north", ...at(-0.2, 9.5) },
+        LIGHT,
+      ],
     },
     {
       name: "West about",
-      waypoints: [PIER, { name: "Vessay foot", ...at(-10.6, -8) }, { name: "Vessay head", ...at(-11.2, 5.5) }, LIGHT],
+      waypoints: [
+        PIER,
+        { name: "Vessay foot", ...at(-10.6, -8) },
+        { name: "Vessay head", ...at(-11.2, 5.5) },
+        LIGHT,
+      ],
     },
     {
       name: "East about",
       path: "rhumb",
-      waypoints: [PIER, { name: "Orrin foot", ...at(8, -10) }, { name: "Orrin east", ...at(11, 0.5) }, { name: "Orrin head", ...at(8, 12) }, LIGHT],
+      waypoints: [
+        PIER,
+        { name: "Orrin foot", ...at(8, -10) },
+        { name: "Orrin east", ...at(11, 0.5) },
+        { name: "Orrin head", ...at(8, 12) },
+        LIGHT,
+      ],
     },
   ],
 };

@@ -11,11 +11,23 @@ const plane = planeAbout(ORIGIN.lat, ORIGIN.lon);
  * The jet: ψ = -U λ tanh((y - y_c(x)) / (λ / cos α)), α the slope of its axis y_c (Bower, J. Phys. Oceanography 21, 1991,
  * 173-180, eq. 1). It runs east, meanders, and weakens and widens as it goes. km and m/s.
  */
-const JET = { speed: 1.75, halfWidth: 62, widening: 0.022, spread: 4200, meander: 75, wavelength: 1050, meanderReach: 2600, rise: 0.03 };
+const JET = {
+  speed: 1.75,
+  halfWidth: 62,
+  widening: 0.022,
+  spread: 4200,
+  meander: 75,
+  wavelength: 1050,
+  meanderReach: 2600,
+  rise: 0.03,
+};
 
 /** @param {number} x km */
 function jetAxis(x) {
-  return JET.rise * x + JET.meander * Math.exp(-x / JET.meanderReach) * Math.sin((2 * Math.PI * x) / JET.wavelength - 0.6);
+  return (
+    JET.rise * x +
+    JET.meander * Math.exp(-x / JET.meanderReach) * Math.sin((2 * Math.PI * x) / JET.wavelength - 0.6)
+  );
 }
 
 /** @param {number} seed @returns {(lat: number, lon: number) => number} ψ in km·m/s, lon in 0..360 */
@@ -42,7 +54,8 @@ export function oceanCurrent(seed) {
       rows.push([`${lat}`, `${lon > 180 ? lon - 360 : lon}`, fixed(u, 3), fixed(v, 3)]);
     }
   }
-  const what = "Mean current of an invented ocean week; components in m/s, the way the water moves; steady, north to south.";
+  const what =
+    "Mean current of an invented ocean week; components in m/s, the way the water moves; steady, north to south.";
   return csv(notesFor(what), ["latitude", "longitude", "u [m/s]", "v [m/s]"], rows);
 }
 
@@ -51,7 +64,17 @@ export function oceanCurrent(seed) {
  * Introduction to Dynamic Meteorology, 2013, section 3.2.5); friction slows it at the surface and turns it inward, across
  * the isobars toward the centre.
  */
-const LOW = { deficit: 2800, radius: 400, deepening: 0.1, surfaceShare: 0.72, inflow: 18, lat: 36.9, lon: 149, east: 9.3, north: 0.5 };
+const LOW = {
+  deficit: 2800,
+  radius: 400,
+  deepening: 0.1,
+  surfaceShare: 0.72,
+  inflow: 18,
+  lat: 36.9,
+  lon: 149,
+  east: 9.3,
+  north: 0.5,
+};
 const AIR_DENSITY = 1.22;
 const START = Date.UTC(2027, 10, 3, 0);
 
@@ -66,11 +89,12 @@ function lowCentre(hours) {
 function lowWind(lat, lon, hours) {
   const centre = lowCentre(hours);
   const { x, y } = planeAbout((lat + centre.lat) / 2, centre.lon)(lat, lon);
-  const north = y + (((lat + centre.lat) / 2 - centre.lat) * 111.195);
+  const north = y + ((lat + centre.lat) / 2 - centre.lat) * 111.195;
   const r = Math.max(Math.hypot(x, north), 1);
   // The low deepens for three days, then fills.
   const depth = LOW.deficit * (1 - LOW.deepening * ((hours - 72) / 48) ** 2);
-  const gradient = ((Math.max(depth, 0) * r) / LOW.radius ** 2) * Math.exp(-0.5 * (r / LOW.radius) ** 2) / 1000; // Pa/m
+  const gradient =
+    (((Math.max(depth, 0) * r) / LOW.radius ** 2) * Math.exp(-0.5 * (r / LOW.radius) ** 2)) / 1000; // Pa/m
   const f = 2 * 7.2921e-5 * Math.sin(lat * RAD);
   const half = (f * r * 1000) / 2;
   const speed = LOW.surfaceShare * (Math.sqrt(half ** 2 + (r * 1000 * gradient) / AIR_DENSITY) - half);
@@ -93,17 +117,25 @@ export function oceanWind(seed, { from, to }) {
   const weather = smoothRandom(seed + 4, { shortest: 1200, longest: 3000, slope: 1.6 });
   const rows = [];
   for (let hours = from; hours <= to; hours += 6) {
-    const psi = (/** @type {number} */ lat, /** @type {number} */ lon) => weather(plane(lat, lon).x - 25 * hours, plane(lat, lon).y);
+    const psi = (/** @type {number} */ lat, /** @type {number} */ lon) =>
+      weather(plane(lat, lon).x - 25 * hours, plane(lat, lon).y);
     for (const lat of WIND_AXES.lat) {
       for (const lon of WIND_AXES.lon) {
         const low = lowWind(lat, lon, hours);
         const other = velocityFromStream(psi, { lat, lon, dLat: 1.5, dLon: 1.5 });
         const u = westerlies(lat) + low.u + other.u;
-        rows.push([isoSeconds(START + hours * 3600e3), `${lat}`, `${lon}`, fixed(u, 2), fixed(low.v + other.v, 2)]);
+        rows.push([
+          isoSeconds(START + hours * 3600e3),
+          `${lat}`,
+          `${lon}`,
+          fixed(u, 2),
+          fixed(low.v + other.v, 2),
+        ]);
       }
     }
   }
-  const what = "Wind of an invented ocean week at 10 m, with a travelling low; components in m/s, the way the air moves.";
+  const what =
+    "Wind of an invented ocean week at 10 m, with a travelling low; components in m/s, the way the air moves.";
   return csv(notesFor(what), ["time", "lat", "lon", "eastward_wind", "northward_wind"], rows);
 }
 

@@ -32,7 +32,12 @@ export function smoothRandom(seed, { shortest, longest, slope, waves = 12 }) {
     const k = (2 * Math.PI) / (shortest * (longest / shortest) ** next());
     const phase = 2 * Math.PI * next();
     // A wave a·sin(k·x) has the mean square slope a²k²/2.
-    return { kx: k * Math.cos(direction), ky: k * Math.sin(direction), phase, a: (slope / k) * Math.sqrt(2 / waves) };
+    return {
+      kx: k * Math.cos(direction),
+      ky: k * Math.sin(direction),
+      phase,
+      a: (slope / k) * Math.sqrt(2 / waves),
+    };
   });
   return (x, y) => terms.reduce((sum, w) => sum + w.a * Math.sin(w.kx * x + w.ky * y + w.phase), 0);
 }

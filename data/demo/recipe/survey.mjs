@@ -1,7 +1,17 @@
 /**
  * Scenario 2: a survey drone over a dry plain of the southern hemisphere, wind on three heights, out and back.
  */
-import { axis, csv, fixed, isoSeconds, notesFor, planeAbout, polarFrom, RAD, velocityFromStream } from "./grid.mjs";
+import {
+  axis,
+  csv,
+  fixed,
+  isoSeconds,
+  notesFor,
+  planeAbout,
+  polarFrom,
+  RAD,
+  velocityFromStream,
+} from "./grid.mjs";
 import { smoothRandom } from "./seeded.mjs";
 
 const HOME = { lat: -28.62, lon: 134.3 };
@@ -25,7 +35,8 @@ const AXES = {
 /** @param {number} height m @param {number} hours since the first time @returns {{ u: number, v: number }} */
 function meanWind(height, hours) {
   const speed =
-    ((RISE.start + RISE.perHour * hours) * Math.log(height / PROFILE.roughness)) / Math.log(10 / PROFILE.roughness);
+    ((RISE.start + RISE.perHour * hours) * Math.log(height / PROFILE.roughness)) /
+    Math.log(10 / PROFILE.roughness);
   const from = (PROFILE.fromAtTen + (PROFILE.turnPerHundred * (height - 10)) / 100) * RAD;
   return { u: -speed * Math.sin(from), v: -speed * Math.cos(from) };
 }
@@ -49,13 +60,28 @@ export function surveyWind(seed) {
           const { speed, from } = polarFrom({ u: mean.u + eddy.u, v: mean.v + eddy.v });
           // Gusts are relatively stronger near the ground: common practice.
           const gust = speed * (height < 50 ? 1.5 : 1.3);
-          rows.push([fixed(lon, 3), fixed(lat, 3), `${height}`, isoSeconds(time), fixed(from, 0), fixed(speed, 2), fixed(gust, 1)]);
+          rows.push([
+            fixed(lon, 3),
+            fixed(lat, 3),
+            `${height}`,
+            isoSeconds(time),
+            fixed(from, 0),
+            fixed(speed, 2),
+            fixed(gust, 1),
+          ]);
         }
       }
     }
   }
   const header = ["lon", "lat", "height", "time", "direction_from", "speed", "gust"];
-  return csv(notesFor("Wind over an invented plain at three heights; m/s, and degrees that the wind blows from; tab-separated."), header, rows, "\t");
+  return csv(
+    notesFor(
+      "Wind over an invented plain at three heights; m/s, and degrees that the wind blows from; tab-separated.",
+    ),
+    header,
+    rows,
+    "\t",
+  );
 }
 
 /** Six rotors of 0.46 m, 8.5 kg with payload; the reasoning behind each figure is in data/README.md. */
