@@ -2,11 +2,24 @@
  * The one module through which the page reaches the core, so that what it leans on can be read in one place. The worker has its own,
  * with what computes; this one stays small, since it is part of the first load.
  */
+export type { DecidedEstimate, DecidedRoute } from "../src/choose/decided.ts";
+export type { EnsembleResult } from "../src/choose/ensemble.ts";
+export type { ErrorSpread } from "../src/choose/error-spread.ts";
+export type { InTime } from "../src/choose/in-time.ts";
+export type { PaceCurve } from "../src/choose/pace-curve.ts";
+export type { RefinedWindow } from "../src/choose/refine.ts";
+export type { SensitivityProfile } from "../src/choose/sensitivity-profile.ts";
+export type { Reach, RoutePlace, TurnBack, TurnLimit } from "../src/choose/turn-back-result.ts";
+export type { WhatIfResult } from "../src/choose/what-if-results.ts";
+export type { CellFinding, WindowCell } from "../src/choose/window-cell.ts";
+export type { WindowBest, WindowSummary } from "../src/choose/window-summary.ts";
 export { ADVISORY } from "../src/constants.ts";
 export type { StoreUnit } from "../src/craft/craft.ts";
 export type { StillCurve, StillPoint } from "../src/craft/still-curve.ts";
 export { InputError } from "../src/errors.ts";
 export type {
+  ArrivalAnswer,
+  ArrivalSolution,
   Estimate,
   FieldAlong,
   FieldSummary,

@@ -7,10 +7,12 @@ import { createEstimator, type Estimator } from "../../web/worker/estimator.ts";
 import { createFieldShelf, type FieldShelf } from "../../web/worker/field-shelf.ts";
 import { createFileShelf } from "../../web/worker/file-shelf.ts";
 import { createLandShelf } from "../../web/worker/land-shelf.ts";
+import { createPlanReader, type PlanReader } from "../../web/worker/plan-reader.ts";
 
 /** The worker's parts without a worker, with a demo's files in it. */
 export interface DemoEngine {
   readonly plan: PlanDocument;
+  readonly reader: PlanReader;
   readonly estimator: Estimator;
   readonly fields: FieldShelf;
 }
@@ -23,7 +25,8 @@ export function demoEngine(name: "islands" | "survey" | "ocean"): DemoEngine {
   for (const { file } of references) files.keep(file, demoFile(file));
   const fields = createFieldShelf(files);
   const land = createLandShelf(() => Promise.reject(new Error("no land in this test")));
-  return { plan, fields, estimator: createEstimator(files, fields, land) };
+  const reader = createPlanReader({ files, fields, land: land.ready });
+  return { plan, fields, reader, estimator: createEstimator(reader) };
 }
 
 const demos = join(dirname(fileURLToPath(import.meta.url)), "../../data/demo");

@@ -22,7 +22,7 @@ describe("the worker's estimate", () => {
     const own = await estimatePlan(JSON.stringify(plan), { file: "islands.plan.json", open: bytesOf });
     expect(answer.estimate).toEqual(own.estimate);
     const { routes, craft, pace } = own.plan;
-    const text = reportOf(estimator, { format: "csv", units: "sea", route: null });
+    const text = await reportOf(estimator, { format: "csv", units: "sea", route: null });
     expect(text).toBe(writeCsv({ estimate: own.estimate, routes, craft, pace }));
     expect(answer.landPending).toBe(true);
   });
@@ -64,9 +64,9 @@ describe("the worker's estimate", () => {
 
   test("writes the chosen route alone", async () => {
     const { plan, estimator } = demoEngine("islands");
-    expect(estimator.answered()).toBeNull();
+    expect(await estimator.answered()).toBeNull();
     await estimator.estimate(plan);
-    const text = reportOf(estimator, { format: "table", units: "metric", route: 1 });
+    const text = await reportOf(estimator, { format: "table", units: "metric", route: 1 });
     expect(text).toContain(plan.routes[1]?.name ?? "?");
     expect(text).not.toContain(`== ${plan.routes[0]?.name}`);
   });
@@ -136,8 +136,8 @@ describe("the worker's fields", () => {
   });
 });
 
-function reportOf(estimator: Estimator, question: ReportQuestion): string {
-  const input = estimator.answered();
+async function reportOf(estimator: Estimator, question: ReportQuestion): Promise<string> {
+  const input = await estimator.answered();
   if (input === null) throw new Error("nothing was estimated");
   return writeReport(input, question);
 }

@@ -12,8 +12,8 @@ export {
 } from "../../src/field/lattice.ts";
 export {
   densify,
+  type EstimateAnswer,
   type EstimateInput,
-  estimateArriving,
   estimatePrepared,
   type Field,
   type FieldInspection,
@@ -23,7 +23,6 @@ export {
   InputError,
   inspectField,
   inspectGrid,
-  mergeField,
   type Pace,
   type Plan,
   type PreparedRoute,
@@ -33,6 +32,7 @@ export {
   readGridFile,
 } from "../../src/index.ts";
 export { readCraftDocument } from "../../src/plan/read-craft.ts";
+export { type FieldsRead, type MemberFields, mergeSources, roleSource } from "../../src/plan/read-fields.ts";
 export { readPlanDocument } from "../../src/plan/read-plan.ts";
 export { serializeCraft, serializePlan } from "../../src/plan/write-plan.ts";
 export { writeCsv } from "../../src/report/csv.ts";

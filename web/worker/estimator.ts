@@ -61,7 +61,9 @@ async function estimateRead({ plan, input, prepared }: PlanRead): Promise<CoreAn
 
 async function decidedEstimate(read: PlanRead, answer: CoreAnswer): Promise<ReportInput["estimate"]> {
   const { plan, members } = read;
-  const wanted = [plan.alternates, plan.whatIfs, plan.errors, members].some((list) => (list ?? []).length > 0);
+  const wanted = [plan.alternates, plan.whatIfs, plan.errors, members].some(
+    (list) => (list ?? []).length > 0,
+  );
   if (!wanted) return answer.estimate;
   const { decide } = await import("./decide.ts");
   return decide(read, answer, false).estimate;

@@ -3,9 +3,11 @@ import {
   type Field,
   type FieldInspection,
   type FieldReference,
+  type FieldsRead,
   type GridFile,
   InputError,
-  mergeField,
+  mergeSources,
+  roleSource,
 } from "./core.ts";
 import type { FileShelf } from "./file-shelf.ts";
 import type { FieldAnswer, FieldProgress } from "./protocol.ts";
@@ -15,8 +17,14 @@ class Cancelled extends Error {
   override readonly name = "Cancelled";
 }
 
+/** Gives the fields of a plan. */
+export interface FieldSource {
+  /** The same objects as long as the references stay the same. */
+  merged(references: readonly FieldReference[]): Promise<FieldsRead>;
+}
+
 /** The grids that were read, each once, and the fields that the plan makes of them. */
-export interface FieldShelf {
+export interface FieldShelf extends FieldSource {
   open(
     ticket: number,
     field: FieldDocument,
@@ -24,8 +32,8 @@ export interface FieldShelf {
   ): Promise<FieldAnswer>;
   cancel(ticket: number): void;
   forget(file: string): void;
-  /** The fields of a plan; the same objects as long as its references stay the same. */
-  merged(references: readonly FieldReference[]): Promise<readonly Field[]>;
+  /** Counts what was forgotten: as long as it is the same, so are the files. */
+  revision(): number;
   /** The fields merged last. */
   current(): readonly Field[];
 }
@@ -37,10 +45,16 @@ interface Read {
   readonly grid: Promise<GridFile>;
 }
 
+const NOTHING_READ: { readonly key: string; readonly read: FieldsRead } = {
+  key: "[]",
+  read: { fields: [], members: [] },
+};
+
 export function createFieldShelf(files: FileShelf): FieldShelf {
   const grids = new Map<string, Read>();
   const cancelled = new Set<number>();
-  let last: { readonly key: string; readonly fields: readonly Field[] } = { key: "[]", fields: [] };
+  let last = NOTHING_READ;
+  let revision = 0;
 
   const grid = (reading: Reading, onProgress: (bytes: number) => void): Promise<GridFile> => {
     const { role, file, columns } = reading;
@@ -76,30 +90,20 @@ export function createFieldShelf(files: FileShelf): FieldShelf {
     cancel: (ticket) => cancelled.add(ticket),
     forget(file) {
       for (const [key, read] of grids) if (read.file === file) grids.delete(key);
-      last = { key: "[]", fields: [] };
+      last = NOTHING_READ;
+      revision += 1;
     },
     async merged(references) {
       const key = JSON.stringify(references);
-      if (key === last.key) return last.fields;
+      if (key === last.key) return last.read;
       const sources = await Promise.all(
-        references.map(async ({ gaps, beyond, outside, ...reading }) => ({
-          grid: await grid(reading, () => undefined),
-          gaps,
-          beyond,
-          outside,
-        })),
+        references.map(async (reference) => roleSource(await grid(reference, () => undefined), reference)),
       );
-      const roles = [...new Set(references.map(({ role }) => role))];
-      const fields = roles.map((role) =>
-        mergeField(
-          role,
-          sources.filter((source) => source.grid.role === role),
-        ),
-      );
-      last = { key, fields };
-      return fields;
+      last = { key, read: mergeSources(sources) };
+      return last.read;
     },
-    current: () => last.fields,
+    revision: () => revision,
+    current: () => last.read.fields,
   };
 }
 

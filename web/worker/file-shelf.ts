@@ -5,6 +5,8 @@ export interface FileShelf {
   keep(name: string, content: Blob): void;
   forget(name: string): void;
   size(name: string): number;
+  /** @throws InputError where there is no such file */
+  blob(name: string): Blob;
   /** A file's bytes in pieces. @throws InputError where there is no such file */
   open(name: string): AsyncIterable<Uint8Array>;
 }
@@ -20,6 +22,7 @@ export function createFileShelf(): FileShelf {
     keep: (name, content) => files.set(name, content),
     forget: (name) => files.delete(name),
     size: (name) => find(name).size,
+    blob: find,
     open: (name) => pieces(find(name)),
   };
 }

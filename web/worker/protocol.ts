@@ -1,11 +1,19 @@
 import type {
+  DecidedRoute,
   Estimate,
   FieldInspection,
   FieldRole,
+  InTime,
+  PaceCurve,
   Profile,
+  RefinedWindow,
+  SensitivityProfile,
   StillCurve,
   StillPoint,
+  StoreUnit,
   Units,
+  WindowCell,
+  WindowSummary,
 } from "../core.ts";
 import type { CraftDocument, FieldDocument, PlanDocument } from "../state/plan-document.ts";
 
@@ -122,6 +130,49 @@ export interface ReportQuestion {
   readonly route: number | null;
 }
 
+/** An answer, or what the user can mend in a sentence. */
+export type Answered<T> = ({ readonly ok: true } & T) | Fault;
+
+/** What is decided on top of an estimate, one entry a route of the plan asked. */
+export interface DecideAnswer {
+  readonly routes: readonly DecidedRoute[];
+  /** Empty where the plan asks nothing about how sure it is. */
+  readonly sensitivities: readonly (SensitivityProfile | null)[];
+}
+
+/** A window's cells: cell (departure d, route r, speed s) has index (d × routes + r) × speeds + s. */
+export interface WindowShape {
+  /** ms since 1970, ascending. */
+  readonly departures: readonly number[];
+  readonly routes: number;
+  /** m/s; `null` where the plan's own pace holds, which counts as one. */
+  readonly speeds: readonly number[] | null;
+  readonly storeUnit: StoreUnit;
+  readonly usable: number;
+}
+
+/** The first of the cells asked for, as many as were done in time. */
+export interface WindowSlice {
+  readonly cells: readonly WindowCell[];
+}
+
+export interface WindowBests {
+  readonly summary: WindowSummary;
+  /** To the minute; `null` where that was not asked. */
+  readonly refined: RefinedWindow | null;
+  /** Latest departures that arrive in time; `null` where the window keeps no arrival or it was not asked. */
+  readonly inTime: InTime | null;
+}
+
+/** A route against the speed through the medium. */
+export interface PaceAnswer {
+  readonly curve: PaceCurve;
+  readonly least: WindowCell | null;
+  readonly fastest: WindowCell | null;
+  /** The plan's own through-speed, m/s; `null` where its pace holds something else. */
+  readonly speed_m_s: number | null;
+}
+
 /** What the worker does for the page. */
 export interface Worker {
   /** Keeps a file that a plan may name: a craft, or a field to be read when it is first needed. */
@@ -150,4 +201,16 @@ export interface Worker {
   loadFineCoast(): Promise<void>;
   /** Resolves once routes can be held against the fine coast. */
   loadLand(): Promise<void>;
+  /** Lets another worker behind the port use this one's files, fields and land. */
+  share(port: MessagePort): void;
+  /** Uses those of the worker behind the port from now on. */
+  follow(port: MessagePort): void;
+  /** @param turnBack whether turning back is wanted though the plan names no alternates */
+  decide(plan: PlanDocument, turnBack: boolean): Promise<Answered<DecideAnswer>>;
+  /** Opens the plan's window under a ticket, in place of the one before. */
+  beginWindow(ticket: number, plan: PlanDocument): Promise<Answered<WindowShape>>;
+  /** Cells of a window, in the order of their indices, until the time is spent; `null` where it is no longer open. */
+  windowSlice(ticket: number, indices: Int32Array, budget_ms: number): Promise<WindowSlice | null>;
+  windowBests(ticket: number, cells: readonly WindowCell[], refine: boolean): Promise<WindowBests | null>;
+  paceCurve(plan: PlanDocument, route: number): Promise<Answered<PaceAnswer>>;
 }

@@ -5,12 +5,15 @@ import { createCoastShelf } from "./coast-shelf.ts";
 import type { LandTopology } from "./core.ts";
 import { serializeCraft, serializePlan } from "./core.ts";
 import { studyCraft } from "./craft-study.ts";
+import type { Deciding } from "./deciding.ts";
 import { createEstimator } from "./estimator.ts";
 import { createFieldShelf } from "./field-shelf.ts";
 import { createFileShelf } from "./file-shelf.ts";
 import { createLandShelf } from "./land-shelf.ts";
 import { answerLattice } from "./lattice.ts";
+import { createPlanReader } from "./plan-reader.ts";
 import type { CoastDetail, CoastTile, EstimateAnswer, Lattice, Worker } from "./protocol.ts";
+import { shelvesOf, sourcesBehind } from "./shared-shelves.ts";
 
 async function fetchCoast(detail: CoastDetail): Promise<LandTopology> {
   const answer = await fetch(detail === "10m" ? fine : coarse);
@@ -22,7 +25,17 @@ const coast = createCoastShelf(fetchCoast);
 const land = createLandShelf(() => fetchCoast("10m"));
 const files = createFileShelf();
 const fields = createFieldShelf(files);
-const estimator = createEstimator(files, fields, land);
+
+/** Where what is asked of this worker rests: on its own shelves, until it is told to follow another worker's. */
+let reader = createPlanReader({ files, fields, land: land.ready });
+const estimator = createEstimator(reader);
+
+// What decides is loaded when it is first asked for.
+let deciding: Promise<Deciding> | null = null;
+const decided = (): Promise<Deciding> => {
+  deciding ??= import("./deciding.ts").then(({ createDeciding }) => createDeciding(reader));
+  return deciding;
+};
 
 const worker: Worker = {
   keepFile(name, content) {
@@ -41,12 +54,12 @@ const worker: Worker = {
   },
   estimate: async (plan) => handEstimate(await estimator.estimate(plan)),
   async report(question) {
-    const input = estimator.answered();
+    const input = await estimator.answered();
     if (input === null) return null;
     const { writeReport } = await import("./write-report.ts");
     return writeReport(input, question);
   },
-  studyCraft: (craft) => studyCraft(craft, estimator.answered()?.pace ?? null),
+  studyCraft: (craft) => studyCraft(craft, estimator.pace()),
   planText: (plan) => serializePlan(plan as Parameters<typeof serializePlan>[0]),
   craftText: (craft) => serializeCraft(craft as Parameters<typeof serializeCraft>[0]),
   lattice: async (question) => handLattice(answerLattice(fields.current(), question)),
@@ -55,6 +68,18 @@ const worker: Worker = {
     await coast.load("10m");
   },
   loadLand: () => land.load(),
+  share(port) {
+    Comlink.expose(shelvesOf(files, fields, land), port);
+  },
+  follow(port) {
+    reader = createPlanReader(sourcesBehind(port));
+    deciding = null;
+  },
+  decide: async (plan, turnBack) => (await decided()).decide(plan, turnBack),
+  beginWindow: async (ticket, plan) => (await decided()).beginWindow(ticket, plan),
+  windowSlice: async (ticket, indices, budget) => (await decided()).windowSlice(ticket, indices, budget),
+  windowBests: async (ticket, cells, refine) => (await decided()).windowBests(ticket, cells, refine),
+  paceCurve: async (plan, route) => (await decided()).paceCurve(plan, route),
 };
 
 /* The arrays that an answer was made for are handed over; those that are kept here are copied. */

@@ -1,0 +1,24 @@
+import type { DecidedEstimate, SensitivityProfile } from "../core.ts";
+import { withTurnBack, withUncertainty } from "./choose.ts";
+import type { EstimateAnswer } from "./core.ts";
+import type { PlanRead } from "./plan-reader.ts";
+
+/** An estimate with what the plan wants decided on top of it. */
+export interface DecidedAnswer extends EstimateAnswer {
+  readonly estimate: DecidedEstimate;
+  /** Per route; empty where the plan asks nothing about how sure it is. */
+  readonly sensitivities: readonly (SensitivityProfile | null)[];
+}
+
+/** @param turnBack whether turning back is wanted though the plan names no alternates */
+export function decide(
+  { plan, input, prepared, members }: PlanRead,
+  answer: EstimateAnswer,
+  turnBack: boolean,
+): DecidedAnswer {
+  const { alternates = [], whatIfs = [], errors = [] } = plan;
+  const turned =
+    alternates.length > 0 || turnBack ? withTurnBack(answer, prepared, input, alternates) : answer;
+  if (whatIfs.length + errors.length + members.length === 0) return { ...turned, sensitivities: [] };
+  return withUncertainty(turned, prepared, input, { whatIfs, errors, members });
+}

@@ -1,0 +1,128 @@
+import type { WindowCell } from "../core.ts";
+import type { PlanDocument } from "../state/plan-document.ts";
+import {
+  conditionsOf,
+  estimateArriving,
+  fastestWithReserve,
+  latestInTime,
+  leastUseSpeed,
+  makeSweep,
+  paceCurve,
+  refineWindow,
+  type Sweep,
+  summariseWindow,
+  sweepCell,
+  windowDepartures,
+} from "./choose.ts";
+import { estimatePrepared, InputError, type Plan } from "./core.ts";
+import { decide } from "./decide.ts";
+import type { PlanRead, PlanReader } from "./plan-reader.ts";
+import type {
+  Answered,
+  DecideAnswer,
+  PaceAnswer,
+  WindowBests,
+  WindowShape,
+  WindowSlice,
+} from "./protocol.ts";
+
+/** What the worker works out for a decision, question by question. */
+export interface Deciding {
+  decide(plan: PlanDocument, turnBack: boolean): Promise<Answered<DecideAnswer>>;
+  beginWindow(ticket: number, plan: PlanDocument): Promise<Answered<WindowShape>>;
+  windowSlice(ticket: number, indices: Int32Array, budget_ms: number): WindowSlice | null;
+  windowBests(ticket: number, cells: readonly WindowCell[], refine: boolean): WindowBests | null;
+  paceCurve(plan: PlanDocument, route: number): Promise<Answered<PaceAnswer>>;
+}
+
+interface OpenWindow {
+  readonly ticket: number;
+  readonly sweep: Sweep;
+  readonly window: NonNullable<Plan["window"]>;
+  readonly departures: readonly number[];
+  readonly speeds: readonly (number | null)[];
+}
+
+export function createDeciding(reader: PlanReader): Deciding {
+  let open: OpenWindow | null = null;
+  return {
+    decide: (plan, turnBack) =>
+      answered(async () => {
+        const read = await reader.read(plan);
+        const { estimate, sensitivities } = decide(read, answerOf(read), turnBack);
+        return { routes: estimate.routes, sensitivities };
+      }),
+    beginWindow: (ticket, document) =>
+      answered(async () => {
+        const { plan, input, prepared } = await reader.read(document);
+        if (plan.window === undefined) throw new Error("a window is asked of a plan that names none");
+        const sweep = makeSweep(prepared, input, plan.arrive ?? null);
+        const departures = windowDepartures(plan.window);
+        const { speeds_m_s } = plan.window;
+        open = { ticket, sweep, window: plan.window, departures, speeds: speeds_m_s ?? [null] };
+        const { unit, usable } = input.craft.store;
+        return { departures, routes: prepared.length, speeds: speeds_m_s, storeUnit: unit, usable };
+      }),
+    windowSlice(ticket, indices, budget_ms) {
+      if (open === null || open.ticket !== ticket) return null;
+      return slice(open, indices, budget_ms);
+    },
+    windowBests(ticket, cells, refine) {
+      if (open === null || open.ticket !== ticket) return null;
+      const { sweep, window } = open;
+      const inTime = refine ? latestInTime(sweep, window) : null;
+      const refined = refine ? refineWindow(sweep, window, cells) : null;
+      return { summary: summariseWindow(cells), refined, inTime };
+    },
+    paceCurve: (plan, route) => answered(async () => paceOf(await reader.read(plan), route)),
+  };
+}
+
+/** Cells in the order asked for, until the time is spent: so the worker can hear what else is asked in between. */
+function slice(
+  { sweep, departures, speeds }: OpenWindow,
+  indices: Int32Array,
+  budget_ms: number,
+): WindowSlice {
+  const end = performance.now() + budget_ms;
+  const cells: WindowCell[] = [];
+  for (const index of indices) {
+    const speed = speeds[index % speeds.length] ?? null;
+    const way = Math.floor(index / speeds.length);
+    const prepared = sweep.prepared[way % sweep.prepared.length];
+    const departure = departures[Math.floor(way / sweep.prepared.length)];
+    if (prepared === undefined || departure === undefined) throw new Error(`no cell ${index} in the window`);
+    cells.push(sweepCell(sweep, prepared, departure, speed));
+    if (performance.now() >= end) break;
+  }
+  return { cells };
+}
+
+function paceOf(read: PlanRead, at: number): PaceAnswer {
+  const { input, prepared } = read;
+  const route = prepared[at];
+  const estimate = answerOf(read).estimate.routes[at];
+  if (route === undefined || estimate === undefined) throw new Error(`no route ${at} in the plan`);
+  const { pace, ...conditions } = conditionsOf(estimate, input, at);
+  return {
+    curve: paceCurve(route, conditions),
+    least: leastUseSpeed(route, conditions),
+    fastest: fastestWithReserve(route, conditions),
+    speed_m_s: pace.hold === "through-speed" ? pace.speed_m_s : null,
+  };
+}
+
+function answerOf({ plan, input, prepared }: PlanRead) {
+  return plan.arrive === undefined
+    ? estimatePrepared(prepared, input)
+    : estimateArriving(prepared, input, plan.arrive);
+}
+
+async function answered<T>(find: () => Promise<T>): Promise<Answered<T>> {
+  try {
+    return { ok: true, ...(await find()) };
+  } catch (fault) {
+    if (fault instanceof InputError) return { ok: false, fault: fault.message };
+    throw fault;
+  }
+}
