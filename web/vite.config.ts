@@ -32,10 +32,26 @@ function contentPolicy(): Plugin {
   };
 }
 
+/** Takes from Leaflet's style sheet what styles controls, popups and its own marker images: the chart has none of them. */
+function leafletStyles(): Plugin {
+  const unused = /leaflet-(control|popup|bar|oldie|default-icon-path)|\.lvml/;
+  return {
+    name: "leaflet-styles",
+    enforce: "pre",
+    transform(code, id) {
+      if (!id.includes("leaflet/dist/leaflet.css")) return null;
+      const bare = code.replace(/\/\*[\s\S]*?\*\//g, "");
+      return bare.replace(/([^{}]*)\{[^{}]*\}/g, (rule, selectors: string) =>
+        selectors.split(",").every((selector) => unused.test(selector)) ? "" : rule,
+      );
+    },
+  };
+}
+
 export default defineConfig({
   root: new URL(".", import.meta.url).pathname,
   base: "./",
-  plugins: [contentPolicy(), precache()],
+  plugins: [leafletStyles(), contentPolicy(), precache()],
   resolve: {
     alias: [{ find: /^leaflet$/, replacement: new URL("chart/leaflet-parts.mjs", import.meta.url).pathname }],
   },

@@ -1,4 +1,4 @@
-import { booleanPointInPolygon, lineIntersect, lineString, multiLineString, multiPolygon } from "@turf/turf";
+import { booleanPointInPolygon, multiPolygon } from "@turf/turf";
 import type { Feature, Position as LonLat, MultiPolygon } from "geojson";
 import type { Land } from "./land.ts";
 
@@ -35,54 +35,38 @@ export function onCellLand(shape: Feature<MultiPolygon>, position: LonLat): bool
 }
 
 /**
- * Shares 0..1 of the straight line between two positions at which it meets the rings of a cell, ascending.
- * Only the rings' edges that reach into the line's own box are handed to the search for intersections.
+ * Shares 0..1 of the straight line between two positions at which it meets the rings of a cell, ascending. A line along an edge
+ * meets the edges beside that one at its ends.
  */
 export function coastCuts(land: Land, cell: number, from: LonLat, to: LonLat): number[] {
-  const [x0 = 0, y0 = 0] = from;
-  const [x1 = 0, y1 = 0] = to;
-  if (x0 === x1 && y0 === y1) return [];
-  const edges: LonLat[][] = [];
+  const cuts: number[] = [];
   const end = land.ringRange[2 * cell + 1] ?? 0;
-  for (let ring = land.ringRange[2 * cell] ?? 0; ring < end; ring++)
-    addEdgesNear(land, ring, from, to, edges);
-  if (edges.length === 0) return [];
-  const met = lineIntersect(lineString([from, to]), multiLineString(edges));
-  const alongLongitude = Math.abs(x1 - x0) > Math.abs(y1 - y0);
-  return met.features
-    .map(({ geometry }) => {
-      const [x = 0, y = 0] = geometry.coordinates;
-      return alongLongitude ? (x - x0) / (x1 - x0) : (y - y0) / (y1 - y0);
-    })
-    .sort((a, b) => a - b);
+  for (let ring = land.ringRange[2 * cell] ?? 0; ring < end; ring++) addRingCuts(land, ring, from, to, cuts);
+  return cuts.sort((a, b) => a - b);
 }
 
-function addEdgesNear(land: Land, ring: number, from: LonLat, to: LonLat, edges: LonLat[][]): void {
+function addRingCuts(land: Land, ring: number, from: LonLat, to: LonLat, cuts: number[]): void {
   const { xy } = land;
-  const [west, east] = ascending(from[0] ?? 0, to[0] ?? 0);
-  const [south, north] = ascending(from[1] ?? 0, to[1] ?? 0);
+  const [x0 = 0, y0 = 0] = from;
+  const dx = (to[0] ?? 0) - x0;
+  const dy = (to[1] ?? 0) - y0;
   const start = land.ringStart[ring] ?? 0;
   const end = land.ringStart[ring + 1] ?? 0;
-  let ax = xy[end - 2] ?? 0;
-  let ay = xy[end - 1] ?? 0;
+  // Seen from the line's start, across the line: left of it is positive.
+  let ax = (xy[end - 2] ?? 0) - x0;
+  let ay = (xy[end - 1] ?? 0) - y0;
+  let aSide = dx * ay - dy * ax;
   for (let i = start; i < end; i += 2) {
-    const bx = xy[i] ?? 0;
-    const by = xy[i + 1] ?? 0;
-    const reachesIn =
-      (ax >= west || bx >= west) &&
-      (ax <= east || bx <= east) &&
-      (ay >= south || by >= south) &&
-      (ay <= north || by <= north);
-    if (reachesIn)
-      edges.push([
-        [ax, ay],
-        [bx, by],
-      ]);
+    const bx = (xy[i] ?? 0) - x0;
+    const by = (xy[i + 1] ?? 0) - y0;
+    const bSide = dx * by - dy * bx;
+    // An edge along the line has both ends on it, at which the edges beside it meet the line.
+    if (aSide !== bSide && (aSide <= 0 ? bSide >= 0 : bSide <= 0)) {
+      const share = (ax * (by - ay) - ay * (bx - ax)) / (bSide - aSide);
+      if (share >= 0 && share <= 1) cuts.push(share);
+    }
     ax = bx;
     ay = by;
+    aSide = bSide;
   }
-}
-
-function ascending(a: number, b: number): [number, number] {
-  return a < b ? [a, b] : [b, a];
 }
