@@ -27,8 +27,11 @@ export interface ErrorSpread {
   readonly margin: number;
   /** Probability that what is left is not below the reserve, with the margin taken as normally distributed; 0..1. */
   readonly reserveHolds: number;
-  /** Where an error of the forecast adds most to the spread of the arrival, and of the use, per time spent there. */
-  readonly weakest: { readonly time: WeakPlace; readonly use: WeakPlace };
+  /**
+   * Where an error of the forecast adds most to the spread of the arrival, and of the use, per time spent there; `null` where
+   * there is no spread.
+   */
+  readonly weakest: { readonly time: WeakPlace | null; readonly use: WeakPlace | null };
   readonly legs: readonly LegSpread[];
 }
 

@@ -64,17 +64,18 @@ function legStarts(cells: readonly TrackCell[]): number[] {
   return lengths.map((_, n) => lengths.slice(0, n).reduce((sum, length) => sum + length, 0));
 }
 
-/** Where an error adds most to the variances of time and of use, per time spent there. */
+/** Where an error adds most to the variances of time and of use, per time spent there; `null` where none does. */
 export function weakestPlace(
   cells: readonly TrackCell[],
   { timePart, usePart }: ErrorCovariance,
-): { readonly time: WeakPlace; readonly use: WeakPlace } {
+): { readonly time: WeakPlace | null; readonly use: WeakPlace | null } {
   return { time: greatest(cells, timePart), use: greatest(cells, usePart) };
 }
 
-function greatest(cells: readonly TrackCell[], parts: Float64Array): WeakPlace {
+function greatest(cells: readonly TrackCell[], parts: Float64Array): WeakPlace | null {
   const density = (n: number) => (parts[n] as number) / (cells[n] as TrackCell).duration;
   const at = cells.reduce((best, _, n) => (density(n) > density(best) ? n : best), 0);
+  if (!(density(at) > 0)) return null;
   const { leg, from, to, lat, lon } = cells[at] as TrackCell;
   return { leg, at_m: (from + to) / 2, lat, lon: lon - 360 * Math.round(lon / 360) };
 }

@@ -17,11 +17,17 @@ export function spreadTable(route: DecidedRoute, units: TableUnits): string[] {
   const { spread } = route;
   if (spread === undefined) return [];
   if (spread === null)
-    return ["Spread under the forecast error: none, since the route ends short or no error acts on it."];
+    return wrapped(
+      "Spread under the forecast error: none, since the route ends short, no error acts on it, or it runs along the edge of its field.",
+      TABLE_WIDTH,
+    );
   return [
     "Spread under the forecast error (one standard deviation, to first order)",
     ...legRows(route, spread, units),
-    ...wrapped(`${chanceText(route, spread, units)} ${weakText(route, spread, units)}`, TABLE_WIDTH),
+    ...wrapped(
+      `${chanceText(route, spread, units)} ${weakText(route, spread, units)}`.trimEnd(),
+      TABLE_WIDTH,
+    ),
   ];
 }
 
@@ -60,10 +66,11 @@ export function percentText(share: number): string {
 }
 
 function weakText(route: RouteEstimate, { weakest }: ErrorSpread, units: TableUnits): string {
-  const time = placeText(route, weakest.time, units);
-  const use = placeText(route, weakest.use, units);
-  if (time === use) return `A wrong forecast hurts most ${time}.`;
-  return `A wrong forecast hurts the arrival most ${time}, the use most ${use}.`;
+  const time = weakest.time && placeText(route, weakest.time, units);
+  const use = weakest.use && placeText(route, weakest.use, units);
+  if (time === use) return time === null ? "" : `A wrong forecast hurts most ${time}.`;
+  const hurts = [time && `the arrival most ${time}`, use && `the use most ${use}`];
+  return `A wrong forecast hurts ${hurts.filter((part) => part !== null).join(", ")}.`;
 }
 
 function placeText(route: RouteEstimate, { leg, at_m }: WeakPlace, { length }: TableUnits): string {

@@ -39,7 +39,8 @@ const errorJson = ({ role, speed_m_s, length_m, time_s }: ForecastError): Foreca
   time_s,
 });
 
-const placeJson = ({ leg, at_m, lat, lon }: WeakPlace): WeakPlace => ({ leg, at_m, lat, lon });
+const placeJson = (value: WeakPlace | null): WeakPlace | null =>
+  value && { leg: value.leg, at_m: value.at_m, lat: value.lat, lon: value.lon };
 
 const legJson = ({ leg, time_s, arrival_s, use, remaining }: LegSpread): LegSpread => ({
   leg,

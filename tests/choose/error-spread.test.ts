@@ -226,6 +226,8 @@ describe("the spread against a Monte Carlo of true estimates in random fields", 
   });
 });
 
+const speedy = craftOf({ power: cubePower({ referenceSpeed_m_s: 10, referencePower_W: 1000 }) });
+
 describe("the probability that the reserve holds", () => {
   const straight = routeOf(waypoint("A", 0, 0), waypoint("B", 0, 3));
 
@@ -250,6 +252,14 @@ describe("the probability that the reserve holds", () => {
       ),
       { numRuns: 40 },
     );
+  });
+
+  test("tells no weakest place for the arrival where the craft holds its speed over the ground", () => {
+    const held = caseOf(straight, [swirl], { pace: { hold: "ground-speed", speed_m_s: 9 }, craft: speedy });
+    const { weakest, time_s, use } = spreadOf(held, [WIND]).spread;
+    expect([weakest.time, time_s]).toEqual([null, 0]);
+    expect(weakest.use?.leg).toBe(1);
+    expect(use).toBeGreaterThan(0);
   });
 
   test("there is no spread of a route that stops on the way, nor of errors that do not act", () => {

@@ -178,6 +178,41 @@ describe("a what-if", () => {
   });
 });
 
+describe("what-ifs of several routes", () => {
+  const hovering = craftOf({ power: cubePower({ referenceSpeed_m_s: 6, referencePower_W: 60_000 }) });
+  const routes = [
+    routeOf(...ROUTE.waypoints.map((each) => ({ ...each, speed_m_s: null }))),
+    routeOf(waypoint("E", 51.5, -1), waypoint("F", 47.5, -5.5), waypoint("G", 48, -0.5)),
+  ];
+  const cases = routes.map((route) =>
+    caseOf(route, [gusty], { craft: hovering, pace: { hold: "through-speed", speed_m_s: 14 } }),
+  );
+  const stronger = { ...PLAIN, wind: 1.25, veer_deg: 15 };
+
+  test("are those of each route alone, bit for bit", () => {
+    const together = whatIfResults(
+      cases.map(({ prepared }) => prepared),
+      cases.map(({ conditions }) => conditions),
+      [stronger],
+    );
+    cases.forEach((each, n) => {
+      expect(together[n]?.[0]).toEqual(one(each, stronger));
+    });
+  });
+
+  test("of a craft that hovers meet the changed wind while it stays", () => {
+    const angle = (15 * Math.PI) / 180;
+    const whole = mapped(gusty, (u, v) => [
+      1.25 * (u * Math.cos(angle) + v * Math.sin(angle)),
+      1.25 * (v * Math.cos(angle) - u * Math.sin(angle)),
+    ]);
+    const [base] = cases as [Case, Case];
+    const { use } = runOf({ ...base, conditions: { ...base.conditions, fields: [whole] } }).estimate.totals;
+    // Products in another order.
+    expect(Math.abs((one(base, stronger).use as number) / (use as number) - 1)).toBeLessThan(1e-13);
+  });
+});
+
 describe("the worst of the what-ifs", () => {
   test("decides the route's status, and the finding says which", () => {
     const route = runOf(given).estimate;
