@@ -30,7 +30,7 @@ export interface Covariance {
 }
 
 /** Covariances within one leg, and of the legs before it (first) with it (second). */
-export interface LegCovariance {
+interface LegCovariance {
   readonly own: Covariance;
   readonly before: Covariance & { ut: number };
 }

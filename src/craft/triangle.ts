@@ -28,7 +28,7 @@ export interface HeldTriangle {
 }
 
 /** Why a course cannot be held: |c| >= V, or the ground speed along it would not be above zero. */
-export type NotHoldableReason = "cross-track-component" | "ground-speed";
+type NotHoldableReason = "cross-track-component" | "ground-speed";
 
 /** A course that cannot be held. */
 export interface BrokenTriangle {
@@ -127,12 +127,12 @@ export function throughSpeedFor(given: {
 }
 
 /** a = w·T, the component of (u, v) along a course, positive with the craft. For inner loops. */
-export function alongComponent(u: number, v: number, sinCourse: number, cosCourse: number): number {
+function alongComponent(u: number, v: number, sinCourse: number, cosCourse: number): number {
   return u * sinCourse + v * cosCourse;
 }
 
 /** c = w·N, the component of (u, v) across a course, positive toward starboard. For inner loops. */
-export function crossComponent(u: number, v: number, sinCourse: number, cosCourse: number): number {
+function crossComponent(u: number, v: number, sinCourse: number, cosCourse: number): number {
   return u * cosCourse - v * sinCourse;
 }
 

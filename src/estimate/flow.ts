@@ -16,7 +16,7 @@ import type { Stations } from "./stations.ts";
  * along- and cross-track components as value and rate of change, so that the implicit solution for time costs no more look-ups.
  */
 
-export type FlowState = "data" | "zero" | "outside-area" | "outside-time" | "gap";
+type FlowState = "data" | "zero" | "outside-area" | "outside-time" | "gap";
 
 /** Field of one role, with its times counted from the route's departure, and what it resolved to in the current panel. */
 export interface Flow {

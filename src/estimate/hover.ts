@@ -22,7 +22,7 @@ export interface Stay {
 const NO_EDGES = { held: false, filled: false, zero: false };
 
 /** No stay at all. */
-export const NO_STAY: Stay = { use: 0, useBound: 0, maxWind: 0, edges: NO_EDGES, failure: null };
+const NO_STAY: Stay = { use: 0, useBound: 0, maxWind: 0, edges: NO_EDGES, failure: null };
 
 /** A stay of a craft whose use does not depend on the wind: moored in water, or in still air. */
 export function plainStay(craft: Craft, seconds: number): Stay {

@@ -11,7 +11,7 @@ import { COS, evaluate, LAT, LON, STRIDE, type TrackCurve } from "./track-curve.
 /** Level state of a panel in a tile with heights. */
 export const LEVEL_BETWEEN = 0;
 /** The level below or at hand alone counts: the tile has no heights, or the craft is exactly on the level. */
-export const LEVEL_SINGLE = 1;
+const LEVEL_SINGLE = 1;
 /** Below the lowest or above the highest level: the nearest one holds, and it is a finding. */
 export const LEVEL_BEYOND = 2;
 
@@ -43,7 +43,7 @@ export interface LegHeights {
 /** Ends nearer than this are one (1 µm: the slope of the field cannot change a figure over it). */
 const MERGE_M = 1e-6;
 /** How far outside its area a tile still holds (0.1 mm: the rounding of a track along the edge). */
-export const EDGE_DEG = 1e-9;
+const EDGE_DEG = 1e-9;
 
 /** Cuts a leg into panels at the kinks of the fields. */
 export function cutPanels(curve: TrackCurve, fields: readonly Field[], heights: LegHeights): Panels {
@@ -104,7 +104,7 @@ export function locatePanels(curve: TrackCurve, panels: Panels, tile: Tile, heig
 }
 
 /** The variable ξ of piece p at s. */
-export function pieceVariable(curve: TrackCurve, p: number, s: number): number {
+function pieceVariable(curve: TrackCurve, p: number, s: number): number {
   const from = curve.starts[p] as number;
   const to = curve.starts[p + 1] as number;
   return (2 * (s - from)) / (to - from) - 1;
@@ -119,7 +119,7 @@ export function heightAt(heights: LegHeights, tile: Tile, share: number): number
 }
 
 /** Cell of a value on an ascending axis (the last cell holds its upper end), -1 outside; 0 on an axis of one node. */
-export function cellIn(axis: Float64Array, value: number): number {
+function cellIn(axis: Float64Array, value: number): number {
   const last = axis.length - 1;
   if (!(value >= (axis[0] as number) - EDGE_DEG && value <= (axis[last] as number) + EDGE_DEG)) return -1;
   return Math.min(Math.max(lowerBound(axis, value), 0), Math.max(last - 1, 0));
@@ -138,7 +138,7 @@ export function lowerBound(axis: Float64Array, value: number): number {
 }
 
 /** Whole turns, in degrees, that bring a longitude at or after the first meridian of an axis. */
-export function turnInto(lonAxis: Float64Array, lon: number): number {
+function turnInto(lonAxis: Float64Array, lon: number): number {
   return Math.ceil(((lonAxis[0] as number) - EDGE_DEG - lon) / 360) * 360;
 }
 

@@ -22,10 +22,6 @@ export function makeStretch(): Stretch {
   return { from: -1, to: -1, touched: 0, times: 0, peak: 0, open: false, lastPlace: -1, lastMargin: 0 };
 }
 
-export function clearStretch(stretch: Stretch): void {
-  Object.assign(stretch, makeStretch());
-}
-
 /** Feeds the margin and the amount at a place; the edges are where the margin, linear between places, is zero. */
 export function feed(stretch: Stretch, place: number, margin: number, amount: number): void {
   if (margin > 0) {

@@ -7,7 +7,7 @@ import type { Track } from "../geodesy/track.ts";
  */
 
 /** Coefficients per quantity and piece: degree 6. */
-export const TERMS = 7;
+const TERMS = 7;
 /** Offsets of the four quantities in a piece's coefficients. */
 export const LON = 0;
 export const LAT = TERMS;
@@ -135,18 +135,6 @@ export function evaluateAll(
     const x = xs[i] as number;
     values[i] = (((((g * x + f) * x + e) * x + d) * x + c) * x + b) * x + a;
   }
-}
-
-/** Index of the piece that holds s, the later one at a joint. */
-export function pieceAt(curve: TrackCurve, s: number): number {
-  let low = 0;
-  let high = curve.starts.length - 2;
-  while (low < high) {
-    const middle = (low + high + 1) >> 1;
-    if ((curve.starts[middle] as number) <= s) low = middle;
-    else high = middle - 1;
-  }
-  return low;
 }
 
 /** Chebyshev nodes of the first kind: none at an end, so that a pole at a joint is never sampled. */

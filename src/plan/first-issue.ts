@@ -35,7 +35,7 @@ export function placeOf(file: string, path: Path): Place {
 }
 
 /** A key's path as text: `routes[0].waypoints[2].lat`; a key that is no plain word in brackets and quotes. */
-export function keyText(path: Path): string {
+function keyText(path: Path): string {
   return path.reduce<string>((text, part) => {
     if (typeof part === "number") return `${text}[${part}]`;
     const key = String(part);

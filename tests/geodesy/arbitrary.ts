@@ -4,13 +4,13 @@ import { type Ellipsoid, meridionalRadius, transverseRadius } from "../../src/ge
 import type { Position } from "../../src/geodesy/track.ts";
 
 /** Latitudes over the whole globe, the equator, the poles and their neighbourhoods more often than chance has them. */
-export const anyLatitude: fc.Arbitrary<number> = fc.oneof(
+const anyLatitude: fc.Arbitrary<number> = fc.oneof(
   { weight: 6, arbitrary: fc.double({ min: -90, max: 90, noNaN: true }) },
   { weight: 2, arbitrary: fc.constantFrom(0, 90, -90, 89.999999, -89.999999, 45, -1e-9, 1e-12) },
 );
 
 /** Longitudes as plans give them, -180..360, with the antimeridian and Greenwich more often. */
-export const anyLongitude: fc.Arbitrary<number> = fc.oneof(
+const anyLongitude: fc.Arbitrary<number> = fc.oneof(
   { weight: 6, arbitrary: fc.double({ min: -180, max: 360, noNaN: true }) },
   { weight: 2, arbitrary: fc.constantFrom(0, 180, -180, 179.999999, 359, 360, -90) },
 );

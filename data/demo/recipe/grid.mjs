@@ -3,13 +3,13 @@
  */
 
 /** Mean radius of the Earth R₁ of WGS84, km: (2 a + b) / 3. The demo fields need no ellipsoid. */
-export const EARTH_RADIUS_KM = 6371.0088;
+const EARTH_RADIUS_KM = 6371.0088;
 
 /** Degrees to radians. */
 export const RAD = Math.PI / 180;
 
 /** Kilometres of one degree of latitude on that sphere. */
-export const DEGREE_KM = EARTH_RADIUS_KM * RAD;
+const DEGREE_KM = EARTH_RADIUS_KM * RAD;
 
 /**
  * An axis of `count` nodes, free of accumulated rounding.
@@ -21,7 +21,7 @@ export const axis = (first, step, count) =>
   Array.from({ length: count }, (_, i) => round(first + i * step, 6));
 
 /** @param {number} value @param {number} decimals */
-export const round = (value, decimals) => Math.round(value * 10 ** decimals) / 10 ** decimals;
+const round = (value, decimals) => Math.round(value * 10 ** decimals) / 10 ** decimals;
 
 /**
  * Plane coordinates about an origin: x km east, y km north (equirectangular; the demo areas are small or need no more).

@@ -25,7 +25,7 @@ const KNOT = 1852 / 3600;
  * Ellipses: centre and semi-axes in km, `turn` in degrees anticlockwise.
  * @type {{ name: string, x: number, y: number, a: number, b: number, turn: number }[]}
  */
-export const ISLANDS = [
+const ISLANDS = [
   { name: "Vessay", x: -6.2, y: -0.5, a: 3.6, b: 8.4, turn: -4 },
   { name: "Orrin", x: 5.6, y: 1.2, a: 3.4, b: 8.2, turn: 6 },
   { name: "The Calf", x: 12.5, y: -15.5, a: 2.4, b: 1.7, turn: 20 },
@@ -45,7 +45,7 @@ function radiusSquared({ x: x0, y: y0, a, b, turn }, x, y) {
 }
 
 /** @param {number} lat @param {number} lon */
-export function onIsland(lat, lon) {
+function onIsland(lat, lon) {
   const { x, y } = plane(lat, lon);
   return ISLANDS.some((island) => radiusSquared(island, x, y) <= 1);
 }

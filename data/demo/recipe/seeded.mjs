@@ -7,7 +7,7 @@
  * @param {number} seed an integer
  * @returns {() => number}
  */
-export function uniform(seed) {
+function uniform(seed) {
   let state = seed >>> 0;
   return () => {
     state = (state + 0x9e3779b9) >>> 0;
