@@ -11,25 +11,41 @@ import { listenForKeys } from "./shell/keys.ts";
 import { narrowImages } from "./shell/tile-policy.ts";
 import "./shell/style.css";
 import { openDemo } from "./shell/demo.ts";
+import { wantsDecisions } from "./state/decisions.ts";
 import { EMPTY_PLAN } from "./state/empty-plan.ts";
 import { createPageState } from "./state/page-state.ts";
 import type { Worker as Protocol } from "./worker/protocol.ts";
 
-const worker = new Worker(new URL("./worker/worker.ts", import.meta.url), { type: "module" });
-const page = createPageState(EMPTY_PLAN, Comlink.wrap<Protocol>(worker));
+const startWorker = () =>
+  Comlink.wrap<Protocol>(new Worker(new URL("./worker/worker.ts", import.meta.url), { type: "module" }));
+const engine = startWorker();
+const page = createPageState(EMPTY_PLAN, engine, () => {
+  const second = startWorker();
+  const { port1, port2 } = new MessageChannel();
+  void engine.share(Comlink.transfer(port1, [port1]));
+  void second.follow(Comlink.transfer(port2, [port2]));
+  return second;
+});
 
 restoreView(page.view, viewStorage());
 narrowImages(page.view.tiles.peek());
 keepView(page.view, viewStorage());
 
 effect(() => {
-  void page.answers.ask(page.store.plan.value);
+  void page.answers.ask(page.shown.value);
+});
+// What is decided rests on the estimate, and takes longer: it follows once that is there.
+effect(() => {
+  if (page.answers.answer.value.estimate === null) return;
+  const turnBack = page.desk.part.value === "turn-back";
+  const plan = page.shown.peek();
+  if (turnBack || wantsDecisions(plan)) void page.decisions.ask(plan, turnBack);
 });
 // The coast is large: routes are estimated without it first, and held against it once it is there.
 effect(() => {
   if (!page.answers.answer.value.landPending) return;
   page.engine.loadLand().then(
-    () => page.answers.ask(page.store.plan.peek()),
+    () => page.answers.ask(page.shown.peek()),
     () => {
       page.view.announcement.value = "The coast could not be loaded: routes are not held against land.";
     },

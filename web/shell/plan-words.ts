@@ -1,5 +1,5 @@
 import { clockText, dateText, zoneText } from "../format/time-text.ts";
-import type { PaceDocument, PlanDocument } from "../state/plan-document.ts";
+import type { ArrivalDocument, PaceDocument, PlanDocument } from "../state/plan-document.ts";
 
 /** The rules of pace in words, in the order in which they are offered. */
 export const PACES: readonly (readonly [PaceDocument["hold"], string])[] = [
@@ -9,10 +9,17 @@ export const PACES: readonly (readonly [PaceDocument["hold"], string])[] = [
   ["least-energy", "least energy"],
 ];
 
-export function paceText(pace: PaceDocument = { hold: "through-speed" }): string {
+export function paceText(pace: NonNullable<PlanDocument["pace"]> = { hold: "through-speed" }): string {
+  if ("arrive" in pace) return arrivalText(pace);
   const rule = PACES.find(([hold]) => hold === pace.hold)?.[1] ?? pace.hold;
   const amount = pace.speed ?? pace.power;
   return amount === undefined ? rule : `${rule}, ${amount}`;
+}
+
+function arrivalText({ arrive }: ArrivalDocument): string {
+  if (typeof arrive === "string") return `arrive at ${arrive}`;
+  const { notBefore, notAfter } = arrive;
+  return notBefore === undefined ? `arrive by ${notAfter}` : `arrive between ${notBefore} and ${notAfter}`;
 }
 
 /** The craft's own name, else its file's. `names`: those found in craft files, by the file. */

@@ -1,7 +1,10 @@
-import { type Signal, signal } from "@preact/signals";
-import type { FieldInspection } from "../core.ts";
+import { computed, type ReadonlySignal, type Signal, signal } from "@preact/signals";
+import type { DecidedRoute, FieldInspection } from "../core.ts";
 import type { Worker } from "../worker/protocol.ts";
 import { type Answers, createAnswers } from "./answers.ts";
+import { createDecisions, type Decisions } from "./decisions.ts";
+import { departingAt } from "./departing-at.ts";
+import { createDesk, type Desk } from "./desk.ts";
 import { createPageView, type PageView } from "./page-view.ts";
 import type { FieldDocument, PlanDocument } from "./plan-document.ts";
 import { createPlanStore, type PlanStore } from "./plan-store.ts";
@@ -32,6 +35,14 @@ export interface PageState {
   readonly view: PageView;
   readonly answers: Answers;
   readonly engine: Engine;
+  /** A second worker for what takes longer, begun when it is first asked for. */
+  readonly second: () => Engine;
+  readonly desk: Desk;
+  readonly decisions: Decisions;
+  /** The plan that is estimated and shown: the plan on the page, or the departure that is looked at. */
+  readonly shown: ReadonlySignal<PlanDocument>;
+  /** The routes as shown, with what is decided on top of them once that is there. */
+  readonly routes: ReadonlySignal<readonly (DecidedRoute | null)[]>;
   readonly asking: Signal<FieldQuestion | null>;
   /** The files that the user gave, by the names that plans use. */
   readonly files: Signal<ReadonlyMap<string, Blob>>;
@@ -42,12 +53,40 @@ export interface PageState {
   readonly inspections: Signal<Readonly<Record<string, FieldInspection>>>;
 }
 
-export function createPageState(plan: PlanDocument, engine: Engine): PageState {
+/** @param startSecond starts a second worker that uses the files and fields of the first */
+export function createPageState(
+  plan: PlanDocument,
+  engine: Engine,
+  startSecond: () => Engine = () => engine,
+): PageState {
+  const store = createPlanStore(plan);
+  const desk = createDesk();
+  const answers = createAnswers((asked) => engine.estimate(asked));
+  let begun: Engine | null = null;
+  const second = (): Engine => {
+    begun ??= startSecond();
+    return begun;
+  };
+  const decisions = createDecisions((asked, turnBack) => second().decide(asked, turnBack));
+  const shown = computed(() => {
+    const preview = desk.preview.value;
+    return preview === null ? store.plan.value : departingAt(store.plan.value, preview);
+  });
   return {
-    store: createPlanStore(plan),
+    store,
     view: createPageView(),
-    answers: createAnswers((asked) => engine.estimate(asked)),
+    answers,
     engine,
+    second,
+    desk,
+    decisions,
+    shown,
+    routes: computed(() => {
+      const { routes } = answers.answer.value;
+      const decided = decisions.decided.value;
+      if (decided === null || decided.plan !== shown.value) return routes;
+      return routes.map((route, at) => (route === null ? null : (decided.routes[at] ?? route)));
+    }),
     asking: signal<FieldQuestion | null>(null),
     files: signal<ReadonlyMap<string, Blob>>(new Map()),
     craftNames: signal<Readonly<Record<string, string>>>({}),
@@ -57,9 +96,9 @@ export function createPageState(plan: PlanDocument, engine: Engine): PageState {
 }
 
 /** The instant that the chart shows: the chosen one, or the departure. `null` where the departure can't be read. */
-export function shownInstant({ view, store }: PageState): number | null {
+export function shownInstant({ view, shown }: PageState): number | null {
   const chosen = view.instant.value;
   if (chosen !== null) return chosen;
-  const departure = Date.parse(store.plan.value.departure);
+  const departure = Date.parse(shown.value.departure);
   return Number.isNaN(departure) ? null : departure;
 }

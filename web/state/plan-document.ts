@@ -27,6 +27,46 @@ export interface PaceDocument {
   readonly power?: string;
 }
 
+/** A pace that asks for an arrival: at one time, or between two. */
+export interface ArrivalDocument {
+  readonly arrive: string | { readonly notBefore?: string; readonly notAfter: string };
+}
+
+/** Departures to compare, and speeds. */
+export interface WindowDocument {
+  readonly from: string;
+  readonly to: string;
+  readonly every: string;
+  readonly speeds?: readonly string[];
+  readonly arriveBy?: string;
+}
+
+/** A place to turn off to. */
+export interface AlternateDocument {
+  readonly name: string;
+  readonly lat: number | string;
+  readonly lon: number | string;
+  readonly height?: string;
+}
+
+/** A change of what the estimate rests on. */
+export interface WhatIfDocument {
+  readonly name?: string;
+  readonly wind?: number;
+  readonly current?: number;
+  readonly veer?: string;
+  readonly speed?: string;
+  readonly consumption?: string;
+  readonly late?: string;
+}
+
+/** How wrong a forecast may be. */
+export interface ErrorDocument {
+  readonly speed: string;
+  readonly length: string;
+  readonly time: string;
+}
+
 export interface FieldDocument {
   readonly role: FieldRole;
   readonly file: string;
@@ -34,6 +74,8 @@ export interface FieldDocument {
   readonly gaps?: "nearest" | "zero" | "stop";
   readonly beyond?: "stop" | "hold";
   readonly outside?: "stop" | "zero";
+  readonly member?: number;
+  readonly error?: ErrorDocument;
 }
 
 /** A craft as its file holds it; its own form edits it. */
@@ -44,8 +86,11 @@ export interface PlanDocument {
   readonly title?: string;
   readonly departure: string;
   readonly craft: CraftDocument | { readonly file: string };
-  readonly pace?: PaceDocument;
+  readonly pace?: PaceDocument | ArrivalDocument;
+  readonly window?: WindowDocument;
   readonly reserve?: string;
   readonly fields?: readonly FieldDocument[];
   readonly routes: readonly RouteDocument[];
+  readonly alternates?: readonly AlternateDocument[];
+  readonly whatIf?: readonly WhatIfDocument[];
 }
