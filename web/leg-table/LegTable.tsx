@@ -1,15 +1,19 @@
+import { useSignal } from "@preact/signals";
 import { ADVISORY, type LegEstimate } from "../core.ts";
 import { durationText } from "../format/time-text.ts";
-import { inUnit, shownUnit, storeUnit } from "../format/units.ts";
+import { inUnit } from "../format/units.ts";
 import { Profile } from "../ribbon/Profile.tsx";
 import { Swatch } from "../ribbon/Ribbon.tsx";
+import { copyLegTable } from "../shell/exports.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { RouteDrawing } from "../worker/protocol.ts";
-import { type LegColumn, legColumns } from "./leg-columns.ts";
+import { LegChoices } from "./LegChoices.tsx";
+import { chosenColumns, type LegColumn, legColumns, tableUnits } from "./leg-columns.ts";
 
 /** The leg table of the chosen route. */
 export function LegTable({ page }: { readonly page: PageState }) {
   const { store, view, answers } = page;
+  const choosing = useSignal(false);
   const { route: chosen } = store.selection.value;
   const route = answers.answer.value.routes[chosen] ?? null;
   const drawing = answers.answer.value.drawings[chosen] ?? null;
@@ -23,7 +27,10 @@ export function LegTable({ page }: { readonly page: PageState }) {
       </section>
     );
   }
-  const columns = legColumns(route, view.units.value, view.zone.value);
+  const shown = { preset: view.units.value, zone: view.zone.value, own: view.legUnits.value };
+  const all = legColumns(route, shown);
+  const columns = chosenColumns(all, view.hiddenColumns.value);
+  const { distance, amount } = tableUnits(route, shown);
   const pointed = view.pointed.value?.route === chosen ? view.pointed.value.distance_m : null;
   const marked = pointed === null || drawing === null ? null : legAt(drawing, pointed);
   return (
@@ -34,7 +41,30 @@ export function LegTable({ page }: { readonly page: PageState }) {
           <Swatch route={chosen} />
           {route.name}
         </span>
-        <PartChoice page={page} />
+        <span class="tools">
+          <button type="button" onClick={() => void copyLegTable(page)}>
+            Copy
+          </button>
+          <button
+            type="button"
+            onClick={() => {
+              choosing.value = true;
+            }}
+          >
+            Columns
+          </button>
+          <PartChoice page={page} />
+        </span>
+        {choosing.value && (
+          <LegChoices
+            page={page}
+            route={route}
+            columns={all}
+            onClose={() => {
+              choosing.value = false;
+            }}
+          />
+        )}
       </header>
       {view.routePart.value === "profile" && <Profile page={page} />}
       {/* biome-ignore lint/a11y/noNoninteractiveTabindex: what scrolls must be reached by keyboard (WCAG 2.1.1) */}
@@ -65,10 +95,8 @@ export function LegTable({ page }: { readonly page: PageState }) {
         </table>
       </section>
       <p class="leg-totals leg-part">
-        {route.name}: {inUnit(route.totals.distance_m, shownUnit(view.units.value, "distance"))}{" "}
-        {shownUnit(view.units.value, "distance").symbol}, {durationText(route.totals.time_s)} under way,{" "}
-        {inUnit(route.totals.use, storeUnit(route.storeUnit, route.usable))}{" "}
-        {storeUnit(route.storeUnit, route.usable).symbol} used
+        {route.name}: {inUnit(route.totals.distance_m, distance)} {distance.symbol},{" "}
+        {durationText(route.totals.time_s)} under way, {inUnit(route.totals.use, amount)} {amount.symbol} used
       </p>
       <p class="advisory only-print">{ADVISORY}</p>
     </section>

@@ -11,8 +11,11 @@ import { alongScale, axisOf, distanceAt, farthest } from "./along-axis.ts";
 import { type ProfileTrack, profileTracks } from "./profile-tracks.ts";
 import { keyTarget, placeText } from "./Ribbon.tsx";
 
-const HEIGHT = 34;
 const INSET = 3;
+/** Height of a track, px: on a narrow screen the profile has the pane to itself. */
+const LOW = 34;
+const TALL = 72;
+const NARROW = 420;
 
 /** The chosen route's figures along its way, on the ribbons' axis and pointed at as they are. */
 export function Profile({ page }: { readonly page: PageState }) {
@@ -47,6 +50,10 @@ function Tracks({ page, route, drawing, estimate }: TracksProps) {
   const total = profile.distance_m.at(-1) ?? 0;
   const cursor = pointed === null ? null : scale(valueAtDistance(profile.distance_m, axis, pointed) ?? 0);
   const tracks = profileTracks(profile, estimate, view.units.value);
+  const height = width < NARROW ? TALL : LOW;
+  const waypoints = Array.from(drawing.waypoints, (sample) => drawing.distance_m[sample] ?? 0)
+    .filter((along) => along <= total)
+    .map((along) => scale(valueAtDistance(profile.distance_m, axis, along) ?? 0));
   return (
     <div
       class="profile"
@@ -78,9 +85,12 @@ function Tracks({ page, route, drawing, estimate }: TracksProps) {
             class="profile-strip"
             onPointerMove={(event) => point(distanceAt(profile, byTime, scale.invert(event.offsetX)))}
           >
-            <svg width={width} height={HEIGHT} aria-hidden="true">
-              <Track track={track} axis={axis} scale={scale} />
-              {cursor !== null && <path class="ribbon-cursor" d={`M${cursor} 0V${HEIGHT}`} />}
+            <svg width={width} height={height} aria-hidden="true">
+              {waypoints.map((x, at) => (
+                <path key={at} class="profile-waypoint" d={`M${x} 0V${height}`} />
+              ))}
+              <Track track={track} axis={axis} scale={scale} height={height} />
+              {cursor !== null && <path class="ribbon-cursor" d={`M${cursor} 0V${height}`} />}
             </svg>
           </div>
         </div>
@@ -94,11 +104,12 @@ interface TrackProps {
   readonly track: ProfileTrack;
   readonly axis: Float64Array;
   readonly scale: ReturnType<typeof alongScale>;
+  readonly height: number;
 }
 
-function Track({ track, axis, scale }: TrackProps) {
+function Track({ track, axis, scale, height }: TrackProps) {
   const { values, low, high, signed, bound } = track;
-  const y = linearScale([low, high], [HEIGHT - INSET, INSET]);
+  const y = linearScale([low, high], [height - INSET, INSET]);
   const x = (at: number): number => scale(axis[at] ?? 0);
   const level = (at: number): number => y(values[at] ?? 0);
   const base = y(Math.max(0, low));

@@ -9,6 +9,7 @@ import type { Pane } from "../state/page-view.ts";
 import { RouteEditor } from "../waypoints/RouteEditor.tsx";
 import { ClockBar } from "./ClockBar.tsx";
 import { Header } from "./Header.tsx";
+import { Hint } from "./Hint.tsx";
 import { PlanBar } from "./PlanBar.tsx";
 import { PrintHead } from "./PrintHead.tsx";
 
@@ -46,6 +47,7 @@ export function App({ page }: { readonly page: PageState }) {
       )}
       <NewerVersion page={page} />
       <PlanBar page={page} />
+      <Hint page={page} />
       <FieldDialog page={page} />
       <main>
         <div class="column">

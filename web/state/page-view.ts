@@ -75,7 +75,7 @@ export function createPageView(): PageView {
     shading: signal<"none" | "wind" | "current">("none"),
     level: signal<number | null>(null),
     routePart: signal<RoutePart>("table"),
-    hiddenColumns: signal<readonly string[]>([]),
+    hiddenColumns: signal<readonly string[]>(["from", "final", "crab", "still"]),
     legUnits: signal<LegUnits>({}),
     hintSeen: signal(false),
     tiles: signal(""),
