@@ -46,9 +46,9 @@ export function whatIfResults(
 ): WhatIfResult[][] {
   const results: WhatIfResult[][] = prepared.map(() => []);
   for (const whatIf of whatIfs) {
-    const fields = whatIfFields(whatIf, conditions[0]?.fields ?? [], prepared);
-    for (const [index, route] of prepared.entries())
-      results[index]?.push(whatIfResult(whatIf, route, conditions[index] as Conditions, fields));
+    const changed = whatIfFields(whatIf, conditions[0]?.fields ?? [], prepared);
+    for (const [index, route] of changed.prepared.entries())
+      results[index]?.push(whatIfResult(whatIf, route, conditions[index] as Conditions, changed.fields));
   }
   return results;
 }

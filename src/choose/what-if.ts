@@ -43,25 +43,30 @@ export function whatIfText(change: Omit<WhatIf, "name">): string {
   return parts.length === 0 ? "as planned" : parts.join(", ");
 }
 
-/** A what-if's fields, on the axes of the plan's: changed at the nodes that these routes touch, and there alone. */
+/** A what-if's fields, and the routes prepared for them: see {@link changeField}. */
 export function whatIfFields(
   whatIf: WhatIf,
   fields: readonly Field[],
   prepared: readonly PreparedRoute[],
-): Field[] {
-  return fields.map((field, index) => {
-    const isWind = field.role === "wind";
-    const change = isWind
-      ? { factor: whatIf.wind, veer_deg: whatIf.veer_deg }
-      : { factor: whatIf.current, veer_deg: 0 };
-    return changeField(field, index, change, prepared);
-  });
+): { readonly fields: readonly Field[]; readonly prepared: readonly PreparedRoute[] } {
+  const changed: Field[] = [];
+  let routes = prepared;
+  for (const [index, field] of fields.entries()) {
+    const change =
+      field.role === "wind"
+        ? { factor: whatIf.wind, veer_deg: whatIf.veer_deg }
+        : { factor: whatIf.current, veer_deg: 0 };
+    const made = changeField(field, index, change, routes);
+    changed.push(made.field);
+    routes = made.prepared;
+  }
+  return { fields: changed, prepared: routes };
 }
 
 /**
  * A route and its conditions under a what-if.
  *
- * @param fields of {@link whatIfFields}
+ * @param prepared and `fields` of {@link whatIfFields}
  * @throws InputError where a speed is changed that the pace does not hold, or one leaves the craft's power model
  */
 export function underWhatIf(
