@@ -32,12 +32,19 @@ function contentPolicy(): Plugin {
   };
 }
 
-/** Takes from Leaflet's style sheet what styles controls, popups and its own marker images: the chart has none of them. */
-function leafletStyles(): Plugin {
+/**
+ * Leaves out of Leaflet what the chart has none of: paths on a canvas, and the styles of controls, popups and its own marker
+ * images.
+ */
+function lessLeaflet(): Plugin {
   const unused = /leaflet-(control|popup|bar|oldie|default-icon-path)|\.lvml/;
+  const noCanvas = "\0no-canvas";
   return {
-    name: "leaflet-styles",
+    name: "less-leaflet",
     enforce: "pre",
+    resolveId: (source, importer = "") =>
+      source === "./Canvas" && importer.includes("leaflet/src/layer/vector/") ? noCanvas : null,
+    load: (id) => (id === noCanvas ? "export const canvas = () => null;" : null),
     transform(code, id) {
       if (!id.includes("leaflet/dist/leaflet.css")) return null;
       const bare = code.replace(/\/\*[\s\S]*?\*\//g, "");
@@ -51,7 +58,7 @@ function leafletStyles(): Plugin {
 export default defineConfig({
   root: new URL(".", import.meta.url).pathname,
   base: "./",
-  plugins: [leafletStyles(), contentPolicy(), precache()],
+  plugins: [lessLeaflet(), contentPolicy(), precache()],
   resolve: {
     alias: [{ find: /^leaflet$/, replacement: new URL("chart/leaflet-parts.mjs", import.meta.url).pathname }],
   },
@@ -62,7 +69,8 @@ export default defineConfig({
     target: "es2022",
     // What is inlined could not be fetched under the policy.
     assetsInlineLimit: 0,
-    modulePreload: { polyfill: false },
+    // Parts that are loaded later need nothing preloaded for them, and the helper that would do it is part of the first load.
+    modulePreload: false,
     rollupOptions: {
       input: {
         index: new URL("index.html", import.meta.url).pathname,

@@ -9,7 +9,6 @@ import "leaflet/src/map/handler/Map.Drag.js";
 import "leaflet/src/map/handler/Map.Keyboard.js";
 import "leaflet/src/map/handler/Map.BoxZoom.js";
 import "leaflet/src/map/handler/Map.ScrollWheelZoom.js";
-import "leaflet/src/map/handler/Map.TapHold.js";
 import "leaflet/src/map/handler/Map.TouchZoom.js";
 import * as DomEvent from "leaflet/src/dom/DomEvent.js";
 import * as DomUtil from "leaflet/src/dom/DomUtil.js";
