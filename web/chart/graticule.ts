@@ -36,7 +36,7 @@ export function graticuleLines(from: number, to: number, step: number): number[]
 }
 
 /** Decimals of minutes that tell neighbouring lines apart. */
-export function minuteDecimals(step: number): number {
+function minuteDecimals(step: number): number {
   const minutes = step * 60;
   if (minutes >= 1 - 1e-9) return 0;
   return minutes >= 0.1 - 1e-9 ? 1 : 2;

@@ -18,7 +18,7 @@ import {
 import { QuantityField } from "./QuantityField.tsx";
 
 /** The first fault of a craft, and the key that it stands at. */
-export interface CraftFault {
+interface CraftFault {
   readonly key: string | null;
   readonly fault: string;
 }

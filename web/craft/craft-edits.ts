@@ -4,7 +4,7 @@ import type { CraftPath, ModelName } from "./craft-fields.ts";
 type Value = unknown;
 
 /** The value at a path; `undefined` where there is none. */
-export function valueAt(craft: CraftDocument, path: CraftPath): Value {
+function valueAt(craft: CraftDocument, path: CraftPath): Value {
   return path.reduce<Value>(
     (value, key) => (typeof value === "object" && value !== null ? Reflect.get(value, key) : undefined),
     craft,

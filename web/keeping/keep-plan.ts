@@ -115,7 +115,7 @@ export function warnBeforeLoss({ store }: PageState, { safe }: Keeping): void {
 }
 
 /** The names of the files that a plan refers to. */
-export function filesOf({ craft, fields = [] }: PlanDocument): string[] {
+function filesOf({ craft, fields = [] }: PlanDocument): string[] {
   const own = "file" in craft && typeof craft.file === "string" ? [craft.file] : [];
   return [...own, ...fields.map(({ file }) => file)];
 }

@@ -1,6 +1,6 @@
 import type { RouteEstimate } from "../core.ts";
 
-export type CostKind = "still" | "gain" | "along" | "cross";
+type CostKind = "still" | "gain" | "along" | "cross";
 
 /** A part of a route's stacked bar, from and to in seconds. `gain` is what a following flow took off the still part. */
 export interface CostPart {

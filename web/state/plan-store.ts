@@ -8,7 +8,7 @@ export interface Selection {
   readonly waypoint: number | null;
 }
 
-export interface EditOptions {
+interface EditOptions {
   /** Edits in a row with the same key are undone as one. */
   readonly merge?: string;
   /** What is chosen after the edit; otherwise what was chosen before, as far as it still exists. */

@@ -34,12 +34,12 @@ export interface RouteDrawing {
 }
 
 /** What a user can mend comes back as a sentence; a defect is thrown. */
-export interface Fault {
+interface Fault {
   readonly ok: false;
   readonly fault: string;
 }
 
-export interface Estimated {
+interface Estimated {
   readonly ok: true;
   readonly estimate: Estimate;
   readonly drawings: readonly RouteDrawing[];
