@@ -200,6 +200,35 @@ describe("what-ifs of several routes", () => {
     });
   });
 
+  test("keep levels, gaps and tiles: figures and findings are those of the fields changed as a whole", () => {
+    const levels = gridField("wind", { ...shape, height: [10, 100, 300] }, (lon, lat, h, height) => [
+      2 + height / 100 + Math.sin(lon + h / 4),
+      Math.cos(lat - h / 7),
+    ]);
+    const [low] = levels.tiles as [Tile];
+    const masks = low.slices.map((slice) =>
+      Uint8Array.from({ length: slice.length / 2 }, (_, n) => (n % 7 === 3 ? 1 : 0)),
+    );
+    const patch = gridField("wind", { ...shape, lon: spaced(-3, -1.5, 3), lat: spaced(48, 50, 4) }, () => [
+      1, -6,
+    ]);
+    const field: Field = { ...levels, tiles: [...patch.tiles, { ...low, masks }] };
+    const route = routeOf(
+      waypoint("P", 48, -5, { height_m: 20 }),
+      waypoint("Q", 50.5, -2.2, { height_m: 250, stay_s: 600 }),
+      waypoint("R", 48.7, -1.1, { height_m: 60 }),
+    );
+    const base = caseOf(route, [field], { craft: hovering, pace: { hold: "through-speed", speed_m_s: 16 } });
+    const whole = caseOf(route, [mapped(field, (u, v) => [1.5 * u, 1.5 * v])], {
+      craft: hovering,
+      pace: { hold: "through-speed", speed_m_s: 16 },
+    });
+    const { totals, status } = runOf(whole).estimate;
+    const found = one(base, { wind: 1.5 });
+    expect(Math.abs((found.use as number) / (totals.use as number) - 1)).toBeLessThan(1e-13);
+    expect([found.status, found.worst?.code]).toEqual([status, "gap-filled"]);
+  });
+
   test("of a craft that hovers meet the changed wind while it stays", () => {
     const angle = (15 * Math.PI) / 180;
     const whole = mapped(gusty, (u, v) => [
