@@ -18,7 +18,10 @@ export interface Sweep {
 }
 
 /**
+ * What a window of departures is worked out for, from what an estimate rests on; the fields that do not act on the craft are left out.
+ *
  * @param prepared by `prepareRoutes`, from the same input
+ * @param arrive the arrival that the pace asks for; `null`, where its pace says how fast, unless given
  *
  * @example
  * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "100 kWh" } }', "boat.craft.json");
