@@ -88,7 +88,7 @@ export async function openDemo(page: Page, entry: string, name: string): Promise
 }
 
 /** What the page last said to those who hear it. */
-function said(page: Page): Promise<string | null> {
+export function said(page: Page): Promise<string | null> {
   return page.locator(".page > p[role=status]").textContent();
 }
 

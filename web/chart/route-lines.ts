@@ -61,6 +61,8 @@ export class RouteLines {
       offset: [0, -8],
       className: "route-tip",
     });
+    // Chromium lets Tab stop at a path that listens for focus, as a tooltip's does; the ledger is the keyboard's way to a route.
+    hit.getElement()?.setAttribute("tabindex", "-1");
   }
 
   /** One line for each run of samples of one class. */
