@@ -35,6 +35,7 @@ export type {
 export { columnNames } from "../src/field/column-names.ts";
 export type { FieldRole } from "../src/field/field.ts";
 export type { FieldInspection } from "../src/field/inspect.ts";
+export { LATTICE_COVERED, LATTICE_GAP } from "../src/field/lattice.ts";
 export type { Position } from "../src/geodesy/track.ts";
 export { parseCoordinate } from "../src/plan/position.ts";
 export type { Units } from "../src/report/input.ts";

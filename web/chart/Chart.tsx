@@ -1,26 +1,38 @@
 import { useSignal } from "@preact/signals";
 import { useEffect, useRef } from "preact/hooks";
 import { latText, lonText } from "../format/position-text.ts";
-import { shownUnit } from "../format/units.ts";
+import { inUnit, shownUnit } from "../format/units.ts";
 import type { PageState } from "../state/page-state.ts";
+import type { PageView } from "../state/page-view.ts";
+import type { FieldAt } from "../worker/protocol.ts";
 import { type ChartSession, openChart } from "./chart-session.ts";
 import { ShadingLegend } from "./ShadingLegend.tsx";
 import { scaleBar } from "./scale-bar.ts";
+import { UnderPointer } from "./UnderPointer.tsx";
 
 /** The chart with its tools and read-outs. The table of waypoints is its equivalent for those who can't see it. */
 export function Chart({ page }: { readonly page: PageState }) {
   const host = useRef<HTMLDivElement>(null);
   const session = useRef<ChartSession | null>(null);
   const pointer = useSignal<{ lat: number; lon: number } | null>(null);
+  const under = useSignal<readonly FieldAt[]>([]);
+  const levels = useSignal<readonly number[]>([]);
   const metresPerPx = useSignal(1);
   const shadingLimit = useSignal<number | null>(null);
 
   useEffect(() => {
     if (!host.current) return;
-    const opened = openChart(host.current, page, { pointer, metresPerPx, shadingLimit });
+    const opened = openChart(host.current, page, { pointer, under, metresPerPx, shadingLimit });
     session.current = opened;
     return () => opened.close();
-  }, [page, pointer, metresPerPx, shadingLimit]);
+  }, [page, pointer, under, metresPerPx, shadingLimit]);
+  const fields = page.answers.answer.value.estimate?.fields;
+  useEffect(() => {
+    if (fields === undefined) return;
+    void page.engine.levels().then((found) => {
+      levels.value = found;
+    });
+  }, [fields, page, levels]);
 
   const { view } = page;
   const bar = scaleBar(metresPerPx.value, shownUnit(view.units.value, "distance").si, 120);
@@ -66,6 +78,7 @@ export function Chart({ page }: { readonly page: PageState }) {
             <option value="wind">wind</option>
           </select>
         </label>
+        <LevelChoice view={view} levels={levels.value} />
       </div>
       <ShadingLegend limit_m_s={shadingLimit.value} units={view.units.value} />
       <div class="chart-scale" aria-hidden="true">
@@ -76,8 +89,37 @@ export function Chart({ page }: { readonly page: PageState }) {
         {bar.value} {shownUnit(view.units.value, "distance").symbol}
       </div>
       <output class="chart-position" aria-label="Position of the pointer">
-        {place === null ? "" : `${latText(place.lat)}  ${lonText(place.lon)}`}
+        {place !== null && (
+          <>
+            <UnderPointer fields={under.value} units={view.units.value} />
+            <span>{`${latText(place.lat)}  ${lonText(place.lon)}`}</span>
+          </>
+        )}
       </output>
     </div>
+  );
+}
+
+/** The height of the fields on the chart, where they have more than one. */
+function LevelChoice({ view, levels }: { readonly view: PageView; readonly levels: readonly number[] }) {
+  if (levels.length < 2) return null;
+  const unit = shownUnit(view.units.value, "height");
+  const level = view.level.value ?? levels[0] ?? 0;
+  return (
+    <label class="chart-shade">
+      Height{" "}
+      <select
+        value={level}
+        onChange={({ currentTarget: { value } }) => {
+          view.level.value = Number(value);
+        }}
+      >
+        {levels.map((height) => (
+          <option key={height} value={height}>
+            {inUnit(height, unit)} {unit.symbol}
+          </option>
+        ))}
+      </select>
+    </label>
   );
 }

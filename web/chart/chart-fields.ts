@@ -1,10 +1,12 @@
 import { effect, type Signal } from "@preact/signals";
 import type * as L from "leaflet";
 import type { FieldRole } from "../core.ts";
+import { withinTurn } from "../format/position-text.ts";
 import { shownUnit } from "../format/units.ts";
 import { latestWins, SUPERSEDED } from "../state/latest-wins.ts";
 import { type PageState, shownInstant } from "../state/page-state.ts";
-import type { Lattice, LatticeQuestion } from "../worker/protocol.ts";
+import type { FieldAt, Lattice, LatticeQuestion, PlaceQuestion } from "../worker/protocol.ts";
+import { type Area, areasOf, createCoverage } from "./coverage-layer.ts";
 import { createShading, createSymbols, latticeFor, latticeLimit, type Shaded } from "./field-layer.ts";
 
 const ROLES: readonly FieldRole[] = ["current", "wind"];
@@ -12,7 +14,7 @@ const ROLES: readonly FieldRole[] = ["current", "wind"];
 /** Shows the plan's fields at the chart's instant: symbols for each role, and shading for the one chosen. */
 export function showFields(map: L.Map, page: PageState, shadingLimit: Signal<number | null>): () => void {
   const closers = ROLES.map((role) => showRole(map, page, role));
-  closers.push(showShading(map, page, shadingLimit));
+  closers.push(showShading(map, page, shadingLimit), showCoverage(map, page));
   return () => {
     for (const close of closers) close();
   };
@@ -28,7 +30,10 @@ function showRole(map: L.Map, page: PageState, role: FieldRole): () => void {
       layer.redraw();
     };
     if (!shown || instant === null) put(null);
-    else void ask(latticeFor(map, role, instant, false)).then((found) => found && put(found));
+    else
+      void ask(latticeFor(map, role, instant, page.view.level.value, false)).then(
+        (found) => found && put(found),
+      );
   });
 }
 
@@ -47,9 +52,41 @@ function showShading(map: L.Map, page: PageState, limit: Signal<number | null>):
       put(null);
       return;
     }
-    const step = latticeFor(map, role, instant, true);
+    const step = latticeFor(map, role, instant, page.view.level.value, true);
     const { si } = shownUnit(page.view.units.value, "speed");
     void ask(step).then((lattice) => lattice && put({ lattice, step, limit_m_s: latticeLimit(lattice, si) }));
+  });
+}
+
+/** Outlines the area of each field file, as far as it has been read. */
+function showCoverage(map: L.Map, page: PageState): () => void {
+  let areas: readonly Area[] = [];
+  const layer = createCoverage(() => areas).addTo(map);
+  return effect(() => {
+    areas = areasOf(page.store.plan.value.fields ?? [], page.inspections.value);
+    layer.redraw();
+  });
+}
+
+/** Asks for the fields' values under the pointer, at the chart's instant and height. */
+export function readUnderPointer(
+  page: PageState,
+  pointer: Signal<{ lat: number; lon: number } | null>,
+  under: Signal<readonly FieldAt[]>,
+): () => void {
+  const newest = latestWins((question: PlaceQuestion) => page.engine.fieldsAt(question));
+  return effect(() => {
+    const place = pointer.value;
+    const instant = shownInstant(page);
+    const height_m = page.view.level.value;
+    const { estimate } = page.answers.answer.value;
+    if (place === null || instant === null || estimate === null) {
+      under.value = [];
+      return;
+    }
+    void newest({ lat: place.lat, lon: withinTurn(place.lon), height_m, instant }).then((found) => {
+      if (found !== SUPERSEDED && pointer.peek() !== null) under.value = found;
+    });
   });
 }
 

@@ -6,7 +6,8 @@ import { nearestSample, placeAtDistance, placeAtTime } from "../state/along-rout
 import { alongLimit } from "../state/along-scale.ts";
 import { type PageState, shownInstant } from "../state/page-state.ts";
 import { appendWaypoint, deleteWaypoint, insertWaypoint, placeWaypoint } from "../state/waypoint-edits.ts";
-import { showFields } from "./chart-fields.ts";
+import type { FieldAt } from "../worker/protocol.ts";
+import { readUnderPointer, showFields } from "./chart-fields.ts";
 import { type ChartMap, createChartMap } from "./chart-map.ts";
 import { turnsToward } from "./longitude.ts";
 import { Marks } from "./marks.ts";
@@ -16,6 +17,8 @@ import { WaypointHandles } from "./waypoint-handles.ts";
 
 export interface ChartReadouts {
   readonly pointer: Signal<{ lat: number; lon: number } | null>;
+  /** What the fields say under the pointer. */
+  readonly under: Signal<readonly FieldAt[]>;
   readonly metresPerPx: Signal<number>;
   /** Where the shading's scale ends, m/s; `null` where nothing is shaded. */
   readonly shadingLimit: Signal<number | null>;
@@ -40,6 +43,7 @@ export function openChart(host: HTMLElement, page: PageState, readouts: ChartRea
     followPointer(map, readouts),
     showRoutes(map, page),
     showFields(map, page, readouts.shadingLimit),
+    readUnderPointer(page, readouts.pointer, readouts.under),
     addByClick(map, page),
     followTheme(chart, page),
   ];

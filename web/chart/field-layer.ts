@@ -1,5 +1,5 @@
 import type * as L from "leaflet";
-import type { FieldRole } from "../core.ts";
+import { type FieldRole, LATTICE_COVERED, LATTICE_GAP } from "../core.ts";
 import { roundLimit, SPEED_CLASSES, speedClass, speedColour } from "../format/palette.ts";
 import { shownUnit } from "../format/units.ts";
 import type { Lattice, LatticeQuestion } from "../worker/protocol.ts";
@@ -14,9 +14,30 @@ const BARB_GAP = 68;
 const ARROW_GAP = 50;
 const ARROW_LENGTH = 30;
 const SHADE_CELL = 6;
+/** A small cross where the grid has no value. */
+const GAP: FlowSymbol = {
+  strokes: [
+    [
+      [-3, -3],
+      [3, 3],
+    ],
+    [
+      [-3, 3],
+      [3, -3],
+    ],
+  ],
+  fills: [],
+  calm: null,
+};
 
 /** What a field's symbols or shading need to know of the map's view. */
-export function latticeFor(map: L.Map, role: FieldRole, instant: number, shading: boolean): LatticeQuestion {
+export function latticeFor(
+  map: L.Map,
+  role: FieldRole,
+  instant: number,
+  height_m: number | null,
+  shading: boolean,
+): LatticeQuestion {
   const bounds = map.getBounds().pad(0.1);
   const pxPerLon = map.getSize().x / (map.getBounds().getEast() - map.getBounds().getWest());
   const narrow = Math.cos((map.getCenter().lat * Math.PI) / 180);
@@ -27,7 +48,7 @@ export function latticeFor(map: L.Map, role: FieldRole, instant: number, shading
   return {
     role,
     instant,
-    height_m: null,
+    height_m,
     south: Math.max(bounds.getSouth(), -85),
     north: Math.min(bounds.getNorth(), 85),
     west: bounds.getWest(),
@@ -65,7 +86,11 @@ function drawSymbols(frame: OverlayFrame, lattice: Lattice | null, role: FieldRo
     const u = lattice.east_m_s[at] ?? 0;
     const v = lattice.north_m_s[at] ?? 0;
     const { x, y } = place(lat, lattice.lon[at] ?? 0);
-    drawSymbol(context, role === "wind" ? barbOf(u, v, lat) : arrowOf(u, v, strongest), x, y);
+    const state = lattice.state[at];
+    // What was not given stands back behind what was.
+    context.globalAlpha = state === LATTICE_COVERED ? 1 : 0.5;
+    if (state === LATTICE_GAP) drawSymbol(context, GAP, x, y);
+    else drawSymbol(context, role === "wind" ? barbOf(u, v, lat) : arrowOf(u, v, strongest), x, y);
   }
 }
 
@@ -127,13 +152,14 @@ function drawShading(frame: OverlayFrame, shaded: Shaded | null): void {
   const { context, place } = frame;
   const { lattice, step, limit_m_s: limit } = shaded;
   const colours = Array.from({ length: SPEED_CLASSES }, (_, at) => speedColour(at));
+  const none = cssColour("--edge");
   for (let at = 0; at < lattice.lat.length; at += 1) {
     const lat = lattice.lat[at] ?? 0;
     const lon = lattice.lon[at] ?? 0;
     const corner = place(lat + step.stepLat / 2, lon - step.stepLon / 2);
     const far = place(lat - step.stepLat / 2, lon + step.stepLon / 2);
     const speed = Math.hypot(lattice.east_m_s[at] ?? 0, lattice.north_m_s[at] ?? 0);
-    context.fillStyle = colours[speedClass(speed, limit)] ?? "";
+    context.fillStyle = lattice.state[at] === LATTICE_GAP ? none : (colours[speedClass(speed, limit)] ?? "");
     const x = Math.floor(corner.x);
     const y = Math.floor(corner.y);
     context.fillRect(x, y, Math.ceil(far.x) - x, Math.ceil(far.y) - y);

@@ -1,3 +1,4 @@
+import { FieldButton } from "../files/FieldButton.tsx";
 import { Readings } from "../files/Readings.tsx";
 import { fromLocalInput, localInput, zoneText } from "../format/time-text.ts";
 import type { PageState } from "../state/page-state.ts";
@@ -45,9 +46,9 @@ export function PlanBar({ page }: { readonly page: PageState }) {
       <div class="plan-item fields">
         <span>Fields</span>
         <ul>
-          {(plan.fields ?? []).map(({ role, file }, index) => (
+          {(plan.fields ?? []).map(({ file }, index) => (
             <li key={file}>
-              <em>{role}</em> {file}
+              <FieldButton page={page} index={index} />
               <button
                 type="button"
                 aria-label={`Take ${file} out of the plan`}

@@ -4,12 +4,15 @@
 export { type Land, type LandTopology, prepareLand } from "../../src/coast/land.ts";
 export { unrolledRing } from "../../src/coast/ring.ts";
 export { type StillPoint, stillCurve, stillPoint } from "../../src/craft/still-curve.ts";
+export { currentSet, windFrom } from "../../src/craft/triangle.ts";
 export {
   LATTICE_COVERED,
   LATTICE_FILLED,
+  LATTICE_GAP,
   LATTICE_HELD,
   sampleLattice,
 } from "../../src/field/lattice.ts";
+export { sampleField } from "../../src/field/sample.ts";
 export {
   densify,
   type EstimateAnswer,

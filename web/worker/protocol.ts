@@ -84,12 +84,33 @@ export interface LatticeQuestion {
   readonly phase: number;
 }
 
-/** Where the field has a value, in order; places without one are left out. Components in m/s, the way the medium moves. */
+/** Where the field has a value or lacks one inside its grid, in order; places outside are left out. Components in m/s, the way the medium moves. */
 export interface Lattice {
   readonly lat: Float64Array;
   readonly lon: Float64Array;
   readonly east_m_s: Float32Array;
   readonly north_m_s: Float32Array;
+  /** What each vector rests on, by the core's lattice states; at a gap it is zero and means nothing. */
+  readonly state: Uint8Array;
+}
+
+export interface PlaceQuestion {
+  readonly lat: number;
+  readonly lon: number;
+  readonly height_m: number | null;
+  readonly instant: number;
+}
+
+/** A field's flow at a place. Direction: where a wind comes from, where a current sets, degrees true. */
+export interface FieldAt {
+  readonly role: FieldRole;
+  readonly flow: {
+    readonly speed_m_s: number;
+    readonly direction_deg: number;
+    readonly gust_m_s: number | null;
+  } | null;
+  /** Why there is no flow; `null` where there is one. */
+  readonly none: "outside-area" | "outside-time" | "gap" | null;
 }
 
 export type CoastDetail = "50m" | "10m";
@@ -196,6 +217,10 @@ export interface Worker {
   planText(plan: PlanDocument): string;
   craftText(craft: CraftDocument): string;
   lattice(question: LatticeQuestion): Promise<Lattice>;
+  /** The fields of the plan last estimated, at a place. */
+  fieldsAt(question: PlaceQuestion): readonly FieldAt[];
+  /** Heights at which those fields have levels, m, ascending. */
+  levels(): readonly number[];
   coastTile(z: number, x: number, y: number, detail: CoastDetail): Promise<CoastTile>;
   /** Resolves once the fine coast is there to be drawn. */
   loadFineCoast(): Promise<void>;

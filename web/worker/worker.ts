@@ -7,6 +7,7 @@ import { serializeCraft, serializePlan } from "./core.ts";
 import { studyCraft } from "./craft-study.ts";
 import type { Deciding } from "./deciding.ts";
 import { createEstimator } from "./estimator.ts";
+import { fieldsAt, levelsOf } from "./field-at.ts";
 import { createFieldShelf } from "./field-shelf.ts";
 import { createFileShelf } from "./file-shelf.ts";
 import { createLandShelf } from "./land-shelf.ts";
@@ -63,6 +64,8 @@ const worker: Worker = {
   planText: (plan) => serializePlan(plan as Parameters<typeof serializePlan>[0]),
   craftText: (craft) => serializeCraft(craft as Parameters<typeof serializeCraft>[0]),
   lattice: async (question) => handLattice(answerLattice(fields.current(), question)),
+  fieldsAt: (question) => fieldsAt(fields.current(), question),
+  levels: () => levelsOf(fields.current()),
   coastTile: async (z, x, y, detail) => handTile(await coast.tile(z, x, y, detail)),
   async loadFineCoast() {
     await coast.load("10m");
@@ -89,8 +92,8 @@ function handTile(tile: CoastTile): CoastTile {
 }
 
 function handLattice(lattice: Lattice): Lattice {
-  const { lat, lon, east_m_s, north_m_s } = lattice;
-  return Comlink.transfer(lattice, [lat.buffer, lon.buffer, east_m_s.buffer, north_m_s.buffer]);
+  const { lat, lon, east_m_s, north_m_s, state } = lattice;
+  return Comlink.transfer(lattice, [lat.buffer, lon.buffer, east_m_s.buffer, north_m_s.buffer, state.buffer]);
 }
 
 function handEstimate(answer: EstimateAnswer): EstimateAnswer {
