@@ -24,20 +24,6 @@ export interface FieldsRead {
 }
 
 /**
- * Reads the field files that a plan names and makes the files of each role one field; the roles come in the plan's order. Where
- * files have members, the control's fields.
- *
- * @throws InputError as {@link readMembers} does
- */
-export async function readFields(
-  references: readonly FieldReference[],
-  open: OpenFile,
-  onProgress: FileProgress = () => undefined,
-): Promise<Field[]> {
-  return [...(await readMembers(references, open, onProgress)).fields];
-}
-
-/**
  * Reads the field files that a plan names, with every member of an ensemble. Members of wind and current belong together by
  * their numbers.
  *
