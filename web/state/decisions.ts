@@ -6,7 +6,7 @@ import { latestWins, SUPERSEDED } from "./latest-wins.ts";
 import type { PlanDocument } from "./plan-document.ts";
 
 /** What was decided for a plan, indexed as the plan's routes. */
-export interface Decided {
+interface Decided {
   readonly plan: PlanDocument;
   readonly routes: readonly (DecidedRoute | null)[];
   readonly sensitivities: readonly (SensitivityProfile | null)[];

@@ -15,7 +15,7 @@ export type Engine = {
 };
 
 /** A field file that is being read. */
-export interface Reading {
+interface Reading {
   readonly ticket: number;
   readonly file: string;
   /** 0..1 */
@@ -23,7 +23,7 @@ export interface Reading {
 }
 
 /** A field file whose meaning the user is asked. */
-export interface FieldQuestion {
+interface FieldQuestion {
   readonly content: File;
   /** Ends the question; `null` leaves the file out. */
   answer(field: FieldDocument | null): void;
