@@ -1,7 +1,7 @@
 import { type Signal, signal } from "@preact/signals";
 
 /** What lies on the desk under the ribbons: the legs, or one of the questions that a decision asks. */
-type DeskPart = "legs" | "window" | "pace" | "turn-back" | "sure";
+export type DeskPart = "legs" | "window" | "pace" | "turn-back" | "sure";
 
 /** A departure that is looked at before it is chosen, with the speed that belongs to it where the window tries several. */
 export interface Preview {
