@@ -95,11 +95,17 @@ type Ask = (question: LatticeQuestion) => Promise<Lattice | null>;
 /** Runs now, when a signal that it reads changes, and when the map has moved; superseded answers are `null`. */
 function keepAsked(map: L.Map, page: PageState, run: (instant: number | null, ask: Ask) => void): () => void {
   const newest = latestWins((question: LatticeQuestion) => page.engine.lattice(question));
+  let runs = 0;
   const ask: Ask = async (question) => {
+    const mine = runs;
     const found = await newest(question);
-    return found === SUPERSEDED ? null : found;
+    // A later run may have had nothing to ask.
+    return found === SUPERSEDED || mine !== runs ? null : found;
   };
-  const again = (): void => run(shownInstant(page), ask);
+  const again = (): void => {
+    runs += 1;
+    run(shownInstant(page), ask);
+  };
   const stop = effect(() => {
     // A field can be drawn once the plan that names it is answered.
     page.answers.answer.value.estimate?.fields;

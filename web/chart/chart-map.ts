@@ -32,6 +32,8 @@ export function createChartMap(element: HTMLElement, coast: TileSource, wantFine
     ],
   });
   addPane(map, "coast", 210);
+  // Above the coast, which shows where a tile is missing.
+  addPane(map, "tiles", 215);
   addPane(map, "shading", 220);
   addPane(map, "graticule", 230);
   addPane(map, "field", 240);
@@ -53,7 +55,7 @@ export function createChartMap(element: HTMLElement, coast: TileSource, wantFine
     },
     showTiles(address) {
       tiles?.remove();
-      tiles = address === "" ? null : L.tileLayer(address, { maxZoom: MAX_ZOOM, zIndex: 5 }).addTo(map);
+      tiles = address === "" ? null : L.tileLayer(address, { maxZoom: MAX_ZOOM, pane: "tiles" }).addTo(map);
     },
     fineCoastReady: () => coastline.refresh(),
   };

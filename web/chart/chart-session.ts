@@ -2,6 +2,7 @@ import { effect, type Signal } from "@preact/signals";
 import * as L from "leaflet";
 import { withinTurn } from "../format/position-text.ts";
 import { shownUnit } from "../format/units.ts";
+import { isTileAddress, letsIn } from "../shell/tile-policy.ts";
 import { nearestSample, placeAtDistance, placeAtTime } from "../state/along-route.ts";
 import { alongLimit } from "../state/along-scale.ts";
 import { type PageState, shownInstant } from "../state/page-state.ts";
@@ -52,7 +53,7 @@ export function openChart(host: HTMLElement, page: PageState, readouts: ChartRea
 
   const fitRoutes = (): void => showAll(map, page);
   if (!fitted) closers.push(fitWhenFirstDrawn(page, fitRoutes));
-  closers.push(fitUntilTouched(map, fitRoutes));
+  closers.push(fitUntilTouched(map, fitRoutes), fitOpened(map, page));
   return {
     zoom: (steps) => map.setZoom(map.getZoom() + steps),
     fitRoutes,
@@ -221,7 +222,10 @@ function followTheme(chart: ChartMap, { view }: PageState): () => void {
       if (drawn) queueMicrotask(recolour);
       drawn = true;
     }),
-    effect(() => chart.showTiles(view.tiles.value)),
+    effect(() => {
+      const { value: tiles } = view.tiles;
+      chart.showTiles(isTileAddress(tiles) && letsIn(tiles) ? tiles : "");
+    }),
     effect(() => {
       const place = view.lookAt.value;
       if (place === null) return;
@@ -248,13 +252,19 @@ function showAll(map: L.Map, { store, answers }: PageState): void {
 
 /** Opens on the whole plan, or on the world where the plan is empty; says whether there was a plan to show. */
 function firstView(map: L.Map, { store }: PageState): boolean {
-  const points = store.plan
-    .peek()
-    .routes.flatMap((route) => handlesOf(route) ?? [])
-    .map(({ lat, lon }): L.LatLngTuple => [lat, lon]);
+  const places = store.plan.peek().routes.flatMap((route) => handlesOf(route) ?? []);
+  const first = places[0]?.lon ?? 0;
+  const points = places.map(({ lat, lon }): L.LatLngTuple => [lat, lon + turnsToward(lon, first)]);
   if (points.length < 2) map.setView([25, 0], 2);
   else map.fitBounds(L.latLngBounds(points), FIT);
   return points.length >= 2;
+}
+
+/** Shows the whole of each plan that is opened, by its waypoints: its routes are yet to be drawn. */
+function fitOpened(map: L.Map, page: PageState): () => void {
+  return page.view.opened.subscribe((count) => {
+    if (count > 0) firstView(map, page);
+  });
 }
 
 /** Shows the whole of a plan once, when it is first there; afterwards the view is the user's. */

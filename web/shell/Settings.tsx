@@ -1,11 +1,13 @@
 import type { PageState } from "../state/page-state.ts";
 import { TextField } from "../waypoints/TextField.tsx";
 import { Menu } from "./Menu.tsx";
+import { isTileAddress, letsIn } from "./tile-policy.ts";
 
 /** Units, time zone, theme and the user's own tile address. */
 export function Settings({ page: { view } }: { readonly page: PageState }) {
   const own = Intl.DateTimeFormat().resolvedOptions().timeZone;
-  const zones = [...new Set(["UTC", own, view.zone.value])];
+  const near = [...new Set(["UTC", own, view.zone.value])];
+  const others = Intl.supportedValuesOf("timeZone").filter((zone) => !near.includes(zone));
   return (
     <Menu name="Show as">
       <label>
@@ -29,9 +31,14 @@ export function Settings({ page: { view } }: { readonly page: PageState }) {
             view.zone.value = value;
           }}
         >
-          {zones.map((zone) => (
+          {near.map((zone) => (
             <option key={zone}>{zone}</option>
           ))}
+          <optgroup label="other zones">
+            {others.map((zone) => (
+              <option key={zone}>{zone}</option>
+            ))}
+          </optgroup>
         </select>
       </label>
       <label>
@@ -57,7 +64,27 @@ export function Settings({ page: { view } }: { readonly page: PageState }) {
             view.tiles.value = text.trim();
           }}
         />
+        <TileNote tiles={view.tiles.value} />
       </div>
     </Menu>
+  );
+}
+
+/** What stands between an address and its tiles: the page lets images in from the address that it began with. */
+function TileNote({ tiles }: { readonly tiles: string }) {
+  if (tiles === "") return null;
+  if (!isTileAddress(tiles)) {
+    return (
+      <p class="field-fault">An address of tiles begins with https:// and holds {"{z}, {x} and {y}"}.</p>
+    );
+  }
+  if (letsIn(tiles)) return null;
+  return (
+    <>
+      <p class="quiet">Tiles from a new address are let in when the page is loaded again.</p>
+      <button type="button" onClick={() => window.location.reload()}>
+        Load the page again
+      </button>
+    </>
   );
 }

@@ -28,9 +28,11 @@ export async function openPlan(
     if (!answer.ok && !answer.cancelled) page.view.notice.value = answer.fault;
   }
   page.view.instant.value = null;
+  page.view.level.value = null;
   // There is nothing to go back to where nothing was.
   if (page.store.plan.peek().routes.length === 0) page.store.restart(plan);
   else page.store.open(plan, `Open ${name}`);
+  page.view.opened.value += 1;
   page.view.announcement.value = `Opened ${name}`;
   return true;
 }

@@ -3,7 +3,7 @@ import { type Signal, signal } from "@preact/signals";
 export type UnitsPreset = "sea" | "air" | "metric";
 export type Theme = "auto" | "light" | "dark";
 export type RibbonAxis = "distance" | "time";
-export type Pane = "chart" | "ribbons" | "ledger" | "route" | "legs";
+export type Pane = "chart" | "ribbons" | "ledger" | "route" | "legs" | "decide";
 
 /** What the pane of the chosen route shows: its leg table or its profile. */
 export type RoutePart = "table" | "profile";
@@ -36,6 +36,8 @@ export interface PageView {
   readonly base: Signal<number | null>;
   /** The pane that a narrow screen shows. */
   readonly pane: Signal<Pane>;
+  /** Counts the plans that were opened: the chart shows the whole of each. */
+  readonly opened: Signal<number>;
   /** A place that the chart is asked to bring into view. */
   readonly lookAt: Signal<{ readonly lat: number; readonly lon: number } | null>;
   /** Whether a click on the chart adds a waypoint. */
@@ -70,6 +72,7 @@ export function createPageView(): PageView {
     pointed: signal<Pointed | null>(null),
     base: signal<number | null>(null),
     pane: signal<Pane>("chart"),
+    opened: signal(0),
     lookAt: signal<{ readonly lat: number; readonly lon: number } | null>(null),
     adding: signal(false),
     shading: signal<"none" | "wind" | "current">("none"),
