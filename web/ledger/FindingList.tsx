@@ -4,9 +4,8 @@ import { SeverityShape } from "./StatusMark.tsx";
 
 /** The chosen route's findings in words, the gravest first; each leads to its place. */
 export function FindingList({ page }: { readonly page: PageState }) {
-  const { store, answers } = page;
-  const { route: chosen } = store.selection.value;
-  const route = answers.answer.value.routes[chosen];
+  const { route: chosen } = page.store.selection.value;
+  const route = page.routes.value[chosen];
   if (!route) return null;
   const order = ["stop", "caution", "note"];
   const findings = [...route.findings].sort((a, b) => order.indexOf(a.severity) - order.indexOf(b.severity));

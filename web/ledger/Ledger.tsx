@@ -1,5 +1,5 @@
 import { ADVISORY, type RouteEstimate, type StoreUnit } from "../core.ts";
-import { clockSince, durationText, signedDurationText, zoneText } from "../format/time-text.ts";
+import { clockSince, clockText, durationText, signedDurationText, zoneText } from "../format/time-text.ts";
 import { inUnit, signedInUnit, storeUnit } from "../format/units.ts";
 import { Swatch } from "../ribbon/Ribbon.tsx";
 import type { PageState } from "../state/page-state.ts";
@@ -11,8 +11,9 @@ import { StatusMark } from "./StatusMark.tsx";
 
 /** A row a route: what it costs, what is left, what to worry about; beside the advisory, since here is where one decides. */
 export function Ledger({ page }: { readonly page: PageState }) {
-  const { store, view, answers } = page;
-  const { routes, fault } = answers.answer.value;
+  const { store, view, answers, desk } = page;
+  const { fault } = answers.answer.value;
+  const routes = page.routes.value;
   const plan = store.plan.value;
   const base = view.base.value === null ? null : (routes[view.base.value] ?? null);
   const best = bestOf(routes);
@@ -39,6 +40,12 @@ export function Ledger({ page }: { readonly page: PageState }) {
           </select>
         </label>
       </header>
+      {desk.preview.value !== null && (
+        <p class="looking">
+          Looking at departure {clockText(desk.preview.value.departure, zone, true)}{" "}
+          {zoneText(desk.preview.value.departure, zone)}: not the plan's
+        </p>
+      )}
       {fault !== null && (
         <p class="fault" role="alert">
           {fault}

@@ -1,4 +1,5 @@
 import { Chart } from "../chart/Chart.tsx";
+import { DeskTabs } from "../desk/DeskTabs.tsx";
 import { FieldDialog } from "../files/FieldDialog.tsx";
 import { Ledger } from "../ledger/Ledger.tsx";
 import { LegTable } from "../leg-table/LegTable.tsx";
@@ -10,6 +11,7 @@ import { RouteEditor } from "../waypoints/RouteEditor.tsx";
 import { ClockBar } from "./ClockBar.tsx";
 import { Header } from "./Header.tsx";
 import { Hint } from "./Hint.tsx";
+import { LazyPart } from "./LazyPart.tsx";
 import { PlanBar } from "./PlanBar.tsx";
 import { PrintHead } from "./PrintHead.tsx";
 
@@ -19,10 +21,20 @@ const PANES: readonly (readonly [Pane, string])[] = [
   ["ledger", "Ledger"],
   ["route", "Plan"],
   ["legs", "Legs"],
+  ["decide", "Decide"],
 ];
 
+const loadDesk = () => import("../desk/DeskPane.tsx").then(({ DeskPane }) => DeskPane);
+
+/** On a narrow screen the desk is a pane among the others. */
+function showPane({ view, desk }: PageState, pane: Pane): void {
+  view.pane.value = pane;
+  if (pane !== "decide") desk.part.value = "legs";
+  else if (desk.part.value === "legs") desk.part.value = "window";
+}
+
 export function App({ page }: { readonly page: PageState }) {
-  const { view } = page;
+  const { view, desk } = page;
   return (
     <div class="page" data-shown={view.pane.value}>
       <nav class="skip" aria-label="Skip to">
@@ -49,14 +61,16 @@ export function App({ page }: { readonly page: PageState }) {
       <PlanBar page={page} />
       <Hint page={page} />
       <FieldDialog page={page} />
-      <main>
+      <main data-desk={desk.part.value}>
         <div class="column">
           <section class="pane chart-pane" data-pane="chart" aria-label="Chart and clock">
             <Chart page={page} />
             <ClockBar page={page} />
           </section>
           <Ribbons page={page} />
+          <DeskTabs page={page} legs />
           <LegTable page={page} />
+          {desk.part.value !== "legs" && <LazyPart page={page} load={loadDesk} />}
         </div>
         <div class="column">
           <Ledger page={page} />
@@ -69,9 +83,7 @@ export function App({ page }: { readonly page: PageState }) {
             key={pane}
             type="button"
             aria-current={view.pane.value === pane ? "true" : undefined}
-            onClick={() => {
-              view.pane.value = pane;
-            }}
+            onClick={() => showPane(page, pane)}
           >
             {name}
           </button>

@@ -1,0 +1,52 @@
+import { TimeField } from "../arrival/ArrivalFields.tsx";
+import { setWindow } from "../state/decide-edits.ts";
+import type { PageState } from "../state/page-state.ts";
+import type { WindowDocument } from "../state/plan-document.ts";
+import { TextField } from "../waypoints/TextField.tsx";
+
+interface WindowSettingsProps {
+  readonly page: PageState;
+  /** The plan's window, or one that is proposed. */
+  readonly window: WindowDocument;
+}
+
+/** First and last departure, step, speeds. What is proposed is written to the plan with the first change. */
+export function WindowSettings({ page, window }: WindowSettingsProps) {
+  const { store, view } = page;
+  const change = (part: Partial<WindowDocument>): void =>
+    store.edit("Change window", (plan) => setWindow(plan, { ...window, ...part }));
+  const zone = view.zone.value;
+  return (
+    <>
+      <TimeField label="From" value={window.from} zone={zone} onTime={(from) => change({ from })} />
+      <TimeField label="To" value={window.to} zone={zone} onTime={(to) => change({ to })} />
+      <div class="plan-item shorter">
+        <span>Every</span>
+        <TextField
+          label="Step between departures"
+          value={window.every}
+          placeholder="30 min"
+          onText={(every) => change({ every: every.trim() === "" ? window.every : every })}
+        />
+      </div>
+      <div class="plan-item short">
+        <span>Speeds</span>
+        <TextField
+          label="Speeds to try, with commas between"
+          value={(window.speeds ?? []).join(", ")}
+          placeholder="the pace's"
+          onText={(text) => store.edit("Change window", (plan) => setWindow(plan, withSpeeds(window, text)))}
+        />
+      </div>
+    </>
+  );
+}
+
+/** Speeds from a text with commas or semicolons; an empty text takes them away. */
+export function withSpeeds({ speeds: _old, ...window }: WindowDocument, text: string): WindowDocument {
+  const speeds = text
+    .split(/[,;]/)
+    .map((speed) => speed.trim())
+    .filter((speed) => speed !== "");
+  return speeds.length === 0 ? window : { ...window, speeds };
+}

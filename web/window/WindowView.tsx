@@ -1,0 +1,125 @@
+import { useSignal } from "@preact/signals";
+import { useEffect, useMemo } from "preact/hooks";
+import { estimable } from "../state/estimable.ts";
+import type { PageState } from "../state/page-state.ts";
+import { Bests } from "./Bests.tsx";
+import { HeatLegend } from "./HeatLegend.tsx";
+import { HeatMap } from "./HeatMap.tsx";
+import type { Measure, RowChoice } from "./heat-rows.ts";
+import { proposedWindow } from "./proposed-window.ts";
+import { WindowSettings } from "./WindowSettings.tsx";
+import { createWindowFill } from "./window-fill.ts";
+import { windowKey } from "./window-plan.ts";
+
+const MEASURES: readonly (readonly [Measure, string])[] = [
+  ["time", "Time"],
+  ["use", "Use"],
+  ["left", "Left"],
+];
+
+/** Departures compared: every route, and every speed where the window names some, over a span of departures. */
+export function WindowView({ page }: { readonly page: PageState }) {
+  const { store, answers, desk } = page;
+  const fill = useMemo(() => createWindowFill([() => page.engine, page.second]), [page]);
+  const measure = useSignal<Measure>("time");
+  const rows = useSignal<RowChoice>({ by: "routes", route: 0, speed: 0 });
+  const plan = store.plan.value;
+  const { estimate, landPending } = answers.answer.value;
+  const part = estimable(plan);
+  const window = plan.window ?? proposedWindow(plan, estimate);
+  const key = part === null || estimate === null ? "" : windowKey(part.plan, window, landPending);
+
+  useEffect(() => {
+    if (part !== null && key !== "") void fill.ask({ ...part.plan, window });
+    return () => fill.stop();
+    // The key says when any of the others is another.
+  }, [fill, key]);
+  useEffect(
+    () => () => {
+      desk.preview.value = null;
+    },
+    [desk],
+  );
+
+  const filled = fill.filled.value;
+  const speeds = filled?.shape.speeds ?? null;
+  return (
+    <div class="window-view">
+      <div class="window-bar">
+        <WindowSettings page={page} window={window} />
+        <div class="plan-item">
+          <span>Colours</span>
+          <fieldset class="choice">
+            <legend class="unseen">What the colours stand for</legend>
+            {MEASURES.map(([choice, name]) => (
+              <label key={choice}>
+                <input
+                  type="radio"
+                  name="window-measure"
+                  checked={measure.value === choice}
+                  onChange={() => {
+                    measure.value = choice;
+                  }}
+                />
+                <span>{name}</span>
+              </label>
+            ))}
+          </fieldset>
+        </div>
+        {speeds !== null && filled !== null && (
+          <RowsField page={page} rows={rows.value} speeds={speeds} onRows={(next) => (rows.value = next)} />
+        )}
+      </div>
+      {fill.fault.value !== null && (
+        <p class="fault" role="alert">
+          {fill.fault.value}
+        </p>
+      )}
+      {filled === null ? (
+        <p class="quiet window-none">
+          {part === null ? "A route with two waypoints can be compared." : "Working out the departures…"}
+        </p>
+      ) : (
+        <>
+          <HeatMap page={page} filled={filled} measure={measure.value} rows={rows.value} />
+          <HeatLegend page={page} filled={filled} measure={measure.value} />
+          <Bests page={page} filled={filled} onRefine={() => void fill.refine()} />
+        </>
+      )}
+    </div>
+  );
+}
+
+interface RowsFieldProps {
+  readonly page: PageState;
+  readonly rows: RowChoice;
+  readonly speeds: readonly number[];
+  readonly onRows: (rows: RowChoice) => void;
+}
+
+function RowsField({ page, rows, speeds, onRows }: RowsFieldProps) {
+  const names = page.store.plan.value.window?.speeds ?? [];
+  const route = page.store.selection.value.route;
+  return (
+    <label>
+      <span>Rows</span>
+      <select
+        value={rows.by === "speeds" ? "speeds" : String(rows.speed)}
+        onChange={({ currentTarget: { value } }) =>
+          onRows(
+            value === "speeds"
+              ? { by: "speeds", route, speed: 0 }
+              : { by: "routes", route, speed: Number(value) },
+          )
+        }
+      >
+        {speeds.map((speed, at) => (
+          <option key={speed} value={at}>
+            routes at {names[at] ?? speed}
+          </option>
+        ))}
+        <option value="speeds">speeds of {page.store.plan.value.routes[route]?.name ?? "the route"}</option>
+      </select>
+    </label>
+  );
+}

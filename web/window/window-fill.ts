@@ -1,0 +1,169 @@
+import { type ReadonlySignal, signal } from "@preact/signals";
+import type { WindowCell } from "../core.ts";
+import type { Engine } from "../state/page-state.ts";
+import type { PlanDocument } from "../state/plan-document.ts";
+import type { WindowBests, WindowShape } from "../worker/protocol.ts";
+import { cellOrder } from "./fill-order.ts";
+
+/** A window as far as it is worked out. */
+export interface Filled {
+  readonly plan: PlanDocument;
+  readonly shape: WindowShape;
+  /** By the cells' indices; `null` where still to come. The same array is filled on and on. */
+  readonly cells: readonly (WindowCell | null)[];
+  readonly done: number;
+  /** Once all cells are there. */
+  readonly bests: WindowBests | null;
+}
+
+export interface WindowFill {
+  readonly filled: ReadonlySignal<Filled | null>;
+  /** The core's sentence about what is wrong with the window; `null` where nothing is. */
+  readonly fault: ReadonlySignal<string | null>;
+  /** Begins anew with a plan that names a window; what was going on ends. */
+  ask(plan: PlanDocument): Promise<void>;
+  /** Works out the bests to the minute. */
+  refine(): Promise<void>;
+  stop(): void;
+}
+
+type Hand = Pick<Engine, "beginWindow" | "windowSlice" | "windowBests">;
+
+/** How long a hand works before it looks up: the first also answers everything else that the page asks. */
+const BUDGETS_MS = [8, 40] as const;
+/** Most cells that a hand is given at a time, so that it does not keep what another could do. */
+const MOST_GIVEN = 64;
+
+let tickets = 0;
+
+/** @param hands the workers that fill a window together; the first begins at once */
+export function createWindowFill(hands: readonly (() => Hand)[]): WindowFill {
+  const filled = signal<Filled | null>(null);
+  const fault = signal<string | null>(null);
+  let current = 0;
+
+  const begin = async (hand: Hand, ticket: number, plan: PlanDocument): Promise<WindowShape | null> => {
+    const answer = await hand.beginWindow(ticket, plan);
+    if (ticket !== current) return null;
+    if (answer.ok) return answer;
+    fault.value = answer.fault;
+    return null;
+  };
+
+  return {
+    filled,
+    fault,
+    async ask(plan) {
+      tickets += 1;
+      const ticket = tickets;
+      current = ticket;
+      const queue = createQueue();
+      const show = createShow(filled, () => ticket === current);
+      await Promise.all(
+        hands.map(async (handOf, at) => {
+          const hand = handOf();
+          const shape = await begin(hand, ticket, plan);
+          if (shape === null) return;
+          if (queue.open(shape)) show.open(plan, shape);
+          fault.value = null;
+          await work(hand, ticket, queue, show, BUDGETS_MS[at] ?? 40);
+        }),
+      );
+      const done = show.finished();
+      if (ticket !== current || done === null) return;
+      const [first] = hands;
+      const bests = await first?.().windowBests(ticket, done, false);
+      if (ticket === current && bests && filled.value) filled.value = { ...filled.value, bests };
+    },
+    async refine() {
+      const now = filled.value;
+      const hand = hands.at(-1)?.();
+      if (now === null || hand === undefined) return;
+      const ticket = current;
+      const cells = now.cells.flatMap((cell) => cell ?? []);
+      const bests = await hand.windowBests(ticket, cells, true);
+      if (ticket === current && bests && filled.value) filled.value = { ...filled.value, bests };
+    },
+    stop() {
+      tickets += 1;
+      current = tickets;
+    },
+  };
+}
+
+/** Takes cells from the queue and works them out, until none is left or another window was asked. */
+async function work(
+  hand: Hand,
+  ticket: number,
+  queue: ReturnType<typeof createQueue>,
+  show: ReturnType<typeof createShow>,
+  budget_ms: number,
+): Promise<void> {
+  for (let given = queue.take(); given.length > 0 && show.wanted(); given = queue.take()) {
+    const slice = await hand.windowSlice(ticket, given, budget_ms);
+    if (slice === null || !show.wanted()) return;
+    const { length } = slice.cells;
+    queue.giveBack(given.subarray(length));
+    show.add(given.subarray(0, length), slice.cells);
+  }
+}
+
+function createQueue() {
+  let order: Int32Array | null = null;
+  let next = 0;
+  let returned: Int32Array[] = [];
+  return {
+    /** Says whether it was the first to open it. */
+    open({ departures, routes, speeds }: WindowShape): boolean {
+      if (order !== null) return false;
+      order = cellOrder(departures.length, routes * (speeds?.length ?? 1));
+      return true;
+    },
+    take(): Int32Array {
+      const back = returned.shift();
+      if (back !== undefined) return back;
+      const given = order?.slice(next, next + MOST_GIVEN) ?? new Int32Array();
+      next += given.length;
+      return given;
+    },
+    giveBack(rest: Int32Array): void {
+      if (rest.length > 0) returned = [rest.slice(), ...returned];
+    },
+  };
+}
+
+/** Shows what is done at most once a frame. */
+function createShow(filled: { value: Filled | null }, wanted: () => boolean) {
+  let cells: (WindowCell | null)[] = [];
+  let done = 0;
+  let painting = false;
+  const paint = (): void => {
+    painting = false;
+    if (wanted() && filled.value) filled.value = { ...filled.value, cells, done };
+  };
+  return {
+    wanted,
+    open(plan: PlanDocument, shape: WindowShape): void {
+      cells = Array.from(
+        { length: shape.departures.length * shape.routes * (shape.speeds?.length ?? 1) },
+        () => null,
+      );
+      filled.value = { plan, shape, cells, done: 0, bests: null };
+    },
+    add(indices: Int32Array, found: readonly WindowCell[]): void {
+      found.forEach((cell, at) => {
+        cells[indices[at] ?? 0] = cell;
+      });
+      done += found.length;
+      if (painting) return;
+      painting = true;
+      requestAnimationFrame(paint);
+    },
+    /** All cells in order; `null` while some are missing. */
+    finished(): readonly WindowCell[] | null {
+      if (done === 0 || done < cells.length) return null;
+      paint();
+      return cells.flatMap((cell) => cell ?? []);
+    },
+  };
+}
