@@ -26,15 +26,24 @@ const UNDONE = 1e-7;
 const isometricRate = (shape: Ellipsoid, lat: number): number =>
   meridionalRadius(shape, lat) / (transverseRadius(shape, lat) * Math.cos(lat * DEGREE));
 
-/** Integral over latitude, degrees, of a function of it, in radians, by Simpson's rule. */
-function simpson(integrand: (lat: number) => number, from: number, to: number): number {
-  const strips = 4096;
+/** Nodes and weights of the 5-point Gauss-Legendre rule on [-1, 1] (Abramowitz & Stegun, table 25.4). */
+const GAUSS = [
+  [0, 0.5688888888888889],
+  [-0.5384693101056831, 0.4786286704993665],
+  [0.5384693101056831, 0.4786286704993665],
+  [-0.906179845938664, 0.2369268850561891],
+  [0.906179845938664, 0.2369268850561891],
+] as const;
+
+/** Integral over latitude, degrees, of a function of it, in radians, by Gauss's rule on 200 panels. */
+function quadrature(integrand: (lat: number) => number, from: number, to: number): number {
+  const half = (to - from) / 400;
   let sum = 0;
-  for (let i = 0; i <= strips; i++) {
-    const weight = i === 0 || i === strips ? 1 : i % 2 === 1 ? 4 : 2;
-    sum += weight * integrand(from + ((to - from) * i) / strips);
+  for (let panel = 0; panel < 200; panel += 1) {
+    const middle = from + (2 * panel + 1) * half;
+    for (const [node, weight] of GAUSS) sum += weight * integrand(middle + half * node);
   }
-  return (sum * (to - from) * DEGREE) / (3 * strips);
+  return sum * half * DEGREE;
 }
 
 describe("the rhumb inverse and direct problems", () => {
@@ -136,12 +145,12 @@ describe("the rhumb inverse and direct problems", () => {
       fc.property(latitude, latitude, turn, flattening, (lat1, lat2, lon, f) => {
         fc.pre(Math.abs(lat2 - lat1) > 0.1);
         const shape = ellipsoid(6400000, f);
-        const arc = simpson((lat) => meridionalRadius(shape, lat), lat1, lat2);
-        const chart = simpson((lat) => isometricRate(shape, lat), lat1, lat2);
+        const arc = quadrature((lat) => meridionalRadius(shape, lat), lat1, lat2);
+        const chart = quadrature((lat) => isometricRate(shape, lat), lat1, lat2);
         const expected = Math.abs(arc) * Math.hypot(1, (lon * DEGREE) / chart);
-        // Simpson's rule on 4096 strips up to 80 degrees is good to 1e-12 of 2e7 m.
+        // Found at most 6e-8 m apart: the rounding of 20,000 km and of the sums.
         expect(Math.abs(rhumbInverse(shape, at(lat1, 0), at(lat2, lon)).distance - expected)).toBeLessThan(
-          2e-6,
+          2e-7,
         );
       }),
       { numRuns: 100 },
