@@ -6,7 +6,8 @@ import { shownUnit } from "../format/units.ts";
 import { latestWins, SUPERSEDED } from "../state/latest-wins.ts";
 import { type PageState, shownInstant } from "../state/page-state.ts";
 import type { FieldAt, Lattice, LatticeQuestion, PlaceQuestion } from "../worker/protocol.ts";
-import { type Area, areasOf, createCoverage } from "./coverage-layer.ts";
+import { createCoverage } from "./coverage-layer.ts";
+import { type Area, areasOf } from "./field-areas.ts";
 import { createShading, createSymbols, latticeFor, latticeLimit, type Shaded } from "./field-layer.ts";
 
 const ROLES: readonly FieldRole[] = ["current", "wind"];

@@ -29,6 +29,7 @@ export async function openPlan(
   }
   page.view.instant.value = null;
   page.view.level.value = null;
+  page.answers.forget();
   // There is nothing to go back to where nothing was.
   if (page.store.plan.peek().routes.length === 0) page.store.restart(plan);
   else page.store.open(plan, `Open ${name}`);

@@ -21,6 +21,8 @@ export interface Answers {
   readonly working: ReadonlySignal<boolean>;
   /** Asks for an estimate of this plan; of several asked while one runs, only the last is run. */
   ask(plan: PlanDocument): Promise<void>;
+  /** Drops the answer, so that nothing is shown of a plan that is no longer there. */
+  forget(): void;
 }
 
 const NONE: Answer = { estimate: null, routes: [], drawings: [], fault: null, landPending: false };
@@ -34,6 +36,9 @@ export function createAnswers(estimate: (plan: PlanDocument) => Promise<Estimate
   return {
     answer,
     working,
+    forget() {
+      answer.value = NONE;
+    },
     async ask(plan) {
       asked += 1;
       const mine = asked;
