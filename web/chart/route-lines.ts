@@ -100,7 +100,7 @@ export function shiftFor(map: L.Map, lon: ArrayLike<number>): number {
 }
 
 /** Names from files are text, never markup. */
-function textElement(text: string): HTMLElement {
+export function textElement(text: string): HTMLElement {
   const element = document.createElement("span");
   element.textContent = text;
   return element;
