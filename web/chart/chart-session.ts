@@ -14,6 +14,7 @@ import { turnsToward } from "./longitude.ts";
 import { Marks } from "./marks.ts";
 import { RouteLines, shiftFor } from "./route-lines.ts";
 import { drawnRoutes, handlesOf, legMiddles } from "./route-view.ts";
+import { showTurnBack } from "./turn-back-marks.ts";
 import { WaypointHandles } from "./waypoint-handles.ts";
 
 export interface ChartReadouts {
@@ -47,6 +48,7 @@ export function openChart(host: HTMLElement, page: PageState, readouts: ChartRea
     readUnderPointer(page, readouts.pointer, readouts.under),
     addByClick(map, page),
     followTheme(chart, page),
+    showTurnBack(map, page),
   ];
   const resized = new ResizeObserver(() => map.invalidateSize({ pan: false }));
   resized.observe(host);

@@ -1,5 +1,6 @@
 import type { Finding } from "../core.ts";
 import type { PageState } from "../state/page-state.ts";
+import { TurnBackList } from "../turn-back/TurnBackList.tsx";
 import { SeverityShape } from "./StatusMark.tsx";
 
 /** The chosen route's findings in words, the gravest first; each leads to its place. */
@@ -28,6 +29,12 @@ export function FindingList({ page }: { readonly page: PageState }) {
             </li>
           ))}
         </ul>
+      )}
+      {route.turnBack !== undefined && (
+        <>
+          <h3>Turning back</h3>
+          <TurnBackList page={page} at={chosen} route={route} />
+        </>
       )}
     </section>
   );

@@ -7,13 +7,18 @@ import { valueAtDistance } from "../state/along-route.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { RouteDrawing } from "../worker/protocol.ts";
 import { axisOf, distanceAt } from "./along-axis.ts";
+import { RibbonDecided } from "./RibbonDecided.tsx";
+import {
+  BAND_BOTTOM,
+  BAND_HEIGHT,
+  BAND_TOP,
+  NAMES_HEIGHT,
+  REACH_STEP,
+  STORE_HEIGHT,
+  STORE_TOP,
+  storeLevel,
+} from "./ribbon-measures.ts";
 import { ribbonRuns } from "./ribbon-runs.ts";
-
-const STORE_TOP = 3;
-const STORE_HEIGHT = 20;
-const BAND_TOP = STORE_TOP + STORE_HEIGHT + 2;
-const BAND_HEIGHT = 11;
-const HEIGHT = BAND_TOP + BAND_HEIGHT + 16;
 
 interface RibbonProps {
   readonly page: PageState;
@@ -29,7 +34,7 @@ export function Ribbon({ page, route, scale, width, limit }: RibbonProps) {
   const { store, view, answers } = page;
   const document = store.plan.value.routes[route];
   const drawing = answers.answer.value.drawings[route] ?? null;
-  const estimate = answers.answer.value.routes[route] ?? null;
+  const estimate = page.routes.value[route] ?? null;
   const chosen = store.selection.value.route === route;
   if (document === undefined) return null;
 
@@ -55,6 +60,9 @@ export function Ribbon({ page, route, scale, width, limit }: RibbonProps) {
   const { profile } = drawing;
   const byTime = view.axis.value === "time";
   const axis = axisOf(profile, byTime);
+  const goals = estimate.turnBack?.goals.length ?? 0;
+  // The goals but the destination, and a little air.
+  const strips = chosen && goals > 0 ? (goals - 1) * REACH_STEP + 3 : 0;
   const pointed = view.pointed.value?.route === route ? view.pointed.value.distance_m : null;
   const point = (distance_m: number | null): void => {
     view.pointed.value = distance_m === null ? null : { route, distance_m };
@@ -84,14 +92,15 @@ export function Ribbon({ page, route, scale, width, limit }: RibbonProps) {
         }}
         onClick={() => store.select({ route, waypoint: null })}
       >
-        <svg width={width} height={HEIGHT} aria-hidden="true">
+        <svg width={width} height={BAND_BOTTOM + strips + NAMES_HEIGHT} aria-hidden="true">
           <StoreLine profile={drawing.profile} axis={axis} scale={scale} estimate={estimate} route={route} />
           <Band profile={drawing.profile} axis={axis} scale={scale} limit={limit} />
-          <Ticks page={page} route={route} drawing={drawing} axis={axis} scale={scale} />
+          <Ticks page={page} route={route} drawing={drawing} axis={axis} scale={scale} below={strips} />
+          <RibbonDecided page={page} route={route} decided={estimate} drawing={drawing} scale={scale} />
           {pointed !== null && (
             <path
               class="ribbon-cursor"
-              d={`M${scale(valueAtDistance(drawing.profile.distance_m, axis, pointed) ?? 0)} 0V${BAND_TOP + BAND_HEIGHT + 3}`}
+              d={`M${scale(valueAtDistance(drawing.profile.distance_m, axis, pointed) ?? 0)} 0V${BAND_BOTTOM + 3}`}
             />
           )}
         </svg>
@@ -155,8 +164,7 @@ interface StoreLineProps {
 /** Store left, from full at the top to empty at the bottom, and the reserve that it must not fall below. */
 function StoreLine({ profile, axis, scale, estimate, route }: StoreLineProps) {
   const bottom = STORE_TOP + STORE_HEIGHT;
-  const level = (amount: number): number =>
-    bottom - (Math.min(Math.max(amount / estimate.usable, 0), 1) * STORE_HEIGHT || 0);
+  const level = (amount: number): number => storeLevel(amount, estimate.usable);
   const x = (at: number): number => scale(axis[at] ?? 0);
   const y = (at: number): number => level(profile.remaining[at] ?? 0);
   return (
@@ -179,11 +187,13 @@ interface TicksProps {
   readonly drawing: RouteDrawing;
   readonly axis: Float64Array;
   readonly scale: LinearScale;
+  /** Room that names leave below the band, px. */
+  readonly below: number;
 }
 
 const NAME_GAP = 54;
 
-function Ticks({ page, route, drawing, axis, scale }: TicksProps) {
+function Ticks({ page, route, drawing, axis, scale, below }: TicksProps) {
   const { profile } = drawing;
   const waypoints = page.store.plan.value.routes[route]?.waypoints ?? [];
   if (!profile) return null;
@@ -202,7 +212,7 @@ function Ticks({ page, route, drawing, axis, scale }: TicksProps) {
           <g key={at} transform={`translate(${x} ${BAND_TOP})`}>
             <path d={`M0 -2V${BAND_HEIGHT + 3}`} />
             {hasRoom && (
-              <text y={BAND_HEIGHT + 13} text-anchor={at === 0 ? "start" : last ? "end" : "middle"}>
+              <text y={BAND_HEIGHT + below + 13} text-anchor={at === 0 ? "start" : last ? "end" : "middle"}>
                 {waypoints[at]?.name ?? at + 1}
               </text>
             )}

@@ -1,0 +1,110 @@
+import { addAlternate, changeAlternate, deleteAlternate } from "../state/decide-edits.ts";
+import type { PageState } from "../state/page-state.ts";
+import type { AlternateDocument } from "../state/plan-document.ts";
+import { TextField } from "../waypoints/TextField.tsx";
+
+const KEYS: readonly (readonly [keyof AlternateDocument, string])[] = [
+  ["name", "Name"],
+  ["lat", "Latitude"],
+  ["lon", "Longitude"],
+];
+
+/** The plan's alternates, typed or set on the chart. */
+export function AlternateList({ page }: { readonly page: PageState }) {
+  const { store, desk } = page;
+  const alternates = store.plan.value.alternates ?? [];
+  return (
+    <section class="alternates" aria-label="Alternates">
+      {alternates.length > 0 && (
+        <table class="waypoint-table">
+          <thead>
+            <tr>
+              <th scope="col">#</th>
+              {KEYS.map(([key, name]) => (
+                <th key={key} scope="col">
+                  {key === "name" ? "Alternate" : name}
+                </th>
+              ))}
+              <th scope="col">
+                <span class="unseen">Take out</span>
+              </th>
+            </tr>
+          </thead>
+          <tbody>
+            {alternates.map((alternate, at) => (
+              <AlternateRow key={at} page={page} alternate={alternate} at={at} />
+            ))}
+          </tbody>
+        </table>
+      )}
+      <div class="tools waypoint-tools">
+        <button
+          type="button"
+          aria-pressed={desk.placing.value}
+          onClick={() => {
+            desk.placing.value = !desk.placing.value;
+          }}
+        >
+          {desk.placing.value ? "Click the chart to set it…" : "Set an alternate on the chart"}
+        </button>
+        <button type="button" onClick={() => addNear(page)}>
+          Type an alternate
+        </button>
+      </div>
+    </section>
+  );
+}
+
+interface AlternateRowProps {
+  readonly page: PageState;
+  readonly alternate: AlternateDocument;
+  readonly at: number;
+}
+
+function AlternateRow({ page: { store }, alternate, at }: AlternateRowProps) {
+  return (
+    <tr>
+      <th scope="row">{at + 1}</th>
+      {KEYS.map(([key, name]) => (
+        <td key={key}>
+          <TextField
+            label={`${name} of alternate ${at + 1}`}
+            value={String(alternate[key] ?? "")}
+            onText={(text) => {
+              // An alternate without a name or a position is none: an emptied field shows what it was.
+              if (text.trim() !== "")
+                store.edit("Change alternate", (plan) =>
+                  changeAlternate(plan, at, { [key]: key === "name" ? text : degreesOr(text) }),
+                );
+            }}
+          />
+        </td>
+      ))}
+      <td>
+        <button
+          type="button"
+          aria-label={`Take out alternate ${alternate.name}`}
+          onClick={() => store.edit("Take out alternate", (plan) => deleteAlternate(plan, at))}
+        >
+          ✕
+        </button>
+      </td>
+    </tr>
+  );
+}
+
+/** A bare number is degrees, anything else a position in a notation of the plan's. */
+function degreesOr(text: string): number | string {
+  const number = Number(text);
+  return Number.isNaN(number) ? text : number;
+}
+
+/** Begins an alternate halfway along the chosen route, to be typed over. */
+function addNear({ store, answers }: PageState): void {
+  const drawing = answers.answer.peek().drawings[store.selection.peek().route];
+  const middle = drawing ? drawing.lat.length >> 1 : 0;
+  const round = (degrees: number): number => Number(degrees.toFixed(4));
+  const lat = round(drawing?.lat[middle] ?? 0);
+  const lon = round((((((drawing?.lon[middle] ?? 0) + 180) % 360) + 360) % 360) - 180);
+  store.edit("Add alternate", (plan) => addAlternate(plan, lat, lon));
+}
