@@ -11,6 +11,7 @@ import { CraftForm } from "./CraftForm.tsx";
 import { CraftPlots } from "./CraftPlots.tsx";
 import { craftInText, craftOf } from "./craft-document.ts";
 import { textAt } from "./craft-edits.ts";
+import { hasPlace } from "./craft-places.ts";
 
 const LARGEST_CRAFT = 5_000_000;
 
@@ -62,7 +63,7 @@ export function CraftDialog({ page, onClose }: { readonly page: PageState; reado
           Done
         </button>
       </header>
-      <p role="status" class={fault === null ? "unseen" : "fault"}>
+      <p role="status" class={fault === null || hasPlace(shown, fault.key) ? "unseen" : "fault"}>
         {fault === null ? "" : fault.fault}
       </p>
       {shown === null ? (
