@@ -3,9 +3,16 @@
  */
 import { writeFileSync } from "node:fs";
 import { fileURLToPath } from "node:url";
-import { ISLANDS_PLAN, islandsCurrent, islandsWind, WORKBOAT } from "./recipe/islands.mjs";
-import { OCEAN_PLAN, oceanCurrent, oceanWind, SHIP } from "./recipe/ocean.mjs";
-import { DRONE, SURVEY_PLAN, surveyWind } from "./recipe/survey.mjs";
+import { ISLANDS_DECIDE, OCEAN_DECIDE, SURVEY_DECIDE } from "./recipe/decide.mjs";
+import {
+  ISLANDS_PLAN,
+  islandsCurrent,
+  islandsWind,
+  islandsWindMembers,
+  WORKBOAT,
+} from "./recipe/islands.mjs";
+import { OCEAN_PLAN, oceanCurrent, oceanWind, oceanWindMember, SHIP } from "./recipe/ocean.mjs";
+import { DRONE, SURVEY_PLAN, surveyWind, surveyWindMembers } from "./recipe/survey.mjs";
 
 /** The seed of all random parts. */
 export const SEED = 20270504;
@@ -24,14 +31,22 @@ export function demoFiles(seed = SEED) {
     "workboat.craft.json": json(WORKBOAT),
     "islands-current.csv": islandsCurrent(seed),
     "islands-wind.csv": islandsWind(seed),
+    "islands-decide.plan.json": json(ISLANDS_DECIDE),
+    "islands-wind-members.csv": islandsWindMembers(seed),
     "survey.plan.json": json(SURVEY_PLAN),
     "drone.craft.json": json(DRONE),
     "survey-wind.csv": surveyWind(seed),
+    "survey-decide.plan.json": json(SURVEY_DECIDE),
+    "survey-wind-members.csv": surveyWindMembers(seed),
     "ocean.plan.json": json(OCEAN_PLAN),
     "ship.craft.json": json(SHIP),
     "ocean-wind-1.csv": oceanWind(seed, { from: 0, to: 102 }),
     "ocean-wind-2.csv": oceanWind(seed, { from: 108, to: 216 }),
     "ocean-current.csv": oceanCurrent(seed),
+    "ocean-decide.plan.json": json(OCEAN_DECIDE),
+    ...Object.fromEntries(
+      [1, 2, 3, 4].map((member) => [`ocean-wind-member-${member}.csv`, oceanWindMember(seed, member)]),
+    ),
   };
 }
 

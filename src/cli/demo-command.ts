@@ -8,6 +8,8 @@ import { fileFault } from "./file-fault.ts";
 /** What of the demo folder a user wants; its recipe is not among it. */
 const WANTED = /\.(plan|craft)\.json$|\.csv$/;
 
+const PLAN = ".plan.json";
+
 /** The demo data as they were shipped, above the built file or the source. */
 function shippedFolder(): string {
   let folder = dirname(fileURLToPath(import.meta.url));
@@ -45,6 +47,16 @@ async function missing(names: readonly string[], from: string, folder: string): 
   return files;
 }
 
+/** A plan before the one that builds on it: `islands`, `islands-decide`. */
+function byStem(a: string, b: string): number {
+  return a.slice(0, -PLAN.length) < b.slice(0, -PLAN.length) ? -1 : 1;
+}
+
+/** A path as a shell takes it. */
+function shown(path: string): string {
+  return /^[\w./-]+$/.test(path) ? path : JSON.stringify(path);
+}
+
 /** Writes the demo plans, craft and fields into a folder, all of them or none. */
 export async function demoCommand(folder: string): Promise<number> {
   const from = shippedFolder();
@@ -56,10 +68,12 @@ export async function demoCommand(folder: string): Promise<number> {
   } catch (fault) {
     throw fileFault(fault, folder);
   }
-  const plans = names.filter((name) => name.endsWith(".plan.json")).map((name) => join(folder, name));
-  const next = plans.map(
-    (plan) => `  legwork estimate ${/^[\w./-]+$/.test(plan) ? plan : JSON.stringify(plan)}`,
-  );
+  const plans = names.filter((name) => name.endsWith(PLAN)).sort(byStem);
+  const next = plans.flatMap((name) => {
+    const written = shown(join(folder, name));
+    const estimate = `  legwork estimate ${written}`;
+    return name.endsWith(`-decide${PLAN}`) ? [estimate, `  legwork window ${written}`] : [estimate];
+  });
   process.stdout.write(`${names.length} files are in ${folder}. Run next:\n${next.join("\n")}\n`);
   return 0;
 }

@@ -42,10 +42,10 @@ describe("the files of the demo scenarios", () => {
     }
   });
 
-  it("are at most 1.5 MB each and 5 MB together", () => {
+  it("are at most 1.5 MB each and 8 MB together", () => {
     const sizes = Object.values(files).map((text) => Buffer.byteLength(text));
     expect(Math.max(...sizes)).toBeLessThanOrEqual(1.5e6);
-    expect(sizes.reduce((sum, size) => sum + size, 0)).toBeLessThanOrEqual(5e6);
+    expect(sizes.reduce((sum, size) => sum + size, 0)).toBeLessThanOrEqual(8e6);
   });
 
   it("say in the notes of every field that it is invented, and its licence", () => {
@@ -217,14 +217,116 @@ describe("the winds", () => {
     expect(Math.max(...directions)).toBeLessThan(330);
   });
 
-  it("over the plain is stronger at each greater height, at every node and time", () => {
-    const rows = table("survey-wind.csv", "\t");
-    const speeds = new Map(rows.map((row) => [`${row.time} ${row.lat} ${row.lon} ${row.height}`, row.speed]));
-    for (const row of rows.filter((each) => each.height === 10)) {
-      const speed = (height: number) =>
-        speeds.get(`${row.time} ${row.lat} ${row.lon} ${height}`) ?? Number.NaN;
-      expect(speed(60)).toBeGreaterThan(speed(10));
-      expect(speed(120)).toBeGreaterThan(speed(60));
+  it("over the plain is stronger at each greater height, at every node and time, in every member", () => {
+    for (const name of ["survey-wind.csv", "survey-wind-members.csv"]) {
+      const rows = table(name, "\t");
+      const key = (row: Record<string, number>, height: unknown) =>
+        `${row.member} ${row.time} ${row.lat} ${row.lon} ${height}`;
+      const speeds = new Map(rows.map((row) => [key(row, row.height), row.speed]));
+      for (const row of rows.filter((each) => each.height === 10)) {
+        const speed = (height: number) => speeds.get(key(row, height)) ?? Number.NaN;
+        expect(speed(60)).toBeGreaterThan(speed(10));
+        expect(speed(120)).toBeGreaterThan(speed(60));
+      }
     }
+  });
+});
+
+/** Rows without their member, as text, of one member or of a file without members. */
+function rowsOf(name: string, member?: number): string[] {
+  const lines = (files[name] ?? "").split("\n").filter((line) => line !== "" && !line.startsWith("#"));
+  const rows = lines.slice(1);
+  if (member === undefined) return rows;
+  const own = new RegExp(`^${member}[,\\t]`);
+  return rows.filter((row) => own.test(row)).map((row) => row.replace(own, ""));
+}
+
+/** Means by member over the rows that pass. */
+function meansByMember(
+  rows: Record<string, number>[],
+  passes: (row: Record<string, number>) => boolean,
+  value: (row: Record<string, number>) => number,
+): number[] {
+  const groups = new Map<number, number[]>();
+  for (const row of rows.filter(passes)) {
+    const member = row.member ?? Number.NaN;
+    groups.set(member, [...(groups.get(member) ?? []), value(row)]);
+  }
+  return [...groups.values()].map((values) => values.reduce((sum, each) => sum + each, 0) / values.length);
+}
+
+describe("the ensembles", () => {
+  it("have the wind of the plain estimate as member 0, row for row", () => {
+    expect(rowsOf("islands-wind-members.csv", 0)).toEqual(rowsOf("islands-wind.csv"));
+    const plain = new Set(rowsOf("survey-wind.csv"));
+    const control = rowsOf("survey-wind-members.csv", 0);
+    // Five of its ten times, and a part of the plain: 8 × 11 nodes on three heights.
+    expect(control.filter((row) => plain.has(row))).toHaveLength(5 * 3 * 8 * 11);
+  });
+
+  it("give each of seven members the same nodes and times", () => {
+    for (const [name, separator] of [
+      ["islands-wind-members.csv", ","],
+      ["survey-wind-members.csv", "\t"],
+    ] as const) {
+      const places = (member: number) =>
+        table(name, separator)
+          .filter((row) => row.member === member)
+          .map((row) => `${row.time} ${row.lat} ${row.lon} ${row.height}`);
+      for (const member of [1, 2, 3, 4, 5, 6]) expect(places(member)).toEqual(places(0));
+      expect(places(7)).toEqual([]);
+    }
+  });
+
+  it("differ among themselves about the control: the afternoon's breeze, the wind at 120 m", () => {
+    const breeze = meansByMember(
+      table("islands-wind-members.csv"),
+      (row) => row.time === Date.UTC(2027, 4, 4, 15) && (row.lon ?? 0) >= 346.2,
+      (row) => row["wind_speed [kn]"] ?? Number.NaN,
+    );
+    const aloft = meansByMember(
+      table("survey-wind-members.csv", "\t"),
+      (row) => row.time === Date.UTC(2027, 8, 14, 1, 30) && row.height === 120,
+      (row) => row.speed ?? Number.NaN,
+    );
+    for (const [first = Number.NaN, ...others] of [breeze, aloft]) {
+      expect(others).toHaveLength(6);
+      expect(Math.min(...others)).toBeLessThan(0.95 * first);
+      expect(Math.max(...others)).toBeGreaterThan(1.05 * first);
+      // Pairs of opposite sign: what is left of their mean is of second order.
+      const mean = others.reduce((sum, each) => sum + each, 0) / others.length;
+      expect(Math.abs(mean / first - 1)).toBeLessThan(0.05);
+    }
+  });
+
+  it("keep each member's low turning anticlockwise, wherever it went", () => {
+    const centres = [1, 2, 3, 4].map((member) => {
+      const rows = table(`ocean-wind-member-${member}.csv`).filter(
+        (row) => row.time === Date.UTC(2027, 10, 5, 0),
+      );
+      const at = (lat: number, lon: number) => {
+        const row = rows.find((each) => each.lat === lat && each.lon === lon) ?? {};
+        return { u: row.u ?? Number.NaN, v: row.v ?? Number.NaN };
+      };
+      const circulation = at(34.5, 166.5).u - at(42, 166.5).u + at(37.5, 171).v - at(37.5, 162).v;
+      expect(circulation).toBeGreaterThan(20);
+      return circulation;
+    });
+    expect(new Set(centres).size).toBe(4);
+  });
+
+  it("over the plain start with the night's jet, which is gone at 00:30", () => {
+    const ratio = (instant: number) => {
+      const speed = (height: number) =>
+        meansByMember(
+          table("survey-wind-members.csv", "\t"),
+          (row) => row.member === 0 && row.time === instant && row.height === height,
+          (row) => row.speed ?? Number.NaN,
+        )[0] ?? Number.NaN;
+      return speed(120) / speed(10);
+    };
+    // The logarithmic profile alone: ln(120 / 0.3) / ln(10 / 0.3) = 1.709; eddies are the same on all heights.
+    expect(ratio(Date.UTC(2027, 8, 14, 0, 30))).toBeLessThan(1.8);
+    expect(ratio(Date.UTC(2027, 8, 13, 22, 30))).toBeGreaterThan(2.5);
   });
 });

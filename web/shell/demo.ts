@@ -12,6 +12,9 @@ export const DEMOS = [
   { name: "islands", title: "Workboat among islands" },
   { name: "survey", title: "Survey drone" },
   { name: "ocean", title: "Ocean passage" },
+  { name: "islands-decide", title: "Workboat: when, and how sure" },
+  { name: "survey-decide", title: "Drone: when, and how sure" },
+  { name: "ocean-decide", title: "Ocean: when, and how sure" },
 ] as const;
 
 export type DemoName = (typeof DEMOS)[number]["name"];

@@ -15,7 +15,7 @@ import {
   RAD,
   velocityFromStream,
 } from "./grid.mjs";
-import { smoothRandom } from "./seeded.mjs";
+import { mirroredNormals, smoothRandom } from "./seeded.mjs";
 
 const ORIGIN = { lat: 53.55, lon: -13.6 };
 const plane = planeAbout(ORIGIN.lat, ORIGIN.lon);
@@ -169,18 +169,26 @@ const BREEZE = {
 const DAY_RATE = (2 * Math.PI) / 86400;
 const CORIOLIS = 2 * 7.2921e-5 * Math.sin(ORIGIN.lat * RAD);
 
-/** @param {number} ms @returns {{ u: number, v: number }} m/s at the coast */
-function breezeAt(ms) {
+/**
+ * How a member's wind differs from the control's: the force behind the breeze, its hour, the wind that it comes on top of.
+ * @typedef {{ force: number, laterHours: number, u: number, v: number }} Sway
+ */
+const CONTROL = { force: 1, laterHours: 0, u: 0, v: 0 };
+
+/** @param {number} instant ms @param {Sway} sway @returns {{ u: number, v: number }} m/s at the coast */
+function breezeAt(instant, sway) {
+  const ms = instant - sway.laterHours * 3600e3;
   const angle = (DAY_RATE * (ms - BREEZE.forcePeak)) / 1000;
   // F₀ m / (k + i f)
-  const steady = (BREEZE.force * BREEZE.mean) / Math.hypot(BREEZE.friction, CORIOLIS);
+  const steady = (sway.force * BREEZE.force * BREEZE.mean) / Math.hypot(BREEZE.friction, CORIOLIS);
   const steadyTurn = -Math.atan2(CORIOLIS, BREEZE.friction);
   let u = steady * Math.cos(steadyTurn);
   let v = steady * Math.sin(steadyTurn);
   for (const sign of [1, -1]) {
     // ½ F₀ (1 - m) e^{± iΩτ} / (k + i (f ± Ω))
     const imaginary = CORIOLIS + sign * DAY_RATE;
-    const size = (0.5 * BREEZE.force * (1 - BREEZE.mean)) / Math.hypot(BREEZE.friction, imaginary);
+    const size =
+      (0.5 * sway.force * BREEZE.force * (1 - BREEZE.mean)) / Math.hypot(BREEZE.friction, imaginary);
     const turn = sign * angle - Math.atan2(imaginary, BREEZE.friction);
     u += size * Math.cos(turn);
     v += size * Math.sin(turn);
@@ -195,12 +203,12 @@ const WIND_AXES = {
 };
 const BACKGROUND = { u: 1, v: 1.6 };
 
-/** @param {number} seed @returns {string} */
-export function islandsWind(seed) {
+/** @param {number} seed @param {Sway} sway @returns {string[][]} time, lat, lon, speed, from, gust */
+function windRows(seed, sway) {
   const ripple = smoothRandom(seed + 1, { shortest: 25, longest: 70, slope: 0.35 });
   const rows = [];
   for (const time of WIND_AXES.times) {
-    const breeze = breezeAt(time);
+    const breeze = breezeAt(time, sway);
     for (const lat of WIND_AXES.lat) {
       for (const lon of WIND_AXES.lon) {
         const { x } = plane(lat, lon - 360);
@@ -213,8 +221,8 @@ export function islandsWind(seed) {
           dLon: 0.1,
         });
         const { speed, from } = polarFrom({
-          u: BACKGROUND.u + share * breeze.u + eddy.u,
-          v: BACKGROUND.v + share * breeze.v + eddy.v,
+          u: BACKGROUND.u + sway.u + share * breeze.u + eddy.u,
+          v: BACKGROUND.v + sway.v + share * breeze.v + eddy.v,
         });
         // Gust factor over the sea by day: common practice.
         const gust = 1.32 * speed + 0.4;
@@ -229,18 +237,40 @@ export function islandsWind(seed) {
       }
     }
   }
-  const header = [
-    "time",
-    "lat",
-    "lon",
-    "wind_speed [kn]",
-    "wind_from_direction [deg]",
-    "wind_speed_of_gust [kn]",
-  ];
+  return rows;
+}
+
+const WIND_HEADER = [
+  "time",
+  "lat",
+  "lon",
+  "wind_speed [kn]",
+  "wind_from_direction [deg]",
+  "wind_speed_of_gust [kn]",
+];
+
+/** @param {number} seed @returns {string} */
+export function islandsWind(seed) {
   return csv(
     notesFor("Sea breeze over invented islands at 10 m; knots, and degrees that the wind blows from."),
-    header,
-    rows,
+    WIND_HEADER,
+    windRows(seed, CONTROL),
+  );
+}
+
+/**
+ * Seven members of the same wind. Standard deviations: a quarter of the force behind the breeze, an hour, and 1 m/s of each
+ * component of the wind that it comes on top of.
+ * @param {number} seed
+ */
+export function islandsWindMembers(seed) {
+  const sways = mirroredNormals(seed + 5, { pairs: 3, numbers: 4 }).map(
+    ([force = 0, later = 0, u = 0, v = 0]) => ({ force: 1 + 0.25 * force, laterHours: later, u, v }),
+  );
+  return csv(
+    notesFor("Sea breeze over invented islands, seven members; member 0 is the wind of islands-wind.csv."),
+    ["member", ...WIND_HEADER],
+    sways.flatMap((sway, member) => windRows(seed, sway).map((row) => [`${member}`, ...row])),
   );
 }
 

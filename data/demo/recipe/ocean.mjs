@@ -1,8 +1,18 @@
 /**
  * Scenario 3: an ocean passage across the antimeridian, with a moving low and the free jet of a western boundary current.
  */
-import { axis, csv, fixed, isoSeconds, notesFor, planeAbout, RAD, velocityFromStream } from "./grid.mjs";
-import { smoothRandom } from "./seeded.mjs";
+import {
+  axis,
+  csv,
+  fixed,
+  isoMinutes,
+  isoSeconds,
+  notesFor,
+  planeAbout,
+  RAD,
+  velocityFromStream,
+} from "./grid.mjs";
+import { mirroredNormals, smoothRandom } from "./seeded.mjs";
 
 const ORIGIN = { lat: 36, lon: 150 };
 const plane = planeAbout(ORIGIN.lat, ORIGIN.lon);
@@ -78,21 +88,25 @@ const LOW = {
 const AIR_DENSITY = 1.22;
 const START = Date.UTC(2027, 10, 3, 0);
 
-/** @param {number} hours since START */
-function lowCentre(hours) {
-  const lat = LOW.lat + (LOW.north * hours * 3.6) / 111.195;
-  const lon = LOW.lon + (LOW.east * hours * 3.6) / (111.195 * Math.cos(LOW.lat * RAD));
+/** @param {number} hours since START @param {typeof LOW} low */
+function lowCentre(hours, low) {
+  const lat = low.lat + (low.north * hours * 3.6) / 111.195;
+  const lon = low.lon + (low.east * hours * 3.6) / (111.195 * Math.cos(low.lat * RAD));
   return { lat, lon };
 }
 
-/** Surface wind of the low, m/s. @param {number} lat @param {number} lon @param {number} hours @returns {{ u: number, v: number }} */
-function lowWind(lat, lon, hours) {
-  const centre = lowCentre(hours);
+/**
+ * Surface wind of the low, m/s.
+ * @param {number} lat @param {number} lon @param {number} hours since START @param {typeof LOW} low
+ * @returns {{ u: number, v: number }}
+ */
+function lowWind(lat, lon, hours, low) {
+  const centre = lowCentre(hours, low);
   const { x, y } = planeAbout((lat + centre.lat) / 2, centre.lon)(lat, lon);
   const north = y + ((lat + centre.lat) / 2 - centre.lat) * 111.195;
   const r = Math.max(Math.hypot(x, north), 1);
   // The low deepens for three days, then fills.
-  const depth = LOW.deficit * (1 - LOW.deepening * ((hours - 72) / 48) ** 2);
+  const depth = low.deficit * (1 - LOW.deepening * ((hours - 72) / 48) ** 2);
   const gradient =
     (((Math.max(depth, 0) * r) / LOW.radius ** 2) * Math.exp(-0.5 * (r / LOW.radius) ** 2)) / 1000; // Pa/m
   const f = 2 * 7.2921e-5 * Math.sin(lat * RAD);
@@ -109,34 +123,80 @@ const westerlies = (lat) => 1.5 + 2.5 * Math.exp(-(((lat - 42) / 9) ** 2));
 const WIND_AXES = { lat: axis(27, 1.5, 16), lon: axis(148.5, 1.5, 35) };
 
 /**
- * @param {number} seed
- * @param {{ from: number, to: number }} span hours since START, both included, every six hours
- * @returns {string}
+ * Hours since START, both included, every six hours.
+ * @typedef {{ from: number, to: number }} Span
+ * A member's low, and its own weather as a stream function: it grows over four days to its full strength.
+ * @typedef {{ low: typeof LOW, weather: (x: number, y: number) => number }} Sway
  */
-export function oceanWind(seed, { from, to }) {
+
+/** @type {Sway} */
+const CONTROL = { low: LOW, weather: () => 0 };
+
+/**
+ * @param {number} seed @param {Span} span @param {number[]} latitudes @param {Sway} sway
+ * @returns {[number, number, number, number, number][]} ms, lat, lon, u, v
+ */
+function windNodes(seed, { from, to }, latitudes, sway) {
   const weather = smoothRandom(seed + 4, { shortest: 1200, longest: 3000, slope: 1.6 });
+  /** @type {[number, number, number, number, number][]} */
   const rows = [];
   for (let hours = from; hours <= to; hours += 6) {
-    const psi = (/** @type {number} */ lat, /** @type {number} */ lon) =>
-      weather(plane(lat, lon).x - 25 * hours, plane(lat, lon).y);
-    for (const lat of WIND_AXES.lat) {
+    const grown = Math.min(hours / 96, 1);
+    const psi = (/** @type {number} */ lat, /** @type {number} */ lon) => {
+      const { x, y } = plane(lat, lon);
+      return weather(x - 25 * hours, y) + grown * sway.weather(x - 25 * hours, y);
+    };
+    for (const lat of latitudes) {
       for (const lon of WIND_AXES.lon) {
-        const low = lowWind(lat, lon, hours);
+        const low = lowWind(lat, lon, hours, sway.low);
         const other = velocityFromStream(psi, { lat, lon, dLat: 1.5, dLon: 1.5 });
-        const u = westerlies(lat) + low.u + other.u;
-        rows.push([
-          isoSeconds(START + hours * 3600e3),
-          `${lat}`,
-          `${lon}`,
-          fixed(u, 2),
-          fixed(low.v + other.v, 2),
-        ]);
+        rows.push([START + hours * 3600e3, lat, lon, westerlies(lat) + low.u + other.u, low.v + other.v]);
       }
     }
   }
+  return rows;
+}
+
+/** @param {number} seed @param {Span} span @returns {string} */
+export function oceanWind(seed, span) {
+  const rows = windNodes(seed, span, WIND_AXES.lat, CONTROL).map(([time, lat, lon, u, v]) => [
+    isoSeconds(time),
+    `${lat}`,
+    `${lon}`,
+    fixed(u, 2),
+    fixed(v, 2),
+  ]);
   const what =
     "Wind of an invented ocean week at 10 m, with a travelling low; components in m/s, the way the air moves.";
   return csv(notesFor(what), ["time", "lat", "lon", "eastward_wind", "northward_wind"], rows);
+}
+
+/**
+ * A member other than the control, 1 to 4, between 30 and 46.5 degrees north. Standard deviations: 15 % of the low's deficit,
+ * 0.7 m/s of its travel east and 0.4 m/s north, 0.4 degrees of its first latitude; 0.8 m/s of each component after four days
+ * of weather of its own.
+ * @param {number} seed @param {number} member
+ */
+export function oceanWindMember(seed, member) {
+  const rows = mirroredNormals(seed + 7, { pairs: 2, numbers: 4 });
+  const [deficit = 0, east = 0, north = 0, lat = 0] = rows[member] ?? [];
+  const low = {
+    ...LOW,
+    deficit: LOW.deficit * (1 + 0.15 * deficit),
+    east: LOW.east + 0.7 * east,
+    north: LOW.north + 0.4 * north,
+    lat: LOW.lat + 0.4 * lat,
+  };
+  const weather = smoothRandom(seed + 10 * member, { shortest: 1200, longest: 3000, slope: 0.8 });
+  const latitudes = WIND_AXES.lat.slice(2, 14);
+  const nodes = windNodes(seed, { from: 0, to: 216 }, latitudes, { low, weather });
+  return csv(
+    notesFor(
+      `Wind of an invented ocean week at 10 m, member ${member}; components in m/s, the way the air moves.`,
+    ),
+    ["time", "lat", "lon", "u", "v"],
+    nodes.map(([time, y, x, u, v]) => [isoMinutes(time), `${y}`, `${x}`, fixed(u, 1), fixed(v, 1)]),
+  );
 }
 
 /** A 9,000 dwt ship; the reasoning behind each figure is in data/README.md. */

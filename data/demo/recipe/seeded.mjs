@@ -19,6 +19,21 @@ function uniform(seed) {
 }
 
 /**
+ * Standard normal numbers for the members of an ensemble (Box & Muller, Ann. Math. Statist. 29, 1958, 610-611): a row a member,
+ * the first, the control, all zero, then pairs of opposite sign, so that the members' mean is the control.
+ * @param {number} seed
+ * @param {{ pairs: number, numbers: number }} shape
+ * @returns {number[][]}
+ */
+export function mirroredNormals(seed, { pairs, numbers }) {
+  const next = uniform(seed);
+  const normal = () => Math.sqrt(-2 * Math.log(1 - next())) * Math.cos(2 * Math.PI * next());
+  const half = Array.from({ length: pairs }, () => Array.from({ length: numbers }, normal));
+  const none = Array.from({ length: numbers }, () => 0);
+  return [none, ...half.flatMap((row) => [row, row.map((value) => -value)])];
+}
+
+/**
  * A smooth random function of two coordinates in km: a sum of plane waves of random direction, length and phase, with
  * slopes of about `slope` per km (root mean square). As a stream function it gives eddies of that speed.
  * @param {number} seed
