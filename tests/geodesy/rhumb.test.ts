@@ -153,7 +153,11 @@ describe("the rhumb inverse and direct problems", () => {
           2e-7,
         );
       }),
-      { numRuns: 100 },
+      {
+        numRuns: 100,
+        // 2026-12-01: Simpson's rule was 2e-6 m off here.
+        examples: [[-77.59456874593776, 22.36692080080045, -178.89968904637615, -WGS84.f]],
+      },
     );
   });
 
