@@ -42,7 +42,8 @@ export function Ledger({ page }: { readonly page: PageState }) {
       </header>
       {desk.preview.value !== null && (
         <p class="looking">
-          Looking at departure {clockText(desk.preview.value.departure, zone, true)}{" "}
+          Looking at {desk.preview.value.speed !== null && `${desk.preview.value.speed}, `}
+          departure {clockText(desk.preview.value.departure, zone, true)}{" "}
           {zoneText(desk.preview.value.departure, zone)}: not the plan's
         </p>
       )}

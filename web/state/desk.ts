@@ -3,12 +3,14 @@ import { type Signal, signal } from "@preact/signals";
 /** What lies on the desk under the ribbons: the legs, or one of the questions that a decision asks. */
 export type DeskPart = "legs" | "window" | "pace" | "turn-back" | "sure";
 
-/** A departure that is looked at before it is chosen, with the speed that belongs to it where the window tries several. */
+/** A departure or a speed that is looked at before it is chosen. */
 export interface Preview {
-  /** ISO 8601, UTC. */
+  /** ISO 8601 with its zone. */
   readonly departure: string;
   /** As a plan writes it; `null` for the plan's own pace. */
   readonly speed: string | null;
+  /** Whether the speed is through the medium, whatever the pace holds. */
+  readonly through?: boolean;
 }
 
 /** How decisions are shown; none of it is part of the plan. */

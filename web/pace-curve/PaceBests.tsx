@@ -1,0 +1,53 @@
+import type { WindowCell } from "../core.ts";
+import { clockSince, durationText } from "../format/time-text.ts";
+import { inUnit, shownUnit, storeUnit } from "../format/units.ts";
+import type { PageState } from "../state/page-state.ts";
+import type { PaceAnswer } from "../worker/protocol.ts";
+
+interface PaceBestsProps {
+  readonly page: PageState;
+  readonly answer: PaceAnswer;
+  readonly onLook: (speed_m_s: number | null) => void;
+  readonly onChoose: (speed_m_s: number) => void;
+}
+
+/** The speed of least use and the fastest that keeps the reserve, each to be looked at and set. */
+export function PaceBests({ page, answer: { least, fastest, curve }, onLook, onChoose }: PaceBestsProps) {
+  const { view } = page;
+  const unit = shownUnit(view.units.value, "speed");
+  const amount = storeUnit(curve.storeUnit, curve.usable);
+  const words = (cell: WindowCell): string =>
+    `${inUnit(cell.speed_m_s, unit)} ${unit.symbol}: ${durationText(cell.passage_s)}, arrives ${
+      cell.arrival === null ? "–" : clockSince(cell.arrival, cell.departure, view.zone.value)
+    }, uses ${inUnit(cell.use, amount)} ${amount.symbol}, ${inUnit(cell.remaining, amount)} left`;
+  const item = (letter: string, name: string, cell: WindowCell | null, none: string) => (
+    <li>
+      {cell === null ? (
+        <p class="none-possible">{none}</p>
+      ) : (
+        <button
+          type="button"
+          onPointerEnter={() => onLook(cell.speed_m_s)}
+          onPointerLeave={() => onLook(null)}
+          onFocus={() => onLook(cell.speed_m_s)}
+          onBlur={() => onLook(null)}
+          onClick={() => cell.speed_m_s !== null && onChoose(cell.speed_m_s)}
+        >
+          <span class="best-letter" aria-hidden="true">
+            {letter}
+          </span>
+          <span>
+            <strong>{name}</strong> {words(cell)}
+            {cell.status === "stop" && cell.worst !== null && `; cannot be done: ${cell.worst.message}`}
+          </span>
+        </button>
+      )}
+    </li>
+  );
+  return (
+    <ul class="bests" aria-label="Speeds to choose">
+      {item("U", "Least use", least, "No speed completes the route.")}
+      {item("F", "Fastest that keeps the reserve", fastest, "No speed of the craft's keeps the reserve.")}
+    </ul>
+  );
+}
