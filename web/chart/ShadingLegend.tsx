@@ -11,7 +11,7 @@ export function ShadingLegend({ limit_m_s, units }: { limit_m_s: number | null; 
     <div
       class="shading-legend"
       role="img"
-      aria-label={`Shading from 0 to ${number(limit_m_s / si, 1)} ${symbol}`}
+      aria-label={`Shading from 0 to ${number(limit_m_s / si, 1)} ${symbol}; grey is a gap`}
     >
       <svg width="126" height="10" aria-hidden="true">
         {colours.map((colour, at) => (
@@ -22,6 +22,7 @@ export function ShadingLegend({ limit_m_s, units }: { limit_m_s: number | null; 
       <span>
         {number(limit_m_s / si, 1)} {symbol}
       </span>
+      <span class="gap-key">gap</span>
     </div>
   );
 }

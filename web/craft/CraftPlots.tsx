@@ -21,7 +21,7 @@ export function CraftPlots({ study, units }: CraftPlotsProps) {
   return (
     <div>
       <div ref={ref} />
-      {study === null && <p class="quiet">The curve is drawn once nothing above is amiss.</p>}
+      {study === null && <p class="quiet">The curve is drawn once the form is in order.</p>}
       {study !== null && curve === null && (
         <p class="quiet">Nothing bounds the speed: give an ordered speed, or the least and greatest.</p>
       )}

@@ -1,10 +1,5 @@
 import type { PageState } from "../state/page-state.ts";
-import type { CraftDocument, PlanDocument } from "../state/plan-document.ts";
-
-/** The craft of a plan that holds it itself; `null` where the plan names a file. */
-export function inlineCraft({ craft }: PlanDocument): CraftDocument | null {
-  return "file" in craft && typeof craft.file === "string" ? null : craft;
-}
+import type { CraftDocument } from "../state/plan-document.ts";
 
 /** The craft of the plan, from its file where the plan names one; `null` where there is none that is a craft. */
 export async function craftOf({ store, files }: PageState): Promise<CraftDocument | null> {

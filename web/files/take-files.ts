@@ -4,7 +4,7 @@ import { readFieldFile } from "../shell/read-field-file.ts";
 import { keepFile } from "../state/keep-file.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { FieldDocument } from "../state/plan-document.ts";
-import { addField, changeField, setCraft } from "../state/plan-edits.ts";
+import { addField, setCraft } from "../state/plan-edits.ts";
 
 const LARGEST_PLAN = 5_000_000;
 
@@ -84,11 +84,6 @@ function askField({ asking }: PageState, content: File): Promise<FieldDocument |
       },
     };
   });
-}
-
-/** Adds to a field of the plan how its gaps and edges are treated. */
-export function setFieldPolicy(page: PageState, index: number, change: Partial<FieldDocument>): void {
-  page.store.edit("Change field", (plan) => changeField(plan, index, change));
 }
 
 function isTooLarge({ view }: PageState, file: File): boolean {

@@ -136,21 +136,31 @@ function LegRow({ page, leg, columns, drawing, marked }: LegRowProps) {
   const { store, view } = page;
   const { route, waypoint } = store.selection.value;
   const classes = [marked ? "pointed" : "", waypoint === leg.leg ? "chosen" : ""].join(" ").trim();
+  const point = (): void => {
+    const middle = drawing === null ? null : middleOf(drawing, leg.leg);
+    if (middle !== null) view.pointed.value = { route, distance_m: middle };
+  };
+  const leave = (): void => {
+    view.pointed.value = null;
+  };
   return (
     <tr
       class={classes}
-      onPointerEnter={() => {
-        const middle = drawing === null ? null : middleOf(drawing, leg.leg);
-        if (middle !== null) view.pointed.value = { route, distance_m: middle };
-      }}
-      onPointerLeave={() => {
-        view.pointed.value = null;
-      }}
+      onPointerEnter={point}
+      onPointerLeave={leave}
+      onFocusCapture={point}
+      onBlurCapture={leave}
       onClick={() => store.select({ route, waypoint: leg.leg })}
     >
       {columns.map(({ key, numeric, text }) => (
         <td key={key} class={numeric ? "figure" : ""}>
-          {text(leg)}
+          {key === "to" ? (
+            <button type="button" class="leg-pick" aria-pressed={waypoint === leg.leg}>
+              {text(leg)}
+            </button>
+          ) : (
+            text(leg)
+          )}
         </td>
       ))}
     </tr>

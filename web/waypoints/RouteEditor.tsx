@@ -184,7 +184,18 @@ function WaypointRow({ page, index, waypoint, path }: WaypointRowProps) {
     />
   );
   return (
-    <tr class={selected === index ? "chosen" : ""} onFocusCapture={() => store.select(select)}>
+    <tr
+      class={selected === index ? "chosen" : ""}
+      onFocusCapture={() => store.select(select)}
+      onPointerEnter={() => {
+        const drawing = page.answers.answer.peek().drawings[route];
+        const distance_m = drawing?.distance_m[drawing.waypoints[index] ?? -1];
+        if (distance_m !== undefined) page.view.pointed.value = { route, distance_m };
+      }}
+      onPointerLeave={() => {
+        page.view.pointed.value = null;
+      }}
+    >
       <th scope="row">{index + 1}</th>
       <td>{field("name", "Name")}</td>
       <td>
