@@ -11,26 +11,21 @@ export type { RefinedWindow } from "../src/choose/refine.ts";
 export type { SensitivityProfile } from "../src/choose/sensitivity-profile.ts";
 export type { Reach, RoutePlace, TurnBack, TurnLimit } from "../src/choose/turn-back-result.ts";
 export type { WhatIfResult } from "../src/choose/what-if-results.ts";
-export type { CellFinding, WindowCell } from "../src/choose/window-cell.ts";
+export type { WindowCell } from "../src/choose/window-cell.ts";
 export type { WindowBest, WindowSummary } from "../src/choose/window-summary.ts";
 export { ADVISORY } from "../src/constants.ts";
 export type { StoreUnit } from "../src/craft/craft.ts";
 export type { StillCurve, StillPoint } from "../src/craft/still-curve.ts";
-export { InputError } from "../src/errors.ts";
 export type {
   ArrivalAnswer,
   ArrivalSolution,
   Estimate,
-  FieldAlong,
-  FieldSummary,
   Finding,
   LegEstimate,
-  Penalty,
   Profile,
   RouteEstimate,
   RouteStatus,
   Severity,
-  Spread,
 } from "../src/estimate/result.ts";
 export { columnNames } from "../src/field/column-names.ts";
 export type { FieldRole } from "../src/field/field.ts";

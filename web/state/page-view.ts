@@ -1,12 +1,12 @@
 import { type Signal, signal } from "@preact/signals";
 
 export type UnitsPreset = "sea" | "air" | "metric";
-export type Theme = "auto" | "light" | "dark";
-export type RibbonAxis = "distance" | "time";
+type Theme = "auto" | "light" | "dark";
+type RibbonAxis = "distance" | "time";
 export type Pane = "chart" | "ribbons" | "ledger" | "route" | "legs" | "decide";
 
 /** What the pane of the chosen route shows: its leg table or its profile. */
-export type RoutePart = "table" | "profile";
+type RoutePart = "table" | "profile";
 
 /** Units of the leg table's own, by their symbols; those left out are the preset's. */
 export interface LegUnits {
@@ -16,7 +16,7 @@ export interface LegUnits {
 }
 
 /** A place on a route that the pointer or the keyboard points at, shown alike on chart, ribbons and table. */
-export interface Pointed {
+interface Pointed {
   readonly route: number;
   /** Metres from the route's start. */
   readonly distance_m: number;

@@ -42,7 +42,7 @@ const SIGNS: Readonly<Record<TurnBackLine["kind"], string>> = {
 };
 
 /** The sign of a line, as ribbons and chart draw it. */
-export function TurnBackSign({ kind }: { readonly kind: TurnBackLine["kind"] }) {
+function TurnBackSign({ kind }: { readonly kind: TurnBackLine["kind"] }) {
   return (
     <svg class={`turn-sign ${kind}`} width="16" height="16" aria-hidden="true">
       <path d={SIGNS[kind]} />

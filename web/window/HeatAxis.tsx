@@ -37,7 +37,7 @@ export function HeatAxis({ departures, cellWidth, zone }: HeatAxisProps) {
 }
 
 /** Whole hours of the zone between two instants, as many as there is room for. */
-export function axisHours(
+function axisHours(
   first: number,
   last: number,
   perMs: number,

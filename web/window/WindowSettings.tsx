@@ -43,7 +43,7 @@ export function WindowSettings({ page, window }: WindowSettingsProps) {
 }
 
 /** Speeds from a text with commas or semicolons; an empty text takes them away. */
-export function withSpeeds({ speeds: _old, ...window }: WindowDocument, text: string): WindowDocument {
+function withSpeeds({ speeds: _old, ...window }: WindowDocument, text: string): WindowDocument {
   const speeds = text
     .split(/[,;]/)
     .map((speed) => speed.trim())

@@ -3,8 +3,6 @@ import type { WindowCell } from "../core.ts";
 import { SPEED_CLASSES, speedColour } from "../format/palette.ts";
 import { figureOf, heatClass, type Measure } from "./heat-rows.ts";
 
-export type BestMark = "T" | "U" | "L";
-
 /** What is drawn of a window, cells by row and departure. */
 export interface HeatPicture {
   readonly columns: number;

@@ -41,6 +41,6 @@ export { serializeCraft, serializePlan } from "../../src/plan/write-plan.ts";
 export { writeCsv } from "../../src/report/csv.ts";
 export { writeGeoJson } from "../../src/report/geojson.ts";
 export { writeGpx } from "../../src/report/gpx.ts";
-export type { ReportInput, Units } from "../../src/report/input.ts";
+export type { ReportInput } from "../../src/report/input.ts";
 export { writeJson } from "../../src/report/json.ts";
 export { writeTable } from "../../src/report/table.ts";
