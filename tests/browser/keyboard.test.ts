@@ -110,12 +110,14 @@ function focusStop(page: Page): Promise<Stop | null> {
     );
     // The parts of a field for date and time are the browser's own, and so is their focus.
     const parted = element instanceof HTMLInputElement && element.type === "datetime-local";
-    const marked = parted || shown.some((each) => {
-      const { outlineStyle, outlineWidth, boxShadow } = getComputedStyle(each);
-      return (
-        (outlineStyle !== "none" && Number.parseFloat(outlineWidth) >= 1.5) || boxShadow.includes("inset")
-      );
-    });
+    const marked =
+      parted ||
+      shown.some((each) => {
+        const { outlineStyle, outlineWidth, boxShadow } = getComputedStyle(each);
+        return (
+          (outlineStyle !== "none" && Number.parseFloat(outlineWidth) >= 1.5) || boxShadow.includes("inset")
+        );
+      });
     const inSight = shown.some((each) => {
       const { left, top, right, bottom, width, height } = each.getBoundingClientRect();
       const x = Math.min(Math.max((left + right) / 2, left + 1), right - 1);
