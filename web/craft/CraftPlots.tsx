@@ -72,7 +72,7 @@ function Plot({ study, curve, units, width, title, values, unit, of }: PlotProps
   const x = linearScale([0, (speeds.at(-1) ?? 1) / speed.si], [LEFT, width - RIGHT]);
   const y = linearScale([0, heightOf(values, unit)], [HEIGHT - BOTTOM, TOP]);
   const at = (v: number): number => x(v / speed.si);
-  const high = (value: number): number => Math.max(y(value / unit.si), TOP);
+  const high = (value: number): number => y(value / unit.si);
   const path = linePath(
     speeds.length,
     (n) => at(speeds[n] ?? 0),
@@ -115,7 +115,15 @@ function Plot({ study, curve, units, width, title, values, unit, of }: PlotProps
           through speed, {speed.symbol}
         </text>
         {limit !== null && <path class="plot-limit" d={`M${at(limit)} ${TOP}V${floor}`} />}
-        <path class="plot-curve" d={path} />
+        <svg
+          y={TOP}
+          width={width}
+          height={floor - TOP}
+          viewBox={`0 ${TOP} ${width} ${floor - TOP}`}
+          aria-hidden="true"
+        >
+          <path class="plot-curve" d={path} />
+        </svg>
         {point !== null && <path class="plot-pace" d={`M${at(point.speed_m_s)} ${TOP}V${floor}`} />}
         {least !== null && <circle class="plot-least" cx={at(least.speed_m_s)} cy={high(of(least))} r="5" />}
         {point !== null && (
@@ -204,6 +212,9 @@ function Figures({ study, curve, units }: { study: Study; curve: StillCurve; uni
         </tbody>
       </table>
       {study.paceFault !== null && <p class="field-fault">{study.paceFault}</p>}
+      {study.paceFault === null && study.point === null && (
+        <p class="quiet">The pace finds no speed here for which the power model has a value.</p>
+      )}
     </>
   );
 }

@@ -36,7 +36,16 @@ export function LegTable({ page }: { readonly page: PageState }) {
   return (
     <section class="pane legs" data-pane="legs" data-part={view.routePart.value} aria-labelledby="legs-title">
       <header class="pane-head">
-        <h2 id="legs-title">{view.routePart.value === "table" ? "Leg table" : "Profile"}</h2>
+        <h2 id="legs-title">
+          {view.routePart.value === "table" ? (
+            "Leg table"
+          ) : (
+            <>
+              <span class="not-print">Profile</span>
+              <span class="only-print">Leg table</span>
+            </>
+          )}
+        </h2>
         <span class="leg-route">
           <Swatch route={chosen} />
           {route.name}
