@@ -1,7 +1,9 @@
-import { ADVISORY, type RouteEstimate, type StoreUnit } from "../core.ts";
+import { ADVISORY, type DecidedRoute, type RouteEstimate, type StoreUnit } from "../core.ts";
 import { clockSince, clockText, durationText, signedDurationText, zoneText } from "../format/time-text.ts";
 import { inUnit, signedInUnit, storeUnit } from "../format/units.ts";
 import { Swatch } from "../ribbon/Ribbon.tsx";
+import { sureWords } from "../spread/spread-words.ts";
+import { WhatIfTable } from "../spread/WhatIfTable.tsx";
 import type { PageState } from "../state/page-state.ts";
 import { CostBar } from "./CostBar.tsx";
 import { barsEnd } from "./cost-bar.ts";
@@ -78,6 +80,7 @@ export function Ledger({ page }: { readonly page: PageState }) {
           ))}
         </table>
         <BarLegend />
+        <ChosenWhatIfs page={page} />
       </div>
       <p class="advisory">{ADVISORY}</p>
       <FindingList page={page} />
@@ -85,11 +88,16 @@ export function Ledger({ page }: { readonly page: PageState }) {
   );
 }
 
+function ChosenWhatIfs({ page }: { readonly page: PageState }) {
+  const route = page.routes.value[page.store.selection.value.route] ?? null;
+  return route === null ? null : <WhatIfTable page={page} route={route} />;
+}
+
 interface LedgerRowProps {
   readonly page: PageState;
   readonly at: number;
   readonly name: string;
-  readonly route: RouteEstimate | null;
+  readonly route: DecidedRoute | null;
   readonly base: RouteEstimate | null;
   readonly best: Best;
   /** End of the longest bar, s. */
@@ -132,6 +140,7 @@ function LedgerRow({ page, at, name, route, base, best, end }: LedgerRowProps) {
               label="Left"
               best={best.remaining.has(at)}
               difference={amountDifference(route, against, "remaining")}
+              sure={sureWords(route)}
             >
               {amountText(route.totals.remaining, route.storeUnit, route.usable)}
             </Cell>
@@ -152,7 +161,16 @@ function LedgerRow({ page, at, name, route, base, best, end }: LedgerRowProps) {
   );
 }
 
-function Cell(props: { label: string; best: boolean; difference: string | null; children: string }) {
+interface CellProps {
+  readonly label: string;
+  readonly best: boolean;
+  readonly difference: string | null;
+  /** How sure it is that the reserve holds, by each source that says so. */
+  readonly sure?: readonly string[];
+  readonly children: string;
+}
+
+function Cell(props: CellProps) {
   return (
     <td data-label={props.label}>
       {props.best ? (
@@ -164,6 +182,12 @@ function Cell(props: { label: string; best: boolean; difference: string | null; 
         props.children
       )}
       {props.difference !== null && <span class="difference">{props.difference}</span>}
+      {props.sure?.map((words) => (
+        <span key={words} class="difference">
+          <span class="unseen">reserve </span>
+          {words}
+        </span>
+      ))}
     </td>
   );
 }

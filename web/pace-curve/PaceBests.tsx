@@ -7,8 +7,8 @@ import type { PaceAnswer } from "../worker/protocol.ts";
 interface PaceBestsProps {
   readonly page: PageState;
   readonly answer: PaceAnswer;
-  readonly onLook: (speed_m_s: number | null) => void;
-  readonly onChoose: (speed_m_s: number) => void;
+  readonly onLook: (speed_m_s: number | null, finely?: boolean) => void;
+  readonly onChoose: (speed_m_s: number, finely?: boolean) => void;
 }
 
 /** The speed of least use and the fastest that keeps the reserve, each to be looked at and set. */
@@ -27,11 +27,11 @@ export function PaceBests({ page, answer: { least, fastest, curve }, onLook, onC
       ) : (
         <button
           type="button"
-          onPointerEnter={() => onLook(cell.speed_m_s)}
+          onPointerEnter={() => onLook(cell.speed_m_s, true)}
           onPointerLeave={() => onLook(null)}
-          onFocus={() => onLook(cell.speed_m_s)}
+          onFocus={() => onLook(cell.speed_m_s, true)}
           onBlur={() => onLook(null)}
-          onClick={() => cell.speed_m_s !== null && onChoose(cell.speed_m_s)}
+          onClick={() => cell.speed_m_s !== null && onChoose(cell.speed_m_s, true)}
         >
           <span class="best-letter" aria-hidden="true">
             {letter}

@@ -30,8 +30,8 @@ export function PaceMarks({ answer, measure, x, y, bottom, end, pointed }: PaceM
           </text>
         </>
       )}
-      {speed_m_s !== null && <path class="own" d={`M${x(speed_m_s)} ${bottom}V14`} />}
-      {pointed !== null && <path class="pointed" d={`M${x(pointed)} ${bottom}V14`} />}
+      {speed_m_s !== null && <path class="own" d={`M${x(speed_m_s)} ${bottom}V30`} />}
+      {pointed !== null && <path class="pointed" d={`M${x(pointed)} ${bottom}V30`} />}
       <Letter letter="U" cell={least} x={x} bottom={bottom} />
       <Letter letter="F" cell={fastest} x={x} bottom={bottom} />
     </g>
@@ -63,9 +63,9 @@ function Letter({
   if (cell === null || cell.speed_m_s === null) return null;
   return (
     <g class="mark" transform={`translate(${x(cell.speed_m_s)} 0)`}>
-      <path d={`M0 ${bottom}V16`} />
-      <rect x="-7" y="1" width="14" height="15" rx="2" />
-      <text y="12.5">{letter}</text>
+      <path d={`M0 ${bottom}V30`} />
+      <rect x="-7" y="15" width="14" height="15" rx="2" />
+      <text y="26.5">{letter}</text>
     </g>
   );
 }

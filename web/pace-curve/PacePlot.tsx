@@ -9,8 +9,8 @@ import type { PaceAnswer } from "../worker/protocol.ts";
 import { PaceMarks } from "./PaceMarks.tsx";
 import { arrivingRuns, nearestPoint } from "./pace-runs.ts";
 
-export const HEIGHT = 150;
-export const TOP = 18;
+const HEIGHT = 158;
+const TOP = 34;
 const BOTTOM = HEIGHT - 30;
 const LEFT = 46;
 
@@ -134,7 +134,7 @@ function Axes({ x, y, speed, amount, width, name }: AxesProps) {
   const inAmount = linearScale([0, y.invert(TOP) / step], [BOTTOM, TOP]);
   return (
     <g>
-      <text x="0" y="11">
+      <text x="0" y="10">
         {name} {amount?.symbol ?? "h"}
       </text>
       <path class="axis" d={`M${LEFT} ${TOP}V${BOTTOM}H${width - 8}`} />

@@ -1,6 +1,6 @@
 import { useSignal } from "@preact/signals";
 import { useEffect, useMemo } from "preact/hooks";
-import { inUnit, shownUnit } from "../format/units.ts";
+import { type ShownUnit, shownUnit } from "../format/units.ts";
 import { Swatch } from "../ribbon/Ribbon.tsx";
 import { departingAt } from "../state/departing-at.ts";
 import type { Preview } from "../state/desk.ts";
@@ -51,16 +51,16 @@ export function PaceView({ page }: { readonly page: PageState }) {
     [desk],
   );
 
-  const previewAt = (speed_m_s: number): Preview => {
-    const unit = shownUnit(view.units.value, "speed");
-    return { departure: plan.departure, speed: `${inUnit(speed_m_s, unit)} ${unit.symbol}`, through: true };
+  const previewAt = (speed_m_s: number, finely: boolean): Preview => {
+    const speed = orderedSpeed(speed_m_s, shownUnit(view.units.value, "speed"), finely);
+    return { departure: plan.departure, speed, through: true };
   };
-  const look = (speed_m_s: number | null): void => {
+  const look = (speed_m_s: number | null, finely = false): void => {
     pointed.value = speed_m_s;
-    desk.preview.value = speed_m_s === null ? null : previewAt(speed_m_s);
+    desk.preview.value = speed_m_s === null ? null : previewAt(speed_m_s, finely);
   };
-  const choose = (speed_m_s: number): void => {
-    const preview = previewAt(speed_m_s);
+  const choose = (speed_m_s: number, finely = false): void => {
+    const preview = previewAt(speed_m_s, finely);
     desk.preview.value = null;
     store.edit("Choose speed", (old) => departingAt(old, preview));
     view.announcement.value = `Speed set to ${preview.speed}`;
@@ -88,4 +88,11 @@ export function PaceView({ page }: { readonly page: PageState }) {
       <PaceBests {...shared} />
     </div>
   );
+}
+
+/** A speed as a plan orders it: to a tenth, or finely to a hundredth and then never above the one found. */
+export function orderedSpeed(speed_m_s: number, { si, symbol }: ShownUnit, finely: boolean): string {
+  const shown = speed_m_s / si;
+  // A speed that is a hundredth but for rounding stays one.
+  return `${finely ? (Math.floor(shown * 100 + 1e-6) / 100).toFixed(2) : shown.toFixed(1)} ${symbol}`;
 }

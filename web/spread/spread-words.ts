@@ -1,0 +1,70 @@
+import { type DecidedRoute, type EnsembleResult, type ErrorSpread, percentText } from "../core.ts";
+import { clockSince, durationText } from "../format/time-text.ts";
+import { inUnit, shownUnit, storeUnit } from "../format/units.ts";
+import type { PageView } from "../state/page-view.ts";
+
+type Shown = Pick<PageView, "units" | "zone">;
+
+/** What the stated forecast error comes to on a route, in sentences. */
+export function spreadWords(route: DecidedRoute, spread: ErrorSpread, view: Shown): string[] {
+  const amount = storeUnit(route.storeUnit, route.usable);
+  const what = route.reserve === 0 ? "The store lasts" : "The reserve holds";
+  return [
+    `${what} with a probability of ${percentText(spread.reserveHolds)}.`,
+    `One standard deviation: arrival ${durationText(spread.arrival_s)}, use ${inUnit(spread.use, amount)} ${amount.symbol}, left ${inUnit(spread.remaining, amount)} ${amount.symbol}.`,
+    ...weakWords(route, spread.weakest.use, "use", view),
+    ...weakWords(route, spread.weakest.time, "arrival", view),
+  ];
+}
+
+/** What an ensemble comes to on a route. */
+export function ensembleWords(route: DecidedRoute, ensemble: EnsembleResult, { zone }: Shown): string[] {
+  const amount = storeUnit(route.storeUnit, route.usable);
+  const { members, reserveHolds, breaksReserve, doesNotArrive, arrival, remaining } = ensemble;
+  const what = route.reserve === 0 ? "The store lasts" : "The reserve holds";
+  const held = Math.round(reserveHolds * members.length);
+  const clock = (time: string): string => clockSince(time, route.departure, zone.value);
+  return [
+    `${what} in ${held} of ${members.length} members (${percentText(reserveHolds)}).`,
+    ...(breaksReserve.length === 0 ? [] : [`Broken in ${memberWords(breaksReserve)}.`]),
+    ...(doesNotArrive.length === 0 ? [] : [`Does not arrive in ${memberWords(doesNotArrive)}.`]),
+    ...(arrival === null
+      ? []
+      : [`Arrival 10 % ${clock(arrival.p10)}, 50 % ${clock(arrival.p50)}, 90 % ${clock(arrival.p90)}.`]),
+    ...(remaining === null
+      ? []
+      : [
+          `Left 10 % ${inUnit(remaining.p10, amount)}, 50 % ${inUnit(remaining.p50, amount)}, 90 % ${inUnit(remaining.p90, amount)} ${amount.symbol}.`,
+        ]),
+  ];
+}
+
+/** The same in a few characters for the ledger; `null` where nothing is known about how sure the store is. */
+export function sureWords({ spread, ensemble }: DecidedRoute): string[] {
+  const words: string[] = [];
+  if (spread) words.push(`holds: ${percentText(spread.reserveHolds)}`);
+  if (ensemble !== undefined) {
+    const held = Math.round(ensemble.reserveHolds * ensemble.members.length);
+    words.push(`holds: ${held} of ${ensemble.members.length}`);
+  }
+  return words;
+}
+
+function weakWords(
+  route: DecidedRoute,
+  place: ErrorSpread["weakest"]["use"],
+  what: string,
+  { units }: Shown,
+): string[] {
+  if (place === null) return [];
+  const distance = shownUnit(units.value, "distance");
+  const { leg, at_m } = place;
+  const from = route.legs[leg - 1]?.from ?? "its start";
+  return [
+    `A wrong forecast hurts the ${what} most on leg ${leg}, ${inUnit(at_m, distance)} ${distance.symbol} after ${from}.`,
+  ];
+}
+
+function memberWords(members: readonly number[]): string {
+  return `${members.length === 1 ? "member" : "members"} ${members.join(", ")}`;
+}
