@@ -8,6 +8,7 @@ import { CraftForm } from "../../web/craft/CraftForm.tsx";
 import { CraftPlots } from "../../web/craft/CraftPlots.tsx";
 import { setAt, setMedium, setModel, splitQuantity, textAt, withUnit } from "../../web/craft/craft-edits.ts";
 import { MODEL_FIELDS, MODELS } from "../../web/craft/craft-fields.ts";
+import { hasPlace } from "../../web/craft/craft-places.ts";
 import { inOtherUnit } from "../../web/craft/QuantityField.tsx";
 import type { CraftDocument } from "../../web/state/plan-document.ts";
 import { studyCraft } from "../../web/worker/craft-study.ts";
@@ -88,6 +89,31 @@ describe("the craft's form", () => {
     const told = document.getElementById(field.getAttribute("aria-describedby") ?? "");
     expect(told?.textContent).toBe(answer.fault);
     expect(answer.fault).toMatch(/^rate takes .*found "abc"$/);
+  });
+
+  test("has a place for every key that a fault of these craft may stand at", () => {
+    const breaks: readonly (readonly [CraftDocument, readonly (string | number)[], unknown])[] = [
+      [workboat, ["name"], ""],
+      [workboat, ["power", "rows", 0, "speed"], "0"],
+      [workboat, ["power", "rows"], []],
+      [workboat, ["windage", "efficiency"], "120 %"],
+      [workboat, ["speeds", "min"], "12 kn"],
+      [workboat, ["store", "density"], "1 kg/L"],
+      [workboat, ["store", "capacity"], "3 kn"],
+      [workboat, ["hotel"], "2 kg/h"],
+      [workboat, ["limits", "gust"], "-1 m/s"],
+      [demo("drone"), ["power", "solidity"], undefined],
+      [demo("drone"), ["moves"], "water"],
+      [demo("ship"), ["power", "reference", "power"], "fast"],
+      [demo("ship"), ["store", "specificConsumption"], undefined],
+    ];
+    for (const [craft, path, value] of breaks) {
+      const broken = setAt(craft, path, value);
+      const answer = studyCraft(broken, null);
+      const told = `${path.join(".")}: ${answer.ok ? "no fault" : `${answer.key}: ${answer.fault}`}`;
+      expect(answer.ok, told).toBe(false);
+      if (!answer.ok) expect(hasPlace(broken, answer.key), told).toBe(true);
+    }
   });
 
   test("keeps bare numbers as numbers", () => {

@@ -24,7 +24,12 @@ export function CraftDialog({ page, onClose }: { readonly page: PageState; reado
   const held = store.plan.value.craft;
   const answer = answers.answer.value;
 
-  useEffect(() => dialog.current?.showModal(), []);
+  const title = useRef<HTMLHeadingElement>(null);
+  useEffect(() => {
+    dialog.current?.showModal();
+    // The first control would replace the craft at the touch of an arrow key.
+    title.current?.focus();
+  }, []);
   useEffect(() => {
     let stale = false;
     void craftOf(page).then((found) => {
@@ -57,7 +62,7 @@ export function CraftDialog({ page, onClose }: { readonly page: PageState; reado
   return (
     <dialog ref={dialog} class="craft-dialog" aria-labelledby="craft-dialog-title" onClose={onClose}>
       <header>
-        <h2 id="craft-dialog-title">Craft and pace</h2>
+        <h2 ref={title} id="craft-dialog-title" tabIndex={-1}>Craft and pace</h2>
         <CraftTools page={page} craft={shown} onCraft={put} />
         <button type="button" class="primary" onClick={() => dialog.current?.close()}>
           Done
