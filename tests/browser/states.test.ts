@@ -10,7 +10,8 @@ const SHOTS = new URL("../screenshots/", import.meta.url).pathname;
 beforeAll(() => mkdirSync(SHOTS, { recursive: true }));
 
 const COLOURS = ["light", "dark"] as const;
-const PANES = ["Chart", "Ribbons", "Ledger", "Plan", "Legs"] as const;
+const PANES = ["Chart", "Ribbons", "Ledger", "Plan", "Legs", "Decide"] as const;
+const DESK = ["Departures"] as const;
 
 /** Keeps a picture of the page as it is and holds it against WCAG 2.2 AA. */
 async function look(page: Page, name: string): Promise<void> {
@@ -57,6 +58,28 @@ describe.each(COLOURS)("in %s colours", (colours) => {
     await look(page, `wide-${colours}-dialogue`);
     await page.keyboard.press("Escape");
 
+    await page.locator("button.craft-name").click();
+    await page.locator(".craft-plots svg").first().waitFor();
+    await look(page, `wide-${colours}-craft`);
+    await page.keyboard.press("Escape");
+    await page.locator("button.field-name").first().click();
+    await page.getByRole("dialog").waitFor();
+    await look(page, `wide-${colours}-field`);
+    await page.keyboard.press("Escape");
+    await page.getByRole("button", { name: "Columns" }).click();
+    await page.getByRole("dialog").waitFor();
+    await look(page, `wide-${colours}-columns`);
+    await page.keyboard.press("Escape");
+    await page.getByRole("radio", { name: "Profile" }).check();
+    await look(page, `wide-${colours}-profile`);
+    const desk = page.getByRole("navigation", { name: "On the desk" }).first();
+    for (const part of DESK) {
+      await desk.getByRole("button", { name: part }).click();
+      if (part === "Departures") await page.getByRole("list", { name: "Best departures" }).waitFor();
+      await look(page, `wide-${colours}-${part.toLowerCase().replace(" ", "-")}`);
+    }
+    await desk.getByRole("button", { name: "Legs" }).click();
+
     await openDemo(page, "Ocean passage", "ocean");
     await look(page, `wide-${colours}-ocean`);
     await openDemo(page, "Survey drone", "survey");
@@ -93,6 +116,7 @@ async function lookAtPanes(page: Page, name: string, panes: readonly string[]): 
     const tab = tabs.getByRole("button", { name: pane });
     // A pane that is always there has no tab of its own.
     if (await tab.isVisible()) await tab.tap();
+    if (pane === "Decide") await page.getByRole("list", { name: "Best departures" }).waitFor();
     await look(page, `${name}-${pane.toLowerCase()}`);
   }
 }
