@@ -15,7 +15,7 @@ export function ArrivalFields({ page }: { readonly page: PageState }) {
   const { arrive } = pace;
   const isWindow = typeof arrive !== "string";
   const notAfter = isWindow ? arrive.notAfter : arrive;
-  const notBefore = isWindow ? (arrive.notBefore ?? null) : arrive;
+  const notBefore = isWindow ? (arrive.notBefore ?? null) : null;
   const change = (next: ArrivalDocument["arrive"]): void =>
     store.edit("Change arrival", (plan) => setArrival(plan, next));
   return (

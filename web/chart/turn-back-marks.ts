@@ -100,6 +100,7 @@ function addByClick(map: L.Map, { store, desk, view }: PageState): () => void {
   const add = ({ latlng: { lat, lng } }: L.LeafletMouseEvent): void => {
     if (!desk.placing.value) return;
     desk.placing.value = false;
+    if (window.innerWidth < 700) view.pane.value = "decide";
     const round = (degrees: number): number => Number(degrees.toFixed(4));
     store.edit("Add alternate", (plan) => addAlternate(plan, round(lat), round(withinTurn(lng))));
   };

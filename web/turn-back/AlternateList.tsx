@@ -43,6 +43,8 @@ export function AlternateList({ page }: { readonly page: PageState }) {
           aria-pressed={desk.placing.value}
           onClick={() => {
             desk.placing.value = !desk.placing.value;
+            // A phone shows the chart in place of the desk.
+            if (desk.placing.value && window.innerWidth < 700) page.view.pane.value = "chart";
           }}
         >
           {desk.placing.value ? "Click the chart to set it…" : "Set an alternate on the chart"}
