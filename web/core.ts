@@ -10,7 +10,6 @@ export type { PaceCurve } from "../src/choose/pace-curve.ts";
 export type { RefinedWindow } from "../src/choose/refine.ts";
 export type { SensitivityProfile } from "../src/choose/sensitivity-profile.ts";
 export type { Reach, RoutePlace, TurnBack, TurnLimit } from "../src/choose/turn-back-result.ts";
-export type { WhatIfResult } from "../src/choose/what-if-results.ts";
 export type { WindowCell } from "../src/choose/window-cell.ts";
 export type { WindowBest, WindowSummary } from "../src/choose/window-summary.ts";
 export { ADVISORY } from "../src/constants.ts";

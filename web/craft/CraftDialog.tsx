@@ -62,7 +62,9 @@ export function CraftDialog({ page, onClose }: { readonly page: PageState; reado
   return (
     <dialog ref={dialog} class="craft-dialog" aria-labelledby="craft-dialog-title" onClose={onClose}>
       <header>
-        <h2 ref={title} id="craft-dialog-title" tabIndex={-1}>Craft and pace</h2>
+        <h2 ref={title} id="craft-dialog-title" tabIndex={-1}>
+          Craft and pace
+        </h2>
         <CraftTools page={page} craft={shown} onCraft={put} />
         <button type="button" class="primary" onClick={() => dialog.current?.close()}>
           Done

@@ -91,7 +91,7 @@ export function PaceView({ page }: { readonly page: PageState }) {
 }
 
 /** A speed as a plan orders it: to a tenth, or finely to a hundredth and then never above the one found. */
-export function orderedSpeed(speed_m_s: number, { si, symbol }: ShownUnit, finely: boolean): string {
+function orderedSpeed(speed_m_s: number, { si, symbol }: ShownUnit, finely: boolean): string {
   const shown = speed_m_s / si;
   // A speed that is a hundredth but for rounding stays one.
   return `${finely ? (Math.floor(shown * 100 + 1e-6) / 100).toFixed(2) : shown.toFixed(1)} ${symbol}`;

@@ -104,7 +104,7 @@ function WhatIfRow({ page: { store }, whatIf, at }: WhatIfRowProps) {
 }
 
 /** A what-if with a text in one of its keys: factors are numbers, an empty text takes the key away. */
-export function withText(whatIf: WhatIfDocument, key: Key, text: string): WhatIfDocument {
+function withText(whatIf: WhatIfDocument, key: Key, text: string): WhatIfDocument {
   const { [key]: _old, ...rest } = whatIf;
   if (text.trim() === "") return rest;
   if (key !== "wind" && key !== "current") return { ...rest, [key]: text };
