@@ -42,13 +42,6 @@ const DIMENSIONS: readonly (readonly ["speed" | "height" | "stay", Dimension])[]
   ["stay", "time"],
 ];
 
-/** Whether a header is one of a table of waypoints: it has a latitude, a longitude and a column that no field has. */
-export function isWaypointHeader(headers: readonly string[]): boolean {
-  const columns = columnsOf(headers);
-  const own: readonly Column[] = ["name", "route", "stay", "path"];
-  return columns.has("lat") && columns.has("lon") && own.some((column) => columns.has(column));
-}
-
 /**
  * Reads a CSV table of waypoints, one a row: `lat` and `lon` in any notation of a plan, and where there are such columns `name`,
  * `path`, `speed`, `height` and `stay` as in a plan, the unit in the cell or in brackets in the header (`speed [kn]`). A column

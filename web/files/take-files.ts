@@ -5,12 +5,16 @@ import { keepFile } from "../state/keep-file.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { FieldDocument } from "../state/plan-document.ts";
 import { addField, setCraft } from "../state/plan-edits.ts";
+import { importRoutes } from "../state/route-edits.ts";
 
 const LARGEST_PLAN = 5_000_000;
 
+/** What opening takes, by the ends of names. */
+export const ACCEPTED = ".json,.csv,.tsv,.txt,.gpx,.geojson,.zip";
+
 /**
- * Takes the files that the user chose or dropped: a plan with the craft and fields that it names, a craft for the plan on the page,
- * or fields to add to it.
+ * Takes the files that the user chose or dropped: a plan with the craft and fields that it names, an archive of them, a craft for
+ * the plan on the page, fields to add to it, or routes.
  */
 export async function takeFiles(page: PageState, files: readonly File[]): Promise<void> {
   const plan = files.find(({ name }) => name.endsWith(".plan.json"));
@@ -18,13 +22,57 @@ export async function takeFiles(page: PageState, files: readonly File[]): Promis
     await takePlan(page, plan, files);
     return;
   }
-  for (const file of files) {
-    const name = file.name.toLowerCase();
-    if (name.endsWith(".json")) await takeJson(page, file);
-    else if (name.endsWith(".csv") || name.endsWith(".txt") || name.endsWith(".tsv"))
-      await takeField(page, file);
-    else page.view.notice.value = `${file.name}: a file is a plan or craft (.json) or a field (.csv)`;
+  for (const file of files) await takeFile(page, file);
+}
+
+async function takeFile(page: PageState, file: File): Promise<void> {
+  const name = file.name.toLowerCase();
+  if (name.endsWith(".zip")) await takeArchive(page, file);
+  else if (name.endsWith(".gpx") || name.endsWith(".geojson")) await takeRoutes(page, file);
+  else if (name.endsWith(".json")) await takeJson(page, file);
+  else if (/\.(csv|txt|tsv)$/.test(name)) await takeTable(page, file);
+  else
+    page.view.notice.value = `${file.name}: opened are plans, craft, fields (CSV), routes (GPX, GeoJSON, CSV) and archives`;
+}
+
+async function takeArchive(page: PageState, file: File): Promise<void> {
+  const answer = await page.engine.openArchive(file.name, file);
+  if (!answer.ok) page.view.notice.value = answer.fault;
+  else await openPlan(page, file.name, answer.plan.text, async (name) => answer.files.get(name) ?? null);
+}
+
+/** Adds the routes of a file to the plan, and chooses the first of them. */
+async function takeRoutes(page: PageState, file: File): Promise<void> {
+  const answer = await page.engine.readRoutes(file.name, file);
+  if (!answer.ok) {
+    page.view.notice.value = answer.fault;
+    return;
   }
+  const { routes, notes } = answer;
+  const first = page.store.plan.peek().routes.length;
+  const select = { route: first, waypoint: null };
+  page.store.edit("Add routes from a file", (plan) => importRoutes(plan, routes), { select });
+  const [place] = page.store.plan.peek().routes[first]?.waypoints ?? [];
+  if (place !== undefined) page.view.opened.value += 1;
+  const count = routes.length === 1 ? "1 route" : `${routes.length} routes`;
+  page.view.announcement.value = `Added ${count} from ${file.name}`;
+  if (notes.length > 0) page.view.notice.value = `${file.name}: ${notes.join("; ")}`;
+}
+
+/** A table is a field of the plan, or reads as a field or as waypoints; else the user says what it is. */
+async function takeTable(page: PageState, file: File): Promise<void> {
+  const isKnown = (page.store.plan.value.fields ?? []).some(({ file: name }) => lastPart(name) === file.name);
+  if (!isKnown && (await isWaypointTable(page, file))) await takeRoutes(page, file);
+  else await takeField(page, file);
+}
+
+/** Whether a table has places but nothing that a field has beside them. */
+async function isWaypointTable({ engine }: PageState, file: File): Promise<boolean> {
+  const { header } = await engine.preview(file, { role: "wind", file: file.name });
+  const words = header.map((name) => name.replace(/\[.*/, "").trim().toLowerCase());
+  const has = (...names: string[]): boolean => names.some((name) => words.includes(name));
+  const isPlace = has("lat", "latitude") && has("lon", "long", "lng", "longitude");
+  return isPlace && (has("name", "waypoint", "wp", "route", "stay", "path") || words.length <= 2);
 }
 
 async function takePlan(page: PageState, plan: File, files: readonly File[]): Promise<void> {
@@ -39,6 +87,10 @@ async function takeJson(page: PageState, file: File): Promise<void> {
   const text = await file.text();
   if (text.includes('"legwork-plan/1"')) {
     await openPlan(page, file.name, text, async () => null);
+    return;
+  }
+  if (/"type"\s*:\s*"(?:Feature|FeatureCollection|(?:Multi)?(?:LineString|Point))"/.test(text)) {
+    await takeRoutes(page, file);
     return;
   }
   await keepFile(page, file.name, file);

@@ -1,4 +1,4 @@
-import { takeFiles } from "../files/take-files.ts";
+import { ACCEPTED, takeFiles } from "../files/take-files.ts";
 import type { PageState } from "../state/page-state.ts";
 import { setPlanText } from "../state/plan-edits.ts";
 import { TextField } from "../waypoints/TextField.tsx";
@@ -46,7 +46,7 @@ export function Header({ page }: { readonly page: PageState }) {
             type="file"
             class="unseen"
             multiple
-            accept=".json,.csv,.tsv,.txt,application/json,text/csv"
+            accept={ACCEPTED}
             onChange={({ currentTarget }) => {
               void takeFiles(page, [...(currentTarget.files ?? [])]);
               currentTarget.value = "";

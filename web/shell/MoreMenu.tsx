@@ -3,6 +3,7 @@ import type { ReportFormat } from "../worker/protocol.ts";
 import { DEMOS, openDemo } from "./demo.ts";
 import { copyLegTable, exportRoute } from "./exports.ts";
 import { Menu } from "./Menu.tsx";
+import { saveArchive } from "./plan-files.ts";
 
 const FORMATS: readonly (readonly [ReportFormat, string])[] = [
   ["csv", "CSV"],
@@ -29,6 +30,10 @@ export function MoreMenu({ page }: { readonly page: PageState }) {
       ))}
       <button type="button" onClick={() => window.print()}>
         Print
+      </button>
+      <h3>Plan</h3>
+      <button type="button" onClick={() => void saveArchive(page)}>
+        Save with craft and fields (one file)
       </button>
       <h3>Demos, all invented</h3>
       {DEMOS.map(({ name, title }) => (

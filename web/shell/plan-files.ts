@@ -10,7 +10,22 @@ export async function savePlan({ store, view, engine }: PageState): Promise<void
   view.announcement.value = `Saved ${name}`;
 }
 
-export function saveFile(name: string, content: string, type: string): void {
+/** Hands the plan with its craft and fields to the browser to keep as one file. */
+export async function saveArchive({ store, view, engine }: PageState): Promise<void> {
+  const plan = store.plan.value;
+  const stem = fileStem(plan.title ?? "plan");
+  const answer = await engine.packArchive(plan, stem);
+  if (!answer.ok) {
+    view.notice.value = answer.fault;
+    return;
+  }
+  const name = `${stem}.legwork.zip`;
+  saveFile(name, answer.content, "application/zip");
+  if (store.plan.peek() === plan) store.markSaved();
+  view.announcement.value = `Saved ${name}`;
+}
+
+export function saveFile(name: string, content: string | Blob, type: string): void {
   const address = URL.createObjectURL(new Blob([content], { type }));
   const link = document.createElement("a");
   link.href = address;

@@ -34,6 +34,8 @@ export {
   type Route,
   readGridFile,
 } from "../../src/index.ts";
+export { readArchive, writeArchive } from "../../src/plan/archive.ts";
+export { importRoutes } from "../../src/plan/import-routes.ts";
 export { readCraftDocument } from "../../src/plan/read-craft.ts";
 export { type FieldsRead, type MemberFields, mergeSources, roleSource } from "../../src/plan/read-fields.ts";
 export { readPlanDocument } from "../../src/plan/read-plan.ts";

@@ -15,7 +15,7 @@ import type {
   WindowCell,
   WindowSummary,
 } from "../core.ts";
-import type { CraftDocument, FieldDocument, PlanDocument } from "../state/plan-document.ts";
+import type { CraftDocument, FieldDocument, PlanDocument, RouteDocument } from "../state/plan-document.ts";
 
 /*
  * What page and worker say to each other. Files and fields stay in the worker; what comes back is small or is transferred.
@@ -48,6 +48,22 @@ interface Estimated {
 }
 
 export type EstimateAnswer = Estimated | Fault;
+
+/** Routes that were read from a file of another kind, and what of it is not in them. */
+export type RoutesAnswer =
+  | { readonly ok: true; readonly routes: readonly RouteDocument[]; readonly notes: readonly string[] }
+  | Fault;
+
+/** What an archive holds: the plan's file and, by name, the others. */
+export type ArchiveAnswer =
+  | {
+      readonly ok: true;
+      readonly plan: { readonly name: string; readonly text: string };
+      readonly files: ReadonlyMap<string, Blob>;
+    }
+  | Fault;
+
+export type WrittenArchive = { readonly ok: true; readonly content: Blob } | Fault;
 
 export interface FieldProgress {
   readonly readBytes: number;
@@ -213,6 +229,11 @@ export interface Worker {
   report(question: ReportQuestion): Promise<string | null>;
   /** Reads a craft as its form holds it; the pace is that of the estimate last made. */
   studyCraft(craft: CraftDocument): CraftAnswer;
+  /** Reads routes from a GPX, GeoJSON or CSV file. */
+  readRoutes(name: string, content: Blob): Promise<RoutesAnswer>;
+  openArchive(name: string, content: Blob): Promise<ArchiveAnswer>;
+  /** One file of a plan with the files that it names. */
+  packArchive(plan: PlanDocument, stem: string): Promise<WrittenArchive>;
   /** The text of a plan's or a craft's file. */
   planText(plan: PlanDocument): string;
   craftText(craft: CraftDocument): string;
@@ -230,6 +251,8 @@ export interface Worker {
   share(port: MessagePort): void;
   /** Uses those of the worker behind the port from now on. */
   follow(port: MessagePort): void;
+  /** Resolves once what decides is loaded. */
+  loadDeciding(): Promise<void>;
   /** @param turnBack whether turning back is wanted though the plan names no alternates */
   decide(plan: PlanDocument, turnBack: boolean): Promise<Answered<DecideAnswer>>;
   /** Opens the plan's window under a ticket, in place of the one before. */

@@ -61,6 +61,9 @@ const worker: Worker = {
     return writeReport(input, question);
   },
   studyCraft: (craft) => studyCraft(craft, estimator.pace()),
+  readRoutes: async (name, content) => (await import("./exchange.ts")).readRoutes(name, content),
+  openArchive: async (name, content) => (await import("./exchange.ts")).openArchive(name, content),
+  packArchive: async (plan, stem) => (await import("./exchange.ts")).packArchive(plan, stem, files.blob),
   planText: (plan) => serializePlan(plan as Parameters<typeof serializePlan>[0]),
   craftText: (craft) => serializeCraft(craft as Parameters<typeof serializeCraft>[0]),
   lattice: async (question) => handLattice(answerLattice(fields.current(), question)),
@@ -77,6 +80,9 @@ const worker: Worker = {
   follow(port) {
     reader = createPlanReader(sourcesBehind(port));
     deciding = null;
+  },
+  async loadDeciding() {
+    await decided();
   },
   decide: async (plan, turnBack) => (await decided()).decide(plan, turnBack),
   beginWindow: async (ticket, plan) => (await decided()).beginWindow(ticket, plan),
