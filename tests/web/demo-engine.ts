@@ -17,7 +17,7 @@ export interface DemoEngine {
   readonly fields: FieldShelf;
 }
 
-export function demoEngine(name: "islands" | "survey" | "ocean"): DemoEngine {
+export function demoEngine(name: "islands" | "survey" | "ocean" | "islands-decide"): DemoEngine {
   const plan: PlanDocument = JSON.parse(readFileSync(join(demos, `${name}.plan.json`), "utf8"));
   const files = createFileShelf();
   const { craft, fields: references = [] } = plan;

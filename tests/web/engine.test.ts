@@ -62,6 +62,18 @@ describe("the worker's estimate", () => {
     expect((await estimator.estimate(plan)).ok).toBe(true);
   });
 
+  test("writes what is decided after the figures for drawing were handed over to the page", async () => {
+    const { plan, estimator } = demoEngine("islands-decide");
+    const answer = await estimator.estimate(plan);
+    if (!answer.ok) throw new Error(answer.fault);
+    const buffers = answer.drawings.flatMap(({ profile }) =>
+      Object.values(profile ?? {}).map((column: Float64Array<ArrayBuffer>) => column.buffer),
+    );
+    structuredClone(answer, { transfer: [...new Set(buffers)] });
+    const text = await reportOf(estimator, { format: "table", units: "sea", route: 1 });
+    expect(text).toContain("The reserve holds with a probability of 91 %");
+  });
+
   test("writes the chosen route alone", async () => {
     const { plan, estimator } = demoEngine("islands");
     expect(await estimator.answered()).toBeNull();

@@ -19,7 +19,8 @@ export function createEstimator(reader: PlanReader): Estimator {
   const answer = async (document: PlanDocument): Promise<EstimateAnswer> => {
     const read = await reader.read(document);
     const found = await estimateRead(read);
-    last = { read, answer: found };
+    // The drawings' columns are handed over to the page; what is decided later needs them here too.
+    last = { read, answer: { ...found, profiles: structuredClone(found.profiles) } };
     const drawings = read.prepared.flatMap((route, at) => {
       const profile = found.profiles[at];
       return profile === undefined ? [] : [drawRoute(route, profile)];
