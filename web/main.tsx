@@ -1,6 +1,7 @@
 import { effect } from "@preact/signals";
 import * as Comlink from "comlink";
 import { render } from "preact";
+import { warmDesk } from "./desk/warm-desk.ts";
 import { listenForDrops } from "./files/drop-target.ts";
 import { keepPlan, restorePlan, warnBeforeLoss } from "./keeping/keep-plan.ts";
 import { keepView, restoreView, viewStorage } from "./keeping/keep-view.ts";
@@ -65,6 +66,7 @@ restorePlan(page)
   .then((restored) => (restored ? undefined : openDemo(page, "islands")))
   .finally(() => {
     const keeping = keepPlan(page);
+    warmDesk(page.engine);
     warnBeforeLoss(page, keeping);
     if (import.meta.env.PROD) void keepOffline((useIt) => offerNewer(page, keeping, useIt));
   });

@@ -30,7 +30,7 @@ export interface WindowFill {
 type Hand = Pick<Engine, "beginWindow" | "windowSlice" | "windowBests">;
 
 /** How long a hand works before it looks up: the first also answers everything else that the page asks. */
-const BUDGETS_MS = [8, 40] as const;
+const BUDGETS_MS = [8, 60] as const;
 /** Most cells that a hand is given at a time, so that it does not keep what another could do. */
 const MOST_GIVEN = 64;
 
@@ -61,9 +61,14 @@ export function createWindowFill(hands: readonly (() => Hand)[]): WindowFill {
       const show = createShow(filled, () => ticket === current);
       await Promise.all(
         hands.map(async (handOf, at) => {
+          // A worker that has yet to start would keep the first from its first cells.
+          if (at > 0) await show.begun;
           const hand = handOf();
           const shape = await begin(hand, ticket, plan);
-          if (shape === null) return;
+          if (shape === null) {
+            show.begin();
+            return;
+          }
           if (queue.open(shape)) show.open(plan, shape);
           fault.value = null;
           await work(hand, ticket, queue, show, BUDGETS_MS[at] ?? 40);
@@ -101,11 +106,12 @@ async function work(
 ): Promise<void> {
   for (let given = queue.take(); given.length > 0 && show.wanted(); given = queue.take()) {
     const slice = await hand.windowSlice(ticket, given, budget_ms);
-    if (slice === null || !show.wanted()) return;
+    if (slice === null || !show.wanted()) break;
     const { length } = slice.cells;
     queue.giveBack(given.subarray(length));
     show.add(given.subarray(0, length), slice.cells);
   }
+  show.begin();
 }
 
 function createQueue() {
@@ -137,12 +143,19 @@ function createShow(filled: { value: Filled | null }, wanted: () => boolean) {
   let cells: (WindowCell | null)[] = [];
   let done = 0;
   let painting = false;
+  let begin: () => void = () => undefined;
+  const begun = new Promise<void>((resolve) => {
+    begin = resolve;
+  });
   const paint = (): void => {
     painting = false;
     if (wanted() && filled.value) filled.value = { ...filled.value, cells, done };
   };
   return {
     wanted,
+    /** Resolves with the first cells, or once it is clear that none will come. */
+    begun,
+    begin: () => begin(),
     open(plan: PlanDocument, shape: WindowShape): void {
       cells = Array.from(
         { length: shape.departures.length * shape.routes * (shape.speeds?.length ?? 1) },
@@ -155,6 +168,7 @@ function createShow(filled: { value: Filled | null }, wanted: () => boolean) {
         cells[indices[at] ?? 0] = cell;
       });
       done += found.length;
+      begin();
       if (painting) return;
       painting = true;
       requestAnimationFrame(paint);
