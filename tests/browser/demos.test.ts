@@ -28,6 +28,12 @@ const DEMOS = [
   ["ocean", "Ocean passage"],
 ] as const;
 
+const DECIDING = [
+  ["islands-decide", "Workboat: when, and how sure"],
+  ["survey-decide", "Drone: when, and how sure"],
+  ["ocean-decide", "Ocean: when, and how sure"],
+] as const;
+
 type Export = readonly [entry: string, format: string, ending: string];
 const FIGURES: Export = ["Estimate (JSON)", "json", ".estimate.json"];
 const OTHERS: readonly Export[] = [
@@ -58,6 +64,26 @@ async function exportAs(page: Page, [entry, , ending]: Export): Promise<string> 
   expect(name.endsWith(ending), name).toBe(true);
   return text;
 }
+
+test.each(DECIDING)(
+  "the demo %s is opened, and what it decides is copied as the command writes it",
+  async (demo, title) => {
+    const { page } = await visit();
+    await openDemo(page, title, demo);
+    const routes = page.locator(".ledger-table tbody th button");
+    for (const [at, name] of (await routes.allInnerTexts()).entries()) {
+      await routes.nth(at).click();
+      const own = byCommand(demo, name, "table");
+      expect(own).toMatch(/^Ensemble of [57] members/m);
+      const copied = async () => {
+        await choose(page, "Copy as text");
+        return page.evaluate(() => navigator.clipboard.readText());
+      };
+      // Until the coast is there, the findings about land are missing.
+      await expect.poll(copied, { timeout: 15_000, interval: 500 }).toBe(own);
+    }
+  },
+);
 
 test.each(DEMOS)(
   "the demo %s leads from a cold start to exports with the command's words and figures",
