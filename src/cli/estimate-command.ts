@@ -10,7 +10,7 @@ import {
 } from "./core.ts";
 import { loadLand } from "./load-land.ts";
 import { writeResult } from "./output.ts";
-import { openBeside, readText } from "./plan-files.ts";
+import { openPlan } from "./plan-files.ts";
 import { noteUnits } from "./units-note.ts";
 
 export interface EstimateOptions {
@@ -40,15 +40,17 @@ function written(input: ReportInput, { format, units }: EstimateOptions): string
 /** Estimates a plan and writes the answer; 1 where some route ends in a stop. */
 export async function estimateCommand(file: string, options: EstimateOptions): Promise<number> {
   noteUnits(options.units, options.format);
-  const { estimate, plan } = await estimatePlan(await readText(file), {
+  const inputs = new Set([file]);
+  const source = await openPlan(file, inputs);
+  const { estimate, plan } = await estimatePlan(source.text, {
     file,
-    open: openBeside(file),
+    open: source.open,
     loadLand,
     ...(options.departure === undefined ? {} : { departure: options.departure }),
     ...(options.turnBack === undefined ? {} : { turnBack: options.turnBack }),
     ...(options.route === undefined ? {} : { routes: options.route }),
   });
   const { routes, craft, pace } = plan;
-  await writeResult(written({ estimate, routes, craft, pace }, options), options.out);
+  await writeResult(written({ estimate, routes, craft, pace }, options), options.out, inputs);
   return estimate.routes.some((route) => route.status === "stop") ? 1 : 0;
 }

@@ -1,4 +1,4 @@
-import { constants, writeFileSync } from "node:fs";
+import { constants, type Stats, writeFileSync } from "node:fs";
 import { access, chmod, realpath, rename, stat, unlink, writeFile } from "node:fs/promises";
 import { dirname, join } from "node:path";
 import { InputError } from "./core.ts";
@@ -28,7 +28,18 @@ async function replaceFile(path: string, text: string, mode: number | null): Pro
   }
 }
 
-async function writeTo(file: string, text: string): Promise<void> {
+/** What is read is not written over: a plan under way to its own table would be lost. Links, hard ones too, are followed. */
+async function refuseInput(file: string, { ino, dev }: Stats, inputs: Iterable<string>): Promise<void> {
+  for (const input of inputs) {
+    const read = (await standing(input))?.stats;
+    if (read?.ino === ino && read.dev === dev) {
+      throw new InputError("--out names a file of its own; found one that the answer is made from", { file });
+    }
+  }
+}
+
+async function writeTo(file: string, text: string, inputs: Iterable<string>): Promise<void> {
+  if (file === "") throw new InputError('--out names a file; found ""');
   const there = await standing(file);
   if (there === null && (await standing(dirname(file)))?.stats.isDirectory() !== true) {
     throw new InputError("the folder to write it in does not exist", { file });
@@ -37,18 +48,19 @@ async function writeTo(file: string, text: string): Promise<void> {
   if (there.stats.isDirectory()) throw new InputError("--out names a file; found a folder", { file });
   // A terminal or a pipe cannot be replaced.
   if (!there.stats.isFile()) return writeFileSync(there.path, text);
+  await refuseInput(file, there.stats, inputs);
   await access(there.path, constants.W_OK);
   return replaceFile(there.path, text, there.stats.mode);
 }
 
-/** Writes a result to a file, whole or not at all, or to standard output. */
-export async function writeResult(text: string, file?: string): Promise<void> {
+/** Writes a result to a file that is none of `inputs`, whole or not at all, or to standard output. */
+export async function writeResult(text: string, file?: string, inputs: Iterable<string> = []): Promise<void> {
   if (file === undefined) {
     process.stdout.write(text);
     return;
   }
   try {
-    await writeTo(file, text);
+    await writeTo(file, text, inputs);
   } catch (fault) {
     throw fileFault(fault, file);
   }

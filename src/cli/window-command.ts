@@ -8,7 +8,7 @@ import {
 } from "./core.ts";
 import { loadLand } from "./load-land.ts";
 import { writeResult } from "./output.ts";
-import { openBeside, readText } from "./plan-files.ts";
+import { openPlan } from "./plan-files.ts";
 import { noteUnits } from "./units-note.ts";
 
 export interface WindowOptions {
@@ -29,9 +29,11 @@ export interface WindowOptions {
 export async function windowCommand(file: string, options: WindowOptions): Promise<number> {
   const { from, to, every, speeds, route, refine = false, arriveBy, format, units, out } = options;
   noteUnits(units, format);
-  const answer = await windowPlan(await readText(file), {
+  const inputs = new Set([file]);
+  const source = await openPlan(file, inputs);
+  const answer = await windowPlan(source.text, {
     file,
-    open: openBeside(file),
+    open: source.open,
     loadLand,
     refine,
     ...(from === undefined ? {} : { from }),
@@ -50,6 +52,6 @@ export async function windowCommand(file: string, options: WindowOptions): Promi
     csv: () => writeWindowCsv(report),
     json: () => writeWindowJson(report),
   }[format]();
-  await writeResult(text, out);
+  await writeResult(text, out, inputs);
   return summary.possible > 0 ? 0 : 1;
 }

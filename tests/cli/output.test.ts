@@ -1,5 +1,6 @@
 import {
   chmodSync,
+  linkSync,
   mkdirSync,
   mkdtempSync,
   readdirSync,
@@ -47,6 +48,26 @@ describe("--out", () => {
   it("writes to a device without replacing it", async () => {
     await writeResult("gone", "/dev/null");
     expect(statSync("/dev/null").isCharacterDevice()).toBe(true);
+  });
+
+  it("refuses a file that the answer is made from, by whatever name, and leaves it alone", async () => {
+    const plan = join(folder, "plan.json");
+    writeFileSync(plan, "plan");
+    symlinkSync("plan.json", join(folder, "link"));
+    linkSync(plan, join(folder, "hard"));
+    for (const name of ["plan.json", "link", "hard"]) {
+      const file = join(folder, name);
+      await expect(writeResult("x", file, ["/dev/null", plan])).rejects.toThrow(
+        `${file}: --out names a file of its own; found one that the answer is made from`,
+      );
+    }
+    expect(readFileSync(plan, "utf8")).toBe("plan");
+    await writeResult("x", join(folder, "legs.csv"), [join(folder, "gone"), plan]);
+    expect(readFileSync(join(folder, "legs.csv"), "utf8")).toBe("x");
+  });
+
+  it("refuses an empty name", async () => {
+    await expect(writeResult("x", "")).rejects.toThrow('--out names a file; found ""');
   });
 
   it("refuses a folder, and a folder that is not there, in one sentence", async () => {
