@@ -16,6 +16,7 @@ import type { OpenFile, Plan } from "./plan.ts";
 import { type FileProgress, type MemberFields, readMembers } from "./read-fields.ts";
 import { readPlan } from "./read-plan.ts";
 import { parseTime } from "./time.ts";
+import { toldOfFile } from "./told-of-file.ts";
 
 /** What a door hands over beside the plan's text. */
 export interface PlanRequest {
@@ -75,11 +76,15 @@ export interface PlanChecked {
  * answer.estimate.routes[0].totals.time_s // → 18553.248
  */
 export async function estimatePlan(text: string, request: PlanRequest): Promise<PlanAnswer> {
-  const { plan, input, members } = await checkPlan(text, request);
+  const checked = await checkPlan(text, request);
+  return toldOfFile(request.file, () => estimateChecked(checked, request.turnBack));
+}
+
+function estimateChecked({ plan, input, members }: PlanChecked, turnBack = false): PlanAnswer {
   const prepared = prepareRoutes(input);
   const answer = answerOf(plan, input, prepared);
   const { alternates = [] } = plan;
-  const isAsked = alternates.length > 0 || request.turnBack === true;
+  const isAsked = alternates.length > 0 || turnBack;
   const turned = isAsked ? withTurnBack(answer, prepared, input, alternates) : answer;
   const { whatIfs = [], errors = [] } = plan;
   if (whatIfs.length + errors.length + members.length === 0) return { ...turned, plan, input };

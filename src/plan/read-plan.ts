@@ -123,7 +123,8 @@ function arrivalOf(asked: Arriving["arrive"], craft: Craft, fault: Fault): Pick<
       : { notBefore: asked.notBefore ?? null, notAfter: asked.notAfter };
   try {
     checkArrival(arrive);
-    const speed_m_s = craft.speed_m_s ?? speedRange(craft).max;
+    const { max } = speedRange(craft);
+    const speed_m_s = craft.speed_m_s ?? max;
     return { pace: { hold: "through-speed", speed_m_s }, arrive };
   } catch (error) {
     throw error instanceof InputError ? fault(["pace", "arrive"], error.message) : error;
@@ -169,6 +170,7 @@ function checkSpeeds(hold: string, craft: Craft, fault: Fault): void {
 }
 
 const AMOUNT = { J: "energy", kg: "mass", L: "volume" } as const;
+const AMOUNT_EXAMPLE = { J: "15 kWh", kg: "500 kg", L: "20 L" } as const;
 
 function reserveOf(reserve: NonNullable<PlanParts["reserve"]>, craft: Craft, fault: Fault): Reserve {
   const { value, dimension, text } = reserve;
@@ -182,7 +184,7 @@ function reserveOf(reserve: NonNullable<PlanParts["reserve"]>, craft: Craft, fau
   if (dimension !== kind)
     throw fault(
       ["reserve"],
-      `a reserve is a share, a time, or an amount of the store's kind, ${kind}; found ${quoted(text)}`,
+      `a reserve is a share, a time, or an amount of the store's kind, ${kind}, as "${AMOUNT_EXAMPLE[craft.store.unit]}"; found ${quoted(text)}`,
     );
   return { kind: "amount", amount: value };
 }

@@ -11,6 +11,7 @@ import { parseQuantity } from "../units.ts";
 import { checkPlan, type PlanRequest } from "./estimate-plan.ts";
 import type { Plan } from "./plan.ts";
 import { parseTime } from "./time.ts";
+import { toldOfFile } from "./told-of-file.ts";
 
 /** What a door hands over beside the plan's text; parts of the window given here take the place of the plan's. */
 export interface WindowRequest extends PlanRequest {
@@ -63,10 +64,19 @@ export interface WindowAnswer {
 export async function windowPlan(text: string, request: WindowRequest): Promise<WindowAnswer> {
   const { plan, input } = await checkPlan(text, request);
   const window = windowAsked(plan.window, request);
+  return toldOfFile(request.file, () => answerWindow(plan, input, window, request.refine === true));
+}
+
+function answerWindow(
+  plan: Plan,
+  input: EstimateInput,
+  window: DepartureWindow,
+  refine: boolean,
+): WindowAnswer {
   const sweep = makeSweep(prepareRoutes(input), input, plan.arrive ?? null);
   const inTime = latestInTime(sweep, window);
   const cells = [...windowCells(sweep, window)];
-  const refined = request.refine === true ? refineWindow(sweep, window, cells) : null;
+  const refined = refine ? refineWindow(sweep, window, cells) : null;
   const summary = summariseWindow(cells);
   const isPaceOpen = refined !== null && window.speeds_m_s !== null && plan.pace.hold === "through-speed";
   const hasRange = Number.isFinite(plan.craft.speeds?.max ?? plan.craft.power.max);

@@ -168,6 +168,42 @@ describe("legwork estimate", () => {
     expect(readFileSync(file, "utf8")).toBe(legwork.run(["estimate", islands, "--format", "csv"]).out);
   });
 
+  it("does not write over the plan, nor over a file that it names", () => {
+    const plan = smallPlan("inputs");
+    const wind = join(folder, "inputs", "wind.csv");
+    for (const file of [plan, wind]) {
+      const before = readFileSync(file, "utf8");
+      const { status, out, err } = legwork.run(["estimate", plan, "--out", file]);
+      expect({ status, out }).toEqual({ status: 2, out: "" });
+      expect(err).toBe(
+        `legwork: ${file}: --out names a file of its own; found one that the answer is made from\n`,
+      );
+      expect(readFileSync(file, "utf8")).toBe(before);
+    }
+  });
+
+  it("names the plan in which the craft cannot do a leg even without wind", () => {
+    const plan = smallPlan("weak", (document) => {
+      document.craft = {
+        name: "Multirotor",
+        moves: "air",
+        power: { model: "cube", reference: { speed: "10 m/s", power: "100 W" } },
+        speeds: { min: "8 m/s", max: "12 m/s" },
+        store: { capacity: "1 kWh" },
+      };
+      document.pace = { hold: "power", power: "1 W" };
+    });
+    const { status, err } = legwork.run(["estimate", plan]);
+    expect(status).toBe(2);
+    expect(err).toMatch(
+      new RegExp(
+        `^legwork: ${plan}: leg 1 of route "East" to B: the pace takes a speed within the power model`,
+      ),
+    );
+    const window = ["--from", "2027-05-04T06:00Z", "--to", "2027-05-04T07:00Z", "--every", "1h"];
+    expect(legwork.run(["window", plan, ...window]).err).toBe(err);
+  });
+
   it("says that units change nothing where the format is not the table", () => {
     const plain = legwork.run(["estimate", islands, "--format", "csv"]);
     const asked = legwork.run(["estimate", islands, "--format", "csv", "--units", "sea"]);

@@ -259,14 +259,14 @@ const PACE: readonly Case[] = [
     "a reserve of another kind of store",
     [["reserve", "15 kg"]],
     "reserve",
-    "an amount of the store's kind, energy",
+    'an amount of the store\'s kind, energy, as "15 kWh"',
     '"15 kg"',
   ],
   [
     "a reserve of volume for a store of energy",
     [["reserve", "15 L"]],
     "reserve",
-    "an amount of the store's kind, energy",
+    'an amount of the store\'s kind, energy, as "15 kWh"',
     '"15 L"',
   ],
   [

@@ -154,16 +154,15 @@ describe("a pace that asks for an arrival", () => {
   });
 
   test("needs a bound on the craft's speeds", async () => {
-    const document = changed(
-      SUPPLY_RUN,
+    const changes: readonly Change[] = [
       ["pace", { arrive: "2027-05-04T18:00Z" }],
-      ["craft.speed", undefined],
       ["craft.speeds", undefined],
       ["craft.power", { model: "cube", reference: { speed: "10 kn", power: "40 kW" } }],
-    );
-    expect(await faultOf(() => read(document))).toMatch(
-      /^run.plan.json, pace.arrive: a choice of speed needs the craft's speeds/,
-    );
+    ];
+    for (const speed of [undefined, "10 kn"])
+      expect(await faultOf(() => read(changed(SUPPLY_RUN, ...changes, ["craft.speed", speed])))).toMatch(
+        /^run.plan.json, pace.arrive: a choice of speed needs the craft's speeds/,
+      );
   });
 
   test("is written and read back the same", () => {
@@ -240,7 +239,7 @@ describe("a plan's window worked out", () => {
     ).toContain("an arrival is after the earliest departure considered");
     const asked = textOf(["window", WINDOW], ["pace", { arrive: "2027-05-04T12:00Z" }]);
     expect(await faultOf(() => windowPlan(asked, { ...request, arriveBy: "2027-05-04T12:00Z" }))).toMatch(
-      /^an arriveBy of a window belongs to a pace that says how fast/,
+      /^run.plan.json: an arriveBy of a window belongs to a pace that says how fast/,
     );
   });
 
