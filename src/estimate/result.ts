@@ -67,8 +67,11 @@ export interface FieldAlong {
   readonly covered: number;
 }
 
+/** The same leg with every field at zero. */
 export interface Still {
+  /** Under way, as a leg's own `time_s`: without its stay. */
   readonly time_s: number;
+  /** With its stay. */
   readonly use: number;
 }
 

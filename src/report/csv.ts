@@ -71,7 +71,7 @@ function accountColumns(unit: string): CsvColumn[] {
   return [
     [`use [${unit}]`, ({ leg }) => leg.use],
     [`left [${unit}]`, ({ leg }) => leg.remaining],
-    ["still time with stay [s]", ({ leg }) => leg.still.time_s],
+    ["still time [s]", ({ leg }) => leg.still.time_s],
     [`still use [${unit}]`, ({ leg }) => leg.still.use],
     ["penalty time [s]", ({ leg }) => leg.penalty?.time_s ?? null],
     ["along time [s]", ({ leg }) => leg.penalty?.alongTime_s ?? null],

@@ -64,8 +64,7 @@ function ledgerFigures(route: RouteEstimate, units: TableUnits, use: RoundedColu
       }),
       0,
     );
-  // A leg's still time holds its stay, which is not time under way.
-  const calm = times((leg) => leg.still.time_s - leg.stay_s);
+  const calm = times((leg) => leg.still.time_s);
   const time = times((leg) => leg.time_s);
   const along = times((leg) => leg.penalty?.alongTime_s);
   const cross = times((leg) => leg.penalty?.crossTime_s);

@@ -120,7 +120,7 @@ function legOf(
     current: stopped ? null : craft.moves === "water" ? medium : null,
     use: stopped ? null : use,
     remaining: stopped ? null : before - use,
-    still: { time_s: still + stay, use: rate * still + rate * 0.1 * stay },
+    still: { time_s: still, use: rate * still + rate * 0.1 * stay },
     penalty: stopped
       ? null
       : {

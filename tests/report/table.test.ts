@@ -159,6 +159,17 @@ describe("the leg table", () => {
     );
   });
 
+  it("prints the still time under way in the ledger of a leg on which a route stops, its stay apart", () => {
+    const still = (input: typeof tender) => ledgerRows(writeTable(input, "sea"), 2)[1]?.[1];
+    const route = tender.estimate.routes[2];
+    const stopped = route?.legs[1];
+    if (route === undefined || stopped === undefined) throw new Error("the fixture has a third route");
+    const stays = { ...stopped, stay_s: 1200 };
+    const routes = tender.estimate.routes.with(2, { ...route, legs: route.legs.with(1, stays) });
+    expect(stopped.time_s).toBeNull();
+    expect(still({ ...tender, estimate: { ...tender.estimate, routes } })).toBe(still(tender));
+  });
+
   it("marks the best of the routes that do not stop, and only those", () => {
     const table = writeTable(tender, "sea");
     const rows = table.slice(table.indexOf("Routes compared")).split("\n");
