@@ -2,7 +2,7 @@
  * Departures in the order in which they are worked out: the first, then every halving of the steps between, so that the whole
  * window shows at once in coarse steps and then in finer ones.
  */
-function coarseToFine(count: number): number[] {
+export function coarseToFine(count: number): number[] {
   const order: number[] = [];
   let step = 2 ** Math.ceil(Math.log2(Math.max(count, 1)));
   for (let at = 0; at < count; at += step) order.push(at);

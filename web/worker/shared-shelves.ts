@@ -28,7 +28,7 @@ export function sourcesBehind(port: MessagePort): PlanSources {
   return sourcesOf(Comlink.wrap<Shelves>(port));
 }
 
-function sourcesOf(shelves: Pick<Comlink.Remote<Shelves>, keyof Shelves>): PlanSources {
+export function sourcesOf(shelves: Pick<Comlink.Remote<Shelves>, keyof Shelves>): PlanSources {
   let known: { readonly key: string; readonly fields: Promise<FieldsRead> } | null = null;
   let land: Land | null = null;
   return {
