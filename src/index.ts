@@ -172,6 +172,9 @@ export {
 } from "./plan/estimate-plan.ts";
 export { type InspectRequest, inspectField } from "./plan/inspect-field.ts";
 // Plans and craft.
+export { type Archive, readArchive, writeArchive } from "./plan/archive.ts";
+export { importRoutes } from "./plan/import-routes.ts";
+export type { ImportedRoutes } from "./plan/imported-routes.ts";
 export type { FieldReference, OpenFile, Plan } from "./plan/plan.ts";
 export { parseCoordinate } from "./plan/position.ts";
 export { formatPosition } from "./plan/position-format.ts";

@@ -1,7 +1,7 @@
 import { checkPlan } from "./core.ts";
 import { oneLine } from "./message.ts";
 import { writeResult } from "./output.ts";
-import { openBeside, readText } from "./plan-files.ts";
+import { openPlan } from "./plan-files.ts";
 
 function counted(count: number, word: string): string {
   return `${count} ${word}${count === 1 ? "" : "s"}`;
@@ -9,7 +9,8 @@ function counted(count: number, word: string): string {
 
 /** Reads everything that a plan names and says that it is in order. */
 export async function checkCommand(file: string): Promise<number> {
-  const { plan } = await checkPlan(await readText(file), { file, open: openBeside(file) });
+  const { text, open } = await openPlan(file);
+  const { plan } = await checkPlan(text, { file, open });
   const legs = plan.routes.reduce((sum, route) => sum + route.waypoints.length - 1, 0);
   const parts = [
     counted(plan.routes.length, "route"),

@@ -29,6 +29,9 @@ export interface Archive {
  *
  * @throws InputError where it is no ZIP archive, holds no plan or several, a name that leads out of it, one name twice, or more than
  *   an archive of a plan should
+ *
+ * @example
+ * readArchive(writeArchive({ format: "legwork-plan/1", departure: "2027-05-04T06:00:00Z", craft: { file: "a.craft.json" }, routes: [] }, "out", () => new Uint8Array(8)), "out.legwork.zip").files.get("a.craft.json").length // → 8
  */
 export function readArchive(bytes: Uint8Array, file: string): Archive {
   const files = new Map(Object.entries(unpacked(bytes, file)));
@@ -52,6 +55,9 @@ export function readArchive(bytes: Uint8Array, file: string): Archive {
  *
  * @param stem name of the plan's file, without its ending
  * @param contentOf the bytes of a file by the plan's name for it
+ *
+ * @example
+ * writeArchive({ format: "legwork-plan/1", departure: "2027-05-04T06:00:00Z", craft: { file: "a.craft.json" }, routes: [] }, "out", () => new Uint8Array(8)).slice(0, 2) // → [80, 75]
  */
 export function writeArchive(
   document: PlanDocument,
