@@ -28,7 +28,14 @@ export function sourcesBehind(port: MessagePort): PlanSources {
   return sourcesOf(Comlink.wrap<Shelves>(port));
 }
 
-export function sourcesOf(shelves: Pick<Comlink.Remote<Shelves>, keyof Shelves>): PlanSources {
+/** Shelves as they are reached from afar: every call answers later. */
+type FarShelves = {
+  [Call in keyof Shelves]: (
+    ...asked: Parameters<Shelves[Call]>
+  ) => Promise<Awaited<ReturnType<Shelves[Call]>>>;
+};
+
+export function sourcesOf(shelves: FarShelves): PlanSources {
   let known: { readonly key: string; readonly fields: Promise<FieldsRead> } | null = null;
   let land: Land | null = null;
   return {
