@@ -1,5 +1,5 @@
 import type { PageState } from "../state/page-state.ts";
-import { takeFiles } from "./take-files.ts";
+import { takeFilesLater } from "./take-later.ts";
 
 /** Lets files be dropped anywhere on the page. */
 export function listenForDrops(page: PageState): void {
@@ -19,6 +19,6 @@ export function listenForDrops(page: PageState): void {
     if (!hasFiles(event)) return;
     event.preventDefault();
     mark(false);
-    void takeFiles(page, [...(event.dataTransfer?.files ?? [])]);
+    void takeFilesLater(page, [...(event.dataTransfer?.files ?? [])]);
   });
 }

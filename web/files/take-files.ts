@@ -9,9 +9,6 @@ import { importRoutes } from "../state/route-edits.ts";
 
 const LARGEST_PLAN = 5_000_000;
 
-/** What opening takes, by the ends of names. */
-export const ACCEPTED = ".json,.csv,.tsv,.txt,.gpx,.geojson,.zip";
-
 /**
  * Takes the files that the user chose or dropped: a plan with the craft and fields that it names, an archive of them, a craft for
  * the plan on the page, fields to add to it, or routes.

@@ -1,6 +1,5 @@
 import { Chart } from "../chart/Chart.tsx";
 import { DeskTabs } from "../desk/DeskTabs.tsx";
-import { FieldDialog } from "../files/FieldDialog.tsx";
 import { Ledger } from "../ledger/Ledger.tsx";
 import { LegTable } from "../leg-table/LegTable.tsx";
 import { NewerVersion } from "../offline/NewerVersion.tsx";
@@ -33,6 +32,8 @@ function showPane({ view, desk }: PageState, pane: Pane): void {
   else if (desk.part.value === "legs") desk.part.value = "window";
 }
 
+const loadFieldDialog = async () => (await import("../files/FieldDialog.tsx")).FieldDialog;
+
 export function App({ page }: { readonly page: PageState }) {
   const { view, desk } = page;
   return (
@@ -60,7 +61,7 @@ export function App({ page }: { readonly page: PageState }) {
       <NewerVersion page={page} />
       <PlanBar page={page} />
       <Hint page={page} />
-      <FieldDialog page={page} />
+      {page.asking.value !== null && <LazyPart page={page} load={loadFieldDialog} />}
       <main data-desk={desk.part.value}>
         <div class="column">
           <section class="pane chart-pane" data-pane="chart" aria-label="Chart and clock">

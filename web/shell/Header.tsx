@@ -1,4 +1,4 @@
-import { ACCEPTED, takeFiles } from "../files/take-files.ts";
+import { ACCEPTED, takeFilesLater } from "../files/take-later.ts";
 import type { PageState } from "../state/page-state.ts";
 import { setPlanText } from "../state/plan-edits.ts";
 import { TextField } from "../waypoints/TextField.tsx";
@@ -48,7 +48,7 @@ export function Header({ page }: { readonly page: PageState }) {
             multiple
             accept={ACCEPTED}
             onChange={({ currentTarget }) => {
-              void takeFiles(page, [...(currentTarget.files ?? [])]);
+              void takeFilesLater(page, [...(currentTarget.files ?? [])]);
               currentTarget.value = "";
             }}
           />

@@ -30,6 +30,11 @@ export async function openPlan(
   page.view.instant.value = null;
   page.view.level.value = null;
   page.answers.forget();
+  const isReplacing = page.store.unsaved.peek() && page.store.plan.peek().routes.length > 0;
+  if (isReplacing && page.view.notice.peek() === null) {
+    page.view.notice.value =
+      "The plan that was here is in no file: Undo brings it back, until the page is left.";
+  }
   // There is nothing to go back to where nothing was.
   if (page.store.plan.peek().routes.length === 0) page.store.restart(plan);
   else page.store.open(plan, `Open ${name}`);
