@@ -61,7 +61,7 @@ export class FindingBook {
     const { code, role, at } = stop;
     const moment = this.#departure + 1000 * time;
     this.findings.push(
-      legFinding(code, leg, at, at, stopText(code, role, stop, moment, this.#validity(role))),
+      legFinding(code, leg, at, at, stopText(code, role, stop, moment, this.#validity(role, moment))),
     );
   }
 
@@ -72,12 +72,15 @@ export class FindingBook {
     this.findings.push(routeFinding("no-variation", what));
   }
 
-  #validity(role: FieldRole | null): string {
+  #validity(role: FieldRole | null, moment: number): string {
     const tiles = this.#fields.filter((field) => field.role === role).flatMap((field) => field.tiles);
     const first = tiles.map(({ times }) => times?.[0] ?? Number.POSITIVE_INFINITY);
     const last = tiles.map(({ times }) => times?.[times.length - 1] ?? Number.NEGATIVE_INFINITY);
     if (!first.some(Number.isFinite)) return "";
-    return `the ${role} is valid from ${momentText(Math.min(...first))} to ${momentText(Math.max(...last))}`;
+    const end = Math.max(...last);
+    // Under way the end is reached on the minute that is printed for both.
+    const beyond = momentText(moment) === momentText(end) ? " and not beyond" : "";
+    return `the ${role} is valid from ${momentText(Math.min(...first))} to ${momentText(end)}${beyond}`;
   }
 }
 

@@ -85,6 +85,9 @@ describe("the edges of the data", () => {
     const field = gridField("wind", { ...box, hours: [1, 2] }, () => [0, 0], { beyond: "hold" });
     const { estimate } = estimateOf(along, { fields: [field] });
     expect(estimate.findings[0]?.code).toBe("outside-time");
+    expect(estimate.findings[0]?.message).toMatch(
+      /the wind is valid from \S+ \S+ UTC to \S+ \S+ UTC; the estimate/,
+    );
     expect(estimate.reached?.at_m).toBe(0);
   });
 
@@ -92,6 +95,9 @@ describe("the edges of the data", () => {
     const short = { ...box, hours: [-1, 2.5] };
     const stopped = estimateOf(along, { fields: [gridField("wind", short, () => [2, 0])] }).estimate;
     expect(stopped.findings[0]?.code).toBe("outside-time");
+    expect(stopped.findings[0]?.message).toMatch(
+      /it is (\S+ \S+ UTC) here, .* to \1 and not beyond; the estimate stops/,
+    );
     expect(stopped.reached?.time_s).toBeCloseTo(9000, 6);
     expect(stopped.reached?.at_m).toBeCloseTo(9000 * 12, 4);
     const held = estimateOf(along, {
