@@ -37,10 +37,11 @@ effect(() => {
 });
 // What is decided rests on the estimate, and takes longer: it follows once that is there.
 effect(() => {
-  if (page.answers.answer.value.estimate === null) return;
+  const { estimate, ensemble } = page.answers.answer.value;
+  if (estimate === null) return;
   const turnBack = page.desk.part.value === "turn-back";
   const plan = page.shown.peek();
-  if (turnBack || wantsDecisions(plan)) void page.decisions.ask(plan, turnBack);
+  if (turnBack || wantsDecisions(plan, ensemble)) void page.decisions.ask(plan, turnBack);
 });
 // The coast is large: routes are estimated without it first, and held against it once it is there.
 effect(() => {

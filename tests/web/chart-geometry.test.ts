@@ -128,7 +128,14 @@ describe("what the chart draws of a route", () => {
 
   test("is a straight line while there is no estimate, and the track itself once there is", () => {
     const plan = { format: "legwork-plan/1" as const, departure: "", craft: {}, routes: [route] };
-    const none = { estimate: null, routes: [], drawings: [], fault: null, landPending: false };
+    const none = {
+      estimate: null,
+      routes: [],
+      drawings: [],
+      fault: null,
+      landPending: false,
+      ensemble: false,
+    };
     expect(drawnRoutes(plan, none, 0)[0]?.drawing.profile).toBeNull();
     expect([...(drawnRoutes(plan, none, 0)[0]?.drawing.lon ?? [])]).toEqual([170, 190]);
   });

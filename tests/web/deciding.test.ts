@@ -104,10 +104,11 @@ describe("a second worker on the first one's shelves", () => {
 describe("decisions on the page", () => {
   test("are asked for where the plan names something to decide, and keep routes in their places", async () => {
     const { plan, reader } = demoEngine("islands");
-    expect(wantsDecisions(plan)).toBe(false);
+    expect(wantsDecisions(plan, false)).toBe(false);
+    expect(wantsDecisions(plan, true)).toBe(true);
     const drawn = { ...plan.routes[0], name: "New", waypoints: [] };
     const wanted = { ...decidable(plan), routes: [drawn, ...plan.routes] };
-    expect(wantsDecisions(wanted)).toBe(true);
+    expect(wantsDecisions(wanted, false)).toBe(true);
     const deciding = createDeciding(reader);
     const decisions = createDecisions((asked, turnBack) => deciding.decide(asked, turnBack));
     await decisions.ask(wanted, false);

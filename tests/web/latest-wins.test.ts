@@ -54,6 +54,7 @@ describe("the answers to a plan", () => {
       estimate: { routes: names.map((name) => ({ name })) },
       drawings: names.map((name) => ({ name })),
       landPending: false,
+      ensemble: false,
     }) as unknown as EstimateAnswer;
 
   test("leave out routes still being drawn, and keep every route's own place", async () => {

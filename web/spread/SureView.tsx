@@ -12,7 +12,9 @@ export function SureView({ page }: { readonly page: PageState }) {
   const { store, desk, decisions } = page;
   const routes = page.routes.value;
   const chosen = routes[store.selection.value.route] ?? null;
-  const pending = wantsDecisions(page.shown.value) && decisions.decided.value?.plan !== page.shown.value;
+  const pending =
+    wantsDecisions(page.shown.value, page.answers.answer.value.ensemble) &&
+    decisions.decided.value?.plan !== page.shown.value;
   const isSpread = routes.some((route) => route?.spread);
   return (
     <div class="sure-view">

@@ -14,6 +14,8 @@ export interface Answer {
   readonly fault: string | null;
   /** Whether the routes are still to be held against land. */
   readonly landPending: boolean;
+  /** Whether the fields have several members. */
+  readonly ensemble: boolean;
 }
 
 export interface Answers {
@@ -25,7 +27,14 @@ export interface Answers {
   forget(): void;
 }
 
-const NONE: Answer = { estimate: null, routes: [], drawings: [], fault: null, landPending: false };
+const NONE: Answer = {
+  estimate: null,
+  routes: [],
+  drawings: [],
+  fault: null,
+  landPending: false,
+  ensemble: false,
+};
 
 export function createAnswers(estimate: (plan: PlanDocument) => Promise<EstimateAnswer>): Answers {
   const answer = signal<Answer>(NONE);
@@ -62,6 +71,7 @@ export function createAnswers(estimate: (plan: PlanDocument) => Promise<Estimate
         drawings: place.map((at) => found.drawings[at] ?? null),
         fault: null,
         landPending: found.landPending,
+        ensemble: found.ensemble,
       };
     },
   };

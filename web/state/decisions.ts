@@ -18,9 +18,12 @@ export interface Decisions {
   ask(plan: PlanDocument, turnBack: boolean): Promise<void>;
 }
 
-/** Whether a plan wants anything decided beyond its estimate. */
-export function wantsDecisions({ alternates = [], whatIf = [], fields = [] }: PlanDocument): boolean {
-  return alternates.length + whatIf.length > 0 || fields.some(({ error, member }) => error ?? member);
+/** Whether a plan wants anything decided beyond its estimate; an ensemble does by itself. */
+export function wantsDecisions(
+  { alternates = [], whatIf = [], fields = [] }: PlanDocument,
+  ensemble: boolean,
+): boolean {
+  return ensemble || alternates.length + whatIf.length > 0 || fields.some(({ error }) => error !== undefined);
 }
 
 export function createDecisions(

@@ -39,7 +39,9 @@ export function TurnBackView({ page }: { readonly page: PageState }) {
             </h3>
             {route.turnBack === undefined ? (
               <p class="quiet">
-                {wantsDecisions(page.shown.value) ? "Working it out again…" : "Working it out…"}
+                {wantsDecisions(page.shown.value, page.answers.answer.value.ensemble)
+                  ? "Working it out again…"
+                  : "Working it out…"}
               </p>
             ) : (
               <TurnBackList page={page} at={at} route={route} />

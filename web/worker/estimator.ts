@@ -31,6 +31,7 @@ export function createEstimator(reader: PlanReader): Estimator {
       estimate: found.estimate,
       drawings,
       landPending: craft.moves === "water" && land === null,
+      ensemble: read.members.length > 1,
     };
   };
 

@@ -45,6 +45,8 @@ interface Estimated {
   readonly drawings: readonly RouteDrawing[];
   /** Whether the routes were not yet held against land, since the fine coast isn't loaded. */
   readonly landPending: boolean;
+  /** Whether the fields have several members, of which the estimate is on the control's. */
+  readonly ensemble: boolean;
 }
 
 export type EstimateAnswer = Estimated | Fault;
