@@ -9,7 +9,7 @@ import { startProgress } from "./progress.ts";
 const PIECE = 1 << 20;
 
 /** A text file, UTF-8 with or without BOM. */
-export async function readText(file: string): Promise<string> {
+async function readText(file: string): Promise<string> {
   const bytes = await readBytes(file);
   try {
     return new TextDecoder("utf-8", { fatal: true }).decode(bytes);

@@ -9,7 +9,6 @@ import { serializePlan } from "./write-plan.ts";
  * names that the plan has for them. https://pkware.cachefly.net/webdocs/casestudies/APPNOTE.TXT, version 6.3.10.
  */
 
-export const ARCHIVE_ENDING = ".legwork.zip";
 const PLAN_ENDING = ".plan.json";
 
 /** Bounds of what an archive may hold, so that a small file can't grow without end when it is opened. */

@@ -2,7 +2,7 @@ import { InputError, type Place } from "../errors.ts";
 import { quoted } from "../found.ts";
 import type { PlanDocument } from "./plan-schema.ts";
 
-export type RouteDocument = PlanDocument["routes"][number];
+type RouteDocument = PlanDocument["routes"][number];
 export type WaypointDocument = RouteDocument["waypoints"][number];
 
 /** Routes read from a file of another kind, as a plan holds them. */
@@ -24,7 +24,7 @@ export interface FoundLine {
 }
 
 /** Most waypoints of one route: beyond it a line is a recording, and a plan by it no plan. */
-export const MOST_WAYPOINTS = 2000;
+const MOST_WAYPOINTS = 2000;
 const MOST_ROUTES = 100;
 
 /** Largest text, UTF-16 units: a tree of its elements takes some fifty times as much memory. */
