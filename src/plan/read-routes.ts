@@ -13,7 +13,7 @@ type WaypointParts = RouteParts["waypoints"][number];
  * counted from 1; a route's path is that of its waypoints that name none; a height holds until the next.
  *
  * Errors: two routes of one name, a waypoint equal to the one before it, a waypoint's speed under a pace that chooses its own
- * or outside the power table, a wing that stays, a rotor without mass that climbs.
+ * or outside the power table, a stay before the first leg, a wing that stays, a rotor without mass that climbs.
  */
 export function readRoutes(parts: PlanParts, craft: Craft, fault: Fault): readonly Route[] {
   const names = new Map<string, number>();
@@ -46,6 +46,11 @@ function waypointsOf(
     checkSpeed(given, parts, craft, at);
     if (given.stay !== undefined && craft.power.model === "wing")
       throw at(["stay"], `a wing cannot stay at a place; found ${quoted(given.stay.text)}`);
+    if (w === 0 && (given.stay?.value ?? 0) > 0)
+      throw at(
+        ["stay"],
+        `a route's first waypoint takes no stay, since no leg arrives there: let the plan depart later; found ${quoted(given.stay?.text ?? "")}`,
+      );
     const last: number | null = height;
     if (given.height !== undefined) height = given.height.value;
     if (

@@ -560,6 +560,13 @@ const ROUTES: readonly Case[] = [
     '"5 min"',
   ],
   [
+    "a stay before the first leg",
+    [["routes[0].waypoints[0].stay", "5 min"]],
+    "routes[0].waypoints[0].stay",
+    "a route's first waypoint takes no stay",
+    '"5 min"',
+  ],
+  [
     "a rotor without mass that climbs",
     [...AIR, ["craft.power", { ...ROTOR, mass: undefined }], [`${head}.height`, "20 m"]],
     "routes[0].waypoints[2].height",
