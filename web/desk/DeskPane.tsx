@@ -1,13 +1,14 @@
 import { LazyPart } from "../shell/LazyPart.tsx";
 import type { DeskPart } from "../state/desk.ts";
 import type { PageState } from "../state/page-state.ts";
+import { loadWindow } from "../window/load-window.ts";
 import { DeskTabs } from "./DeskTabs.tsx";
 import "./desk-views.css";
 
 type Question = Exclude<DeskPart, "legs">;
 
 const LOADS = {
-  window: () => import("../window/WindowView.tsx").then(({ WindowView }) => WindowView),
+  window: loadWindow,
   pace: () => import("../pace-curve/PaceView.tsx").then(({ PaceView }) => PaceView),
   "turn-back": () => import("../turn-back/TurnBackView.tsx").then(({ TurnBackView }) => TurnBackView),
   sure: () => import("../spread/SureView.tsx").then(({ SureView }) => SureView),

@@ -1,9 +1,12 @@
+import { preload } from "../shell/LazyPart.tsx";
 import type { Engine } from "../state/page-state.ts";
+import { loadWindow } from "../window/load-window.ts";
+import { loadDesk } from "./load-desk.ts";
 
 /** Loads what compares departures while nothing else is going on, so that it shows at once when it is asked for. */
 export function warmDesk(engine: Engine): void {
   const warm = (): void => {
-    const parts = [import("./DeskPane.tsx"), import("../window/WindowView.tsx"), engine.loadDeciding()];
+    const parts = [preload(loadDesk), preload(loadWindow), engine.loadDeciding()];
     // What fails now is loaded when it is asked for, and then says so.
     void Promise.allSettled(parts);
   };

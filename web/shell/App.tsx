@@ -1,9 +1,11 @@
 import { Chart } from "../chart/Chart.tsx";
 import { DeskTabs } from "../desk/DeskTabs.tsx";
+import { loadDesk } from "../desk/load-desk.ts";
 import { Ledger } from "../ledger/Ledger.tsx";
 import { LegTable } from "../leg-table/LegTable.tsx";
 import { NewerVersion } from "../offline/NewerVersion.tsx";
 import { Ribbons } from "../ribbon/Ribbons.tsx";
+import { isStale } from "../state/answers.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { Pane } from "../state/page-view.ts";
 import { RouteEditor } from "../waypoints/RouteEditor.tsx";
@@ -23,8 +25,6 @@ const PANES: readonly (readonly [Pane, string])[] = [
   ["decide", "Decide"],
 ];
 
-const loadDesk = () => import("../desk/DeskPane.tsx").then(({ DeskPane }) => DeskPane);
-
 /** On a narrow screen the desk is a pane among the others. */
 function showPane({ view, desk }: PageState, pane: Pane): void {
   view.pane.value = pane;
@@ -35,7 +35,7 @@ function showPane({ view, desk }: PageState, pane: Pane): void {
 const loadFieldDialog = async () => (await import("../files/FieldDialog.tsx")).FieldDialog;
 
 export function App({ page }: { readonly page: PageState }) {
-  const { view, desk } = page;
+  const { view, desk, answers } = page;
   return (
     <div class="page" data-shown={view.pane.value}>
       <nav class="skip" aria-label="Skip to">
@@ -62,7 +62,7 @@ export function App({ page }: { readonly page: PageState }) {
       <PlanBar page={page} />
       <Hint page={page} />
       {page.asking.value !== null && <LazyPart page={page} load={loadFieldDialog} />}
-      <main data-desk={desk.part.value}>
+      <main data-desk={desk.part.value} data-stale={isStale(answers.answer.value) ? "" : undefined}>
         <div class="column">
           <section class="pane chart-pane" data-pane="chart" aria-label="Chart and clock">
             <Chart page={page} />

@@ -1,4 +1,4 @@
-import { useEffect, useRef } from "preact/hooks";
+import { useLayoutEffect, useRef } from "preact/hooks";
 import type { PageState } from "../state/page-state.ts";
 import { bestMarks } from "./best-marks.ts";
 import { drawHeat } from "./draw-heat.ts";
@@ -21,7 +21,7 @@ export function HeatPicture({ page, filled, measure, rows, cellWidth, active }: 
   const { shape, cells } = filled;
   const theme = page.view.theme.value;
   const departure = Date.parse(page.store.plan.value.departure);
-  useEffect(() => {
+  useLayoutEffect(() => {
     if (canvas.current === null) return;
     const drawn = rows.map((row) =>
       shape.departures.map((_, column) => cells[cellIndex(shape, column, row)] ?? null),

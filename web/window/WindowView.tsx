@@ -1,5 +1,5 @@
 import { useSignal } from "@preact/signals";
-import { useEffect, useMemo } from "preact/hooks";
+import { useEffect, useLayoutEffect, useMemo } from "preact/hooks";
 import { estimable } from "../state/estimable.ts";
 import type { PageState } from "../state/page-state.ts";
 import { Bests } from "./Bests.tsx";
@@ -29,7 +29,7 @@ export function WindowView({ page }: { readonly page: PageState }) {
   const window = plan.window ?? proposedWindow(plan, estimate);
   const key = part === null || estimate === null ? "" : windowKey(part.plan, window, landPending);
 
-  useEffect(() => {
+  useLayoutEffect(() => {
     if (part !== null && key !== "") void fill.ask({ ...part.plan, window });
     return () => fill.stop();
     // The key says when any of the others is another.
