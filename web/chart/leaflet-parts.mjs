@@ -14,7 +14,7 @@ import * as DomEvent from "leaflet/src/dom/DomEvent.js";
 import * as DomUtil from "leaflet/src/dom/DomUtil.js";
 
 export { toLatLngBounds as latLngBounds } from "leaflet/src/geo/LatLngBounds.js";
-export { Point } from "leaflet/src/geometry/Point.js";
+export { Point, toPoint as point } from "leaflet/src/geometry/Point.js";
 export { Layer } from "leaflet/src/layer/Layer.js";
 export { LayerGroup, layerGroup } from "leaflet/src/layer/LayerGroup.js";
 export { divIcon } from "leaflet/src/layer/marker/DivIcon.js";
