@@ -14,6 +14,7 @@ import { turnsToward } from "./longitude.ts";
 import { Marks } from "./marks.ts";
 import { RouteLines, shiftFor } from "./route-lines.ts";
 import { drawnRoutes, handlesOf, legMiddles } from "./route-view.ts";
+import { showSensitivity } from "./sensitivity-stroke.ts";
 import { showTurnBack } from "./turn-back-marks.ts";
 import { WaypointHandles } from "./waypoint-handles.ts";
 
@@ -49,6 +50,7 @@ export function openChart(host: HTMLElement, page: PageState, readouts: ChartRea
     addByClick(map, page),
     followTheme(chart, page),
     showTurnBack(map, page),
+    showSensitivity(map, page),
   ];
   const resized = new ResizeObserver(() => map.invalidateSize({ pan: false }));
   resized.observe(host);

@@ -44,9 +44,9 @@ export function ClockBar({ page }: { readonly page: PageState }) {
 }
 
 /** From the departure, or the first valid time where that is earlier, to the last arrival or valid time. */
-function clockSpan({ answers, store }: PageState): { from: number; to: number } | null {
+function clockSpan({ answers, shown }: PageState): { from: number; to: number } | null {
   const { estimate, drawings } = answers.answer.value;
-  const departure = Date.parse(store.plan.value.departure);
+  const departure = Date.parse(shown.value.departure);
   if (estimate === null || Number.isNaN(departure)) return null;
   const ends = drawings.map((drawing) => departure + 1000 * (drawing?.profile?.time_s.at(-1) ?? 0));
   const valid = estimate.fields.flatMap(({ validFrom, validTo }) =>

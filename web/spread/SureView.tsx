@@ -30,7 +30,7 @@ export function SureView({ page }: { readonly page: PageState }) {
               desk.sensitivity.value = checked;
             }}
           />{" "}
-          Draw on the ribbons where a wrong forecast adds most to the spread of the use
+          Draw on ribbons and chart where a wrong forecast adds most to the spread of the use
         </label>
       )}
       {pending && <p class="quiet">Working it out…</p>}

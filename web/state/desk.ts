@@ -19,7 +19,7 @@ export interface Desk {
   readonly preview: Signal<Preview | null>;
   /** Whether a click on the chart adds an alternate. */
   readonly placing: Signal<boolean>;
-  /** Whether ribbons show where a wrong forecast would hurt most. */
+  /** Whether ribbons and chart show where a wrong forecast would hurt most. */
   readonly sensitivity: Signal<boolean>;
   /** Whether what lies on the desk is printed with the leg table. */
   readonly printed: Signal<boolean>;
