@@ -44,17 +44,7 @@ const OTHERS: readonly Export[] = [
 
 function byCommand(demo: string, route: string, format: string): string {
   const plan = join(folder, `${demo}.plan.json`);
-  // The page's own preset; the other formats are in SI units.
-  const units = format === "table" ? ["--units", "sea"] : [];
-  const { status, out, err } = command.run([
-    "estimate",
-    plan,
-    "--route",
-    route,
-    "--format",
-    format,
-    ...units,
-  ]);
+  const { status, out, err } = command.run(["estimate", plan, "--route", route, "--format", format]);
   expect(status, err).toBeLessThanOrEqual(1);
   return out;
 }

@@ -10,6 +10,7 @@ import { appendWaypoint, deleteWaypoint, insertWaypoint, placeWaypoint } from ".
 import type { FieldAt } from "../worker/protocol.ts";
 import { readUnderPointer, showFields } from "./chart-fields.ts";
 import { type ChartMap, createChartMap } from "./chart-map.ts";
+import { fitClear, roomsBeside, whenBesideChanges } from "./chart-room.ts";
 import { turnsToward } from "./longitude.ts";
 import { Marks } from "./marks.ts";
 import { RouteLines, shiftFor } from "./route-lines.ts";
@@ -57,9 +58,13 @@ export function openChart(host: HTMLElement, page: PageState, readouts: ChartRea
 
   const fitRoutes = (): void => showAll(map, page);
   if (!fitted) closers.push(fitWhenFirstDrawn(page, fitRoutes));
-  closers.push(fitUntilTouched(map, fitRoutes), fitOpened(map, page));
+  const untouched = fitUntilTouched(map, fitRoutes);
+  closers.push(untouched, fitOpened(map, page));
   return {
-    zoom: (steps) => map.setZoom(map.getZoom() + steps),
+    zoom(steps) {
+      untouched();
+      map.setZoom(map.getZoom() + steps);
+    },
     fitRoutes,
     close() {
       resized.disconnect();
@@ -234,7 +239,7 @@ function followTheme(chart: ChartMap, { view }: PageState): () => void {
       const place = view.lookAt.value;
       if (place === null) return;
       const shift = turnsToward(place.lon, chart.map.getCenter().lng);
-      chart.map.panInside([place.lat, place.lon + shift], { padding: [60, 60] });
+      chart.map.panInside([place.lat, place.lon + shift], roomsBeside(chart.map)[0]);
     }),
   ];
   return () => {
@@ -243,15 +248,12 @@ function followTheme(chart: ChartMap, { view }: PageState): () => void {
   };
 }
 
-/** Room for the tools at the top and for names to the right of waypoints. */
-const FIT: L.FitBoundsOptions = { paddingTopLeft: [40, 62], paddingBottomRight: [80, 26], animate: false };
-
 function showAll(map: L.Map, { store, answers }: PageState): void {
   const points = drawnRoutes(store.plan.value, answers.answer.value, 0).flatMap(({ drawing }) => {
     const shift = shiftFor(map, drawing.lon);
     return Array.from(drawing.lat, (lat, at): L.LatLngTuple => [lat, (drawing.lon[at] ?? 0) + shift]);
   });
-  if (points.length > 0) map.fitBounds(L.latLngBounds(points), FIT);
+  if (points.length > 0) fitClear(map, L.latLngBounds(points));
 }
 
 /** Opens on the whole plan, or on the world where the plan is empty; says whether there was a plan to show. */
@@ -260,7 +262,7 @@ function firstView(map: L.Map, { store }: PageState): boolean {
   const first = places[0]?.lon ?? 0;
   const points = places.map(({ lat, lon }): L.LatLngTuple => [lat, lon + turnsToward(lon, first)]);
   if (points.length < 2) map.setView([25, 0], 2);
-  else map.fitBounds(L.latLngBounds(points), FIT);
+  else fitClear(map, L.latLngBounds(points));
   return points.length >= 2;
 }
 
@@ -286,7 +288,9 @@ function fitWhenFirstDrawn(page: PageState, fitRoutes: () => void): () => void {
 function fitUntilTouched(map: L.Map, fitRoutes: () => void): () => void {
   const host = map.getContainer();
   const gestures = ["pointerdown", "wheel", "keydown"];
+  const stopBeside = whenBesideChanges(map, fitRoutes);
   const stop = (): void => {
+    stopBeside();
     map.off("resize", fitRoutes);
     for (const gesture of gestures) host.removeEventListener(gesture, stop);
   };

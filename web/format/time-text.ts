@@ -14,6 +14,13 @@ export function dateText(instant: number, zone: string): string {
   return localInput(instant, zone).slice(0, 10);
 }
 
+/** A time in full, as one that is decided on is read: `Tue 4 May 2027 06:00 UTC`. */
+export function fullTimeText(instant: number, zone: string): string {
+  const { weekday, day, month, hour, minute } = partsIn(new Date(instant), zone);
+  const year = localInput(instant, zone).slice(0, 4);
+  return `${weekday} ${Number(day)} ${month} ${year} ${hour}:${minute} ${zoneText(instant, zone)}`;
+}
+
 /** `06:00` on the day of another instant, else with its date: `7 Nov 06:00`. */
 export function clockSince(instant: string, since: string | null, zone: string): string {
   const { day, month, hour, minute } = partsIn(new Date(instant), zone);

@@ -12,6 +12,7 @@ interface Kept<T> {
 
 const KEPT = {
   units: kept((view) => view.units, oneOf(["sea", "air", "metric"])),
+  unitsChosen: kept((view) => view.unitsChosen, flag),
   zone: kept(
     (view) => view.zone,
     (value) => (isZone(value) ? value : undefined),
@@ -26,10 +27,7 @@ const KEPT = {
   routePart: kept((view) => view.routePart, oneOf(["table", "profile"])),
   hiddenColumns: kept((view) => view.hiddenColumns, texts),
   legUnits: kept((view) => view.legUnits, legUnits),
-  hintSeen: kept(
-    (view) => view.hintSeen,
-    (value) => (typeof value === "boolean" ? value : undefined),
-  ),
+  hintSeen: kept((view) => view.hintSeen, flag),
 };
 
 /** Brings back what the device holds of how things are shown. */
@@ -80,6 +78,10 @@ function readObject(storage: Pick<Storage, "getItem"> | null): object {
 
 function oneOf<T extends string>(choices: readonly T[]): (value: unknown) => T | undefined {
   return (value) => choices.find((choice) => choice === value);
+}
+
+function flag(value: unknown): boolean | undefined {
+  return typeof value === "boolean" ? value : undefined;
 }
 
 function texts(value: unknown): readonly string[] | undefined {

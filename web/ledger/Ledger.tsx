@@ -1,10 +1,12 @@
-import { ADVISORY, type DecidedRoute, type RouteEstimate, type StoreUnit } from "../core.ts";
+import type { DecidedRoute, RouteEstimate, StoreUnit } from "../core.ts";
 import { clockSince, clockText, durationText, signedDurationText, zoneText } from "../format/time-text.ts";
 import { inUnit, signedInUnit, storeUnit } from "../format/units.ts";
 import { Swatch } from "../ribbon/Ribbon.tsx";
+import { StaleMark } from "../shell/StaleMark.tsx";
 import { sureWords } from "../spread/spread-words.ts";
 import { WhatIfTable } from "../spread/WhatIfTable.tsx";
 import type { PageState } from "../state/page-state.ts";
+import { Advisory } from "./Advisory.tsx";
 import { CostBar } from "./CostBar.tsx";
 import { barsEnd } from "./cost-bar.ts";
 import { FindingList } from "./FindingList.tsx";
@@ -25,6 +27,7 @@ export function Ledger({ page }: { readonly page: PageState }) {
     <section class="pane ledger" data-pane="ledger" aria-labelledby="ledger-title">
       <header class="pane-head">
         <h2 id="ledger-title">Ledger</h2>
+        <StaleMark page={page} />
         <label>
           Differences to{" "}
           <select
@@ -82,8 +85,8 @@ export function Ledger({ page }: { readonly page: PageState }) {
         <BarLegend />
         <ChosenWhatIfs page={page} />
       </div>
-      <p class="advisory">{ADVISORY}</p>
       <FindingList page={page} />
+      <Advisory />
     </section>
   );
 }

@@ -5,10 +5,11 @@ import { inUnit } from "../format/units.ts";
 import { Profile } from "../ribbon/Profile.tsx";
 import { Swatch } from "../ribbon/Ribbon.tsx";
 import { copyLegTable } from "../shell/exports.ts";
+import { StaleMark } from "../shell/StaleMark.tsx";
 import type { PageState } from "../state/page-state.ts";
 import type { RouteDrawing } from "../worker/protocol.ts";
 import { LegChoices } from "./LegChoices.tsx";
-import { chosenColumns, type LegColumn, legColumns, tableUnits } from "./leg-columns.ts";
+import { chosenColumns, DECIDING_COLUMNS, type LegColumn, legColumns, tableUnits } from "./leg-columns.ts";
 
 /** The leg table of the chosen route. */
 export function LegTable({ page }: { readonly page: PageState }) {
@@ -49,6 +50,7 @@ export function LegTable({ page }: { readonly page: PageState }) {
         <span class="leg-route">
           <Swatch route={chosen} />
           {route.name}
+          <StaleMark page={page} />
         </span>
         <span class="tools">
           <button type="button" onClick={() => void copyLegTable(page)}>
@@ -82,7 +84,7 @@ export function LegTable({ page }: { readonly page: PageState }) {
           <thead>
             <tr>
               {columns.map(({ key, heading, unit, numeric }) => (
-                <th key={key} scope="col" class={numeric ? "figure" : ""}>
+                <th key={key} scope="col" class={cellClass(key, numeric)}>
                   {heading}
                   {unit !== "" && <span class="unit">{unit}</span>}
                 </th>
@@ -162,7 +164,7 @@ function LegRow({ page, leg, columns, drawing, marked }: LegRowProps) {
       onClick={() => store.select({ route, waypoint: leg.leg })}
     >
       {columns.map(({ key, numeric, text }) => (
-        <td key={key} class={numeric ? "figure" : ""}>
+        <td key={key} class={cellClass(key, numeric)}>
           {key === "to" ? (
             <button type="button" class="leg-pick" aria-pressed={waypoint === leg.leg}>
               {text(leg)}
@@ -174,6 +176,10 @@ function LegRow({ page, leg, columns, drawing, marked }: LegRowProps) {
       ))}
     </tr>
   );
+}
+
+function cellClass(key: string, numeric: boolean): string {
+  return [numeric ? "figure" : "", DECIDING_COLUMNS.includes(key) ? "decides" : ""].join(" ").trim();
 }
 
 /** The leg, from 1, that a distance along the route lies on. */

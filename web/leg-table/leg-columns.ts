@@ -76,9 +76,7 @@ export function legColumns(route: RouteEstimate, shown: LegShown): LegColumn[] {
     plain("ground", "Ground", speed.symbol, (leg) => inUnit(leg.groundSpeed_m_s?.mean ?? null, speed)),
     plain("heading", "Heading", "°T", (leg) => courseText(leg.heading_deg?.mean ?? null)),
     plain("crab", "Crab", "°", (leg) => crabText(leg.crab_deg?.mean ?? null)),
-    plain("still", "Still time", route.totals.stay_s === 0 ? "" : "with stay", ({ still }) =>
-      durationText(still.time_s),
-    ),
+    plain("still", "Still time", "", ({ still }) => durationText(still.time_s)),
     plain("time", "Time", "", ({ time_s }) => durationText(time_s)),
     ...stayColumn(route),
     plain("eta", "ETA", zoneName, ({ arrival }) =>
@@ -91,6 +89,9 @@ export function legColumns(route: RouteEstimate, shown: LegShown): LegColumn[] {
 
 /** Columns without which a row says nothing. */
 export const FIXED_COLUMNS: readonly string[] = ["leg", "to"];
+
+/** The last columns, which stay in view where the others scroll. */
+export const DECIDING_COLUMNS: readonly string[] = ["use", "left"];
 
 /** The columns that the user wants of those that there are. */
 export function chosenColumns(

@@ -19,6 +19,7 @@ import {
   storeLevel,
 } from "./ribbon-measures.ts";
 import { ribbonRuns } from "./ribbon-runs.ts";
+import { shownNames, type TickName } from "./tick-names.ts";
 
 interface RibbonProps {
   readonly page: PageState;
@@ -191,34 +192,33 @@ interface TicksProps {
   readonly below: number;
 }
 
-const NAME_GAP = 54;
-
 function Ticks({ page, route, drawing, axis, scale, below }: TicksProps) {
   const { profile } = drawing;
   const waypoints = page.store.plan.value.routes[route]?.waypoints ?? [];
   if (!profile) return null;
-  const end = scale(axis.at(-1) ?? 0);
-  let named = Number.NEGATIVE_INFINITY;
+  const length = profile.distance_m.at(-1) ?? 0;
+  const last = drawing.waypoints.length - 1;
+  const ticks = Array.from(drawing.waypoints, (sample) => drawing.distance_m[sample] ?? 0).flatMap(
+    (along, at): TickName[] => {
+      if (along > length) return [];
+      const x = scale(valueAtDistance(profile.distance_m, axis, along) ?? 0);
+      const anchor = at === 0 ? "start" : at === last ? "end" : "middle";
+      return [{ text: waypoints[at]?.name ?? String(at + 1), x, anchor }];
+    },
+  );
+  const named = shownNames(ticks);
   return (
     <g class="ribbon-ticks">
-      {Array.from(drawing.waypoints, (sample, at) => {
-        const along = drawing.distance_m[sample] ?? 0;
-        if (along > (profile.distance_m.at(-1) ?? 0)) return null;
-        const x = scale(valueAtDistance(profile.distance_m, axis, along) ?? 0);
-        const last = at === drawing.waypoints.length - 1;
-        const hasRoom = x - named >= NAME_GAP && (last || at === 0 || end - x >= NAME_GAP);
-        if (hasRoom) named = x;
-        return (
-          <g key={at} transform={`translate(${x} ${BAND_TOP})`}>
-            <path d={`M0 -2V${BAND_HEIGHT + 3}`} />
-            {hasRoom && (
-              <text y={BAND_HEIGHT + below + 13} text-anchor={at === 0 ? "start" : last ? "end" : "middle"}>
-                {waypoints[at]?.name ?? at + 1}
-              </text>
-            )}
-          </g>
-        );
-      })}
+      {ticks.map((tick, at) => (
+        <g key={at} transform={`translate(${tick.x} ${BAND_TOP})`}>
+          <path d={`M0 -2V${BAND_HEIGHT + 3}`} />
+          {named.has(tick) && (
+            <text y={BAND_HEIGHT + below + 13} text-anchor={tick.anchor}>
+              {tick.text}
+            </text>
+          )}
+        </g>
+      ))}
     </g>
   );
 }

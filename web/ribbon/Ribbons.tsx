@@ -1,4 +1,5 @@
 import { shownUnit } from "../format/units.ts";
+import { StaleMark } from "../shell/StaleMark.tsx";
 import { useWidth } from "../shell/use-width.ts";
 import { alongLimit } from "../state/along-scale.ts";
 import type { PageState } from "../state/page-state.ts";
@@ -21,6 +22,7 @@ export function Ribbons({ page }: { readonly page: PageState }) {
     <section class="pane ribbons" data-pane="ribbons" aria-labelledby="ribbons-title">
       <header class="pane-head">
         <h2 id="ribbons-title">Ribbons</h2>
+        <StaleMark page={page} />
         <AlongLegend limit_m_s={limit} units={view.units.value} />
         <fieldset class="choice">
           <legend class="unseen">Axis of the ribbons</legend>

@@ -14,12 +14,13 @@ export function Header({ page }: { readonly page: PageState }) {
     <header class="page-head">
       <h1>
         <Mark />
-        Legwork
+        <span>Legwork</span>
       </h1>
       <TextField
         label="Title of the plan"
         value={store.plan.value.title ?? ""}
         placeholder="Untitled plan"
+        whole
         onText={(text) => store.edit("Change title", (plan) => setPlanText(plan, "title", text))}
       />
       <span class="saved-state">{store.unsaved.value ? "not saved to a file" : ""}</span>

@@ -1,6 +1,6 @@
 import { FieldButton } from "../files/FieldButton.tsx";
 import { Readings } from "../files/Readings.tsx";
-import { fromLocalInput, localInput, zoneText } from "../format/time-text.ts";
+import { fromLocalInput, fullTimeText, localInput } from "../format/time-text.ts";
 import type { PageState } from "../state/page-state.ts";
 import { deleteField, setDeparture, setPlanText } from "../state/plan-edits.ts";
 import { TextField } from "../waypoints/TextField.tsx";
@@ -17,7 +17,10 @@ export function PlanBar({ page }: { readonly page: PageState }) {
   return (
     <section class="plan-bar" data-pane="route" aria-label="Plan">
       <label>
-        <span>Departure {Number.isNaN(departure) ? zone : zoneText(departure, zone)}</span>
+        {/* Browsers choose the control's order of day and month: beside it the time stands in full. */}
+        <span>
+          Departure <b>{Number.isNaN(departure) ? zone : fullTimeText(departure, zone)}</b>
+        </span>
         <input
           type="datetime-local"
           value={Number.isNaN(departure) ? "" : localInput(departure, zone)}

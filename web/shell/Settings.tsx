@@ -16,6 +16,7 @@ export function Settings({ page: { view } }: { readonly page: PageState }) {
           value={view.units.value}
           onChange={({ currentTarget: { value } }) => {
             view.units.value = value === "air" || value === "metric" ? value : "sea";
+            view.unitsChosen.value = true;
           }}
         >
           <option value="sea">sea: NM, kn, m</option>

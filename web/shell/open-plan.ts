@@ -1,5 +1,6 @@
 import { keepFile } from "../state/keep-file.ts";
 import type { PageState } from "../state/page-state.ts";
+import type { UnitsPreset } from "../state/page-view.ts";
 import type { PlanDocument } from "../state/plan-document.ts";
 import { readFieldFile } from "./read-field-file.ts";
 
@@ -29,6 +30,7 @@ export async function openPlan(
   }
   page.view.instant.value = null;
   page.view.level.value = null;
+  if (!page.view.unitsChosen.peek()) page.view.units.value = await unitsOf(page, craft);
   page.answers.forget();
   const isReplacing = page.store.unsaved.peek() && page.store.plan.peek().routes.length > 0;
   if (isReplacing && page.view.notice.peek() === null) {
@@ -41,6 +43,22 @@ export async function openPlan(
   page.view.opened.value += 1;
   page.view.announcement.value = `Opened ${name}`;
   return true;
+}
+
+/** The units that the command line writes its table in for the same craft. */
+async function unitsOf({ files, view }: PageState, craft: PlanDocument["craft"]): Promise<UnitsPreset> {
+  if (!("file" in craft) || typeof craft.file !== "string")
+    return "moves" in craft && craft.moves === "air" ? "air" : "sea";
+  const file = files.peek().get(craft.file);
+  if (file === undefined) return view.units.peek();
+  try {
+    const value: unknown = JSON.parse(await file.text());
+    const moves = typeof value === "object" && value !== null ? Reflect.get(value, "moves") : undefined;
+    return moves === "air" ? "air" : "sea";
+  } catch {
+    // What is wrong with the craft the estimate says.
+    return view.units.peek();
+  }
 }
 
 async function keep(

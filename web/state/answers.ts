@@ -4,6 +4,7 @@ import type { EstimateAnswer, RouteDrawing } from "../worker/protocol.ts";
 import { estimable } from "./estimable.ts";
 import { latestWins, SUPERSEDED } from "./latest-wins.ts";
 import type { PlanDocument } from "./plan-document.ts";
+import { saidOnce } from "./said-once.ts";
 
 /** The newest answer to the plan. Arrays of routes are indexed as the plan's; `null` where a route is still being drawn. */
 export interface Answer {
@@ -16,6 +17,11 @@ export interface Answer {
   readonly landPending: boolean;
   /** Whether the fields have several members. */
   readonly ensemble: boolean;
+}
+
+/** Whether the figures are those of the plan before a fault. */
+export function isStale({ fault, estimate }: Answer): boolean {
+  return fault !== null && estimate !== null;
 }
 
 export interface Answers {
@@ -61,7 +67,7 @@ export function createAnswers(estimate: (plan: PlanDocument) => Promise<Estimate
       if (mine === asked) working.value = false;
       if (found === SUPERSEDED) return;
       if (!found.ok) {
-        answer.value = { ...answer.peek(), fault: found.fault };
+        answer.value = { ...answer.peek(), fault: saidOnce(found.fault) };
         return;
       }
       const place = plan.routes.map((_, index) => part.routes.indexOf(index));

@@ -25,6 +25,8 @@ interface Pointed {
 /** How the page shows the plan; none of it is part of the plan, and none of it is undone. */
 export interface PageView {
   readonly units: Signal<UnitsPreset>;
+  /** Whether the user chose the units; until then the craft of each plan that is opened does. */
+  readonly unitsChosen: Signal<boolean>;
   /** IANA name of the time zone that times are shown in; "UTC" unless chosen. */
   readonly zone: Signal<string>;
   readonly theme: Signal<Theme>;
@@ -65,6 +67,7 @@ export interface PageView {
 export function createPageView(): PageView {
   return {
     units: signal<UnitsPreset>("sea"),
+    unitsChosen: signal(false),
     zone: signal("UTC"),
     theme: signal<Theme>("auto"),
     axis: signal<RibbonAxis>("distance"),

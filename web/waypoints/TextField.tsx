@@ -6,12 +6,14 @@ interface TextFieldProps {
   /** Called with the new text on Enter or when the field is left, not at every key. */
   readonly onText: (text: string) => void;
   readonly placeholder?: string;
+  /** Whether the whole text is a tooltip, where the field may be too narrow for it. */
+  readonly whole?: boolean;
   /** The element that says what is wrong with the text. */
   readonly faultId?: string;
 }
 
 /** A field that speaks when its text is finished, and shows the plan's text again on Escape. */
-export function TextField({ label, value, onText, placeholder, faultId }: TextFieldProps) {
+export function TextField({ label, value, onText, placeholder, whole, faultId }: TextFieldProps) {
   const input = useRef<HTMLInputElement>(null);
   useEffect(() => {
     if (input.current && document.activeElement !== input.current) input.current.value = value;
@@ -30,6 +32,7 @@ export function TextField({ label, value, onText, placeholder, faultId }: TextFi
       aria-label={label}
       defaultValue={value}
       {...(placeholder === undefined ? {} : { placeholder })}
+      {...(whole ? { title: value } : {})}
       {...(faultId === undefined ? {} : { "aria-invalid": true, "aria-describedby": faultId })}
       autocomplete="off"
       spellcheck={false}
