@@ -5,7 +5,8 @@
 // Deciding: how far out one can still turn back.
 export type { Alternate } from "./choose/alternate.ts";
 // Deciding: when to leave and how fast.
-export { type ArrivalWindow, solveArrival } from "./choose/arrive.ts";
+export type { ArrivalWindow } from "./choose/arrival-window.ts";
+export { solveArrival } from "./choose/arrive.ts";
 export { estimateArriving } from "./choose/arriving-estimate.ts";
 export type { DecidedEstimate, DecidedRoute } from "./choose/decided.ts";
 export { type DepartureWindow, windowDepartures } from "./choose/departure-window.ts";

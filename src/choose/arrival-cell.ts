@@ -1,7 +1,8 @@
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { RouteStatus } from "../estimate/result.ts";
 import { arrivalSpeed, missedText } from "./arrival-answer.ts";
-import { type ArrivalWindow, solveArrival } from "./arrive.ts";
+import type { ArrivalWindow } from "./arrival-window.ts";
+import { solveArrival } from "./arrive.ts";
 import { speedRange } from "./speed-range.ts";
 import type { PacelessConditions } from "./speed-trials.ts";
 import { type WindowCell, windowCell } from "./window-cell.ts";

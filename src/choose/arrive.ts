@@ -1,18 +1,12 @@
-import { InputError } from "../errors.ts";
 import { durationText, momentText, speedText } from "../estimate/finding-text.ts";
 import { isoTime } from "../estimate/leg-result.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { ArrivalAnswer, ArrivalSolution } from "../estimate/result.ts";
+import { type ArrivalWindow, checkArrival } from "./arrival-window.ts";
 import { minimaOf, rootsOf, type Sample, scan } from "./line-search.ts";
 import { evenlyInTime } from "./speed-range.ts";
 import { type PacelessConditions, SpeedTrials } from "./speed-trials.ts";
 import { worstFinding } from "./window-cell.ts";
-
-/** When to arrive, ms since 1970-01-01T00:00Z: at one time where both are equal, else between them; `null`: not too late is enough. */
-export interface ArrivalWindow {
-  readonly notBefore: number | null;
-  readonly notAfter: number;
-}
 
 /** How near to the time asked a root is found, s. */
 const ACCURACY = 1e-6;
@@ -63,14 +57,6 @@ export function solveArrival(
   if (chosen !== null) return { ...asked, solutions, chosen, nearest: null, reason: null };
   const missed = nearestTo(prepared, trials, samples, earliest, latest, conditions.departure);
   return { ...asked, solutions, chosen, ...missed };
-}
-
-/** @throws InputError where the window ends before it begins */
-export function checkArrival({ notBefore, notAfter }: ArrivalWindow): void {
-  if (notBefore !== null && !(notBefore <= notAfter))
-    throw new InputError(
-      `an arrival's notBefore is not after its notAfter; found ${isoTime(notBefore)} and ${isoTime(notAfter)}`,
-    );
 }
 
 /** Steps from the fastest down in which a quick search looks for a bracket. */

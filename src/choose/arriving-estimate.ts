@@ -3,7 +3,8 @@ import { routeFinding, statusOf } from "../estimate/findings.ts";
 import { fieldsInUse, type PreparedRoute } from "../estimate/prepare.ts";
 import type { ArrivalAnswer, RouteEstimate } from "../estimate/result.ts";
 import { arrivalSpeed, foundText, missedText } from "./arrival-answer.ts";
-import { type ArrivalWindow, solveArrival } from "./arrive.ts";
+import type { ArrivalWindow } from "./arrival-window.ts";
+import { solveArrival } from "./arrive.ts";
 import { speedRange } from "./speed-range.ts";
 
 /**

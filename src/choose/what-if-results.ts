@@ -3,7 +3,8 @@ import { routeOutcome } from "../estimate/estimate-route.ts";
 import { routeFinding, statusOf } from "../estimate/findings.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { Finding, Reached, RouteEstimate, RouteStatus } from "../estimate/result.ts";
-import { underWhatIf, type WhatIf, whatIfFields } from "./what-if.ts";
+import type { WhatIf } from "./what-if.ts";
+import { underWhatIf, whatIfFields } from "./what-if-conditions.ts";
 import { cellOf, type WindowCell } from "./window-cell.ts";
 
 /** What a route comes to under a what-if: a true estimate, with the figures of a window's cell. */

@@ -5,7 +5,7 @@ import type { EstimateInput } from "../estimate/estimate.ts";
 import { speedText } from "../estimate/finding-text.ts";
 import { fieldsInUse, type PreparedRoute } from "../estimate/prepare.ts";
 import { arrivalCell } from "./arrival-cell.ts";
-import type { ArrivalWindow } from "./arrive.ts";
+import type { ArrivalWindow } from "./arrival-window.ts";
 import { checkWindow, type DepartureWindow, windowDepartures } from "./departure-window.ts";
 import { paceAt, type WindowCell, windowCell } from "./window-cell.ts";
 

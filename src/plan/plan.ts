@@ -1,5 +1,5 @@
 import type { Alternate } from "../choose/alternate.ts";
-import type { ArrivalWindow } from "../choose/arrive.ts";
+import type { ArrivalWindow } from "../choose/arrival-window.ts";
 import type { DepartureWindow } from "../choose/departure-window.ts";
 import type { ForecastError } from "../choose/forecast-error.ts";
 import type { WhatIf } from "../choose/what-if.ts";

@@ -1,4 +1,4 @@
-import { checkArrival } from "../choose/arrive.ts";
+import { checkArrival } from "../choose/arrival-window.ts";
 import { speedRange } from "../choose/speed-range.ts";
 import type { Craft, Pace, Reserve } from "../craft/craft.ts";
 import { InputError } from "../errors.ts";

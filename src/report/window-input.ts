@@ -1,4 +1,4 @@
-import type { ArrivalWindow } from "../choose/arrive.ts";
+import type { ArrivalWindow } from "../choose/arrival-window.ts";
 import type { DepartureWindow } from "../choose/departure-window.ts";
 import type { InTime } from "../choose/in-time.ts";
 import type { RefinedWindow } from "../choose/refine.ts";

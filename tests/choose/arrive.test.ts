@@ -1,6 +1,7 @@
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
-import { type ArrivalWindow, solveArrival } from "../../src/choose/arrive.ts";
+import type { ArrivalWindow } from "../../src/choose/arrival-window.ts";
+import { solveArrival } from "../../src/choose/arrive.ts";
 import { estimateArriving } from "../../src/choose/arriving-estimate.ts";
 import { latestDeparture } from "../../src/choose/latest-departure.ts";
 import { windowCell } from "../../src/choose/window-cell.ts";
