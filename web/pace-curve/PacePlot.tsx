@@ -1,3 +1,4 @@
+import type { WindowCell } from "../core.ts";
 import { type LinearScale, linearScale } from "../format/linear-scale.ts";
 import { routeHue } from "../format/palette.ts";
 import { linePath } from "../format/svg-path.ts";
@@ -29,11 +30,10 @@ export function PacePlot({ page, answer, route, measure, pointed, onLook, onChoo
   const { ref, width } = useWidth<HTMLDivElement>(380);
   const { points, storeUnit: unit, usable } = answer.curve;
   const amount = storeUnit(unit, usable);
-  const figure = ({ use, passage_s }: (typeof points)[number]): number =>
-    (measure === "use" ? use : passage_s) ?? 0;
+  const figure = ({ use, passage_s }: WindowCell): number => (measure === "use" ? use : passage_s) ?? 0;
   const speeds = points.map(({ speed_m_s }) => speed_m_s ?? 0);
-  const runs = arrivingRuns(points);
-  const most = Math.max(...runs.flat().map(figure), measure === "use" ? usable : 0, 1e-9);
+  const arriving = points.filter(({ arrival }) => arrival !== null);
+  const most = Math.max(...arriving.map(figure), measure === "use" ? usable : 0, 1e-9);
   const least = speeds[0] ?? 0;
   const fastest = speeds.at(-1) ?? 1;
   const x = linearScale([least, Math.max(fastest, least + 1e-9)], [LEFT, Math.max(width - 8, LEFT + 1)]);
@@ -82,27 +82,7 @@ export function PacePlot({ page, answer, route, measure, pointed, onLook, onChoo
             width={width}
             name={name}
           />
-          {runs.map((run) => (
-            <path
-              key={run[0]?.speed_m_s}
-              class="curve"
-              stroke={routeHue(route)}
-              d={linePath(
-                run.length,
-                (i) => x(run[i]?.speed_m_s ?? 0),
-                (i) => y(run[i] === undefined ? 0 : figure(run[i])),
-              )}
-            />
-          ))}
-          {points
-            .filter(({ status }) => status === "stop")
-            .map(({ speed_m_s }) => (
-              <path
-                key={speed_m_s}
-                class="refused"
-                d={`M${x(speed_m_s ?? 0) - 2.5} ${BOTTOM - 7}l5 5m0 -5l-5 5`}
-              />
-            ))}
+          <Curve points={points} figure={figure} x={x} y={y} hue={routeHue(route)} />
           <PaceMarks
             answer={answer}
             measure={measure}
@@ -115,6 +95,40 @@ export function PacePlot({ page, answer, route, measure, pointed, onLook, onChoo
         </svg>
       </div>
     </div>
+  );
+}
+
+interface CurveProps {
+  readonly points: readonly WindowCell[];
+  readonly figure: (point: WindowCell) => number;
+  readonly x: LinearScale;
+  readonly y: LinearScale;
+  readonly hue: string;
+}
+
+/** The curve where the route arrives, and a cross under every speed that cannot be done. */
+function Curve({ points, figure, x, y, hue }: CurveProps) {
+  const at = (point: WindowCell | undefined): number => x(point?.speed_m_s ?? 0);
+  return (
+    <>
+      {arrivingRuns(points).map((run) => (
+        <path
+          key={run[0]?.speed_m_s}
+          class="curve"
+          stroke={hue}
+          d={linePath(
+            run.length,
+            (i) => at(run[i]),
+            (i) => y(run[i] === undefined ? 0 : figure(run[i])),
+          )}
+        />
+      ))}
+      {points
+        .filter(({ status }) => status === "stop")
+        .map((point) => (
+          <path key={point.speed_m_s} class="refused" d={`M${at(point) - 2.5} ${BOTTOM - 7}l5 5m0 -5l-5 5`} />
+        ))}
+    </>
   );
 }
 
