@@ -8,6 +8,7 @@ import {
   dateText,
   durationText,
   fromLocalInput,
+  fullTimeText,
   localInput,
   signedDurationText,
   zoneText,
@@ -145,5 +146,18 @@ describe("colours that carry meaning", () => {
   test("give the first six routes a hue each", () => {
     expect(new Set([0, 1, 2, 3, 4, 5].map(routeHue)).size).toBe(6);
     expect(routeHue(6)).toBe(routeHue(0));
+  });
+});
+
+describe("a time that is decided on", () => {
+  test("has its weekday, month by name, year and zone", () => {
+    const instant = Date.parse("2027-05-04T11:00:00Z");
+    expect(fullTimeText(instant, "UTC")).toBe("Tue 4 May 2027 11:00 UTC");
+    expect(fullTimeText(instant, "Asia/Kolkata")).toBe("Tue 4 May 2027 16:30 Asia/Kolkata (UTC+05:30)");
+  });
+
+  test("has the year of its zone", () => {
+    const instant = Date.parse("2027-12-31T20:00:00Z");
+    expect(fullTimeText(instant, "Asia/Kolkata")).toMatch(/^Sat 1 Jan 2028 01:30 /);
   });
 });

@@ -1,8 +1,9 @@
 // @vitest-environment happy-dom
 import { cleanup, fireEvent, render, screen, within } from "@testing-library/preact";
-import { afterEach, beforeAll, describe, expect, test } from "vitest";
+import { afterEach, beforeAll, describe, expect, test, vi } from "vitest";
 import { Ledger } from "../../web/ledger/Ledger.tsx";
 import { LegTable } from "../../web/leg-table/LegTable.tsx";
+import { legColumns } from "../../web/leg-table/leg-columns.ts";
 import { Ribbons } from "../../web/ribbon/Ribbons.tsx";
 import { PlanBar } from "../../web/shell/PlanBar.tsx";
 import { createPageState, type Engine, type PageState } from "../../web/state/page-state.ts";
@@ -74,6 +75,34 @@ describe("the ledger", () => {
     expect(page.view.pointed.value?.route).toBe(at);
   });
 
+  test("says after a fault that its figures are from before it, and says it no more once it is mended", async () => {
+    const answers: EstimateAnswer[] = [
+      answer,
+      { ok: false, fault: "reserve: reserve takes a share" },
+      answer,
+    ];
+    const engine = { estimate: async () => answers.shift() } as unknown as Engine;
+    const page = createPageState(plan, engine);
+    await page.answers.ask(plan);
+    render(<Ledger page={page} />);
+    expect(screen.queryByText("from before the fault")).toBeNull();
+    await page.answers.ask(plan);
+    expect(await screen.findByText("from before the fault")).toBeTruthy();
+    expect(screen.getByRole("alert").textContent).toBe("reserve takes a share");
+    await page.answers.ask(plan);
+    await vi.waitFor(() => expect(screen.queryByText("from before the fault")).toBeNull());
+  });
+
+  test("opens the whole advisory and closes it", async () => {
+    const page = await answeredPage();
+    render(<Ledger page={page} />);
+    const button = screen.getByText("Read all");
+    fireEvent.click(button);
+    expect((await screen.findByText("Read less")).getAttribute("aria-expanded")).toBe("true");
+    fireEvent.click(button);
+    expect((await screen.findByText("Read all")).getAttribute("aria-expanded")).toBe("false");
+  });
+
   test("shows a name as text, never as markup", async () => {
     const page = await answeredPage();
     page.store.edit("Rename", (old) => ({
@@ -97,6 +126,21 @@ describe("the leg table", () => {
     page.view.units.value = "metric";
     await Promise.resolve();
     expect((await screen.findAllByText("km")).length).toBe(1);
+  });
+
+  test("ends with what decides, and its still time is without the stay", async () => {
+    const page = await answeredPage();
+    const { container } = render(<LegTable page={page} />);
+    const headings = [...container.querySelectorAll("thead th")];
+    expect(headings.slice(-2).map(({ className }) => className)).toEqual([
+      "figure decides",
+      "figure decides",
+    ]);
+    const [route] = page.answers.answer.value.routes;
+    if (!route) throw new Error("the demo has a route");
+    const stopping = { ...route, totals: { ...route.totals, stay_s: 300 } };
+    const still = legColumns(stopping, { preset: "sea", zone: "UTC" }).find(({ key }) => key === "still");
+    expect([still?.heading, still?.unit]).toEqual(["Still time", ""]);
   });
 
   test("marks the leg that is pointed at on a ribbon", async () => {

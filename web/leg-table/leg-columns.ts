@@ -70,6 +70,11 @@ export function legColumns(route: RouteEstimate, shown: LegShown): LegColumn[] {
     plain("final", "Ends", "°T", ({ finalCourse_deg }) => courseText(finalCourse_deg)),
     plain("magnetic", "Course", "°M", ({ magneticCourse_deg }) => courseText(magneticCourse_deg)),
     plain("distance", "Distance", distance.symbol, ({ distance_m }) => inUnit(distance_m, distance)),
+    plain("time", "Time", "", ({ time_s }) => durationText(time_s)),
+    ...stayColumn(route),
+    plain("eta", "ETA", zoneName, ({ arrival }) =>
+      arrival === null ? "–" : clockSince(arrival, route.departure, zone),
+    ),
     ...fieldColumns(route, "current", speed),
     ...fieldColumns(route, "wind", speed),
     plain("through", "Through", speed.symbol, (leg) => inUnit(leg.throughSpeed_m_s?.mean ?? null, speed)),
@@ -77,11 +82,6 @@ export function legColumns(route: RouteEstimate, shown: LegShown): LegColumn[] {
     plain("heading", "Heading", "°T", (leg) => courseText(leg.heading_deg?.mean ?? null)),
     plain("crab", "Crab", "°", (leg) => crabText(leg.crab_deg?.mean ?? null)),
     plain("still", "Still time", "", ({ still }) => durationText(still.time_s)),
-    plain("time", "Time", "", ({ time_s }) => durationText(time_s)),
-    ...stayColumn(route),
-    plain("eta", "ETA", zoneName, ({ arrival }) =>
-      arrival === null ? "–" : clockSince(arrival, route.departure, zone),
-    ),
     plain("use", "Use", amount.symbol, ({ use }) => inUnit(use, amount)),
     plain("left", "Left", amount.symbol, ({ remaining }) => inUnit(remaining, amount)),
   ];
