@@ -64,7 +64,8 @@ export {
   type WindowSummary,
 } from "./choose/window-summary.ts";
 // Coarse land.
-export { type Land, type LandTopology, prepareLand } from "./coast/land.ts";
+export { type LandTopology, prepareLand } from "./coast/land.ts";
+export type { Land } from "./coast/land-cells.ts";
 export { type LandStretch, landCrossings } from "./coast/land-crossings.ts";
 export { ADVISORY } from "./constants.ts";
 // Craft: the triangle and the power models.
@@ -180,7 +181,8 @@ export type { FieldReference, OpenFile, Plan } from "./plan/plan.ts";
 export { parseCoordinate } from "./plan/position.ts";
 export { formatPosition } from "./plan/position-format.ts";
 export { readCraft } from "./plan/read-craft.ts";
-export { type FieldsRead, type MemberFields, readMembers } from "./plan/read-fields.ts";
+export type { FieldsRead, MemberFields } from "./plan/merge-fields.ts";
+export { readMembers } from "./plan/read-fields.ts";
 export { readPlan, readPlanDocument } from "./plan/read-plan.ts";
 export { formatTime, parseTime } from "./plan/time.ts";
 export { type WindowAnswer, type WindowRequest, windowPlan } from "./plan/window-plan.ts";

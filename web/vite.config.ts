@@ -55,6 +55,13 @@ function lessLeaflet(): Plugin {
   };
 }
 
+/** What is loaded at once, as one file: apart, its parts would be packed and fetched one by one. */
+const FIRST = {
+  groups: [
+    { name: "first", tags: ["$initial" as const], test: (id: string) => !id.includes("service-worker") },
+  ],
+};
+
 export default defineConfig({
   root: new URL(".", import.meta.url).pathname,
   base: "./",
@@ -62,7 +69,7 @@ export default defineConfig({
   resolve: {
     alias: [{ find: /^leaflet$/, replacement: new URL("chart/leaflet-parts.mjs", import.meta.url).pathname }],
   },
-  worker: { format: "es" },
+  worker: { format: "es", rolldownOptions: { output: { codeSplitting: FIRST } } },
   build: {
     outDir: new URL("../dist/page", import.meta.url).pathname,
     emptyOutDir: true,
@@ -77,6 +84,7 @@ export default defineConfig({
         "service-worker": new URL("worker/service-worker.ts", import.meta.url).pathname,
       },
       output: {
+        codeSplitting: FIRST,
         // A service worker is found again by its address, and holds sway from its folder down.
         entryFileNames: ({ name }) => (name === "service-worker" ? "[name].js" : "assets/[name]-[hash].js"),
       },

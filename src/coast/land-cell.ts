@@ -1,5 +1,5 @@
 import type { Position as LonLat } from "geojson";
-import type { Land } from "./land.ts";
+import type { Land } from "./land-cells.ts";
 
 /** Whether a cell has any land at all. */
 export function hasLand(land: Land, cell: number): boolean {

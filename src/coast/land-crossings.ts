@@ -1,7 +1,7 @@
 import type { Position as LonLat } from "geojson";
 import type { Position } from "../geodesy/track.ts";
-import { CELL, cellAt, type Land, SOUTH, WEST } from "./land.ts";
 import { coastCuts, hasLand, onCellLand } from "./land-cell.ts";
+import { CELL, cellAt, type Land, SOUTH, WEST } from "./land-cells.ts";
 
 /** A place on a leg: `s` metres from its start, longitude continuous along the leg. */
 export interface PathPoint extends Position {

@@ -1,4 +1,4 @@
-import type { Land } from "../coast/land.ts";
+import type { Land } from "../coast/land-cells.ts";
 import { ADVISORY } from "../constants.ts";
 import type { Craft, Pace, Reserve } from "../craft/craft.ts";
 import type { Field } from "../field/field.ts";

@@ -1,4 +1,4 @@
-import type { Land } from "../coast/land.ts";
+import type { Land } from "../coast/land-cells.ts";
 import { type LandStretch, landCrossings } from "../coast/land-crossings.ts";
 import type { Craft } from "../craft/craft.ts";
 import type { Field, FieldRole } from "../field/field.ts";

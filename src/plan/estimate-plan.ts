@@ -3,7 +3,7 @@ import type { DecidedEstimate } from "../choose/decided.ts";
 import type { SensitivityProfile } from "../choose/sensitivity-profile.ts";
 import { withTurnBack } from "../choose/turn-back-estimate.ts";
 import { withUncertainty } from "../choose/uncertain-estimate.ts";
-import type { Land } from "../coast/land.ts";
+import type { Land } from "../coast/land-cells.ts";
 import { InputError } from "../errors.ts";
 import {
   type EstimateAnswer,
@@ -12,8 +12,9 @@ import {
   prepareRoutes,
 } from "../estimate/estimate.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
+import type { MemberFields } from "./merge-fields.ts";
 import type { OpenFile, Plan } from "./plan.ts";
-import { type FileProgress, type MemberFields, readMembers } from "./read-fields.ts";
+import { type FileProgress, readMembers } from "./read-fields.ts";
 import { readPlan } from "./read-plan.ts";
 import { parseTime } from "./time.ts";
 import { toldOfFile } from "./told-of-file.ts";

@@ -1,7 +1,8 @@
 /*
  * The one module through which the worker reaches the core.
  */
-export { type Land, type LandTopology, prepareLand } from "../../src/coast/land.ts";
+export { type LandTopology, prepareLand } from "../../src/coast/land.ts";
+export type { Land } from "../../src/coast/land-cells.ts";
 export { unrolledRing } from "../../src/coast/ring.ts";
 export { type StillPoint, stillCurve, stillPoint } from "../../src/craft/still-curve.ts";
 export { currentSet, windFrom } from "../../src/craft/triangle.ts";
@@ -36,8 +37,8 @@ export {
 } from "../../src/index.ts";
 export { readArchive, writeArchive } from "../../src/plan/archive.ts";
 export { importRoutes } from "../../src/plan/import-routes.ts";
+export { type FieldsRead, type MemberFields, mergeSources, roleSource } from "../../src/plan/merge-fields.ts";
 export { readCraftDocument } from "../../src/plan/read-craft.ts";
-export { type FieldsRead, type MemberFields, mergeSources, roleSource } from "../../src/plan/read-fields.ts";
 export { readPlanDocument } from "../../src/plan/read-plan.ts";
 export { serializeCraft, serializePlan } from "../../src/plan/write-plan.ts";
 export { writeCsv } from "../../src/report/csv.ts";
