@@ -2,6 +2,7 @@ import * as L from "leaflet";
 import { alongClass, alongColour, routeHue } from "../format/palette.ts";
 import type { RouteDrawing } from "../worker/protocol.ts";
 import { turnsToward } from "./longitude.ts";
+import { retracedLegs, toTheRight } from "./side-by-side.ts";
 
 export interface DrawnRoute {
   readonly index: number;
@@ -38,16 +39,41 @@ export class RouteLines {
 
   private drawRoute({ index, name, chosen, drawing }: DrawnRoute, limit: number): void {
     const shift = shiftFor(this.map, drawing.lon);
-    const line = latLngs(drawing.lat, drawing.lon, shift, 0, drawing.lat.length - 1);
-    const hue = routeHue(index);
-    this.add(line, { color: "var(--casing)", weight: chosen ? 10 : 7, opacity: 0.9, interactive: false });
-    this.add(line, {
-      color: hue,
-      weight: chosen ? 8 : 5,
-      interactive: false,
-      ...(drawing.profile ? {} : { dashArray: "6 6" }),
-    });
-    if (drawing.profile) this.drawClasses(drawing.profile, shift, limit, chosen ? 4 : 2.5);
+    const line = latLngs(drawing.lat, drawing.lon, shift);
+    const retraced = retracedLegs(drawing);
+    // There and back over one leg are as far apart as their lines are wide.
+    const shown = (part: L.LatLngTuple[], leg: number): L.LatLngTuple[] =>
+      retraced.has(leg) ? this.besides(part, chosen ? 5 : 3.5) : part;
+    const parts =
+      retraced.size === 0 ? [line] : legParts(line, drawing).map((part, at) => shown(part, at + 1));
+    for (const part of parts) {
+      this.add(part, { color: "var(--casing)", weight: chosen ? 10 : 7, opacity: 0.9, interactive: false });
+    }
+    for (const part of parts) {
+      this.add(part, {
+        color: routeHue(index),
+        weight: chosen ? 8 : 5,
+        interactive: false,
+        ...(drawing.profile ? {} : { dashArray: "6 6" }),
+      });
+    }
+    if (drawing.profile) {
+      for (const { from, to, leg, classNumber } of classRuns(drawing.profile, limit, retraced)) {
+        const { lat, lon } = drawing.profile;
+        const run = latLngs(lat.subarray(from, to + 1), lon.subarray(from, to + 1), shift);
+        this.add(shown(run, leg), {
+          color: alongColour(classNumber),
+          weight: chosen ? 4 : 2.5,
+          lineCap: "butt",
+          interactive: false,
+        });
+      }
+    }
+    this.addHit(line, index, name, shift);
+  }
+
+  /** The wide, unseen line that the pointer finds. */
+  private addHit(line: L.LatLngTuple[], index: number, name: string, shift: number): void {
     const hit = this.add(line, { weight: 26, opacity: 0, className: "route-hit" });
     hit.on("click", (event) => {
       L.DomEvent.stopPropagation(event);
@@ -65,27 +91,14 @@ export class RouteLines {
     hit.getElement()?.setAttribute("tabindex", "-1");
   }
 
-  /** One line for each run of samples of one class. */
-  private drawClasses(
-    profile: NonNullable<RouteDrawing["profile"]>,
-    shift: number,
-    limit: number,
-    weight: number,
-  ) {
-    const { along_m_s: along, lat, lon } = profile;
-    const classAt = (at: number): number => alongClass(((along[at] ?? 0) + (along[at + 1] ?? 0)) / 2, limit);
-    let from = 0;
-    for (let at = 1; at < along.length; at += 1) {
-      const ends = at === along.length - 1 || classAt(at) !== classAt(from);
-      if (!ends) continue;
-      this.add(latLngs(lat, lon, shift, from, at), {
-        color: alongColour(classAt(from)),
-        weight,
-        lineCap: "butt",
-        interactive: false,
-      });
-      from = at;
-    }
+  /** A line moved to the right of its direction by so many px at this zoom. */
+  private besides(line: readonly L.LatLngTuple[], px: number): L.LatLngTuple[] {
+    const { map } = this;
+    const points = line.map((place) => map.latLngToLayerPoint(place));
+    return toTheRight(points, px).map(({ x, y }) => {
+      const { lat, lng } = map.layerPointToLatLng([x, y]);
+      return [lat, lng];
+    });
   }
 
   private add(line: L.LatLngTuple[], options: L.PolylineOptions): L.Polyline {
@@ -106,14 +119,39 @@ export function textElement(text: string): HTMLElement {
   return element;
 }
 
-function latLngs(
-  lat: Float64Array,
-  lon: Float64Array,
-  shift: number,
-  from: number,
-  to: number,
-): L.LatLngTuple[] {
-  const line: L.LatLngTuple[] = [];
-  for (let at = from; at <= to; at += 1) line.push([lat[at] ?? 0, (lon[at] ?? 0) + shift]);
-  return line;
+function latLngs(lat: Float64Array, lon: Float64Array, shift: number): L.LatLngTuple[] {
+  return Array.from(lat, (each, at): L.LatLngTuple => [each, (lon[at] ?? 0) + shift]);
+}
+
+/** A route's line leg by leg. */
+function legParts(line: readonly L.LatLngTuple[], { waypoints }: RouteDrawing): L.LatLngTuple[][] {
+  return Array.from(waypoints.subarray(1), (to, at) => line.slice(waypoints[at], to + 1));
+}
+
+interface ClassRun {
+  readonly from: number;
+  readonly to: number;
+  readonly leg: number;
+  readonly classNumber: number;
+}
+
+/** Runs of samples of one class of the along-track component; a run ends with its leg where legs are drawn apart. */
+function classRuns(
+  { along_m_s: along, leg }: NonNullable<RouteDrawing["profile"]>,
+  limit: number,
+  apart: ReadonlySet<number>,
+): ClassRun[] {
+  const classAt = (at: number): number => alongClass(((along[at] ?? 0) + (along[at + 1] ?? 0)) / 2, limit);
+  const legAt = (at: number): number => leg[at + 1] ?? 0;
+  const runs: ClassRun[] = [];
+  let from = 0;
+  for (let at = 1; at < along.length; at += 1) {
+    const parts = apart.has(legAt(at)) || apart.has(legAt(from));
+    const ends =
+      at === along.length - 1 || classAt(at) !== classAt(from) || (parts && legAt(at) !== legAt(from));
+    if (!ends) continue;
+    runs.push({ from, to: at, leg: legAt(from), classNumber: classAt(from) });
+    from = at;
+  }
+  return runs;
 }

@@ -43,6 +43,7 @@ export function Ribbon({ page, route, scale, width, limit }: RibbonProps) {
     <button
       type="button"
       class="ribbon-name"
+      title={document.name}
       aria-pressed={chosen}
       onClick={() => store.select({ route, waypoint: null })}
     >
