@@ -1,3 +1,5 @@
+import { readFileSync } from "node:fs";
+import { fileURLToPath } from "node:url";
 import { defineConfig, type Plugin } from "vite";
 import { precache } from "./offline/precache.ts";
 
@@ -32,25 +34,49 @@ function contentPolicy(): Plugin {
   };
 }
 
+/** Modules of Leaflet that the chart has no use for, and what stands in their place. */
+const STUBS: ReadonlyMap<string, string> = new Map([
+  ["./Canvas", "export const canvas = () => null;"],
+  ["./SVG.VML", "export const vmlMixin = {}; export const vmlCreate = null;"],
+  ["./Icon.Default", 'export { Icon as IconDefault } from "leaflet/src/layer/marker/Icon.js";'],
+]);
+
 /**
- * Leaves out of Leaflet what the chart has none of: paths on a canvas, and the styles of controls, popups and its own marker
- * images.
+ * Leaves out of Leaflet what the chart has none of: paths on a canvas or in a browser without SVG, marker images of its own, and
+ * the styles of those, of controls and of popups.
  */
 function lessLeaflet(): Plugin {
   const unused = /leaflet-(control|popup|bar|oldie|default-icon-path)|\.lvml/;
-  const noCanvas = "\0no-canvas";
+  const stub = "\0leaflet-stub:";
   return {
     name: "less-leaflet",
     enforce: "pre",
     resolveId: (source, importer = "") =>
-      source === "./Canvas" && importer.includes("leaflet/src/layer/vector/") ? noCanvas : null,
-    load: (id) => (id === noCanvas ? "export const canvas = () => null;" : null),
+      STUBS.has(source) && importer.includes("leaflet/src/layer/") ? `${stub}${source}` : null,
+    load: (id) => (id.startsWith(stub) ? (STUBS.get(id.slice(stub.length)) ?? null) : null),
     transform(code, id) {
       if (!id.includes("leaflet/dist/leaflet.css")) return null;
       const bare = code.replace(/\/\*[\s\S]*?\*\//g, "");
       return bare.replace(/([^{}]*)\{[^{}]*\}/g, (rule, selectors: string) =>
         selectors.split(",").every((selector) => unused.test(selector)) ? "" : rule,
       );
+    },
+  };
+}
+
+/** The parts of geographiclib-geodesic that solve for a line, from its own sources: its bundle brings areas of polygons too. */
+function lessGeodesic(): Plugin {
+  const parts = ["Math", "Geodesic", "GeodesicLine"].map((name) =>
+    fileURLToPath(import.meta.resolve(`geographiclib-geodesic/src/${name}.js`)),
+  );
+  return {
+    name: "less-geodesic",
+    enforce: "pre",
+    apply: "build",
+    load(id) {
+      if (!id.endsWith("/geographiclib-geodesic.min.js")) return null;
+      const code = parts.map((path) => readFileSync(path, "utf8")).join("\n");
+      return `${code}\nexport default geodesic;`;
     },
   };
 }
@@ -69,7 +95,11 @@ export default defineConfig({
   resolve: {
     alias: [{ find: /^leaflet$/, replacement: new URL("chart/leaflet-parts.mjs", import.meta.url).pathname }],
   },
-  worker: { format: "es", rolldownOptions: { output: { codeSplitting: FIRST } } },
+  worker: {
+    format: "es",
+    plugins: () => [lessGeodesic()],
+    rolldownOptions: { output: { codeSplitting: FIRST } },
+  },
   build: {
     outDir: new URL("../dist/page", import.meta.url).pathname,
     emptyOutDir: true,
