@@ -1,4 +1,4 @@
-import { useEffect, useRef } from "preact/hooks";
+import { useLayoutEffect, useRef } from "preact/hooks";
 
 interface TextFieldProps {
   readonly label: string;
@@ -15,15 +15,15 @@ interface TextFieldProps {
 /** A field that speaks when its text is finished, and shows the plan's text again on Escape. */
 export function TextField({ label, value, onText, placeholder, whole, faultId }: TextFieldProps) {
   const input = useRef<HTMLInputElement>(null);
-  useEffect(() => {
-    if (input.current && document.activeElement !== input.current) input.current.value = value;
+  // Only text that was typed is told: focus may pass through a field whose value has just become another route's.
+  const typed = useRef(false);
+  useLayoutEffect(() => {
+    if (input.current && !typed.current) input.current.value = value;
   }, [value]);
-  // Leaving the field after Enter must not tell the same text again: it would be another step to undo.
-  const told = useRef<string | null>(null);
   const finish = (text: string): void => {
-    if (text === value || text === told.current) return;
-    told.current = text;
-    onText(text);
+    if (!typed.current) return;
+    typed.current = false;
+    if (text !== value) onText(text);
   };
   return (
     <input
@@ -37,7 +37,7 @@ export function TextField({ label, value, onText, placeholder, whole, faultId }:
       autocomplete="off"
       spellcheck={false}
       onInput={() => {
-        told.current = null;
+        typed.current = true;
       }}
       onBlur={(event) => {
         finish(event.currentTarget.value);
@@ -45,7 +45,10 @@ export function TextField({ label, value, onText, placeholder, whole, faultId }:
       }}
       onKeyDown={(event) => {
         if (event.key === "Enter") finish(event.currentTarget.value);
-        if (event.key === "Escape") event.currentTarget.value = value;
+        if (event.key === "Escape") {
+          typed.current = false;
+          event.currentTarget.value = value;
+        }
       }}
     />
   );
