@@ -12,6 +12,7 @@ import { CraftPlots } from "./CraftPlots.tsx";
 import { craftInText, craftOf } from "./craft-document.ts";
 import { textAt } from "./craft-edits.ts";
 import { hasPlace } from "./craft-places.ts";
+import "./craft-dialog.css";
 
 const LARGEST_CRAFT = 5_000_000;
 
