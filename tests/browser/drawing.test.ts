@@ -32,11 +32,11 @@ test("waypoints are added, dragged, inserted and deleted by mouse, and every ste
 
   for (const before of [added, inserted, moved, start]) {
     await page.getByRole("button", { name: "Undo" }).click();
-    expect(await positions(page)).toEqual(before);
+    await expect.poll(() => positions(page)).toEqual(before);
   }
   for (const after of [moved, inserted, added, deleted]) {
     await page.getByRole("button", { name: "Redo" }).click();
-    expect(await positions(page)).toEqual(after);
+    await expect.poll(() => positions(page)).toEqual(after);
   }
 });
 

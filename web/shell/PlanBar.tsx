@@ -14,6 +14,7 @@ export function PlanBar({ page }: { readonly page: PageState }) {
   const plan = store.plan.value;
   const zone = view.zone.value;
   const departure = Date.parse(plan.departure);
+  const { fault } = page.answers.answer.value;
   return (
     <section class="plan-bar" data-pane="route" aria-label="Plan">
       <label>
@@ -65,6 +66,12 @@ export function PlanBar({ page }: { readonly page: PageState }) {
           {(plan.fields ?? []).length === 0 && <li>none: a still-medium estimate; drop a CSV here</li>}
         </ul>
       </div>
+      {/* Where the ledger, which says it, is another pane. */}
+      {fault !== null && (
+        <p class="fault plan-fault" role="alert">
+          {fault}
+        </p>
+      )}
     </section>
   );
 }
