@@ -71,7 +71,7 @@ describe("the profile of a route", () => {
     const page = await answeredPage();
     page.view.routePart.value = "profile";
     render(<LegTable page={page} />);
-    const profile = screen.getByRole("slider", { name: /^Profile of/ });
+    const profile = await screen.findByRole("slider", { name: /^Profile of/ });
     fireEvent.focus(profile);
     fireEvent.keyDown(profile, { key: "End" });
     const total = page.answers.answer.value.drawings[0]?.distance_m.at(-1);

@@ -1,19 +1,24 @@
-import type { RouteEstimate } from "../core.ts";
 import { Dialog } from "../shell/Dialog.tsx";
 import type { PageState } from "../state/page-state.ts";
 import type { LegUnits } from "../state/page-view.ts";
-import { AMOUNTS, FIXED_COLUMNS, type LegColumn } from "./leg-columns.ts";
+import { AMOUNTS, FIXED_COLUMNS, legColumns } from "./leg-columns.ts";
 
 interface LegChoicesProps {
   readonly page: PageState;
-  readonly route: RouteEstimate;
-  readonly columns: readonly LegColumn[];
   readonly onClose: () => void;
 }
 
 /** Which columns the leg table has, on the screen and on paper, and in which units. */
-export function LegChoices({ page, route, columns, onClose }: LegChoicesProps) {
-  const { hiddenColumns } = page.view;
+export function LegChoices({ page, onClose }: LegChoicesProps) {
+  const { answers, store, view } = page;
+  const { hiddenColumns } = view;
+  const route = answers.answer.value.routes[store.selection.value.route] ?? null;
+  if (route === null) return null;
+  const columns = legColumns(route, {
+    preset: view.units.value,
+    zone: view.zone.value,
+    own: view.legUnits.value,
+  });
   const hidden = hiddenColumns.value;
   return (
     <Dialog title="Columns and units" onClose={onClose}>

@@ -1,20 +1,20 @@
-import { useSignal } from "@preact/signals";
 import { ADVISORY, type LegEstimate } from "../core.ts";
 import { durationText } from "../format/time-text.ts";
 import { inUnit } from "../format/units.ts";
-import { Profile } from "../ribbon/Profile.tsx";
 import { Swatch } from "../ribbon/Ribbon.tsx";
 import { copyLegTable } from "../shell/exports.ts";
+import { LazyPart } from "../shell/LazyPart.tsx";
+import { PartButton } from "../shell/PartButton.tsx";
 import { StaleMark } from "../shell/StaleMark.tsx";
 import type { PageState } from "../state/page-state.ts";
 import type { RouteDrawing } from "../worker/protocol.ts";
-import { LegChoices } from "./LegChoices.tsx";
 import { chosenColumns, DECIDING_COLUMNS, type LegColumn, legColumns, tableUnits } from "./leg-columns.ts";
+
+const loadProfile = () => import("../ribbon/Profile.tsx").then(({ Profile }) => Profile);
 
 /** The leg table of the chosen route. */
 export function LegTable({ page }: { readonly page: PageState }) {
   const { store, view, answers } = page;
-  const choosing = useSignal(false);
   const { route: chosen } = store.selection.value;
   const route = answers.answer.value.routes[chosen] ?? null;
   const drawing = answers.answer.value.drawings[chosen] ?? null;
@@ -56,28 +56,18 @@ export function LegTable({ page }: { readonly page: PageState }) {
           <button type="button" onClick={() => void copyLegTable(page)}>
             Copy
           </button>
-          <button
-            type="button"
-            onClick={() => {
-              choosing.value = true;
+          <PartButton
+            load={async () => {
+              const { LegChoices } = await import("./LegChoices.tsx");
+              return ({ onClose }) => <LegChoices page={page} onClose={onClose} />;
             }}
           >
             Columns
-          </button>
+          </PartButton>
           <PartChoice page={page} />
         </span>
-        {choosing.value && (
-          <LegChoices
-            page={page}
-            route={route}
-            columns={all}
-            onClose={() => {
-              choosing.value = false;
-            }}
-          />
-        )}
       </header>
-      {view.routePart.value === "profile" && <Profile page={page} />}
+      {view.routePart.value === "profile" && <LazyPart page={page} load={loadProfile} />}
       {/* biome-ignore lint/a11y/noNoninteractiveTabindex: what scrolls must be reached by keyboard (WCAG 2.1.1) */}
       <section class="scroll leg-part" aria-label={`Legs of ${route.name}`} tabIndex={0}>
         <table class="leg-table">

@@ -1,5 +1,6 @@
 import type { ComponentChildren } from "preact";
 import { useEffect, useId, useRef } from "preact/hooks";
+import "./dialog.css";
 
 interface DialogProps {
   readonly title: string;

@@ -2,9 +2,12 @@ import { ACCEPTED, takeFilesLater } from "../files/take-later.ts";
 import type { PageState } from "../state/page-state.ts";
 import { setPlanText } from "../state/plan-edits.ts";
 import { TextField } from "../waypoints/TextField.tsx";
+import { LazyPart } from "./LazyPart.tsx";
+import { Menu } from "./Menu.tsx";
 import { MoreMenu } from "./MoreMenu.tsx";
 import { savePlan } from "./plan-files.ts";
-import { Settings } from "./Settings.tsx";
+
+const loadSettings = () => import("./Settings.tsx").then(({ Settings }) => Settings);
 
 /** The plan's title, its files, undo and redo, and how things are shown. */
 export function Header({ page }: { readonly page: PageState }) {
@@ -59,7 +62,9 @@ export function Header({ page }: { readonly page: PageState }) {
         </button>
         <MoreMenu page={page} />
       </div>
-      <Settings page={page} />
+      <Menu name="Show as">
+        <LazyPart page={page} load={loadSettings} />
+      </Menu>
     </header>
   );
 }

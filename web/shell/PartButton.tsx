@@ -3,7 +3,7 @@ import type { ComponentChildren, FunctionComponent } from "preact";
 import { useRef } from "preact/hooks";
 
 interface PartButtonProps {
-  readonly class: string;
+  readonly class?: string;
   readonly children: ComponentChildren;
   /** Loads what the button opens, when it is first asked for. */
   readonly load: () => Promise<FunctionComponent<{ readonly onClose: () => void }>>;

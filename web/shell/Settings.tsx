@@ -1,6 +1,5 @@
 import type { PageState } from "../state/page-state.ts";
 import { TextField } from "../waypoints/TextField.tsx";
-import { Menu } from "./Menu.tsx";
 import { isTileAddress, letsIn } from "./tile-policy.ts";
 
 /** Units, time zone, theme and the user's own tile address. */
@@ -9,7 +8,7 @@ export function Settings({ page: { view } }: { readonly page: PageState }) {
   const near = [...new Set(["UTC", own, view.zone.value])];
   const others = Intl.supportedValuesOf("timeZone").filter((zone) => !near.includes(zone));
   return (
-    <Menu name="Show as">
+    <>
       <label>
         <span>Units</span>
         <select
@@ -67,7 +66,7 @@ export function Settings({ page: { view } }: { readonly page: PageState }) {
         />
         <TileNote tiles={view.tiles.value} />
       </div>
-    </Menu>
+    </>
   );
 }
 
