@@ -1,5 +1,4 @@
 import { effect } from "@preact/signals";
-import * as Comlink from "comlink";
 import { render } from "preact";
 import { warmDesk } from "./desk/warm-desk.ts";
 import { listenForDrops } from "./files/drop-target.ts";
@@ -16,15 +15,16 @@ import { wantsDecisions } from "./state/decisions.ts";
 import { EMPTY_PLAN } from "./state/empty-plan.ts";
 import { createPageState } from "./state/page-state.ts";
 import type { Worker as Protocol } from "./worker/protocol.ts";
+import { handOver, reach } from "./worker/remote.ts";
 
 const startWorker = () =>
-  Comlink.wrap<Protocol>(new Worker(new URL("./worker/worker.ts", import.meta.url), { type: "module" }));
+  reach<Protocol>(new Worker(new URL("./worker/worker.ts", import.meta.url), { type: "module" }));
 const engine = startWorker();
 const page = createPageState(EMPTY_PLAN, engine, () => {
   const second = startWorker();
   const { port1, port2 } = new MessageChannel();
-  void engine.share(Comlink.transfer(port1, [port1]));
-  void second.follow(Comlink.transfer(port2, [port2]));
+  void engine.share(handOver(port1, [port1]));
+  void second.follow(handOver(port2, [port2]));
   return second;
 });
 

@@ -1,4 +1,3 @@
-import * as Comlink from "comlink";
 import type { PageState } from "../state/page-state.ts";
 import type { FieldDocument } from "../state/plan-document.ts";
 import type { FieldAnswer } from "../worker/protocol.ts";
@@ -17,16 +16,12 @@ export async function readFieldFile(
   let done = false;
   readings.value = [...others(), { ticket, file, share: 0 }];
   try {
-    const answer = await engine.openField(
-      ticket,
-      field,
-      Comlink.proxy(({ readBytes, totalBytes }) => {
-        // The last word of progress may come after the answer.
-        if (done) return;
-        const share = totalBytes === 0 ? 1 : readBytes / totalBytes;
-        readings.value = [...others(), { ticket, file, share }];
-      }),
-    );
+    const answer = await engine.openField(ticket, field, ({ readBytes, totalBytes }) => {
+      // The last word of progress may come after the answer.
+      if (done) return;
+      const share = totalBytes === 0 ? 1 : readBytes / totalBytes;
+      readings.value = [...others(), { ticket, file, share }];
+    });
     if (answer.ok) inspections.value = { ...inspections.value, [file]: answer.inspection };
     return answer;
   } finally {

@@ -1,9 +1,9 @@
-import * as Comlink from "comlink";
 import { type FieldReference, type FieldsRead, InputError, type Land } from "./core.ts";
 import type { FieldShelf } from "./field-shelf.ts";
 import { type FileShelf, pieces } from "./file-shelf.ts";
 import type { LandShelf } from "./land-shelf.ts";
 import type { PlanSources } from "./plan-reader.ts";
+import { type Remote, reach } from "./remote.ts";
 
 /** What one worker lets another use, so that no file is read twice. Grids are copied once, when they are first asked for. */
 export interface Shelves {
@@ -25,17 +25,10 @@ export function shelvesOf(files: FileShelf, fields: FieldShelf, land: LandShelf)
 
 /** The sources behind a port, each kept once it has come. */
 export function sourcesBehind(port: MessagePort): PlanSources {
-  return sourcesOf(Comlink.wrap<Shelves>(port));
+  return sourcesOf(reach<Shelves>(port));
 }
 
-/** Shelves as they are reached from afar: every call answers later. */
-type FarShelves = {
-  [Call in keyof Shelves]: (
-    ...asked: Parameters<Shelves[Call]>
-  ) => Promise<Awaited<ReturnType<Shelves[Call]>>>;
-};
-
-export function sourcesOf(shelves: FarShelves): PlanSources {
+export function sourcesOf(shelves: Remote<Shelves>): PlanSources {
   let known: { readonly key: string; readonly fields: Promise<FieldsRead> } | null = null;
   let land: Land | null = null;
   return {

@@ -1,4 +1,3 @@
-import * as Comlink from "comlink";
 import fine from "world-atlas/land-10m.json?url";
 import coarse from "world-atlas/land-50m.json?url";
 import { createCoastShelf } from "./coast-shelf.ts";
@@ -14,6 +13,7 @@ import { createLandShelf } from "./land-shelf.ts";
 import { answerLattice } from "./lattice.ts";
 import { createPlanReader } from "./plan-reader.ts";
 import type { CoastDetail, CoastTile, EstimateAnswer, Lattice, Worker } from "./protocol.ts";
+import { handOver, serve } from "./remote.ts";
 import { shelvesOf, sourcesBehind } from "./shared-shelves.ts";
 
 async function fetchCoast(detail: CoastDetail): Promise<LandTopology> {
@@ -75,7 +75,7 @@ const worker: Worker = {
   },
   loadLand: () => land.load(),
   share(port) {
-    Comlink.expose(shelvesOf(files, fields, land), port);
+    serve(shelvesOf(files, fields, land), port);
   },
   follow(port) {
     reader = createPlanReader(sourcesBehind(port));
@@ -94,12 +94,12 @@ const worker: Worker = {
 /* The arrays that an answer was made for are handed over; those that are kept here are copied. */
 
 function handTile(tile: CoastTile): CoastTile {
-  return Comlink.transfer(tile, [tile.points.buffer, tile.ends.buffer]);
+  return handOver(tile, [tile.points.buffer, tile.ends.buffer]);
 }
 
 function handLattice(lattice: Lattice): Lattice {
   const { lat, lon, east_m_s, north_m_s, state } = lattice;
-  return Comlink.transfer(lattice, [lat.buffer, lon.buffer, east_m_s.buffer, north_m_s.buffer, state.buffer]);
+  return handOver(lattice, [lat.buffer, lon.buffer, east_m_s.buffer, north_m_s.buffer, state.buffer]);
 }
 
 function handEstimate(answer: EstimateAnswer): EstimateAnswer {
@@ -107,7 +107,7 @@ function handEstimate(answer: EstimateAnswer): EstimateAnswer {
   const buffers = answer.drawings.flatMap(({ profile }) =>
     profile === null ? [] : Object.values(profile).map((column: Float64Array | Int32Array) => column.buffer),
   );
-  return Comlink.transfer(answer, [...new Set(buffers)]);
+  return handOver(answer, [...new Set(buffers)]);
 }
 
-Comlink.expose(worker);
+serve(worker, self);
