@@ -11,12 +11,11 @@ import type { FieldAt } from "../worker/protocol.ts";
 import { readUnderPointer, showFields } from "./chart-fields.ts";
 import { type ChartMap, createChartMap } from "./chart-map.ts";
 import { fitClear, roomsBeside, whenBesideChanges } from "./chart-room.ts";
+import { showDecidedLater } from "./decided-later.ts";
 import { turnsToward } from "./longitude.ts";
 import { Marks } from "./marks.ts";
 import { RouteLines, shiftFor } from "./route-lines.ts";
 import { drawnRoutes, handlesOf, legMiddles } from "./route-view.ts";
-import { showSensitivity } from "./sensitivity-stroke.ts";
-import { showTurnBack } from "./turn-back-marks.ts";
 import { WaypointHandles } from "./waypoint-handles.ts";
 
 export interface ChartReadouts {
@@ -50,8 +49,7 @@ export function openChart(host: HTMLElement, page: PageState, readouts: ChartRea
     readUnderPointer(page, readouts.pointer, readouts.under),
     addByClick(map, page),
     followTheme(chart, page),
-    showTurnBack(map, page),
-    showSensitivity(map, page),
+    showDecidedLater(map, page),
   ];
   const resized = new ResizeObserver(() => map.invalidateSize({ pan: false }));
   resized.observe(host);
