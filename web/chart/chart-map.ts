@@ -10,7 +10,7 @@ export interface ChartMap {
   /** Draws everything anew in the theme's colours. */
   recolour(): void;
   /** Shows the user's own raster tiles, or none. */
-  showTiles(address: string): void;
+  showTiles(address: string): Promise<void>;
   fineCoastReady(): void;
 }
 
@@ -46,6 +46,7 @@ export function createChartMap(element: HTMLElement, coast: TileSource, wantFine
   }).addTo(map);
   const graticule = createGraticule().addTo(map);
   let tiles: L.TileLayer | null = null;
+  let wanted = "";
 
   return {
     map,
@@ -53,9 +54,15 @@ export function createChartMap(element: HTMLElement, coast: TileSource, wantFine
       coastline.refresh();
       graticule.redraw();
     },
-    showTiles(address) {
+    async showTiles(address) {
+      wanted = address;
       tiles?.remove();
-      tiles = address === "" ? null : L.tileLayer(address, { maxZoom: MAX_ZOOM, pane: "tiles" }).addTo(map);
+      tiles = null;
+      if (address === "") return;
+      // Part of Leaflet that few have a use for.
+      const { tileLayer } = await import("leaflet/src/layer/tile/TileLayer.js");
+      if (wanted !== address || tiles !== null) return;
+      tiles = tileLayer(address, { maxZoom: MAX_ZOOM, pane: "tiles" }).addTo(map);
     },
     fineCoastReady: () => coastline.refresh(),
   };

@@ -231,7 +231,7 @@ function followTheme(chart: ChartMap, { view }: PageState): () => void {
     }),
     effect(() => {
       const { value: tiles } = view.tiles;
-      chart.showTiles(isTileAddress(tiles) && letsIn(tiles) ? tiles : "");
+      void chart.showTiles(isTileAddress(tiles) && letsIn(tiles) ? tiles : "");
     }),
     effect(() => {
       const place = view.lookAt.value;

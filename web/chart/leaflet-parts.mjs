@@ -20,7 +20,6 @@ export { LayerGroup, layerGroup } from "leaflet/src/layer/LayerGroup.js";
 export { divIcon } from "leaflet/src/layer/marker/DivIcon.js";
 export { marker } from "leaflet/src/layer/marker/Marker.js";
 export { GridLayer } from "leaflet/src/layer/tile/GridLayer.js";
-export { tileLayer } from "leaflet/src/layer/tile/TileLayer.js";
 export { circleMarker } from "leaflet/src/layer/vector/CircleMarker.js";
 export { polyline } from "leaflet/src/layer/vector/Polyline.js";
 export { createMap as map } from "leaflet/src/map/Map.js";
