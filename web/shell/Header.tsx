@@ -62,9 +62,7 @@ export function Header({ page }: { readonly page: PageState }) {
         </button>
         <MoreMenu page={page} />
       </div>
-      <Menu name="Show as">
-        <LazyPart page={page} load={loadSettings} />
-      </Menu>
+      <Menu name="Show as" late={<LazyPart page={page} load={loadSettings} />} />
     </header>
   );
 }

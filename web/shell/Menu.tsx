@@ -2,10 +2,20 @@ import { useSignal } from "@preact/signals";
 import type { ComponentChildren } from "preact";
 import { useEffect, useRef } from "preact/hooks";
 
-/** A sheet that a button opens; Escape, a click elsewhere or a finished choice closes it. What is on it is made when it is first opened. */
-export function Menu({ name, children }: { readonly name: string; readonly children: ComponentChildren }) {
+interface MenuProps {
+  readonly name: string;
+  readonly children?: ComponentChildren;
+  /** What is on the sheet but need not be there before somebody turns to its button. */
+  readonly late?: ComponentChildren;
+}
+
+/** A sheet that a button opens; Escape, a click elsewhere or a finished choice closes it. */
+export function Menu({ name, children, late }: MenuProps) {
   const details = useRef<HTMLDetailsElement>(null);
-  const opened = useSignal(false);
+  const sought = useSignal(false);
+  const seek = (): void => {
+    sought.value = true;
+  };
   useEffect(() => {
     const closeOutside = (event: Event): void => {
       if (event.target instanceof Node && !details.current?.contains(event.target)) {
@@ -23,9 +33,9 @@ export function Menu({ name, children }: { readonly name: string; readonly child
     <details
       ref={details}
       class="menu"
-      onToggle={({ currentTarget: { open } }) => {
-        if (open) opened.value = true;
-      }}
+      onToggle={seek}
+      onPointerEnter={seek}
+      onFocusCapture={seek}
       onClick={(event) => {
         if (event.target instanceof HTMLButtonElement) details.current?.removeAttribute("open");
       }}
@@ -36,7 +46,10 @@ export function Menu({ name, children }: { readonly name: string; readonly child
       }}
     >
       <summary>{name}</summary>
-      <div class="menu-sheet">{opened.value && children}</div>
+      <div class="menu-sheet">
+        {children}
+        {sought.value && late}
+      </div>
     </details>
   );
 }
