@@ -2,7 +2,7 @@ import { ADVISORY, type LegEstimate } from "../core.ts";
 import { durationText } from "../format/time-text.ts";
 import { inUnit } from "../format/units.ts";
 import { Swatch } from "../ribbon/Ribbon.tsx";
-import { copyLegTable } from "../shell/exports.ts";
+import { exportsLater } from "../shell/exports-later.ts";
 import { LazyPart } from "../shell/LazyPart.tsx";
 import { PartButton } from "../shell/PartButton.tsx";
 import { StaleMark } from "../shell/StaleMark.tsx";
@@ -53,7 +53,10 @@ export function LegTable({ page }: { readonly page: PageState }) {
           <StaleMark page={page} />
         </span>
         <span class="tools">
-          <button type="button" onClick={() => void copyLegTable(page)}>
+          <button
+            type="button"
+            onClick={() => void exportsLater().then(({ copyLegTable }) => copyLegTable(page))}
+          >
             Copy
           </button>
           <PartButton

@@ -1,7 +1,7 @@
 import type { PageState } from "../state/page-state.ts";
 import type { ReportFormat } from "../worker/protocol.ts";
 import { DEMOS, openDemo } from "./demo.ts";
-import { copyLegTable, exportRoute } from "./exports.ts";
+import { exportsLater } from "./exports-later.ts";
 import { Menu } from "./Menu.tsx";
 import { saveArchive } from "./plan-files.ts";
 
@@ -20,11 +20,20 @@ export function MoreMenu({ page }: { readonly page: PageState }) {
   return (
     <Menu name="More">
       <h3>Leg table{route === undefined ? "" : ` of ${route.name}`}</h3>
-      <button type="button" disabled={!ready} onClick={() => void copyLegTable(page)}>
+      <button
+        type="button"
+        disabled={!ready}
+        onClick={() => void exportsLater().then(({ copyLegTable }) => copyLegTable(page))}
+      >
         Copy as text
       </button>
       {FORMATS.map(([format, name]) => (
-        <button key={format} type="button" disabled={!ready} onClick={() => void exportRoute(page, format)}>
+        <button
+          key={format}
+          type="button"
+          disabled={!ready}
+          onClick={() => void exportsLater().then(({ exportRoute }) => exportRoute(page, format))}
+        >
           Export {name}
         </button>
       ))}

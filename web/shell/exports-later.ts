@@ -1,0 +1,2 @@
+/** What writes leg tables, loaded when one is first asked for. */
+export const exportsLater = () => import("./exports.ts");
