@@ -67,6 +67,7 @@ export {
 export { type LandTopology, prepareLand } from "./coast/land.ts";
 export type { Land } from "./coast/land-cells.ts";
 export { type LandStretch, landCrossings } from "./coast/land-crossings.ts";
+export { type LandFinder, landFinder } from "./coast/land-finder.ts";
 export { ADVISORY } from "./constants.ts";
 // Craft: the triangle and the power models.
 export { constantPower } from "./craft/constant.ts";

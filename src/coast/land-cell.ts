@@ -1,49 +1,37 @@
-import type { Position as LonLat } from "geojson";
+import { booleanPointInPolygon, multiPolygon } from "@turf/turf";
+import type { Feature, Position as LonLat, MultiPolygon } from "geojson";
 import type { Land } from "./land-cells.ts";
 
-/** Whether a cell has any land at all. */
-export function hasLand(land: Land, cell: number): boolean {
-  return (land.ringRange[2 * cell] ?? 0) < (land.ringRange[2 * cell + 1] ?? 0);
+/** The land of one cell, a polygon for each that reaches into it; `null` where it is all sea. */
+export function cellShape(land: Land, cell: number): Feature<MultiPolygon> | null {
+  const first = land.ringRange[2 * cell] ?? 0;
+  const end = land.ringRange[2 * cell + 1] ?? 0;
+  if (first === end) return null;
+  const polygons: LonLat[][][] = [];
+  for (let ring = first; ring < end; ring++) {
+    const closed = closedRing(land, ring);
+    const same = ring > first && land.ringPolygon[ring] === land.ringPolygon[ring - 1];
+    if (same) polygons.at(-1)?.push(closed);
+    else polygons.push([closed]);
+  }
+  return multiPolygon(polygons);
+}
+
+function closedRing(land: Land, ring: number): LonLat[] {
+  const start = land.ringStart[ring] ?? 0;
+  const end = land.ringStart[ring + 1] ?? 0;
+  const positions: LonLat[] = [];
+  for (let i = start; i < end; i += 2) positions.push([land.xy[i] ?? 0, land.xy[i + 1] ?? 0]);
+  positions.push([land.xy[start] ?? 0, land.xy[start + 1] ?? 0]);
+  return positions;
 }
 
 /**
- * Whether a position, in the cell's own turn of longitude, is on the land of its cell: within one polygon at least, by the
- * even-odd rule over that polygon's rings. On a ring is on land: where the data cuts land at the antimeridian, two rings share
- * that edge.
+ * Whether a position, in the cell's own turn of longitude, is on the land of its cell. On a ring is on land: where the data
+ * cuts land at the antimeridian, two rings share that edge.
  */
-export function onCellLand(land: Land, cell: number, position: LonLat): boolean {
-  const end = land.ringRange[2 * cell + 1] ?? 0;
-  let inside = false;
-  for (let ring = land.ringRange[2 * cell] ?? 0; ring < end; ring++) {
-    const side = ringSide(land, ring, position);
-    if (side === "on") return true;
-    if (side === "inside") inside = !inside;
-    const isLastOfPolygon = ring + 1 === end || land.ringPolygon[ring + 1] !== land.ringPolygon[ring];
-    if (isLastOfPolygon && inside) return true;
-  }
-  return false;
-}
-
-/** Where a position lies to a ring: a ray from it to the east meets the edges of the ring an odd number of times from inside. */
-function ringSide(land: Land, ring: number, [x = 0, y = 0]: LonLat): "on" | "inside" | "outside" {
-  const { xy } = land;
-  const start = land.ringStart[ring] ?? 0;
-  const end = land.ringStart[ring + 1] ?? 0;
-  let isInside = false;
-  // Seen from the position.
-  let ax = (xy[end - 2] ?? 0) - x;
-  let ay = (xy[end - 1] ?? 0) - y;
-  for (let i = start; i < end; i += 2) {
-    const bx = (xy[i] ?? 0) - x;
-    const by = (xy[i + 1] ?? 0) - y;
-    const turn = ax * by - ay * bx;
-    if (turn === 0 && ax * bx <= 0 && ay * by <= 0) return "on";
-    // An end at the position's own latitude counts as above it, so that a corner is met once or twice.
-    if (ay < 0 !== by < 0 && turn > 0 === by > ay) isInside = !isInside;
-    ax = bx;
-    ay = by;
-  }
-  return isInside ? "inside" : "outside";
+export function onCellLand(shape: Feature<MultiPolygon>, position: LonLat): boolean {
+  return booleanPointInPolygon(position, shape);
 }
 
 /**

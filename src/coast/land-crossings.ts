@@ -1,6 +1,6 @@
-import type { Position as LonLat } from "geojson";
+import type { Feature, Position as LonLat, MultiPolygon } from "geojson";
 import type { Position } from "../geodesy/track.ts";
-import { coastCuts, hasLand, onCellLand } from "./land-cell.ts";
+import { cellShape, coastCuts, onCellLand } from "./land-cell.ts";
 import { CELL, cellAt, type Land, SOUTH, WEST } from "./land-cells.ts";
 
 /** A place on a leg: `s` metres from its start, longitude continuous along the leg. */
@@ -20,9 +20,10 @@ interface Chord {
   readonly b: PathPoint;
 }
 
-/** What is kept along one leg: the stretches found so far. */
+/** What is kept along one leg: the shapes of cells already met, and the stretches found so far. */
 interface Walk {
   readonly land: Land;
+  readonly shapes: Map<number, Feature<MultiPolygon> | null>;
   readonly stretches: { from_m: number; to_m: number }[];
 }
 
@@ -42,7 +43,8 @@ const SAME_CUT = 1e-12;
  */
 export function isOnLand(land: Land, { lat, lon }: Position): boolean {
   const column = Math.floor((lon - WEST) / CELL);
-  return onCellLand(land, cellAt(column, Math.floor((lat - SOUTH) / CELL)), [lon - turnOf(column), lat]);
+  const shape = cellShape(land, cellAt(column, Math.floor((lat - SOUTH) / CELL)));
+  return shape !== null && onCellLand(shape, [lon - turnOf(column), lat]);
 }
 
 /**
@@ -56,7 +58,7 @@ export function isOnLand(land: Land, { lat, lon }: Position): boolean {
  * landCrossings(prepareLand({ type: "Topology", arcs: [[[10, -9], [20, -9], [20, 9], [10, 9], [10, -9]]], objects: { land: { type: "Polygon", arcs: [[0]] } } }), [{ s: 0, lat: 1, lon: 9 }, { s: 4000, lat: 1, lon: 13 }]) // → [{ from_m: 1000, to_m: 4000 }]
  */
 export function landCrossings(land: Land, points: readonly PathPoint[]): LandStretch[] {
-  const walk: Walk = { land, stretches: [] };
+  const walk: Walk = { land, shapes: new Map(), stretches: [] };
   for (let i = 1; i < points.length; i++) {
     const chord: Chord = { a: points[i - 1] as PathPoint, b: points[i] as PathPoint };
     const shares = cellCuts(chord);
@@ -70,7 +72,8 @@ function walkPart(walk: Walk, chord: Chord, from: number, to: number): void {
   const middle = alongChord(chord, (from + to) / 2);
   const column = Math.floor((middle.lon - WEST) / CELL);
   const cell = cellAt(column, Math.floor((middle.lat - SOUTH) / CELL));
-  if (!hasLand(walk.land, cell)) return;
+  const shape = shapeOf(walk, cell);
+  if (shape === null) return;
   const turn = turnOf(column);
   const lonLat = (share: number): LonLat => {
     const { lat, lon } = alongChord(chord, share);
@@ -82,11 +85,20 @@ function walkPart(walk: Walk, chord: Chord, from: number, to: number): void {
   let start = from;
   for (const end of [...cuts, to]) {
     if (end - start <= SAME_CUT) continue;
-    if (onCellLand(walk.land, cell, lonLat((start + end) / 2))) {
+    if (onCellLand(shape, lonLat((start + end) / 2))) {
       addStretch(walk.stretches, alongChord(chord, start).s, alongChord(chord, end).s);
     }
     start = end;
   }
+}
+
+function shapeOf({ land, shapes }: Walk, cell: number): Feature<MultiPolygon> | null {
+  let shape = shapes.get(cell);
+  if (shape === undefined) {
+    shape = cellShape(land, cell);
+    shapes.set(cell, shape);
+  }
+  return shape;
 }
 
 function addStretch(stretches: Walk["stretches"], from_m: number, to_m: number): void {

@@ -1,4 +1,4 @@
-import type { Land } from "../coast/land-cells.ts";
+import type { LandFinder } from "../coast/land-finder.ts";
 import { ADVISORY } from "../constants.ts";
 import type { Craft, Pace, Reserve } from "../craft/craft.ts";
 import type { Field } from "../field/field.ts";
@@ -23,7 +23,7 @@ export interface EstimateInput {
   readonly fields: readonly Field[];
   readonly routes: readonly Route[];
   /** Coarse land for the hint `crosses-land`; `null` for none. */
-  readonly land: Land | null;
+  readonly land: LandFinder | null;
 }
 
 export interface EstimateAnswer {

@@ -1,5 +1,5 @@
-import type { Land } from "../coast/land-cells.ts";
-import { type LandStretch, landCrossings } from "../coast/land-crossings.ts";
+import type { LandStretch } from "../coast/land-crossings.ts";
+import type { LandFinder } from "../coast/land-finder.ts";
 import type { Craft } from "../craft/craft.ts";
 import type { Field, FieldRole } from "../field/field.ts";
 import { densify } from "../geodesy/drawn-line.ts";
@@ -50,7 +50,7 @@ export interface PreparedRoute {
 export function prepareRoute(
   route: Route,
   fields: readonly Field[],
-  land: Land | null = null,
+  land: LandFinder | null = null,
 ): PreparedRoute {
   const legs = route.waypoints
     .slice(1)
@@ -58,13 +58,18 @@ export function prepareRoute(
   return { route, legs, roles: fields.map(({ role }) => role) };
 }
 
-function prepareLeg(from: Waypoint, to: Waypoint, fields: readonly Field[], land: Land | null): PreparedLeg {
+function prepareLeg(
+  from: Waypoint,
+  to: Waypoint,
+  fields: readonly Field[],
+  land: LandFinder | null,
+): PreparedLeg {
   const track = makeTrack(from, to, to.path);
   const curve = fitTrackCurve(track);
   const heights = { from: from.height_m, to: to.height_m };
   const panels = cutPanels(curve, fields, heights);
   const cells = fields.map((field) => field.tiles.map((tile) => locatePanels(curve, panels, tile, heights)));
-  const stretches = land === null ? [] : landCrossings(land, densify(track));
+  const stretches = land === null ? [] : land(densify(track));
   return { from, to, track, curve, panels, heights, cells, land: stretches };
 }
 

@@ -4,6 +4,7 @@ import type { SensitivityProfile } from "../choose/sensitivity-profile.ts";
 import { withTurnBack } from "../choose/turn-back-estimate.ts";
 import { withUncertainty } from "../choose/uncertain-estimate.ts";
 import type { Land } from "../coast/land-cells.ts";
+import { landFinder } from "../coast/land-finder.ts";
 import { InputError } from "../errors.ts";
 import {
   type EstimateAnswer,
@@ -149,6 +150,7 @@ async function readInput(
 ): Promise<Omit<PlanChecked, "plan">> {
   const { title, departure, craft, pace, reserve, routes } = plan;
   const { fields, members } = await readMembers(plan.fields, open, onProgress);
-  const land = craft.moves === "water" && loadLand !== undefined ? await loadLand() : null;
+  const coast = craft.moves === "water" && loadLand !== undefined ? await loadLand() : null;
+  const land = coast === null ? null : landFinder(coast);
   return { input: { title, departure, craft, pace, reserve, fields, routes, land }, members };
 }

@@ -26,7 +26,7 @@ export function demoEngine(name: "islands" | "survey" | "ocean" | "islands-decid
   for (const { file } of references) files.keep(file, demoFile(file));
   const fields = createFieldShelf(files);
   const land = createLandShelf(() => Promise.reject(new Error("no land in this test")));
-  const reader = createPlanReader({ files, fields, land: land.ready });
+  const reader = createPlanReader({ files, fields, land: land.finder });
   return { plan, files, fields, reader, estimator: createEstimator(reader) };
 }
 

@@ -3,6 +3,7 @@
  */
 export { type LandTopology, prepareLand } from "../../src/coast/land.ts";
 export type { Land } from "../../src/coast/land-cells.ts";
+export { type LandFinder, landFinder } from "../../src/coast/land-finder.ts";
 export { unrolledRing } from "../../src/coast/ring.ts";
 export { type StillPoint, stillCurve, stillPoint } from "../../src/craft/still-curve.ts";
 export { currentSet, windFrom } from "../../src/craft/triangle.ts";

@@ -1,4 +1,4 @@
 /*
- * What makes land of a coastline, apart from the rest of the core, since it is loaded together with the coastline.
+ * What makes land of a coastline and finds it on a route, apart from the rest of the core, since it is loaded together with the coastline.
  */
-export { prepareLand } from "./core.ts";
+export { landFinder, prepareLand } from "./core.ts";

@@ -3,7 +3,7 @@ import {
   type EstimateInput,
   type Field,
   fieldsInUse,
-  type Land,
+  type LandFinder,
   type MemberFields,
   type Plan,
   type PreparedRoute,
@@ -34,7 +34,7 @@ export interface PlanSources {
   readonly files: Pick<FileShelf, "open">;
   readonly fields: FieldSource;
   /** `null` while the coast is not loaded. */
-  readonly land: () => Land | null | Promise<Land | null>;
+  readonly land: () => LandFinder | null | Promise<LandFinder | null>;
 }
 
 export function createPlanReader({ files, fields, land }: PlanSources): PlanReader {
@@ -64,10 +64,13 @@ export function createPlanReader({ files, fields, land }: PlanSources): PlanRead
 function createPreparation(): (
   routes: readonly Route[],
   fields: readonly Field[],
-  land: Land | null,
+  land: LandFinder | null,
 ) => PreparedRoute[] {
   let kept = new Map<string, PreparedRoute>();
-  let on: { readonly fields: readonly Field[]; readonly land: Land | null } = { fields: [], land: null };
+  let on: { readonly fields: readonly Field[]; readonly land: LandFinder | null } = {
+    fields: [],
+    land: null,
+  };
   return (routes, fields, land) => {
     const same =
       land === on.land &&

@@ -1,4 +1,4 @@
-import { type FieldReference, type FieldsRead, InputError, type Land } from "./core.ts";
+import { type FieldReference, type FieldsRead, InputError, type Land, type LandFinder } from "./core.ts";
 import type { FieldShelf } from "./field-shelf.ts";
 import { type FileShelf, pieces } from "./file-shelf.ts";
 import type { LandShelf } from "./land-shelf.ts";
@@ -30,7 +30,7 @@ export function sourcesBehind(port: MessagePort): PlanSources {
 
 export function sourcesOf(shelves: Remote<Shelves>): PlanSources {
   let known: { readonly key: string; readonly fields: Promise<FieldsRead> } | null = null;
-  let land: Land | null = null;
+  let finder: LandFinder | null = null;
   return {
     files: {
       async *open(name) {
@@ -50,8 +50,9 @@ export function sourcesOf(shelves: Remote<Shelves>): PlanSources {
       },
     },
     land: async () => {
-      land ??= await shelves.land();
-      return land;
+      const land = finder === null ? await shelves.land() : null;
+      if (land !== null) finder ??= (await import("./land.ts")).landFinder(land);
+      return finder;
     },
   };
 }

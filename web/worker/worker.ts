@@ -28,7 +28,7 @@ const files = createFileShelf();
 const fields = createFieldShelf(files);
 
 /** Where what is asked of this worker rests: on its own shelves, until it is told to follow another worker's. */
-let reader = createPlanReader({ files, fields, land: land.ready });
+let reader = createPlanReader({ files, fields, land: land.finder });
 const estimator = createEstimator(reader);
 
 // What decides is loaded when it is first asked for.
