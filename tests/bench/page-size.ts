@@ -3,8 +3,8 @@ import { join } from "node:path";
 import { gzipSync } from "node:zlib";
 import { atMost, type Part } from "./comparison.ts";
 
-/** What the page fetches only when it is wanted: coastlines, the demo's files, pictures of the chart's library. */
-const LATER = /\.(json|csv|png)$/;
+/** What a first visit fetches at once; every other chunk, coastline and demo file comes when it is wanted. */
+const FIRST = /^(index\.html|assets\/(index|worker)-[^/]*\.(js|css))$/;
 
 /** What the built page loads at first, every file gzipped by itself: markup, style, code and the worker's code. */
 export function pageSize(root: string): Part {
@@ -12,7 +12,7 @@ export function pageSize(root: string): Part {
   if (!existsSync(page)) throw new Error("dist/page is missing: run npm run build first");
   const files = ["index.html", ...readdirSync(join(page, "assets")).map((name) => `assets/${name}`)];
   const sizes = files
-    .filter((name) => !LATER.test(name))
+    .filter((name) => FIRST.test(name))
     .map((name) => ({ name, bytes: gzipSync(readFileSync(join(page, name)), { level: 9 }).length }));
   const kilobytes = (part: RegExp) =>
     sizes.filter(({ name }) => part.test(name)).reduce((sum, { bytes }) => sum + bytes, 0) / 1000;
