@@ -195,6 +195,7 @@ export { writeGpx } from "./report/gpx.ts";
 export type { ReportInput, Units } from "./report/input.ts";
 export { writeInspection } from "./report/inspection-text.ts";
 export { writeJson } from "./report/json.ts";
+export { type ReportFormat, unitsFor, writeReport } from "./report/report.ts";
 export { writeTable } from "./report/table.ts";
 export { writeWindowCsv } from "./report/window-csv.ts";
 export type { WindowReport } from "./report/window-input.ts";

@@ -33,6 +33,7 @@ export { LATTICE_COVERED, LATTICE_GAP } from "../src/field/lattice.ts";
 export type { Position } from "../src/geodesy/track.ts";
 export { parseCoordinate } from "../src/plan/position.ts";
 export type { Units } from "../src/report/input.ts";
+export type { ReportFormat } from "../src/report/report.ts";
 export { percentText } from "../src/report/spread-rows.ts";
 export { storeColumn } from "../src/report/table-units.ts";
 export { type Dimension, dimensionOf, fromUnit, symbolsOf, toUnit } from "../src/units.ts";

@@ -1,13 +1,4 @@
-import {
-  estimatePlan,
-  type ReportInput,
-  type Units,
-  writeCsv,
-  writeGeoJson,
-  writeGpx,
-  writeJson,
-  writeTable,
-} from "./core.ts";
+import { estimatePlan, type ReportFormat, type Units, writeReport } from "./core.ts";
 import { loadLand } from "./load-land.ts";
 import { writeResult } from "./output.ts";
 import { openPlan } from "./plan-files.ts";
@@ -16,25 +7,10 @@ import { noteUnits } from "./units-note.ts";
 export interface EstimateOptions {
   readonly route?: readonly string[];
   readonly departure?: string;
-  readonly format: "table" | "csv" | "json" | "geojson" | "gpx";
+  readonly format: ReportFormat;
   readonly units?: Units;
   readonly out?: string;
   readonly turnBack?: boolean;
-}
-
-function written(input: ReportInput, { format, units }: EstimateOptions): string {
-  switch (format) {
-    case "table":
-      return writeTable(input, units ?? (input.craft.moves === "air" ? "air" : "sea"));
-    case "csv":
-      return writeCsv(input);
-    case "json":
-      return writeJson(input.estimate);
-    case "geojson":
-      return writeGeoJson(input);
-    case "gpx":
-      return writeGpx(input);
-  }
 }
 
 /** Estimates a plan and writes the answer; 1 where some route ends in a stop. */
@@ -51,6 +27,10 @@ export async function estimateCommand(file: string, options: EstimateOptions): P
     ...(options.route === undefined ? {} : { routes: options.route }),
   });
   const { routes, craft, pace } = plan;
-  await writeResult(written({ estimate, routes, craft, pace }, options), options.out, inputs);
+  await writeResult(
+    writeReport({ estimate, routes, craft, pace }, options.format, options.units),
+    options.out,
+    inputs,
+  );
   return estimate.routes.some((route) => route.status === "stop") ? 1 : 0;
 }

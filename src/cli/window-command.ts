@@ -1,6 +1,7 @@
 import {
   fieldSummary,
   type Units,
+  unitsFor,
   windowPlan,
   writeWindowCsv,
   writeWindowJson,
@@ -48,7 +49,7 @@ export async function windowCommand(file: string, options: WindowOptions): Promi
   const fields = input.fields.map(fieldSummary);
   const report = { title, fields, craft, pace, arrive, window, cells, summary, refined, inTime, paces };
   const text = {
-    table: () => writeWindowTable(report, units ?? (craft.moves === "air" ? "air" : "sea")),
+    table: () => writeWindowTable(report, units ?? unitsFor(craft)),
     csv: () => writeWindowCsv(report),
     json: () => writeWindowJson(report),
   }[format]();

@@ -1,5 +1,5 @@
+import type { ReportFormat } from "../core.ts";
 import type { PageState } from "../state/page-state.ts";
-import type { ReportFormat } from "../worker/protocol.ts";
 import { DEMOS, openDemo } from "./demo.ts";
 import { exportsLater } from "./exports-later.ts";
 import { Menu } from "./Menu.tsx";

@@ -1,5 +1,5 @@
+import type { ReportFormat } from "../core.ts";
 import type { PageState } from "../state/page-state.ts";
-import type { ReportFormat } from "../worker/protocol.ts";
 import { fileStem, saveFile } from "./plan-files.ts";
 
 const KINDS: Record<ReportFormat, { readonly ending: string; readonly type: string }> = {

@@ -42,9 +42,5 @@ export { type FieldsRead, type MemberFields, mergeSources, roleSource } from "..
 export { readCraftDocument } from "../../src/plan/read-craft.ts";
 export { readPlanDocument } from "../../src/plan/read-plan.ts";
 export { serializeCraft, serializePlan } from "../../src/plan/write-plan.ts";
-export { writeCsv } from "../../src/report/csv.ts";
-export { writeGeoJson } from "../../src/report/geojson.ts";
-export { writeGpx } from "../../src/report/gpx.ts";
 export type { ReportInput } from "../../src/report/input.ts";
-export { writeJson } from "../../src/report/json.ts";
-export { writeTable } from "../../src/report/table.ts";
+export { writeReport } from "../../src/report/report.ts";

@@ -7,6 +7,7 @@ import type {
   PaceCurve,
   Profile,
   RefinedWindow,
+  ReportFormat,
   SensitivityProfile,
   StillCurve,
   StillPoint,
@@ -159,8 +160,6 @@ export type CraftAnswer =
       readonly limit: number | null;
     }
   | { readonly ok: false; readonly key: string | null; readonly fault: string };
-
-export type ReportFormat = "table" | "csv" | "json" | "geojson" | "gpx";
 
 export interface ReportQuestion {
   readonly format: ReportFormat;
