@@ -171,7 +171,10 @@ function readFlows(step: Step, start: number, first: number, last: number): void
   const { medium, wind, elapsed } = step;
   if (medium !== null) readFlow(medium, elapsed, start, step.along, step.cross, first, last);
   if (step.alongOnly) step.cross.fill(0);
-  if (wind !== null) readFlow(wind, elapsed, start, step.windAlong, step.windCross, first, last);
+  // In the air the wind is the medium itself; apart from it, it acts through windage alone.
+  if (wind !== null && wind !== medium) {
+    readFlow(wind, elapsed, start, step.windAlong, step.windCross, first, last);
+  }
 }
 
 function readFlow(
