@@ -1,6 +1,7 @@
 import { join } from "node:path";
 import type { Comparison, Part } from "./comparison.ts";
 import { csvReading } from "./csv-reading.ts";
+import { ensembleMemory } from "./ensemble-memory.ts";
 import { geodesicSampling } from "./geodesic-sampling.ts";
 import { interpolation } from "./interpolation.ts";
 import { makeOcean, type Ocean } from "./ocean.ts";
@@ -9,6 +10,7 @@ import { type PythonPeer, startPeer } from "./python-peer.ts";
 import { record, verdict } from "./record.ts";
 import { startUp } from "./start-up.ts";
 import { wholeJob } from "./whole-job.ts";
+import { windowThreads } from "./window-threads.ts";
 
 /*
  * Every benchmark in one run. Called by run.mjs as `node main.mjs HERE FOLDER DATE [PART …]`: the folder of the benchmarks, one
@@ -34,6 +36,8 @@ const PARTS: Readonly<Record<string, () => Part | Promise<Part>>> = {
   page: () => pageSize(root),
   start: () => startUp(root, folder),
   csv: () => csvReading(folder),
+  ensemble: () => ensembleMemory(folder),
+  workers: () => windowThreads(folder),
   geodesic: () => geodesicSampling(theJob().ocean),
   interpolation: () => interpolation(theJob().ocean, folder, theJob().peer),
   whole: () => wholeJob(theJob().ocean, theJob().peer),

@@ -1,3 +1,4 @@
+import { makeSweep, type Sweep } from "../../src/choose/window.ts";
 import { constantPower } from "../../src/craft/constant.ts";
 import type { Craft } from "../../src/craft/craft.ts";
 import type { Conditions } from "../../src/estimate/conditions.ts";
@@ -23,9 +24,13 @@ const WAVES = [
   [1, 0.9, 1.1, 0.7],
 ] as const;
 
+/** Room for so many numbers; what threads share stands in shared memory. */
+type Room = (length: number) => Float64Array;
+const ownRoom: Room = (length) => new Float64Array(length);
+
 /** The wind, made in place: u = Σ A sin(p i + w t) cos(q j), v = Σ A cos(p i - w t) sin(q j). */
-function oceanWind(): Field {
-  const slices = Array.from({ length: TIMES }, (_, t) => slice(t));
+export function oceanWind(room: Room = ownRoom): Field {
+  const slices = Array.from({ length: TIMES }, (_, t) => slice(t, room));
   return {
     role: "wind",
     outside: "stop",
@@ -46,8 +51,8 @@ function oceanWind(): Field {
   };
 }
 
-function slice(t: number): Float64Array {
-  const values = new Float64Array(2 * LATS * LONS);
+function slice(t: number, room: Room): Float64Array {
+  const values = room(2 * LATS * LONS);
   for (const [amplitude, p, w, q] of WAVES) {
     const east = Float64Array.from({ length: LONS }, (_, i) => amplitude * Math.sin(p * i + w * t));
     const north = Float64Array.from({ length: LONS }, (_, i) => amplitude * Math.cos(p * i - w * t));
@@ -127,7 +132,21 @@ export interface Ocean {
   readonly prepared: readonly PreparedRoute[];
 }
 
-export function makeOcean(): Ocean {
-  const wind = oceanWind();
+export function makeOcean(wind: Field = oceanWind()): Ocean {
   return { wind, prepared: oceanRoutes().map((route) => prepareRoute(route, [wind])) };
+}
+
+/** The job's departures and routes as a window that is worked out cell by cell. */
+export function oceanSweep({ wind, prepared }: Ocean): {
+  readonly sweep: Sweep;
+  readonly departures: readonly number[];
+} {
+  const conditions = oceanConditions(wind, DEPARTURES_S[0] as number);
+  const sweep = makeSweep(prepared, {
+    ...conditions,
+    title: "",
+    routes: prepared.map(({ route }) => route),
+    land: null,
+  });
+  return { sweep, departures: Array.from(DEPARTURES_S, (departure) => START + 1000 * departure) };
 }

@@ -25,7 +25,12 @@ try {
       target: "node20",
       minify: false,
       rolldownOptions: {
-        input: { main: join(here, "main.bench.ts"), "read-csv": join(here, "read-csv.bench.ts") },
+        input: Object.fromEntries(
+          ["main", "read-csv", "window-threads", "ensemble"].map((name) => [
+            name,
+            join(here, `${name}.bench.ts`),
+          ]),
+        ),
         output: { format: "es", entryFileNames: "[name].mjs", chunkFileNames: "[name].mjs" },
       },
     },

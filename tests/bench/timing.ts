@@ -35,6 +35,13 @@ function summary(name: string, raw: number[]): Timing {
   return { name, least: Math.min(...raw), mean, deviation, raw };
 }
 
+/** The middle of a contestant's rounds, seconds a unit. */
+export function median({ raw }: Timing): number {
+  const sorted = [...raw].sort((a, b) => a - b);
+  const middle = sorted.length / 2;
+  return ((sorted[Math.ceil(middle) - 1] as number) + (sorted[Math.floor(middle)] as number)) / 2;
+}
+
 /**
  * Work in this process: `work` does `units` of it and returns a figure that depends on all of them.
  *
