@@ -89,6 +89,43 @@ describe("the departures compared", () => {
     await screen.findByLabelText("Rows");
   });
 
+  test("keep an arrival: the plan's own key, which cells make it, the latest departure that does, and none again once cleared", async () => {
+    const page = await windowed();
+    const before = page.store.plan.value;
+    render(<WindowView page={page} />);
+    const field = await screen.findByLabelText(/^Arrive by/);
+    fireEvent.change(field, { target: { value: "2027-05-04T12:00" } });
+    expect(page.store.plan.value.window).toEqual({ ...WINDOW, arriveBy: "2027-05-04T12:00:00Z" });
+    const list = await screen.findByRole("list", { name: "Latest departures in time" });
+    expect(list.textContent).toMatch(/4 May 09:\d\d UTC, West about: .* arrives 1[12]:\d\d/);
+    expect(list.textContent).toMatch(/East about: none arrives in time/);
+    const grid = screen.getByRole("grid");
+    fireEvent.keyDown(grid, { key: "Home" });
+    fireEvent.keyDown(grid, { key: "ArrowDown" });
+    await waitFor(() =>
+      expect(screen.getByRole("cell").textContent).toMatch(/in time, \d+ min to spare|in time, 1 h/),
+    );
+    fireEvent.keyDown(grid, { key: "End" });
+    await waitFor(() => expect(screen.getByRole("cell").textContent).toMatch(/too late/));
+    fireEvent.click(screen.getByLabelText("Take out: Arrive by"));
+    expect(page.store.plan.value.window).toEqual(WINDOW);
+    page.store.undo();
+    page.store.undo();
+    expect(page.store.plan.value).toBe(before);
+  });
+
+  test("say in a sentence that an arrival is none to keep, and compare all the same", async () => {
+    const page = await windowed();
+    render(<WindowView page={page} />);
+    const field = await screen.findByLabelText(/^Arrive by/);
+    fireEvent.change(field, { target: { value: "2027-05-04T07:00" } });
+    expect((await screen.findByRole("alert")).textContent).toMatch(
+      /an arrival is after the earliest departure/,
+    );
+    expect(screen.getByLabelText(/^Arrive by/).getAttribute("aria-invalid")).toBe("true");
+    await screen.findByRole("list", { name: "Best departures" });
+  });
+
   test("are proposed within the fields' valid times", async () => {
     const page = await pageOf();
     const { estimate } = page.answers.answer.value;

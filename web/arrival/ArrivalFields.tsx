@@ -111,25 +111,48 @@ interface TimeFieldProps {
   readonly value: string;
   readonly zone: string;
   readonly onTime: (time: string) => void;
+  /** Takes the time away, where there may be none. */
+  readonly onClear?: () => void;
+  /** The element that says what is wrong with the time. */
+  readonly faultId?: string;
 }
 
 /** A time in the zone that the page shows, written to the plan in UTC. */
-export function TimeField({ label, value, zone, onTime }: TimeFieldProps) {
+export function TimeField({ label, value, zone, onTime, onClear, faultId }: TimeFieldProps) {
   const instant = Date.parse(value);
-  return (
+  const shown = Number.isNaN(instant) ? "" : localInput(instant, zone);
+  const field = (
     <label>
       <span>
         {label} {Number.isNaN(instant) ? zone : zoneText(instant, zone)}
       </span>
       <input
         type="datetime-local"
-        value={Number.isNaN(instant) ? "" : localInput(instant, zone)}
+        value={shown}
+        {...(faultId === undefined ? {} : { "aria-invalid": true, "aria-describedby": faultId })}
         onChange={(event) => {
           const asked = fromLocalInput(event.currentTarget.value, zone);
           if (asked !== null) onTime(timeOf(asked));
         }}
+        // A field is empty while a part of it is typed anew: only one that is left so means no time.
+        onBlur={({ currentTarget }) => {
+          if (currentTarget.value !== "" || shown === "") return;
+          if (onClear === undefined) currentTarget.value = shown;
+          else onClear();
+        }}
       />
     </label>
+  );
+  if (onClear === undefined) return field;
+  return (
+    <div class="clearable">
+      {field}
+      {shown !== "" && (
+        <button type="button" aria-label={`Take out: ${label}`} onClick={onClear}>
+          ✕
+        </button>
+      )}
+    </div>
   );
 }
 

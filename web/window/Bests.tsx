@@ -3,7 +3,7 @@ import type { WindowBest, WindowCell } from "../core.ts";
 import type { PageState } from "../state/page-state.ts";
 import { BESTS } from "./best-marks.ts";
 import { cellText } from "./cell-text.ts";
-import { chooseDeparture } from "./heat-places.ts";
+import { DepartureButton } from "./DepartureButton.tsx";
 import type { Filled } from "./window-fill.ts";
 
 interface BestsProps {
@@ -15,9 +15,9 @@ interface BestsProps {
 /** The best departures of the window, each to be looked at and chosen, and why routes cannot be done. */
 export function Bests({ page, filled, onRefine }: BestsProps) {
   const asked = useSignal<Filled["plan"] | null>(null);
-  const { bests, shape, plan } = filled;
+  const { bests, plan } = filled;
   if (bests === null) return null;
-  const { summary, refined, inTime } = bests;
+  const { summary, refined } = bests;
   const best: WindowBest = refined?.best ?? summary.best;
   return (
     <div class="bests">
@@ -43,13 +43,6 @@ export function Bests({ page, filled, onRefine }: BestsProps) {
           )),
         )}
       </ul>
-      {inTime?.routes.map(({ route, speed_m_s, latest, earliest }) => (
-        <p key={`${route} ${speed_m_s}`}>
-          {latest === null
-            ? `${route}: none arrives in time; the earliest, ${cellText(page, earliest, shape)}`
-            : `In time at the latest: ${cellText(page, latest, shape)}`}
-        </p>
-      ))}
       {summary.possible > 0 && refined === null && (
         <button
           type="button"
@@ -75,39 +68,16 @@ interface BestItemProps {
 }
 
 function BestItem({ page, filled, letter, name, cell }: BestItemProps) {
-  const { desk } = page;
-  const { shape, plan } = filled;
-  const speed = plan.window?.speeds?.[shape.speeds?.indexOf(cell.speed_m_s ?? Number.NaN) ?? -1] ?? null;
-  const preview = { departure: cell.departure.replace(".000Z", "Z"), speed };
-  const look = (): void => {
-    desk.preview.value = preview;
-  };
-  const leave = (): void => {
-    desk.preview.value = null;
-  };
+  const sign = (
+    <span class="best-letter" aria-hidden="true">
+      {letter}
+    </span>
+  );
   return (
     <li>
-      <button
-        type="button"
-        onPointerEnter={look}
-        onPointerLeave={leave}
-        onFocus={look}
-        onBlur={leave}
-        onClick={() =>
-          chooseDeparture(
-            page,
-            preview,
-            page.store.plan.peek().routes.findIndex(({ name: own }) => own === cell.route),
-          )
-        }
-      >
-        <span class="best-letter" aria-hidden="true">
-          {letter}
-        </span>
-        <span>
-          <strong>{name}</strong> {cellText(page, cell, shape)}
-        </span>
-      </button>
+      <DepartureButton page={page} filled={filled} cell={cell} sign={sign}>
+        <strong>{name}</strong> {cellText(page, cell, filled.shape)}
+      </DepartureButton>
     </li>
   );
 }

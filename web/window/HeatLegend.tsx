@@ -1,8 +1,10 @@
 import { SPEED_CLASSES, speedColour } from "../format/palette.ts";
-import { durationText } from "../format/time-text.ts";
+import { clockText, durationText } from "../format/time-text.ts";
 import { inUnit, storeUnit } from "../format/units.ts";
 import type { PageState } from "../state/page-state.ts";
 import { figureRange, type Measure } from "./heat-rows.ts";
+import { LatestSign } from "./InTimeList.tsx";
+import { arrivalToKeep } from "./keep-arrival.ts";
 import type { Filled } from "./window-fill.ts";
 
 const NAMES: Record<Measure, string> = { time: "time", use: "use", left: "left" };
@@ -14,8 +16,9 @@ interface HeatLegendProps {
 }
 
 /** What the colours and hatchings of the window stand for. */
-export function HeatLegend({ filled, measure }: HeatLegendProps) {
+export function HeatLegend({ page, filled, measure }: HeatLegendProps) {
   const range = figureRange(filled.cells, measure);
+  const arriveBy = arrivalToKeep(filled);
   const amount = storeUnit(filled.shape.storeUnit, filled.shape.usable);
   const text = (value: number): string =>
     measure === "time" ? durationText(value) : `${inUnit(value, amount)} ${amount.symbol}`;
@@ -47,6 +50,17 @@ export function HeatLegend({ filled, measure }: HeatLegendProps) {
       <span>
         <span class="heat-key planned" aria-hidden="true" /> the plan's departure
       </span>
+      {arriveBy !== null && (
+        <>
+          <span>
+            <span class="heat-key timely" aria-hidden="true" /> arrives by{" "}
+            {clockText(arriveBy, page.view.zone.value, true)}
+          </span>
+          <span>
+            <LatestSign /> the latest departure that does
+          </span>
+        </>
+      )}
     </p>
   );
 }

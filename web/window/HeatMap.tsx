@@ -10,6 +10,7 @@ import { HeatFocus } from "./HeatFocus.tsx";
 import { HeatPicture } from "./HeatPicture.tsx";
 import { chooseDeparture, type HeatPlace, previewOf, ROW_HEIGHT, routeOnPage } from "./heat-places.ts";
 import { cellIndex, heatRows, type Measure, type RowChoice } from "./heat-rows.ts";
+import { arrivalToKeep, spareText } from "./keep-arrival.ts";
 import type { Filled } from "./window-fill.ts";
 
 /** Narrower cells could not be pointed at; the map then scrolls. */
@@ -48,7 +49,7 @@ export function HeatMap({ page, filled, measure, rows: choice }: HeatMapProps) {
       chooseDeparture(page, previewOf(filled, place.column, row), routeOnPage(page, row.route));
   };
   const told = active.value === null ? null : cellAt(active.value);
-  const text = told === null ? null : cellText(page, told, shape);
+  const text = told === null ? null : cellWords(page, told, filled);
 
   return (
     <div class="heat">
@@ -95,6 +96,13 @@ export function HeatMap({ page, filled, measure, rows: choice }: HeatMapProps) {
       />
     </div>
   );
+}
+
+/** A cell in words, and whether it keeps the window's arrival. */
+function cellWords(page: PageState, cell: WindowCell, filled: Filled): string {
+  const spare = spareText(cell, arrivalToKeep(filled));
+  const words = cellText(page, cell, filled.shape);
+  return spare === "" ? words : `${words}; ${spare}`;
 }
 
 interface HeatToldProps {

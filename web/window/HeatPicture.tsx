@@ -4,6 +4,7 @@ import { bestMarks } from "./best-marks.ts";
 import { drawHeat } from "./draw-heat.ts";
 import { columnOf, type HeatPlace, ROW_HEIGHT } from "./heat-places.ts";
 import { cellIndex, figureRange, type HeatRow, type Measure } from "./heat-rows.ts";
+import { arrivalToKeep, keepsArrival, latestMarks } from "./keep-arrival.ts";
 import type { Filled } from "./window-fill.ts";
 
 interface HeatPictureProps {
@@ -20,6 +21,7 @@ export function HeatPicture({ page, filled, measure, rows, cellWidth, active }: 
   const canvas = useRef<HTMLCanvasElement>(null);
   const { shape, cells } = filled;
   const theme = page.view.theme.value;
+  const arriveBy = arrivalToKeep(filled);
   const departure = Date.parse(page.store.plan.value.departure);
   useLayoutEffect(() => {
     if (canvas.current === null) return;
@@ -32,6 +34,8 @@ export function HeatPicture({ page, filled, measure, rows, cellWidth, active }: 
       measure,
       range: figureRange(cells, measure),
       marks: bestMarks(filled, rows),
+      isInTime: (cell) => keepsArrival(cell, arriveBy),
+      latest: latestMarks(filled, rows),
       cellWidth,
       rowHeight: ROW_HEIGHT,
       planned: columnOf(shape.departures, departure),

@@ -8,10 +8,14 @@ interface WindowSettingsProps {
   readonly page: PageState;
   /** The plan's window, or one that is proposed. */
   readonly window: WindowDocument;
+  /** What is wrong with the arrival to keep; `null` where nothing is. */
+  readonly fault: string | null;
 }
 
-/** First and last departure, step, speeds. What is proposed is written to the plan with the first change. */
-export function WindowSettings({ page, window }: WindowSettingsProps) {
+const FAULT = "arrive-by-fault";
+
+/** First and last departure, step, speeds, and an arrival to keep. What is proposed is written to the plan with the first change. */
+export function WindowSettings({ page, window, fault }: WindowSettingsProps) {
   const { store, view } = page;
   const change = (part: Partial<WindowDocument>): void =>
     store.edit("Change window", (plan) => setWindow(plan, { ...window, ...part }));
@@ -29,6 +33,19 @@ export function WindowSettings({ page, window }: WindowSettingsProps) {
           onText={(every) => change({ every: every.trim() === "" ? window.every : every })}
         />
       </div>
+      <TimeField
+        label="Arrive by"
+        value={window.arriveBy ?? ""}
+        zone={zone}
+        onTime={(arriveBy) => change({ arriveBy })}
+        onClear={() => store.edit("Change window", (plan) => setWindow(plan, withoutArrival(window)))}
+        {...(fault === null ? {} : { faultId: FAULT })}
+      />
+      {fault !== null && (
+        <p class="fault" id={FAULT} role="alert">
+          {fault}
+        </p>
+      )}
       <div class="plan-item short">
         <span>Speeds</span>
         <TextField
@@ -40,6 +57,10 @@ export function WindowSettings({ page, window }: WindowSettingsProps) {
       </div>
     </>
   );
+}
+
+function withoutArrival({ arriveBy: _old, ...window }: WindowDocument): WindowDocument {
+  return window;
 }
 
 /** Speeds from a text with commas or semicolons; an empty text takes them away. */

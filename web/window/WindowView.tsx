@@ -6,6 +6,7 @@ import { Bests } from "./Bests.tsx";
 import { HeatLegend } from "./HeatLegend.tsx";
 import { HeatMap } from "./HeatMap.tsx";
 import type { Measure, RowChoice } from "./heat-rows.ts";
+import { InTimeList } from "./InTimeList.tsx";
 import { proposedWindow } from "./proposed-window.ts";
 import { WindowSettings } from "./WindowSettings.tsx";
 import { createWindowFill } from "./window-fill.ts";
@@ -46,7 +47,7 @@ export function WindowView({ page }: { readonly page: PageState }) {
   return (
     <div class="window-view">
       <div class="window-bar">
-        <WindowSettings page={page} window={window} />
+        <WindowSettings page={page} window={window} fault={filled?.bests?.inTimeFault ?? null} />
         <div class="plan-item">
           <span>Colours</span>
           <fieldset class="choice">
@@ -83,6 +84,7 @@ export function WindowView({ page }: { readonly page: PageState }) {
         <>
           <HeatMap page={page} filled={filled} measure={measure.value} rows={rows.value} />
           <HeatLegend page={page} filled={filled} measure={measure.value} />
+          <InTimeList page={page} filled={filled} />
           <Bests page={page} filled={filled} onRefine={() => void fill.refine()} />
         </>
       )}

@@ -12,6 +12,10 @@ export interface HeatPicture {
   readonly marks: readonly { readonly row: number; readonly column: number; readonly letters: string }[];
   readonly cellWidth: number;
   readonly rowHeight: number;
+  /** Whether a cell can be done and keeps the window's arrival; none does where it keeps none. */
+  readonly isInTime: (cell: WindowCell) => boolean;
+  /** The latest departures in time, columns in parts. */
+  readonly latest: readonly { readonly row: number; readonly column: number }[];
   /** Where the plan's departure lies, in columns; `null` outside the window. */
   readonly planned: number | null;
   readonly active: { readonly row: number; readonly column: number } | null;
@@ -38,6 +42,7 @@ export function drawHeat(canvas: HTMLCanvasElement, picture: HeatPicture): void 
     });
   });
   drawPlanned(context, picture, ink, height);
+  for (const place of picture.latest) drawLatest(context, picture, ink, place);
   for (const mark of picture.marks) drawMark(context, picture, ink, mark);
   drawActive(context, picture, ink);
 }
@@ -69,7 +74,7 @@ const gap = (cellWidth: number): number => (cellWidth >= 6 ? 1 : 0);
 
 function drawCell(
   context: CanvasRenderingContext2D,
-  { measure, range, cellWidth, rowHeight }: HeatPicture,
+  { measure, range, isInTime, cellWidth, rowHeight }: HeatPicture,
   ink: Inks,
   cell: WindowCell,
   x: number,
@@ -101,6 +106,12 @@ function drawCell(
     context.lineTo(x + width - 7, y + 1);
     context.lineTo(x + width, y + 8);
     context.fill();
+  }
+  if (isInTime(cell)) {
+    context.fillStyle = ink.panel;
+    context.fillRect(x, y + height - 5, width, 6);
+    context.fillStyle = ink.ink;
+    context.fillRect(x, y + height - 3, width, 4);
   }
   context.restore();
 }
@@ -143,6 +154,30 @@ function drawPlanned(
   context.lineWidth = 2;
   context.strokeStyle = ink.ink;
   context.stroke();
+}
+
+/** A flag on the row, at the very departure: its mast there, its cloth on the side of those that are in time. */
+function drawLatest(
+  context: CanvasRenderingContext2D,
+  { cellWidth, rowHeight }: HeatPicture,
+  ink: Inks,
+  { row, column }: HeatPicture["latest"][number],
+): void {
+  const x = (column + 0.5) * cellWidth;
+  const top = row * rowHeight + 1;
+  context.beginPath();
+  context.moveTo(x, top + rowHeight - 2);
+  context.lineTo(x, top);
+  context.lineTo(x - 9, top);
+  context.lineTo(x, top + 8);
+  context.lineWidth = 4;
+  context.strokeStyle = ink.panel;
+  context.stroke();
+  context.lineWidth = 2;
+  context.strokeStyle = ink.clear;
+  context.fillStyle = ink.clear;
+  context.stroke();
+  context.fill();
 }
 
 function drawMark(

@@ -76,8 +76,8 @@ export function createWindowFill(hands: readonly (() => Hand)[]): WindowFill {
       );
       const done = show.finished();
       if (ticket !== current || done === null) return;
-      const [first] = hands;
-      const bests = await first?.().windowBests(ticket, done, false);
+      // The last hand, since latest departures in time take a while and the first answers everything else.
+      const bests = await hands.at(-1)?.().windowBests(ticket, done, false);
       if (ticket === current && bests && filled.value) filled.value = { ...filled.value, bests };
     },
     async refine() {

@@ -70,12 +70,21 @@ export function createDeciding(reader: PlanReader): Deciding {
     windowBests(ticket, cells, refine) {
       if (open === null || open.ticket !== ticket) return null;
       const { sweep, window } = open;
-      const inTime = refine ? latestInTime(sweep, window) : null;
       const refined = refine ? refineWindow(sweep, window, cells) : null;
-      return { summary: summariseWindow(cells), refined, inTime };
+      return { summary: summariseWindow(cells), refined, ...inTimeOf(open) };
     },
     paceCurve: (plan, route) => answered(async () => paceOf(await reader.read(plan), route)),
   };
+}
+
+/** The latest departures that arrive in time, or the core's sentence about what is wrong with the arrival to keep. */
+function inTimeOf({ sweep, window }: OpenWindow): Pick<WindowBests, "inTime" | "inTimeFault"> {
+  try {
+    return { inTime: latestInTime(sweep, window), inTimeFault: null };
+  } catch (fault) {
+    if (fault instanceof InputError) return { inTime: null, inTimeFault: fault.message };
+    throw fault;
+  }
 }
 
 /** Cells in the order asked for, until the time is spent: so the worker can hear what else is asked in between. */

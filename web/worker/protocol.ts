@@ -198,8 +198,10 @@ export interface WindowBests {
   readonly summary: WindowSummary;
   /** To the minute; `null` where that was not asked. */
   readonly refined: RefinedWindow | null;
-  /** Latest departures that arrive in time; `null` where the window keeps no arrival or it was not asked. */
+  /** Latest departures that arrive in time; `null` where the window keeps no arrival, or one that it cannot. */
   readonly inTime: InTime | null;
+  /** What is wrong with the arrival to keep; `null` where nothing is. */
+  readonly inTimeFault: string | null;
 }
 
 /** A route against the speed through the medium. */
