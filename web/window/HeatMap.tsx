@@ -7,6 +7,7 @@ import type { PageState } from "../state/page-state.ts";
 import { cellText } from "./cell-text.ts";
 import { HeatAxis } from "./HeatAxis.tsx";
 import { HeatFocus } from "./HeatFocus.tsx";
+import { HeatLegend } from "./HeatLegend.tsx";
 import { HeatPicture } from "./HeatPicture.tsx";
 import { chooseDeparture, type HeatPlace, previewOf, ROW_HEIGHT, routeOnPage } from "./heat-places.ts";
 import { cellIndex, heatRows, type Measure, type RowChoice } from "./heat-rows.ts";
@@ -87,13 +88,23 @@ export function HeatMap({ page, filled, measure, rows: choice }: HeatMapProps) {
         </div>
         <HeatAxis departures={shape.departures} cellWidth={cellWidth} zone={view.zone.value} />
       </div>
-      <HeatTold
-        filled={filled}
-        text={text}
-        onChoose={() => {
-          if (active.value !== null) choose(active.value);
-        }}
-      />
+      <div class="heat-below" data-told={text === null ? undefined : ""}>
+        <HeatLegend page={page} filled={filled} />
+        {text !== null && (
+          <p class="heat-told">
+            <span>{text}</span>
+            <button
+              type="button"
+              class="for-touch"
+              onClick={() => {
+                if (active.value !== null) choose(active.value);
+              }}
+            >
+              Set this departure
+            </button>
+          </p>
+        )}
+      </div>
     </div>
   );
 }
@@ -103,32 +114,4 @@ function cellWords(page: PageState, cell: WindowCell, filled: Filled): string {
   const spare = spareText(cell, arrivalToKeep(filled));
   const words = cellText(page, cell, filled.shape);
   return spare === "" ? words : `${words}; ${spare}`;
-}
-
-interface HeatToldProps {
-  readonly filled: Filled;
-  /** Of the cell that is looked at; `null` where none is. */
-  readonly text: string | null;
-  readonly onChoose: () => void;
-}
-
-/** The figures of what is looked at, and how far the window is. */
-function HeatTold({ filled: { cells, done }, text, onChoose }: HeatToldProps) {
-  if (text !== null) {
-    return (
-      <p class="heat-told">
-        <span>{text}</span>
-        <button type="button" class="for-touch" onClick={onChoose}>
-          Set this departure
-        </button>
-      </p>
-    );
-  }
-  return (
-    <p class="heat-told quiet">
-      {done < cells.length
-        ? `${done} of ${cells.length} worked out`
-        : "Point at a departure to look at it, click to set it."}
-    </p>
-  );
 }

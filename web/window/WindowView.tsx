@@ -3,20 +3,14 @@ import { useEffect, useLayoutEffect, useMemo } from "preact/hooks";
 import { estimable } from "../state/estimable.ts";
 import type { PageState } from "../state/page-state.ts";
 import { Bests } from "./Bests.tsx";
-import { HeatLegend } from "./HeatLegend.tsx";
 import { HeatMap } from "./HeatMap.tsx";
+import { HeatScale } from "./HeatScale.tsx";
 import type { Measure, RowChoice } from "./heat-rows.ts";
 import { InTimeList } from "./InTimeList.tsx";
 import { proposedWindow } from "./proposed-window.ts";
 import { WindowSettings } from "./WindowSettings.tsx";
 import { createWindowFill } from "./window-fill.ts";
 import { windowKey } from "./window-plan.ts";
-
-const MEASURES: readonly (readonly [Measure, string])[] = [
-  ["time", "Time"],
-  ["use", "Use"],
-  ["left", "Left"],
-];
 
 /** Departures compared: every route, and every speed where the window names some, over a span of departures. */
 export function WindowView({ page }: { readonly page: PageState }) {
@@ -48,28 +42,6 @@ export function WindowView({ page }: { readonly page: PageState }) {
     <div class="window-view">
       <div class="window-bar">
         <WindowSettings page={page} window={window} fault={filled?.bests?.inTimeFault ?? null} />
-        <div class="plan-item">
-          <span>Colours</span>
-          <fieldset class="choice">
-            <legend class="unseen">What the colours stand for</legend>
-            {MEASURES.map(([choice, name]) => (
-              <label key={choice}>
-                <input
-                  type="radio"
-                  name="window-measure"
-                  checked={measure.value === choice}
-                  onChange={() => {
-                    measure.value = choice;
-                  }}
-                />
-                <span>{name}</span>
-              </label>
-            ))}
-          </fieldset>
-        </div>
-        {speeds !== null && filled !== null && (
-          <RowsField page={page} rows={rows.value} speeds={speeds} onRows={(next) => (rows.value = next)} />
-        )}
       </div>
       {fill.fault.value !== null && (
         <p class="fault" role="alert">
@@ -82,8 +54,17 @@ export function WindowView({ page }: { readonly page: PageState }) {
         </p>
       ) : (
         <>
+          <HeatScale filled={filled} measure={measure.value} onMeasure={(next) => (measure.value = next)}>
+            {speeds !== null && (
+              <RowsField
+                page={page}
+                rows={rows.value}
+                speeds={speeds}
+                onRows={(next) => (rows.value = next)}
+              />
+            )}
+          </HeatScale>
           <HeatMap page={page} filled={filled} measure={measure.value} rows={rows.value} />
-          <HeatLegend page={page} filled={filled} measure={measure.value} />
           <InTimeList page={page} filled={filled} />
           <Bests page={page} filled={filled} onRefine={() => void fill.refine()} />
         </>
