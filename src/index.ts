@@ -8,6 +8,7 @@ export type { Alternate } from "./choose/alternate.ts";
 export type { ArrivalWindow } from "./choose/arrival-window.ts";
 export { solveArrival } from "./choose/arrive.ts";
 export { estimateArriving } from "./choose/arriving-estimate.ts";
+export { CellTrials } from "./choose/cell-trials.ts";
 export type { DecidedEstimate, DecidedRoute } from "./choose/decided.ts";
 export { type DepartureWindow, windowDepartures } from "./choose/departure-window.ts";
 // Deciding: how sure it is.
@@ -16,6 +17,7 @@ export {
   type EnsembleLeg,
   type EnsembleMember,
   type EnsembleResult,
+  type MembersHeld,
   ensembleResult,
   type MemberRun,
   memberRun,
@@ -33,6 +35,16 @@ export { type RoutePaces, routePaces } from "./choose/route-paces.ts";
 export type { SensitivityProfile, WeakPlace } from "./choose/sensitivity-profile.ts";
 export { type SpeedRange, speedRange } from "./choose/speed-range.ts";
 export type { PacelessConditions } from "./choose/speed-trials.ts";
+export { runSteps, type Steps } from "./choose/steps.ts";
+export type { BestPair, DecidedBy, Sure, SureBest, SureCell } from "./choose/sure.ts";
+export type { SureInTime } from "./choose/sure-in-time.ts";
+export {
+  type PlainWindow,
+  type SurePaces,
+  type SureRoutes,
+  type SureWindow,
+  sureWindow,
+} from "./choose/sure-window.ts";
 export { turnBack } from "./choose/turn-back.ts";
 export { withTurnBack } from "./choose/turn-back-estimate.ts";
 export type {

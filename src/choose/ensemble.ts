@@ -29,8 +29,8 @@ export interface EnsembleLeg extends EnsembleFigures {
   readonly leg: number;
 }
 
-/** A route under every member of an ensemble. */
-export interface EnsembleResult extends EnsembleFigures {
+/** In which members of an ensemble the reserve holds. */
+export interface MembersHeld {
   /** Ascending; the first is the control, of which the route's own figures are. */
   readonly members: readonly number[];
   /** Share of all members in which the route arrives with the reserve kept, 0..1. */
@@ -38,6 +38,10 @@ export interface EnsembleResult extends EnsembleFigures {
   /** Members in which the route arrives and the reserve is broken, and those in which it does not arrive. */
   readonly breaksReserve: readonly number[];
   readonly doesNotArrive: readonly number[];
+}
+
+/** A route under every member of an ensemble. */
+export interface EnsembleResult extends MembersHeld, EnsembleFigures {
   readonly legs: readonly EnsembleLeg[];
 }
 
@@ -74,8 +78,17 @@ export function memberRun(
   conditions: Conditions,
   { member, fields }: EnsembleMember,
 ): MemberRun {
-  const own = haveSameAxes(conditions.fields, fields) ? prepared : preparedAnew(prepared, fields);
+  const own = preparedForMember(prepared, conditions.fields, fields);
   return { member, estimate: estimateRoute(own, { ...conditions, fields }).estimate };
+}
+
+/** A route prepared for a member's fields: as it is where they have the axes of the fields that it was prepared for. */
+export function preparedForMember(
+  prepared: PreparedRoute,
+  on: readonly Field[],
+  fields: readonly Field[],
+): PreparedRoute {
+  return haveSameAxes(on, fields) ? prepared : preparedAnew(prepared, fields);
 }
 
 /** The land stays as it was found. */
@@ -129,13 +142,15 @@ function haveSameAxes(a: readonly Field[], b: readonly Field[]): boolean {
 export function ensembleResult(runs: readonly MemberRun[]): EnsembleResult {
   if (runs.length === 0) throw new Error("an ensemble has at least one member");
   const arrived = runs.filter(({ estimate }) => estimate.arrival !== null);
-  const broken = arrived.filter(({ estimate }) => !holds(estimate));
   const legCount = runs[0]?.estimate.legs.length ?? 0;
+  const ends = runs.map(({ member, estimate: { arrival, reserve, totals } }) => ({
+    member,
+    arrives: arrival !== null,
+    remaining: totals.remaining,
+    reserve,
+  }));
   return {
-    members: runs.map(({ member }) => member),
-    reserveHolds: (arrived.length - broken.length) / runs.length,
-    breaksReserve: broken.map(({ member }) => member),
-    doesNotArrive: runs.filter(({ estimate }) => estimate.arrival === null).map(({ member }) => member),
+    ...membersHeld(ends),
     ...figures(arrived.map(({ estimate: { totals, arrival } }) => ({ ...totals, arrival }))),
     legs: Array.from({ length: legCount }, (_, n) => ({
       leg: n + 1,
@@ -146,8 +161,25 @@ export function ensembleResult(runs: readonly MemberRun[]): EnsembleResult {
   };
 }
 
-function holds({ totals, reserve }: RouteEstimate): boolean {
-  return (totals.remaining as number) >= (reserve as number);
+/** How a route ends under one member. */
+export interface MemberEnd {
+  readonly member: number;
+  readonly arrives: boolean;
+  /** Store units; `null` where it does not arrive. */
+  readonly remaining: number | null;
+  readonly reserve: number | null;
+}
+
+/** Counts the members in which the reserve holds. */
+export function membersHeld(ends: readonly MemberEnd[]): MembersHeld {
+  const arrived = ends.filter(({ arrives }) => arrives);
+  const broken = arrived.filter(({ remaining, reserve }) => (remaining as number) < (reserve as number));
+  return {
+    members: ends.map(({ member }) => member),
+    reserveHolds: (arrived.length - broken.length) / ends.length,
+    breaksReserve: broken.map(({ member }) => member),
+    doesNotArrive: ends.filter(({ arrives }) => !arrives).map(({ member }) => member),
+  };
 }
 
 type Figured = Pick<RouteEstimate["legs"][number], "time_s" | "arrival" | "use" | "remaining">;

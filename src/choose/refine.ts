@@ -1,7 +1,7 @@
-import type { PreparedRoute } from "../estimate/prepare.ts";
 import { type DepartureWindow, windowDepartures } from "./departure-window.ts";
 import { leastWhole } from "./least-whole.ts";
-import { type Sweep, sweepCell } from "./window.ts";
+import { MinuteCells } from "./minute-cells.ts";
+import type { Sweep } from "./window.ts";
 import type { WindowCell } from "./window-cell.ts";
 import { bestOf, isPossible, least, type WindowBest } from "./window-summary.ts";
 
@@ -37,56 +37,59 @@ export function refineWindow(
   window: DepartureWindow,
   cells: readonly WindowCell[],
 ): RefinedWindow {
-  const found = sweep.prepared.map((prepared) => {
-    const own = cells.filter(({ route }) => route === prepared.route.name);
-    return { route: prepared.route.name, tried: refinedCells(sweep, prepared, window, own) };
-  });
+  return refinedBests(refineRoutes(sweep, window, cells));
+}
+
+/** The bests of all cells tried. */
+export function refinedBests(found: readonly MinuteCells[]): RefinedWindow {
   return {
     best: bestOf(found.flatMap(({ tried }) => tried)),
     routes: found.map(({ route, tried }) => ({ route, best: bestOf(tried) })),
   };
 }
 
-/** The cells of one route and those tried between them. */
-function refinedCells(
+/** The cells of each route, with those tried between them for {@link refineWindow}. */
+export function refineRoutes(
   sweep: Sweep,
-  prepared: PreparedRoute,
   window: DepartureWindow,
   cells: readonly WindowCell[],
-): WindowCell[] {
-  // Where the window names no speeds, a cell's speed is the one found for its own departure.
-  const triedSpeed = ({ speed_m_s }: WindowCell) => (window.speeds_m_s === null ? null : speed_m_s);
-  const tried = new Map(cells.map((cell) => [`${cell.departure} ${triedSpeed(cell)}`, cell]));
-  const at = (minute: number, like: WindowCell): WindowCell => {
-    const speed = triedSpeed(like);
-    const key = `${new Date(minute * MINUTE).toISOString()} ${speed}`;
-    const known = tried.get(key) ?? sweepCell(sweep, prepared, minute * MINUTE, speed);
-    tried.set(key, known);
-    return known;
-  };
-  const series = seriesOf(cells, triedSpeed);
+): MinuteCells[] {
+  return sweep.prepared.map((prepared) => {
+    const own = cells.filter(({ route }) => route === prepared.route.name);
+    const minutes = new MinuteCells(sweep, prepared, window, own);
+    refineRoute(minutes, window);
+    return minutes;
+  });
+}
+
+function refineRoute(minutes: MinuteCells, window: DepartureWindow): void {
+  const series = seriesOf(minutes);
   for (const figure of [passage, use]) {
-    for (const valley of valleys(series, figure)) {
-      const departure = Date.parse(valley.departure);
-      const { low, high } = around(departure, window);
-      if (low <= high) leastWhole((minute) => figure(at(minute, valley)), low, departure / MINUTE, high);
-    }
+    for (const valley of valleys(series, figure))
+      searchAround(valley, window, (minute) => figure(minutes.at(minute, valley)));
   }
-  narrowLatest(cells, window, at);
-  return [...tried.values()];
+  narrowLatest(minutes.cells, window, minutes, isPossible);
+}
+
+/** Searches the whole minutes around a departure of a window, less than a step away, for a figure's least. */
+export function searchAround(
+  { departure }: WindowCell,
+  window: DepartureWindow,
+  figure: (minute: number) => number,
+): void {
+  const { low, high } = around(Date.parse(departure), window);
+  if (low <= high) leastWhole(figure, low, Date.parse(departure) / MINUTE, high);
 }
 
 const passage = (cell: WindowCell): number => (isPossible(cell) ? (cell.passage_s ?? Infinity) : Infinity);
 const use = (cell: WindowCell): number => (isPossible(cell) ? (cell.use ?? Infinity) : Infinity);
 
-function seriesOf(
-  cells: readonly WindowCell[],
-  triedSpeed: (cell: WindowCell) => number | null,
-): WindowCell[][] {
-  const speeds = [...new Set(cells.map(triedSpeed))];
+function seriesOf(minutes: MinuteCells): WindowCell[][] {
+  const { cells } = minutes;
+  const speeds = [...new Set(cells.map((cell) => minutes.triedSpeed(cell)))];
   return speeds.map((speed) =>
     cells
-      .filter((cell) => triedSpeed(cell) === speed)
+      .filter((cell) => minutes.triedSpeed(cell) === speed)
       .sort((a, b) => Date.parse(a.departure) - Date.parse(b.departure)),
   );
 }
@@ -119,26 +122,27 @@ function around(departure: number, { from, to, every_s }: DepartureWindow): { lo
 }
 
 /** Halves the step between the latest departure that can be done and the next, at every speed that reaches it. */
-function narrowLatest(
+export function narrowLatest(
   cells: readonly WindowCell[],
   window: DepartureWindow,
-  at: (minute: number, like: WindowCell) => WindowCell,
+  minutes: MinuteCells,
+  canBeDone: (cell: WindowCell) => boolean,
 ): void {
   const latest = least(
-    cells.filter(isPossible),
+    cells.filter(canBeDone),
     (cell) => -Date.parse(cell.departure),
     () => 0,
   );
   const departures = windowDepartures(window);
   if (latest === null || Date.parse(latest.departure) === departures[departures.length - 1]) return;
   for (const cell of cells) {
-    if (!isPossible(cell) || cell.departure !== latest.departure) continue;
+    if (cell.departure !== latest.departure || !canBeDone(cell)) continue;
     const departure = Date.parse(cell.departure);
     let open = Math.floor(departure / MINUTE);
     let shut = Math.ceil((departure + 1000 * window.every_s) / MINUTE);
     while (shut - open > 1) {
       const middle = Math.floor((open + shut) / 2);
-      if (isPossible(at(middle, cell))) open = middle;
+      if (canBeDone(minutes.at(middle, cell))) open = middle;
       else shut = middle;
     }
   }

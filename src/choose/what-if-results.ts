@@ -104,7 +104,23 @@ export function isOfVariant({ leg, message }: Finding): boolean {
 }
 
 function worstVariant(route: RouteEstimate, variants: readonly Variant[]): Finding | null {
-  const worse = variants.filter(({ status }) => RANK[status] > RANK[route.status]);
+  const deciding = decidingVariant(route.status, variants);
+  if (deciding === null || deciding.variant.worst === null) return null;
+  return routeFinding(deciding.variant.worst.code, variantText(deciding));
+}
+
+/** The variant that decides, and how many others are as bad. */
+export interface DecidingVariant<Kind extends Variant = Variant> {
+  readonly variant: Kind;
+  readonly others: number;
+}
+
+/** The worst of the variants that are worse than the status of the route itself; `null` where none is. */
+export function decidingVariant<Kind extends Variant>(
+  own: RouteStatus,
+  variants: readonly Kind[],
+): DecidingVariant<Kind> | null {
+  const worse = variants.filter(({ status }) => RANK[status] > RANK[own]);
   const status = worse.reduce<RouteStatus>(
     (so, each) => (RANK[each.status] > RANK[so] ? each.status : so),
     "clear",
@@ -112,11 +128,14 @@ function worstVariant(route: RouteEstimate, variants: readonly Variant[]): Findi
   const worst = worse.filter((each) => each.status === status);
   // Of equals the one that does not arrive, or else arrives with the least.
   const left = ({ remaining }: Variant) => remaining ?? Number.NEGATIVE_INFINITY;
-  const first = worst.reduce<Variant | null>(
+  const first = worst.reduce<Kind | null>(
     (so, each) => (so === null || left(each) < left(so) ? each : so),
     null,
   );
-  if (first === null || first.worst === null) return null;
-  const others = worst.length === 1 ? "" : ` (and ${worst.length - 1} more)`;
-  return routeFinding(first.worst.code, `${first.label}${others}: ${first.worst.message}`);
+  return first === null ? null : { variant: first, others: worst.length - 1 };
+}
+
+/** `what if Gale (and 2 more): the store runs empty …` */
+export function variantText({ variant, others }: DecidingVariant): string {
+  return `${variant.label}${others === 0 ? "" : ` (and ${others} more)`}: ${variant.worst?.message ?? ""}`;
 }

@@ -83,14 +83,17 @@ export function isPossible({ status }: WindowCell): boolean {
 /** The best of cells by time, by use and by latest departure. */
 export function bestOf(cells: readonly WindowCell[]): WindowBest {
   const possible = cells.filter(isPossible);
-  const latest = least(possible, (cell) => -Date.parse(cell.departure), passage);
+  const latest = least(possible, ...RANKS.latest);
   return {
-    time: least(possible, passage, (cell) => Date.parse(cell.departure)),
-    use: least(possible, use, passage),
+    time: least(possible, ...RANKS.time),
+    use: least(possible, ...RANKS.use),
     latest,
-    closedBy: latest === null ? null : nextAfter(cells, latest),
+    closedBy: latest === null ? null : (nextAfter(cells, latest)?.worst ?? null),
   };
 }
+
+/** What a departure may be the best by. */
+export type BestBy = "time" | "use" | "latest";
 
 /*
  * Figures are ranked to the millisecond and to ten digits, so that in a steady field rounding does not choose the departure.
@@ -106,6 +109,13 @@ function use({ use: spent }: WindowCell): number {
 
 type Figure = (cell: WindowCell) => number;
 
+/** By what cells are ranked, the least first, and then among equals. */
+export const RANKS: Readonly<Record<BestBy, readonly [Figure, Figure]>> = {
+  time: [passage, (cell) => Date.parse(cell.departure)],
+  use: [use, passage],
+  latest: [(cell) => -Date.parse(cell.departure), passage],
+};
+
 /** The first cell with the least figure, by the second figure among equals. */
 export function least(cells: readonly WindowCell[], of: Figure, then: Figure): WindowCell | null {
   return cells.reduce<WindowCell | null>((best, cell) => {
@@ -115,14 +125,14 @@ export function least(cells: readonly WindowCell[], of: Figure, then: Figure): W
   }, null);
 }
 
-function nextAfter(cells: readonly WindowCell[], latest: WindowCell): CellFinding | null {
+/** The departure after one, at the same route and speed; `null` where the cells end there. */
+export function nextAfter(cells: readonly WindowCell[], latest: WindowCell): WindowCell | null {
   const after = cells.filter(
     ({ route, departure }) => route === latest.route && departure > latest.departure,
   );
   // Where each departure has a speed found for it, hardly any two are at the same.
   const same = after.filter(({ speed_m_s }) => speed_m_s === latest.speed_m_s);
-  const next = least(same.length > 0 ? same : after, (cell) => Date.parse(cell.departure), passage);
-  return next?.worst ?? null;
+  return least(same.length > 0 ? same : after, (cell) => Date.parse(cell.departure), passage);
 }
 
 function refusals(cells: readonly WindowCell[]): Refusal[] {

@@ -1,14 +1,17 @@
+import { CellTrials } from "../choose/cell-trials.ts";
 import type { DepartureWindow } from "../choose/departure-window.ts";
 import { type InTime, latestInTime } from "../choose/in-time.ts";
-import { type RefinedWindow, refineWindow } from "../choose/refine.ts";
+import { type RefinedWindow, refinedBests, refineRoutes } from "../choose/refine.ts";
 import { type RoutePaces, routePaces } from "../choose/route-paces.ts";
+import { runSteps } from "../choose/steps.ts";
+import { type SureWindow, sureWindow } from "../choose/sure-window.ts";
 import { makeSweep, windowCells } from "../choose/window.ts";
 import type { WindowCell } from "../choose/window-cell.ts";
 import { summariseWindow, type WindowSummary } from "../choose/window-summary.ts";
 import { InputError } from "../errors.ts";
 import { type EstimateInput, prepareRoutes } from "../estimate/estimate.ts";
 import { parseQuantity } from "../units.ts";
-import { checkPlan, type PlanRequest } from "./estimate-plan.ts";
+import { checkPlan, type PlanChecked, type PlanRequest } from "./estimate-plan.ts";
 import type { Plan } from "./plan.ts";
 import { parseTime } from "./time.ts";
 import { toldOfFile } from "./told-of-file.ts";
@@ -40,6 +43,8 @@ export interface WindowAnswer {
   readonly inTime: InTime | null;
   /** The choice of pace per route; `null` unless the bests are refined, the window names speeds and the pace holds a through-speed. */
   readonly paces: readonly RoutePaces[] | null;
+  /** The bests put to the test with the plan's members, what-ifs and stated errors; `null` where it names none. */
+  readonly sure: SureWindow | null;
 }
 
 /**
@@ -62,26 +67,32 @@ export interface WindowAnswer {
  * answer.cells.map(({ departure }) => departure.slice(11, 16)) // → ["06:00", "08:00", "10:00", "12:00"]
  */
 export async function windowPlan(text: string, request: WindowRequest): Promise<WindowAnswer> {
-  const { plan, input } = await checkPlan(text, request);
-  const window = windowAsked(plan.window, request);
-  return toldOfFile(request.file, () => answerWindow(plan, input, window, request.refine === true));
+  const checked = await checkPlan(text, request);
+  const window = windowAsked(checked.plan.window, request);
+  return toldOfFile(request.file, () => answerWindow(checked, window, request.refine === true));
 }
 
 function answerWindow(
-  plan: Plan,
-  input: EstimateInput,
+  { plan, input, members }: PlanChecked,
   window: DepartureWindow,
   refine: boolean,
 ): WindowAnswer {
   const sweep = makeSweep(prepareRoutes(input), input, plan.arrive ?? null);
   const inTime = latestInTime(sweep, window);
   const cells = [...windowCells(sweep, window)];
-  const refined = refine ? refineWindow(sweep, window, cells) : null;
+  const minutes = refine ? refineRoutes(sweep, window, cells) : null;
   const summary = summariseWindow(cells);
-  const isPaceOpen = refined !== null && window.speeds_m_s !== null && plan.pace.hold === "through-speed";
+  const isPaceOpen = minutes !== null && window.speeds_m_s !== null && plan.pace.hold === "through-speed";
   const hasRange = Number.isFinite(plan.craft.speeds?.max ?? plan.craft.power.max);
   const paces = isPaceOpen && hasRange ? routePaces(sweep, summary) : null;
-  return { plan, input, window, cells, summary, refined, inTime, paces };
+  const { whatIfs = [], errors = [] } = plan;
+  const asked = { whatIfs, errors, members };
+  const sure = CellTrials.has(asked)
+    ? runSteps(sureWindow(sweep, new CellTrials(sweep, asked), { window, cells, minutes, inTime, paces }))
+    : null;
+  // Last, since what is tried to be sure counts too.
+  const refined = minutes && refinedBests(minutes);
+  return { plan, input, window, cells, summary, refined, inTime, paces, sure };
 }
 
 function windowAsked(

@@ -1,0 +1,188 @@
+import type { Conditions } from "../estimate/conditions.ts";
+import { estimateRoute } from "../estimate/estimate-route.ts";
+import { momentText } from "../estimate/finding-text.ts";
+import type { PreparedRoute } from "../estimate/prepare.ts";
+import { membersHeld } from "./ensemble.ts";
+import { errorSpread } from "./error-spread.ts";
+import type { Steps } from "./steps.ts";
+import type { Sure } from "./sure.ts";
+import { type Trial, type Tried, trialsOf, tryOne } from "./trial.ts";
+import type { UncertaintyAsked } from "./uncertain-estimate.ts";
+import { decidingVariant, variantText } from "./what-if-results.ts";
+import type { Sweep } from "./window.ts";
+import { type CellFinding, paceAt, type WindowCell } from "./window-cell.ts";
+
+/** What is known of one cell so far. */
+interface Known {
+  readonly route: number;
+  readonly base: Conditions;
+  readonly tried: Map<Trial, Tried>;
+  /** `undefined` while it is not worked out. */
+  reserveHolds?: number | null;
+}
+
+/**
+ * Puts cells of a sweep to the test with everything that a plan names: every member of an ensemble, every what-if and the
+ * stated forecast error, each a true estimate at the cell's departure and at the speed at which it was estimated.
+ *
+ * What is worked out for a cell is kept. Whether it holds is known at its first break, and what broke the last cell is tried
+ * first, so that going down a ranking costs little more than one estimate a cell that is passed over, and one a member and what-if where
+ * it ends. The changed fields of the what-ifs are
+ * kept too, cut to the nodes that the routes span.
+ *
+ * @example
+ * const craft = readCraft(
+ *   `{ "name": "Drone", "moves": "air", "power": { "model": "constant", "rate": "1 kW" },
+ *      "store": { "capacity": "10 kWh" } }`,
+ * );
+ * const waypoint = (name, lon) => (
+ *   { name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const wind = (u) => {
+ *   const slices = [Float64Array.of(u, 0, u, 0, u, 0, u, 0)];
+ *   const axes = { lon: Float64Array.of(-1, 2), lat: Float64Array.of(-1, 1), height: null, times: null };
+ *   const tile = { files: [], ...axes, slices, gusts: null, masks: [null], global: false, beyond: "stop" };
+ *   return { role: "wind", tiles: [tile], outside: "stop" };
+ * };
+ * const routes = [{ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }];
+ * const pace = { hold: "through-speed", speed_m_s: 10 };
+ * const input = { title: "", departure: 0, craft, pace, reserve: null, fields: [wind(0)], routes, land: null };
+ * const sweep = makeSweep(prepareRoutes(input), input);
+ * const members = [0, -9].map((u, member) => ({ member, fields: [wind(u)] }));
+ * const trials = new CellTrials(sweep, { whatIfs: [], errors: [], members });
+ * runSteps(trials.sure(sweepCell(sweep, sweep.prepared[0], 0, null))).decidedBy.member // → 1
+ */
+export class CellTrials {
+  readonly #sweep: Sweep;
+  readonly #asked: UncertaintyAsked;
+  /** What broke the last cell first. */
+  #trials: Trial[];
+  readonly #inOrder: readonly Trial[];
+  readonly #known = new Map<string, Known>();
+
+  constructor(sweep: Sweep, asked: UncertaintyAsked) {
+    this.#sweep = sweep;
+    this.#asked = asked;
+    this.#inOrder = trialsOf(sweep, asked);
+    this.#trials = [...this.#inOrder];
+  }
+
+  /** Whether a plan names anything to put a cell to the test with. */
+  static has({ members, whatIfs, errors }: UncertaintyAsked): boolean {
+    return members.length + whatIfs.length + errors.length > 0;
+  }
+
+  /** How many members and what-ifs there are. */
+  get counts(): { readonly members: number; readonly whatIfs: number } {
+    return { members: this.#asked.members.length, whatIfs: this.#asked.whatIfs.length };
+  }
+
+  /**
+   * Whether a cell can be done, and in every member and what-if too.
+   *
+   * @param notAfter an arrival to keep in all of them, ms since 1970-01-01T00:00Z
+   */
+  *holds(cell: WindowCell, notAfter: number | null = null): Steps<boolean> {
+    if (cell.status === "stop" || isLate(arrivalOf(cell), notAfter)) return false;
+    const known = this.#knownOf(cell);
+    for (const trial of this.#trials) {
+      const isNew = !known.tried.has(trial);
+      const { status, arrival } = this.#try(known, trial);
+      if (isNew) yield;
+      if (status !== "stop" && !isLate(arrival, notAfter)) continue;
+      this.#trials = [trial, ...this.#trials.filter((other) => other !== trial)];
+      return false;
+    }
+    return true;
+  }
+
+  /**
+   * All that a cell comes to.
+   *
+   * @param notAfter an arrival to keep, ms since 1970-01-01T00:00Z: a member or what-if that arrives later counts as a stop
+   */
+  *sure(cell: WindowCell, notAfter: number | null = null): Steps<Sure> {
+    const known = this.#knownOf(cell);
+    const tried: Tried[] = [];
+    for (const trial of this.#inOrder) {
+      if (!known.tried.has(trial)) yield;
+      tried.push(keptInTime(this.#try(known, trial), notAfter));
+    }
+    if (known.reserveHolds === undefined) {
+      yield;
+      known.reserveHolds = this.#probability(known);
+    }
+    const deciding = decidingVariant(cell.status, tried);
+    const members = tried.flatMap(({ by, arrival, remaining, reserve }) =>
+      by.member === null ? [] : [{ member: by.member, arrives: arrival !== null, remaining, reserve }],
+    );
+    return {
+      status: deciding?.variant.status ?? cell.status,
+      decidedBy: deciding?.variant.by ?? { member: null, whatIf: null },
+      worst: deciding === null ? cell.worst : deciding.variant.worst,
+      asBad: deciding?.others ?? 0,
+      ensemble: members.length === 0 ? null : membersHeld(members),
+      reserveHolds: known.reserveHolds,
+    };
+  }
+
+  /** What stops a cell, be it the plain estimate or what the plan names beside it, as a finding says it; `null` where nothing does. */
+  *stoppedBy(cell: WindowCell): Steps<CellFinding | null> {
+    if (cell.status === "stop") return cell.worst;
+    const { status, worst, decidedBy, asBad } = yield* this.sure(cell);
+    const trial = this.#inOrder.find(({ by }) => by === decidedBy);
+    if (status !== "stop" || worst === null || trial === undefined) return null;
+    const variant = { label: trial.label, status, remaining: null, worst };
+    return { ...worst, leg: null, at_m: null, message: variantText({ variant, others: asBad }) };
+  }
+
+  #knownOf(cell: WindowCell): Known {
+    const key = JSON.stringify([cell.route, cell.departure, cell.speed_m_s]);
+    const before = this.#known.get(key);
+    if (before !== undefined) return before;
+    const { prepared, conditions } = this.#sweep;
+    const route = prepared.findIndex((each) => each.route.name === cell.route);
+    if (route < 0) throw new Error(`no route ${cell.route} in the sweep`);
+    const { pace } = conditions;
+    const { speed_m_s } = cell;
+    const base = {
+      ...conditions,
+      departure: Date.parse(cell.departure),
+      pace: speed_m_s === null ? pace : paceAt(pace, speed_m_s),
+    };
+    const known: Known = { route, base, tried: new Map() };
+    this.#known.set(key, known);
+    return known;
+  }
+
+  #try({ route, base, tried }: Known, trial: Trial): Tried {
+    const before = tried.get(trial);
+    if (before !== undefined) return before;
+    const found = tryOne(trial, route, base, this.#sweep);
+    tried.set(trial, found);
+    return found;
+  }
+
+  #probability({ route, base }: Known): number | null {
+    const { errors } = this.#asked;
+    const prepared = this.#sweep.prepared[route] as PreparedRoute;
+    if (errors.length === 0) return null;
+    return errorSpread(prepared, base, estimateRoute(prepared, base), errors)?.spread.reserveHolds ?? null;
+  }
+}
+
+function arrivalOf({ arrival }: WindowCell): number | null {
+  return arrival === null ? null : Date.parse(arrival);
+}
+
+function isLate(arrival: number | null, notAfter: number | null): boolean {
+  return arrival !== null && notAfter !== null && arrival > notAfter;
+}
+
+/** An arrival after the one to keep is a stop, unless there is a graver one. */
+function keptInTime(tried: Tried, notAfter: number | null): Tried {
+  const { arrival, status } = tried;
+  if (arrival === null || notAfter === null || status === "stop" || !isLate(arrival, notAfter)) return tried;
+  const message = `it arrives ${momentText(arrival)}, after ${momentText(notAfter)}`;
+  const worst = { code: "arrival-missed", severity: "stop", leg: null, at_m: null, message } as const;
+  return { ...tried, status: "stop", worst };
+}
