@@ -6,6 +6,7 @@ import { geodesicSampling } from "./geodesic-sampling.ts";
 import { interpolation } from "./interpolation.ts";
 import { makeOcean, type Ocean } from "./ocean.ts";
 import { pageSize } from "./page-size.ts";
+import { pageWindow } from "./page-window.ts";
 import { type PythonPeer, startPeer } from "./python-peer.ts";
 import { record, verdict } from "./record.ts";
 import { startUp } from "./start-up.ts";
@@ -34,6 +35,7 @@ function theJob() {
 /** Those that start processes come first: while this one is small, it does not count in their peak of memory. */
 const PARTS: Readonly<Record<string, () => Part | Promise<Part>>> = {
   page: () => pageSize(root),
+  window: () => pageWindow(root),
   start: () => startUp(root, folder),
   csv: () => csvReading(folder),
   ensemble: () => ensembleMemory(folder),

@@ -29,7 +29,8 @@ export async function takeTurns(
   return contestants.map(({ name }, index) => summary(name, raw[index] as number[]));
 }
 
-function summary(name: string, raw: number[]): Timing {
+/** The rounds of a contestant as one timing. */
+export function summary(name: string, raw: readonly number[]): Timing {
   const mean = raw.reduce((sum, value) => sum + value, 0) / raw.length;
   const deviation = Math.sqrt(raw.reduce((sum, value) => sum + (value - mean) ** 2, 0) / raw.length);
   return { name, least: Math.min(...raw), mean, deviation, raw };

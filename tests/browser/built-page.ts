@@ -21,12 +21,12 @@ export function buildIfStale(): void {
 }
 
 /** The built files by their path from the page's root, with `/` between folders. */
-export function builtFiles(): Map<string, Buffer> {
-  const files = readdirSync(PAGE, { recursive: true, withFileTypes: true }).filter((entry) => entry.isFile());
+export function builtFiles(page = PAGE): Map<string, Buffer> {
+  const files = readdirSync(page, { recursive: true, withFileTypes: true }).filter((entry) => entry.isFile());
   return new Map(
     files.map(({ parentPath, name }) => {
       const file = join(parentPath, name);
-      return [relative(PAGE, file).split(sep).join("/"), readFileSync(file)];
+      return [relative(page, file).split(sep).join("/"), readFileSync(file)];
     }),
   );
 }

@@ -2,6 +2,7 @@ import { chromium } from "playwright-core";
 import type { TestProject } from "vitest/node";
 import { buildIfStale, builtFiles } from "./built-page.ts";
 import { findBrowser } from "./find-browser.ts";
+import { ARGUMENTS } from "./launch-arguments.ts";
 import { servePage } from "./serve-page.ts";
 
 declare module "vitest" {
@@ -12,18 +13,6 @@ declare module "vitest" {
     pageAddress: string;
   }
 }
-
-const ARGUMENTS = [
-  "--no-sandbox",
-  "--disable-gpu",
-  "--disable-quic",
-  "--no-first-run",
-  "--disable-background-networking",
-  "--disable-component-update",
-  "--disable-sync",
-  // Nothing but the page is within reach, whatever asks for it.
-  "--host-resolver-rules=MAP * ~NOTFOUND, EXCLUDE 127.0.0.1",
-];
 
 /** Starts the browser and serves the page, once for all browser tests. */
 export default async function setUp(project: TestProject): Promise<() => Promise<void>> {
