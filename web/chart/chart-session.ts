@@ -1,6 +1,5 @@
 import { effect, type Signal } from "@preact/signals";
 import * as L from "leaflet";
-import { withinTurn } from "../format/position-text.ts";
 import { shownUnit } from "../format/units.ts";
 import { isTileAddress, letsIn } from "../shell/tile-policy.ts";
 import { nearestSample, placeAtDistance, placeAtTime } from "../state/along-route.ts";
@@ -14,6 +13,7 @@ import { fitClear, roomsBeside, whenBesideChanges } from "./chart-room.ts";
 import { showDecidedLater } from "./decided-later.ts";
 import { turnsToward } from "./longitude.ts";
 import { Marks } from "./marks.ts";
+import { rounded } from "./place-rounding.ts";
 import { RouteLines, shiftFor } from "./route-lines.ts";
 import { drawnRoutes, handlesOf, legMiddles } from "./route-view.ts";
 import { WaypointHandles } from "./waypoint-handles.ts";
@@ -295,13 +295,6 @@ function fitUntilTouched(map: L.Map, fitRoutes: () => void): () => void {
   map.on("resize", fitRoutes);
   for (const gesture of gestures) host.addEventListener(gesture, stop);
   return stop;
-}
-
-/** A position rounded to what a pixel can tell at a zoom, so that plans stay readable. */
-function rounded(lat: number, lon: number, zoom: number): { lat: number; lon: number } {
-  const decimals = Math.min(Math.max(Math.ceil(Math.log10((256 * 2 ** zoom) / 360)), 2), 6);
-  const round = (value: number): number => Number(value.toFixed(decimals));
-  return { lat: round(Math.min(Math.max(lat, -90), 90)), lon: round(withinTurn(lon)) };
 }
 
 function onceAtATime(run: () => Promise<void>): () => void {

@@ -1,16 +1,17 @@
 import { effect } from "@preact/signals";
 import * as L from "leaflet";
-import { withinTurn } from "../format/position-text.ts";
-import { readPosition } from "../format/read-position.ts";
 import { placeAtDistance } from "../state/along-route.ts";
 import { addAlternate } from "../state/decide-edits.ts";
 import type { PageState } from "../state/page-state.ts";
 import { noReturns } from "../turn-back/turn-back-places.ts";
+import { showAlternates } from "./alternate-handles.ts";
 import { turnsToward } from "./longitude.ts";
+import { rounded } from "./place-rounding.ts";
 import { textElement } from "./route-lines.ts";
+import { signElement, type TurnSign } from "./turn-sign.ts";
 
 interface Mark {
-  readonly kind: "alternate" | "no-return" | "equal-time";
+  readonly kind: Exclude<TurnSign, "alternate">;
   readonly lat: number;
   readonly lon: number;
   readonly text: string;
@@ -21,9 +22,9 @@ export function showTurnBack(map: L.Map, page: PageState): () => void {
   const group = L.layerGroup().addTo(map);
   const draw = (): void => {
     group.clearLayers();
-    for (const mark of [...alternateMarks(page), ...placeMarks(page)]) drawMark(map, group, mark);
+    for (const mark of placeMarks(page)) drawMark(map, group, mark);
   };
-  const stops = [effect(draw), addByClick(map, page)];
+  const stops = [effect(draw), addByClick(map, page), showAlternates(map, page)];
   map.on("moveend", draw);
   return () => {
     for (const stop of stops) stop();
@@ -31,18 +32,7 @@ export function showTurnBack(map: L.Map, page: PageState): () => void {
   };
 }
 
-function alternateMarks({ store }: PageState): Mark[] {
-  return (store.plan.value.alternates ?? []).flatMap(({ name, lat, lon }): Mark[] => {
-    try {
-      return [{ kind: "alternate", ...readPosition(lat, lon), text: name }];
-    } catch {
-      // The plan's fault is said elsewhere.
-      return [];
-    }
-  });
-}
-
-/** Those of the chosen route. */
+/** Of the chosen route. */
 function placeMarks({ routes, answers, store }: PageState): Mark[] {
   const at = store.selection.value.route;
   const turn = routes.value[at]?.turnBack;
@@ -65,48 +55,25 @@ function placeMarks({ routes, answers, store }: PageState): Mark[] {
 
 function drawMark(map: L.Map, group: L.LayerGroup, { kind, lat, lon, text }: Mark): void {
   const shift = turnsToward(lon, map.getCenter().lng);
-  const icon = L.divIcon({ className: `turn-mark ${kind}`, iconSize: [18, 18], html: svgOf(kind) });
+  const icon = L.divIcon({ className: `turn-mark ${kind}`, iconSize: [18, 18], html: signElement(kind) });
   const marker = L.marker([lat, lon + shift], { icon, keyboard: false, interactive: true }).addTo(group);
-  marker.bindTooltip(textElement(text), {
-    permanent: kind === "alternate",
-    direction: "right",
-    className: kind === "alternate" ? "route-tip alternate-name" : "route-tip",
-  });
+  marker.bindTooltip(textElement(text), { direction: "right", className: "route-tip" });
 }
 
-const SHAPES: Record<Mark["kind"], string> = {
-  alternate: "M3 3H15V15H3ZM6 9H12M9 6V12",
-  "no-return": "M9 1V17M9 1H1L9 8Z",
-  "equal-time": "M9 2L16 9L9 16L2 9Z",
-};
-
-const SVG = "http://www.w3.org/2000/svg";
-
-function svgOf(kind: Mark["kind"]): HTMLElement {
-  const host = document.createElement("span");
-  const svg = document.createElementNS(SVG, "svg");
-  svg.setAttribute("viewBox", "0 0 18 18");
-  for (const part of ["casing", "sign"]) {
-    const path = document.createElementNS(SVG, "path");
-    path.setAttribute("class", part);
-    path.setAttribute("d", SHAPES[kind]);
-    svg.append(path);
-  }
-  host.append(svg);
-  return host;
-}
-
+/** A click sets an alternate where that was asked for; on the chart itself the Enter key does, at its middle. */
 function addByClick(map: L.Map, { store, desk, view }: PageState): () => void {
-  const add = ({ latlng: { lat, lng } }: L.LeafletMouseEvent): void => {
+  const add = ({ lat, lng }: L.LatLng): void => {
     if (!desk.placing.value) return;
     desk.placing.value = false;
     if (window.innerWidth < 700) view.pane.value = "decide";
-    const round = (degrees: number): number => Number(degrees.toFixed(4));
-    store.edit("Add alternate", (plan) => addAlternate(plan, round(lat), round(withinTurn(lng))));
+    const place = rounded(lat, lng, map.getZoom());
+    store.edit("Add alternate", (plan) => addAlternate(plan, place.lat, place.lon));
   };
-  map.on("click", add);
+  const onClick = ({ latlng }: L.LeafletMouseEvent): void => add(latlng);
+  map.on("click", onClick);
   const host = map.getContainer();
   const onKey = (event: KeyboardEvent): void => {
+    if (event.target === host && event.key === "Enter") add(map.getCenter());
     if (event.key === "Escape") desk.placing.value = false;
   };
   window.addEventListener("keydown", onKey);
@@ -116,7 +83,7 @@ function addByClick(map: L.Map, { store, desk, view }: PageState): () => void {
     host.classList.toggle("placing", desk.placing.value);
   });
   return () => {
-    map.off("click", add);
+    map.off("click", onClick);
     window.removeEventListener("keydown", onKey);
     stop();
   };

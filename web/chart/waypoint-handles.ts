@@ -1,5 +1,6 @@
 import * as L from "leaflet";
 import { latText, lonText } from "../format/position-text.ts";
+import { arrowMove } from "./arrow-move.ts";
 
 /** A waypoint of the chosen route, longitude continuous along the route. */
 export interface Handle {
@@ -22,10 +23,6 @@ export interface HandleGestures {
   insert(before: number, lat: number, lon: number): void;
   remove(index: number): void;
 }
-
-/** px that one press of an arrow key moves a waypoint, and with Shift. */
-const KEY_STEP = 10;
-const KEY_STEP_FINE = 1;
 
 /** Handles on the chosen route's waypoints and on the middles of its legs, for mouse, touch and keyboard. */
 export class WaypointHandles {
@@ -117,14 +114,7 @@ export class WaypointHandles {
   }
 
   private onKey(event: KeyboardEvent, marker: L.Marker, index: number): void {
-    const step = event.shiftKey ? KEY_STEP_FINE : KEY_STEP;
-    const moves: Record<string, L.PointTuple> = {
-      ArrowLeft: [-step, 0],
-      ArrowRight: [step, 0],
-      ArrowUp: [0, -step],
-      ArrowDown: [0, step],
-    };
-    const move = moves[event.key];
+    const move = arrowMove(event);
     if (move) {
       const place = this.map.latLngToContainerPoint(marker.getLatLng()).add(move);
       this.moveTo(index, this.map.containerPointToLatLng(place), false);

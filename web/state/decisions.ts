@@ -26,6 +26,17 @@ export function wantsDecisions(
   return ensemble || alternates.length + whatIf.length > 0 || fields.some(({ error }) => error !== undefined);
 }
 
+/**
+ * Whether the estimates of two plans are the same: alternates may differ, since no route's own figures rest on them. While one is
+ * dragged, what was decided a moment before so stays in view.
+ */
+export function estimatesAlike(a: PlanDocument, b: PlanDocument): boolean {
+  const { alternates: _a, ...mine } = a;
+  const { alternates: _b, ...other } = b;
+  const keys = new Set([...Object.keys(mine), ...Object.keys(other)]);
+  return [...keys].every((key) => Reflect.get(mine, key) === Reflect.get(other, key));
+}
+
 export function createDecisions(
   decide: (plan: PlanDocument, turnBack: boolean) => Promise<Answered<DecideAnswer>>,
 ): Decisions {

@@ -2,7 +2,7 @@ import { computed, type ReadonlySignal, type Signal, signal } from "@preact/sign
 import type { DecidedRoute, FieldInspection } from "../core.ts";
 import type { Worker } from "../worker/protocol.ts";
 import { type Answers, createAnswers } from "./answers.ts";
-import { createDecisions, type Decisions } from "./decisions.ts";
+import { createDecisions, type Decisions, estimatesAlike } from "./decisions.ts";
 import { departingAt } from "./departing-at.ts";
 import { createDesk, type Desk } from "./desk.ts";
 import { createPageView, type PageView } from "./page-view.ts";
@@ -84,7 +84,7 @@ export function createPageState(
     routes: computed(() => {
       const { routes } = answers.answer.value;
       const decided = decisions.decided.value;
-      if (decided === null || decided.plan !== shown.value) return routes;
+      if (decided === null || !estimatesAlike(decided.plan, shown.value)) return routes;
       return routes.map((route, at) => (route === null ? null : (decided.routes[at] ?? route)));
     }),
     asking: signal<FieldQuestion | null>(null),

@@ -9,8 +9,14 @@ const KEYS: readonly (readonly [keyof AlternateDocument, string])[] = [
   ["lon", "Longitude"],
 ];
 
-/** The plan's alternates, typed or set on the chart. */
-export function AlternateList({ page }: { readonly page: PageState }) {
+interface AlternateListProps {
+  readonly page: PageState;
+  /** Whether what is shown of turning back is of the alternates as they were a moment before. */
+  readonly isBehind: boolean;
+}
+
+/** The plan's alternates, typed or set on the chart, where they can be dragged. */
+export function AlternateList({ page, isBehind }: AlternateListProps) {
   const { store, desk } = page;
   const alternates = store.plan.value.alternates ?? [];
   return (
@@ -47,11 +53,14 @@ export function AlternateList({ page }: { readonly page: PageState }) {
             if (desk.placing.value && window.innerWidth < 700) page.view.pane.value = "chart";
           }}
         >
-          {desk.placing.value ? "Click the chart to set it…" : "Set an alternate on the chart"}
+          {desk.placing.value
+            ? "Click the chart to set it, or press Enter on it…"
+            : "Set an alternate on the chart"}
         </button>
         <button type="button" onClick={() => addNear(page)}>
           Type an alternate
         </button>
+        {isBehind && <span class="quiet">Working it out again…</span>}
       </div>
     </section>
   );

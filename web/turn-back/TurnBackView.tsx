@@ -11,9 +11,10 @@ export function TurnBackView({ page }: { readonly page: PageState }) {
   const routes = page.routes.value;
   const { route: chosen } = page.store.selection.value;
   const turn = routes[chosen]?.turnBack;
+  const isBehind = turn !== undefined && page.decisions.decided.value?.plan !== page.shown.value;
   return (
     <div class="turn-back-view">
-      <AlternateList page={page} />
+      <AlternateList page={page} isBehind={isBehind} />
       {turn !== undefined && (
         <p class="reach-legend">
           Strips under the chosen ribbon, from the top:{" "}
