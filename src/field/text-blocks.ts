@@ -1,4 +1,5 @@
 import { InputError } from "../errors.ts";
+import { fileKind } from "./file-kind.ts";
 
 /**
  * Bytes worked on at once. The cells of a block of 64 KiB fit the processor's caches: blocks of 256 KiB read a fifth slower.
@@ -23,7 +24,7 @@ export interface TextBlock {
  *
  * @param linesTaken lines in the blocks before, asked only when there is a fault to place
  *
- * Errors: bytes that are not UTF-8, a line longer than a block.
+ * Errors: a file of another kind, bytes that are not UTF-8, a line longer than a block.
  */
 export async function* textBlocks(
   pieces: AsyncIterable<Uint8Array>,
@@ -72,6 +73,7 @@ class BlockCutter {
   }
 
   cut(): TextBlock {
+    this.refuseOtherKind();
     const end = this.buffer.lastIndexOf(this.settledLineEnd()) + 1;
     if (end === 0) {
       throw new InputError(`a line is at most ${BLOCK_BYTES} bytes long; found a longer one`, this.place(0));
@@ -83,9 +85,20 @@ class BlockCutter {
   }
 
   rest(): TextBlock {
+    this.refuseOtherKind();
     const newline = this.settledLineEnd() === LINE_FEED ? "\n" : "\r";
     const block = this.decode(this.length);
     return block.text.endsWith(newline) ? block : { ...block, text: block.text + newline };
+  }
+
+  private refuseOtherKind(): void {
+    if (this.bytes > 0) return;
+    const kind = fileKind(this.buffer.subarray(0, this.length));
+    if (kind === null) return;
+    const { name, remedy } = kind;
+    throw new InputError(`a field is a CSV file; found what looks like ${name}: ${remedy}`, {
+      file: this.file,
+    });
   }
 
   /** LF, alone or after CR, unless the first block knows only CR. */

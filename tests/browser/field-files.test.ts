@@ -90,6 +90,25 @@ test("a file that is neither plan, craft nor field is told in one sentence", asy
   expect(await notice.textContent()).toContain("holiday.jpg");
 });
 
+test.each([
+  ["winds.grb", "GRIB\u0000\u0000\u0000\u0002", "GRIB"],
+  ["winds.csv", "CDF\u0001\u0000\u0000\u0000\u0000", "NetCDF"],
+])(
+  "the file %s is told by its first bytes for what it is, and nothing is asked",
+  async (name, bytes, kind) => {
+    const { page } = await visit();
+    const before = await page.locator(".plan-item.fields").textContent();
+    await drop(page, name, bytes);
+    const notice = page.locator(".notice[role=alert]");
+    await notice.waitFor();
+    expect(await notice.textContent()).toContain(
+      `${name}: a field is a CSV file; found what looks like ${kind}: export it as CSV`,
+    );
+    expect(await page.getByRole("dialog").count()).toBe(0);
+    expect(await page.locator(".plan-item.fields").textContent()).toBe(before);
+  },
+);
+
 test("a field file of 200 MB is read while the page goes on answering", async () => {
   const { page } = await visit();
   await watchGaps(page);

@@ -331,4 +331,14 @@ describe("legwork inspect", () => {
     expect({ status, out }).toEqual({ status: 2, out: "" });
     expect(err).toMatch(/^legwork: [^\n]*not-a-field\.csv[^\n]*\n$/);
   });
+
+  it("says what a file that is no text looks like", () => {
+    const file = join(folder, "winds.grb");
+    writeFileSync(file, "GRIB\0\0\0\u0002");
+    const { status, out, err } = legwork.run(["inspect", file]);
+    expect({ status, out }).toEqual({ status: 2, out: "" });
+    expect(err).toMatch(
+      /^legwork: [^\n]*winds\.grb: [^\n]*; found what looks like GRIB: export it as CSV[^\n]*\n$/,
+    );
+  });
 });

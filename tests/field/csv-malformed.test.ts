@@ -73,7 +73,9 @@ describe("a file that is not a table is told so", () => {
 
   test("text in UTF-16", async () => {
     const bytes = new Uint8Array([0xff, 0xfe, ...[...HEAD].flatMap((letter) => [letter.charCodeAt(0), 0])]);
-    expect(await messageOf(bytes)).toBe("winds.csv, line 1: the text is UTF-8; found bytes that are not");
+    expect(await messageOf(bytes)).toBe(
+      "winds.csv: a field is a CSV file; found what looks like text in UTF-16: save it as UTF-8",
+    );
   });
 
   test("one endless line", async () => {

@@ -144,7 +144,15 @@ describe("the worker's fields", () => {
       columns: { time: "zeit", lat: "breite", lon: "laenge" },
     });
     expect(mapped.fault).toBeNull();
+    expect(mapped.isOtherKind).toBe(false);
     expect(mapped.used).toEqual(["zeit", "breite", "laenge", "u", "v"]);
+  });
+
+  test("of another kind show no rows, but say what they look like", async () => {
+    const content = new Blob(["GRIB", Uint8Array.of(0, 0, 0, 2)]);
+    const found = await previewField(content, { role: "wind", file: "a.csv" });
+    expect([found.header, found.rows, found.isOtherKind]).toEqual([[], [], true]);
+    expect(found.fault).toMatch(/^a\.csv: a field is a CSV file; found what looks like GRIB: [^.;]/);
   });
 });
 

@@ -27,9 +27,13 @@ async function takeFile(page: PageState, file: File): Promise<void> {
   if (name.endsWith(".zip")) await takeArchive(page, file);
   else if (name.endsWith(".gpx") || name.endsWith(".geojson")) await takeRoutes(page, file);
   else if (name.endsWith(".json")) await takeJson(page, file);
-  else if (/\.(csv|txt|tsv)$/.test(name)) await takeTable(page, file);
-  else
-    page.view.notice.value = `${file.name}: opened are plans, craft, fields (CSV), routes (GPX, GeoJSON, CSV) and archives`;
+  else {
+    const { header, fault, isOtherKind } = await page.engine.preview(file, { role: "wind", file: file.name });
+    if (isOtherKind) page.view.notice.value = fault;
+    else if (/\.(csv|txt|tsv)$/.test(name)) await takeTable(page, file, header);
+    else
+      page.view.notice.value = `${file.name}: opened are plans, craft, fields (CSV), routes (GPX, GeoJSON, CSV) and archives`;
+  }
 }
 
 async function takeArchive(page: PageState, file: File): Promise<void> {
@@ -57,15 +61,14 @@ async function takeRoutes(page: PageState, file: File): Promise<void> {
 }
 
 /** A table is a field of the plan, or reads as a field or as waypoints; else the user says what it is. */
-async function takeTable(page: PageState, file: File): Promise<void> {
+async function takeTable(page: PageState, file: File, header: readonly string[]): Promise<void> {
   const isKnown = (page.store.plan.value.fields ?? []).some(({ file: name }) => lastPart(name) === file.name);
-  if (!isKnown && (await isWaypointTable(page, file))) await takeRoutes(page, file);
+  if (!isKnown && isWaypointTable(header)) await takeRoutes(page, file);
   else await takeField(page, file);
 }
 
 /** Whether a table has places but nothing that a field has beside them. */
-async function isWaypointTable({ engine }: PageState, file: File): Promise<boolean> {
-  const { header } = await engine.preview(file, { role: "wind", file: file.name });
+function isWaypointTable(header: readonly string[]): boolean {
   const words = header.map((name) => name.replace(/\[.*/, "").trim().toLowerCase());
   const has = (...names: string[]): boolean => names.some((name) => words.includes(name));
   const isPlace = has("lat", "latitude") && has("lon", "long", "lng", "longitude");

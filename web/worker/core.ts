@@ -7,6 +7,7 @@ export { type LandFinder, landFinder } from "../../src/coast/land-finder.ts";
 export { unrolledRing } from "../../src/coast/ring.ts";
 export { type StillPoint, stillCurve, stillPoint } from "../../src/craft/still-curve.ts";
 export { currentSet, windFrom } from "../../src/craft/triangle.ts";
+export { fileKind } from "../../src/field/file-kind.ts";
 export {
   LATTICE_COVERED,
   LATTICE_FILLED,

@@ -1,6 +1,6 @@
 import type { FieldDocument } from "../state/plan-document.ts";
 import { InputError } from "./core.ts";
-import { inspectField } from "./field-reading.ts";
+import { fileKind, inspectField } from "./field-reading.ts";
 import { pieces } from "./file-shelf.ts";
 import type { FieldPreview } from "./protocol.ts";
 
@@ -10,9 +10,10 @@ const SHOWN_ROWS = 6;
 /** Reads the head of a file with a mapping of columns: what it would be, or why it can't be read. */
 export async function previewField(content: Blob, field: FieldDocument): Promise<FieldPreview> {
   const head = await wholeLines(content);
-  const rows = tableOf(await head.text());
+  const isOtherKind = fileKind(new Uint8Array(await head.arrayBuffer())) !== null;
+  const rows = isOtherKind ? [] : tableOf(await head.text());
   const [header = []] = rows;
-  const shown = { header, rows: rows.slice(1, SHOWN_ROWS + 1) };
+  const shown = { header, rows: rows.slice(1, SHOWN_ROWS + 1), isOtherKind };
   try {
     const { ignoredColumns } = await inspectField(() => pieces(head), {
       file: field.file,

@@ -85,6 +85,8 @@ export interface FieldPreview {
   readonly used: readonly string[];
   /** Why it can't be read as it stands; `null` where it can. */
   readonly fault: string | null;
+  /** Whether its first bytes are those of a file that is no table: then no mapping of columns helps. */
+  readonly isOtherKind: boolean;
 }
 
 /** Places on a regular lattice of the geography, so that barbs stay where they are while the chart moves. */
