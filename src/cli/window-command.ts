@@ -26,7 +26,7 @@ export interface WindowOptions {
   readonly out?: string;
 }
 
-/** Compares the departures of a plan's window and writes them; 1 where none can be done. */
+/** Compares the departures of a plan's window and writes them; 1 where none can be done, or holds in all that the plan names. */
 export async function windowCommand(file: string, options: WindowOptions): Promise<number> {
   const { from, to, every, speeds, route, refine = false, arriveBy, format, units, out } = options;
   noteUnits(units, format);
@@ -44,15 +44,16 @@ export async function windowCommand(file: string, options: WindowOptions): Promi
     ...(arriveBy === undefined ? {} : { arriveBy }),
     ...(route === undefined ? {} : { routes: route }),
   });
-  const { plan, input, window, cells, summary, refined, inTime, paces } = answer;
+  const { plan, input, window, cells, summary, refined, inTime, paces, sure } = answer;
   const { title, craft, pace, arrive = null } = plan;
   const fields = input.fields.map(fieldSummary);
-  const report = { title, fields, craft, pace, arrive, window, cells, summary, refined, inTime, paces };
+  const report = { title, fields, craft, pace, arrive, window, cells, summary, refined, inTime, paces, sure };
   const text = {
     table: () => writeWindowTable(report, units ?? unitsFor(craft)),
     csv: () => writeWindowCsv(report),
     json: () => writeWindowJson(report),
   }[format]();
   await writeResult(text, out, inputs);
-  return summary.possible > 0 ? 0 : 1;
+  const { time } = sure === null ? summary.best : (sure.refined ?? sure).best.sure;
+  return time === null ? 1 : 0;
 }

@@ -7,6 +7,7 @@ import { inLastPlace, leftInLastPlace } from "./rounding.ts";
 import { clockSeconds, durationText, etaText, instantText } from "./time-text.ts";
 import type { WindowReport } from "./window-input.ts";
 import { reasonWord } from "./window-matrix.ts";
+import { lateLines, passedOverLines, sureColumn, sureLegend, triedText } from "./window-sure.ts";
 import type { WindowUnits } from "./window-units.ts";
 
 const STORE_WIDTH = 7;
@@ -53,13 +54,15 @@ function columnsOf(rows: readonly Row[], units: WindowUnits): Column[] {
     },
     { head: ["Use", store.symbol], cells: rows.map(({ cell }) => amount(cell.use, inLastPlace)) },
     { head: ["Left", store.symbol], cells: rows.map(({ cell }) => amount(cell.remaining, leftInLastPlace)) },
+    ...sureColumn(rows.map(({ cell }) => cell)),
   ];
 }
 
 /** The latest departures that arrive in time, as rows, and a line for every route and speed that has none. */
-function inTimeOf({ inTime }: WindowReport, units: WindowUnits): { rows: Row[]; missed: string[] } {
+function inTimeOf({ inTime, sure }: WindowReport, units: WindowUnits): { rows: Row[]; missed: string[] } {
   const found = inTime?.routes ?? [];
-  const rows = found.flatMap(({ latest }) => (latest === null ? [] : [{ what: "in time", cell: latest }]));
+  const held = sure?.inTime?.map((own) => own.sure) ?? found.map(({ latest }) => latest);
+  const rows = held.flatMap((cell) => (cell === null ? [] : [{ what: "in time", cell }]));
   const missed = found.flatMap(({ route, speed_m_s, latest, earliest }) => {
     if (latest !== null || inTime === null) return [];
     const { speed } = units;
@@ -76,27 +79,37 @@ function inTimeOf({ inTime }: WindowReport, units: WindowUnits): { rows: Row[]; 
 }
 
 /** Per route and at its best departure by use, the bests among all speeds of the craft's range. */
-function pacesOf({ paces }: WindowReport): Row[] {
-  return (paces ?? []).flatMap(({ leastUse, fastest }) => [
+function pacesOf({ paces, sure }: WindowReport): Row[] {
+  return (sure?.paces ?? paces ?? []).flatMap(({ leastUse, fastest }) => [
     ...(leastUse === null ? [] : [{ what: "any speed, use", cell: leastUse }]),
     ...(fastest === null ? [] : [{ what: "any, fastest", cell: fastest }]),
   ]);
 }
 
-/** The bests of all cells, and of each route where there are several, to the minute where that was asked for. */
+/** The bests of all cells and of each route, to the minute where that was asked for; those that hold, where they were put to the test. */
+function bestsOf({ summary, refined, sure }: WindowReport): {
+  readonly best: WindowBest;
+  readonly routes: readonly WindowBest[];
+} {
+  if (sure === undefined || sure === null) {
+    const { best, routes } = refined ?? summary;
+    return { best, routes: routes.map((route) => route.best) };
+  }
+  const { best, routes } = sure.refined ?? sure;
+  return { best: best.sure, routes: routes.map((route) => route.sure) };
+}
+
+/** The bests of all cells, and of each route where there are several. */
 export function windowBests(report: WindowReport, units: WindowUnits): string[] {
-  const { summary, refined, inTime } = report;
-  const own = refined?.routes ?? summary.routes;
+  const { inTime, sure = null } = report;
+  const { best, routes: own } = bestsOf(report);
   const several = own.length > 1;
-  const overall = rowsOf(refined?.best ?? summary.best);
+  const overall = rowsOf(best);
   const late = inTimeOf(report, units);
-  const rows = [
-    ...overall,
-    ...(several ? own.flatMap(({ best }) => rowsOf(best)) : []),
-    ...late.rows,
-    ...pacesOf(report),
-  ];
-  if (rows.length === 0) return ["Nothing in the window can be done.", ...late.missed];
+  const rows = [...overall, ...(several ? own.flatMap(rowsOf) : []), ...late.rows, ...pacesOf(report)];
+  const passed =
+    sure === null ? [] : [...passedOverLines(sure, units), ...lateLines(sure.inTime ?? [], units)];
+  if (rows.length === 0) return [noneText(report), ...passed, ...late.missed];
   const rest = columnsOf(rows, units);
   const whats = rows.map(({ what }, index) => (index < overall.length ? `of all, ${what}` : what));
   const width = [
@@ -117,7 +130,21 @@ export function windowBests(report: WindowReport, units: WindowUnits): string[] 
       ? []
       : [`In time: the latest departure that arrives by ${instantText(inTime.notAfter, "minute")}.`];
   const any = pacesText(report);
-  return [...head, ...lines, ...closing(refined?.best ?? summary.best), ...kept, ...any, ...late.missed];
+  const tried =
+    sure === null
+      ? []
+      : sureLegend(
+          sure,
+          rows.map(({ cell }) => cell),
+        );
+  return [...head, ...lines, ...tried, ...closing(best), ...passed, ...kept, ...any, ...late.missed];
+}
+
+function noneText({ summary, sure }: WindowReport): string {
+  const tried = sure === undefined || sure === null ? null : triedText(sure);
+  return tried === null || summary.possible === 0
+    ? "Nothing in the window can be done."
+    : `Nothing in the window holds in ${tried}.`;
 }
 
 function pacesText({ paces }: WindowReport): string[] {

@@ -3,6 +3,7 @@ import type { DepartureWindow } from "../choose/departure-window.ts";
 import type { InTime } from "../choose/in-time.ts";
 import type { RefinedWindow } from "../choose/refine.ts";
 import type { RoutePaces } from "../choose/route-paces.ts";
+import type { SureWindow } from "../choose/sure-window.ts";
 import type { WindowCell } from "../choose/window-cell.ts";
 import type { WindowSummary } from "../choose/window-summary.ts";
 import type { Craft, Pace } from "../craft/craft.ts";
@@ -25,4 +26,6 @@ export interface WindowReport {
   readonly inTime: InTime | null;
   /** The choice of pace per route; `null` where it was not asked for. */
   readonly paces: readonly RoutePaces[] | null;
+  /** The bests put to the test; left out or `null` where the plan names nothing to do so with. */
+  readonly sure?: SureWindow | null;
 }

@@ -1,6 +1,8 @@
 import type { InTime } from "../choose/in-time.ts";
 import type { RefinedWindow } from "../choose/refine.ts";
 import type { RoutePaces } from "../choose/route-paces.ts";
+import type { BestPair, Sure, SureBest, SureCell } from "../choose/sure.ts";
+import type { SurePaces, SureRoutes, SureWindow } from "../choose/sure-window.ts";
 import type { CellFinding, WindowCell } from "../choose/window-cell.ts";
 import type { Refusal, RouteSummary, WindowBest } from "../choose/window-summary.ts";
 import { ADVISORY } from "../constants.ts";
@@ -21,7 +23,25 @@ function finding(value: CellFinding | null): CellFinding | null {
   );
 }
 
-function cell(value: WindowCell): WindowCell {
+function sure(value: Sure): Sure {
+  const { decidedBy, ensemble } = value;
+  return {
+    status: value.status,
+    decidedBy: { member: decidedBy.member, whatIf: decidedBy.whatIf },
+    worst: finding(value.worst),
+    asBad: value.asBad,
+    ensemble: ensemble && {
+      members: ensemble.members,
+      reserveHolds: ensemble.reserveHolds,
+      breaksReserve: ensemble.breaksReserve,
+      doesNotArrive: ensemble.doesNotArrive,
+    },
+    reserveHolds: value.reserveHolds,
+  };
+}
+
+/** A cell that was put to the test says so. */
+function cell(value: WindowCell | SureCell): WindowCell | SureCell {
   return {
     route: value.route,
     departure: value.departure,
@@ -34,10 +54,11 @@ function cell(value: WindowCell): WindowCell {
     reserve: value.reserve,
     status: value.status,
     worst: finding(value.worst),
+    ...("sure" in value ? { sure: sure(value.sure) } : {}),
   };
 }
 
-function best(value: WindowBest): WindowBest {
+function best(value: WindowBest | SureBest): WindowBest {
   return {
     time: value.time && cell(value.time),
     use: value.use && cell(value.use),
@@ -56,50 +77,67 @@ function refusal(value: Refusal): Refusal {
   };
 }
 
-function route(value: RouteSummary): RouteSummary {
+/** The bests by the plain estimate and, where they were put to the test, those that hold. */
+function bests(plain: WindowBest, pair: BestPair | undefined) {
+  return pair === undefined ? { best: best(plain) } : { best: best(pair.plain), sureBest: best(pair.sure) };
+}
+
+function route(value: RouteSummary, pair: BestPair | undefined) {
   return {
     route: value.route,
     cells: value.cells,
     possible: value.possible,
-    best: best(value.best),
+    ...bests(value.best, pair),
     refused: value.refused.map(refusal),
   };
 }
 
-function refined(value: RefinedWindow): RefinedWindow {
+function refined(value: RefinedWindow, tested: SureRoutes | null) {
   return {
-    best: best(value.best),
-    routes: value.routes.map(({ route: name, best: own }) => ({ route: name, best: best(own) })),
-  };
-}
-
-function inTime({ notAfter, routes }: InTime): InTime {
-  return {
-    notAfter,
-    routes: routes.map(({ route: name, speed_m_s, latest, earliest }) => ({
+    ...bests(value.best, tested?.best),
+    routes: value.routes.map(({ route: name, best: own }, index) => ({
       route: name,
-      speed_m_s,
-      latest: latest && cell(latest),
-      earliest: cell(earliest),
+      ...bests(own, tested?.routes[index]),
     })),
   };
 }
 
-function paces({ route: name, departure, leastUse, fastest }: RoutePaces): RoutePaces {
-  return { route: name, departure, leastUse: leastUse && cell(leastUse), fastest: fastest && cell(fastest) };
+function inTime({ notAfter, routes }: InTime, tested: SureWindow["inTime"]) {
+  return {
+    notAfter,
+    routes: routes.map(({ route: name, speed_m_s, latest, earliest }, index) => {
+      const own = tested?.[index];
+      const plain = own?.plain ?? latest;
+      return {
+        route: name,
+        speed_m_s,
+        latest: plain && cell(plain),
+        ...(own === undefined ? {} : { sureLatest: own.sure && cell(own.sure) }),
+        earliest: cell(earliest),
+      };
+    }),
+  };
+}
+
+function paces({ route: name, departure, leastUse, fastest }: RoutePaces, tested: SurePaces | undefined) {
+  const least = tested?.leastUse ?? leastUse;
+  const quickest = tested?.fastest ?? fastest;
+  return { route: name, departure, leastUse: least && cell(least), fastest: quickest && cell(quickest) };
 }
 
 const iso = (time: number): string => new Date(time).toISOString();
 
 /**
  * A window of departures as `legwork-window/1`: SI units with the unit in the key, one cell a route × departure × speed in the
- * order departure, route, speed; keys in a fixed order, two spaces of indent, a final line end.
+ * order departure, route, speed; keys in a fixed order, two spaces of indent, a final line end. Where the plan names members, what-ifs or a
+ * stated error, a best carries `sure`, and `sureBest` beside `best` are those that hold in all of them.
  *
  * @example
  * const report = { title: "Two marks", fields: [], craft: { name: "Tender", moves: "water", store: { unit: "J", usable: 36000000 } }, pace: { hold: "least-energy" }, arrive: null, window: { from: 0, to: 0, every_s: 60, speeds_m_s: null }, cells: [], summary: summariseWindow([]), refined: null, inTime: null, paces: null };
  * JSON.parse(writeWindowJson(report)).format // → "legwork-window/1"
  */
 export function writeWindowJson({ title, fields, craft, arrive, window, ...rest }: WindowReport): string {
+  const tested = rest.sure ?? null;
   const whole = {
     format: "legwork-window/1",
     advisory: ADVISORY,
@@ -121,11 +159,19 @@ export function writeWindowJson({ title, fields, craft, arrive, window, ...rest 
     storeUnit: craft.store.unit,
     usable: craft.store.usable,
     possible: rest.summary.possible,
-    best: best(rest.summary.best),
-    routes: rest.summary.routes.map(route),
-    ...(rest.refined === null ? {} : { refined: refined(rest.refined) }),
-    ...(rest.inTime === null ? {} : { inTime: inTime(rest.inTime) }),
-    ...(rest.paces === null ? {} : { paces: rest.paces.map(paces) }),
+    ...(tested === null ? {} : { tried: { members: tested.members, whatIfs: tested.whatIfs } }),
+    ...bests(rest.summary.best, tested?.best),
+    routes: rest.summary.routes.map((each) =>
+      route(
+        each,
+        tested?.routes.find((own) => own.route === each.route),
+      ),
+    ),
+    ...(rest.refined === null ? {} : { refined: refined(rest.refined, tested?.refined ?? null) }),
+    ...(rest.inTime === null ? {} : { inTime: inTime(rest.inTime, tested?.inTime ?? null) }),
+    ...(rest.paces === null
+      ? {}
+      : { paces: rest.paces.map((each, index) => paces(each, tested?.paces?.[index])) }),
     cells: rest.cells.map(cell),
   };
   return `${JSON.stringify(whole, refuseNotFinite, 2)}\n`;

@@ -18,6 +18,18 @@ const NAME_WIDTH = 18;
 const DAY = 86_400_000;
 const MARKS: Readonly<Record<string, string>> = { time: "T", use: "U", "latest departure": "L" };
 
+/** `T`, `U`, `L` at the bests that hold; small at those of the plain estimate that do not. */
+function letters(cell: WindowCell, { sure, summary }: WindowReport): string {
+  const marks = (best: WindowBest): string[] =>
+    bestWords(cell, best)
+      .split(", ")
+      .map((word) => MARKS[word] ?? "");
+  if (sure === undefined || sure === null) return marks(summary.best).join("");
+  const held = marks(sure.best.sure);
+  const passed = marks(sure.best.plain).filter((mark) => !held.includes(mark));
+  return [...held, ...passed.map((mark) => mark.toLowerCase())].join("");
+}
+
 const REASONS: Partial<Record<FindingCode, string>> = {
   "cannot-hold-track": "track",
   "outside-area": "off grid",
@@ -48,7 +60,7 @@ function arrivalText(cell: WindowCell, units: WindowUnits): string {
 /** `09:31    61.2!T`, or `x reserve` for a cell that cannot be done. */
 function cellText(
   cell: WindowCell | undefined,
-  best: WindowBest,
+  report: WindowReport,
   units: WindowUnits,
   found: boolean,
 ): string {
@@ -60,12 +72,8 @@ function cellText(
       ? rightAligned((cell.speed_m_s / speed.size).toFixed(speed.decimals), 5)
       : arrivalText(cell, units);
   const left = leftInLastPlace((cell.remaining ?? 0) / store.size, store.decimals);
-  const letters = bestWords(cell, best)
-    .split(", ")
-    .map((word) => MARKS[word] ?? "")
-    .join("");
   const mark = cell.status === "caution" ? "!" : " ";
-  return `${leftAligned(lead, 8)}${rightAligned(placedText(left, store.decimals, STORE_WIDTH), STORE_WIDTH)}${mark}${letters}`;
+  return `${leftAligned(lead, 8)}${rightAligned(placedText(left, store.decimals, STORE_WIDTH), STORE_WIDTH)}${mark}${letters(cell, report)}`;
 }
 
 interface Candidate {
@@ -75,7 +83,7 @@ interface Candidate {
   readonly width: number;
 }
 
-function candidates(report: WindowReport, best: WindowBest, units: WindowUnits): Candidate[] {
+function candidates(report: WindowReport, units: WindowUnits): Candidate[] {
   const { window, arrive } = report;
   const found = window.speeds_m_s === null && arrive !== null;
   const groups = new Map<string, WindowCell[]>();
@@ -86,7 +94,7 @@ function candidates(report: WindowReport, best: WindowBest, units: WindowUnits):
     else own.push(cell);
   }
   return [...groups.values()].map((cells) => {
-    const texts = new Map(cells.map((cell) => [cell.departure, cellText(cell, best, units, found)]));
+    const texts = new Map(cells.map((cell) => [cell.departure, cellText(cell, report, units, found)]));
     const columnHead = `${leftAligned(found ? units.speed.symbol.padStart(5) : "ETA", 8)}${rightAligned("Left", STORE_WIDTH)}`;
     const widest = [...texts.values()].reduce((most, text) => Math.max(most, displayWidth(text)), 0);
     const whole = displayWidth(plainText(cells[0]?.route ?? ""));
@@ -120,10 +128,9 @@ function packed(all: readonly Candidate[], room: number): Candidate[][] {
 
 /** Departures down, routes and speeds across: arrival, what is left, and marks; dates on lines of their own. */
 export function windowMatrix(report: WindowReport, units: WindowUnits): string[] {
-  const best = report.summary.best;
   const labelWidth = units.departures === "minute" ? 5 : 8;
   const departures = [...new Set(report.cells.map(({ departure }) => departure))];
-  const blocks = packed(candidates(report, best, units), TABLE_WIDTH - labelWidth - GAP);
+  const blocks = packed(candidates(report, units), TABLE_WIDTH - labelWidth - GAP);
   const line = (label: string, block: readonly Candidate[], of: (candidate: Candidate) => string) =>
     [leftAligned(label, labelWidth), ...block.map((candidate) => leftAligned(of(candidate), candidate.width))]
       .join(" ".repeat(GAP))

@@ -9,6 +9,7 @@ import { instantText } from "./time-text.ts";
 import { refusalLines, windowBests } from "./window-bests.ts";
 import type { WindowReport } from "./window-input.ts";
 import { windowMatrix } from "./window-matrix.ts";
+import { triedText } from "./window-sure.ts";
 import { type WindowUnits, windowUnits } from "./window-units.ts";
 
 function stepText(seconds: number): string {
@@ -54,15 +55,20 @@ function head(report: WindowReport, units: WindowUnits): string[] {
   ];
 }
 
-function legend({ window, arrive, refined }: WindowReport, units: WindowUnits): string[] {
+function legend({ window, arrive, refined, sure }: WindowReport, units: WindowUnits): string[] {
   const lead =
     window.speeds_m_s === null && arrive !== null
       ? `the speed found, ${units.speed.symbol}`
       : "ETA, with +1 on the day after departure";
   const minute = refined === null ? "" : " The bests below are to the minute, between the departures shown.";
+  const tried = sure === undefined || sure === null ? null : triedText(sure);
+  const held =
+    tried === null
+      ? "of these"
+      : `of these that hold in ${tried}; t, u, l those of the plain estimate, where they do not hold`;
   return wrapped(
     `ETD down; across ${lead}; left in ${units.store.symbol}. ! with cautions. x cannot be done, and why. T least time, ` +
-      `U least use, L latest departure of these. All times UTC.${minute}`,
+      `U least use, L latest departure ${held}. All times UTC.${minute}`,
     TABLE_WIDTH,
   );
 }

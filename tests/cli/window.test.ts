@@ -132,6 +132,114 @@ describe("legwork window", () => {
   });
 });
 
+/** What `legwork window` writes of the plain plan: nothing in it speaks of what the bests could be put to the test with. */
+const PLAIN_TABLE = `Stores for the north light
+Craft:     Battery workboat, 12 m, holds 8.0 kn through the water
+Store:     102.0 kWh usable
+Window:    2027-05-04 09:00 UTC to 2027-05-04 11:00 UTC, every 60 min: 1 of 3
+           can be done
+Current:   islands-current.csv; valid 2027-05-04 07:00 to 2027-05-04 19:00 UTC
+Wind:      islands-wind.csv; valid 2027-05-04 06:00 to 2027-05-04 20:00 UTC
+
+       Sound
+ETD    ETA       Left
+2027-05-04
+09:00  11:42     27.2 TUL
+10:00  x reserve
+11:00  x reserve
+
+ETD down; across ETA, with +1 on the day after departure; left in kWh. ! with
+cautions. x cannot be done, and why. T least time, U least use, L latest
+departure of these. All times UTC.
+
+                              ETD          ETA     Time      Use     Left
+Best           Route     dd hh:mm     dd hh:mm     h:mm      kWh      kWh
+least time     Sound     04 09:00     04 11:42     2:42     74.8     27.2
+least use      Sound     04 09:00     04 11:42     2:42     74.8     27.2
+latest         Sound     04 09:00     04 11:42     2:42     74.8     27.2
+After the latest departure, on the same route: leg 3, from 6.0 km (3.3 NM) after
+Sound north to North light: what is left falls below the reserve of 20.40 kWh;
+at the end 16.38 kWh is left, 4.02 kWh short.
+
+Why
+Sound: 2 of 3 cannot be done
+  reserve     2, first 2027-05-04 10:00, last 2027-05-04 11:00 UTC: leg 3, from
+              6.0 km (3.3 NM) after Sound north to North light: what is left
+              falls below the reserve of 20.40 kWh; at the end 16.38 kWh is
+              left, 4.02 kWh short
+
+================================================================================
+Advisory estimate from forecast data and simplified models, for planning
+comparison only. Not for navigation. No substitute for official charts, notices,
+forecasts and airspace information, the maker's limits, local regulations, or
+the judgement of the licensed person in command.
+`;
+
+describe("legwork window of a plan that names nothing to put its bests to the test with", () => {
+  const SHORT = [
+    "--from",
+    "2027-05-04T09:00Z",
+    "--to",
+    "2027-05-04T11:00Z",
+    "--every",
+    "1h",
+    "--route",
+    "Sound",
+  ];
+
+  it("writes the plain estimate's bests and no word more", () => {
+    expect(legwork.run(["window", islands, ...SHORT]).out).toBe(PLAIN_TABLE);
+    const csv = legwork.run(["window", islands, ...SHORT, "--format", "csv"]).out;
+    expect(csv.split("\r\n")[0]).toBe(
+      "route,departure [UTC],speed [m/s],status,arrival [UTC],time under way [s],departure to arrival [s],use [J],left [J],reserve [J],best,finding,message,advisory",
+    );
+    const json = legwork.run(["window", islands, ...SHORT, "--format", "json"]).out;
+    expect(json).not.toMatch(/"sure|"tried/);
+  });
+});
+
+describe("legwork window of a plan that names members and what-ifs", () => {
+  const demo = (name: string) => join(folder, "demo", `${name}-decide.plan.json`);
+
+  it.each(["islands", "survey", "ocean"])("decides %s in them, in at most 80 columns", (name) => {
+    for (const options of [[], ["--refine"]]) {
+      const { status, out, err } = legwork.run(["window", demo(name), ...options]);
+      expect([status, err]).toEqual([0, ""]);
+      expect(Math.max(...out.split("\n").map(displayWidth))).toBeLessThanOrEqual(80);
+      expect(out.replace(/\s+/g, " ")).toMatch(
+        /Bests of the departures that hold in all [57] members and 3 what-ifs\./,
+      );
+    }
+  });
+
+  it("passes over the ship's quickest departure, and says that a fouled hull would break its reserve", () => {
+    const { out } = legwork.run(["window", demo("ocean")]);
+    expect(out.replace(/\s+/g, " ")).toContain(
+      'Of all, the quickest, Down the stream, 2027-11-03 06:00 UTC at 13.0 kn, breaks its reserve in the what-if "Fouled hull" (and 3 more).',
+    );
+    expect(out).toMatch(/of all, least time .* 12\.5 03 00:00/);
+  });
+
+  it("ends with 1 where no departure holds in all of them, though some can be done", () => {
+    const options = ["--route", "High, straight", "--format", "json"];
+    const { status, out } = legwork.run(["window", demo("survey"), ...options]);
+    const { possible, best, sureBest } = JSON.parse(out);
+    expect(status).toBe(1);
+    expect(possible).toBeGreaterThan(0);
+    expect(best.time.sure.status).toBe("stop");
+    expect(sureBest).toEqual({ time: null, use: null, latest: null, closedBy: null });
+  });
+
+  it("names a what-if that the plan's own pace does not allow, with status 2", () => {
+    const plan = changedPlan("eager", (document) => {
+      document.whatIf = [{ name: "Faster", speed: "20 kn" }];
+    });
+    const { status, err } = legwork.run(["window", plan, ...DAY]);
+    expect(status).toBe(2);
+    expect(err).toMatch(/the what-if "Faster" keeps the speed above 0 and within the power model of .*\n$/);
+  });
+});
+
 describe("legwork estimate with a pace that asks for an arrival", () => {
   it("holds the speed that makes it, route by route, and says so", () => {
     const plan = changedPlan("arrive", (document) => {

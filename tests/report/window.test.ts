@@ -1,7 +1,11 @@
 import { describe, expect, test } from "vitest";
+import { CellTrials } from "../../src/choose/cell-trials.ts";
 import type { DepartureWindow } from "../../src/choose/departure-window.ts";
 import { latestInTime } from "../../src/choose/in-time.ts";
-import { refineWindow } from "../../src/choose/refine.ts";
+import { refinedBests, refineRoutes } from "../../src/choose/refine.ts";
+import { runSteps } from "../../src/choose/steps.ts";
+import { sureWindow } from "../../src/choose/sure-window.ts";
+import type { UncertaintyAsked } from "../../src/choose/uncertain-estimate.ts";
 import { makeSweep, windowCells } from "../../src/choose/window.ts";
 import { summariseWindow } from "../../src/choose/window-summary.ts";
 import { ADVISORY } from "../../src/constants.ts";
@@ -21,10 +25,24 @@ const stream = gridField(
   (_lon, _lat, hours) => [3.2 * Math.sin((2 * Math.PI * hours) / 12.42), 0],
 );
 
+const AS_PLANNED = { wind: 1, current: 1, veer_deg: 0, speed_m_s: 0, consumption: 0, late_s: 0 };
+
+/** What the plan of {@link sureReport} names. */
+const ASKED: UncertaintyAsked = {
+  members: [],
+  whatIfs: [
+    { name: "Stream as planned", ...AS_PLANNED },
+    { name: "Foul", ...AS_PLANNED, consumption: 1.5 },
+    { name: "Two hours late\u001b[31m", ...AS_PLANNED, late_s: 7200 },
+  ],
+  errors: [{ role: "current", speed_m_s: 0.3, length_m: 30_000, time_s: 10_800 }],
+};
+
 function reportOf(
   names: readonly string[],
   speeds_m_s: readonly number[] | null,
   refine = false,
+  asked: UncertaintyAsked | null = null,
 ): WindowReport {
   const craft = craftOf({
     name: "Tender",
@@ -42,10 +60,19 @@ function reportOf(
     routes: names.map((name, n) => ({ name, waypoints: [waypoint("A", 0, 0), waypoint("B", 0.1 * n, 0.5)] })),
     land: null,
   };
-  const window: DepartureWindow = { from: DEPARTURE, to: DEPARTURE + 30 * HOUR, every_s: 3600, speeds_m_s };
+  const window: DepartureWindow = {
+    from: DEPARTURE,
+    to: DEPARTURE + 30 * HOUR,
+    every_s: 3600,
+    speeds_m_s,
+    ...(asked === null ? {} : { arriveBy: DEPARTURE + 28 * HOUR }),
+  };
   const sweep = makeSweep(prepareRoutes(input), input);
   const cells = [...windowCells(sweep, window)];
-  const refined = refine ? refineWindow(sweep, window, cells) : null;
+  const minutes = refine ? refineRoutes(sweep, window, cells) : null;
+  const inTime = latestInTime(sweep, window);
+  const plain = { window, cells, minutes, inTime, paces: null };
+  const sure = asked && runSteps(sureWindow(sweep, new CellTrials(sweep, asked), plain));
   const fields = input.fields.map(fieldSummary);
   const { title, pace } = input;
   return {
@@ -57,9 +84,10 @@ function reportOf(
     window,
     cells,
     summary: summariseWindow(cells),
-    refined,
-    inTime: latestInTime(sweep, window),
+    refined: minutes && refinedBests(minutes),
+    inTime,
     paces: null,
+    ...(sure === null ? {} : { sure }),
   };
 }
 
@@ -185,5 +213,118 @@ describe("a window as CSV", () => {
     const [head, ...rows] = readCsv(writeWindowCsv(report));
     expect(rows.length).toBeGreaterThan(report.cells.length);
     for (const row of rows.slice(report.cells.length)) expect(row[head?.indexOf("best") ?? 0]).not.toBe("");
+  });
+});
+
+describe("a window whose bests are put to the test", () => {
+  const names = ["North", "South", "A route of a very long name indeed, 説明"];
+  const report = reportOf(names, [3, 5], true, ASKED);
+  const { sure } = report;
+  if (sure === undefined || sure === null) throw new Error("nothing was put to the test");
+  const text = writeWindowTable(report, "sea");
+  const lines = text.split("\n");
+  const flat = text.replace(/\s+/g, " ");
+
+  test("is a table of at most 80 columns, without control characters", () => {
+    expect(Math.max(...lines.map(displayWidth))).toBeLessThanOrEqual(80);
+    expect(lines.some((line) => line !== line.trimEnd())).toBe(false);
+    expect(text).not.toContain("\u001b");
+  });
+
+  test("shows the bests that hold, and says of the plain ones that do not what breaks them", () => {
+    const { plain, sure: held } = sure.refined?.best ?? sure.best;
+    expect(plain.time?.departure).not.toBe(held.time?.departure);
+    const row = lines.find((line) => line.startsWith("of all, least time"));
+    expect(row).toContain(held.time?.departure.slice(11, 16));
+    expect(flat).toContain("hold in all 3 what-ifs");
+    const when = plain.time?.departure.slice(0, 16).replace("T", " ");
+    expect(plain.time?.sure.decidedBy.whatIf).toBe("Foul");
+    expect(flat).toMatch(
+      new RegExp(`Of all, the quickest[^;.]*, ${when} UTC at \\d\\.\\d kn, .* in the what-if "Foul"`),
+    );
+  });
+
+  test("says with what probability each reserve holds", () => {
+    const head = lines.findIndex((line) => line.startsWith("Best "));
+    expect(lines[head - 1]).toMatch(/ Holds$/);
+    expect(lines[head]).toMatch(/ %$/);
+    for (const row of lines.slice(head + 1, head + 4)) expect(row).toMatch(/ [<>]?\d+(\.\d)?[ !]?$/);
+  });
+
+  test("marks in the matrix the bests that hold, and with small letters those that do not", () => {
+    const matrix = lines.slice(
+      lines.findIndex((line) => line.startsWith("ETD  ")),
+      lines.findIndex((line) => line.startsWith("ETD down")),
+    );
+    const marks = [...matrix.join("\n").matchAll(/(?<=\d[ !])[TULtul]+/g)].map(([mark]) => mark).join("");
+    const large = (["time", "use", "latest"] as const).filter((by) => sure.best.sure[by] !== null);
+    const small = large.filter(
+      (by) =>
+        sure.best.plain[by]?.departure !== sure.best.sure[by]?.departure ||
+        sure.best.plain[by]?.route !== sure.best.sure[by]?.route ||
+        sure.best.plain[by]?.speed_m_s !== sure.best.sure[by]?.speed_m_s,
+    );
+    expect([...marks].filter((mark) => mark === mark.toUpperCase())).toHaveLength(large.length);
+    expect([...marks].filter((mark) => mark !== mark.toUpperCase())).toHaveLength(small.length);
+    expect(small.length).toBeGreaterThan(0);
+  });
+
+  test("has in its json the plain bests and those that hold, each with what it comes to", () => {
+    const json = JSON.parse(writeWindowJson(report));
+    const same = (value: unknown) => JSON.parse(JSON.stringify(value));
+    expect(json.tried).toEqual({ members: 0, whatIfs: 3 });
+    expect(json.best).toEqual(same(sure.best.plain));
+    expect(json.sureBest).toEqual(same(sure.best.sure));
+    expect(json.refined.sureBest).toEqual(same(sure.refined?.best.sure));
+    expect(json.routes.map(({ sureBest }: { sureBest: unknown }) => sureBest)).toEqual(
+      same(sure.routes.map((own) => own.sure)),
+    );
+    expect(json.inTime.routes.map(({ sureLatest }: { sureLatest: unknown }) => sureLatest)).toEqual(
+      same(sure.inTime?.map((own) => own.sure)),
+    );
+    const { sure: told, ...plain } = json.best.time;
+    expect(plain).toEqual(report.summary.best.time);
+    expect(Object.keys(told)).toEqual(["status", "decidedBy", "worst", "asBad", "ensemble", "reserveHolds"]);
+    expect(json.cells).toEqual(report.cells);
+  });
+
+  test("has in its CSV columns at the end that are filled for the bests alone", () => {
+    const [head, ...rows] = readCsv(writeWindowCsv(report));
+    const [plain] = readCsv(writeWindowCsv(reportOf(names, [3, 5], true)));
+    expect(head?.slice(0, plain?.length)).toEqual(plain);
+    const column = (name: string) => head?.indexOf(name) ?? -1;
+    const best = rows.filter((row) => row[column("best")] !== "" || row[column("sure best")] !== "");
+    const rest = rows.filter((row) => !best.includes(row));
+    expect(rest.every((row) => row.slice(plain?.length).every((cell) => cell === ""))).toBe(true);
+    for (const row of best) {
+      expect(row[column("sure status")]).toMatch(/^(clear|caution|stop)$/);
+      expect(row[column("sure decided by")]).toMatch(/^(plain estimate|what if .+)$/);
+      expect(Number(row[column("probability that the reserve holds [1]")])).toBeLessThanOrEqual(1);
+      expect(row[column("sure best")] === "").toBe(row[column("sure status")] === "stop");
+    }
+    const held = best
+      .flatMap((row) => (row[column("sure best")] ?? "").split(", "))
+      .filter((word) => word !== "");
+    expect(held.sort()).toEqual(["latest departure", "time", "use"]);
+  });
+
+  test("says so where nothing holds", () => {
+    const frozen = { name: "Frozen", ...AS_PLANNED, consumption: 9 };
+    const none = writeWindowTable(
+      reportOf(["North"], null, false, { ...ASKED, whatIfs: [frozen] }),
+      "metric",
+    );
+    expect(none).toContain("Nothing in the window holds in the what-if.");
+    expect(none.replace(/\s+/g, " ")).toMatch(
+      / The quickest.*, 2027-05-0\d \d\d:\d\d UTC, runs out of store in the what-if "Frozen"/,
+    );
+  });
+
+  test("with a stated error alone has the plain bests, and how probably their reserves hold", () => {
+    const stated = reportOf(names, null, false, { ...ASKED, whatIfs: [] });
+    const own = writeWindowTable(stated, "sea");
+    expect(own).toContain("L latest\ndeparture of these. All times UTC.");
+    expect(own.replace(/\s+/g, " ")).toContain("Holds: probability that the reserve does");
+    expect(stated.sure?.best.sure).toEqual({ ...stated.sure?.best.plain });
   });
 });
