@@ -191,7 +191,7 @@ describe("turning back", () => {
     const { container } = render(<Ribbons page={page} />);
     fireEvent.click(screen.getAllByText(/Point of no return, start \(Pier buoy\)/)[0] as HTMLElement);
     expect(page.view.pointed.value?.route).toBe(0);
-    expect(container.querySelector(".reach .no-return")).toBeTruthy();
+    await waitFor(() => expect(container.querySelector(".reach .no-return")).toBeTruthy());
     expect(container.querySelector(".reach .reachable")).toBeTruthy();
   });
 
@@ -221,6 +221,28 @@ describe("the pace", () => {
 });
 
 describe("how sure it is", () => {
+  test("is told in figures beside the bands on the ribbons: on arrival for every route, and leg by leg", async () => {
+    const page = await pageOf((plan) => ({
+      ...plan,
+      fields: (plan.fields ?? []).map((field) =>
+        field.role === "current"
+          ? { ...field, error: { speed: "0.2 m/s", length: "30 km", time: "6 h" } }
+          : field,
+      ),
+    }));
+    await page.decisions.ask(page.shown.value, false);
+    const { container } = render(<Ribbons page={page} />);
+    const legend = await screen.findByText(/10 % to 90 %/);
+    const onArrival = /left on arrival (-?\d+\.\d to -?\d+\.\d) kWh/.exec(legend.textContent ?? "")?.[1];
+    expect(onArrival).toBeDefined();
+    await waitFor(() => expect(container.querySelectorAll(".spread-band.error .bars").length).toBe(3));
+    render(<SureView page={page} />);
+    const [row] = screen.getAllByRole("row", { name: /Sound/ });
+    expect(row?.textContent).toContain(onArrival);
+    const [legs] = screen.getAllByRole("table", { name: /Left of Sound/, hidden: true });
+    expect(legs?.querySelector("tbody tr:last-child")?.textContent).toContain(onArrival);
+  });
+
   test("begins with common what-ifs and a stated error, each to be changed", async () => {
     const page = await pageOf();
     render(<SureView page={page} />);

@@ -3,11 +3,12 @@ import type { LinearScale } from "../format/linear-scale.ts";
 import { alongColour, routeHue } from "../format/palette.ts";
 import { areaPath, linePath } from "../format/svg-path.ts";
 import { inUnit, number, shownUnit, storeUnit } from "../format/units.ts";
+import { LazyPart } from "../shell/LazyPart.tsx";
 import { valueAtDistance } from "../state/along-route.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { RouteDrawing } from "../worker/protocol.ts";
 import { axisOf, distanceAt } from "./along-axis.ts";
-import { RibbonDecided } from "./RibbonDecided.tsx";
+import { isDecided, isSpread, loadRibbonDecided, loadRibbonSpread } from "./decided-parts.ts";
 import {
   BAND_BOTTOM,
   BAND_HEIGHT,
@@ -95,10 +96,29 @@ export function Ribbon({ page, route, scale, width, limit }: RibbonProps) {
         onClick={() => store.select({ route, waypoint: null })}
       >
         <svg width={width} height={BAND_BOTTOM + strips + NAMES_HEIGHT} aria-hidden="true">
+          {isSpread(estimate) && (
+            <LazyPart
+              load={loadRibbonSpread}
+              page={page}
+              decided={estimate}
+              drawing={drawing}
+              scale={scale}
+              under={true}
+            />
+          )}
           <StoreLine profile={drawing.profile} axis={axis} scale={scale} estimate={estimate} route={route} />
           <Band profile={drawing.profile} axis={axis} scale={scale} limit={limit} />
           <Ticks page={page} route={route} drawing={drawing} axis={axis} scale={scale} below={strips} />
-          <RibbonDecided page={page} route={route} decided={estimate} drawing={drawing} scale={scale} />
+          {isDecided(estimate) && (
+            <LazyPart
+              load={loadRibbonDecided}
+              page={page}
+              route={route}
+              decided={estimate}
+              drawing={drawing}
+              scale={scale}
+            />
+          )}
           {pointed !== null && (
             <path
               class="ribbon-cursor"

@@ -1,4 +1,5 @@
 import { shownUnit } from "../format/units.ts";
+import { LazyPart } from "../shell/LazyPart.tsx";
 import { StaleMark } from "../shell/StaleMark.tsx";
 import { useWidth } from "../shell/use-width.ts";
 import { alongLimit } from "../state/along-scale.ts";
@@ -6,6 +7,7 @@ import type { PageState } from "../state/page-state.ts";
 import { AlongAxis } from "./AlongAxis.tsx";
 import { AlongLegend } from "./AlongLegend.tsx";
 import { alongScale, farthest } from "./along-axis.ts";
+import { isSpread, loadSpreadLegend } from "./decided-parts.ts";
 import { Ribbon } from "./Ribbon.tsx";
 
 /** All routes unrolled on one axis, of distance or of time since departure. */
@@ -13,6 +15,7 @@ export function Ribbons({ page }: { readonly page: PageState }) {
   const { ref, width } = useWidth<HTMLDivElement>(640);
   const { view, store, answers } = page;
   const answer = answers.answer.value;
+  const decided = page.routes.value[store.selection.value.route] ?? null;
   const axis = view.axis.value;
   const end = farthest(answer, axis === "time");
   const scale = alongScale(end, width);
@@ -23,6 +26,9 @@ export function Ribbons({ page }: { readonly page: PageState }) {
       <header class="pane-head">
         <h2 id="ribbons-title">Ribbons</h2>
         <StaleMark page={page} />
+        {decided !== null && isSpread(decided) && (
+          <LazyPart load={loadSpreadLegend} page={page} decided={decided} />
+        )}
         <AlongLegend limit_m_s={limit} units={view.units.value} />
         <fieldset class="choice">
           <legend class="unseen">Axis of the ribbons</legend>

@@ -1,6 +1,7 @@
 import type { SensitivityProfile } from "../core.ts";
 import type { LinearScale } from "../format/linear-scale.ts";
 import { BAND_BOTTOM, BAND_HEIGHT } from "./ribbon-measures.ts";
+import "./sensitivity.css";
 
 interface SensitivityStrokeProps {
   readonly profile: SensitivityProfile;

@@ -1,57 +1,9 @@
-import type { DecidedRoute } from "../core.ts";
 import type { LinearScale } from "../format/linear-scale.ts";
 import { storeLevel } from "./ribbon-measures.ts";
+import type { LeftBetween } from "./spread-between.ts";
 
-/** Standard deviations from the middle to the 10 % and 90 % quantiles of a normal distribution (R: qnorm(0.9)). */
-const DEVIATIONS = 1.2816;
-
-/** What is left at a waypoint with 10 % and 90 % probability; the two sources of spread are never mixed. */
-export interface LeftBetween {
-  /** On the ribbon's axis. */
-  readonly at: number;
-  readonly low: number;
-  readonly high: number;
-}
-
-/** At the start and at every leg's end, under the stated forecast error. */
-export function spreadBetween(route: DecidedRoute, ends: readonly number[]): LeftBetween[] {
-  const { spread } = route;
-  if (!spread) return [];
-  return withStart(
-    route,
-    ends,
-    spread.legs.map(({ remaining }, leg) => {
-      const left = route.legs[leg]?.remaining ?? null;
-      const half = DEVIATIONS * remaining;
-      return left === null ? null : [left - half, left + half];
-    }),
-  );
-}
-
-/** The same among an ensemble's members. */
-export function ensembleBetween(route: DecidedRoute, ends: readonly number[]): LeftBetween[] {
-  const { ensemble } = route;
-  if (ensemble === undefined) return [];
-  return withStart(
-    route,
-    ends,
-    ensemble.legs.map(({ remaining }) => (remaining === null ? null : [remaining.p10, remaining.p90])),
-  );
-}
-
-function withStart(
-  { usable }: DecidedRoute,
-  ends: readonly number[],
-  legs: readonly (readonly [number, number] | null)[],
-): LeftBetween[] {
-  const found: LeftBetween[] = [{ at: ends[0] ?? 0, low: usable, high: usable }];
-  for (const [leg, between] of legs.entries()) {
-    const at = ends[leg + 1];
-    if (between === null || at === undefined) break;
-    found.push({ at, low: between[0], high: between[1] });
-  }
-  return found;
-}
+/** Half the width of the caps of a bar, px. */
+const CAPS = { error: 4, ensemble: 7 } as const;
 
 interface SpreadBandProps {
   readonly between: readonly LeftBetween[];
@@ -60,12 +12,40 @@ interface SpreadBandProps {
   readonly kind: "error" | "ensemble";
 }
 
-/** A band around the store line, straight between waypoints. */
+/** A band under the store line, straight between waypoints: hatched under a stated error, dashed among members. */
 export function SpreadBand({ between, usable, scale, kind }: SpreadBandProps) {
   if (between.length < 2) return null;
   const point = (at: number, amount: number): string =>
     `${scale(at).toFixed(2)} ${storeLevel(amount, usable).toFixed(2)}`;
   const upper = between.map(({ at, high }) => point(at, high));
   const lower = [...between].reverse().map(({ at, low }) => point(at, low));
-  return <path class={`spread-band ${kind}`} d={`M${[...upper, ...lower].join("L")}Z`} />;
+  return <path class={`spread-band ${kind} band`} d={`M${[...upper, ...lower].join("L")}Z`} />;
+}
+
+/** Its bar over the store line at every waypoint: where the band is narrower than the line, the caps tell that it is there. */
+export function SpreadBars({ between, usable, scale, kind }: SpreadBandProps) {
+  const level = (amount: number): string => storeLevel(amount, usable).toFixed(2);
+  const cap = CAPS[kind];
+  const bars = between.slice(1).map(({ at, low, high }) => {
+    const x = scale(at);
+    const across = (amount: number): string => `M${(x - cap).toFixed(2)} ${level(amount)}h${2 * cap}`;
+    return `${across(high)}${across(low)}M${x.toFixed(2)} ${level(high)}V${level(low)}`;
+  });
+  return (
+    <g class={`spread-band ${kind}`}>
+      <path class="casing" d={bars.join("")} />
+      <path class="bars" d={bars.join("")} />
+    </g>
+  );
+}
+
+/** The hatching of a band under a stated error. */
+export function SpreadHatch() {
+  return (
+    <defs>
+      <pattern id="spread-hatch" width="4" height="4" patternUnits="userSpaceOnUse">
+        <path class="spread-hatch" d="M-1 1L1 -1M0 4L4 0M3 5L5 3" />
+      </pattern>
+    </defs>
+  );
 }

@@ -3,25 +3,27 @@ import type { FunctionComponent } from "preact";
 import { useLayoutEffect } from "preact/hooks";
 import type { PageState } from "../state/page-state.ts";
 
-type Part = FunctionComponent<{ readonly page: PageState }>;
-/** Always the same function for a part, so that it is loaded once. */
-type Load = () => Promise<Part>;
-
-interface LazyPartProps {
+interface PartProps {
   readonly page: PageState;
-  readonly load: Load;
 }
 
-const loaded = new WeakMap<Load, Part>();
+/** Always the same function for a part, so that it is loaded once. */
+type Load<Props extends PartProps> = () => Promise<FunctionComponent<Props>>;
+
+const loaded = new WeakMap<object, unknown>();
 
 /** Loads a part before it is shown, so that it then shows at once. */
-export async function preload(load: Load): Promise<void> {
+export async function preload<Props extends PartProps>(load: Load<Props>): Promise<void> {
   loaded.set(load, await load());
 }
 
-/** A part of the page that is loaded when it is first shown. */
-export function LazyPart({ page, load }: LazyPartProps) {
-  const shown = useSignal<Load | null>(null);
+/** A part of the page that is loaded when it is first shown; what it is given besides is handed on to it. */
+export function LazyPart<Props extends PartProps>({
+  load,
+  ...props
+}: Props & { readonly load: Load<Props> }) {
+  const { page } = props;
+  const shown = useSignal<Load<Props> | null>(null);
   useLayoutEffect(() => {
     if (loaded.has(load)) return;
     let current = true;
@@ -39,6 +41,6 @@ export function LazyPart({ page, load }: LazyPartProps) {
   }, [load, shown, page]);
   // Read for what it tells: that the part has come.
   void shown.value;
-  const Part = loaded.get(load);
-  return Part === undefined ? null : <Part page={page} />;
+  const Part = loaded.get(load) as FunctionComponent<Props> | undefined;
+  return Part === undefined ? null : <Part {...(props as unknown as Props)} />;
 }

@@ -3,6 +3,8 @@ import { Swatch } from "../ribbon/Ribbon.tsx";
 import { wantsDecisions } from "../state/decisions.ts";
 import type { PageState } from "../state/page-state.ts";
 import { ErrorFields } from "./ErrorFields.tsx";
+import { LegSpreadTable } from "./LegSpreadTable.tsx";
+import { SpreadGauges } from "./SpreadGauges.tsx";
 import { ensembleWords, spreadWords } from "./spread-words.ts";
 import { WhatIfList } from "./WhatIfList.tsx";
 import { WhatIfTable } from "./WhatIfTable.tsx";
@@ -18,6 +20,8 @@ export function SureView({ page }: { readonly page: PageState }) {
   const isSpread = routes.some((route) => route?.spread);
   return (
     <div class="sure-view">
+      <SpreadGauges page={page} />
+      {pending && <p class="quiet">Working it out…</p>}
       <WhatIfList page={page} />
       {chosen !== null && <WhatIfTable page={page} route={chosen} />}
       <ErrorFields page={page} />
@@ -33,7 +37,6 @@ export function SureView({ page }: { readonly page: PageState }) {
           Draw on ribbons and chart where a wrong forecast adds most to the spread of the use
         </label>
       )}
-      {pending && <p class="quiet">Working it out…</p>}
       {routes.map((route, at) =>
         route !== null && (route.spread !== undefined || route.ensemble !== undefined) ? (
           <RouteSure key={at} page={page} route={route} at={at} />
@@ -55,7 +58,7 @@ function RouteSure({ page, route, at }: { page: PageState; route: DecidedRoute; 
       )}
       {spread && (
         <p>
-          Forecast error (the grey band around the store line: 10 % to 90 %).{" "}
+          Forecast error (the hatched band around the store line: 10 % to 90 %).{" "}
           {spreadWords(route, spread, page.view).join(" ")}
         </p>
       )}
@@ -65,6 +68,7 @@ function RouteSure({ page, route, at }: { page: PageState; route: DecidedRoute; 
           {ensembleWords(route, ensemble, page.view).join(" ")}
         </p>
       )}
+      <LegSpreadTable route={route} />
     </section>
   );
 }

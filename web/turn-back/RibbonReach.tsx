@@ -2,6 +2,7 @@ import type { Reach, RoutePlace, TurnBack } from "../core.ts";
 import type { LinearScale } from "../format/linear-scale.ts";
 import { BAND_BOTTOM, BAND_TOP, REACH_STEP } from "../ribbon/ribbon-measures.ts";
 import { awayGoals, noReturns } from "./turn-back-places.ts";
+import "./reach.css";
 
 interface RibbonReachProps {
   readonly turn: TurnBack;
