@@ -120,6 +120,18 @@ describe("the workboat's decision", () => {
     expect([held(sound), sound.status]).toEqual(["7 of 7", "caution"]);
   });
 
+  it("at sixteen is sure through the sound; west about an hour late outlasts the forecast, an hour sooner does not", async () => {
+    const { sure } = await windowOf("islands-decide");
+    expect(sure?.best.sure).toEqual(sure?.best.plain);
+    expect(at(sure?.best.sure.time)).toBe("16:00");
+    const west = sure?.routes.find(({ route }) => route === "West about");
+    expect(west?.plain.time?.sure).toMatchObject({
+      decidedBy: { whatIf: "An hour late" },
+      worst: { code: "outside-time" },
+    });
+    expect([west?.plain.time, west?.sure.time].map(at)).toEqual(["16:00", "15:00"]);
+  });
+
   it("can turn off longer to the place on its own side of the island than back to the start", async () => {
     const routes = await routesOf("islands-decide");
     for (const [name, goal] of [
@@ -159,6 +171,14 @@ describe("the drone's decision", () => {
     expect(gained / WH).toBeGreaterThan(40);
     const route = named(await routesOf("survey-decide", "2027-09-14T00:30Z"), low);
     expect([held(route), route.status]).toEqual(["7 of 7", "clear"]);
+  });
+
+  it("leaves three quarters of an hour sooner than the plain estimate allows, and by the low way alone", async () => {
+    const { sure } = await windowOf("survey-decide");
+    expect([sure?.best.plain.latest, sure?.best.sure.latest].map(at)).toEqual(["01:30", "00:45"]);
+    expect(sure?.best.plain.latest?.sure.decidedBy.whatIf).toBe("Wind a tenth stronger");
+    const high = sure?.routes.find(({ route }) => route === "High, straight");
+    expect([at(high?.plain.time), high?.sure.time]).toEqual(["00:30", null]);
   });
 
   it("can reach the strip from further than the pad", async () => {
@@ -205,6 +225,17 @@ describe("the ship's decision", () => {
       stream,
       "12:00",
     ]);
+  });
+
+  it("gives up 13 kn, at which a fouled hull breaks the reserve, and is five and a half hours longer under way", async () => {
+    const { sure } = await windowOf("ocean-decide");
+    const { plain, sure: held } = sure?.best ?? {};
+    expect([plain?.time, held?.time].map((cell) => (cell?.speed_m_s ?? 0) / KNOT)).toEqual([
+      expect.closeTo(13, 9),
+      expect.closeTo(12.5, 9),
+    ]);
+    expect(plain?.time?.sure.decidedBy.whatIf).toBe("Fouled hull");
+    expect(((held?.time?.passage_s ?? 0) - (plain?.time?.passage_s ?? 0)) / 3600).toBeCloseTo(5.6, 1);
   });
 
   it("can reach the isle from further than the start, and knows so all the way", async () => {
