@@ -26,6 +26,7 @@ async function pageOf(change: (plan: PlanDocument) => PlanDocument = (plan) => p
     estimate: estimator.estimate,
     windowSlice: async (...asked: Parameters<typeof deciding.windowSlice>) => deciding.windowSlice(...asked),
     windowBests: async (...asked: Parameters<typeof deciding.windowBests>) => deciding.windowBests(...asked),
+    windowSure: async (...asked: Parameters<typeof deciding.windowSure>) => deciding.windowSure(...asked),
   } as unknown as Engine;
   const page = createPageState(change(plan), engine);
   await page.answers.ask(page.shown.value);
@@ -158,7 +159,7 @@ describe("the ledger", () => {
     await page.decisions.ask(page.shown.value, false);
     page.store.select({ route: 1, waypoint: null });
     render(<Ledger page={page} />);
-    expect(screen.getByRole("rowheader", { name: "foul tide" })).toBeTruthy();
+    expect(await screen.findByRole("rowheader", { name: "foul tide" })).toBeTruthy();
     expect(screen.getAllByText(/holds: .*%/).length).toBe(3);
   });
 });

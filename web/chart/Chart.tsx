@@ -6,6 +6,7 @@ import type { PageState } from "../state/page-state.ts";
 import type { PageView } from "../state/page-view.ts";
 import type { FieldAt } from "../worker/protocol.ts";
 import { type ChartSession, openChart } from "./chart-session.ts";
+import type { ReadPlace } from "./read-place.ts";
 import { ShadingLegend } from "./ShadingLegend.tsx";
 import { scaleBar } from "./scale-bar.ts";
 import { UnderPointer } from "./UnderPointer.tsx";
@@ -14,7 +15,7 @@ import { UnderPointer } from "./UnderPointer.tsx";
 export function Chart({ page }: { readonly page: PageState }) {
   const host = useRef<HTMLDivElement>(null);
   const session = useRef<ChartSession | null>(null);
-  const pointer = useSignal<{ lat: number; lon: number } | null>(null);
+  const place = useSignal<ReadPlace | null>(null);
   const under = useSignal<readonly FieldAt[]>([]);
   const levels = useSignal<readonly number[]>([]);
   const metresPerPx = useSignal(1);
@@ -22,10 +23,10 @@ export function Chart({ page }: { readonly page: PageState }) {
 
   useEffect(() => {
     if (!host.current) return;
-    const opened = openChart(host.current, page, { pointer, under, metresPerPx, shadingLimit });
+    const opened = openChart(host.current, page, { place, under, metresPerPx, shadingLimit });
     session.current = opened;
     return () => opened.close();
-  }, [page, pointer, under, metresPerPx, shadingLimit]);
+  }, [page, place, under, metresPerPx, shadingLimit]);
   const fields = page.answers.answer.value.estimate?.fields;
   useEffect(() => {
     if (fields === undefined) return;
@@ -36,10 +37,13 @@ export function Chart({ page }: { readonly page: PageState }) {
 
   const { view } = page;
   const bar = scaleBar(metresPerPx.value, shownUnit(view.units.value, "distance").si, 120);
-  const place = pointer.value;
+  const read = place.value;
   return (
     <div class="chart">
-      <section ref={host} class="chart-map" id="chart" aria-label="Chart" />
+      <section ref={host} class="chart-map" id="chart" aria-label="Chart" aria-describedby="chart-keys" />
+      <p id="chart-keys" class="unseen">
+        Arrow keys move the chart, plus and minus zoom it; what the fields say in its middle is told.
+      </p>
       <p id="handle-keys" class="unseen">
         Arrow keys move it, with Shift in fine steps; Insert adds a waypoint on the next leg; Delete removes
         it.
@@ -88,11 +92,17 @@ export function Chart({ page }: { readonly page: PageState }) {
         </svg>
         {bar.value} {shownUnit(view.units.value, "distance").symbol}
       </div>
-      <output class="chart-position" aria-label="Position of the pointer">
-        {place !== null && (
+      {/* A mouse moves too fast to be told of. */}
+      <output
+        class="chart-position"
+        aria-label="What the fields say here"
+        aria-live={read?.by === "mouse" ? "off" : "polite"}
+        aria-atomic="true"
+      >
+        {read !== null && (
           <>
             <UnderPointer fields={under.value} units={view.units.value} />
-            <span>{`${latText(place.lat)}  ${lonText(place.lon)}`}</span>
+            <span>{`${latText(read.lat)}  ${lonText(read.lon)}`}</span>
           </>
         )}
       </output>

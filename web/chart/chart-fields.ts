@@ -69,15 +69,15 @@ function showCoverage(map: L.Map, page: PageState): () => void {
   });
 }
 
-/** Asks for the fields' values under the pointer, at the chart's instant and height. */
-export function readUnderPointer(
+/** Asks for the fields' values where the chart is read, at its instant and height. */
+export function readFields(
   page: PageState,
-  pointer: Signal<{ lat: number; lon: number } | null>,
+  read: Signal<{ lat: number; lon: number } | null>,
   under: Signal<readonly FieldAt[]>,
 ): () => void {
   const newest = latestWins((question: PlaceQuestion) => page.engine.fieldsAt(question));
   return effect(() => {
-    const place = pointer.value;
+    const place = read.value;
     const instant = shownInstant(page);
     const height_m = page.view.level.value;
     const { estimate } = page.answers.answer.value;
@@ -86,7 +86,7 @@ export function readUnderPointer(
       return;
     }
     void newest({ lat: place.lat, lon: withinTurn(place.lon), height_m, instant }).then((found) => {
-      if (found !== SUPERSEDED && pointer.peek() !== null) under.value = found;
+      if (found !== SUPERSEDED && read.peek() !== null) under.value = found;
     });
   });
 }

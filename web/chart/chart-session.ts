@@ -7,20 +7,22 @@ import { alongLimit } from "../state/along-scale.ts";
 import { type PageState, shownInstant } from "../state/page-state.ts";
 import { appendWaypoint, deleteWaypoint, insertWaypoint, placeWaypoint } from "../state/waypoint-edits.ts";
 import type { FieldAt } from "../worker/protocol.ts";
-import { readUnderPointer, showFields } from "./chart-fields.ts";
+import { readFields, showFields } from "./chart-fields.ts";
 import { type ChartMap, createChartMap } from "./chart-map.ts";
 import { fitClear, roomsBeside, whenBesideChanges } from "./chart-room.ts";
 import { showDecidedLater } from "./decided-later.ts";
 import { turnsToward } from "./longitude.ts";
 import { Marks } from "./marks.ts";
 import { rounded } from "./place-rounding.ts";
+import { followPlace, type ReadPlace } from "./read-place.ts";
 import { RouteLines, shiftFor } from "./route-lines.ts";
 import { drawnRoutes, handlesOf, legMiddles } from "./route-view.ts";
 import { WaypointHandles } from "./waypoint-handles.ts";
 
 export interface ChartReadouts {
-  readonly pointer: Signal<{ lat: number; lon: number } | null>;
-  /** What the fields say under the pointer. */
+  /** Where the chart is read; `null` for nowhere. */
+  readonly place: Signal<ReadPlace | null>;
+  /** What the fields say there. */
   readonly under: Signal<readonly FieldAt[]>;
   readonly metresPerPx: Signal<number>;
   /** Where the shading's scale ends, m/s; `null` where nothing is shaded. */
@@ -43,10 +45,11 @@ export function openChart(host: HTMLElement, page: PageState, readouts: ChartRea
   const { map } = chart;
   const fitted = firstView(map, page);
   const closers = [
-    followPointer(map, readouts),
+    followPlace(map, page, readouts.place),
+    measureScale(map, readouts.metresPerPx),
     showRoutes(map, page),
     showFields(map, page, readouts.shadingLimit),
-    readUnderPointer(page, readouts.pointer, readouts.under),
+    readFields(page, readouts.place, readouts.under),
     addByClick(map, page),
     followTheme(chart, page),
     showDecidedLater(map, page),
@@ -201,13 +204,7 @@ function addByClick(map: L.Map, page: PageState): () => void {
   };
 }
 
-function followPointer(map: L.Map, { pointer, metresPerPx }: ChartReadouts): () => void {
-  map.on("mousemove", ({ latlng }) => {
-    pointer.value = { lat: latlng.lat, lon: latlng.lng };
-  });
-  map.on("mouseout", () => {
-    pointer.value = null;
-  });
+function measureScale(map: L.Map, metresPerPx: Signal<number>): () => void {
   const measure = (): void => {
     const { x, y } = map.getSize().divideBy(2);
     const left = map.containerPointToLatLng([x - 50, y]);

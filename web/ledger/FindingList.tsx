@@ -1,7 +1,9 @@
 import type { Finding } from "../core.ts";
+import { LazyPart } from "../shell/LazyPart.tsx";
 import type { PageState } from "../state/page-state.ts";
-import { TurnBackList } from "../turn-back/TurnBackList.tsx";
 import { SeverityShape } from "./StatusMark.tsx";
+
+const loadTurnBackList = async () => (await import("../turn-back/TurnBackList.tsx")).TurnBackList;
 
 /** The chosen route's findings in words, the gravest first; each leads to its place. */
 export function FindingList({ page }: { readonly page: PageState }) {
@@ -33,7 +35,7 @@ export function FindingList({ page }: { readonly page: PageState }) {
       {route.turnBack !== undefined && (
         <>
           <h3>Turning back</h3>
-          <TurnBackList page={page} at={chosen} route={route} />
+          <LazyPart load={loadTurnBackList} page={page} at={chosen} route={route} />
         </>
       )}
     </section>

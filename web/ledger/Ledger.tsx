@@ -2,9 +2,9 @@ import type { DecidedRoute, RouteEstimate, StoreUnit } from "../core.ts";
 import { clockSince, clockText, durationText, signedDurationText, zoneText } from "../format/time-text.ts";
 import { inUnit, signedInUnit, storeUnit } from "../format/units.ts";
 import { Swatch } from "../ribbon/Ribbon.tsx";
+import { LazyPart } from "../shell/LazyPart.tsx";
 import { StaleMark } from "../shell/StaleMark.tsx";
 import { sureWords } from "../spread/spread-words.ts";
-import { WhatIfTable } from "../spread/WhatIfTable.tsx";
 import type { PageState } from "../state/page-state.ts";
 import { Advisory } from "./Advisory.tsx";
 import { CostBar } from "./CostBar.tsx";
@@ -12,6 +12,8 @@ import { barsEnd } from "./cost-bar.ts";
 import { FindingList } from "./FindingList.tsx";
 import { type Best, bestOf } from "./ledger-best.ts";
 import { StatusMark } from "./StatusMark.tsx";
+
+const loadWhatIfTable = async () => (await import("../spread/WhatIfTable.tsx")).WhatIfTable;
 
 /** A row a route: what it costs, what is left, what to worry about; beside the advisory, since here is where one decides. */
 export function Ledger({ page }: { readonly page: PageState }) {
@@ -93,7 +95,8 @@ export function Ledger({ page }: { readonly page: PageState }) {
 
 function ChosenWhatIfs({ page }: { readonly page: PageState }) {
   const route = page.routes.value[page.store.selection.value.route] ?? null;
-  return route === null ? null : <WhatIfTable page={page} route={route} />;
+  if (route === null || (route.whatIf ?? []).length === 0) return null;
+  return <LazyPart load={loadWhatIfTable} page={page} route={route} />;
 }
 
 interface LedgerRowProps {

@@ -3,6 +3,7 @@ import { clockSince, durationText } from "../format/time-text.ts";
 import { inUnit, storeUnit } from "../format/units.ts";
 import { SeverityShape } from "../ledger/StatusMark.tsx";
 import type { PageState } from "../state/page-state.ts";
+import "./what-if-table.css";
 
 interface Row {
   readonly name: string;

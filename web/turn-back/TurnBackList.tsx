@@ -1,6 +1,7 @@
 import type { DecidedRoute } from "../core.ts";
 import type { PageState } from "../state/page-state.ts";
 import { type TurnBackLine, turnBackLines } from "./turn-back-words.ts";
+import "./turn-back-list.css";
 
 interface TurnBackListProps {
   readonly page: PageState;
