@@ -4,10 +4,11 @@ import { type Column, laidOut, TABLE_WIDTH } from "./columns.ts";
 import { NO_FIGURE, placedText } from "./number-text.ts";
 import { clipped, displayWidth, isolated, plainText, wrapped } from "./plain-text.ts";
 import { inLastPlace, leftInLastPlace } from "./rounding.ts";
+import { triedText } from "./sure-text.ts";
 import { clockSeconds, durationText, etaText, instantText } from "./time-text.ts";
 import type { WindowReport } from "./window-input.ts";
 import { reasonWord } from "./window-matrix.ts";
-import { lateLines, passedOverLines, sureColumn, sureLegend, triedText } from "./window-sure.ts";
+import { lateLines, passedOverLines, sureColumn, sureLegend } from "./window-sure.ts";
 import type { WindowUnits } from "./window-units.ts";
 
 const STORE_WIDTH = 7;

@@ -3,45 +3,14 @@ import type { SureInTime } from "../choose/sure-in-time.ts";
 import type { SureWindow } from "../choose/sure-window.ts";
 import type { WindowCell } from "../choose/window-cell.ts";
 import type { BestBy } from "../choose/window-summary.ts";
-import type { FindingCode, RouteStatus } from "../estimate/result.ts";
+import type { RouteStatus } from "../estimate/result.ts";
 import { type Column, TABLE_WIDTH } from "./columns.ts";
 import { NO_FIGURE } from "./number-text.ts";
 import { isolated, plainText, wrapped } from "./plain-text.ts";
 import { percentText } from "./spread-rows.ts";
+import { fateText, triedText } from "./sure-text.ts";
 import { instantText } from "./time-text.ts";
 import type { WindowUnits } from "./window-units.ts";
-
-/** What the bests were tried in: `all 7 members and 3 what-ifs`; `null` where the plan names neither. */
-export function triedText({ members, whatIfs }: SureWindow): string | null {
-  const counts = [
-    ...(members === 0 ? [] : [`${members} members`]),
-    ...(whatIfs === 0 ? [] : [`${whatIfs} what-if${whatIfs === 1 ? "" : "s"}`]),
-  ];
-  if (counts.length === 0) return null;
-  return members + whatIfs === 1 ? "the what-if" : `all ${counts.join(" and ")}`;
-}
-
-/** What becomes of a departure that does not hold, as `breaks its reserve`. */
-const FATES: Partial<Record<FindingCode, string>> = {
-  "cannot-hold-track": "cannot hold its track",
-  "outside-area": "leaves the area of the forecast",
-  "outside-time": "outlasts the forecast",
-  gap: "meets a gap in the forecast",
-  "outside-power-table": "leaves the craft's power model",
-  "store-empty": "runs out of store",
-  "reserve-broken": "breaks its reserve",
-  "wind-limit": "meets more wind than its limit",
-  "gust-limit": "meets stronger gusts than its limit",
-  "arrival-missed": "arrives too late",
-};
-
-/** `breaks its reserve in the what-if "Gale" (and 2 more)` */
-function fateText({ sure: { worst, decidedBy, asBad } }: SureCell): string {
-  const fate = FATES[worst?.code ?? "gap"] ?? "does not hold";
-  const { member, whatIf } = decidedBy;
-  const where = member === null ? `the what-if "${plainText(whatIf ?? "")}"` : `member ${member}`;
-  return `${fate} in ${where}${asBad === 0 ? "" : ` (and ${asBad} more)`}`;
-}
 
 const WORDS: readonly (readonly [BestBy, string])[] = [
   ["time", "the quickest"],
@@ -102,7 +71,7 @@ function sentence(lead: string, naming: boolean, cells: readonly PassedOver[], u
     const words = WORDS.flatMap(([each, word]) => (by.includes(each) ? [word] : []));
     const what = words.join(", ").replace(/, (?=[^,]*$)/, " and ");
     const route = naming ? `${isolated(plainText(cell.route))}, ` : "";
-    return `${what}, ${route}${whenText(cell, units)}, ${fateText(cell)}`;
+    return `${what}, ${route}${whenText(cell, units)}, ${fateText(cell.sure)}`;
   });
   const text = `${lead}${parts.join("; ")}.`;
   return wrapped(text.replace(/^t/, "T"), TABLE_WIDTH);
@@ -122,7 +91,7 @@ export function lateLines(inTime: readonly SureInTime[], units: WindowUnits): st
   return inTime.flatMap(({ route, plain, sure }) => {
     if (plain === null || (sure !== null && cellKey(plain) === cellKey(sure))) return [];
     const none = sure === null ? "no departure holds and arrives in time; " : "";
-    const text = `${isolated(plainText(route))}: ${none}the latest in time, ${whenText(plain, units)}, ${fateText(plain)}.`;
+    const text = `${isolated(plainText(route))}: ${none}the latest in time, ${whenText(plain, units)}, ${fateText(plain.sure)}.`;
     return wrapped(text, TABLE_WIDTH);
   });
 }

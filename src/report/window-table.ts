@@ -4,12 +4,12 @@ import type { Units } from "./input.ts";
 import { placedText } from "./number-text.ts";
 import { plainText, wrapped } from "./plain-text.ts";
 import { inLastPlace } from "./rounding.ts";
+import { triedText } from "./sure-text.ts";
 import { arriveText, fieldText, paceText } from "./table-head.ts";
 import { instantText } from "./time-text.ts";
 import { refusalLines, windowBests } from "./window-bests.ts";
 import type { WindowReport } from "./window-input.ts";
 import { windowMatrix } from "./window-matrix.ts";
-import { triedText } from "./window-sure.ts";
 import { type WindowUnits, windowUnits } from "./window-units.ts";
 
 function stepText(seconds: number): string {

@@ -19,11 +19,15 @@ function slowHand(deciding: Deciding, most: number) {
       deciding.windowSlice(ticket, indices.subarray(0, most), budget),
     windowBests: async (ticket: number, cells: Parameters<Deciding["windowBests"]>[1], refine: boolean) =>
       deciding.windowBests(ticket, cells, refine),
+    windowSure: async (...asked: Parameters<Deciding["windowSure"]>) => deciding.windowSure(...asked),
   };
 }
 
-function windowed(): { plan: PlanDocument; hand: (most: number) => ReturnType<typeof slowHand> } {
-  const { plan, reader } = demoEngine("islands");
+function windowed(demo: "islands" | "islands-decide" = "islands"): {
+  plan: PlanDocument;
+  hand: (most: number) => ReturnType<typeof slowHand>;
+} {
+  const { plan, reader } = demoEngine(demo);
   return { plan: { ...plan, window: WINDOW }, hand: (most) => slowHand(createDeciding(reader), most) };
 }
 
@@ -86,16 +90,92 @@ describe("a window filled by two hands", () => {
   });
 });
 
+describe("a window of a plan with members, what-ifs and a stated error", () => {
+  const own = (plan: PlanDocument, refine: boolean) =>
+    windowPlan(JSON.stringify(plan), { file: "islands.plan.json", open: bytesOfDemo, refine });
+
+  test("has its bests put to the test as the command does, to the last bit, and to the minute too", async () => {
+    const { plan, hand } = windowed("islands-decide");
+    const [first, second] = [hand(4), hand(4)];
+    const fill = createWindowFill([() => first, () => second]);
+    await fill.ask(plan);
+    expect(fill.filled.value?.sure).toEqual((await own(plan, false)).sure);
+    await fill.refine();
+    expect(fill.filled.value?.sure).toEqual((await own(plan, true)).sure);
+  });
+
+  test("is not tried where the plan names nothing to do so with", async () => {
+    const { plan, hand } = windowed();
+    const only = hand(8);
+    let asked = 0;
+    const counting = {
+      ...only,
+      windowSure: async (...question: Parameters<Deciding["windowSure"]>) => {
+        asked += 1;
+        return only.windowSure(...question);
+      },
+    };
+    const fill = createWindowFill([() => counting]);
+    await fill.ask(plan);
+    expect([fill.filled.value?.shape.tried, fill.filled.value?.sure, asked]).toEqual([false, null, 0]);
+  });
+
+  test("is no longer tried once another is asked for", async () => {
+    const { plan, hand } = windowed("islands-decide");
+    const only = hand(8);
+    const answers: number[] = [];
+    let begun: () => void = () => undefined;
+    const first = new Promise<void>((resolve) => {
+      begun = resolve;
+    });
+    const slow = {
+      ...only,
+      windowSure: async (
+        ticket: number,
+        question: Parameters<Deciding["windowSure"]>[1],
+        _budget: number,
+      ) => {
+        answers.push(ticket);
+        begun();
+        // One step at a time.
+        return only.windowSure(ticket, question, 0);
+      },
+    };
+    const fill = createWindowFill([() => slow]);
+    const old = fill.ask(plan);
+    await first;
+    const short = { ...plan, window: { ...WINDOW, from: "2027-05-04T15:00Z", to: "2027-05-04T16:00Z" } };
+    await Promise.all([old, fill.ask(short)]);
+    const last = answers.at(-1);
+    expect(answers.filter((ticket) => ticket !== last).length).toBeLessThan(3);
+    expect(fill.filled.value?.plan).toBe(short);
+    expect(fill.filled.value?.sure).toEqual((await own(short, false)).sure);
+  });
+
+  test("says in a sentence which what-if cannot be tried", async () => {
+    const { plan, hand } = windowed("islands-decide");
+    const only = hand(8);
+    const fill = createWindowFill([() => only]);
+    await fill.ask({ ...plan, whatIf: [{ name: "Faster", speed: "20 kn" }] });
+    expect(fill.filled.value?.sure).toBeNull();
+    expect(fill.filled.value?.sureFault).toMatch(/^the what-if "Faster" keeps the speed above 0 and within/);
+    expect(fill.filled.value?.bests).not.toBeNull();
+  });
+});
+
 describe("what a window rests on", () => {
-  test("stays the same under another departure, title or stated error, not under another pace", () => {
+  test("stays the same under another departure, title or alternate, not under another pace, error or what-if", () => {
     const { plan } = windowed();
     const key = windowKey(plan, WINDOW, false);
     const fields = plan.fields?.map((field) => ({
       ...field,
       error: { speed: "1 m/s", length: "50 km", time: "6 h" },
     }));
-    const same = { ...plan, title: "Other", departure: "2027-05-04T09:00Z", fields: fields ?? [] };
+    const alternates = [{ name: "Quay", lat: 53.5, lon: -13.6 }];
+    const same = { ...plan, title: "Other", departure: "2027-05-04T09:00Z", alternates };
     expect(windowKey(same, WINDOW, false)).toBe(key);
+    expect(windowKey({ ...plan, fields: fields ?? [] }, WINDOW, false)).not.toBe(key);
+    expect(windowKey({ ...plan, whatIf: [{ late: "1 h" }] }, WINDOW, false)).not.toBe(key);
     expect(windowKey({ ...plan, pace: { hold: "least-energy" } }, WINDOW, false)).not.toBe(key);
     expect(windowKey(plan, { ...WINDOW, every: "2 h" }, false)).not.toBe(key);
     expect(windowKey(plan, WINDOW, true)).not.toBe(key);

@@ -1,9 +1,10 @@
 import { type ReadonlySignal, signal } from "@preact/signals";
-import type { WindowCell } from "../core.ts";
+import type { SureWindow, WindowCell } from "../core.ts";
 import type { Engine } from "../state/page-state.ts";
 import type { PlanDocument } from "../state/plan-document.ts";
 import type { WindowBests, WindowShape } from "../worker/protocol.ts";
 import { cellOrder } from "./fill-order.ts";
+import { tryBests } from "./try-bests.ts";
 
 /** A window as far as it is worked out. */
 export interface Filled {
@@ -14,6 +15,10 @@ export interface Filled {
   readonly done: number;
   /** Once all cells are there. */
   readonly bests: WindowBests | null;
+  /** Once the bests are put to the test; `null` too where the plan names nothing to do so with. */
+  readonly sure: SureWindow | null;
+  /** The core's sentence about a what-if that cannot be tried; `null` where all can. */
+  readonly sureFault: string | null;
 }
 
 export interface WindowFill {
@@ -27,7 +32,7 @@ export interface WindowFill {
   stop(): void;
 }
 
-type Hand = Pick<Engine, "beginWindow" | "windowSlice" | "windowBests">;
+type Hand = Pick<Engine, "beginWindow" | "windowSlice" | "windowBests" | "windowSure">;
 
 /** How long a hand works before it looks up: the first also answers everything else that the page asks. */
 const BUDGETS_MS = [8, 60] as const;
@@ -41,6 +46,22 @@ export function createWindowFill(hands: readonly (() => Hand)[]): WindowFill {
   const filled = signal<Filled | null>(null);
   const fault = signal<string | null>(null);
   let current = 0;
+  let tries = 0;
+
+  /** The bests, and then how sure they are. On the last hand, since it takes a while and the first answers everything else. */
+  const decide = async (ticket: number, cells: readonly WindowCell[], refine: boolean): Promise<void> => {
+    const hand = hands.at(-1)?.();
+    const bests = await hand?.windowBests(ticket, cells, refine);
+    if (ticket !== current || !hand || !bests || filled.value === null) return;
+    filled.value = { ...filled.value, bests };
+    if (!filled.value.shape.tried) return;
+    tries += 1;
+    const own = tries;
+    const wanted = (): boolean => ticket === current && own === tries;
+    const found = await tryBests(hand, ticket, { cells, refine, inTime: bests.inTime }, wanted);
+    if (found === null || filled.value === null) return;
+    filled.value = { ...filled.value, ...found };
+  };
 
   const begin = async (hand: Hand, ticket: number, plan: PlanDocument): Promise<WindowShape | null> => {
     const answer = await hand.beginWindow(ticket, plan);
@@ -76,18 +97,11 @@ export function createWindowFill(hands: readonly (() => Hand)[]): WindowFill {
       );
       const done = show.finished();
       if (ticket !== current || done === null) return;
-      // The last hand, since latest departures in time take a while and the first answers everything else.
-      const bests = await hands.at(-1)?.().windowBests(ticket, done, false);
-      if (ticket === current && bests && filled.value) filled.value = { ...filled.value, bests };
+      await decide(ticket, done, false);
     },
     async refine() {
-      const now = filled.value;
-      const hand = hands.at(-1)?.();
-      if (now === null || hand === undefined) return;
-      const ticket = current;
-      const cells = now.cells.flatMap((cell) => cell ?? []);
-      const bests = await hand.windowBests(ticket, cells, true);
-      if (ticket === current && bests && filled.value) filled.value = { ...filled.value, bests };
+      const cells = filled.value?.cells.flatMap((cell) => cell ?? []);
+      if (cells !== undefined) await decide(current, cells, true);
     },
     stop() {
       tickets += 1;
@@ -161,7 +175,7 @@ function createShow(filled: { value: Filled | null }, wanted: () => boolean) {
         { length: shape.departures.length * shape.routes * (shape.speeds?.length ?? 1) },
         () => null,
       );
-      filled.value = { plan, shape, cells, done: 0, bests: null };
+      filled.value = { plan, shape, cells, done: 0, bests: null, sure: null, sureFault: null };
     },
     add(indices: Int32Array, found: readonly WindowCell[]): void {
       found.forEach((cell, at) => {

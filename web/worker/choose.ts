@@ -2,10 +2,14 @@
  * The part of the core that decides, apart from the rest of it so that the worker loads it when it is first wanted.
  */
 export { estimateArriving } from "../../src/choose/arriving-estimate.ts";
+export { CellTrials } from "../../src/choose/cell-trials.ts";
 export { windowDepartures } from "../../src/choose/departure-window.ts";
 export { latestInTime } from "../../src/choose/in-time.ts";
+export type { MinuteCells } from "../../src/choose/minute-cells.ts";
 export { fastestWithReserve, leastUseSpeed, paceCurve } from "../../src/choose/pace-curve.ts";
-export { refineWindow } from "../../src/choose/refine.ts";
+export { refinedBests, refineRoutes } from "../../src/choose/refine.ts";
+export type { Steps } from "../../src/choose/steps.ts";
+export { type SureWindow, sureWindow } from "../../src/choose/sure-window.ts";
 export { withTurnBack } from "../../src/choose/turn-back-estimate.ts";
 export { conditionsOf, withUncertainty } from "../../src/choose/uncertain-estimate.ts";
 export { makeSweep, type Sweep, sweepCell } from "../../src/choose/window.ts";

@@ -1,16 +1,22 @@
 import type { WindowCell } from "../core.ts";
 import type { PlanDocument } from "../state/plan-document.ts";
 import {
+  CellTrials,
   conditionsOf,
   estimateArriving,
   fastestWithReserve,
   latestInTime,
   leastUseSpeed,
+  type MinuteCells,
   makeSweep,
   paceCurve,
-  refineWindow,
+  refinedBests,
+  refineRoutes,
+  type Steps,
+  type SureWindow,
   type Sweep,
   summariseWindow,
+  sureWindow,
   sweepCell,
   windowDepartures,
 } from "./choose.ts";
@@ -21,6 +27,8 @@ import type {
   Answered,
   DecideAnswer,
   PaceAnswer,
+  SureQuestion,
+  SureSlice,
   WindowBests,
   WindowShape,
   WindowSlice,
@@ -32,6 +40,7 @@ export interface Deciding {
   beginWindow(ticket: number, plan: PlanDocument): Promise<Answered<WindowShape>>;
   windowSlice(ticket: number, indices: Int32Array, budget_ms: number): WindowSlice | null;
   windowBests(ticket: number, cells: readonly WindowCell[], refine: boolean): WindowBests | null;
+  windowSure(ticket: number, question: SureQuestion | null, budget_ms: number): Answered<SureSlice> | null;
   paceCurve(plan: PlanDocument, route: number): Promise<Answered<PaceAnswer>>;
 }
 
@@ -41,6 +50,11 @@ interface OpenWindow {
   readonly window: NonNullable<Plan["window"]>;
   readonly departures: readonly number[];
   readonly speeds: readonly (number | null)[];
+  readonly trials: CellTrials;
+  /** The cells tried for the bests to the minute, once they were asked for. */
+  minutes: readonly MinuteCells[] | null;
+  /** What is left to try of the bests. */
+  sure: Steps<SureWindow> | null;
 }
 
 export function createDeciding(reader: PlanReader): Deciding {
@@ -54,14 +68,19 @@ export function createDeciding(reader: PlanReader): Deciding {
       }),
     beginWindow: (ticket, document) =>
       answered(async () => {
-        const { plan, input, prepared } = await reader.read(document);
+        const { plan, input, prepared, members } = await reader.read(document);
         if (plan.window === undefined) throw new Error("a window is asked of a plan that names none");
         const sweep = makeSweep(prepared, input, plan.arrive ?? null);
         const departures = windowDepartures(plan.window);
         const { speeds_m_s } = plan.window;
-        open = { ticket, sweep, window: plan.window, departures, speeds: speeds_m_s ?? [null] };
+        const { whatIfs = [], errors = [] } = plan;
+        const asked = { whatIfs, errors, members };
+        const trials = new CellTrials(sweep, asked);
+        const speeds = speeds_m_s ?? [null];
+        open = { ticket, sweep, window: plan.window, departures, speeds, trials, minutes: null, sure: null };
         const { unit, usable } = input.craft.store;
-        return { departures, routes: prepared.length, speeds: speeds_m_s, storeUnit: unit, usable };
+        const tried = CellTrials.has(asked);
+        return { departures, routes: prepared.length, speeds: speeds_m_s, storeUnit: unit, usable, tried };
       }),
     windowSlice(ticket, indices, budget_ms) {
       if (open === null || open.ticket !== ticket) return null;
@@ -70,8 +89,20 @@ export function createDeciding(reader: PlanReader): Deciding {
     windowBests(ticket, cells, refine) {
       if (open === null || open.ticket !== ticket) return null;
       const { sweep, window } = open;
-      const refined = refine ? refineWindow(sweep, window, cells) : null;
+      if (refine) open.minutes ??= refineRoutes(sweep, window, cells);
+      const refined = refine && open.minutes !== null ? refinedBests(open.minutes) : null;
       return { summary: summariseWindow(cells), refined, ...inTimeOf(open) };
+    },
+    windowSure(ticket, question, budget_ms) {
+      if (open === null || open.ticket !== ticket) return null;
+      const { sweep, window, trials } = open;
+      if (question !== null) {
+        const { cells, refine, inTime } = question;
+        if (refine) open.minutes ??= refineRoutes(sweep, window, cells);
+        const minutes = refine ? open.minutes : null;
+        open.sure = sureWindow(sweep, trials, { window, cells, minutes, inTime, paces: null });
+      }
+      return sureSlice(open.sure, budget_ms);
     },
     paceCurve: (plan, route) => answered(async () => paceOf(await reader.read(plan), route)),
   };
@@ -105,6 +136,21 @@ function slice(
     if (performance.now() >= end) break;
   }
   return { cells };
+}
+
+function sureSlice(steps: Steps<SureWindow> | null, budget_ms: number): Answered<SureSlice> {
+  if (steps === null) throw new Error("the bests of a window go on being tried before they begin");
+  const end = performance.now() + budget_ms;
+  try {
+    for (;;) {
+      const { done, value } = steps.next();
+      if (done === true) return { ok: true, sure: value };
+      if (performance.now() >= end) return { ok: true, sure: null };
+    }
+  } catch (fault) {
+    if (fault instanceof InputError) return { ok: false, fault: fault.message };
+    throw fault;
+  }
 }
 
 function paceOf(read: PlanRead, at: number): PaceAnswer {

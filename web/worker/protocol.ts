@@ -12,6 +12,7 @@ import type {
   StillCurve,
   StillPoint,
   StoreUnit,
+  SureWindow,
   Units,
   WindowCell,
   WindowSummary,
@@ -189,6 +190,8 @@ export interface WindowShape {
   readonly speeds: readonly number[] | null;
   readonly storeUnit: StoreUnit;
   readonly usable: number;
+  /** Whether the plan names members, what-ifs or a stated error to put the bests to the test with. */
+  readonly tried: boolean;
 }
 
 /** The first of the cells asked for, as many as were done in time. */
@@ -204,6 +207,19 @@ export interface WindowBests {
   readonly inTime: InTime | null;
   /** What is wrong with the arrival to keep; `null` where nothing is. */
   readonly inTimeFault: string | null;
+}
+
+/** A window whose bests are to be put to the test: all its cells, and what was made of them. */
+export interface SureQuestion {
+  readonly cells: readonly WindowCell[];
+  /** Whether the bests are to be sure to the minute too. */
+  readonly refine: boolean;
+  readonly inTime: InTime | null;
+}
+
+/** `null` while there is more to try. */
+export interface SureSlice {
+  readonly sure: SureWindow | null;
 }
 
 /** A route against the speed through the medium. */
@@ -265,5 +281,15 @@ export interface Worker {
   /** Cells of a window, in the order of their indices, until the time is spent; `null` where it is no longer open. */
   windowSlice(ticket: number, indices: Int32Array, budget_ms: number): Promise<WindowSlice | null>;
   windowBests(ticket: number, cells: readonly WindowCell[], refine: boolean): Promise<WindowBests | null>;
+  /**
+   * Puts the bests of a window to the test until the time is spent; `null` where it is no longer open.
+   *
+   * @param question begins anew; `null` goes on
+   */
+  windowSure(
+    ticket: number,
+    question: SureQuestion | null,
+    budget_ms: number,
+  ): Promise<Answered<SureSlice> | null>;
   paceCurve(plan: PlanDocument, route: number): Promise<Answered<PaceAnswer>>;
 }

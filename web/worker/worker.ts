@@ -88,6 +88,7 @@ const worker: Worker = {
   beginWindow: async (ticket, plan) => (await decided()).beginWindow(ticket, plan),
   windowSlice: async (ticket, indices, budget) => (await decided()).windowSlice(ticket, indices, budget),
   windowBests: async (ticket, cells, refine) => (await decided()).windowBests(ticket, cells, refine),
+  windowSure: async (ticket, question, budget) => (await decided()).windowSure(ticket, question, budget),
   paceCurve: async (plan, route) => (await decided()).paceCurve(plan, route),
 };
 

@@ -1,0 +1,34 @@
+import { fateText, percentText, type Sure, type SureWindow, triedText } from "../core.ts";
+import { SeverityShape } from "../ledger/StatusMark.tsx";
+
+interface SureMarkProps {
+  readonly sure: Sure;
+  /** What it was tried in. */
+  readonly of: SureWindow;
+}
+
+/** What a departure comes to in every member and what-if of the plan: a shape, and words that say it too. */
+export function SureMark({ sure, of }: SureMarkProps) {
+  return (
+    <span class={`sure ${sure.status}`}>
+      <SeverityShape severity={sure.status} /> {sureText(sure, of)}
+    </span>
+  );
+}
+
+/** `stop: breaks its reserve in member 3 (and 1 more)`, `clear in all 7 members and 3 what-ifs; the reserve holds with a probability of 98 %` */
+function sureText(sure: Sure, of: SureWindow): string {
+  const { status, decidedBy, reserveHolds } = sure;
+  const tried = triedText(of);
+  const chance =
+    reserveHolds === null ? "" : `; the reserve holds with a probability of ${percentText(reserveHolds)}`;
+  if (status === "stop") return `stop: ${fateText(sure)}${chance}`;
+  const where = tried === null ? "" : `holds in ${tried}`;
+  const isPlain = decidedBy.member === null && decidedBy.whatIf === null;
+  const why = isPlain || sure.worst === null ? "" : `, with a caution ${variantText(sure)}`;
+  return `${status}: ${where}${why}${chance}`.replace(": ;", ":");
+}
+
+function variantText({ decidedBy: { member, whatIf }, worst }: Sure): string {
+  return `in ${member === null ? `the what-if "${whatIf}"` : `member ${member}`}: ${worst?.message ?? ""}`;
+}
