@@ -18,7 +18,7 @@ const NAME_WIDTH = 18;
 const DAY = 86_400_000;
 const MARKS: Readonly<Record<string, string>> = { time: "T", use: "U", "latest departure": "L" };
 
-/** `T`, `U`, `L` at the bests that hold; small at those of the plain estimate that do not. */
+/** `T`, `U`, `L` at the bests that hold; in brackets at those of the plain estimate that do not. */
 function letters(cell: WindowCell, { sure, summary }: WindowReport): string {
   const marks = (best: WindowBest): string[] =>
     bestWords(cell, best)
@@ -27,7 +27,8 @@ function letters(cell: WindowCell, { sure, summary }: WindowReport): string {
   if (sure === undefined || sure === null) return marks(summary.best).join("");
   const held = marks(sure.best.sure);
   const passed = marks(sure.best.plain).filter((mark) => !held.includes(mark));
-  return [...held, ...passed.map((mark) => mark.toLowerCase())].join("");
+  const brackets = passed.length === 0 ? "" : `(${passed.join("")})`;
+  return held.join("") + brackets;
 }
 
 const REASONS: Partial<Record<FindingCode, string>> = {

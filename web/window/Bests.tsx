@@ -27,7 +27,7 @@ export function Bests({ page, filled, onRefine }: BestsProps) {
       ) : (
         <ul aria-label="Best departures">
           {toldBests(pair, best).map((told) => (
-            <BestItem key={told.letter} page={page} filled={filled} told={told} />
+            <BestItem key={told.name} page={page} filled={filled} told={told} />
           ))}
           {best.closedBy !== null && <li class="quiet">after the latest: {best.closedBy.message}</li>}
         </ul>
@@ -83,10 +83,10 @@ interface BestItemProps {
   readonly told: ToldBest;
 }
 
-function BestItem({ page, filled, told: { letter, name, cell } }: BestItemProps) {
+function BestItem({ page, filled, told: { letter, name, isPassed, cell } }: BestItemProps) {
   const sign = (
-    <span class="best-letter" aria-hidden="true">
-      {letter}
+    <span class={`best-letter ${isPassed ? "passed" : ""}`} aria-hidden="true">
+      {isPassed ? `(${letter})` : letter}
     </span>
   );
   if (cell === null) {

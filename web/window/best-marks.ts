@@ -9,11 +9,13 @@ const BESTS = [
   ["latest", "L", "Latest departure"],
 ] as const;
 
-/** A best of a window as it is told: with its letter, small where it is the plain estimate's and does not hold. */
+/** A best of a window as it is told. */
 export interface ToldBest {
   readonly by: "time" | "use" | "latest";
   readonly letter: string;
   readonly name: string;
+  /** Whether it is the plain estimate's alone, and does not hold: its letter then stands in brackets. */
+  readonly isPassed: boolean;
   /** `null` where no departure holds. */
   readonly cell: WindowCell | SureCell | null;
 }
@@ -21,10 +23,10 @@ export interface ToldBest {
 /** The bests to tell of: those that hold, each followed by the plain estimate's where that is another; the plain ones until they are tried. */
 export function toldBests(pair: SureWindow["best"] | null, plain: WindowBest): readonly ToldBest[] {
   return BESTS.flatMap(([by, letter, name]): ToldBest[] => {
-    const own = { by, letter, name, cell: pair === null ? plain[by] : pair.sure[by] };
+    const own = { by, letter, name, isPassed: false, cell: pair === null ? plain[by] : pair.sure[by] };
     const passed = pair?.plain[by] ?? null;
     if (passed === null || isSameCell(passed, own.cell)) return own.cell === null ? [] : [own];
-    return [own, { by, letter: letter.toLowerCase(), name: `${name} by the plain estimate`, cell: passed }];
+    return [own, { by, letter, name: `${name} by the plain estimate`, isPassed: true, cell: passed }];
   });
 }
 
@@ -32,14 +34,24 @@ function isSameCell(a: WindowCell, b: WindowCell | null): boolean {
   return a.route === b?.route && a.departure === b.departure && a.speed_m_s === b.speed_m_s;
 }
 
+/** Letters on one cell of the map. */
+export interface BestMark {
+  readonly row: number;
+  readonly column: number;
+  /** `TU`, `L(T)`: in brackets those of the plain estimate that do not hold. */
+  readonly letters: string;
+  /** Whether none of them holds. */
+  readonly isPassed: boolean;
+}
+
 /** Where the bests of the whole window stand among the rows; letters that fall on one cell stand together. */
 export function bestMarks(
   { bests, sure, shape, cells }: Filled,
   rows: readonly HeatRow[],
-): readonly { readonly row: number; readonly column: number; readonly letters: string }[] {
+): readonly BestMark[] {
   if (bests === null) return [];
-  const found = new Map<string, { row: number; column: number; letters: string }>();
-  for (const { letter, cell } of toldBests(sure?.best ?? null, bests.summary.best)) {
+  const found = new Map<string, { row: number; column: number; held: string; passed: string }>();
+  for (const { letter, cell, isPassed } of toldBests(sure?.best ?? null, bests.summary.best)) {
     const place =
       cell === null
         ? null
@@ -51,9 +63,16 @@ export function bestMarks(
           );
     if (place === null) continue;
     const at = `${place.row} ${place.column}`;
-    found.set(at, { ...place, letters: (found.get(at)?.letters ?? "") + letter });
+    const mark = found.get(at) ?? { ...place, held: "", passed: "" };
+    mark[isPassed ? "passed" : "held"] += letter;
+    found.set(at, mark);
   }
-  return [...found.values()];
+  return [...found.values()].map(({ row, column, held, passed }) => ({
+    row,
+    column,
+    letters: passed === "" ? held : `${held}(${passed})`,
+    isPassed: held === "",
+  }));
 }
 
 function placeOf(

@@ -1,6 +1,7 @@
 import { cssColour } from "../chart/css-colour.ts";
 import type { WindowCell } from "../core.ts";
 import { SPEED_CLASSES, speedColour } from "../format/palette.ts";
+import type { BestMark } from "./best-marks.ts";
 import { figureOf, heatClass, type Measure } from "./heat-rows.ts";
 
 /** What is drawn of a window, cells by row and departure. */
@@ -9,7 +10,7 @@ export interface HeatPicture {
   readonly rows: readonly (readonly (WindowCell | null)[])[];
   readonly measure: Measure;
   readonly range: readonly [number, number] | null;
-  readonly marks: readonly { readonly row: number; readonly column: number; readonly letters: string }[];
+  readonly marks: readonly BestMark[];
   readonly cellWidth: number;
   readonly rowHeight: number;
   /** Whether a cell can be done and keeps the window's arrival; none does where it keeps none. */
@@ -184,7 +185,7 @@ function drawMark(
   context: CanvasRenderingContext2D,
   { cellWidth, rowHeight, columns }: HeatPicture,
   ink: Inks,
-  { row, column, letters }: HeatPicture["marks"][number],
+  { row, column, letters, isPassed }: BestMark,
 ): void {
   const width = 6 + 8 * letters.length;
   const middle = (column + 0.5) * cellWidth;
@@ -192,9 +193,14 @@ function drawMark(
   const y = row * rowHeight + rowHeight / 2 - 7.5;
   context.fillStyle = ink.panel;
   context.fillRect(x - 1.5, y - 1.5, width + 3, 18);
-  context.fillStyle = ink.clear;
+  // What does not hold is an outline.
+  context.fillStyle = isPassed ? ink.stop : ink.clear;
   context.fillRect(x, y, width, 15);
-  context.fillStyle = ink.panel;
+  if (isPassed) {
+    context.fillStyle = ink.panel;
+    context.fillRect(x + 1.5, y + 1.5, width - 3, 12);
+  }
+  context.fillStyle = isPassed ? ink.stop : ink.panel;
   context.font = "700 11px system-ui, sans-serif";
   context.textAlign = "center";
   context.textBaseline = "middle";
