@@ -16,12 +16,14 @@ export function SureMark({ sure, of }: SureMarkProps) {
   );
 }
 
-/** `stop: breaks its reserve in member 3 (and 1 more)`, `clear in all 7 members and 3 what-ifs; the reserve holds with a probability of 98 %` */
+/** `stop: breaks its reserve in member 3 (and 1 more)`, `clear in all 7 members and 3 what-ifs; under the stated error …` */
 function sureText(sure: Sure, of: SureWindow): string {
   const { status, decidedBy, reserveHolds } = sure;
   const tried = triedText(of);
   const chance =
-    reserveHolds === null ? "" : `; the reserve holds with a probability of ${percentText(reserveHolds)}`;
+    reserveHolds === null
+      ? ""
+      : `; under the stated error the reserve holds with a probability of ${percentText(reserveHolds)}`;
   if (status === "stop") return `stop: ${fateText(sure)}${chance}`;
   const where = tried === null ? "" : `holds in ${tried}`;
   const isPlain = decidedBy.member === null && decidedBy.whatIf === null;
