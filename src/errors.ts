@@ -14,16 +14,30 @@ export interface Place {
 export class InputError extends Error {
   override readonly name = "InputError";
   readonly place: Place;
+  /** The message without its place. */
+  readonly sentence: string;
 
   /** @param sentence without a final full stop, as `latitude is in -90..90; found 91` */
   constructor(sentence: string, place: Place = {}) {
-    super(`${placeText(place)}${sentence}`);
+    super(placed(sentence, place));
     this.place = place;
+    this.sentence = sentence;
   }
 }
 
-function placeText({ file, line, key }: Place): string {
-  const parts = [file, line === undefined ? undefined : `line ${line}`, key];
+/** A sentence after its place; one about the key itself has the key's whole path for its subject, so that no word comes twice. */
+function placed(sentence: string, { file, line, key = "" }: Place): string {
+  const predicate = predicateOf(sentence, key.slice(key.lastIndexOf(".") + 1));
+  const parts = [file, line === undefined ? undefined : `line ${line}`, predicate === null ? key : undefined];
   const shown = parts.filter((part) => part !== undefined && part !== "");
-  return shown.length === 0 ? "" : `${shown.join(", ")}: `;
+  const before = shown.length === 0 ? "" : `${shown.join(", ")}: `;
+  return before + (predicate === null ? sentence : key + predicate);
+}
+
+/** What a sentence says of a key, called by its name or its words (`airDensity`, air density); `null` where it speaks of something else. */
+function predicateOf(sentence: string, name: string): string | null {
+  const words = name.replace(/[A-Z]/g, (letter) => ` ${letter.toLowerCase()}`);
+  const subject = [name, words].find((each) => each !== "" && sentence.startsWith(`${each} `));
+  const predicate = subject === undefined ? "" : sentence.slice(subject.length);
+  return /^ (?:takes|is|has|needs|belongs) /.test(predicate) ? predicate : null;
 }

@@ -172,8 +172,11 @@ describe("units", () => {
 
   test("a place stands before the sentence", () => {
     expect(() => parseQuantity(12, "speed", "speed", { file: "a.craft.json", key: "speed" })).toThrow(
-      /^a\.craft\.json, speed: speed takes/,
+      /^a\.craft\.json: speed takes/,
     );
+    expect(() =>
+      parseQuantity(12, "speed", "the least speed", { file: "a.json", key: "speeds.min" }),
+    ).toThrow(/^a\.json, speeds\.min: the least speed takes/);
   });
 
   test("an unknown symbol asked for by a program is a defect, not a user's fault", () => {

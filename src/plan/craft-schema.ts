@@ -33,7 +33,7 @@ const store = objectOf(
       "Energy, or mass or volume of fuel.",
     ),
     usable: optional(
-      quantity(["share"], "usable share", POSITIVE_SHARE, "Share of the capacity; 100 % unless given."),
+      quantity(["share"], "usable", POSITIVE_SHARE, "Share of the capacity; 100 % unless given."),
     ),
     specificConsumption: optional(
       quantity(
@@ -51,11 +51,9 @@ const store = objectOf(
 const limits = objectOf(
   "limits",
   {
-    wind: optional(quantity(["speed"], "wind limit", POSITIVE, "Greatest wind.")),
-    gust: optional(quantity(["speed"], "gust limit", POSITIVE, "Greatest gust.")),
-    groundSpeed: optional(
-      quantity(["speed"], "ground speed limit", POSITIVE, "Least speed over the ground."),
-    ),
+    wind: optional(quantity(["speed"], "wind", POSITIVE, "Greatest wind.")),
+    gust: optional(quantity(["speed"], "gust", POSITIVE, "Greatest gust.")),
+    groundSpeed: optional(quantity(["speed"], "ground speed", POSITIVE, "Least speed over the ground.")),
     opposedWind: optional(
       quantity(
         ["speed"],
@@ -99,7 +97,7 @@ export const craftSchema = objectOf(
       ),
     ),
     hotel: optional(
-      quantity(RATE, "hotel load", NOT_NEGATIVE, "What is spent all the time, under way and staying."),
+      quantity(RATE, "hotel", NOT_NEGATIVE, "What is spent all the time, under way and staying."),
     ),
     store,
     limits: optional(limits),

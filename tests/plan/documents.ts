@@ -1,3 +1,4 @@
+import { expect } from "vitest";
 import { InputError } from "../../src/errors.ts";
 import type { CraftDocument } from "../../src/plan/craft-schema.ts";
 import type { OpenFile, Plan } from "../../src/plan/plan.ts";
@@ -128,4 +129,13 @@ export async function faultOf(reading: () => Promise<unknown> | unknown): Promis
     throw error;
   }
   throw new Error("read without a fault");
+}
+
+/** Holds a message to begin with its place: the key before a sentence about something else, or the subject of its own, never both. */
+export function expectPlace(message: string, file: string, key: string): void {
+  const name = key.slice(key.lastIndexOf(".") + 1);
+  const isSubject = message.startsWith(`${file}: ${key} `);
+  expect(isSubject || message.startsWith(`${file}, ${key}: `), message).toBe(true);
+  const words = name.replace(/[A-Z]/g, (letter) => ` ${letter.toLowerCase()}`);
+  for (const twice of [name, words]) expect(message).not.toContain(`${key}: ${twice} `);
 }

@@ -270,7 +270,7 @@ describe("GeoJSON", () => {
     ['{"type":"FeatureCollection","features":[]}', "at least one route; found none"],
     ['{"type":"FeatureCollection","features":[7]}', "out, features[0]: GeoJSON is an object; found 7"],
     ['{"type":"Feature","geometry":null}', "at least one route; found none"],
-    ['{"type":"Feature","geometry":{}}', "out, geometry.type: type takes a type of GeoJSON"],
+    ['{"type":"Feature","geometry":{}}', "out: geometry.type takes a type of GeoJSON"],
     ['{"type":"Polygon","coordinates":[]}', "at least one route; found none"],
     ['{"type":"LineString"}', "coordinates take a list"],
     ['{"type":"LineString","coordinates":[]}', "at least 2 different places; found 0"],

@@ -1,5 +1,16 @@
 import { describe, expect, test } from "vitest";
-import { type Change, CUBE, changed, faultOf, ROTOR, read, SUPPLY_RUN, TENDER, WING } from "./documents.ts";
+import {
+  type Change,
+  CUBE,
+  changed,
+  expectPlace,
+  faultOf,
+  ROTOR,
+  read,
+  SUPPLY_RUN,
+  TENDER,
+  WING,
+} from "./documents.ts";
 
 type Case = readonly [what: string, changes: readonly Change[], key: string, accepted: string, found: string];
 
@@ -647,7 +658,7 @@ describe("a malformed plan", () => {
     "with %s is refused",
     async (_, changes, key, accepted, found) => {
       const message = await faultOf(() => read(changed(SUPPLY_RUN, ...changes)));
-      expect(message.startsWith(`run.plan.json, ${key}: `)).toBe(true);
+      expectPlace(message, "run.plan.json", key);
       expect(message).toContain(accepted);
       // An unknown key is named in the sentence itself; everything else says at its end what was found.
       expect(message.endsWith(`found ${found}`) || message.includes(`has no key ${found};`)).toBe(true);
@@ -663,7 +674,7 @@ describe("a malformed plan", () => {
 
   test("with several faults reports an unknown key first, else the first in the schema's order", async () => {
     const two = changed(SUPPLY_RUN, ["routes[0].waypoints[0].lat", 91], ["departure", "x"]);
-    expect(await faultOf(() => read(two))).toContain("run.plan.json, departure: ");
+    expect(await faultOf(() => read(two))).toContain("run.plan.json: departure takes");
     const three = changed(two as object, ["routes[0].waypoints[2].sped", "x"]);
     expect(await faultOf(() => read(three))).toContain("routes[0].waypoints[2].sped");
     expect(await faultOf(() => read(three))).toBe(await faultOf(() => read(three)));
@@ -673,7 +684,7 @@ describe("a malformed plan", () => {
     const plan = changed(SUPPLY_RUN, ["craft", { file: "tender.craft.json" }]);
     const craft = JSON.stringify(changed(TENDER, ["power.rows[2].speed", 12]));
     expect(await faultOf(() => read(plan, { "tender.craft.json": craft }))).toBe(
-      `tender.craft.json, power.rows[2].speed: speed takes ${SPEED}; found 12`,
+      `tender.craft.json: power.rows[2].speed takes ${SPEED}; found 12`,
     );
     expect(await faultOf(() => read(plan, { "tender.craft.json": '{\n"name": }' }))).toBe(
       'tender.craft.json, line 2: the text is not JSON: a value stands here; found "}" at column 9',

@@ -125,29 +125,17 @@ describe("the what-ifs of a plan", () => {
       [{ wind: 1.2 }, { wind: 1.2 }],
       'whatIf[1]: what-ifs have different names; found "wind × 1.2"',
     ],
-    ["with a factor below 0", [{ wind: -1 }], "whatIf[0].wind: wind is not below 0; found -1"],
-    [
-      "with a factor that has a unit",
-      [{ wind: "120 %" }],
-      "whatIf[0].wind: wind takes a number without a unit",
-    ],
-    [
-      "with an angle without its unit",
-      [{ veer: 20 }],
-      "whatIf[0].veer: veer takes a number with the unit deg",
-    ],
-    ["that spend nothing", [{ consumption: "-100 %" }], "whatIf[0].consumption: consumption is above -100 %"],
+    ["with a factor below 0", [{ wind: -1 }], "whatIf[0].wind is not below 0; found -1"],
+    ["with a factor that has a unit", [{ wind: "120 %" }], "whatIf[0].wind takes a number without a unit"],
+    ["with an angle without its unit", [{ veer: 20 }], "whatIf[0].veer takes a number with the unit deg"],
+    ["that spend nothing", [{ consumption: "-100 %" }], "whatIf[0].consumption is above -100 %"],
     [
       "with an unknown key",
       [{ winds: 1.2 }],
       'whatIf[0].winds: a what-if has no key "winds"; the nearest that it has is "wind"',
     ],
-    [
-      "with a lateness in knots",
-      [{ late: "3 kn" }],
-      "whatIf[0].late: late takes a number with one of s, min, h",
-    ],
-    ["that are no list", { wind: 1.2 }, "whatIf: whatIf takes a list of what-ifs"],
+    ["with a lateness in knots", [{ late: "3 kn" }], "whatIf[0].late takes a number with one of s, min, h"],
+    ["that are no list", { wind: 1.2 }, "whatIf takes a list of what-ifs"],
   ])("%s are one sentence", async (_, whatIf, message) => {
     expect(await faultOf({ whatIf })).toContain(message);
   });
@@ -179,13 +167,13 @@ describe("the stated error of a plan's fields", () => {
     [
       "without its length",
       { speed: "1 m/s", time: "6 h" },
-      "fields[1].error.length: length takes a number with one of",
+      "fields[1].error.length takes a number with one of",
     ],
-    ["of no speed", { ...ERROR, speed: "0 m/s" }, 'fields[1].error.speed: speed is above 0; found "0 m/s"'],
+    ["of no speed", { ...ERROR, speed: "0 m/s" }, 'fields[1].error.speed is above 0; found "0 m/s"'],
     [
       "of a time in km",
       { ...ERROR, time: "6 km" },
-      "fields[1].error.time: time takes a number with one of s, min, h",
+      "fields[1].error.time takes a number with one of s, min, h",
     ],
     ["with an unknown key", { ...ERROR, tiem: "6 h" }, 'fields[1].error.tiem: an error has no key "tiem"'],
     ["that is a number", 1.5, "fields[1].error: an error is an object; found 1.5"],
@@ -267,7 +255,7 @@ describe("an ensemble in a plan", () => {
       'three.csv: members are named by the file\'s own column or by the plan; found both, "member": 1 in the plan',
     );
     expect(await faultOf({ fields: [{ ...CURRENT, member: 1.5 }, WIND] })).toBe(
-      "a.plan.json, fields[0].member: member takes a whole number, not below 0; found 1.5",
+      "a.plan.json: fields[0].member takes a whole number, not below 0; found 1.5",
     );
   });
 });

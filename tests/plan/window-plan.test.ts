@@ -34,14 +34,14 @@ describe("the key window of a plan", () => {
     [
       "without a step",
       [["window", { from: WINDOW.from, to: WINDOW.to }]],
-      'run.plan.json, window.every: every takes a number with one of s, min, h, as "12 h"; found nothing',
+      'run.plan.json: window.every takes a number with one of s, min, h, as "12 h"; found nothing',
     ],
     [
       "of a step without a unit",
       [["window", { ...WINDOW, every: 30 }]],
-      "window.every: every takes a number with one of",
+      "window.every takes a number with one of",
     ],
-    ["of no step", [["window", { ...WINDOW, every: "0 min" }]], "window.every: every is above 0"],
+    ["of no step", [["window", { ...WINDOW, every: "0 min" }]], "window.every is above 0"],
     [
       "of half a second's steps",
       [["window", { ...WINDOW, every: "0.5 s" }]],
@@ -55,7 +55,7 @@ describe("the key window of a plan", () => {
     [
       "without a zone",
       [["window", { ...WINDOW, from: "2027-05-04T06:00" }]],
-      "window.from: from takes an explicit zone",
+      "window.from takes an explicit zone",
     ],
     [
       "of a misspelt key",
@@ -65,7 +65,7 @@ describe("the key window of a plan", () => {
     [
       "of no speeds",
       [["window", { ...WINDOW, speeds: [] }]],
-      "window.speeds: speeds takes a list of at least 1 speeds; found 0",
+      "window.speeds takes a list of at least 1 speeds; found 0",
     ],
     [
       "of a speed outside the table",
@@ -123,14 +123,10 @@ describe("a pace that asks for an arrival", () => {
     [
       "of no time",
       { arrive: "soon" },
-      'pace.arrive: arrive takes an ISO 8601 date and time with its zone, or { "notBefore", "notAfter" } of two; found "soon"',
+      'pace.arrive takes an ISO 8601 date and time with its zone, or { "notBefore", "notAfter" } of two; found "soon"',
     ],
-    ["of a number", { arrive: 18 }, "pace.arrive: arrive takes an ISO 8601 date and time with its zone, or"],
-    [
-      "of nothing",
-      { arrive: {} },
-      "pace.arrive.notAfter: notAfter takes an ISO 8601 date and time with its zone",
-    ],
+    ["of a number", { arrive: 18 }, "pace.arrive takes an ISO 8601 date and time with its zone, or"],
+    ["of nothing", { arrive: {} }, "pace.arrive.notAfter takes an ISO 8601 date and time with its zone"],
     [
       "of a misspelt key",
       { arrive: { notLater: "2027-05-04T18:00Z" } },
@@ -148,9 +144,9 @@ describe("a pace that asks for an arrival", () => {
     ],
     ["misspelt itself", { arive: "2027-05-04T18:00Z" }, "pace"],
   ])("%s is refused in one sentence with its place", async (_, pace, message) => {
-    expect(await faultOf(() => read(changed(SUPPLY_RUN, ["pace", pace])))).toContain(
-      `run.plan.json, ${message}`.slice(0, 400),
-    );
+    const fault = await faultOf(() => read(changed(SUPPLY_RUN, ["pace", pace])));
+    expect(fault.startsWith("run.plan.json")).toBe(true);
+    expect(fault).toContain(message);
   });
 
   test("needs a bound on the craft's speeds", async () => {

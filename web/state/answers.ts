@@ -4,7 +4,6 @@ import type { EstimateAnswer, RouteDrawing } from "../worker/protocol.ts";
 import { estimable } from "./estimable.ts";
 import { latestWins, SUPERSEDED } from "./latest-wins.ts";
 import type { PlanDocument } from "./plan-document.ts";
-import { saidOnce } from "./said-once.ts";
 
 /** The newest answer to the plan. Arrays of routes are indexed as the plan's; `null` where a route is still being drawn. */
 export interface Answer {
@@ -67,7 +66,7 @@ export function createAnswers(estimate: (plan: PlanDocument) => Promise<Estimate
       if (mine === asked) working.value = false;
       if (found === SUPERSEDED) return;
       if (!found.ok) {
-        answer.value = { ...answer.peek(), fault: saidOnce(found.fault) };
+        answer.value = { ...answer.peek(), fault: found.fault };
         return;
       }
       const place = plan.routes.map((_, index) => part.routes.indexOf(index));

@@ -17,9 +17,7 @@ export function studyCraft(document: CraftDocument, pace: Pace | null): CraftAns
     return { ok: true, curve, least, limit, ...pointOf(() => pace && stillPoint(craft, pace)) };
   } catch (fault) {
     if (!(fault instanceof InputError)) throw fault;
-    const { key = null } = fault.place;
-    const sentence = key === null ? fault.message : fault.message.replace(`${key}: `, "");
-    return { ok: false, key, fault: sentence };
+    return { ok: false, key: fault.place.key ?? null, fault: fault.sentence };
   }
 }
 
