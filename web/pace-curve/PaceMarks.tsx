@@ -8,13 +8,13 @@ interface PaceMarksProps {
   readonly x: LinearScale;
   readonly y: LinearScale;
   readonly bottom: number;
-  /** px of the plot's right end. */
-  readonly end: number;
+  /** px of the plot's left end. */
+  readonly start: number;
   readonly pointed: number | null;
 }
 
 /** What may be spent with the reserve kept, the plan's own speed, the speeds to choose, and the speed that is pointed at. */
-export function PaceMarks({ answer, measure, x, y, bottom, end, pointed }: PaceMarksProps) {
+export function PaceMarks({ answer, measure, x, y, bottom, start, pointed }: PaceMarksProps) {
   const { curve, least, fastest, speed_m_s } = answer;
   const level = measure === "use" ? spendable(curve.points, curve.usable) : null;
   return (
@@ -25,7 +25,8 @@ export function PaceMarks({ answer, measure, x, y, bottom, end, pointed }: PaceM
             class="reserve"
             d={level.map((at, i) => `${i === 0 ? "M" : "L"}${x(at.speed)} ${y(at.amount)}`).join("")}
           />
-          <text class="reserve-name" x={end} y={y(level.at(-1)?.amount ?? 0) - 4} text-anchor="end">
+          {/* At the slow end, where the curve is below. */}
+          <text class="reserve-name" x={start + 14} y={y(level[0]?.amount ?? 0) - 4}>
             reserve kept below
           </text>
         </>

@@ -89,7 +89,7 @@ export function PacePlot({ page, answer, route, measure, pointed, onLook, onChoo
             x={x}
             y={y}
             bottom={BOTTOM}
-            end={width - 8}
+            start={LEFT}
             pointed={pointed}
           />
         </svg>

@@ -4,7 +4,7 @@ import { valueAtDistance } from "../state/along-route.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { RouteDrawing } from "../worker/protocol.ts";
 import { axisOf } from "./along-axis.ts";
-import { SpreadBand, SpreadBars, SpreadHatch } from "./SpreadBand.tsx";
+import { SpreadBand, SpreadBars } from "./SpreadBand.tsx";
 import { alongAxis, errorBetween, membersBetween } from "./spread-between.ts";
 import "./spread.css";
 
@@ -32,7 +32,6 @@ export function RibbonSpread({ page, decided, drawing, scale, under }: RibbonSpr
   const Part = under ? SpreadBand : SpreadBars;
   return (
     <>
-      {under && <SpreadHatch />}
       <Part kind="error" between={error} {...shared} />
       <Part kind="ensemble" between={members} {...shared} />
     </>

@@ -1,7 +1,7 @@
 import type { DecidedRoute } from "../core.ts";
 import { inUnit, storeUnit } from "../format/units.ts";
 import type { PageState } from "../state/page-state.ts";
-import { SpreadHatch } from "./SpreadBand.tsx";
+import { SpreadBox, type SpreadKind } from "./SpreadBand.tsx";
 import { type Between, errorBetween, membersBetween, onArrival } from "./spread-between.ts";
 import "./spread.css";
 
@@ -44,11 +44,10 @@ function spreadText({ storeUnit: unit, usable }: DecidedRoute, between: Between 
 }
 
 /** A band as ribbons draw it. */
-export function SpreadKey({ kind }: { readonly kind: "error" | "ensemble" }) {
+export function SpreadKey({ kind }: { readonly kind: SpreadKind }) {
   return (
-    <svg class={`spread-band ${kind}`} width="22" height="10" aria-hidden="true">
-      <SpreadHatch />
-      <rect class="band" x="1" y="1" width="20" height="8" />
+    <svg width="22" height="10" aria-hidden="true">
+      <SpreadBox kind={kind} x={1} y={1} width={20} height={8} />
     </svg>
   );
 }

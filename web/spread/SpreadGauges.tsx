@@ -3,8 +3,9 @@ import { type LinearScale, linearScale } from "../format/linear-scale.ts";
 import { routeHue } from "../format/palette.ts";
 import { inUnit, storeUnit } from "../format/units.ts";
 import { Swatch } from "../ribbon/Ribbon.tsx";
-import { SpreadHatch } from "../ribbon/SpreadBand.tsx";
+import { SpreadBox, type SpreadKind } from "../ribbon/SpreadBand.tsx";
 import { SpreadKey } from "../ribbon/SpreadLegend.tsx";
+import "./sure-view.css";
 import { type Between, errorBetween, membersBetween, onArrival } from "../ribbon/spread-between.ts";
 import { useWidth } from "../shell/use-width.ts";
 import type { PageState } from "../state/page-state.ts";
@@ -101,21 +102,18 @@ interface GaugePictureProps {
 }
 
 function GaugePicture({ gauge: { left, error, members, route, at }, scale, width }: GaugePictureProps) {
-  const band = (kind: "error" | "ensemble", between: Between | null, y: number) =>
+  const band = (kind: SpreadKind, between: Between | null, y: number) =>
     between === null ? null : (
-      <g class={`spread-band ${kind}`}>
-        <rect
-          class="band"
-          x={scale(between.low)}
-          y={y}
-          width={Math.max(scale(between.high) - scale(between.low), 1)}
-          height="8"
-        />
-      </g>
+      <SpreadBox
+        kind={kind}
+        x={scale(between.low)}
+        y={y}
+        width={scale(between.high) - scale(between.low)}
+        height={8}
+      />
     );
   return (
     <svg width={width} height={HEIGHT} aria-hidden="true">
-      <SpreadHatch />
       {band("error", error, 4)}
       {band("ensemble", members, 14)}
       {left !== null && (

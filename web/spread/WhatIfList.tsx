@@ -31,7 +31,7 @@ export function WhatIfList({ page }: { readonly page: PageState }) {
     <section aria-label="What-ifs">
       <h3>What if</h3>
       {whatIfs.length > 0 && (
-        <table class="waypoint-table">
+        <table class="waypoint-table what-if-fields">
           <thead>
             <tr>
               <th scope="col">#</th>
@@ -79,7 +79,7 @@ function WhatIfRow({ page: { store }, whatIf, at }: WhatIfRowProps) {
     <tr>
       <th scope="row">{at + 1}</th>
       {KEYS.map(([key, name, placeholder]) => (
-        <td key={key}>
+        <td key={key} data-label={name}>
           <TextField
             label={`${name} of what-if ${at + 1}`}
             value={String(whatIf[key] ?? "")}

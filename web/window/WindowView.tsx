@@ -1,11 +1,12 @@
 import { useSignal } from "@preact/signals";
 import { useEffect, useLayoutEffect, useMemo } from "preact/hooks";
+import { shownUnit } from "../format/units.ts";
 import { estimable } from "../state/estimable.ts";
 import type { PageState } from "../state/page-state.ts";
 import { Bests } from "./Bests.tsx";
 import { HeatMap } from "./HeatMap.tsx";
 import { HeatScale } from "./HeatScale.tsx";
-import type { Measure, RowChoice } from "./heat-rows.ts";
+import { canShowAll, type Measure, type RowChoice } from "./heat-rows.ts";
 import { InTimeList } from "./InTimeList.tsx";
 import { proposedWindow } from "./proposed-window.ts";
 import { WindowSettings } from "./WindowSettings.tsx";
@@ -17,7 +18,7 @@ export function WindowView({ page }: { readonly page: PageState }) {
   const { store, answers, desk } = page;
   const fill = useMemo(() => createWindowFill([() => page.engine, page.second]), [page]);
   const measure = useSignal<Measure>("time");
-  const rows = useSignal<RowChoice>({ by: "routes", route: 0, speed: 0 });
+  const rows = useSignal<RowChoice>({ by: "all", route: 0, speed: 0 });
   const plan = store.plan.value;
   const { estimate, landPending } = answers.answer.value;
   const part = estimable(plan);
@@ -60,6 +61,7 @@ export function WindowView({ page }: { readonly page: PageState }) {
                 page={page}
                 rows={rows.value}
                 speeds={speeds}
+                isAll={canShowAll(filled.shape)}
                 onRows={(next) => (rows.value = next)}
               />
             )}
@@ -77,25 +79,32 @@ interface RowsFieldProps {
   readonly page: PageState;
   readonly rows: RowChoice;
   readonly speeds: readonly number[];
+  /** Whether every route can be shown at every speed. */
+  readonly isAll: boolean;
   readonly onRows: (rows: RowChoice) => void;
 }
 
-function RowsField({ page, rows, speeds, onRows }: RowsFieldProps) {
+function RowsField({ page, rows, speeds, isAll, onRows }: RowsFieldProps) {
   const names = page.store.plan.value.window?.speeds ?? [];
   const route = page.store.selection.value.route;
   return (
     <label>
       <span>Rows</span>
       <select
-        value={rows.by === "speeds" ? "speeds" : String(rows.speed)}
+        value={rows.by === "speeds" || (rows.by === "all" && isAll) ? rows.by : String(rows.speed)}
         onChange={({ currentTarget: { value } }) =>
           onRows(
-            value === "speeds"
-              ? { by: "speeds", route, speed: 0 }
+            value === "speeds" || value === "all"
+              ? { by: value, route, speed: 0 }
               : { by: "routes", route, speed: Number(value) },
           )
         }
       >
+        {isAll && (
+          <option value="all">
+            routes at every speed, {shownUnit(page.view.units.value, "speed").symbol}
+          </option>
+        )}
         {speeds.map((speed, at) => (
           <option key={speed} value={at}>
             routes at {names[at] ?? speed}

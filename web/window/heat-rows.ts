@@ -15,11 +15,19 @@ export interface HeatRow {
   readonly name: string;
 }
 
-/** Every route at one of the window's speeds, or one route at all of them. */
+/** Every route at every speed of the window, every route at one of them, or one route at all of them. */
 export interface RowChoice {
-  readonly by: "routes" | "speeds";
+  readonly by: "all" | "routes" | "speeds";
   readonly route: number;
   readonly speed: number;
+}
+
+/** Most rows that are shown where every route is shown at every speed. */
+const MOST_ROWS = 12;
+
+/** Whether every route can be shown at every speed. */
+export function canShowAll({ routes, speeds }: WindowShape): boolean {
+  return speeds !== null && routes * speeds.length <= MOST_ROWS;
 }
 
 export function heatRows(
@@ -29,7 +37,17 @@ export function heatRows(
 ): HeatRow[] {
   const { speeds } = shape;
   const at = speeds === null ? null : Math.min(speed, speeds.length - 1);
-  if (by === "routes" || speeds === null) {
+  if (by === "all" && speeds !== null && canShowAll(shape)) {
+    return plan.routes.flatMap(({ name }, index) =>
+      speeds.map((value, order) => ({
+        route: index,
+        speed: order,
+        // The speed first, which a narrow screen does not cut off.
+        name: `${inUnit(value, unit)} ${name}`,
+      })),
+    );
+  }
+  if (by !== "speeds" || speeds === null) {
     return plan.routes.map(({ name }, index) => ({ route: index, speed: at, name }));
   }
   return speeds.map((value, index) => ({
