@@ -10,6 +10,7 @@ export type { PaceCurve } from "../src/choose/pace-curve.ts";
 export type { RefinedWindow } from "../src/choose/refine.ts";
 export type { SensitivityProfile } from "../src/choose/sensitivity-profile.ts";
 export type { Sure, SureCell } from "../src/choose/sure.ts";
+export type { SureInTime } from "../src/choose/sure-in-time.ts";
 export type { SureWindow } from "../src/choose/sure-window.ts";
 export type { Reach, RoutePlace, TurnBack, TurnLimit } from "../src/choose/turn-back-result.ts";
 export type { WindowCell } from "../src/choose/window-cell.ts";

@@ -79,6 +79,30 @@ describe("the departures compared", () => {
     expect(list.textContent).toMatch(/East about: \d of 5 not possible, the first because /);
   });
 
+  test("are the bests that hold in every member and what-if, with those of the plain estimate that do not", async () => {
+    const window = { from: "2027-05-04T15:00Z", to: "2027-05-04T16:00Z", every: "1 h" };
+    const whatIf = [{ name: "An hour late", late: "1 h" }];
+    const page = await pageOf((plan) => ({
+      ...plan,
+      window: { ...window, arriveBy: "2027-05-04T19:00Z" },
+      whatIf,
+      routes: plan.routes.filter(({ name }) => name === "West about"),
+    }));
+    render(<WindowView page={page} />);
+    const list = await screen.findByRole("list", { name: "Best departures" });
+    await waitFor(() =>
+      expect(list.textContent).toMatch(/✓ clear: holds in the what-if|! caution: holds in the what-if/),
+    );
+    expect(list.textContent).toMatch(/Latest departure Tue 4 May 15:00 UTC/);
+    expect(list.textContent).toMatch(
+      /\(L\)Latest departure by the plain estimate Tue 4 May 16:00 UTC.*✕ stop: outlasts the forecast in the what-if "An hour late"/,
+    );
+    const inTime = screen.getByRole("list", { name: "Latest departures in time" });
+    expect(inTime.textContent).toMatch(
+      /By the plain estimate.*✕ stop: outlasts the forecast in the what-if "An hour late"/,
+    );
+  });
+
   test("write the window to the plan with the first change, speeds apart by commas", async () => {
     const page = await pageOf();
     render(<WindowView page={page} />);

@@ -66,6 +66,9 @@ describe("an arrival to keep", () => {
       { row: 0, column: 0.25 },
       { row: 1, column: 1.5 },
     ]);
+    const tried = [null, { ...CELL, departure: "2027-05-04T08:30:00.000Z" }, null, null];
+    const sure = { inTime: tried.map((cell) => ({ sure: cell })) } as unknown as Filled["sure"];
+    expect(latestMarks({ ...filled, sure }, [row(0, 0), row(0, 1)])).toEqual([{ row: 1, column: 0.5 }]);
     expect(arrivalToKeep({ plan: { ...filled.plan, window: { from: "", to: "", every: "" } } })).toBeNull();
   });
 });

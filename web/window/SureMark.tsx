@@ -1,5 +1,6 @@
 import { fateText, percentText, type Sure, type SureWindow, triedText } from "../core.ts";
 import { SeverityShape } from "../ledger/StatusMark.tsx";
+import "./sure.css";
 
 interface SureMarkProps {
   readonly sure: Sure;

@@ -28,14 +28,15 @@ export function spareText(cell: WindowCell, arriveBy: number | null): string {
   return spare >= 0 ? `in time, ${durationText(spare)} to spare` : `${durationText(-spare)} too late`;
 }
 
-/** Where the latest departures in time stand: their row, and how many columns after the first departure. */
+/** Where the latest departures in time stand, once they are tried those that hold: their row, and how many columns after the first departure. */
 export function latestMarks(
-  { bests, shape }: Filled,
+  { bests, sure, shape }: Filled,
   rows: readonly HeatRow[],
 ): readonly { readonly row: number; readonly column: number }[] {
-  const lines = bests?.inTime?.routes ?? [];
+  const plain = bests?.inTime?.routes.map((own) => own.latest) ?? [];
+  const lines = sure?.inTime?.map((own) => own.sure) ?? plain;
   const speeds = shape.speeds?.length ?? 1;
-  return lines.flatMap(({ latest }, at) => {
+  return lines.flatMap((latest, at) => {
     if (latest === null) return [];
     const row = rows.findIndex((own) => own.route * speeds + (own.speed ?? 0) === at);
     const column = columnOf(shape.departures, Date.parse(latest.departure));
