@@ -1,6 +1,8 @@
 import { strToU8, unzipSync, zipSync } from "fflate";
 import { InputError } from "../errors.ts";
 import { quoted } from "../found.ts";
+import { statedSums } from "./archive-sums.ts";
+import { crc32 } from "./crc32.ts";
 import type { PlanDocument } from "./plan-schema.ts";
 import { serializePlan } from "./write-plan.ts";
 
@@ -26,8 +28,8 @@ export interface Archive {
 /**
  * Reads an archive. What its files hold is for their own readers to check.
  *
- * @throws InputError where it is no ZIP archive, holds no plan or several, a name that leads out of it, one name twice, or more than
- *   an archive of a plan should
+ * @throws InputError where it is no ZIP archive, holds a damaged file, no plan or several, a name that leads out of it, one name twice,
+ *   or more than an archive of a plan should
  *
  * @example
  * readArchive(writeArchive({ format: "legwork-plan/1", departure: "2027-05-04T06:00:00Z", craft: { file: "a.craft.json" }, routes: [] }, "out", () => new Uint8Array(8)), "out.legwork.zip").files.get("a.craft.json").length // → 8
@@ -100,14 +102,21 @@ function renamed(document: PlanDocument, names: ReadonlyMap<string, string>): Pl
 }
 
 function unpacked(bytes: Uint8Array, file: string): Record<string, Uint8Array> {
-  const seen = new Set<string>();
+  const stated = statedSums(bytes);
+  /** The sums by the names of the entries that are taken. */
+  const sums = new Map<string, number | undefined>();
+  let entry = 0;
   let total = 0;
+  let files: Record<string, Uint8Array>;
   try {
-    return unzipSync(bytes, {
+    files = unzipSync(bytes, {
       filter({ name, originalSize }) {
+        const sum = stated[entry];
+        entry += 1;
         // A folder has an entry of its own.
         if (name.endsWith("/")) return false;
-        checkName(name, seen, file);
+        checkName(name, sums, file);
+        sums.set(name, sum);
         total += originalSize;
         if (total > MOST_BYTES) {
           throw new InputError(`an archive holds at most ${MOST_BYTES / 1e6} MB unpacked; found more`, {
@@ -121,9 +130,19 @@ function unpacked(bytes: Uint8Array, file: string): Record<string, Uint8Array> {
     if (fault instanceof InputError) throw fault;
     throw new InputError("an archive is a whole ZIP file; found one that can't be unpacked", { file });
   }
+  for (const [name, content] of Object.entries(files)) checkSum(name, content, sums.get(name), file);
+  return files;
 }
 
-function checkName(name: string, seen: Set<string>, file: string): void {
+function checkSum(name: string, content: Uint8Array, stated: number | undefined, file: string): void {
+  if (crc32(content) === stated) return;
+  throw new InputError(
+    `a file in an archive has the CRC-32 that the archive states; found ${quoted(name)} damaged`,
+    { file },
+  );
+}
+
+function checkName(name: string, seen: ReadonlyMap<string, unknown>, file: string): void {
   if (!isInside(name)) {
     throw new InputError(`a file in an archive has a name that stays inside it; found ${quoted(name)}`, {
       file,
@@ -131,8 +150,7 @@ function checkName(name: string, seen: Set<string>, file: string): void {
   }
   if (seen.has(name))
     throw new InputError(`an archive holds a file once; found ${quoted(name)} twice`, { file });
-  seen.add(name);
-  if (seen.size > MOST_ENTRIES) {
+  if (seen.size === MOST_ENTRIES) {
     throw new InputError(`an archive holds at most ${MOST_ENTRIES} files; found more`, { file });
   }
 }

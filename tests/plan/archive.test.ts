@@ -1,6 +1,9 @@
+import fc from "fast-check";
 import { strToU8, zipSync } from "fflate";
 import { describe, expect, it } from "vitest";
 import { readArchive, writeArchive } from "../../src/plan/archive.ts";
+import { statedSums } from "../../src/plan/archive-sums.ts";
+import { crc32 } from "../../src/plan/crc32.ts";
 import type { PlanDocument } from "../../src/plan/plan-schema.ts";
 import { serializePlan } from "../../src/plan/write-plan.ts";
 import { SUPPLY_RUN } from "./documents.ts";
@@ -89,5 +92,64 @@ describe("an archive", () => {
     expect(() => readArchive(bytes, "a.zip")).toThrow(
       "a.plan.json: the text is UTF-8; found bytes that are not",
     );
+  });
+});
+
+/** The bytes of `wind.csv`, or the sentence with which the archive is refused. */
+function readOrMessage(bytes: Uint8Array): Uint8Array | string {
+  try {
+    return readArchive(bytes, "a.zip").files.get("wind.csv") ?? "no file";
+  } catch (fault) {
+    if (fault instanceof Error && fault.name === "InputError") return fault.message;
+    throw fault;
+  }
+}
+
+describe("the sums of an archive", () => {
+  // The check value of CRC-32/ISO-HDLC and further sums of zlib, by Python's zlib.crc32.
+  it.each([
+    ["123456789", 0xcbf43926],
+    ["", 0],
+    ["a", 0xe8b7be43],
+    ["lat,lon,u,v\n50,-5,3,4\n", 0x3815e2f2],
+  ])("of %j is the one of ISO 3309", (text, sum) => {
+    expect(crc32(strToU8(text))).toBe(sum);
+  });
+
+  it("are those of its entries, in their order", () => {
+    const bytes = zipSync({ "b.csv": strToU8("123456789"), "x/": new Uint8Array(), "a.csv": strToU8("a") });
+    expect(statedSums(bytes)).toEqual([0xcbf43926, 0, 0xe8b7be43]);
+  });
+
+  it("tell a damaged file by its name, stored or packed, wherever it is damaged", () => {
+    const content = strToU8(Array.from({ length: 400 }, (_, n) => `${n % 7},${(n * 37) % 101}`).join("\n"));
+    for (const level of [0, 6] as const) {
+      const bytes = zipSync({ "a.plan.json": strToU8("{}"), "wind.csv": [content, { level }] });
+      const view = new DataView(bytes.buffer, bytes.byteOffset);
+      const first = 30 + view.getUint16(26, true) + view.getUint32(18, true);
+      const data = first + 30 + view.getUint16(first + 26, true);
+      const size = view.getUint32(first + 18, true);
+      fc.assert(
+        fc.property(fc.nat(size - 1), fc.integer({ min: 1, max: 255 }), (at, flip) => {
+          const damaged = bytes.slice();
+          damaged[data + at] = (damaged[data + at] as number) ^ flip;
+          const outcome = readOrMessage(damaged);
+          // A packed file may be packed another way with the same content: that is no damage.
+          if (level === 6 && typeof outcome !== "string") expect(outcome).toEqual(content);
+          else
+            expect(outcome).toMatch(
+              /^a\.zip: (a file in an archive has the CRC-32 that the archive states; found "wind\.csv" damaged|an archive is a whole ZIP file)/,
+            );
+        }),
+        { numRuns: 300, endOnFailure: true },
+      );
+    }
+  });
+
+  it("that are themselves damaged tell so too", () => {
+    const bytes = zipSync({ "a.plan.json": strToU8("{}") });
+    const at = bytes.length - 22 - 46 - "a.plan.json".length + 16;
+    bytes[at] = (bytes[at] as number) ^ 1;
+    expect(() => readArchive(bytes, "a.zip")).toThrow('found "a.plan.json" damaged');
   });
 });
