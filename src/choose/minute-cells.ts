@@ -27,7 +27,7 @@ export class MinuteCells {
     return this.#window.speeds_m_s === null ? null : speed_m_s;
   }
 
-  /** @param minute since 1970-01-01T00:00Z @param like a cell whose speed is taken */
+  /** The cell at a whole minute since 1970-01-01T00:00Z, at the speed of another. */
   at(minute: number, like: WindowCell): WindowCell {
     const speed = this.triedSpeed(like);
     const key = `${new Date(minute * MINUTE).toISOString()} ${speed}`;

@@ -46,8 +46,3 @@ export interface BestPair {
   readonly plain: SureBest;
   readonly sure: SureBest;
 }
-
-/** Whether a departure holds in every member and what-if. */
-export function holdsSurely({ status }: Sure): boolean {
-  return status !== "stop";
-}

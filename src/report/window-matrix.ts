@@ -23,7 +23,7 @@ function letters(cell: WindowCell, { sure, summary }: WindowReport): string {
   const marks = (best: WindowBest): string[] =>
     bestWords(cell, best)
       .split(", ")
-      .map((word) => MARKS[word] ?? "");
+      .flatMap((word) => MARKS[word] ?? []);
   if (sure === undefined || sure === null) return marks(summary.best).join("");
   const held = marks(sure.best.sure);
   const passed = marks(sure.best.plain).filter((mark) => !held.includes(mark));

@@ -263,6 +263,7 @@ describe("a window whose bests are put to the test", () => {
     const key = (cell: WindowCell | null) => cell && [cell.route, cell.departure, cell.speed_m_s].join();
     const passed = bests.filter((by) => key(sure.best.plain[by]) !== key(sure.best.sure[by]));
     expect([...found(1)].sort()).toEqual(["L", "T", "U"]);
+    expect(matrix.join("\n")).not.toContain("()");
     expect(found(2)).toHaveLength(passed.length);
     expect(passed.length).toBeGreaterThan(0);
   });
