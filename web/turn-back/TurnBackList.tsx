@@ -39,6 +39,7 @@ const SIGNS: Readonly<Record<TurnBackLine["kind"], string>> = {
   "no-return": "M11 1V15M11 1H2L11 8Z",
   "equal-time": "M8 1L14 8L8 15L2 8Z",
   reach: "M2 8H14",
+  unknown: "M2 8H14",
   nowhere: "M3 3L13 13M13 3L3 13",
 };
 

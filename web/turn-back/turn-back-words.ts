@@ -8,7 +8,7 @@ import { goalName } from "./turn-back-places.ts";
 export interface TurnBackLine {
   readonly text: string;
   readonly place: RoutePlace | null;
-  readonly kind: "no-return" | "equal-time" | "reach" | "nowhere";
+  readonly kind: "no-return" | "equal-time" | "reach" | "unknown" | "nowhere";
 }
 
 type Shown = Pick<PageView, "units" | "zone">;
@@ -34,7 +34,7 @@ export function turnBackLines(turn: TurnBack, departure: string, view: Shown): T
   );
   const nowhere = turn.nowhere.map(
     ({ reach, from, to }): TurnBackLine => ({
-      kind: "nowhere",
+      kind: reach === "short" ? "nowhere" : "unknown",
       place: from,
       text:
         reach === "short"
@@ -59,13 +59,15 @@ function limitLine(turn: TurnBack, limit: TurnLimit, where: (place: RoutePlace) 
   if (notKnownFrom !== null) {
     const why = reason === null ? "the data end" : (REASONS[reason] ?? reason);
     return {
-      kind: "reach",
+      kind: "unknown",
       place: notKnownFrom,
       text: `${goal}: not known from ${where(notKnownFrom)} on, ${why}.`,
     };
   }
-  const reach = last === null ? "in reach from nowhere on the route" : "in reach from the whole route";
-  return { kind: "reach", place: null, text: `${goal}: ${reach} with the reserve kept.` };
+  const isNever = last === null;
+  const reach = isNever ? "in reach from nowhere on the route" : "in reach from the whole route";
+  const kind = isNever ? "nowhere" : "reach";
+  return { kind, place: null, text: `${goal}: ${reach} with the reserve kept.` };
 }
 
 function placeText(place: RoutePlace, departure: string, { units, zone }: Shown): string {

@@ -1,4 +1,4 @@
-import { useLayoutEffect, useRef } from "preact/hooks";
+import { useEffect, useLayoutEffect, useRef } from "preact/hooks";
 import type { PageState } from "../state/page-state.ts";
 import { bestMarks } from "./best-marks.ts";
 import { drawHeat } from "./draw-heat.ts";
@@ -23,7 +23,7 @@ export function HeatPicture({ page, filled, measure, rows, cellWidth, active }: 
   const theme = page.view.theme.value;
   const arriveBy = arrivalToKeep(filled);
   const departure = Date.parse(page.store.plan.value.departure);
-  useLayoutEffect(() => {
+  const draw = (): void => {
     if (canvas.current === null) return;
     const drawn = rows.map((row) =>
       shape.departures.map((_, column) => cells[cellIndex(shape, column, row)] ?? null),
@@ -41,7 +41,17 @@ export function HeatPicture({ page, filled, measure, rows, cellWidth, active }: 
       planned: columnOf(shape.departures, departure),
       active,
     });
-  });
+  };
+  useLayoutEffect(draw);
+  const redraw = useRef(draw);
+  redraw.current = draw;
+  // A print has colours of its own.
+  useEffect(() => {
+    const paper = window.matchMedia("print");
+    const again = (): void => redraw.current();
+    paper.addEventListener("change", again);
+    return () => paper.removeEventListener("change", again);
+  }, []);
   return (
     <div aria-hidden="true" data-theme={theme}>
       <canvas ref={canvas} />

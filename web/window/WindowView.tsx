@@ -12,10 +12,11 @@ import { proposedWindow } from "./proposed-window.ts";
 import { WindowSettings } from "./WindowSettings.tsx";
 import { createWindowFill } from "./window-fill.ts";
 import { windowKey } from "./window-plan.ts";
+import { windowWords } from "./window-words.ts";
 
 /** Departures compared: every route, and every speed where the window names some, over a span of departures. */
 export function WindowView({ page }: { readonly page: PageState }) {
-  const { store, answers, desk } = page;
+  const { store, answers, desk, view } = page;
   const fill = useMemo(() => createWindowFill([() => page.engine, page.second]), [page]);
   const measure = useSignal<Measure>("time");
   const rows = useSignal<RowChoice>({ by: "all", route: 0, speed: 0 });
@@ -41,6 +42,7 @@ export function WindowView({ page }: { readonly page: PageState }) {
   const speeds = filled?.shape.speeds ?? null;
   return (
     <div class="window-view">
+      <p class="only-print">{windowWords(window, view.zone.value)}</p>
       <div class="window-bar">
         <WindowSettings page={page} window={window} fault={filled?.bests?.inTimeFault ?? null} />
       </div>
