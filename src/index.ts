@@ -66,7 +66,7 @@ export {
 } from "./choose/uncertain-estimate.ts";
 export { type WhatIf, whatIfText } from "./choose/what-if.ts";
 export { type WhatIfResult, whatIfResults } from "./choose/what-if-results.ts";
-export { makeSweep, type Sweep, sweepCell, windowCells } from "./choose/window.ts";
+export { makeSweep, type Sweep, sweepCell, sweepCells, windowCells } from "./choose/window.ts";
 export { type CellFinding, type WindowCell, windowCell } from "./choose/window-cell.ts";
 export {
   type Refusal,
@@ -127,7 +127,8 @@ export {
   fieldSummary,
   prepareRoutes,
 } from "./estimate/estimate.ts";
-export { estimateRoute, type RouteOutcome, type RouteRun, routeOutcome } from "./estimate/estimate-route.ts";
+export { estimateRoute, type RouteRun, routeOutcome, routeOutcomes } from "./estimate/estimate-route.ts";
+export type { RouteOutcome } from "./estimate/route-outcome.ts";
 export { magneticCourse, magneticVariation } from "./estimate/magnetic.ts";
 export { fieldsInUse, type PreparedRoute, prepareRoute } from "./estimate/prepare.ts";
 export type {

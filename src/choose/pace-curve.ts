@@ -1,6 +1,6 @@
 import type { StoreUnit } from "../craft/craft.ts";
-import type { RouteOutcome } from "../estimate/estimate-route.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
+import type { RouteOutcome } from "../estimate/route-outcome.ts";
 import { minimaOf, rootsOf, scan } from "./line-search.ts";
 import { evenlyInSpeed, SPEED_STEPS, speedRange } from "./speed-range.ts";
 import { type PacelessConditions, SpeedTrials } from "./speed-trials.ts";

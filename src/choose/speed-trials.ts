@@ -1,6 +1,7 @@
 import type { Conditions } from "../estimate/conditions.ts";
-import { type RouteOutcome, routeOutcome } from "../estimate/estimate-route.ts";
+import { routeOutcome } from "../estimate/estimate-route.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
+import type { RouteOutcome } from "../estimate/route-outcome.ts";
 import { type SpeedRange, speedRange } from "./speed-range.ts";
 import { passageTime } from "./window-cell.ts";
 

@@ -2,12 +2,13 @@ import type { Craft, Pace } from "../craft/craft.ts";
 import { InputError } from "../errors.ts";
 import type { Conditions } from "../estimate/conditions.ts";
 import type { EstimateInput } from "../estimate/estimate.ts";
+import { routeOutcomes } from "../estimate/estimate-route.ts";
 import { speedText } from "../estimate/finding-text.ts";
 import { fieldsInUse, type PreparedRoute } from "../estimate/prepare.ts";
 import { arrivalCell } from "./arrival-cell.ts";
 import type { ArrivalWindow } from "./arrival-window.ts";
 import { checkWindow, type DepartureWindow, windowDepartures } from "./departure-window.ts";
-import { paceAt, type WindowCell, windowCell } from "./window-cell.ts";
+import { cellOf, paceAt, type WindowCell, windowCell } from "./window-cell.ts";
 
 /** What a window of departures is worked out for: the routes, prepared once, and what the plan says. */
 export interface Sweep {
@@ -43,8 +44,8 @@ export function makeSweep(
 }
 
 /**
- * Every route × departure × speed, one by one in the order departure, route, speed: ask for as many as are wanted. Nothing
- * but the preparation of the routes is shared between cells, so that each equals a lone estimate to the last bit.
+ * Every route × departure × speed, one by one in the order departure, route, speed: ask for as many as are wanted; they are worked
+ * out 64 departures at a time. Each equals a lone estimate to the last bit.
  *
  * A speed takes the place of the pace's speed; a leg that names its own keeps it. Where the pace asks for an arrival and
  * the window names no speeds, each cell is at the cheapest speed that makes it.
@@ -67,12 +68,18 @@ export function windowCells(sweep: Sweep, window: DepartureWindow): Generator<Wi
   return cells(sweep, window);
 }
 
+/** Departures that are worked out together: enough to share what depends on the place alone, and few to wait for. */
+const TOGETHER = 64;
+
 function* cells(sweep: Sweep, window: DepartureWindow): Generator<WindowCell, void, undefined> {
   const speeds = window.speeds_m_s ?? [null];
-  for (const departure of windowDepartures(window)) {
-    for (const prepared of sweep.prepared) {
-      for (const speed of speeds) yield sweepCell(sweep, prepared, departure, speed);
-    }
+  const departures = windowDepartures(window);
+  for (let first = 0; first < departures.length; first += TOGETHER) {
+    const some = departures.slice(first, first + TOGETHER);
+    const columns = sweep.prepared.flatMap((prepared) =>
+      speeds.map((speed) => sweepCells(sweep, prepared, some, speed)),
+    );
+    for (let n = 0; n < some.length; n += 1) for (const column of columns) yield column[n] as WindowCell;
   }
 }
 
@@ -95,6 +102,35 @@ export function sweepCell(
 ): WindowCell {
   if (arrive !== null && speed === null) return arrivalCell(prepared, { ...conditions, departure }, arrive);
   return windowCell(prepared, conditions, departure, speed);
+}
+
+/**
+ * The cells of a route at one speed and several departures, each as {@link sweepCell} has it, in a part of the time.
+ *
+ * @param departures ms since 1970-01-01T00:00Z
+ * @param speed m/s, `null` for the plan's own pace
+ *
+ * @example
+ * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "100 kWh" } }', "boat.craft.json");
+ * const waypoint = (name, lon) => ({ name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const routes = [{ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }];
+ * const input = { title: "", departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 5 }, reserve: null, fields: [], routes, land: null };
+ * const sweep = makeSweep(prepareRoutes(input), input);
+ * sweepCells(sweep, sweep.prepared[0], [0, 3600000], null).map(({ arrival }) => arrival.slice(0, 16)) // → ["1970-01-01T06:11", "1970-01-01T07:11"]
+ */
+export function sweepCells(
+  sweep: Sweep,
+  prepared: PreparedRoute,
+  departures: readonly number[],
+  speed: number | null,
+): WindowCell[] {
+  if (sweep.arrive !== null && speed === null)
+    return departures.map((departure) => sweepCell(sweep, prepared, departure, speed));
+  const { conditions } = sweep;
+  const pace = speed === null ? conditions.pace : paceAt(conditions.pace, speed);
+  return routeOutcomes(prepared, { ...conditions, pace }, departures).map((outcome, n) =>
+    cellOf(prepared, departures[n] as number, speed, outcome),
+  );
 }
 
 function checkSpeeds({ conditions }: Sweep, speeds: readonly number[] | null): void {

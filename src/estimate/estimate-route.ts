@@ -4,7 +4,9 @@ import { inOrder } from "./finding-book.ts";
 import { statusOf } from "./findings.ts";
 import { isoTime } from "./leg-result.ts";
 import type { PreparedRoute } from "./prepare.ts";
-import type { Finding, Profile, Reached, RouteEstimate } from "./result.ts";
+import type { Finding, Profile, RouteEstimate } from "./result.ts";
+import type { RouteOutcome } from "./route-outcome.ts";
+import { sweepRoute } from "./route-sweep.ts";
 import { routeTotals } from "./route-totals.ts";
 import { RouteWork } from "./route-work.ts";
 import { reserveAmount, storeFindings } from "./store-findings.ts";
@@ -57,20 +59,6 @@ export function estimateRoute(prepared: PreparedRoute, conditions: Conditions): 
   return { estimate, profile: work.samples.profile(legStarts, craft.store.usable) };
 }
 
-/** What a sweep over departures, speeds or members needs of a route. */
-export interface RouteOutcome {
-  readonly status: RouteEstimate["status"];
-  /** ms since 1970 at the last waypoint, before a stay there; `null` where the route stops on the way. */
-  readonly arrival: number | null;
-  /** Time under way, s, and use and what is left in store units; `null` likewise. */
-  readonly time_s: number | null;
-  readonly use: number | null;
-  readonly remaining: number | null;
-  readonly reserve: number | null;
-  readonly reached: Reached | null;
-  readonly findings: readonly Finding[];
-}
-
 /**
  * The outcome alone of what {@link estimateRoute} works out, in less than half its time: no means, extremes, line
  * integrals, ledger parts or magnetic courses. Its figures and findings are the same to the last bit, but for the note
@@ -92,6 +80,41 @@ export interface RouteOutcome {
  * [status, use] // → ["clear", 22263898.2]
  */
 export function routeOutcome(prepared: PreparedRoute, conditions: Conditions): RouteOutcome {
+  checkFields(prepared, conditions.fields);
+  const [outcome = null] = sweepRoute(prepared, conditions, [conditions.departure]);
+  return outcome ?? outcomeAlone(prepared, conditions);
+}
+
+/**
+ * The outcomes of a route at several departures: each that of {@link routeOutcome} to the last bit, in a small part of the time where
+ * the craft holds a speed at a steady rate through one field.
+ *
+ * @param departures ms since 1970-01-01T00:00Z, in place of that of the conditions
+ * @throws as {@link estimateRoute} does
+ *
+ * @example
+ * const craft = readCraft(
+ *   `{ "name": "Boat", "moves": "water", "power": { "model": "constant", "rate": "1 kW" },
+ *      "store": { "capacity": "10 kWh" } }`,
+ * );
+ * const waypoint = (name, lon) => (
+ *   { name, lat: 0, lon, path: "rhumb", speed_m_s: null, height_m: null, stay_s: 0 });
+ * const prepared = prepareRoute({ name: "East", waypoints: [waypoint("A", 0), waypoint("B", 1)] }, []);
+ * const conditions = { departure: 0, craft, pace: { hold: "through-speed", speed_m_s: 5 }, reserve: null, fields: [] };
+ * routeOutcomes(prepared, conditions, [0, 3600000]).map(({ use }) => use) // → [22263898.2, 22263898.2]
+ */
+export function routeOutcomes(
+  prepared: PreparedRoute,
+  conditions: Conditions,
+  departures: readonly number[],
+): RouteOutcome[] {
+  checkFields(prepared, conditions.fields);
+  return sweepRoute(prepared, conditions, departures).map(
+    (outcome, n) => outcome ?? outcomeAlone(prepared, { ...conditions, departure: departures[n] as number }),
+  );
+}
+
+function outcomeAlone(prepared: PreparedRoute, conditions: Conditions): RouteOutcome {
   const work = runRoute(prepared, conditions, false);
   const { findings, reserve } = closing(work, prepared, conditions);
   const complete = work.reached === null;

@@ -131,6 +131,15 @@ export function resolve(flow: Flow, panel: number, time: number, stations: Stati
   else flow.state = flow.field.outside === "zero" ? "zero" : "outside-area";
 }
 
+/** Reads a tile's cell of a panel at one slice alone, whatever the time; `flow.state` says whether data are there. */
+export function readSlice(flow: Flow, panel: number, tile: number, slice: number, stations: Stations): void {
+  flow.panel = panel;
+  flow.held = false;
+  flow.filled = false;
+  useSlices(flow, tile, slice, slice, 0, 0);
+  loadCell(flow, panel, stations);
+}
+
 function useSlices(
   flow: Flow,
   tile: number,

@@ -6,6 +6,7 @@ import type { LegWatch } from "./leg-watch.ts";
 import { addStations, addTimes, type LegSums } from "./leg-work.ts";
 import type { Panels } from "./panels.ts";
 import type { FindingCode } from "./result.ts";
+import type { SmoothLeg } from "./smooth-leg.ts";
 import { layMiddle } from "./stations.ts";
 import { type Step, solveStep, UNSETTLED } from "./step.ts";
 import type { TrackCurve } from "./track-curve.ts";
@@ -34,6 +35,17 @@ export interface LegRun {
   readonly panels: Panels;
   readonly flows: readonly Flow[];
   readonly step: Step;
+  /** What goes over the smooth panels first; `null` where nothing can. */
+  readonly smooth: SmoothLeg | null;
+  /** Whether the step's figures are wanted at its stations, or time and use alone. */
+  readonly stations: boolean;
+  readonly clock: LegClock;
+}
+
+/** Time since the leg's start, and the last valid time met, s since departure: the clock may be a little short of it. */
+interface LegClock {
+  elapsed: number;
+  met: number;
 }
 
 /** Called with every accepted step. */
@@ -54,29 +66,57 @@ const MOST_CUTS = 12;
  * @returns where and why the leg stops, or `null` where it ends at its waypoint
  */
 export function runLeg(run: LegRun, start: number, accepted: Accepted): Stop | null {
-  const { panels } = run;
-  const clock = { elapsed: 0, met: 0 };
-  for (let panel = 0; panel < panels.piece.length; panel += 1) {
-    const stop = runPanel(run, panel, start, clock, accepted);
+  for (let panel = 0; panel < run.panels.piece.length; panel += 1) {
+    const place = crossSmoothly(run, panel, start, accepted);
+    const stop = runPanel(run, panel, place, start, accepted);
     if (stop !== null) return stop;
   }
   return null;
 }
 
-/** Time since the leg's start, and the last valid time that was met since then (the clock may be a nanosecond short of it). */
-interface Clock {
-  elapsed: number;
-  met: number;
+/** Takes the smooth steps of a panel; returns how far they lead. */
+function crossSmoothly(run: LegRun, panel: number, start: number, accepted: Accepted): number {
+  const { smooth, panels, clock } = run;
+  let place = panels.s[panel] as number;
+  if (smooth === null) return place;
+  const steps = smooth.cross(panel, start, clock.elapsed, clock.met);
+  for (const { to, time, met } of steps) {
+    const now = start + clock.elapsed;
+    if (run.stations) fillStations(run, panel, place, to, Math.max(now, clock.met), now);
+    smooth.book(run.step, time);
+    accepted(place, to, now, panel);
+    clock.elapsed += time;
+    clock.met = met;
+    place = to;
+  }
+  return place;
 }
 
-function runPanel(run: LegRun, panel: number, start: number, clock: Clock, accepted: Accepted): Stop | null {
-  const { panels, curve, flows, step } = run;
+/** What holds at the stations of a smooth step. */
+function fillStations(
+  { curve, panels, flows, step }: LegRun,
+  panel: number,
+  from: number,
+  to: number,
+  moment: number,
+  now: number,
+): void {
+  const piece = panels.piece[panel] as number;
+  layMiddle(step.stations, curve, piece, panels.s[panel] as number, panels.s[panel + 1] as number);
+  resolveAll(flows, panel, moment, step);
+  const status = solveStep(step, curve, piece, panel, false, from, to, now);
+  if (status !== PACE_OK) throw new Error(`a smooth step has no solution of its own: status ${status}`);
+}
+
+function runPanel(run: LegRun, panel: number, from: number, start: number, accepted: Accepted): Stop | null {
+  const { panels, curve, flows, step, clock } = run;
   const piece = panels.piece[panel] as number;
   const end = panels.s[panel + 1] as number;
   const polar = panels.polar[panel] === 1;
-  let place = panels.s[panel] as number;
+  let place = from;
+  if (place >= end) return null;
   let longest = end - place;
-  layMiddle(step.stations, curve, piece, place, end);
+  layMiddle(step.stations, curve, piece, panels.s[panel] as number, end);
   while (place < end) {
     const now = start + clock.elapsed;
     const until = resolveAll(flows, panel, Math.max(now, clock.met), step);

@@ -1,19 +1,21 @@
-import type { Pace } from "../craft/craft.ts";
 import { InputError } from "../errors.ts";
 import type { Conditions } from "./conditions.ts";
 import { FindingBook } from "./finding-book.ts";
 import type { NumberedLeg } from "./findings.ts";
 import { type Flow, makeFlow } from "./flow.ts";
 import { hover, plainStay, type Stay } from "./hover.ts";
+import { lowestLevel, motionOn, paceOn } from "./leg-motion.ts";
 import { type LegOutcome, type LegTerms, legEstimate } from "./leg-result.ts";
 import { accountInto, accountTimes, type LegRun, runLeg, type Stop } from "./leg-run.ts";
 import { LegWatch } from "./leg-watch.ts";
 import { type LegSums, makeLegSums } from "./leg-work.ts";
 import { magneticVariation } from "./magnetic.ts";
-import { type Motion, makeMotion, stillMotion } from "./motion.ts";
+import { type Motion, stillMotion } from "./motion.ts";
 import { mediumRole, type PreparedLeg, type PreparedRoute } from "./prepare.ts";
 import type { LegEstimate, Reached, Still } from "./result.ts";
 import { END_STATION, Samples, START_STATION } from "./samples.ts";
+import { reachOf } from "./smooth-fleet.ts";
+import { SmoothLeg } from "./smooth-leg.ts";
 import { makeStations } from "./stations.ts";
 import { makeStep, type Step } from "./step.ts";
 
@@ -43,6 +45,12 @@ export class RouteWork {
   readonly #medium: Flow | null;
   readonly #wind: Flow | null;
   readonly #step: Step;
+  /** By smooth steps where they serve: the medium as it is, and with its cross-track component at zero. */
+  readonly #smooth: SmoothLeg | null;
+  readonly #smoothAlong: SmoothLeg | null;
+  /** The last valid time met, s since departure: before the leg in work, and on it. */
+  #met = 0;
+  #metOnLeg = 0;
 
   /** @param full whether everything is worked out, or the outcome alone */
   constructor(prepared: PreparedRoute, conditions: Conditions, full: boolean) {
@@ -56,41 +64,30 @@ export class RouteWork {
     const role = mediumRole(craft);
     this.#medium = this.#flows.find(({ field }) => field.role === role) ?? null;
     this.#wind = this.#flows.find(({ field }) => field.role === "wind") ?? null;
-    this.#step = makeStep(makeStations(), this.#motionOn(prepared.legs[0] as PreparedLeg));
+    const smooth = (alongOnly: boolean) =>
+      this.#medium === null ? null : new SmoothLeg(this.#medium.field, departure, alongOnly);
+    this.#smooth = smooth(false);
+    this.#smoothAlong = full ? smooth(true) : null;
+    this.#step = makeStep(makeStations(), motionOn(conditions, prepared.legs[0] as PreparedLeg));
   }
 
   /** Runs the next leg, or, after a stop, keeps its geometry and still figures. */
   addLeg(leg: NumberedLeg): void {
     const { prepared } = leg;
-    const motion = this.#motionOn(prepared);
+    const motion = motionOn(this.#conditions, prepared);
     const still = this.#stillOn(leg, motion);
     const outcome = this.reached === null ? this.#run(leg, motion) : null;
     if (this.#full) {
       const medium = this.#medium?.field.role ?? null;
-      const terms: LegTerms = { pace: this.#paceOn(prepared), still, roles: this.#prepared.roles, medium };
+      const terms: LegTerms = {
+        pace: paceOn(this.#conditions.pace, prepared),
+        still,
+        roles: this.#prepared.roles,
+        medium,
+      };
       this.legs.push(legEstimate(leg.number, prepared, terms, outcome));
     }
     if (outcome !== null) this.#arrive(prepared, outcome);
-  }
-
-  #paceOn(leg: PreparedLeg): Pace {
-    const { pace } = this.#conditions;
-    const speed = leg.to.speed_m_s;
-    if (speed === null || pace.hold === "power" || pace.hold === "least-energy") return pace;
-    return { hold: pace.hold, speed_m_s: speed };
-  }
-
-  #motionOn(leg: PreparedLeg): Motion {
-    const lowest = this.#lowestLevel();
-    const climb = (leg.heights.to ?? lowest) - (leg.heights.from ?? lowest);
-    const { craft } = this.#conditions;
-    return makeMotion(craft, this.#paceOn(leg), this.#wind !== null, climb / leg.track.length);
-  }
-
-  /** Where a waypoint without any height is, m above the surface. */
-  #lowestLevel(): number {
-    const levels = this.#medium?.field.tiles.map(({ height }) => height?.[0] ?? 0) ?? [0];
-    return Math.min(...levels);
   }
 
   /** The same leg, with its stay, with every field at zero. */
@@ -146,18 +143,39 @@ export class RouteWork {
   }
 
   #legRun(leg: PreparedLeg, alongOnly: boolean): LegRun {
-    this.#step.alongOnly = alongOnly;
-    return { curve: leg.curve, panels: leg.panels, flows: this.#flows, step: this.#step };
+    const step = this.#step;
+    step.alongOnly = alongOnly;
+    return {
+      curve: leg.curve,
+      panels: leg.panels,
+      flows: this.#flows,
+      step,
+      smooth: this.#smoothOn(leg, alongOnly ? this.#smoothAlong : this.#smooth),
+      stations: !alongOnly,
+      clock: { elapsed: 0, met: this.#met },
+    };
+  }
+
+  /** Sets out by smooth steps; `null` where the craft's speed or rate depends on the fields. */
+  #smoothOn(leg: PreparedLeg, smooth: SmoothLeg | null): SmoothLeg | null {
+    const { throughSpeed, steadyRate } = this.#step.motion;
+    const medium = this.#medium;
+    if (medium === null || steadyRate < 0) return null;
+    const reach = reachOf(throughSpeed);
+    smooth?.setOut({ leg, cells: medium.cells, speed: throughSpeed, rate: steadyRate, reach });
+    return smooth;
   }
 
   #runUnderWay({ number, prepared }: NumberedLeg, sums: LegSums, watch: LegWatch): Stop | null {
     const run = this.#legRun(prepared, false);
     const account = this.#full ? accountInto(run, sums, watch) : accountTimes(run, sums, watch);
-    return runLeg(run, this.elapsed, (from, to, start, panel) => {
+    const stop = runLeg(run, this.elapsed, (from, to, start, panel) => {
       if (from === 0) this.samples.add(number, this.#step, START_STATION, this.elapsed, this.used);
       account(from, to, start, panel);
       this.samples.add(number, this.#step, END_STATION, this.elapsed + sums.time, this.used + sums.use);
     });
+    this.#metOnLeg = run.clock.met;
+    return stop;
   }
 
   #stayAt(leg: PreparedLeg, sums: LegSums): Stay {
@@ -214,7 +232,7 @@ export class RouteWork {
   }
 
   #variation(leg: PreparedLeg, moment: number): number | null {
-    const variation = magneticVariation(leg.from, leg.heights.from ?? this.#lowestLevel(), moment);
+    const variation = magneticVariation(leg.from, leg.heights.from ?? lowestLevel(this.#conditions), moment);
     if (variation === null) this.book.withoutVariation(moment);
     return variation;
   }
@@ -223,6 +241,7 @@ export class RouteWork {
     const { sums, stayUse } = outcome;
     const stay = leg.to.stay_s;
     this.timeBound = this.timeBound * (1 + sums.growth) + sums.timeBound;
+    this.#met = this.#metOnLeg;
     this.underWay += sums.time;
     this.arrived = this.elapsed + sums.time;
     this.elapsed = this.arrived + stay;

@@ -1,4 +1,5 @@
 import type { Track } from "../geodesy/track.ts";
+import { lagrangeCoefficients } from "./lagrange.ts";
 
 /*
  * A track as piecewise polynomials. Sampling the geodesic series costs about 300 ns a point and a leg is sampled thousands
@@ -144,29 +145,4 @@ const NODES = Float64Array.from(
 );
 
 /** Row t, column n: the coefficient of ξ^t in the Lagrange polynomial of node n. */
-const TO_POWERS = lagrangeCoefficients();
-
-function lagrangeCoefficients(): Float64Array {
-  const matrix = new Float64Array(TERMS * TERMS);
-  for (let node = 0; node < TERMS; node += 1) {
-    const own = NODES[node] as number;
-    let powers = [1];
-    for (let other = 0; other < TERMS; other += 1) {
-      if (other === node) continue;
-      const root = NODES[other] as number;
-      powers = timesLinear(powers, root, own - root);
-    }
-    powers.forEach((value, term) => {
-      matrix[term * TERMS + node] = value;
-    });
-  }
-  return matrix;
-}
-
-/** Coefficients of p(ξ) (ξ - root) / scale. */
-function timesLinear(powers: readonly number[], root: number, scale: number): number[] {
-  return Array.from(
-    { length: powers.length + 1 },
-    (_, term) => ((powers[term - 1] ?? 0) - root * (powers[term] ?? 0)) / scale,
-  );
-}
+const TO_POWERS = lagrangeCoefficients(NODES);

@@ -192,7 +192,9 @@ describe("heights", () => {
     const { estimate: route } = estimateOf(climbing, { fields: [shear] });
     // u = h/20 with h from 10 to 110 m along the leg: T = L/(g1 - g0) ln(g1/g0).
     const exact = (degree / 5) * Math.log(15.5 / 10.5);
-    expect(Math.abs((route.legs[0]?.time_s ?? 0) - exact) / exact).toBeLessThan(1e-13);
+    // Just above the 2.7e-13 that the rule of degree 7 leaves of 1/g over two long panels; a halved one leaves 1e-15.
+    expect(Math.abs((route.legs[0]?.time_s ?? 0) - exact) / exact).toBeLessThan(5e-13);
+    expect(Math.abs((route.legs[0]?.time_s ?? 0) - exact)).toBeLessThan(route.legs[0]?.error?.time_s ?? 0);
   });
 
   test("outside the levels the nearest holds, told but covered", () => {

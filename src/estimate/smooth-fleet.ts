@@ -1,0 +1,337 @@
+import type { Field, Tile } from "../field/field.ts";
+import type { PanelCells } from "./panels.ts";
+import type { PreparedLeg } from "./prepare.ts";
+import { makeSliceClock, type SliceClock, turnClock } from "./slice-clock.ts";
+import { NO_PAIR, PAIR, SmoothColumns } from "./smooth-columns.ts";
+import { endSlowness, guessDistance, type Lanes, makeLanes, NOT_SMOOTH, smoothTimes } from "./smooth-step.ts";
+
+/** A valid time was passed when it is further behind than this, s. */
+const PASSING_S = 1e-9;
+/**
+ * It is met when it is this near, as a share of the interval to it. The kink in the field is then misplaced by as much, which
+ * changes the time by the square of it.
+ */
+const MEETING = 1e-6;
+/** A cut nearer than this to its step's start is none, m. */
+const JOINT_M = 1e-6;
+const MOST_HALVINGS = 3;
+const MOST_CUTS = 8;
+/** Share of the speed held beyond which no medium is smooth: near it the ground speed ends. */
+const REACH = 0.9;
+
+/** The fastest medium over which a craft at this speed steps smoothly, m/s. */
+export function reachOf(speed: number): number {
+  return REACH * speed;
+}
+
+/** A leg as a fleet goes along it, at a held speed and a steady rate. */
+export interface Passage {
+  readonly leg: PreparedLeg;
+  /** Cells of the field's tiles on the leg. */
+  readonly cells: readonly PanelCells[];
+  /** Through the medium, m/s, and what it takes, store units per second. */
+  readonly speed: number;
+  readonly rate: number;
+  /** A panel with a faster node than this is not gone over, m/s. */
+  readonly reach: number;
+}
+
+/** Told of every step taken: by which departure, from and to which place, when it began, how long it took, the last valid time met. */
+export type Taken = (n: number, from: number, to: number, start: number, time: number, met: number) => void;
+
+/**
+ * Departures of one craft that go along a leg panel by panel, side by side: what depends on the place and the valid time alone is
+ * read once for all. Over a panel each goes in one smooth step, or in several where a valid time falls inside it or it is too rough;
+ * none knows of the others, so that its figures are those of a lone one. One that meets anything but data, or a
+ * speed out of reach, or a stretch too rough, sinks: it is left where it is.
+ */
+export class SmoothFleet {
+  readonly count: number;
+  /** ms since 1970. */
+  readonly departure: Float64Array;
+  /** 0 for one that sank. */
+  readonly afloat: Uint8Array;
+  /** Seconds since departure at the leg's start; on the leg; store units on the leg. */
+  readonly begun: Float64Array;
+  readonly legTime: Float64Array;
+  readonly legUse: Float64Array;
+  /** The last valid time met, s since departure: the clock may be a little short of it. */
+  readonly met: Float64Array;
+  readonly #field: Field;
+  readonly #columns: SmoothColumns;
+  readonly #clock: SliceClock;
+  readonly #lanes: Lanes;
+  readonly #rounds: Rounds;
+  readonly #taken: Taken | null;
+  #passage: Passage | null = null;
+  #tile = -1;
+  #times: Float64Array | null = null;
+  #start = 0;
+  #end = 0;
+
+  /**
+   * @param departures ms since 1970
+   * @param alongOnly take the cross-track component as zero
+   */
+  constructor(field: Field, departures: ArrayLike<number>, alongOnly: boolean, taken: Taken | null = null) {
+    const count = departures.length;
+    const each = () => new Float64Array(count);
+    this.count = count;
+    this.departure = Float64Array.from(departures);
+    this.afloat = new Uint8Array(count).fill(1);
+    this.begun = each();
+    this.legTime = each();
+    this.legUse = each();
+    this.met = each();
+    this.#field = field;
+    this.#columns = new SmoothColumns(field, alongOnly);
+    this.#clock = makeSliceClock(count);
+    this.#lanes = { ...makeLanes(count), perSecond: this.#clock.perSecond };
+    this.#rounds = makeRounds(count);
+    this.#taken = taken;
+  }
+
+  /** Sets out on a leg. */
+  setOut(passage: Passage): void {
+    this.#passage = passage;
+    this.#columns.onLeg(passage.leg, passage.cells, passage.reach);
+    this.legTime.fill(0);
+    this.legUse.fill(0);
+  }
+
+  /** Goes over a panel of the leg; afterwards `afloat` says who came through. */
+  cross(panel: number): void {
+    const { leg } = this.#passage as Passage;
+    this.#start = leg.panels.s[panel] as number;
+    this.#end = leg.panels.s[panel + 1] as number;
+    this.#columns.enter(panel);
+    this.#onTile(this.#columns.tile);
+    if (this.#tile < 0) this.afloat.fill(0);
+    else {
+      this.#ready();
+      this.#step();
+      this.#settle();
+    }
+  }
+
+  /** A panel in another tile has other valid times. */
+  #onTile(tile: number): void {
+    if (tile === this.#tile) return;
+    this.#tile = tile;
+    this.#times = (this.#field.tiles[tile] as Tile | undefined)?.times ?? null;
+    this.#clock.slice.fill(0);
+    this.#clock.until.fill(Number.NEGATIVE_INFINITY);
+  }
+
+  /** Sets the lanes for one step over the panel. */
+  #ready(): void {
+    const { afloat, begun, legTime, met, count } = this;
+    const { until } = this.#clock;
+    this.#lanes.half.fill((this.#end - this.#start) / 2);
+    for (let n = 0; n < count; n += 1) {
+      const now = (begun[n] as number) + (legTime[n] as number);
+      const moment = Math.max(now, met[n] as number);
+      if (moment >= (until[n] as number) && afloat[n] === 1 && !this.#turn(n, moment)) afloat[n] = 0;
+      this.#lanes.share[n] = this.#share(n, now);
+    }
+  }
+
+  #turn(n: number, moment: number): boolean {
+    return turnClock(this.#clock, n, this.#times, this.departure[n] as number, moment);
+  }
+
+  #share(n: number, now: number): number {
+    return (now - (this.#clock.from[n] as number)) * (this.#clock.perSecond[n] as number);
+  }
+
+  /** Takes the step over the panel, for all that are between the same two slices at once. */
+  #step(): void {
+    const { slice } = this.#clock;
+    const { speed } = this.#passage as Passage;
+    for (let first = 0; first < this.count; ) {
+      const at = slice[first] as number;
+      let last = first + 1;
+      while (last < this.count && slice[last] === at) last += 1;
+      const pair = this.#columns.pair(at, this.#next(at));
+      if (pair === NO_PAIR) this.afloat.fill(0, first, last);
+      else smoothTimes(this.#columns.pairs, pair, 0, speed, this.#lanes, first, last);
+      first = last;
+    }
+  }
+
+  #next(slice: number): number {
+    return this.#times === null ? slice : slice + 1;
+  }
+
+  /** Books the steps over the panel; those that have to go over it in several go in rounds. */
+  #settle(): void {
+    const { afloat, begun, legTime, count } = this;
+    const { time } = this.#lanes;
+    const { until } = this.#clock;
+    const rounds = this.#rounds;
+    let several = 0;
+    for (let n = 0; n < count; n += 1) {
+      if (afloat[n] === 0) continue;
+      const took = time[n] as number;
+      const now = (begun[n] as number) + (legTime[n] as number);
+      if (took !== NOT_SMOOTH && now + took <= (until[n] as number) + PASSING_S)
+        this.#book(n, this.#start, this.#end, took);
+      else {
+        rounds.who[several] = n;
+        this.#aimAtEnd(several, this.#start);
+        if (this.#judge(several, this.#lanes, n)) several += 1;
+      }
+    }
+    while (several > 0) several = this.#round(several);
+  }
+
+  #book(n: number, from: number, to: number, time: number): void {
+    const before = this.legTime[n] as number;
+    this.#taken?.(n, from, to, (this.begun[n] as number) + before, time, this.met[n] as number);
+    this.legTime[n] = before + time;
+    this.legUse[n] = (this.legUse[n] as number) + (this.#passage as Passage).rate * time;
+  }
+
+  /** One step of those that go over the panel in several; returns how many still do. */
+  #round(several: number): number {
+    const { who, place, to, lanes, parts } = this.#rounds;
+    const perMetre = 2 / (this.#end - this.#start);
+    let laid = 0;
+    for (let j = 0; j < several; j += 1) {
+      const n = who[j] as number;
+      const slice = this.#clock.slice[n] as number;
+      const from = ((place[j] as number) - this.#start) * perMetre - 1;
+      const half = ((to[j] as number) - (place[j] as number)) / 2;
+      if (!this.#columns.part(slice, this.#next(slice), from, half * perMetre, parts, laid * PAIR)) {
+        this.afloat[n] = 0;
+        continue;
+      }
+      move(this.#rounds, j, laid);
+      lanes.half[laid] = half;
+      lanes.share[laid] = this.#share(n, this.#now(n));
+      lanes.perSecond[laid] = this.#clock.perSecond[n] as number;
+      laid += 1;
+    }
+    smoothTimes(parts, 0, PAIR, (this.#passage as Passage).speed, lanes, 0, laid);
+    let left = 0;
+    for (let j = 0; j < laid; j += 1) {
+      if (!this.#judge(j, lanes, j)) continue;
+      move(this.#rounds, j, left);
+      left += 1;
+    }
+    return left;
+  }
+
+  #now(n: number): number {
+    return (this.begun[n] as number) + (this.legTime[n] as number);
+  }
+
+  /** Judges the step that one has just tried in a lane; returns whether another is to come. */
+  #judge(j: number, lanes: Lanes, lane: number): boolean {
+    const { who, place, to, limit, tries, cutting } = this.#rounds;
+    const n = who[j] as number;
+    const time = lanes.time[lane] as number;
+    const until = this.#clock.until[n] as number;
+    const wanted = until - this.#now(n);
+    if (cutting[j] === 0) {
+      if (time === NOT_SMOOTH) {
+        to[j] = ((place[j] as number) + (to[j] as number)) / 2;
+        return this.#again(j, n, MOST_HALVINGS);
+      }
+      if (time <= wanted + PASSING_S) return this.#accept(j, n, time);
+      cutting[j] = 1;
+      tries[j] = 0;
+      limit[j] = to[j] as number;
+      return this.#aim(j, n, (place[j] as number) + guessDistance(lanes, lane, wanted));
+    }
+    const late = time - wanted;
+    if (time !== NOT_SMOOTH && Math.abs(late) * (this.#clock.perSecond[n] as number) <= MEETING) {
+      this.met[n] = until;
+      return this.#accept(j, n, time);
+    }
+    if (time === NOT_SMOOTH || !this.#again(j, n, MOST_CUTS)) {
+      this.afloat[n] = 0;
+      return false;
+    }
+    return this.#aim(j, n, (to[j] as number) - late / endSlowness(lanes, lane));
+  }
+
+  #again(j: number, n: number, most: number): boolean {
+    const { tries } = this.#rounds;
+    tries[j] = (tries[j] as number) + 1;
+    if ((tries[j] as number) <= most) return true;
+    this.afloat[n] = 0;
+    return false;
+  }
+
+  /** Aims at the place where a valid time is met; at the step's start it is met on the spot. */
+  #aim(j: number, n: number, at: number): boolean {
+    const { place, to, limit } = this.#rounds;
+    if (at - (place[j] as number) >= JOINT_M) {
+      to[j] = Math.min(at, limit[j] as number);
+      return true;
+    }
+    this.met[n] = this.#clock.until[n] as number;
+    return this.#goOn(j, n);
+  }
+
+  #accept(j: number, n: number, time: number): boolean {
+    const { place, to } = this.#rounds;
+    this.#book(n, place[j] as number, to[j] as number, time);
+    place[j] = to[j] as number;
+    return (place[j] as number) < this.#end && this.#goOn(j, n);
+  }
+
+  /** Makes ready for the next step from where one is. */
+  #goOn(j: number, n: number): boolean {
+    this.#aimAtEnd(j, this.#rounds.place[j] as number);
+    const moment = Math.max(this.#now(n), this.met[n] as number);
+    if (moment < (this.#clock.until[n] as number) || this.#turn(n, moment)) return true;
+    this.afloat[n] = 0;
+    return false;
+  }
+
+  #aimAtEnd(j: number, place: number): void {
+    const rounds = this.#rounds;
+    rounds.place[j] = place;
+    rounds.to[j] = this.#end;
+    rounds.tries[j] = 0;
+    rounds.cutting[j] = 0;
+  }
+}
+
+/** Those that go over a panel in several steps: index j in the round, `who` in the fleet. */
+interface Rounds {
+  readonly who: Int32Array;
+  /** Metres from the leg's start: where the next step begins and ends, and at most. */
+  readonly place: Float64Array;
+  readonly to: Float64Array;
+  readonly limit: Float64Array;
+  readonly tries: Int32Array;
+  /** 1 where the step is being cut at a valid time. */
+  readonly cutting: Uint8Array;
+  readonly lanes: Lanes;
+  readonly parts: Float64Array;
+}
+
+function makeRounds(count: number): Rounds {
+  return {
+    who: new Int32Array(count),
+    place: new Float64Array(count),
+    to: new Float64Array(count),
+    limit: new Float64Array(count),
+    tries: new Int32Array(count),
+    cutting: new Uint8Array(count),
+    lanes: makeLanes(count),
+    parts: new Float64Array(count * PAIR),
+  };
+}
+
+function move({ who, place, to, limit, tries, cutting }: Rounds, from: number, at: number): void {
+  who[at] = who[from] as number;
+  place[at] = place[from] as number;
+  to[at] = to[from] as number;
+  limit[at] = limit[from] as number;
+  tries[at] = tries[from] as number;
+  cutting[at] = cutting[from] as number;
+}

@@ -1,0 +1,57 @@
+import type { Field } from "../field/field.ts";
+import { type Passage, SmoothFleet } from "./smooth-fleet.ts";
+import type { Step } from "./step.ts";
+
+/** A smooth step taken. */
+interface Taken {
+  /** Metres from the leg's start. */
+  readonly to: number;
+  /** s */
+  readonly time: number;
+  /** The last valid time met after it, s since departure. */
+  readonly met: number;
+}
+
+/** One craft that goes along a leg by smooth steps where they serve: a fleet of one. */
+export class SmoothLeg {
+  readonly #fleet: SmoothFleet;
+  #taken: Taken[] = [];
+  #rate = 0;
+
+  /** @param departure ms since 1970 */
+  constructor(field: Field, departure: number, alongOnly: boolean) {
+    this.#fleet = new SmoothFleet(field, [departure], alongOnly, (_n, _from, to, _start, time, met) => {
+      this.#taken.push({ to, time, met });
+    });
+  }
+
+  setOut(passage: Passage): void {
+    this.#fleet.setOut(passage);
+    this.#rate = passage.rate;
+  }
+
+  /**
+   * Goes over a panel as far as smooth steps lead.
+   *
+   * @param start s since departure at the leg's start
+   * @param elapsed s since then
+   */
+  cross(panel: number, start: number, elapsed: number, met: number): readonly Taken[] {
+    const fleet = this.#fleet;
+    this.#taken = [];
+    fleet.afloat[0] = 1;
+    fleet.begun[0] = start;
+    fleet.legTime[0] = elapsed;
+    fleet.met[0] = met;
+    fleet.cross(panel);
+    return this.#taken;
+  }
+
+  /** Puts a smooth step's own time and use in place of those from the stations, which tell how far off they may be. */
+  book(step: Step, time: number): void {
+    step.timeError += Math.abs(step.time - time);
+    step.time = time;
+    step.use = this.#rate * time;
+    step.useError = this.#rate * step.timeError;
+  }
+}

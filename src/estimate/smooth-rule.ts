@@ -1,0 +1,28 @@
+import { GAUSS_WEIGHT, STATION_X } from "./gauss-kronrod.ts";
+
+/* What the smooth step needs of the 4-point Gauss rule. */
+
+/** Stations that a smooth step reads: the start of the panel and the nodes of the rule, in order. */
+export const POINT_STATIONS = [0, 2, 4, 6, 8] as const;
+
+const [, ...NODE_STATIONS] = POINT_STATIONS;
+/** Nodes, -1..1, and weights. */
+export const NODE_X = NODE_STATIONS.map((station) => STATION_X[station] as number);
+export const NODE_WEIGHTS = NODE_STATIONS.map((station) => GAUSS_WEIGHT[station] as number);
+
+/** Row j, column m: the integral of node m's Lagrange polynomial from node j to the end of the panel. */
+export const NODE_TO_END = NODE_X.map((x) => NODE_X.map((_, m) => integral(m, x, 1)));
+
+/** Exact: the rule itself, of degree 7, on the part from a to b of a cubic. */
+function integral(m: number, a: number, b: number): number {
+  const half = (b - a) / 2;
+  return (
+    half *
+    NODE_X.reduce((sum, x, q) => sum + (NODE_WEIGHTS[q] as number) * lagrange(m, a + half * (x + 1)), 0)
+  );
+}
+
+function lagrange(m: number, x: number): number {
+  const own = NODE_X[m] as number;
+  return NODE_X.reduce((product, root, j) => (j === m ? product : (product * (x - root)) / (own - root)), 1);
+}

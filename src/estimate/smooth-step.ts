@@ -1,0 +1,232 @@
+import { BENDS } from "./smooth-columns.ts";
+import { NODE_TO_END, NODE_WEIGHTS, NODE_X } from "./smooth-rule.ts";
+
+/*
+ * The smooth step: time over a stretch inside one cell and one interval of valid times, at a held speed through the medium, by one
+ * step of Newton's method on dt/ds = F(s, t), F = 1/g (Kantorovich's form for equations in functions; Deuflhard, Newton Methods for
+ * Nonlinear Problems, 2004, chapter 7).
+ *
+ * A first guess T(s), whose slope is a parabola, comes from F at the start and at the third node and from how the medium bends.
+ * What it leaves open, R = F(s, T) - T', obeys the linear equation d' = F_t d + R, so that the time at the end is
+ * T + ∫ R(s) exp(∫ F_t from s to the end) ds. All integrals are 4-point Gauss sums on values and rates at the same four nodes. The
+ * error is of second order in d, and that of a rule of degree 7 in s; the step is refused where either could be felt.
+ *
+ * It is taken for several departures side by side, in two passes of short chains of arithmetic, which a processor overlaps.
+ */
+
+/** Departures that take the same step: index n is the departure's. */
+export interface Lanes {
+  /** Half the step's length, m. */
+  readonly half: Float64Array;
+  /** Share of the way from slice to slice at the step's start, 0..1, and its change in a second. */
+  readonly share: Float64Array;
+  readonly perSecond: Float64Array;
+  /** The guess: at z half lengths from the start the slowness is start + slope z + bend z², s/m. */
+  readonly start: Float64Array;
+  readonly slope: Float64Array;
+  readonly bend: Float64Array;
+  /** The answer, s; {@link NOT_SMOOTH} where the step's error could be above 1e-11 of it. */
+  readonly time: Float64Array;
+}
+
+export function makeLanes(count: number): Lanes {
+  const each = () => new Float64Array(count);
+  return {
+    half: each(),
+    share: each(),
+    perSecond: each(),
+    start: each(),
+    slope: each(),
+    bend: each(),
+    time: each(),
+  };
+}
+
+/** Answer of a step that is not smooth enough. */
+export const NOT_SMOOTH = -1;
+
+/** Largest share of the slowness that the guess may miss at the nodes together. */
+const MOST_MISSED = 1e-3;
+/** Largest third Legendre coefficient and bend of the slowness, as shares of it: the rule's own error is then below 1e-12 or so. */
+const MOST_TWIST = 1e-4;
+const MOST_BEND = 5e-3;
+/** Largest product of that share with the growth over the step: Newton's step leaves less than a fifth of it, squared. */
+const MOST_COUPLED = 1e-5;
+
+type Row = readonly [number, number, number, number];
+const [[B11, B12, B13, B14], [B21, B22, B23, B24], [B31, B32, B33, B34], [B41, B42, B43, B44]] =
+  NODE_TO_END as unknown as readonly [Row, Row, Row, Row];
+const [W1, W2] = NODE_WEIGHTS as unknown as Row;
+/** Distances of the nodes from the start, in half lengths. */
+const [Z1, Z2, Z3, Z4] = NODE_X.map((x) => 1 + x) as unknown as Row;
+/** Z²/2 and Z³/3: the integrals of z and z² up to them. */
+const [Y1, Y2, Y3, Y4] = NODE_X.map((x) => (1 + x) ** 2 / 2) as unknown as Row;
+const [X1, X2, X3, X4] = NODE_X.map((x) => (1 + x) ** 3 / 3) as unknown as Row;
+/** 7/2 times weight and third Legendre polynomial of the last two nodes. */
+const [, , T3, T4] = NODE_X.map(
+  (x, n) => (7 / 2) * (NODE_WEIGHTS[n] as number) * ((5 * x ** 3 - 3 * x) / 2),
+) as unknown as Row;
+const PER_Z3 = 1 / Z3;
+
+/**
+ * Times of a step for the departures `first` to `last - 1` of the lanes; they stand in `lanes.time`.
+ *
+ * @param pairs of columns of the medium along the step: that of lane n at `at + n * stride`
+ * @param stride 0 where all lanes share one pair
+ * @param speed held through the medium, m/s
+ */
+export function smoothTimes(
+  pairs: Float64Array,
+  at: number,
+  stride: number,
+  speed: number,
+  lanes: Lanes,
+  first: number,
+  last: number,
+): void {
+  guess(pairs, at, stride, speed, lanes, first, last);
+  correct(pairs, at, stride, speed, lanes, first, last);
+}
+
+/** The parabola through F at the start and, at the time that this gives, at the third node. */
+function guess(
+  pairs: Float64Array,
+  at: number,
+  stride: number,
+  speed: number,
+  { half, share, perSecond, start, slope, bend }: Lanes,
+  first: number,
+  last: number,
+): void {
+  const perSpeed = 1 / speed;
+  for (let n = first; n < last; n += 1) {
+    const p = at + n * stride;
+    const da0 = pairs[p + 1] as number;
+    const dc0 = pairs[p + 3] as number;
+    const da3 = pairs[p + 13] as number;
+    const dc3 = pairs[p + 15] as number;
+    const now = share[n] as number;
+    const scale = (half[n] as number) * (perSecond[n] as number);
+    const cStart = (pairs[p + 2] as number) + now * dc0;
+    const f0 = 1 / ((pairs[p] as number) + now * da0 + Math.sqrt((speed - cStart) * (speed + cStart)));
+    const then = now + scale * Z3 * f0;
+    const c = (pairs[p + 14] as number) + then * dc3;
+    const g = (pairs[p + 12] as number) + then * da3 + Math.sqrt((speed - c) * (speed + c));
+    const f = 1 / g;
+    const rise = (f - f0) * PER_Z3;
+    const cRise = (c - cStart) * PER_Z3;
+    const turn = scale * f * PER_Z3;
+    // g'' / 2 of g = a + sqrt(V² - c²), to first order in c/V; then F'' / 2 = F'²/F - F² g''/2.
+    const cBend =
+      (pairs[p + BENDS + 2] as number) + now * (pairs[p + BENDS + 3] as number) + turn * (dc3 - dc0);
+    const aBend = (pairs[p + BENDS] as number) + now * (pairs[p + BENDS + 1] as number) + turn * (da3 - da0);
+    const gBend = aBend - (0.5 * cRise * cRise + c * cBend) * perSpeed;
+    const square = rise * rise * g - gBend * f * f;
+    start[n] = f0;
+    slope[n] = rise - square * Z3;
+    bend[n] = square;
+  }
+}
+
+/** Newton's step from the guess. */
+function correct(
+  pairs: Float64Array,
+  at: number,
+  stride: number,
+  speed: number,
+  { half, share, perSecond, start, slope, bend, time }: Lanes,
+  first: number,
+  last: number,
+): void {
+  for (let n = first; n < last; n += 1) {
+    const p = at + n * stride;
+    const now = share[n] as number;
+    const length = half[n] as number;
+    const scale = length * (perSecond[n] as number);
+    const f0 = start[n] as number;
+    const s1 = slope[n] as number;
+    const s2 = bend[n] as number;
+    const k0 = scale * f0;
+    const k1 = scale * s1;
+    const k2 = scale * s2;
+    const da1 = pairs[p + 5] as number;
+    const dc1 = pairs[p + 7] as number;
+    const h1 = now + Z1 * k0 + Y1 * k1 + X1 * k2;
+    const c1 = (pairs[p + 6] as number) + h1 * dc1;
+    const r1 = Math.sqrt((speed - c1) * (speed + c1));
+    const g1 = (pairs[p + 4] as number) + h1 * da1 + r1;
+    const i1 = 1 / (r1 * g1);
+    const f1 = r1 * i1;
+    const d1 = scale * (c1 * g1 * i1 * dc1 - da1) * f1 * f1;
+    const m1 = f1 - (f0 + Z1 * (s1 + Z1 * s2));
+    const da2 = pairs[p + 9] as number;
+    const dc2 = pairs[p + 11] as number;
+    const h2 = now + Z2 * k0 + Y2 * k1 + X2 * k2;
+    const c2 = (pairs[p + 10] as number) + h2 * dc2;
+    const r2 = Math.sqrt((speed - c2) * (speed + c2));
+    const g2 = (pairs[p + 8] as number) + h2 * da2 + r2;
+    const i2 = 1 / (r2 * g2);
+    const f2 = r2 * i2;
+    const d2 = scale * (c2 * g2 * i2 * dc2 - da2) * f2 * f2;
+    const m2 = f2 - (f0 + Z2 * (s1 + Z2 * s2));
+    const da3 = pairs[p + 13] as number;
+    const dc3 = pairs[p + 15] as number;
+    const h3 = now + Z3 * k0 + Y3 * k1 + X3 * k2;
+    const c3 = (pairs[p + 14] as number) + h3 * dc3;
+    const r3 = Math.sqrt((speed - c3) * (speed + c3));
+    const g3 = (pairs[p + 12] as number) + h3 * da3 + r3;
+    const i3 = 1 / (r3 * g3);
+    const f3 = r3 * i3;
+    const d3 = scale * (c3 * g3 * i3 * dc3 - da3) * f3 * f3;
+    const m3 = f3 - (f0 + Z3 * (s1 + Z3 * s2));
+    const da4 = pairs[p + 17] as number;
+    const dc4 = pairs[p + 19] as number;
+    const h4 = now + Z4 * k0 + Y4 * k1 + X4 * k2;
+    const c4 = (pairs[p + 18] as number) + h4 * dc4;
+    const r4 = Math.sqrt((speed - c4) * (speed + c4));
+    const g4 = (pairs[p + 16] as number) + h4 * da4 + r4;
+    const i4 = 1 / (r4 * g4);
+    const f4 = r4 * i4;
+    const d4 = scale * (c4 * g4 * i4 * dc4 - da4) * f4 * f4;
+    const m4 = f4 - (f0 + Z4 * (s1 + Z4 * s2));
+    const e1 = B11 * d1 + B12 * d2 + B13 * d3 + B14 * d4;
+    const e2 = B21 * d1 + B22 * d2 + B23 * d3 + B24 * d4;
+    const e3 = B31 * d1 + B32 * d2 + B33 * d3 + B34 * d4;
+    const e4 = B41 * d1 + B42 * d2 + B43 * d3 + B44 * d4;
+    const missed = Math.abs(m1) + Math.abs(m2) + Math.abs(m3) + Math.abs(m4);
+    const twist = T4 * (m4 - m1) + T3 * (m3 - m2);
+    const smooth =
+      missed <= MOST_MISSED * f0 &&
+      Math.abs(twist) <= MOST_TWIST * f0 &&
+      missed * Math.abs(e1) <= MOST_COUPLED * f0 &&
+      Math.abs(s2) <= MOST_BEND * f0;
+    const open = W1 * (m1 * exp(e1) + m4 * exp(e4)) + W2 * (m2 * exp(e2) + m3 * exp(e3));
+    time[n] = smooth ? length * (2 * (f0 + s1) + (8 / 3) * s2 + open) : NOT_SMOOTH;
+  }
+}
+
+/** e^x for the small growth over one step. */
+function exp(x: number): number {
+  return 1 + x * (1 + x * (0.5 + x * (1 / 6)));
+}
+
+/**
+ * Distance from the step's start, m, that the guess of a lane comes to in `wanted` of the step's seconds, scaled to the time that came
+ * out: Newton's method.
+ */
+export function guessDistance({ half, start, slope, bend, time }: Lanes, n: number, wanted: number): number {
+  const f0 = start[n] as number;
+  const s1 = slope[n] as number;
+  const s2 = bend[n] as number;
+  const share = wanted / (time[n] as number);
+  const goal = share * (2 * (f0 + s1) + (8 / 3) * s2);
+  let z = 2 * share;
+  for (let step = 0; step < 3; step += 1)
+    z += (goal - z * (f0 + z * (s1 / 2 + z * (s2 / 3)))) / (f0 + z * (s1 + z * s2));
+  return (half[n] as number) * z;
+}
+
+/** Slowness at the step's end by the guess of a lane, s/m. */
+export function endSlowness({ start, slope, bend }: Lanes, n: number): number {
+  return (start[n] as number) + 2 * (slope[n] as number) + 4 * (bend[n] as number);
+}
