@@ -11,6 +11,7 @@ import { listenForKeys } from "./shell/keys.ts";
 import { narrowImages } from "./shell/tile-policy.ts";
 import "./shell/style.css";
 import { openDemo } from "./shell/demo.ts";
+import { giveFiles } from "./shell/give-files.ts";
 import { wantsDecisions } from "./state/decisions.ts";
 import { EMPTY_PLAN } from "./state/empty-plan.ts";
 import { createPageState } from "./state/page-state.ts";
@@ -33,6 +34,7 @@ narrowImages(page.view.tiles.peek());
 keepView(page.view, viewStorage());
 
 effect(() => {
+  giveFiles(page);
   void page.answers.ask(page.shown.value);
 });
 // What is decided rests on the estimate, and takes longer: it follows once that is there.

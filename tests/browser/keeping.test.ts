@@ -40,6 +40,34 @@ test("after a reload the plan is still said not to be in a file", async () => {
   expect(await page.locator(".saved-state").textContent()).toContain("not saved");
 });
 
+test("a field file given anew under its name is taken back by Undo, figures and all, and stays so after a reload", async () => {
+  const { page } = await visit();
+  await openDemo(page, "Survey drone", "survey");
+  const before = await figures(page);
+  const rows = [
+    "time,lat,lon,u,v",
+    ...["2027-01-01T00:00Z", "2028-01-01T00:00Z"].flatMap((time) =>
+      [0, 80].flatMap((lat) => [-40, 40].map((lon) => `${time},${lat},${lon},1,0`)),
+    ),
+  ];
+  await page.locator(".page-head input[type=file]").setInputFiles({
+    name: "survey-wind.csv",
+    mimeType: "text/csv",
+    buffer: Buffer.from(rows.join("\n")),
+  });
+  await expect.poll(() => figures(page)).not.toEqual(before);
+  await rename(page, "Another wind");
+  await kept(page);
+  await page.getByRole("button", { name: "Undo" }).click();
+  await page.getByRole("button", { name: "Undo" }).click();
+  await expect.poll(() => figures(page)).toEqual(before);
+  await rename(page, "The wind as it was");
+  await kept(page);
+  await page.reload();
+  await ready(page);
+  await expect.poll(() => figures(page)).toEqual(before);
+});
+
 test("after the first visit the page opens without a network, demos and coast as well", async () => {
   const { page, context } = await visit({ address: server.address });
   await installed(page);

@@ -2,10 +2,10 @@ import type { PageState } from "../state/page-state.ts";
 import type { CraftDocument } from "../state/plan-document.ts";
 
 /** The craft of the plan, from its file where the plan names one; `null` where there is none that is a craft. */
-export async function craftOf({ store, files }: PageState): Promise<CraftDocument | null> {
+export async function craftOf({ store }: PageState): Promise<CraftDocument | null> {
   const { craft } = store.plan.peek();
   if (!("file" in craft && typeof craft.file === "string")) return craft;
-  const content = files.peek().get(craft.file);
+  const content = store.files.peek().get(craft.file);
   return content === undefined ? null : craftInText(await content.text());
 }
 

@@ -1,4 +1,5 @@
 import type { FieldRole } from "../core.ts";
+import { giveFiles } from "../shell/give-files.ts";
 import { openPlan } from "../shell/open-plan.ts";
 import { readFieldFile } from "../shell/read-field-file.ts";
 import { keepFile } from "../state/keep-file.ts";
@@ -94,7 +95,8 @@ async function takeJson(page: PageState, file: File): Promise<void> {
     return;
   }
   await keepFile(page, file.name, file);
-  page.store.edit("Change craft", (plan) => setCraft(plan, { file: file.name }));
+  const files = new Map([[file.name, file]]);
+  page.store.edit("Change craft", (plan) => setCraft(plan, { file: file.name }), { files });
   page.view.announcement.value = `The craft is now that of ${file.name}`;
 }
 
@@ -106,12 +108,14 @@ async function takeField(page: PageState, file: File): Promise<void> {
   const answer = await readFieldFile(page, field);
   if (!answer.ok) {
     if (!answer.cancelled) page.view.notice.value = answer.fault;
+    giveFiles(page);
     return;
   }
   page.view.announcement.value = `Read ${file.name}`;
-  if (known === undefined) page.store.edit("Add field", (plan) => addField(plan, field));
-  // The same reference with other bytes behind it: the plan is the same, and must be answered anew.
-  else await page.answers.ask(page.store.plan.peek());
+  const files = new Map([[field.file, file]]);
+  if (known === undefined) page.store.edit("Add field", (plan) => addField(plan, field), { files });
+  // The same references with other bytes behind one: as a plan of its own it is answered and decided anew.
+  else page.store.edit("Replace field file", (plan) => ({ ...plan }), { files });
 }
 
 /** The field as a file with one possible reading gives it; `null` where the user must say what it is. */

@@ -55,7 +55,7 @@ export function keepPlan(page: PageState): Keeping {
 
   const write = async (): Promise<void> => {
     const plan = page.store.plan.peek();
-    const files = page.files.peek();
+    const files = page.store.files.peek();
     const unsaved = page.store.unsaved.peek();
     try {
       for (const [name, content] of files) {
@@ -72,7 +72,7 @@ export function keepPlan(page: PageState): Keeping {
         store,
       );
       await forgetUnnamed(plan);
-      safe = plan === page.store.plan.peek() && files === page.files.peek();
+      safe = plan === page.store.plan.peek() && files === page.store.files.peek();
     } catch {
       safe = false;
     }
@@ -90,7 +90,7 @@ export function keepPlan(page: PageState): Keeping {
   effect(() => {
     page.store.plan.value;
     page.store.unsaved.value;
-    page.files.value;
+    page.store.files.value;
     safe = false;
     writing.later();
   });

@@ -22,9 +22,21 @@ export async function openPlan(
     return false;
   }
   const { craft, fields = [] } = plan;
-  if ("file" in craft && typeof craft.file === "string") await keep(page, craft.file, find);
+  const files = new Map<string, Blob>();
+  const keep = async (file: string): Promise<boolean> => {
+    const content = await find(file);
+    if (content === null) {
+      if (page.store.files.peek().has(file) && page.view.notice.peek() === null)
+        page.view.notice.value = `${file} did not come with ${name}: the file of that name that was here is used`;
+      return false;
+    }
+    files.set(file, content);
+    await keepFile(page, file, content);
+    return true;
+  };
+  if ("file" in craft && typeof craft.file === "string") await keep(craft.file);
   for (const field of fields) {
-    if (!(await keep(page, field.file, find))) continue;
+    if (!(await keep(field.file))) continue;
     const answer = await readFieldFile(page, field);
     if (!answer.ok && !answer.cancelled) page.view.notice.value = answer.fault;
   }
@@ -38,8 +50,8 @@ export async function openPlan(
       "The plan that was here is in no file: Undo brings it back, until the page is left.";
   }
   // There is nothing to go back to where nothing was.
-  if (page.store.plan.peek().routes.length === 0) page.store.restart(plan);
-  else page.store.open(plan, `Open ${name}`);
+  if (page.store.plan.peek().routes.length === 0) page.store.restart(plan, files);
+  else page.store.open(plan, `Open ${name}`, files);
   page.view.opened.value += 1;
   page.view.announcement.value = `Opened ${name}`;
   return true;
@@ -49,7 +61,7 @@ export async function openPlan(
 async function unitsOf({ files, view }: PageState, craft: PlanDocument["craft"]): Promise<UnitsPreset> {
   if (!("file" in craft) || typeof craft.file !== "string")
     return "moves" in craft && craft.moves === "air" ? "air" : "sea";
-  const file = files.peek().get(craft.file);
+  const file = files.get(craft.file);
   if (file === undefined) return view.units.peek();
   try {
     const value: unknown = JSON.parse(await file.text());
@@ -59,17 +71,6 @@ async function unitsOf({ files, view }: PageState, craft: PlanDocument["craft"])
     // What is wrong with the craft the estimate says.
     return view.units.peek();
   }
-}
-
-async function keep(
-  page: PageState,
-  file: string,
-  find: (file: string) => Promise<Blob | null>,
-): Promise<boolean> {
-  const content = await find(file);
-  if (content === null) return false;
-  await keepFile(page, file, content);
-  return true;
 }
 
 function planOf(text: string): PlanDocument | null {

@@ -1,13 +1,13 @@
 import type { PageState } from "./page-state.ts";
 
-/** Gives a file to the worker under the name that plans use, and notes it for being kept on the device. */
+/** Gives a file to the worker under the name that plans use, in place of any of that name. */
 export async function keepFile(
   { engine, files, craftNames }: PageState,
   name: string,
   content: Blob,
 ): Promise<void> {
+  files.set(name, content);
   await engine.keepFile(name, content);
-  files.value = new Map([...files.peek(), [name, content]]);
   if (!name.endsWith(".json")) return;
   const craft = nameIn(await content.text());
   if (craft !== null) craftNames.value = { ...craftNames.peek(), [name]: craft };

@@ -44,8 +44,8 @@ export interface PageState {
   /** The routes as shown, with what is decided on top of them once that is there. */
   readonly routes: ReadonlySignal<readonly (DecidedRoute | null)[]>;
   readonly asking: Signal<FieldQuestion | null>;
-  /** The files that the user gave, by the names that plans use. */
-  readonly files: Signal<ReadonlyMap<string, Blob>>;
+  /** The files that the worker has, by the names that plans use; those of the plan are its store's. */
+  readonly files: Map<string, Blob>;
   /** Names of the craft in craft files, by the file. */
   readonly craftNames: Signal<Readonly<Record<string, string>>>;
   readonly readings: Signal<readonly Reading[]>;
@@ -88,7 +88,7 @@ export function createPageState(
       return routes.map((route, at) => (route === null ? null : (decided.routes[at] ?? route)));
     }),
     asking: signal<FieldQuestion | null>(null),
-    files: signal<ReadonlyMap<string, Blob>>(new Map()),
+    files: new Map(),
     craftNames: signal<Readonly<Record<string, string>>>({}),
     readings: signal<readonly Reading[]>([]),
     inspections: signal<Readonly<Record<string, FieldInspection>>>({}),

@@ -8,21 +8,31 @@ export interface Selection {
   readonly waypoint: number | null;
 }
 
+/** Files by the names that plans use. */
+export type Files = ReadonlyMap<string, Blob>;
+
 interface EditOptions {
   /** Edits in a row with the same key are undone as one. */
   readonly merge?: string;
   /** What is chosen after the edit; otherwise what was chosen before, as far as it still exists. */
   readonly select?: Selection;
+  /** Files that come with the edit, in place of those of the same names; undo brings those back. */
+  readonly files?: Files;
 }
 
 interface Held {
   readonly plan: PlanDocument;
   readonly selection: Selection;
+  readonly files: Files;
 }
 
-/** The plan on the page with its history; the selection travels with it, so that undo shows what it undid. */
+/**
+ * The plan on the page with its history. The selection travels with it, so that undo shows what it undid, and so do the files that its
+ * names stand for, so that undo shows the figures that were there.
+ */
 export interface PlanStore {
   readonly plan: ReadonlySignal<PlanDocument>;
+  readonly files: ReadonlySignal<Files>;
   readonly selection: ReadonlySignal<Selection>;
   /** What undo and redo would take back or bring again; `null` where there is nothing. */
   readonly undoLabel: ReadonlySignal<string | null>;
@@ -35,16 +45,16 @@ export interface PlanStore {
   redo(): void;
   select(selection: Selection): void;
   /** Replaces the plan, as an edit that can be undone; the new plan counts as saved. */
-  open(plan: PlanDocument, label: string): void;
+  open(plan: PlanDocument, label: string, files?: Files): void;
   /** Begins anew with a plan: nothing before it can be undone. */
-  restart(plan: PlanDocument): void;
+  restart(plan: PlanDocument, files?: Files): void;
   markSaved(): void;
   /** Says that the plan as it stands is in no file. */
   markUnsaved(): void;
 }
 
 export function createPlanStore(initial: PlanDocument): PlanStore {
-  const history = signal(beginHistory<Held>({ plan: initial, selection: { route: 0, waypoint: null } }));
+  const history = signal(beginHistory(heldAs(initial, NO_FILES)));
   const saved = signal<PlanDocument | null>(initial);
   const held = computed(() => history.value.present);
 
@@ -54,17 +64,22 @@ export function createPlanStore(initial: PlanDocument): PlanStore {
 
   return {
     plan: computed(() => held.value.plan),
+    files: computed(() => held.value.files),
     selection: computed(() => held.value.selection),
     undoLabel: computed(() => history.value.past?.label ?? null),
     redoLabel: computed(() => history.value.future?.label ?? null),
     unsaved: computed(() => held.value.plan !== saved.value),
     edit(label, change, options = {}) {
-      const { plan, selection } = history.peek().present;
+      const { plan, selection, files } = history.peek().present;
       const next = change(plan);
       if (next === plan) return;
       write(
         label,
-        { plan: next, selection: existing(next, options.select ?? selection) },
+        {
+          plan: next,
+          selection: existing(next, options.select ?? selection),
+          files: withFiles(files, options.files),
+        },
         options.merge ?? null,
       );
     },
@@ -83,12 +98,12 @@ export function createPlanStore(initial: PlanDocument): PlanStore {
       if (next.route === present.selection.route && next.waypoint === present.selection.waypoint) return;
       history.value = { ...history.peek(), present: { ...present, selection: next } };
     },
-    open(plan, label) {
-      write(label, { plan, selection: { route: 0, waypoint: null } }, null);
+    open(plan, label, files) {
+      write(label, heldAs(plan, withFiles(history.peek().present.files, files)), null);
       saved.value = plan;
     },
-    restart(plan) {
-      history.value = beginHistory({ plan, selection: { route: 0, waypoint: null } });
+    restart(plan, files) {
+      history.value = beginHistory(heldAs(plan, withFiles(history.peek().present.files, files)));
       saved.value = plan;
     },
     markSaved() {
@@ -99,6 +114,17 @@ export function createPlanStore(initial: PlanDocument): PlanStore {
     },
   };
 }
+
+const NO_FILES: Files = new Map();
+
+const heldAs = (plan: PlanDocument, files: Files): Held => ({
+  plan,
+  selection: { route: 0, waypoint: null },
+  files,
+});
+
+const withFiles = (files: Files, more: Files | undefined): Files =>
+  more === undefined ? files : new Map([...files, ...more]);
 
 /** The nearest selection that exists in the plan. */
 function existing(plan: PlanDocument, { route, waypoint }: Selection): Selection {
