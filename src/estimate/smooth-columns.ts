@@ -114,13 +114,15 @@ export class SmoothColumns {
    */
   part(slice: number, next: number, from: number, half: number, parts: Float64Array, at: number): boolean {
     if (!this.#hasPowers(slice) || !this.#hasPowers(next)) return false;
-    const first = slice * COLUMN;
-    const second = next * COLUMN;
-    cutPowers(this.#columns, first + ALONG_POWERS, from, half, parts, at);
-    cutPowers(this.#columns, second + ALONG_POWERS, from, half, parts, at + 1);
-    cutPowers(this.#columns, first + CROSS_POWERS, from, half, parts, at + 2);
-    cutPowers(this.#columns, second + CROSS_POWERS, from, half, parts, at + 3);
-    for (let n = at; n < at + BENDS; n += 2) parts[n + 1] = (parts[n + 1] as number) - (parts[n] as number);
+    cutPair(
+      this.#columns,
+      slice * COLUMN + ALONG_POWERS,
+      next * COLUMN + ALONG_POWERS,
+      from,
+      half,
+      parts,
+      at,
+    );
     const whole = this.pair(slice, next) + BENDS;
     for (let n = 0; n < POINT; n += 1)
       parts[at + BENDS + n] = half * half * (this.pairs[whole + n] as number);
@@ -232,24 +234,37 @@ function fitPowers(columns: Float64Array, values: number, powers: number, reach:
   });
 }
 
-/** Values at the points of the part that starts at ξ = `from` and is 2 `half` long, a pair's point apart. */
-function cutPowers(
+/**
+ * Values and changes at the points of the part that starts at ξ = `from` and is 2 `half` long, by the coefficients of both components
+ * that start at `p` in one column and at `q` in the next. The four polynomials go side by side: their chains overlap.
+ */
+function cutPair(
   columns: Float64Array,
-  at: number,
+  p: number,
+  q: number,
   from: number,
   half: number,
-  values: Float64Array,
-  to: number,
+  parts: Float64Array,
+  at: number,
 ): void {
-  const a = columns[at] as number;
-  const b = columns[at + 1] as number;
-  const c = columns[at + 2] as number;
-  const d = columns[at + 3] as number;
-  const e = columns[at + 4] as number;
-  const f = columns[at + 5] as number;
+  const c = TERMS;
   for (let n = 0; n < POINTS; n += 1) {
     const x = from + half * (POINT_Z[n] as number);
-    values[to + POINT * n] = ((((f * x + e) * x + d) * x + c) * x + b) * x + a;
+    let along = columns[p + 5] as number;
+    let nextAlong = columns[q + 5] as number;
+    let cross = columns[p + c + 5] as number;
+    let nextCross = columns[q + c + 5] as number;
+    for (let term = 4; term >= 0; term -= 1) {
+      along = along * x + (columns[p + term] as number);
+      nextAlong = nextAlong * x + (columns[q + term] as number);
+      cross = cross * x + (columns[p + c + term] as number);
+      nextCross = nextCross * x + (columns[q + c + term] as number);
+    }
+    const to = at + POINT * n;
+    parts[to] = along;
+    parts[to + 1] = nextAlong - along;
+    parts[to + 2] = cross;
+    parts[to + 3] = nextCross - cross;
   }
 }
 

@@ -14,7 +14,7 @@ const PASSING_S = 1e-9;
 const MEETING = 1e-6;
 /** A cut nearer than this to its step's start is none, m. */
 const JOINT_M = 1e-6;
-const MOST_HALVINGS = 3;
+const MOST_HALVINGS = 10;
 const MOST_CUTS = 8;
 /** Share of the speed held beyond which no medium is smooth: near it the ground speed ends. */
 const REACH = 0.9;
@@ -178,7 +178,8 @@ export class SmoothFleet {
         this.#book(n, this.#start, this.#end, took);
       else {
         rounds.who[several] = n;
-        this.#aimAtEnd(several, this.#start);
+        rounds.longest[several] = this.#end - this.#start;
+        this.#aim(several, this.#start);
         if (this.#judge(several, this.#lanes, n)) several += 1;
       }
     }
@@ -228,21 +229,22 @@ export class SmoothFleet {
 
   /** Judges the step that one has just tried in a lane; returns whether another is to come. */
   #judge(j: number, lanes: Lanes, lane: number): boolean {
-    const { who, place, to, limit, tries, cutting } = this.#rounds;
+    const { who, place, to, longest, limit, tries, cutting } = this.#rounds;
     const n = who[j] as number;
     const time = lanes.time[lane] as number;
     const until = this.#clock.until[n] as number;
     const wanted = until - this.#now(n);
     if (cutting[j] === 0) {
       if (time === NOT_SMOOTH) {
-        to[j] = ((place[j] as number) + (to[j] as number)) / 2;
+        longest[j] = ((to[j] as number) - (place[j] as number)) / 2;
+        to[j] = (place[j] as number) + (longest[j] as number);
         return this.#again(j, n, MOST_HALVINGS);
       }
       if (time <= wanted + PASSING_S) return this.#accept(j, n, time);
       cutting[j] = 1;
       tries[j] = 0;
       limit[j] = to[j] as number;
-      return this.#aim(j, n, (place[j] as number) + guessDistance(lanes, lane, wanted));
+      return this.#aimAtTime(j, n, (place[j] as number) + guessDistance(lanes, lane, wanted));
     }
     const late = time - wanted;
     if (time !== NOT_SMOOTH && Math.abs(late) * (this.#clock.perSecond[n] as number) <= MEETING) {
@@ -253,7 +255,7 @@ export class SmoothFleet {
       this.afloat[n] = 0;
       return false;
     }
-    return this.#aim(j, n, (to[j] as number) - late / endSlowness(lanes, lane));
+    return this.#aimAtTime(j, n, (to[j] as number) - late / endSlowness(lanes, lane));
   }
 
   #again(j: number, n: number, most: number): boolean {
@@ -265,7 +267,7 @@ export class SmoothFleet {
   }
 
   /** Aims at the place where a valid time is met; at the step's start it is met on the spot. */
-  #aim(j: number, n: number, at: number): boolean {
+  #aimAtTime(j: number, n: number, at: number): boolean {
     const { place, to, limit } = this.#rounds;
     if (at - (place[j] as number) >= JOINT_M) {
       to[j] = Math.min(at, limit[j] as number);
@@ -276,25 +278,28 @@ export class SmoothFleet {
   }
 
   #accept(j: number, n: number, time: number): boolean {
-    const { place, to } = this.#rounds;
+    const { place, to, longest, cutting } = this.#rounds;
     this.#book(n, place[j] as number, to[j] as number, time);
+    // What was too rough is likely so further on; beyond a valid time it need not be.
+    longest[j] = cutting[j] === 1 ? this.#end : 2 * ((to[j] as number) - (place[j] as number));
     place[j] = to[j] as number;
     return (place[j] as number) < this.#end && this.#goOn(j, n);
   }
 
   /** Makes ready for the next step from where one is. */
   #goOn(j: number, n: number): boolean {
-    this.#aimAtEnd(j, this.#rounds.place[j] as number);
+    this.#aim(j, this.#rounds.place[j] as number);
     const moment = Math.max(this.#now(n), this.met[n] as number);
     if (moment < (this.#clock.until[n] as number) || this.#turn(n, moment)) return true;
     this.afloat[n] = 0;
     return false;
   }
 
-  #aimAtEnd(j: number, place: number): void {
+  /** Aims a step as far as is likely to be smooth. */
+  #aim(j: number, place: number): void {
     const rounds = this.#rounds;
     rounds.place[j] = place;
-    rounds.to[j] = this.#end;
+    rounds.to[j] = Math.min(place + (rounds.longest[j] as number), this.#end);
     rounds.tries[j] = 0;
     rounds.cutting[j] = 0;
   }
@@ -307,6 +312,8 @@ interface Rounds {
   readonly place: Float64Array;
   readonly to: Float64Array;
   readonly limit: Float64Array;
+  /** How long the next step may be, m. */
+  readonly longest: Float64Array;
   readonly tries: Int32Array;
   /** 1 where the step is being cut at a valid time. */
   readonly cutting: Uint8Array;
@@ -320,6 +327,7 @@ function makeRounds(count: number): Rounds {
     place: new Float64Array(count),
     to: new Float64Array(count),
     limit: new Float64Array(count),
+    longest: new Float64Array(count),
     tries: new Int32Array(count),
     cutting: new Uint8Array(count),
     lanes: makeLanes(count),
@@ -327,11 +335,12 @@ function makeRounds(count: number): Rounds {
   };
 }
 
-function move({ who, place, to, limit, tries, cutting }: Rounds, from: number, at: number): void {
+function move({ who, place, to, limit, longest, tries, cutting }: Rounds, from: number, at: number): void {
   who[at] = who[from] as number;
   place[at] = place[from] as number;
   to[at] = to[from] as number;
   limit[at] = limit[from] as number;
+  longest[at] = longest[from] as number;
   tries[at] = tries[from] as number;
   cutting[at] = cutting[from] as number;
 }

@@ -211,19 +211,22 @@ function exp(x: number): number {
 }
 
 /**
- * Distance from the step's start, m, that the guess of a lane comes to in `wanted` of the step's seconds, scaled to the time that came
- * out: Newton's method.
+ * Distance from the step's start, m, that a lane has come to after `wanted` of the step's seconds, nearly: by Newton's method on the
+ * guess, to which what it missed of the step's time is added as the cube of the way, since it misses most near the end.
  */
 export function guessDistance({ half, start, slope, bend, time }: Lanes, n: number, wanted: number): number {
+  const length = half[n] as number;
   const f0 = start[n] as number;
   const s1 = slope[n] as number;
   const s2 = bend[n] as number;
-  const share = wanted / (time[n] as number);
-  const goal = share * (2 * (f0 + s1) + (8 / 3) * s2);
-  let z = 2 * share;
-  for (let step = 0; step < 3; step += 1)
-    z += (goal - z * (f0 + z * (s1 / 2 + z * (s2 / 3)))) / (f0 + z * (s1 + z * s2));
-  return (half[n] as number) * z;
+  const missed = (time[n] as number) / length - (2 * (f0 + s1) + (8 / 3) * s2);
+  const cube = s2 / 3 + missed / 8;
+  let z = (2 * wanted) / (time[n] as number);
+  for (let step = 0; step < 3; step += 1) {
+    const late = z * (f0 + z * (s1 / 2 + z * cube)) - wanted / length;
+    z -= late / (f0 + z * (s1 + z * s2));
+  }
+  return length * z;
 }
 
 /** Slowness at the step's end by the guess of a lane, s/m. */
