@@ -34,12 +34,15 @@ export function followPlace(
     interactive: false,
   });
   let isTouch = false;
+  /** Whether a hand is on the chart, which then has the keyboard by that alone. */
+  let isHand = false;
   let pressed = { x: 0, y: 0, timer: 0, isLong: false };
   const noteHand = ({ pointerType }: PointerEvent): void => {
     isTouch = pointerType === "touch";
   };
   const press = (event: PointerEvent): void => {
     noteHand(event);
+    isHand = true;
     clearTimeout(pressed.timer);
     const { clientX: x, clientY: y } = event;
     const hold = (): void => {
@@ -78,8 +81,16 @@ export function followPlace(
   });
   const readFocus = (): void => {
     const { activeElement: held } = document;
-    if (!host.contains(held) || !held?.matches(":focus-visible")) return;
+    if (isHand || !host.contains(held) || !held?.matches(":focus-visible")) return;
     put(held === host ? map.getCenter() : placeOf(map, held), "keyboard");
+  };
+  const takeKeys = (): void => {
+    isHand = false;
+    readFocus();
+  };
+  const loseKeys = (): void => {
+    isHand = false;
+    leave("keyboard");
   };
   const followers = [
     ["pointerdown", press],
@@ -88,8 +99,8 @@ export function followPlace(
     ["pointercancel", lift],
     ["focusin", readFocus],
     // A key may have moved the handle.
-    ["keyup", readFocus],
-    ["focusout", () => leave("keyboard")],
+    ["keyup", takeKeys],
+    ["focusout", loseKeys],
   ] as const;
   for (const [kind, follow] of followers) host.addEventListener(kind, follow as EventListener, true);
   map.on("moveend", readFocus);

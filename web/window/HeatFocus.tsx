@@ -21,6 +21,8 @@ interface HeatFocusProps {
 export function HeatFocus(props: HeatFocusProps) {
   const { page, departures, rows, cellWidth, active, text, onLook, onChoose } = props;
   const grid = useRef<HTMLTableElement>(null);
+  // What a finger looks at stays while it goes on to the button that sets it.
+  const isTouched = useRef(false);
   const columns = departures.length;
   const placeAt = ({ clientX, clientY }: MouseEvent): HeatPlace | null => {
     const box = grid.current?.getBoundingClientRect();
@@ -30,6 +32,7 @@ export function HeatFocus(props: HeatFocusProps) {
     return column >= 0 && column < columns && row >= 0 && row < rows ? { row, column } : null;
   };
   const onKey = (event: KeyboardEvent): void => {
+    isTouched.current = false;
     const next = walk(event.key, active ?? { row: 0, column: 0 }, rows, columns);
     if (next !== null) {
       onLook(next);
@@ -55,6 +58,9 @@ export function HeatFocus(props: HeatFocusProps) {
       aria-rowcount={rows}
       aria-colcount={columns}
       aria-activedescendant="heat-cell"
+      onPointerDown={({ pointerType }) => {
+        isTouched.current = pointerType === "touch";
+      }}
       onPointerMove={(event) => {
         const place = placeAt(event);
         if (place?.row !== active?.row || place?.column !== active?.column) onLook(place);
@@ -70,7 +76,9 @@ export function HeatFocus(props: HeatFocusProps) {
         else onChoose(place);
       }}
       onFocus={onFocus}
-      onBlur={() => onLook(null)}
+      onBlur={() => {
+        if (!isTouched.current) onLook(null);
+      }}
       onKeyDown={onKey}
     >
       <tbody>
