@@ -1,7 +1,8 @@
 import { spawnSync } from "node:child_process";
 import { expect, test } from "vitest";
 import { ADVISORY } from "../../src/index.ts";
-import { visit } from "./visit.ts";
+import { openPart } from "./desk-parts.ts";
+import { openDemo, visit } from "./visit.ts";
 
 /** Points: the sizes of the papers. */
 const PAPERS = [
@@ -52,6 +53,55 @@ test("a print in the dark theme is black on white all the same", async () => {
   });
   expect(ink).toBe("rgb(0, 0, 0)");
   expect(["rgb(255, 255, 255)", "rgba(0, 0, 0, 0)"]).toContain(ground);
+});
+
+test("what is decided is printed with the leg table where that is asked for, in words in place of fields", async () => {
+  const { page } = await visit({ colours: "dark" });
+  await openDemo(page, "Workboat: when, and how sure", "islands-decide");
+  await openPart(page, "Departures");
+  await page.getByRole("list", { name: "Best departures" }).waitFor();
+  expect(textOf(await page.pdf({ format: "A4" }))).not.toContain("Departures compared");
+
+  await page.getByLabel("Print with the leg table").check();
+  const departures = textOf(await page.pdf({ format: "A4" })).replaceAll(/\s+/g, " ");
+  expect(departures).toContain("Departures compared");
+  expect(departures).toContain(
+    "Departures from Tue 4 May 2027 09:00 UTC to Tue 4 May 2027 16:00 UTC, every 1 h.",
+  );
+  expect(departures).toContain("Least time");
+  expect(departures).not.toMatch(/mm\/dd|the pace's|Refine/);
+
+  await openPart(page, "Turning back");
+  await page
+    .getByText(/Point of no return/)
+    .first()
+    .waitFor();
+  const turning = textOf(await page.pdf({ format: "A4" })).replaceAll(/\s+/g, " ");
+  expect(turning).toMatch(/Turning back and off .*Orrin quay .*Point of no return, start \(Pier buoy\)/);
+  expect(turning).not.toContain("Type an alternate");
+});
+
+test("the map of departures has paper's colours on paper, and the theme's again afterwards", async () => {
+  const { page, expectFault } = await visit({ colours: "dark" });
+  // Chromium's advice to whoever reads a canvas often, as this test does.
+  expectFault(/willReadFrequently/);
+  await openDemo(page, "Workboat: when, and how sure", "islands-decide");
+  await openPart(page, "Departures");
+  await page.getByRole("list", { name: "Best departures" }).waitFor();
+  // The line of the plan's departure, 11:00, on the last row, two hours after the first of the window.
+  const line = () =>
+    page.evaluate(() => {
+      const canvas = document.querySelector<HTMLCanvasElement>(".heat-grid canvas");
+      const { width = 0, height = 0 } = canvas ?? {};
+      const pixel = canvas?.getContext("2d")?.getImageData((width * 2.5) / 8 - 1, height - 4, 1, 1).data;
+      return [...(pixel ?? [])].slice(0, 3);
+    });
+  const onScreen = await line();
+  expect(Math.min(...onScreen)).toBeGreaterThan(200);
+  await page.emulateMedia({ media: "print" });
+  await expect.poll(async () => Math.max(...(await line()))).toBeLessThan(40);
+  await page.emulateMedia({ media: "screen" });
+  await expect.poll(line).toEqual(onScreen);
 });
 
 function textOf(pdf: Buffer): string {
