@@ -1,4 +1,4 @@
-import { estimateRoute, routeOutcome } from "../../src/estimate/estimate-route.ts";
+import { estimateRoute, routeOutcome, routeOutcomes } from "../../src/estimate/estimate-route.ts";
 import { type PreparedRoute, prepareRoute } from "../../src/estimate/prepare.ts";
 import type { Field } from "../../src/field/field.ts";
 import { atMost, type Comparison, faster, figure, type Part } from "./comparison.ts";
@@ -85,11 +85,12 @@ function accuracy(route: PreparedRoute, wind: Field, scipy: number | undefined):
 }
 
 async function departureSweep({ wind, prepared }: Ocean, peer: PythonPeer | null): Promise<Part> {
-  const conditions = Array.from(DEPARTURES_S, (departure) => oceanConditions(wind, departure));
-  const ours = inProcess("routeOutcome, 240 departures of 5 routes", 1, () => {
+  const conditions = oceanConditions(wind, DEPARTURE_S);
+  const moments = Array.from(DEPARTURES_S, (departure) => oceanConditions(wind, departure).departure);
+  const ours = inProcess("routeOutcomes, 240 departures of 5 routes", 1, () => {
     let sum = 0;
     for (const route of prepared)
-      for (const one of conditions) sum += routeOutcome(route, one).time_s ?? Number.NaN;
+      for (const { time_s } of routeOutcomes(route, conditions, moments)) sum += time_s ?? Number.NaN;
     return sum;
   });
   const contestants: Contestant[] = [ours];

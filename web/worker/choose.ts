@@ -12,5 +12,5 @@ export type { Steps } from "../../src/choose/steps.ts";
 export { type SureWindow, sureWindow } from "../../src/choose/sure-window.ts";
 export { withTurnBack } from "../../src/choose/turn-back-estimate.ts";
 export { conditionsOf, withUncertainty } from "../../src/choose/uncertain-estimate.ts";
-export { makeSweep, type Sweep, sweepCell } from "../../src/choose/window.ts";
+export { makeSweep, type Sweep, sweepCells } from "../../src/choose/window.ts";
 export { summariseWindow } from "../../src/choose/window-summary.ts";

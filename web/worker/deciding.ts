@@ -17,7 +17,7 @@ import {
   type Sweep,
   summariseWindow,
   sureWindow,
-  sweepCell,
+  sweepCells,
   windowDepartures,
 } from "./choose.ts";
 import { estimatePrepared, InputError, type Plan } from "./core.ts";
@@ -118,24 +118,39 @@ function inTimeOf({ sweep, window }: OpenWindow): Pick<WindowBests, "inTime" | "
   }
 }
 
-/** Cells in the order asked for, until the time is spent: so the worker can hear what else is asked in between. */
-function slice(
-  { sweep, departures, speeds }: OpenWindow,
-  indices: Int32Array,
-  budget_ms: number,
-): WindowSlice {
-  const end = performance.now() + budget_ms;
+/**
+ * Cells in the order asked for, until the time is spent: so the worker can hear what else is asked in between. Departures of one
+ * route and speed are cheaper side by side: more are taken at a time as long as that fits the time.
+ */
+function slice(open: OpenWindow, indices: Int32Array, budget_ms: number): WindowSlice {
+  const begun = performance.now();
   const cells: WindowCell[] = [];
-  for (const index of indices) {
-    const speed = speeds[index % speeds.length] ?? null;
-    const way = Math.floor(index / speeds.length);
-    const prepared = sweep.prepared[way % sweep.prepared.length];
-    const departure = departures[Math.floor(way / sweep.prepared.length)];
-    if (prepared === undefined || departure === undefined) throw new Error(`no cell ${index} in the window`);
-    cells.push(sweepCell(sweep, prepared, departure, speed));
-    if (performance.now() >= end) break;
+  for (let some = 1; cells.length < indices.length; ) {
+    const before = performance.now();
+    cells.push(...sideBySide(open, indices.subarray(cells.length, cells.length + some)));
+    const now = performance.now();
+    if (now - begun >= budget_ms) break;
+    if (now - before < budget_ms / 4) some *= 2;
   }
   return { cells };
+}
+
+/** The cells of some indices, those of one route and speed together. */
+function sideBySide({ sweep, departures, speeds }: OpenWindow, indices: Int32Array): WindowCell[] {
+  const cells = new Array<WindowCell>(indices.length);
+  const ways = sweep.prepared.length * speeds.length;
+  for (const way of new Set(indices.map((index) => index % ways))) {
+    const places = Array.from(indices.keys()).filter((at) => (indices[at] as number) % ways === way);
+    const prepared = sweep.prepared[Math.floor(way / speeds.length)];
+    const moments = places.flatMap((at) => departures[Math.floor((indices[at] as number) / ways)] ?? []);
+    if (prepared === undefined || moments.length < places.length)
+      throw new Error(`cells ${indices.join(", ")} are not all in the window`);
+    const found = sweepCells(sweep, prepared, moments, speeds[way % speeds.length] ?? null);
+    places.forEach((at, n) => {
+      cells[at] = found[n] as WindowCell;
+    });
+  }
+  return cells;
 }
 
 function sureSlice(steps: Steps<SureWindow> | null, budget_ms: number): Answered<SureSlice> {
