@@ -138,8 +138,18 @@ export function fromUnit(value: number, symbol: string): number {
   return (value * times) / over + plus;
 }
 
-/** Pattern, for JSON schemas, of the texts that the dimensions accept. */
-export function quantityPattern(dimensions: readonly Dimension[]): string {
+/**
+ * Pattern, for JSON schemas, of the texts that the dimensions accept.
+ *
+ * @param least the bound that the figure keeps: above 0, not below 0, or none
+ */
+export function quantityPattern(
+  dimensions: readonly Dimension[],
+  least: "above 0" | "0" | "any" = "any",
+): string {
   const symbols = dimensions.flatMap(symbolsOf).map((each) => each.replace(/[/]/g, "\\/"));
-  return `^\\s*${NUMBER.source.slice(1)}\\s*(?:${symbols.join("|")})\\s*$`;
+  return `^\\s*${BOUNDED[least]}${NUMBER.source.slice(1)}\\s*(?:${symbols.join("|")})\\s*$`;
 }
+
+/** A figure is as its digits before the exponent are: with none but 0 it is 0. */
+const BOUNDED = { "above 0": "(?!-)(?=[+.0]*[1-9])", "0": "(?!-[.0]*[1-9])", any: "" };

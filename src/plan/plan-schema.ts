@@ -22,6 +22,8 @@ import { time } from "./time-schema.ts";
 import { whatIfSchema } from "./what-if-schema.ts";
 import { windowSchema } from "./window-schema.ts";
 
+const RANGE = { lat: { minimum: -90, maximum: 90 }, lon: { minimum: -180, maximum: 360 } };
+
 const coordinate = (axis: "lat" | "lon", description: string) => {
   const rule =
     axis === "lat" ? `takes degrees, as 50.358 or "50°21.5'N"` : `takes degrees, as -4.151 or "4°09.05'W"`;
@@ -30,7 +32,8 @@ const coordinate = (axis: "lat" | "lon", description: string) => {
       .union([z.number(), z.string()], {
         error: (issue) => sentence(axis === "lat" ? "latitude" : "longitude", rule, issue.input),
       })
-      .check(z.meta({ description })),
+      // For numbers; a text has figures at least.
+      .check(z.meta({ ...RANGE[axis], pattern: "\\d", description })),
     (value) => parseCoordinate(value, axis),
   );
 };

@@ -46,13 +46,18 @@ export function quantity(
   const asText = (value: number) => boundText(value, dimensions);
   const text = z
     .string({ error: (issue) => sentence(name, `takes ${acceptedText(dimensions)}`, issue.input) })
-    .check(z.meta({ pattern: quantityPattern(dimensions), description }));
+    .check(z.meta({ pattern: quantityPattern(dimensions, leastOf(bounds)), description }));
   return readBy(text, (written): Quantity => {
     const read = readQuantity(written, dimensions, name);
     const broken = brokenBound(read.value, bounds, asText) ?? brokenSize(read.value, read.dimension);
     if (broken !== null) throw new InputError(sentence(name, broken, written));
     return read;
   });
+}
+
+function leastOf({ above, atLeast }: Bounds) {
+  if (above === 0) return "above 0";
+  return atLeast === 0 ? "0" : "any";
 }
 
 /** A number without a unit. */
@@ -83,12 +88,17 @@ export function wholeNumber(name: string, description: string) {
     );
 }
 
-/** A text that a sentence or a table can show: one line, without control characters. */
-export function lineOfText(name: string, description: string, mayBeEmpty = false) {
+/**
+ * A text that a sentence or a table can show: one line, without control characters.
+ *
+ * @param not pattern, for the JSON schema, of what a further rule refuses at its beginning
+ */
+export function lineOfText(name: string, description: string, mayBeEmpty = false, not = "") {
   const rule = `takes a text of one line${mayBeEmpty ? "" : ", not empty"}`;
+  const pattern = `^${not}${mayBeEmpty ? "" : "(?=.*\\S)"}[^\\u0000-\\u001f\\u007f-\\u009f\\u2028\\u2029]*$`;
   return z
     .string({ error: (issue) => sentence(name, rule, issue.input) })
-    .check(z.meta({ description, ...(mayBeEmpty ? {} : { minLength: 1 }) }))
+    .check(z.meta({ description, pattern }))
     .check(
       unbroken((text) => {
         const isLine = !/[\p{Cc}\u2028\u2029]/u.test(text) && (mayBeEmpty || text.trim() !== "");
@@ -97,12 +107,13 @@ export function lineOfText(name: string, description: string, mayBeEmpty = false
     );
 }
 
+const ABSOLUTE = /^(?:[/\\~]|[A-Za-z][A-Za-z0-9+.-]*:)/;
+
 /** The name of a file beside the plan: relative, since a plan moves together with its files. */
 export function fileName(description: string) {
-  return lineOfText("file", description).check(
+  return lineOfText("file", description, false, `(?!${ABSOLUTE.source.slice(1)})`).check(
     unbroken((name) => {
-      const isAbsolute = /^(?:[/\\~]|[A-Za-z][A-Za-z0-9+.-]*:)/.test(name);
-      return isAbsolute ? sentence("file", "takes a name relative to the plan", name) : null;
+      return ABSOLUTE.test(name) ? sentence("file", "takes a name relative to the plan", name) : null;
     }),
   );
 }

@@ -101,7 +101,7 @@ export function changed(document: object, ...changes: readonly Change[]): unknow
     const last = keys.pop() ?? "";
     const parent = keys.reduce<unknown>((at, key) => Reflect.get(at as object, key), copy) as object;
     if (value === undefined) Reflect.deleteProperty(parent, last);
-    else Reflect.set(parent, last, value);
+    else Reflect.set(parent, last, structuredClone(value));
   }
   return copy;
 }
