@@ -81,6 +81,19 @@ function lessGeodesic(): Plugin {
   };
 }
 
+/** The schemas of plan and craft without what they say of each key, which is for the JSON schemas alone: a sentence with a full stop. */
+function lessSchema(): Plugin {
+  return {
+    name: "less-schema",
+    enforce: "pre",
+    apply: "build",
+    transform: (code, id) =>
+      /\/src\/plan\/[a-z-]+-schema\.ts$/.test(id)
+        ? code.replace(/"[A-Z][^"\n]*\."|'[A-Z][^'\n]*\.'/g, '""')
+        : null,
+  };
+}
+
 /** What is loaded at once, as one file: apart, its parts would be packed and fetched one by one. */
 const FIRST = {
   groups: [
@@ -97,7 +110,7 @@ export default defineConfig({
   },
   worker: {
     format: "es",
-    plugins: () => [lessGeodesic()],
+    plugins: () => [lessGeodesic(), lessSchema()],
     rolldownOptions: { output: { codeSplitting: FIRST } },
   },
   build: {
