@@ -22,7 +22,7 @@ export function HeatAxis({ departures, cellWidth, zone }: HeatAxisProps) {
     <svg class="heat-axis" width={width} height="18" aria-hidden="true">
       {axisHours(first, last, perMs, zone).map(({ instant, isDay }) => {
         const place = x(instant);
-        const anchor = place < 24 ? "start" : place > width - 24 ? "end" : "middle";
+        const anchor = place < 32 ? "start" : place > width - 32 ? "end" : "middle";
         return (
           <g key={instant} transform={`translate(${place} 0)`}>
             <path d="M0 0V4" />

@@ -61,7 +61,7 @@ export function HeatScale({ filled, measure, onMeasure, children }: HeatScalePro
       <span class="heat-state quiet">
         {done < cells.length
           ? `${done} of ${cells.length} worked out`
-          : "Point at a departure or tap it to look at it"}
+          : "Point or tap to look at a departure"}
       </span>
     </div>
   );
