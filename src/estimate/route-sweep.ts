@@ -69,6 +69,9 @@ function makeTotals(count: number): Totals {
   return { arrived: each(), underWay: each(), used: each(), rate: each() };
 }
 
+/** So near its limit, as a share of the speed held, a ground speed could be below it by rounding. */
+const LIMIT_MARGIN = 1e-12;
+
 function goAlong(fleet: SmoothFleet, leg: PreparedLeg, motion: Motion, { craft }: Conditions): void {
   const { throughSpeed, steadyRate } = motion;
   // A medium no faster than this can neither exceed the wind limit nor bring the ground speed below its own.
@@ -77,7 +80,7 @@ function goAlong(fleet: SmoothFleet, leg: PreparedLeg, motion: Motion, { craft }
   const reach = Math.min(
     reachOf(throughSpeed),
     windLimit ?? Number.POSITIVE_INFINITY,
-    throughSpeed - (slowest ?? Number.NEGATIVE_INFINITY),
+    throughSpeed * (1 - LIMIT_MARGIN) - (slowest ?? Number.NEGATIVE_INFINITY),
   );
   fleet.setOut({ leg, cells: leg.cells[0] ?? [], speed: throughSpeed, rate: steadyRate, reach });
   for (let panel = 0; panel < leg.panels.piece.length; panel += 1) fleet.cross(panel);

@@ -156,11 +156,14 @@ export class RouteWork {
     };
   }
 
-  /** Sets out by smooth steps; `null` where the craft's speed or rate depends on the fields. */
+  /**
+   * Sets out by smooth steps; `null` where the craft's speed or rate depends on the fields, or where there is another field, whose valid
+   * times the steps would pass over.
+   */
   #smoothOn(leg: PreparedLeg, smooth: SmoothLeg | null): SmoothLeg | null {
     const { throughSpeed, steadyRate } = this.#step.motion;
     const medium = this.#medium;
-    if (medium === null || steadyRate < 0) return null;
+    if (medium === null || steadyRate < 0 || this.#flows.length > 1) return null;
     const reach = reachOf(throughSpeed);
     smooth?.setOut({ leg, cells: medium.cells, speed: throughSpeed, rate: steadyRate, reach });
     return smooth;

@@ -236,7 +236,7 @@ function fitPowers(columns: Float64Array, values: number, powers: number, reach:
 
 /**
  * Values and changes at the points of the part that starts at ξ = `from` and is 2 `half` long, by the coefficients of both components
- * that start at `p` in one column and at `q` in the next. The four polynomials go side by side: their chains overlap.
+ * that start at `p` in one column and at `q` in the next: four times Horner's rule, side by side.
  */
 function cutPair(
   columns: Float64Array,
@@ -247,24 +247,35 @@ function cutPair(
   parts: Float64Array,
   at: number,
 ): void {
-  const c = TERMS;
-  for (let n = 0; n < POINTS; n += 1) {
+  cutColumn(columns, p, from, half, parts, at);
+  cutColumn(columns, q, from, half, parts, at + 1);
+  for (let n = at; n < at + BENDS; n += 2) parts[n + 1] = (parts[n + 1] as number) - (parts[n] as number);
+}
+
+function cutColumn(
+  columns: Float64Array,
+  p: number,
+  from: number,
+  half: number,
+  parts: Float64Array,
+  at: number,
+): void {
+  const a0 = columns[p] as number;
+  const a1 = columns[p + 1] as number;
+  const a2 = columns[p + 2] as number;
+  const a3 = columns[p + 3] as number;
+  const a4 = columns[p + 4] as number;
+  const a5 = columns[p + 5] as number;
+  const c0 = columns[p + TERMS] as number;
+  const c1 = columns[p + TERMS + 1] as number;
+  const c2 = columns[p + TERMS + 2] as number;
+  const c3 = columns[p + TERMS + 3] as number;
+  const c4 = columns[p + TERMS + 4] as number;
+  const c5 = columns[p + TERMS + 5] as number;
+  for (let n = 0, to = at; n < POINTS; n += 1, to += POINT) {
     const x = from + half * (POINT_Z[n] as number);
-    let along = columns[p + 5] as number;
-    let nextAlong = columns[q + 5] as number;
-    let cross = columns[p + c + 5] as number;
-    let nextCross = columns[q + c + 5] as number;
-    for (let term = 4; term >= 0; term -= 1) {
-      along = along * x + (columns[p + term] as number);
-      nextAlong = nextAlong * x + (columns[q + term] as number);
-      cross = cross * x + (columns[p + c + term] as number);
-      nextCross = nextCross * x + (columns[q + c + term] as number);
-    }
-    const to = at + POINT * n;
-    parts[to] = along;
-    parts[to + 1] = nextAlong - along;
-    parts[to + 2] = cross;
-    parts[to + 3] = nextCross - cross;
+    parts[to] = ((((a5 * x + a4) * x + a3) * x + a2) * x + a1) * x + a0;
+    parts[to + 2] = ((((c5 * x + c4) * x + c3) * x + c2) * x + c1) * x + c0;
   }
 }
 

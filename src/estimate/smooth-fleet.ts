@@ -149,6 +149,10 @@ export class SmoothFleet {
     const { slice } = this.#clock;
     const { speed } = this.#passage as Passage;
     for (let first = 0; first < this.count; ) {
+      if (this.afloat[first] === 0) {
+        first += 1;
+        continue;
+      }
       const at = slice[first] as number;
       let last = first + 1;
       while (last < this.count && slice[last] === at) last += 1;
@@ -165,25 +169,44 @@ export class SmoothFleet {
 
   /** Books the steps over the panel; those that have to go over it in several go in rounds. */
   #settle(): void {
-    const { afloat, begun, legTime, count } = this;
+    const { afloat, begun, legTime, legUse, count } = this;
     const { time } = this.#lanes;
     const { until } = this.#clock;
-    const rounds = this.#rounds;
+    const { rate } = this.#passage as Passage;
     let several = 0;
     for (let n = 0; n < count; n += 1) {
       if (afloat[n] === 0) continue;
       const took = time[n] as number;
-      const now = (begun[n] as number) + (legTime[n] as number);
-      if (took !== NOT_SMOOTH && now + took <= (until[n] as number) + PASSING_S)
-        this.#book(n, this.#start, this.#end, took);
-      else {
-        rounds.who[several] = n;
-        rounds.longest[several] = this.#end - this.#start;
-        this.#aim(several, this.#start);
-        if (this.#judge(several, this.#lanes, n)) several += 1;
-      }
+      const before = legTime[n] as number;
+      if (took !== NOT_SMOOTH && (begun[n] as number) + before + took <= (until[n] as number) + PASSING_S) {
+        this.#tell(n);
+        legTime[n] = before + took;
+        legUse[n] = (legUse[n] as number) + rate * took;
+      } else if (this.#takeApart(several, n)) several += 1;
     }
     while (several > 0) several = this.#round(several);
+  }
+
+  /** Tells of a step over the whole panel, where somebody listens. */
+  #tell(n: number): void {
+    if (this.#taken !== null)
+      this.#taken(
+        n,
+        this.#start,
+        this.#end,
+        this.#now(n),
+        this.#lanes.time[n] as number,
+        this.met[n] as number,
+      );
+  }
+
+  /** Sees to one that cannot take the panel in one step; returns whether it is to go over it in several. */
+  #takeApart(j: number, n: number): boolean {
+    const rounds = this.#rounds;
+    rounds.who[j] = n;
+    rounds.longest[j] = this.#end - this.#start;
+    this.#aim(j, this.#start);
+    return this.#judge(j, this.#lanes, n);
   }
 
   #book(n: number, from: number, to: number, time: number): void {
@@ -207,7 +230,7 @@ export class SmoothFleet {
         this.afloat[n] = 0;
         continue;
       }
-      move(this.#rounds, j, laid);
+      if (j !== laid) move(this.#rounds, j, laid);
       lanes.half[laid] = half;
       lanes.share[laid] = this.#share(n, this.#now(n));
       lanes.perSecond[laid] = this.#clock.perSecond[n] as number;
@@ -217,7 +240,7 @@ export class SmoothFleet {
     let left = 0;
     for (let j = 0; j < laid; j += 1) {
       if (!this.#judge(j, lanes, j)) continue;
-      move(this.#rounds, j, left);
+      if (j !== left) move(this.#rounds, j, left);
       left += 1;
     }
     return left;

@@ -99,32 +99,43 @@ function guess(
   last: number,
 ): void {
   const perSpeed = 1 / speed;
-  for (let n = first; n < last; n += 1) {
+  for (let n = first; n < last; ) {
     const p = at + n * stride;
+    const end = stride === 0 ? last : n + 1;
+    const a0 = pairs[p] as number;
     const da0 = pairs[p + 1] as number;
+    const c0 = pairs[p + 2] as number;
     const dc0 = pairs[p + 3] as number;
+    const a3 = pairs[p + 12] as number;
     const da3 = pairs[p + 13] as number;
+    const c3 = pairs[p + 14] as number;
     const dc3 = pairs[p + 15] as number;
-    const now = share[n] as number;
-    const scale = (half[n] as number) * (perSecond[n] as number);
-    const cStart = (pairs[p + 2] as number) + now * dc0;
-    const f0 = 1 / ((pairs[p] as number) + now * da0 + Math.sqrt((speed - cStart) * (speed + cStart)));
-    const then = now + scale * Z3 * f0;
-    const c = (pairs[p + 14] as number) + then * dc3;
-    const g = (pairs[p + 12] as number) + then * da3 + Math.sqrt((speed - c) * (speed + c));
-    const f = 1 / g;
-    const rise = (f - f0) * PER_Z3;
-    const cRise = (c - cStart) * PER_Z3;
-    const turn = scale * f * PER_Z3;
-    // g'' / 2 of g = a + sqrt(V² - c²), to first order in c/V; then F'' / 2 = F'²/F - F² g''/2.
-    const cBend =
-      (pairs[p + BENDS + 2] as number) + now * (pairs[p + BENDS + 3] as number) + turn * (dc3 - dc0);
-    const aBend = (pairs[p + BENDS] as number) + now * (pairs[p + BENDS + 1] as number) + turn * (da3 - da0);
-    const gBend = aBend - (0.5 * cRise * cRise + c * cBend) * perSpeed;
-    const square = rise * rise * g - gBend * f * f;
-    start[n] = f0;
-    slope[n] = rise - square * Z3;
-    bend[n] = square;
+    const aBend = pairs[p + BENDS] as number;
+    const daBend = pairs[p + BENDS + 1] as number;
+    const cBend = pairs[p + BENDS + 2] as number;
+    const dcBend = pairs[p + BENDS + 3] as number;
+    const aTwist = (da3 - da0) * PER_Z3;
+    const cTwist = (dc3 - dc0) * PER_Z3;
+    for (; n < end; n += 1) {
+      const now = share[n] as number;
+      const scale = (half[n] as number) * (perSecond[n] as number);
+      const cStart = c0 + now * dc0;
+      const f0 = 1 / (a0 + now * da0 + Math.sqrt((speed - cStart) * (speed + cStart)));
+      const then = now + scale * Z3 * f0;
+      const c = c3 + then * dc3;
+      const g = a3 + then * da3 + Math.sqrt((speed - c) * (speed + c));
+      const f = 1 / g;
+      const rise = (f - f0) * PER_Z3;
+      const cRise = (c - cStart) * PER_Z3;
+      const turn = scale * f;
+      // g'' / 2 of g = a + sqrt(V² - c²), to first order in c/V; then F'' / 2 = F'²/F - F² g''/2.
+      const cSquare = 0.5 * cRise * cRise + c * (cBend + now * dcBend + turn * cTwist);
+      const gBend = aBend + now * daBend + turn * aTwist - cSquare * perSpeed;
+      const square = rise * rise * g - gBend * f * f;
+      start[n] = f0;
+      slope[n] = rise - square * Z3;
+      bend[n] = square;
+    }
   }
 }
 
@@ -138,70 +149,81 @@ function correct(
   first: number,
   last: number,
 ): void {
-  for (let n = first; n < last; n += 1) {
+  for (let n = first; n < last; ) {
     const p = at + n * stride;
-    const now = share[n] as number;
-    const length = half[n] as number;
-    const scale = length * (perSecond[n] as number);
-    const f0 = start[n] as number;
-    const s1 = slope[n] as number;
-    const s2 = bend[n] as number;
-    const k0 = scale * f0;
-    const k1 = scale * s1;
-    const k2 = scale * s2;
+    const end = stride === 0 ? last : n + 1;
+    const a1 = pairs[p + 4] as number;
     const da1 = pairs[p + 5] as number;
-    const dc1 = pairs[p + 7] as number;
-    const h1 = now + Z1 * k0 + Y1 * k1 + X1 * k2;
-    const c1 = (pairs[p + 6] as number) + h1 * dc1;
-    const r1 = Math.sqrt((speed - c1) * (speed + c1));
-    const g1 = (pairs[p + 4] as number) + h1 * da1 + r1;
-    const i1 = 1 / (r1 * g1);
-    const f1 = r1 * i1;
-    const d1 = scale * (c1 * g1 * i1 * dc1 - da1) * f1 * f1;
-    const m1 = f1 - (f0 + Z1 * (s1 + Z1 * s2));
+    const b1 = pairs[p + 6] as number;
+    const db1 = pairs[p + 7] as number;
+    const a2 = pairs[p + 8] as number;
     const da2 = pairs[p + 9] as number;
-    const dc2 = pairs[p + 11] as number;
-    const h2 = now + Z2 * k0 + Y2 * k1 + X2 * k2;
-    const c2 = (pairs[p + 10] as number) + h2 * dc2;
-    const r2 = Math.sqrt((speed - c2) * (speed + c2));
-    const g2 = (pairs[p + 8] as number) + h2 * da2 + r2;
-    const i2 = 1 / (r2 * g2);
-    const f2 = r2 * i2;
-    const d2 = scale * (c2 * g2 * i2 * dc2 - da2) * f2 * f2;
-    const m2 = f2 - (f0 + Z2 * (s1 + Z2 * s2));
+    const b2 = pairs[p + 10] as number;
+    const db2 = pairs[p + 11] as number;
+    const a3 = pairs[p + 12] as number;
     const da3 = pairs[p + 13] as number;
-    const dc3 = pairs[p + 15] as number;
-    const h3 = now + Z3 * k0 + Y3 * k1 + X3 * k2;
-    const c3 = (pairs[p + 14] as number) + h3 * dc3;
-    const r3 = Math.sqrt((speed - c3) * (speed + c3));
-    const g3 = (pairs[p + 12] as number) + h3 * da3 + r3;
-    const i3 = 1 / (r3 * g3);
-    const f3 = r3 * i3;
-    const d3 = scale * (c3 * g3 * i3 * dc3 - da3) * f3 * f3;
-    const m3 = f3 - (f0 + Z3 * (s1 + Z3 * s2));
+    const b3 = pairs[p + 14] as number;
+    const db3 = pairs[p + 15] as number;
+    const a4 = pairs[p + 16] as number;
     const da4 = pairs[p + 17] as number;
-    const dc4 = pairs[p + 19] as number;
-    const h4 = now + Z4 * k0 + Y4 * k1 + X4 * k2;
-    const c4 = (pairs[p + 18] as number) + h4 * dc4;
-    const r4 = Math.sqrt((speed - c4) * (speed + c4));
-    const g4 = (pairs[p + 16] as number) + h4 * da4 + r4;
-    const i4 = 1 / (r4 * g4);
-    const f4 = r4 * i4;
-    const d4 = scale * (c4 * g4 * i4 * dc4 - da4) * f4 * f4;
-    const m4 = f4 - (f0 + Z4 * (s1 + Z4 * s2));
-    const e1 = B11 * d1 + B12 * d2 + B13 * d3 + B14 * d4;
-    const e2 = B21 * d1 + B22 * d2 + B23 * d3 + B24 * d4;
-    const e3 = B31 * d1 + B32 * d2 + B33 * d3 + B34 * d4;
-    const e4 = B41 * d1 + B42 * d2 + B43 * d3 + B44 * d4;
-    const missed = Math.abs(m1) + Math.abs(m2) + Math.abs(m3) + Math.abs(m4);
-    const twist = T4 * (m4 - m1) + T3 * (m3 - m2);
-    const smooth =
-      missed <= MOST_MISSED * f0 &&
-      Math.abs(twist) <= MOST_TWIST * f0 &&
-      missed * Math.abs(e1) <= MOST_COUPLED * f0 &&
-      Math.abs(s2) <= MOST_BEND * f0;
-    const open = W1 * (m1 * exp(e1) + m4 * exp(e4)) + W2 * (m2 * exp(e2) + m3 * exp(e3));
-    time[n] = smooth ? length * (2 * (f0 + s1) + (8 / 3) * s2 + open) : NOT_SMOOTH;
+    const b4 = pairs[p + 18] as number;
+    const db4 = pairs[p + 19] as number;
+    for (; n < end; n += 1) {
+      const now = share[n] as number;
+      const length = half[n] as number;
+      const scale = length * (perSecond[n] as number);
+      const f0 = start[n] as number;
+      const s1 = slope[n] as number;
+      const s2 = bend[n] as number;
+      const k0 = scale * f0;
+      const k1 = scale * s1;
+      const k2 = scale * s2;
+      const h1 = now + Z1 * k0 + Y1 * k1 + X1 * k2;
+      const c1 = b1 + h1 * db1;
+      const r1 = Math.sqrt((speed - c1) * (speed + c1));
+      const g1 = a1 + h1 * da1 + r1;
+      const i1 = 1 / (r1 * g1);
+      const f1 = r1 * i1;
+      const d1 = scale * (c1 * g1 * i1 * db1 - da1) * f1 * f1;
+      const m1 = f1 - (f0 + Z1 * (s1 + Z1 * s2));
+      const h2 = now + Z2 * k0 + Y2 * k1 + X2 * k2;
+      const c2 = b2 + h2 * db2;
+      const r2 = Math.sqrt((speed - c2) * (speed + c2));
+      const g2 = a2 + h2 * da2 + r2;
+      const i2 = 1 / (r2 * g2);
+      const f2 = r2 * i2;
+      const d2 = scale * (c2 * g2 * i2 * db2 - da2) * f2 * f2;
+      const m2 = f2 - (f0 + Z2 * (s1 + Z2 * s2));
+      const h3 = now + Z3 * k0 + Y3 * k1 + X3 * k2;
+      const c3 = b3 + h3 * db3;
+      const r3 = Math.sqrt((speed - c3) * (speed + c3));
+      const g3 = a3 + h3 * da3 + r3;
+      const i3 = 1 / (r3 * g3);
+      const f3 = r3 * i3;
+      const d3 = scale * (c3 * g3 * i3 * db3 - da3) * f3 * f3;
+      const m3 = f3 - (f0 + Z3 * (s1 + Z3 * s2));
+      const h4 = now + Z4 * k0 + Y4 * k1 + X4 * k2;
+      const c4 = b4 + h4 * db4;
+      const r4 = Math.sqrt((speed - c4) * (speed + c4));
+      const g4 = a4 + h4 * da4 + r4;
+      const i4 = 1 / (r4 * g4);
+      const f4 = r4 * i4;
+      const d4 = scale * (c4 * g4 * i4 * db4 - da4) * f4 * f4;
+      const m4 = f4 - (f0 + Z4 * (s1 + Z4 * s2));
+      const e1 = B11 * d1 + B12 * d2 + B13 * d3 + B14 * d4;
+      const e2 = B21 * d1 + B22 * d2 + B23 * d3 + B24 * d4;
+      const e3 = B31 * d1 + B32 * d2 + B33 * d3 + B34 * d4;
+      const e4 = B41 * d1 + B42 * d2 + B43 * d3 + B44 * d4;
+      const missed = Math.abs(m1) + Math.abs(m2) + Math.abs(m3) + Math.abs(m4);
+      const twist = T4 * (m4 - m1) + T3 * (m3 - m2);
+      const smooth =
+        missed <= MOST_MISSED * f0 &&
+        Math.abs(twist) <= MOST_TWIST * f0 &&
+        missed * Math.abs(e1) <= MOST_COUPLED * f0 &&
+        Math.abs(s2) <= MOST_BEND * f0;
+      const open = W1 * (m1 * exp(e1) + m4 * exp(e4)) + W2 * (m2 * exp(e2) + m3 * exp(e3));
+      time[n] = smooth ? length * (2 * (f0 + s1) + (8 / 3) * s2 + open) : NOT_SMOOTH;
+    }
   }
 }
 
