@@ -127,7 +127,8 @@ export {
   fieldSummary,
   prepareRoutes,
 } from "./estimate/estimate.ts";
-export { estimateRoute, type RouteRun, routeOutcome, routeOutcomes } from "./estimate/estimate-route.ts";
+export { estimateRoute, type RouteRun } from "./estimate/estimate-route.ts";
+export { routeOutcome, routeOutcomes } from "./estimate/route-outcomes.ts";
 export type { RouteOutcome } from "./estimate/route-outcome.ts";
 export { magneticCourse, magneticVariation } from "./estimate/magnetic.ts";
 export { fieldsInUse, type PreparedRoute, prepareRoute } from "./estimate/prepare.ts";

@@ -1,7 +1,7 @@
 import { InputError } from "../errors.ts";
 import type { Conditions } from "../estimate/conditions.ts";
-import { routeOutcome } from "../estimate/estimate-route.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
+import { routeOutcome } from "../estimate/route-outcomes.ts";
 import { rootsOf, scan } from "./line-search.ts";
 import { type WindowCell, windowCell } from "./window-cell.ts";
 

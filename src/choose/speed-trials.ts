@@ -1,7 +1,7 @@
 import type { Conditions } from "../estimate/conditions.ts";
-import { routeOutcome } from "../estimate/estimate-route.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { RouteOutcome } from "../estimate/route-outcome.ts";
+import { routeOutcome } from "../estimate/route-outcomes.ts";
 import { type SpeedRange, speedRange } from "./speed-range.ts";
 import { passageTime } from "./window-cell.ts";
 

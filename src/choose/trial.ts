@@ -1,7 +1,7 @@
 import { InputError } from "../errors.ts";
 import type { Conditions } from "../estimate/conditions.ts";
-import { routeOutcome } from "../estimate/estimate-route.ts";
 import { fieldsInUse, type PreparedRoute } from "../estimate/prepare.ts";
+import { routeOutcome } from "../estimate/route-outcomes.ts";
 import { preparedForMember } from "./ensemble.ts";
 import type { DecidedBy } from "./sure.ts";
 import type { UncertaintyAsked } from "./uncertain-estimate.ts";

@@ -1,9 +1,9 @@
 import { InputError } from "../errors.ts";
-import { routeOutcome } from "../estimate/estimate-route.ts";
 import type { PreparedLeg } from "../estimate/prepare.ts";
 import type { FindingCode } from "../estimate/result.ts";
 import type { Waypoint } from "../estimate/route.ts";
 import type { RouteOutcome } from "../estimate/route-outcome.ts";
+import { routeOutcome } from "../estimate/route-outcomes.ts";
 import { reduceTurn } from "../geodesy/angle.ts";
 import type { Alternate } from "./alternate.ts";
 import type { Goal, Reach } from "./turn-back-result.ts";

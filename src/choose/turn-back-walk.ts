@@ -1,9 +1,10 @@
 import type { Conditions } from "../estimate/conditions.ts";
-import { estimateRoute, routeOutcome } from "../estimate/estimate-route.ts";
+import { estimateRoute } from "../estimate/estimate-route.ts";
 import { isoTime } from "../estimate/leg-result.ts";
 import { mediumRole, type PreparedLeg, type PreparedRoute, prepareRoute } from "../estimate/prepare.ts";
 import type { RouteEstimate } from "../estimate/result.ts";
 import type { Waypoint } from "../estimate/route.ts";
+import { routeOutcome } from "../estimate/route-outcomes.ts";
 import { reduceTurn } from "../geodesy/angle.ts";
 import type { RoutePlace } from "./turn-back-result.ts";
 

@@ -1,8 +1,8 @@
 import type { Conditions } from "../estimate/conditions.ts";
-import { routeOutcome } from "../estimate/estimate-route.ts";
 import { routeFinding, statusOf } from "../estimate/findings.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { Finding, Reached, RouteEstimate, RouteStatus } from "../estimate/result.ts";
+import { routeOutcome } from "../estimate/route-outcomes.ts";
 import type { WhatIf } from "./what-if.ts";
 import { underWhatIf, whatIfFields } from "./what-if-conditions.ts";
 import { cellOf, type WindowCell } from "./window-cell.ts";

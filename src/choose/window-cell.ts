@@ -1,11 +1,11 @@
 import type { Pace } from "../craft/craft.ts";
 import { InputError } from "../errors.ts";
 import type { Conditions } from "../estimate/conditions.ts";
-import { routeOutcome } from "../estimate/estimate-route.ts";
 import { isoTime } from "../estimate/leg-result.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { Finding, FindingCode, RouteStatus } from "../estimate/result.ts";
 import type { RouteOutcome } from "../estimate/route-outcome.ts";
+import { routeOutcome } from "../estimate/route-outcomes.ts";
 
 /** One route at one departure and speed: the figures of a lone estimate, bit for bit. */
 export interface WindowCell {

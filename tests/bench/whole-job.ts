@@ -1,5 +1,6 @@
-import { estimateRoute, routeOutcome, routeOutcomes } from "../../src/estimate/estimate-route.ts";
+import { estimateRoute } from "../../src/estimate/estimate-route.ts";
 import { type PreparedRoute, prepareRoute } from "../../src/estimate/prepare.ts";
+import { routeOutcome, routeOutcomes } from "../../src/estimate/route-outcomes.ts";
 import type { Field } from "../../src/field/field.ts";
 import { atMost, type Comparison, faster, figure, type Part } from "./comparison.ts";
 import { DEPARTURES_S, type Ocean, oceanConditions } from "./ocean.ts";

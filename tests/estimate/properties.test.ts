@@ -2,9 +2,9 @@ import fc from "fast-check";
 import { describe, expect, test } from "vitest";
 import type { Pace } from "../../src/craft/craft.ts";
 import { cubePower } from "../../src/craft/cube.ts";
-import { routeOutcome } from "../../src/estimate/estimate-route.ts";
 import { fieldsInUse, prepareRoute } from "../../src/estimate/prepare.ts";
 import type { Route } from "../../src/estimate/route.ts";
+import { routeOutcome } from "../../src/estimate/route-outcomes.ts";
 import type { Field, Tile } from "../../src/field/field.ts";
 import { craftOf, DEPARTURE, estimateOf, gridField, routeOf, spaced, waypoint } from "./fixtures.ts";
 
