@@ -1,9 +1,10 @@
 import { type DepartureWindow, windowDepartures } from "./departure-window.ts";
 import { leastWhole } from "./least-whole.ts";
 import { MinuteCells } from "./minute-cells.ts";
+import { figureOf, inRank, isLess } from "./rank.ts";
 import type { Sweep } from "./window.ts";
 import type { WindowCell } from "./window-cell.ts";
-import { bestOf, isPossible, least, type WindowBest } from "./window-summary.ts";
+import { bestOf, isPossible, type WindowBest } from "./window-summary.ts";
 
 const MINUTE = 60_000;
 /** How many valleys of a route's figures are looked into: the deepest. */
@@ -18,7 +19,8 @@ export interface RefinedWindow {
 /**
  * Refines the bests of a window to the whole minute, on the routes' true figures: around each of the deepest valleys of
  * time and of use a golden-section search between the departures on either side, and for the latest departure a bisection between
- * it and the next, which is a stop. Never worse than the cells. A valley or an opening between two departures that no cell
+ * it and the next, which is a stop. Never worse than the cells, and ranked as they are: of equals, as in a steady field, the earliest
+ * departure. A valley or an opening between two departures that no cell
  * shows is not seen: the step of the window is the resolution.
  *
  * @param cells all of the window
@@ -64,8 +66,9 @@ export function refineRoutes(
 
 function refineRoute(minutes: MinuteCells, window: DepartureWindow): void {
   const series = seriesOf(minutes);
-  for (const figure of [passage, use]) {
-    for (const valley of valleys(series, figure))
+  for (const by of ["time", "use"] as const) {
+    const figure = (cell: WindowCell): number => (isPossible(cell) ? figureOf(by)(cell) : Infinity);
+    for (const valley of inRank(valleys(series, figure), by).slice(0, MOST_VALLEYS))
       searchAround(valley, window, (minute) => figure(minutes.at(minute, valley)));
   }
   narrowLatest(minutes.cells, window, minutes, isPossible);
@@ -81,9 +84,6 @@ export function searchAround(
   if (low <= high) leastWhole(figure, low, Date.parse(departure) / MINUTE, high);
 }
 
-const passage = (cell: WindowCell): number => (isPossible(cell) ? (cell.passage_s ?? Infinity) : Infinity);
-const use = (cell: WindowCell): number => (isPossible(cell) ? (cell.use ?? Infinity) : Infinity);
-
 function seriesOf(minutes: MinuteCells): WindowCell[][] {
   const { cells } = minutes;
   const speeds = [...new Set(cells.map((cell) => minutes.triedSpeed(cell)))];
@@ -94,22 +94,16 @@ function seriesOf(minutes: MinuteCells): WindowCell[][] {
   );
 }
 
-/** Cells that are not above their neighbours in departure, the deepest first. */
+/** Cells that are not above their neighbours in departure. */
 function valleys(series: readonly WindowCell[][], figure: (cell: WindowCell) => number): WindowCell[] {
-  return series
-    .flatMap((cells) =>
-      cells.filter((cell, index) => {
-        const before = cells[index - 1];
-        const after = cells[index + 1];
-        return (
-          isPossible(cell) &&
-          (before === undefined || figure(before) >= figure(cell)) &&
-          (after === undefined || figure(after) >= figure(cell))
-        );
-      }),
-    )
-    .sort((a, b) => figure(a) - figure(b))
-    .slice(0, MOST_VALLEYS);
+  return series.flatMap((cells) =>
+    cells.filter((cell, index) => {
+      const beside = [cells[index - 1], cells[index + 1]];
+      return (
+        isPossible(cell) && beside.every((each) => each === undefined || !isLess(figure(each), figure(cell)))
+      );
+    }),
+  );
 }
 
 /** First and last whole minute less than a step from a departure, within the window. */
@@ -128,15 +122,15 @@ export function narrowLatest(
   minutes: MinuteCells,
   canBeDone: (cell: WindowCell) => boolean,
 ): void {
-  const latest = least(
-    cells.filter(canBeDone),
-    (cell) => -Date.parse(cell.departure),
-    () => 0,
-  );
+  const able = cells.filter(canBeDone);
+  const latest = able
+    .map(({ departure }) => departure)
+    .sort()
+    .at(-1);
   const departures = windowDepartures(window);
-  if (latest === null || Date.parse(latest.departure) === departures[departures.length - 1]) return;
-  for (const cell of cells) {
-    if (cell.departure !== latest.departure || !canBeDone(cell)) continue;
+  if (latest === undefined || Date.parse(latest) === departures[departures.length - 1]) return;
+  for (const cell of able) {
+    if (cell.departure !== latest) continue;
     const departure = Date.parse(cell.departure);
     let open = Math.floor(departure / MINUTE);
     let shut = Math.ceil((departure + 1000 * window.every_s) / MINUTE);

@@ -1,16 +1,9 @@
 import type { CellTrials } from "./cell-trials.ts";
+import { type BestBy, firstInRank, inRank } from "./rank.ts";
 import type { Steps } from "./steps.ts";
 import type { BestPair, SureBest, SureCell } from "./sure.ts";
 import type { CellFinding, WindowCell } from "./window-cell.ts";
-import {
-  type BestBy,
-  bestOf,
-  isPossible,
-  least,
-  nextAfter,
-  RANKS,
-  type WindowBest,
-} from "./window-summary.ts";
+import { bestOf, isPossible, nextAfter, type WindowBest } from "./window-summary.ts";
 
 /** The bests of one route's cells, not yet put to the test in full. */
 export interface FoundBests {
@@ -36,9 +29,7 @@ function* firstToHold(
   possible: readonly WindowCell[],
   by: BestBy,
 ): Steps<WindowCell | null> {
-  const [of, then] = RANKS[by];
-  for (const cell of [...possible].sort((a, b) => of(a) - of(b) || then(a) - then(b)))
-    if (yield* trials.holds(cell)) return cell;
+  for (const cell of inRank(possible, by)) if (yield* trials.holds(cell)) return cell;
   return null;
 }
 
@@ -50,9 +41,10 @@ function* firstToHold(
 export function overallBests(of: readonly FoundBests[], all: readonly WindowCell[]): FoundBests {
   const overall = (by: BestBy): WindowCell | null => {
     const own = new Set(of.map(({ sure }) => sure[by]));
-    return least(
+    return firstInRank(
       all.filter((cell) => own.has(cell)),
-      ...RANKS[by],
+      by,
+      all,
     );
   };
   return {

@@ -1,11 +1,11 @@
 import type { CellTrials } from "./cell-trials.ts";
 import type { DepartureWindow } from "./departure-window.ts";
 import type { MinuteCells } from "./minute-cells.ts";
+import { type BestBy, figureOf } from "./rank.ts";
 import { narrowLatest, searchAround } from "./refine.ts";
 import { runSteps, type Steps } from "./steps.ts";
 import { type FoundBests, foundBests } from "./sure-bests.ts";
 import type { WindowCell } from "./window-cell.ts";
-import { type BestBy, RANKS } from "./window-summary.ts";
 
 /**
  * The bests of one route to the minute that hold in every member and what-if. Where the plain best to the minute does not hold, the minutes
@@ -27,8 +27,7 @@ export function* minuteBests(
   for (const by of ["time", "use"] as const) {
     const best = own.sure[by];
     if (best === null || !isPassedOver(by)) continue;
-    // As ranked, so that in a steady field rounding does not choose the minute.
-    const [figure] = RANKS[by];
+    const figure = figureOf(by);
     searchAround(best, window, (minute) => {
       const cell = minutes.at(minute, best);
       return holds(cell) ? figure(cell) : Number.POSITIVE_INFINITY;

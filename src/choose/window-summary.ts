@@ -1,13 +1,17 @@
 import type { FindingCode } from "../estimate/result.ts";
+import { firstInRank } from "./rank.ts";
 import type { CellFinding, WindowCell } from "./window-cell.ts";
 
-/** The best of some cells, among those that are not a `stop`; `null` where there is none. */
+/**
+ * The best of some cells, among those that are not a `stop`; `null` where there is none. Figures within 1e-12 of each other are equal, and what
+ * is still equal after the rules below goes to the first route, then the lowest speed.
+ */
 export interface WindowBest {
-  /** Shortest from departure to arrival, to the millisecond; of equals the earlier departure. */
+  /** Shortest from departure to arrival; of equals the earliest departure. */
   readonly time: WindowCell | null;
-  /** Least use, to ten digits; of equals the shorter. */
+  /** Least use; of equals the earliest departure. */
   readonly use: WindowCell | null;
-  /** Latest departure; of equals the shorter passage. */
+  /** Latest departure; of equals the shortest passage. */
   readonly latest: WindowCell | null;
   /** What stops the departure after the latest, at the same route and speed; `null` where the window ends there. */
   readonly closedBy: CellFinding | null;
@@ -83,46 +87,13 @@ export function isPossible({ status }: WindowCell): boolean {
 /** The best of cells by time, by use and by latest departure. */
 export function bestOf(cells: readonly WindowCell[]): WindowBest {
   const possible = cells.filter(isPossible);
-  const latest = least(possible, ...RANKS.latest);
+  const latest = firstInRank(possible, "latest", cells);
   return {
-    time: least(possible, ...RANKS.time),
-    use: least(possible, ...RANKS.use),
+    time: firstInRank(possible, "time", cells),
+    use: firstInRank(possible, "use", cells),
     latest,
     closedBy: latest === null ? null : (nextAfter(cells, latest)?.worst ?? null),
   };
-}
-
-/** What a departure may be the best by. */
-export type BestBy = "time" | "use" | "latest";
-
-/*
- * Figures are ranked to the millisecond and to ten digits, so that in a steady field rounding does not choose the departure.
- */
-
-function passage({ passage_s }: WindowCell): number {
-  return passage_s === null ? Number.POSITIVE_INFINITY : Math.round(1000 * passage_s) / 1000;
-}
-
-function use({ use: spent }: WindowCell): number {
-  return spent === null ? Number.POSITIVE_INFINITY : Number(spent.toPrecision(10));
-}
-
-type Figure = (cell: WindowCell) => number;
-
-/** By what cells are ranked, the least first, and then among equals. */
-export const RANKS: Readonly<Record<BestBy, readonly [Figure, Figure]>> = {
-  time: [passage, (cell) => Date.parse(cell.departure)],
-  use: [use, passage],
-  latest: [(cell) => -Date.parse(cell.departure), passage],
-};
-
-/** The first cell with the least figure, by the second figure among equals. */
-export function least(cells: readonly WindowCell[], of: Figure, then: Figure): WindowCell | null {
-  return cells.reduce<WindowCell | null>((best, cell) => {
-    if (best === null) return cell;
-    const more = of(cell) - of(best) || then(cell) - then(best);
-    return more < 0 ? cell : best;
-  }, null);
 }
 
 /** The departure after one, at the same route and speed; `null` where the cells end there. */
@@ -132,7 +103,12 @@ export function nextAfter(cells: readonly WindowCell[], latest: WindowCell): Win
   );
   // Where each departure has a speed found for it, hardly any two are at the same.
   const same = after.filter(({ speed_m_s }) => speed_m_s === latest.speed_m_s);
-  return least(same.length > 0 ? same : after, (cell) => Date.parse(cell.departure), passage);
+  const later = same.length > 0 ? same : after;
+  const [next] = later.map(({ departure }) => departure).sort();
+  return firstInRank(
+    later.filter(({ departure }) => departure === next),
+    "time",
+  );
 }
 
 function refusals(cells: readonly WindowCell[]): Refusal[] {

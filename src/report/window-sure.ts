@@ -1,8 +1,8 @@
+import type { BestBy } from "../choose/rank.ts";
 import type { BestPair, Sure, SureCell } from "../choose/sure.ts";
 import type { SureInTime } from "../choose/sure-in-time.ts";
 import type { SureWindow } from "../choose/sure-window.ts";
 import type { WindowCell } from "../choose/window-cell.ts";
-import type { BestBy } from "../choose/window-summary.ts";
 import type { RouteStatus } from "../estimate/result.ts";
 import { type Column, TABLE_WIDTH } from "./columns.ts";
 import { NO_FIGURE } from "./number-text.ts";

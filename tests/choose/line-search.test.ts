@@ -92,6 +92,27 @@ describe("the least of a function", () => {
     );
   });
 
+  test("of equals is the lowest, whatever the last bits say, and a level above the least hides nothing", () => {
+    fc.assert(
+      fc.property(
+        fc.integer({ min: -500, max: 500 }),
+        fc.integer({ min: 5, max: 500 }),
+        fc.double({ min: 0, max: 1, noNaN: true }),
+        fc.nat(1_000_000),
+        (low, span, share, seed) => {
+          const noise = (n: number) => 1 + Number.EPSILON * ((seed * Math.abs(n + 3)) % 7);
+          const near = low + share * span;
+          expect(leastWhole((n) => 2e4 * noise(n), low, near, low + span)).toBe(low);
+          // Level but for a valley of 5 around the place near which it is sought.
+          const foot = Math.round(near);
+          const of = (n: number) => (Math.abs(n - foot) > 5 ? 2e4 : 1e4 + Math.abs(n - foot)) * noise(n);
+          expect(leastWhole(of, low, foot, low + span)).toBe(foot);
+        },
+      ),
+      { numRuns: 200, endOnFailure: true },
+    );
+  });
+
   test("between no whole numbers is a defect", () => {
     expect(() => leastWhole((n) => n, 3, 3, 2)).toThrow("no whole number");
   });

@@ -4,6 +4,7 @@ import { CellTrials } from "../../src/choose/cell-trials.ts";
 import type { DepartureWindow } from "../../src/choose/departure-window.ts";
 import type { ForecastError } from "../../src/choose/forecast-error.ts";
 import { latestInTime } from "../../src/choose/in-time.ts";
+import type { BestBy } from "../../src/choose/rank.ts";
 import { refineRoutes } from "../../src/choose/refine.ts";
 import { runSteps } from "../../src/choose/steps.ts";
 import type { SureCell } from "../../src/choose/sure.ts";
@@ -12,7 +13,7 @@ import { type UncertaintyAsked, withUncertainty } from "../../src/choose/uncerta
 import type { WhatIf } from "../../src/choose/what-if.ts";
 import { makeSweep, windowCells } from "../../src/choose/window.ts";
 import type { WindowCell } from "../../src/choose/window-cell.ts";
-import { type BestBy, summariseWindow } from "../../src/choose/window-summary.ts";
+import { summariseWindow } from "../../src/choose/window-summary.ts";
 import type { Craft, Pace } from "../../src/craft/craft.ts";
 import { cubePower } from "../../src/craft/cube.ts";
 import type { Conditions } from "../../src/estimate/conditions.ts";
@@ -138,10 +139,13 @@ function holdsByHand(cell: WindowCell, asked: Pick<UncertaintyAsked, "members" |
   );
 }
 
-/** Whether one cell ranks before another, figures to the millisecond and to ten digits. */
+/** By how much one figure is above another; none where rounding may have made the difference. */
+const above = (a: number, b: number): number => (Math.abs(a - b) <= 2e-12 * Math.abs(b) ? 0 : a - b);
+
+/** Whether one cell ranks before another. */
 const RANKED: Record<BestBy, (a: WindowCell, b: WindowCell) => number> = {
-  time: (a, b) => Math.round(1000 * (a.passage_s as number)) - Math.round(1000 * (b.passage_s as number)),
-  use: (a, b) => Number((a.use as number).toPrecision(10)) - Number((b.use as number).toPrecision(10)),
+  time: (a, b) => above(a.passage_s as number, b.passage_s as number),
+  use: (a, b) => above(a.use as number, b.use as number),
   latest: (a, b) => Date.parse(b.departure) - Date.parse(a.departure),
 };
 
