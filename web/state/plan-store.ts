@@ -9,7 +9,7 @@ export interface Selection {
 }
 
 /** Files by the names that plans use. */
-export type Files = ReadonlyMap<string, Blob>;
+type Files = ReadonlyMap<string, Blob>;
 
 interface EditOptions {
   /** Edits in a row with the same key are undone as one. */
