@@ -4,9 +4,11 @@ import { estimatePlan } from "../../src/plan/estimate-plan.ts";
 import {
   addAlternate,
   addWhatIf,
+  alternateName,
   changeAlternate,
   deleteAlternate,
   deleteWhatIf,
+  setAlternateText,
   setArrival,
   setError,
 } from "../../web/state/decide-edits.ts";
@@ -134,6 +136,15 @@ describe("edits of what is decided", () => {
       lon: 4,
     });
     expect("alternates" in deleteAlternate(addAlternate(plan, 1, 2), 0)).toBe(false);
+  });
+
+  test("call an alternate that the plan does not name by its number, and let no text be a name or a height", () => {
+    const named = setAlternateText(addAlternate(plan, 1, 2), 0, "height", "30 m");
+    expect(named.alternates).toEqual([{ name: "Alternate 1", lat: 1, lon: 2, height: "30 m" }]);
+    const bare = setAlternateText(setAlternateText(named, 0, "name", " "), 0, "height", "");
+    expect(bare.alternates).toEqual([{ lat: 1, lon: 2 }]);
+    expect(alternateName({ lat: 1, lon: 2 }, 0)).toBe("Alternate 1");
+    expect(addAlternate(bare, 3, 4).alternates?.[1]?.name).toBe("Alternate 2");
   });
 
   test("take what-ifs and errors away again without a trace", () => {

@@ -2,7 +2,7 @@ import { effect } from "@preact/signals";
 import * as L from "leaflet";
 import { latText, lonText } from "../format/position-text.ts";
 import { readPosition } from "../format/read-position.ts";
-import { changeAlternate, deleteAlternate } from "../state/decide-edits.ts";
+import { alternateName, changeAlternate, deleteAlternate } from "../state/decide-edits.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { AlternateDocument } from "../state/plan-document.ts";
 import { arrowMove } from "./arrow-move.ts";
@@ -38,9 +38,9 @@ export class AlternateHandles {
       handle.remove();
       this.handles.delete(index);
     }
-    alternates.forEach(({ name }, index) => {
+    alternates.forEach((alternate, index) => {
       const place = places[index];
-      if (place != null) this.showOne(index, name, place.lat, place.lon);
+      if (place != null) this.showOne(index, alternateName(alternate, index), place.lat, place.lon);
     });
     setNamesApart(this.map.getContainer());
   }

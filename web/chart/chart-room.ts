@@ -16,19 +16,21 @@ const TOOLS = ".chart-tools";
 const CORNER = ".shading-legend, .chart-scale";
 
 /**
- * The rooms in which nothing lies on the chart: below its tools, and either above or beside what stands in its lower left corner, as
- * measured on the page.
+ * The rooms in which nothing lies on the chart, as measured on the page: below its tools and either above or beside what stands in
+ * its lower left corner, and to the right of both, which is the largest on a low, wide chart.
  */
-export function roomsBeside(map: L.Map): readonly [Room, Room] {
+export function roomsBeside(map: L.Map): readonly [Room, Room, Room] {
   const host = map.getContainer();
   const frame = host.getBoundingClientRect();
   const rects = (selector: string): DOMRect[] =>
     [...(host.parentElement?.querySelectorAll(selector) ?? [])].map((part) => part.getBoundingClientRect());
   const corner = rects(CORNER);
-  const top = Math.max(40, ...rects(TOOLS).map(({ bottom }) => bottom - frame.top)) + HANDLE;
+  const tools = rects(TOOLS);
+  const below = Math.max(40, ...tools.map(({ bottom }) => bottom - frame.top)) + HANDLE;
+  const right = Math.max(0, ...[...tools, ...corner].map((rect) => rect.right - frame.left));
   const above = Math.max(0, ...corner.map((rect) => frame.bottom - rect.top));
   const beside = Math.max(0, ...corner.map(({ right }) => right - frame.left));
-  const room = (left: number, bottom: number): Room => ({
+  const room = (left: number, top: number, bottom: number): Room => ({
     paddingTopLeft: [
       Math.min(left, frame.width - NAME - LEAST),
       Math.min(top, frame.height - bottom - LEAST),
@@ -36,15 +38,19 @@ export function roomsBeside(map: L.Map): readonly [Room, Room] {
     paddingBottomRight: [NAME, bottom],
   });
   const low = Math.min(above, frame.height / 2);
-  return [room(HANDLE + 10, low + HANDLE), room(beside + HANDLE, HANDLE + 4)];
+  return [
+    room(HANDLE + 10, below, low + HANDLE),
+    room(beside + HANDLE, below, HANDLE + 4),
+    room(right + HANDLE, HANDLE + 14, HANDLE + 4),
+  ];
 }
 
-/** Shows the whole of an area clear of what lies on the chart, in the room in which it is larger. */
+/** Shows the whole of an area clear of what lies on the chart, in the room in which it is largest. */
 export function fitClear(map: L.Map, bounds: L.LatLngBounds): void {
-  const [above, beside] = roomsBeside(map);
+  const rooms = roomsBeside(map);
   const zoomIn = ({ paddingTopLeft: [left, top], paddingBottomRight: [right, bottom] }: Room): number =>
     map.getBoundsZoom(bounds, false, new L.Point(left + right, top + bottom));
-  const room = zoomIn(beside) > zoomIn(above) ? beside : above;
+  const room = rooms.reduce((best, each) => (zoomIn(each) > zoomIn(best) ? each : best));
   map.fitBounds(bounds, { ...room, animate: false });
 }
 

@@ -21,7 +21,7 @@ export function setArrival(plan: PlanDocument, arrive: ArrivalDocument["arrive"]
 
 /** Adds a place to turn off to, with a name that no other has. */
 export function addAlternate(plan: PlanDocument, lat: number, lon: number): PlanDocument {
-  const taken = new Set((plan.alternates ?? []).map(({ name }) => name));
+  const taken = new Set((plan.alternates ?? []).map(alternateName));
   let number = taken.size + 1;
   while (taken.has(`Alternate ${number}`)) number += 1;
   return withAlternates(plan, [...(plan.alternates ?? []), { name: `Alternate ${number}`, lat, lon }]);
@@ -33,6 +33,26 @@ export function changeAlternate(
   change: Partial<AlternateDocument>,
 ): PlanDocument {
   return withAlternates(plan, changed(plan.alternates, index, change));
+}
+
+/** Sets a text of an alternate; an empty one takes the key away. */
+export function setAlternateText(
+  plan: PlanDocument,
+  index: number,
+  key: "name" | "height",
+  text: string,
+): PlanDocument {
+  const alternates = (plan.alternates ?? []).map((old, at) => {
+    if (at !== index) return old;
+    const { [key]: _old, ...rest } = old;
+    return text.trim() === "" ? rest : { ...rest, [key]: text };
+  });
+  return withAlternates(plan, alternates);
+}
+
+/** What an alternate is called: one that the plan does not name, by its number. */
+export function alternateName({ name }: AlternateDocument, index: number): string {
+  return name ?? `Alternate ${index + 1}`;
 }
 
 export function deleteAlternate(plan: PlanDocument, index: number): PlanDocument {

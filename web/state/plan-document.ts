@@ -43,7 +43,7 @@ export interface WindowDocument {
 
 /** A place to turn off to. */
 export interface AlternateDocument {
-  readonly name: string;
+  readonly name?: string;
   readonly lat: number | string;
   readonly lon: number | string;
   readonly height?: string;

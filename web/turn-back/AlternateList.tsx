@@ -1,12 +1,19 @@
-import { addAlternate, changeAlternate, deleteAlternate } from "../state/decide-edits.ts";
+import {
+  addAlternate,
+  alternateName,
+  changeAlternate,
+  deleteAlternate,
+  setAlternateText,
+} from "../state/decide-edits.ts";
 import type { PageState } from "../state/page-state.ts";
-import type { AlternateDocument } from "../state/plan-document.ts";
+import type { AlternateDocument, PlanDocument } from "../state/plan-document.ts";
 import { TextField } from "../waypoints/TextField.tsx";
 
 const KEYS: readonly (readonly [keyof AlternateDocument, string])[] = [
   ["name", "Name"],
   ["lat", "Latitude"],
   ["lon", "Longitude"],
+  ["height", "Height"],
 ];
 
 interface AlternateListProps {
@@ -81,20 +88,15 @@ function AlternateRow({ page: { store }, alternate, at }: AlternateRowProps) {
           <TextField
             label={`${name} of alternate ${at + 1}`}
             value={String(alternate[key] ?? "")}
-            onText={(text) => {
-              // An alternate without a name or a position is none: an emptied field shows what it was.
-              if (text.trim() !== "")
-                store.edit("Change alternate", (plan) =>
-                  changeAlternate(plan, at, { [key]: key === "name" ? text : degreesOr(text) }),
-                );
-            }}
+            placeholder={key === "name" ? alternateName(alternate, at) : ""}
+            onText={(text) => store.edit("Change alternate", (plan) => withText(plan, at, key, text))}
           />
         </td>
       ))}
       <td>
         <button
           type="button"
-          aria-label={`Take out alternate ${alternate.name}`}
+          aria-label={`Take out alternate ${alternateName(alternate, at)}`}
           onClick={() => store.edit("Take out alternate", (plan) => deleteAlternate(plan, at))}
         >
           ✕
@@ -102,6 +104,12 @@ function AlternateRow({ page: { store }, alternate, at }: AlternateRowProps) {
       </td>
     </tr>
   );
+}
+
+/** An alternate without a position is none: an emptied one stays what it was. */
+function withText(plan: PlanDocument, at: number, key: keyof AlternateDocument, text: string): PlanDocument {
+  if (key === "name" || key === "height") return setAlternateText(plan, at, key, text);
+  return text.trim() === "" ? plan : changeAlternate(plan, at, { [key]: degreesOr(text) });
 }
 
 /** A bare number is degrees, anything else a position in a notation of the plan's. */
