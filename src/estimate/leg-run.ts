@@ -80,15 +80,15 @@ function crossSmoothly(run: LegRun, panel: number, start: number, accepted: Acce
   let place = panels.s[panel] as number;
   if (smooth === null) return place;
   const steps = smooth.cross(panel, start, clock.elapsed, clock.met);
-  for (const { to, time, met } of steps) {
+  for (const { to, time, since } of steps) {
     const now = start + clock.elapsed;
-    if (run.stations) fillStations(run, panel, place, to, Math.max(now, clock.met), now);
+    if (run.stations) fillStations(run, panel, place, to, Math.max(now, since), now);
     smooth.book(run.step, time);
     accepted(place, to, now, panel);
     clock.elapsed += time;
-    clock.met = met;
     place = to;
   }
+  clock.met = smooth.met;
   return place;
 }
 
@@ -122,6 +122,10 @@ function runPanel(run: LegRun, panel: number, from: number, start: number, accep
     const until = resolveAll(flows, panel, Math.max(now, clock.met), step);
     for (const flow of flows)
       if (flow.state !== "data" && flow.state !== "zero") return fieldStop(flow, place);
+    if (until - now <= TIME_TOLERANCE_S) {
+      clock.met = until;
+      continue;
+    }
     let to = Math.min(place + longest, end);
     let status = solveStep(step, curve, piece, panel, polar, place, to, now);
     let met = false;

@@ -5,15 +5,13 @@ import { makeSliceClock, type SliceClock, turnClock } from "./slice-clock.ts";
 import { NO_PAIR, PAIR, SmoothColumns } from "./smooth-columns.ts";
 import { endSlowness, guessDistance, type Lanes, makeLanes, NOT_SMOOTH, smoothTimes } from "./smooth-step.ts";
 
-/** A valid time was passed when it is further behind than this, s. */
+/** A valid time was passed when it is further behind than this, and met where it is no further ahead, s. */
 const PASSING_S = 1e-9;
 /**
- * It is met when it is this near, as a share of the interval to it. The kink in the field is then misplaced by as much, which
- * changes the time by the square of it.
+ * A cut is near enough to its valid time, as a share of the step's time, for the last correction of its place to go unchecked: what
+ * that leaves open is a millionth of this share at most, or its square.
  */
-const MEETING = 1e-6;
-/** A cut nearer than this to its step's start is none, m. */
-const JOINT_M = 1e-6;
+const MEETING = 3e-6;
 const MOST_HALVINGS = 10;
 const MOST_CUTS = 8;
 /** Share of the speed held beyond which no medium is smooth: near it the ground speed ends. */
@@ -36,8 +34,8 @@ export interface Passage {
   readonly reach: number;
 }
 
-/** Told of every step taken: by which departure, from and to which place, when it began, how long it took, the last valid time met. */
-export type Taken = (n: number, from: number, to: number, start: number, time: number, met: number) => void;
+/** Told of every step taken: by which departure, to which place, how long it took, and since which valid time its slices hold. */
+export type Taken = (n: number, to: number, time: number, since: number) => void;
 
 /**
  * Departures of one craft that go along a leg panel by panel, side by side: what depends on the place and the valid time alone is
@@ -190,14 +188,7 @@ export class SmoothFleet {
   /** Tells of a step over the whole panel, where somebody listens. */
   #tell(n: number): void {
     if (this.#taken !== null)
-      this.#taken(
-        n,
-        this.#start,
-        this.#end,
-        this.#now(n),
-        this.#lanes.time[n] as number,
-        this.met[n] as number,
-      );
+      this.#taken(n, this.#end, this.#lanes.time[n] as number, this.#clock.from[n] as number);
   }
 
   /** Sees to one that cannot take the panel in one step; returns whether it is to go over it in several. */
@@ -209,10 +200,9 @@ export class SmoothFleet {
     return this.#judge(j, this.#lanes, n);
   }
 
-  #book(n: number, from: number, to: number, time: number): void {
-    const before = this.legTime[n] as number;
-    this.#taken?.(n, from, to, (this.begun[n] as number) + before, time, this.met[n] as number);
-    this.legTime[n] = before + time;
+  #book(n: number, to: number, time: number): void {
+    this.#taken?.(n, to, time, this.#clock.from[n] as number);
+    this.legTime[n] = (this.legTime[n] as number) + time;
     this.legUse[n] = (this.legUse[n] as number) + (this.#passage as Passage).rate * time;
   }
 
@@ -264,45 +254,50 @@ export class SmoothFleet {
         return this.#again(j, n, MOST_HALVINGS);
       }
       if (time <= wanted + PASSING_S) return this.#accept(j, n, time);
+      if (wanted <= PASSING_S) return this.#meet(j, n);
       cutting[j] = 1;
       tries[j] = 0;
       limit[j] = to[j] as number;
       return this.#aimAtTime(j, n, (place[j] as number) + guessDistance(lanes, lane, wanted));
     }
+    if (time === NOT_SMOOTH) return this.#sink(n);
     const late = time - wanted;
-    if (time !== NOT_SMOOTH && Math.abs(late) * (this.#clock.perSecond[n] as number) <= MEETING) {
-      this.met[n] = until;
-      return this.#accept(j, n, time);
-    }
-    if (time === NOT_SMOOTH || !this.#again(j, n, MOST_CUTS)) {
-      this.afloat[n] = 0;
-      return false;
-    }
-    return this.#aimAtTime(j, n, (to[j] as number) - late / endSlowness(lanes, lane));
+    const at = (to[j] as number) - late / endSlowness(lanes, lane);
+    if (Math.abs(late) > MEETING * time + PASSING_S)
+      return this.#again(j, n, MOST_CUTS) && this.#aimAtTime(j, n, at);
+    if (at > (place[j] as number)) to[j] = Math.min(at, limit[j] as number);
+    this.met[n] = until;
+    return this.#accept(j, n, wanted);
   }
 
   #again(j: number, n: number, most: number): boolean {
     const { tries } = this.#rounds;
     tries[j] = (tries[j] as number) + 1;
-    if ((tries[j] as number) <= most) return true;
+    return (tries[j] as number) <= most || this.#sink(n);
+  }
+
+  #sink(n: number): false {
     this.afloat[n] = 0;
     return false;
   }
 
-  /** Aims at the place where a valid time is met; at the step's start it is met on the spot. */
-  #aimAtTime(j: number, n: number, at: number): boolean {
-    const { place, to, limit } = this.#rounds;
-    if (at - (place[j] as number) >= JOINT_M) {
-      to[j] = Math.min(at, limit[j] as number);
-      return true;
-    }
+  /** Meets a valid time on the spot. */
+  #meet(j: number, n: number): boolean {
     this.met[n] = this.#clock.until[n] as number;
     return this.#goOn(j, n);
   }
 
+  /** Aims at the place where a valid time is met. */
+  #aimAtTime(j: number, n: number, at: number): boolean {
+    const { place, to, limit } = this.#rounds;
+    if (!(at > (place[j] as number))) return this.#sink(n);
+    to[j] = Math.min(at, limit[j] as number);
+    return true;
+  }
+
   #accept(j: number, n: number, time: number): boolean {
     const { place, to, longest, cutting } = this.#rounds;
-    this.#book(n, place[j] as number, to[j] as number, time);
+    this.#book(n, to[j] as number, time);
     // What was too rough is likely so further on; beyond a valid time it need not be.
     longest[j] = cutting[j] === 1 ? this.#end : 2 * ((to[j] as number) - (place[j] as number));
     place[j] = to[j] as number;
@@ -313,9 +308,7 @@ export class SmoothFleet {
   #goOn(j: number, n: number): boolean {
     this.#aim(j, this.#rounds.place[j] as number);
     const moment = Math.max(this.#now(n), this.met[n] as number);
-    if (moment < (this.#clock.until[n] as number) || this.#turn(n, moment)) return true;
-    this.afloat[n] = 0;
-    return false;
+    return moment < (this.#clock.until[n] as number) || this.#turn(n, moment) || this.#sink(n);
   }
 
   /** Aims a step as far as is likely to be smooth. */

@@ -8,8 +8,8 @@ interface Taken {
   readonly to: number;
   /** s */
   readonly time: number;
-  /** The last valid time met after it, s since departure. */
-  readonly met: number;
+  /** The valid time before, from which on its slices hold, s since departure. */
+  readonly since: number;
 }
 
 /** One craft that goes along a leg by smooth steps where they serve: a fleet of one. */
@@ -20,9 +20,14 @@ export class SmoothLeg {
 
   /** @param departure ms since 1970 */
   constructor(field: Field, departure: number, alongOnly: boolean) {
-    this.#fleet = new SmoothFleet(field, [departure], alongOnly, (_n, _from, to, _start, time, met) => {
-      this.#taken.push({ to, time, met });
+    this.#fleet = new SmoothFleet(field, [departure], alongOnly, (_n, to, time, since) => {
+      this.#taken.push({ to, time, since });
     });
+  }
+
+  /** The last valid time met, s since departure: the clock may be a little short of it. */
+  get met(): number {
+    return this.#fleet.met[0] as number;
   }
 
   setOut(passage: Passage): void {

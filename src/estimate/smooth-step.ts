@@ -251,7 +251,11 @@ export function guessDistance({ half, start, slope, bend, time }: Lanes, n: numb
   return length * z;
 }
 
-/** Slowness at the step's end by the guess of a lane, s/m. */
-export function endSlowness({ start, slope, bend }: Lanes, n: number): number {
-  return (start[n] as number) + 2 * (slope[n] as number) + 4 * (bend[n] as number);
+/** Slowness at the step's end, s/m, by the guess of a lane and what it missed as {@link guessDistance} has it. */
+export function endSlowness({ half, start, slope, bend, time }: Lanes, n: number): number {
+  const f0 = start[n] as number;
+  const s1 = slope[n] as number;
+  const s2 = bend[n] as number;
+  const missed = (time[n] as number) / (half[n] as number) - (2 * (f0 + s1) + (8 / 3) * s2);
+  return f0 + 2 * s1 + 4 * s2 + 1.5 * missed;
 }

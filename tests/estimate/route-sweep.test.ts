@@ -196,6 +196,62 @@ describe("departures worked out together", () => {
     expectLone(bent, fast, departures.slice(0, 10));
   });
 
+  test("a wind that comes to its limit at a valid time, and no further, is not above it", () => {
+    // 1 and 3 m/s turn about, every 3 hours: the limit is met a dozen times on the way.
+    const shape = { lon: box.lon, lat: box.lat, hours: spaced(-3, 60, 21) };
+    const wind = gridField("wind", shape, (_lon, _lat, hours) => [hours % 2 === 0 ? 1 : 3, 0]);
+    const conditions = conditionsOf(wind, limitedCraft({ wind_m_s: 3 }));
+    expect(expectLone(bent, conditions)).toBe(departures.length);
+    const { outcomes } = together(bent, conditions);
+    expect(outcomes.every(({ findings }) => findings.length === 0)).toBe(true);
+  });
+
+  test("a ground speed exactly at its least, or below it by rounding, is watched alone", () => {
+    for (const [lat, lon] of [
+      [0, 3],
+      [3, 0],
+      [2, 1],
+    ] as const) {
+      const norm = Math.hypot(lat, lon);
+      const wind = gridField("wind", box, () => [(-6 * lon) / norm, (-6 * lat) / norm]);
+      const ahead = routeOf(waypoint("A", 0, 0), waypoint("B", lat, lon));
+      const limits = { groundSpeed_m_s: 8 };
+      expect(expectLone(ahead, conditionsOf(wind, limitedCraft(limits)), departures.slice(0, 2))).toBe(0);
+    }
+  });
+
+  test("a tile of one valid time alone is never in force", () => {
+    const once = gridField("wind", { ...box, hours: [0] }, () => [5, 0]);
+    const field: Field = { ...once, tiles: [...once.tiles, ...swell(3).tiles] };
+    expect(expectLone(bent, conditionsOf(field), departures.slice(0, 3))).toBe(0);
+    const { outcomes } = together(bent, conditionsOf(field), departures.slice(0, 1));
+    expect(outcomes[0]?.time_s).toBeCloseTo(
+      together(bent, conditionsOf(swell(3)), departures.slice(0, 1)).outcomes[0]?.time_s as number,
+      6,
+    );
+  });
+
+  test("a second field stops, limits and turns by its own valid times", () => {
+    const current = gridField("current", { lon: box.lon, lat: box.lat }, () => [0.5, 0]);
+    const hourly = (last: number, strength: number) =>
+      gridField("wind", { ...box, hours: spaced(0, last, last) }, (_lon, _lat, hours) => [
+        hours % 2 === 0 ? strength : -strength,
+        0,
+      ]);
+    const boat = limitedCraft({ wind_m_s: 10 }, { moves: "water" });
+    const fields = (last: number) => ({
+      ...conditionsOf(current, boat),
+      fields: [current, hourly(last, 10)],
+    });
+    expect(expectLone(bent, fields(60), departures.slice(0, 3))).toBe(0);
+    const through = together(bent, fields(60), departures.slice(0, 1)).outcomes[0];
+    // One on each leg, and no wind above the limit.
+    expect(through?.findings.map(({ code }) => code)).toEqual(Array(2).fill("wind-against-current"));
+    const stopped = together(bent, fields(5), departures.slice(0, 1)).outcomes[0];
+    expect(stopped?.findings.map(({ code }) => code)).toContain("outside-time");
+    expect(stopped?.reached?.time_s).toBeCloseTo(5 * 3600, 6);
+  });
+
   test("paces and craft whose speed or rate depends on the fields are left to lone estimates", () => {
     const prepared = prepareRoute(bent, [swell(3)]);
     const conditions = conditionsOf(swell(3));
