@@ -2,7 +2,8 @@ import { describe, expect, test } from "vitest";
 import type { Field, Tile } from "../../src/field/field.ts";
 import { areasOf } from "../../web/chart/field-areas.ts";
 import { fieldText } from "../../web/chart/UnderPointer.tsx";
-import { fieldsAt, levelsOf } from "../../web/worker/field-at.ts";
+import { fieldsAt } from "../../web/worker/field-at.ts";
+import { levelsOf } from "../../web/worker/field-levels.ts";
 import { answerLattice } from "../../web/worker/lattice.ts";
 
 const knot = 1852 / 3600;

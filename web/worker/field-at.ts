@@ -22,9 +22,3 @@ function flowOf(
   const { drift, set_deg } = currentSet(u, v);
   return { speed_m_s: drift, direction_deg: set_deg, gust_m_s: null };
 }
-
-/** The heights at which the fields have levels, m above the surface, ascending, each once. */
-export function levelsOf(fields: readonly Field[]): number[] {
-  const heights = fields.flatMap(({ tiles }) => tiles.flatMap(({ height }) => [...(height ?? [])]));
-  return [...new Set(heights)].sort((a, b) => a - b);
-}

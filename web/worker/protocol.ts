@@ -249,18 +249,18 @@ export interface Worker {
   /** Writes the estimate last made, as the command line does; `null` where there is none. */
   report(question: ReportQuestion): Promise<string | null>;
   /** Reads a craft as its form holds it; the pace is that of the estimate last made. */
-  studyCraft(craft: CraftDocument): CraftAnswer;
+  studyCraft(craft: CraftDocument): Promise<CraftAnswer>;
   /** Reads routes from a GPX, GeoJSON or CSV file. */
   readRoutes(name: string, content: Blob): Promise<RoutesAnswer>;
   openArchive(name: string, content: Blob): Promise<ArchiveAnswer>;
   /** One file of a plan with the files that it names. */
   packArchive(plan: PlanDocument, stem: string): Promise<WrittenArchive>;
   /** The text of a plan's or a craft's file. */
-  planText(plan: PlanDocument): string;
-  craftText(craft: CraftDocument): string;
+  planText(plan: PlanDocument): Promise<string>;
+  craftText(craft: CraftDocument): Promise<string>;
   lattice(question: LatticeQuestion): Promise<Lattice>;
   /** The fields of the plan last estimated, at a place. */
-  fieldsAt(question: PlaceQuestion): readonly FieldAt[];
+  fieldsAt(question: PlaceQuestion): Promise<readonly FieldAt[]>;
   /** Heights at which those fields have levels, m, ascending. */
   levels(): readonly number[];
   coastTile(z: number, x: number, y: number, detail: CoastDetail): Promise<CoastTile>;

@@ -2,11 +2,9 @@ import fine from "world-atlas/land-10m.json?url";
 import coarse from "world-atlas/land-50m.json?url";
 import { createCoastShelf } from "./coast-shelf.ts";
 import type { LandTopology } from "./core.ts";
-import { serializeCraft, serializePlan } from "./core.ts";
-import { studyCraft } from "./craft-study.ts";
 import type { Deciding } from "./deciding.ts";
 import { createEstimator } from "./estimator.ts";
-import { fieldsAt, levelsOf } from "./field-at.ts";
+import { levelsOf } from "./field-levels.ts";
 import { createFieldShelf } from "./field-shelf.ts";
 import { createFileShelf } from "./file-shelf.ts";
 import { createLandShelf } from "./land-shelf.ts";
@@ -60,14 +58,14 @@ const worker: Worker = {
     const { writeReport } = await import("./write-report.ts");
     return writeReport(input, question);
   },
-  studyCraft: (craft) => studyCraft(craft, estimator.pace()),
+  studyCraft: async (craft) => (await import("./craft-study.ts")).studyCraft(craft, estimator.pace()),
   readRoutes: async (name, content) => (await import("./exchange.ts")).readRoutes(name, content),
   openArchive: async (name, content) => (await import("./exchange.ts")).openArchive(name, content),
   packArchive: async (plan, stem) => (await import("./exchange.ts")).packArchive(plan, stem, files.blob),
-  planText: (plan) => serializePlan(plan as Parameters<typeof serializePlan>[0]),
-  craftText: (craft) => serializeCraft(craft as Parameters<typeof serializeCraft>[0]),
+  planText: async (plan) => (await import("./document-text.ts")).planText(plan),
+  craftText: async (craft) => (await import("./document-text.ts")).craftText(craft),
   lattice: async (question) => handLattice(answerLattice(fields.current(), question)),
-  fieldsAt: (question) => fieldsAt(fields.current(), question),
+  fieldsAt: async (question) => (await import("./field-at.ts")).fieldsAt(fields.current(), question),
   levels: () => levelsOf(fields.current()),
   coastTile: async (z, x, y, detail) => handTile(await coast.tile(z, x, y, detail)),
   async loadFineCoast() {
