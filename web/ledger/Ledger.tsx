@@ -4,7 +4,6 @@ import { inUnit, signedInUnit, storeUnit } from "../format/units.ts";
 import { Swatch } from "../ribbon/Ribbon.tsx";
 import { LazyPart } from "../shell/LazyPart.tsx";
 import { StaleMark } from "../shell/StaleMark.tsx";
-import { sureWords } from "../spread/spread-words.ts";
 import type { PageState } from "../state/page-state.ts";
 import { Advisory } from "./Advisory.tsx";
 import { CostBar } from "./CostBar.tsx";
@@ -12,6 +11,7 @@ import { barsEnd } from "./cost-bar.ts";
 import { FindingList } from "./FindingList.tsx";
 import { type Best, bestOf } from "./ledger-best.ts";
 import { StatusMark } from "./StatusMark.tsx";
+import { sureWords } from "./sure-words.ts";
 
 const loadWhatIfTable = async () => (await import("../spread/WhatIfTable.tsx")).WhatIfTable;
 

@@ -39,20 +39,6 @@ export function ensembleWords(route: DecidedRoute, ensemble: EnsembleResult, { z
   ];
 }
 
-/** The same in a few characters for the ledger; `null` where nothing is known about how sure the store is. */
-export function sureWords({ spread, ensemble }: DecidedRoute): string[] {
-  const words: string[] = [];
-  if (spread) {
-    const share = percentText(spread.reserveHolds).replace("less than", "<").replace("more than", ">");
-    words.push(`holds: ${share}`);
-  }
-  if (ensemble !== undefined) {
-    const held = Math.round(ensemble.reserveHolds * ensemble.members.length);
-    words.push(`holds: ${held} of ${ensemble.members.length}`);
-  }
-  return words;
-}
-
 function weakWords(
   route: DecidedRoute,
   place: ErrorSpread["weakest"]["use"],
