@@ -38,9 +38,9 @@ export type { PacelessConditions } from "./choose/speed-trials.ts";
 export { runSteps, type Steps } from "./choose/steps.ts";
 export type { BestPair, DecidedBy, Sure, SureBest, SureCell } from "./choose/sure.ts";
 export type { SureInTime } from "./choose/sure-in-time.ts";
+export type { SurePaces } from "./choose/sure-paces.ts";
 export {
   type PlainWindow,
-  type SurePaces,
   type SureRoutes,
   type SureWindow,
   sureWindow,

@@ -4,10 +4,11 @@ import type { InTime } from "./in-time.ts";
 import type { MinuteCells } from "./minute-cells.ts";
 import type { RoutePaces } from "./route-paces.ts";
 import type { Steps } from "./steps.ts";
-import type { BestPair, SureCell } from "./sure.ts";
-import { type FoundBests, foundBests, overallBests, testedBests, testedCell } from "./sure-bests.ts";
+import type { BestPair } from "./sure.ts";
+import { type FoundBests, foundBests, overallBests, testedBests } from "./sure-bests.ts";
 import { type SureInTime, sureInTime } from "./sure-in-time.ts";
 import { minuteBests } from "./sure-minutes.ts";
+import { type SurePaces, surePaces } from "./sure-paces.ts";
 import type { Sweep } from "./window.ts";
 import type { WindowCell } from "./window-cell.ts";
 
@@ -31,12 +32,6 @@ export interface SureWindow extends SureRoutes {
   readonly paces: readonly SurePaces[] | null;
 }
 
-export interface SurePaces {
-  readonly route: string;
-  readonly leastUse: SureCell | null;
-  readonly fastest: SureCell | null;
-}
-
 /** What a window came to by the plain estimate. */
 export interface PlainWindow {
   readonly window: DepartureWindow;
@@ -54,6 +49,7 @@ export interface PlainWindow {
  * Only the cells down to the first that holds are tried, each until its first break, and each once for all three rankings: the
  * work is at most about that of the matrix again, and as much as there are members and what-ifs for each best, unless what breaks cells
  * changes from one to the next. A step is one estimate, the spread of one best, or one search between the minutes of two departures.
+ * The choice of pace, where asked for, is searched anew over the craft's range at one departure a route.
  *
  * @example
  * const craft = readCraft(
@@ -96,7 +92,7 @@ export function* sureWindow(
     ...(yield* routesTested(sweep, trials, own, routeCells, cells)),
     refined: minutes && (yield* refinedRoutes(sweep, trials, window, minutes, own)),
     inTime: inTime && (yield* sureInTime(sweep, trials, inTime)),
-    paces: paces && (yield* pacesTested(trials, paces)),
+    paces: paces && (yield* pacesTested(sweep, trials, paces, own)),
   };
 }
 
@@ -129,13 +125,16 @@ function* routesTested(
   return { best: yield* testedBests(trials, overallBests(own, all), all), routes };
 }
 
-function* pacesTested(trials: CellTrials, paces: readonly RoutePaces[]): Steps<SurePaces[]> {
+function* pacesTested(
+  sweep: Sweep,
+  trials: CellTrials,
+  paces: readonly RoutePaces[],
+  own: readonly FoundBests[],
+): Steps<SurePaces[]> {
   const tested: SurePaces[] = [];
-  for (const { route, leastUse, fastest } of paces)
-    tested.push({
-      route,
-      leastUse: yield* testedCell(trials, leastUse),
-      fastest: yield* testedCell(trials, fastest),
-    });
+  for (const each of paces) {
+    const index = sweep.prepared.findIndex(({ route }) => route.name === each.route);
+    tested.push(yield* surePaces(sweep, trials, each, own[index]?.sure.use ?? null));
+  }
   return tested;
 }

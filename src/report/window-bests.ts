@@ -81,10 +81,15 @@ function inTimeOf({ inTime, sure }: WindowReport, units: WindowUnits): { rows: R
 
 /** Per route and at its best departure by use, the bests among all speeds of the craft's range. */
 function pacesOf({ paces, sure }: WindowReport): Row[] {
-  return (sure?.paces ?? paces ?? []).flatMap(({ leastUse, fastest }) => [
-    ...(leastUse === null ? [] : [{ what: "any speed, use", cell: leastUse }]),
-    ...(fastest === null ? [] : [{ what: "any, fastest", cell: fastest }]),
-  ]);
+  return (sure?.paces ?? paces ?? []).flatMap((own) => {
+    const { leastUse, fastest } = own;
+    const held = "sureFastest" in own && own.sureFastest !== fastest ? own.sureFastest : null;
+    return [
+      ...(leastUse === null ? [] : [{ what: "any speed, use", cell: leastUse }]),
+      ...(fastest === null ? [] : [{ what: "any, fastest", cell: fastest }]),
+      ...(held === null ? [] : [{ what: "fastest held", cell: held }]),
+    ];
+  });
 }
 
 /** The bests of all cells and of each route, to the minute where that was asked for; those that hold, where they were put to the test. */
@@ -148,11 +153,27 @@ function noneText({ summary, sure }: WindowReport): string {
     : `Nothing in the window holds in ${tried}.`;
 }
 
-function pacesText({ paces }: WindowReport): string[] {
+function pacesText({ paces, sure }: WindowReport): string[] {
   if (paces === null) return [];
-  const text =
+  const any =
     "Any speed: of the craft's whole range, at the route's departure of least use; least use, and the fastest that keeps the reserve.";
-  return wrapped(text, TABLE_WIDTH);
+  const tried = sure === undefined || sure === null ? null : triedText(sure);
+  if (tried === null) return wrapped(any, TABLE_WIDTH);
+  const own = sure?.paces ?? [];
+  const held = own.some(({ fastest, sureFastest }) => sureFastest !== null && sureFastest !== fastest);
+  const none = own.flatMap(({ route, sureFastest }) => (sureFastest === null ? [route] : []));
+  return [
+    ...wrapped(any, TABLE_WIDTH),
+    ...(held
+      ? wrapped(
+          `Fastest held: the fastest that holds in ${tried}, at the route's departure of least use that does.`,
+          TABLE_WIDTH,
+        )
+      : []),
+    ...none.flatMap((route) =>
+      wrapped(`${isolated(plainText(route))}: no speed holds in ${tried}.`, TABLE_WIDTH),
+    ),
+  ];
 }
 
 function closing({ latest, closedBy }: WindowBest): string[] {

@@ -2,7 +2,8 @@ import type { InTime } from "../choose/in-time.ts";
 import type { RefinedWindow } from "../choose/refine.ts";
 import type { RoutePaces } from "../choose/route-paces.ts";
 import type { BestPair, Sure, SureBest, SureCell } from "../choose/sure.ts";
-import type { SurePaces, SureRoutes, SureWindow } from "../choose/sure-window.ts";
+import type { SurePaces } from "../choose/sure-paces.ts";
+import type { SureRoutes, SureWindow } from "../choose/sure-window.ts";
 import type { CellFinding, WindowCell } from "../choose/window-cell.ts";
 import type { Refusal, RouteSummary, WindowBest } from "../choose/window-summary.ts";
 import { ADVISORY } from "../constants.ts";
@@ -122,7 +123,13 @@ function inTime({ notAfter, routes }: InTime, tested: SureWindow["inTime"]) {
 function paces({ route: name, departure, leastUse, fastest }: RoutePaces, tested: SurePaces | undefined) {
   const least = tested?.leastUse ?? leastUse;
   const quickest = tested?.fastest ?? fastest;
-  return { route: name, departure, leastUse: least && cell(least), fastest: quickest && cell(quickest) };
+  return {
+    route: name,
+    departure,
+    leastUse: least && cell(least),
+    fastest: quickest && cell(quickest),
+    ...(tested === undefined ? {} : { sureFastest: tested.sureFastest && cell(tested.sureFastest) }),
+  };
 }
 
 const iso = (time: number): string => new Date(time).toISOString();

@@ -4,8 +4,10 @@ import { CellTrials } from "../../src/choose/cell-trials.ts";
 import type { DepartureWindow } from "../../src/choose/departure-window.ts";
 import type { ForecastError } from "../../src/choose/forecast-error.ts";
 import { latestInTime } from "../../src/choose/in-time.ts";
+import { fastestWithReserve } from "../../src/choose/pace-curve.ts";
 import type { BestBy } from "../../src/choose/rank.ts";
 import { refineRoutes } from "../../src/choose/refine.ts";
+import { routePaces } from "../../src/choose/route-paces.ts";
 import { runSteps } from "../../src/choose/steps.ts";
 import type { SureCell } from "../../src/choose/sure.ts";
 import { type SureWindow, sureWindow } from "../../src/choose/sure-window.ts";
@@ -79,19 +81,22 @@ function answerOf(
     input = inputOf(),
     window = day,
     refine = false,
-  }: { input?: EstimateInput; window?: DepartureWindow; refine?: boolean } = {},
+    chooseSpeed = false,
+  }: { input?: EstimateInput; window?: DepartureWindow; refine?: boolean; chooseSpeed?: boolean } = {},
 ) {
   const sweep = makeSweep(prepareRoutes(input), input);
   const whole = { whatIfs: [], errors: [], members: [], ...asked };
   const cells = [...windowCells(sweep, window)];
   const minutes = refine ? refineRoutes(sweep, window, cells) : null;
   const inTime = latestInTime(sweep, window);
+  const summary = summariseWindow(cells);
+  const paces = chooseSpeed ? routePaces(sweep, summary) : null;
   const steps = sureWindow(sweep, new CellTrials(sweep, whole), {
     window,
     cells,
     minutes,
     inTime,
-    paces: null,
+    paces,
   });
   let count = 0;
   const counted = (function* () {
@@ -103,7 +108,7 @@ function answerOf(
     }
   })();
   const sure: SureWindow = runSteps(counted);
-  return { sure, cells, steps: count, summary: summariseWindow(cells), minutes, inTime };
+  return { sure, cells, steps: count, summary, minutes, inTime, paces };
 }
 
 /** Conditions of a cell under each member and what-if, made by hand: no part of what decides is used. */
@@ -330,6 +335,71 @@ describe("the sure bests to the minute", () => {
     });
     expect(holdsByHand(latest, asked)).toBe(true);
     expect(holdsByHand(at(latest, 1), asked)).toBe(false);
+  });
+});
+
+describe("the fastest speed that holds", () => {
+  const ranged = { ...drone(), speeds: { min: 8, max: 22 } };
+  const input = inputOf({ craft: ranged });
+  const window = { ...day, speeds_m_s: [13, 15] };
+  const asked = {
+    members: membersOf([0, 2, 5]),
+    whatIfs: [whatIfOf("Cold", { consumption: 0.08 }), whatIfOf("Late", { late_s: 1800 })],
+  };
+
+  test("keeps the reserve in every member and what-if, at the departure of least use that does; a billionth faster does not", () => {
+    const { sure, paces } = answerOf(asked, { input, window, chooseSpeed: true });
+    expect(sure.paces?.map(({ route }) => route)).toEqual(["South", "North"]);
+    for (const [index, { route, fastest, sureFastest }] of (sure.paces ?? []).entries()) {
+      const own = sure.routes.find((each) => each.route === route);
+      const held = sureFastest as SureCell;
+      expect(plainOf(fastest)).toEqual(paces?.[index]?.fastest);
+      expect(held.departure).toBe(own?.sure.use?.departure);
+      expect(held.sure.status).not.toBe("stop");
+      expect(holdsByHand(held, asked)).toBe(true);
+      const faster = { ...held, speed_m_s: (held.speed_m_s as number) * (1 + 1.1e-9) };
+      expect(holdsByHand(faster, asked)).toBe(false);
+      expect(held.speed_m_s).toBeGreaterThan(own?.sure.use?.speed_m_s as number);
+    }
+  });
+
+  test("is the fastest of the plain estimate where that holds, without a search", () => {
+    const alone = { members: membersOf([0]), whatIfs: [whatIfOf("Warm", { consumption: -0.1 })] };
+    const { sure, paces, steps } = answerOf(alone, { input, window, chooseSpeed: true });
+    for (const [index, { fastest, sureFastest }] of (sure.paces ?? []).entries()) {
+      expect(sureFastest).toBe(fastest);
+      expect(plainOf(sureFastest)).toEqual(paces?.[index]?.fastest);
+    }
+    expect(steps).toBeLessThan(60);
+  });
+
+  test("is, of one what-if that only spends more, the fastest of a craft that does", () => {
+    const { sure } = answerOf(
+      { whatIfs: [whatIfOf("Cold", { consumption: 0.3 })] },
+      { input, window, chooseSpeed: true },
+    );
+    for (const { sureFastest } of sure.paces ?? []) {
+      const route = routes.find(({ name }) => name === sureFastest?.route) as Route;
+      const cold = { ...drone(1.3), speeds: ranged.speeds };
+      const conditions = {
+        departure: Date.parse(sureFastest?.departure as string),
+        craft: cold,
+        reserve: { kind: "share", share: 0.2 } as const,
+        fields: [windOf(0)],
+      };
+      const expected = fastestWithReserve(prepareRoute(route, [windOf(0)]), conditions)?.speed_m_s as number;
+      expect(Math.abs((sureFastest?.speed_m_s as number) / expected - 1)).toBeLessThan(1.1e-9);
+    }
+  });
+
+  test("is none where a what-if breaks every speed", () => {
+    const frozen = { whatIfs: [whatIfOf("Frozen", { consumption: 20 })] };
+    const { sure } = answerOf(frozen, { input, window, chooseSpeed: true });
+    for (const { fastest, sureFastest } of sure.paces ?? []) {
+      expect(fastest?.sure.status).toBe("stop");
+      expect(sureFastest).toBeNull();
+    }
+    expect(sure.paces).toHaveLength(2);
   });
 });
 

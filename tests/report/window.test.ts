@@ -3,6 +3,7 @@ import { CellTrials } from "../../src/choose/cell-trials.ts";
 import type { DepartureWindow } from "../../src/choose/departure-window.ts";
 import { latestInTime } from "../../src/choose/in-time.ts";
 import { refinedBests, refineRoutes } from "../../src/choose/refine.ts";
+import { routePaces } from "../../src/choose/route-paces.ts";
 import { runSteps } from "../../src/choose/steps.ts";
 import { sureWindow } from "../../src/choose/sure-window.ts";
 import type { UncertaintyAsked } from "../../src/choose/uncertain-estimate.ts";
@@ -49,6 +50,7 @@ function reportOf(
     name: "Tender",
     moves: "water",
     power: cubePower({ referenceSpeed_m_s: 5, referencePower_W: 20_000 }),
+    speeds: { min: 2, max: 7 },
     store: { unit: "J", usable: 3.6e8 },
   });
   const input: EstimateInput = {
@@ -72,7 +74,9 @@ function reportOf(
   const cells = [...windowCells(sweep, window)];
   const minutes = refine ? refineRoutes(sweep, window, cells) : null;
   const inTime = latestInTime(sweep, window);
-  const plain = { window, cells, minutes, inTime, paces: null };
+  const summary = summariseWindow(cells);
+  const paces = refine && asked !== null ? routePaces(sweep, summary) : null;
+  const plain = { window, cells, minutes, inTime, paces };
   const sure = asked && runSteps(sureWindow(sweep, new CellTrials(sweep, asked), plain));
   const fields = input.fields.map(fieldSummary);
   const { title, pace } = input;
@@ -84,10 +88,10 @@ function reportOf(
     arrive: null,
     window,
     cells,
-    summary: summariseWindow(cells),
+    summary,
     refined: minutes && refinedBests(minutes),
     inTime,
-    paces: null,
+    paces,
     ...(sure === null ? {} : { sure }),
   };
 }
@@ -287,6 +291,25 @@ describe("a window whose bests are put to the test", () => {
     expect(json.cells).toEqual(report.cells);
   });
 
+  test("names the fastest speed that holds beside the plain ones, in table and json", () => {
+    const { paces } = JSON.parse(writeWindowJson(report));
+    const told = sure.paces ?? [];
+    expect(paces.map(({ sureFastest }: { sureFastest: unknown }) => sureFastest)).toEqual(
+      JSON.parse(JSON.stringify(told.map(({ sureFastest }) => sureFastest))),
+    );
+    const held = told.filter(({ fastest, sureFastest }) => sureFastest !== fastest);
+    expect(held.length).toBeGreaterThan(0);
+    const rows = lines.filter((line) => line.startsWith("fastest held"));
+    expect(rows).toHaveLength(held.length);
+    rows.forEach((row, at) => {
+      const knots = ((held[at]?.sureFastest?.speed_m_s as number) * 3600) / 1852;
+      expect(row).toContain(` ${knots.toFixed(1)} `);
+    });
+    expect(flat).toContain(
+      "Fastest held: the fastest that holds in all 3 what-ifs, at the route's departure",
+    );
+  });
+
   test("has in its CSV columns at the end that are filled for the bests alone", () => {
     const [head, ...rows] = readCsv(writeWindowCsv(report));
     const [plain] = readCsv(writeWindowCsv(reportOf(names, [3, 5], true)));
@@ -314,6 +337,10 @@ describe("a window whose bests are put to the test", () => {
       "metric",
     );
     expect(none).toContain("Nothing in the window holds in the what-if.");
+    const solid = { ...frozen, consumption: 999 };
+    const quick = reportOf(["North"], [3], true, { ...ASKED, whatIfs: [solid] });
+    expect(writeWindowTable(quick, "sea")).toContain("\nNorth: no speed holds in the what-if.\n");
+    expect(JSON.parse(writeWindowJson(quick)).paces[0].sureFastest).toBeNull();
     expect(none.replace(/\s+/g, " ")).toMatch(
       / The quickest.*, 2027-05-0\d \d\d:\d\d UTC, runs out of store in the what-if "Frozen"/,
     );

@@ -1,0 +1,85 @@
+import type { CellTrials } from "./cell-trials.ts";
+import type { RoutePaces } from "./route-paces.ts";
+import { evenlyInSpeed, speedRange } from "./speed-range.ts";
+import type { Steps } from "./steps.ts";
+import type { SureCell } from "./sure.ts";
+import { testedCell } from "./sure-bests.ts";
+import { type Sweep, sweepCell } from "./window.ts";
+import type { WindowCell } from "./window-cell.ts";
+
+/** Share of a speed to which the fastest that holds is found. */
+const CLOSENESS = 1e-9;
+
+/** A route's choice of pace, put to the test. */
+export interface SurePaces {
+  readonly route: string;
+  /** As `RoutePaces` has them. */
+  readonly leastUse: SureCell | null;
+  readonly fastest: SureCell | null;
+  /**
+   * At the fastest through-speed that holds in every member and what-if, at the route's best departure by use that holds, else at that of
+   * `fastest`; `null` where none does.
+   */
+  readonly sureFastest: SureCell | null;
+}
+
+/**
+ * Puts a route's choice of pace to the test. Where the fastest speed that keeps the reserve does not hold, the speeds of the craft's range
+ * are gone down in 64 steps to the first that does, then halved to a billionth: a stretch of speeds narrower than a step may be missed.
+ *
+ * @param held the route's best departure by use that holds, at one of the window's speeds; `null` for none
+ */
+export function* surePaces(
+  sweep: Sweep,
+  trials: CellTrials,
+  { route, departure, leastUse, fastest }: RoutePaces,
+  held: WindowCell | null,
+): Steps<SurePaces> {
+  const tested = yield* testedCell(trials, fastest);
+  const at = held?.departure ?? departure;
+  const holds = at === departure && (tested === null || tested.sure.status !== "stop");
+  return {
+    route,
+    leastUse: yield* testedCell(trials, leastUse),
+    fastest: tested,
+    sureFastest: holds ? tested : yield* testedCell(trials, yield* fastestToHold(sweep, trials, route, at)),
+  };
+}
+
+function* fastestToHold(
+  sweep: Sweep,
+  trials: CellTrials,
+  route: string,
+  departure: string,
+): Steps<WindowCell | null> {
+  const prepared = sweep.prepared.find((each) => each.route.name === route);
+  if (prepared === undefined) throw new Error(`no route ${route} in the sweep`);
+  const cellAt = (speed: number) => sweepCell(sweep, prepared, Date.parse(departure), speed);
+  let tooFast: number | null = null;
+  for (const speed of evenlyInSpeed(speedRange(sweep.conditions.craft)).reverse()) {
+    const cell = cellAt(speed);
+    if (!(yield* trials.holds(cell))) tooFast = speed;
+    else return tooFast === null ? cell : yield* lastToHold(trials, cellAt, speed, tooFast);
+    yield;
+  }
+  return null;
+}
+
+/** Halves the speeds between one that holds and one that does not. */
+function* lastToHold(
+  trials: CellTrials,
+  cellAt: (speed: number) => WindowCell,
+  slow: number,
+  tooFast: number,
+): Steps<WindowCell> {
+  let [held, shut] = [slow, tooFast];
+  let best = cellAt(held);
+  while (shut - held > CLOSENESS * held) {
+    const middle = 0.5 * (held + shut);
+    const cell = cellAt(middle);
+    if (yield* trials.holds(cell)) [held, best] = [middle, cell];
+    else shut = middle;
+    yield;
+  }
+  return best;
+}
