@@ -13,6 +13,8 @@ import type { WindowUnits } from "./window-units.ts";
 /** Between two candidates. */
 const GAP = 2;
 const STORE_WIDTH = 6;
+/** An arrival in minutes, the mark of a later day beside it; one in seconds with that mark takes more. */
+const LEAD_WIDTH = 8;
 /** A route's name is shown in full up to this width, and beyond it where its column is wider. */
 const NAME_WIDTH = 18;
 const DAY = 86_400_000;
@@ -58,23 +60,37 @@ function arrivalText(cell: WindowCell, units: WindowUnits): string {
   return clockText(cell.arrival, units.clock) + (days === 0 ? "" : `+${days}`);
 }
 
+/** What stands before the store in a column of cells, and how wide the widest is. */
+interface Lead {
+  readonly head: string;
+  readonly width: number;
+  readonly of: (cell: WindowCell) => string;
+}
+
+/** The speed that was found for an arrival, else the arrival. */
+function leadOf(cells: readonly WindowCell[], units: WindowUnits, found: boolean): Lead {
+  const { speed } = units;
+  const of = (cell: WindowCell): string =>
+    found && cell.speed_m_s !== null
+      ? rightAligned((cell.speed_m_s / speed.size).toFixed(speed.decimals), 5)
+      : arrivalText(cell, units);
+  const widths = cells.filter(isPossible).map((cell) => displayWidth(of(cell)));
+  return { head: found ? speed.symbol.padStart(5) : "ETA", width: Math.max(LEAD_WIDTH, ...widths), of };
+}
+
 /** `09:31    61.2!T`, or `x reserve` for a cell that cannot be done. */
 function cellText(
   cell: WindowCell | undefined,
   report: WindowReport,
   units: WindowUnits,
-  found: boolean,
+  lead: Lead,
 ): string {
   if (cell === undefined) return "";
   if (!isPossible(cell)) return `x ${reasonWord(cell.worst?.code ?? "gap")}`;
-  const { speed, store } = units;
-  const lead =
-    found && cell.speed_m_s !== null
-      ? rightAligned((cell.speed_m_s / speed.size).toFixed(speed.decimals), 5)
-      : arrivalText(cell, units);
+  const { store } = units;
   const left = leftInLastPlace((cell.remaining ?? 0) / store.size, store.decimals);
   const mark = cell.status === "caution" ? "!" : " ";
-  return `${leftAligned(lead, 8)}${rightAligned(placedText(left, store.decimals, STORE_WIDTH), STORE_WIDTH)}${mark}${letters(cell, report)}`;
+  return `${leftAligned(lead.of(cell), lead.width)}${rightAligned(placedText(left, store.decimals, STORE_WIDTH), STORE_WIDTH)}${mark}${letters(cell, report)}`;
 }
 
 interface Candidate {
@@ -95,8 +111,9 @@ function candidates(report: WindowReport, units: WindowUnits): Candidate[] {
     else own.push(cell);
   }
   return [...groups.values()].map((cells) => {
-    const texts = new Map(cells.map((cell) => [cell.departure, cellText(cell, report, units, found)]));
-    const columnHead = `${leftAligned(found ? units.speed.symbol.padStart(5) : "ETA", 8)}${rightAligned("Left", STORE_WIDTH)}`;
+    const lead = leadOf(cells, units, found);
+    const texts = new Map(cells.map((cell) => [cell.departure, cellText(cell, report, units, lead)]));
+    const columnHead = `${leftAligned(lead.head, lead.width)}${rightAligned("Left", STORE_WIDTH)}`;
     const widest = [...texts.values()].reduce((most, text) => Math.max(most, displayWidth(text)), 0);
     const whole = displayWidth(plainText(cells[0]?.route ?? ""));
     const width = Math.max(displayWidth(columnHead), widest, Math.min(whole, NAME_WIDTH));

@@ -50,6 +50,17 @@ describe("legwork window", () => {
     expect(out).toContain("6.0 kn");
   });
 
+  it("keeps its columns where arrivals to the second fall on the day after", () => {
+    const survey = join(folder, "demo", "survey-decide.plan.json");
+    const { out } = legwork.run(["window", survey, "--route", "Low, round the homestead"]);
+    const rows = out.split("\n").filter((line) => /^\d\d:\d\d {2}\d/.test(line));
+    expect(rows.some((row) => row.includes("+1 "))).toBe(true);
+    expect(rows.some((row) => !row.includes("+1"))).toBe(true);
+    const points = rows.map((row) => row.match(/\d\.\d/)?.index);
+    expect(new Set(points).size).toBe(1);
+    expect(out).toMatch(/^ETD {4}ETA +Left$/m);
+  });
+
   it("gives the figures of legwork estimate for the same departure", () => {
     const { out } = legwork.run(["window", islands, ...DAY, "--route", "Sound", "--format", "json"]);
     const window = JSON.parse(out);
