@@ -51,7 +51,7 @@ test("by keyboard the curve is walked in tenths and the speed under it set, as i
 });
 
 test("on a phone the curve is tapped", async () => {
-  const { page } = await visit({ width: 390, height: 844, touch: true });
+  const { page } = await visit({ width: 390, height: 844, touch: true, colours: "dark" });
   await openPart(page, "Pace");
   const curve = page.getByRole("slider", { name: /^Use by speed/ });
   await curve.waitFor();

@@ -92,7 +92,7 @@ test("by keyboard alone a what-if is added, changed and taken out", async () => 
 });
 
 test("on a phone what-ifs are cards with their consequences below, and the ledger says what they come to", async () => {
-  const { page } = await visit({ width: 360, height: 640, touch: true });
+  const { page } = await visit({ width: 360, height: 640, touch: true, colours: "dark" });
   await openPart(page, "How sure");
   await page.getByRole("button", { name: "current × 1.2" }).tap();
   await page.locator(".sure-view .what-if-table tbody tr").waitFor();

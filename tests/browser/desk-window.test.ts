@@ -104,7 +104,7 @@ test("an arrival to keep is set, told of every cell, refused in a sentence, and 
 });
 
 test("on a phone a tap looks at a departure, the button beside its figures sets it, and speeds are rows", async () => {
-  const { page } = await visit({ width: 390, height: 844, touch: true });
+  const { page } = await visit({ width: 390, height: 844, touch: true, colours: "dark" });
   await openDemo(page, "Ocean: when, and how sure", "ocean-decide");
   const pane = await openPart(page, "Departures");
   await page.getByRole("list", { name: "Best departures" }).waitFor({ timeout: 30_000 });

@@ -1,4 +1,4 @@
-import { effect } from "@preact/signals";
+import { computed, effect } from "@preact/signals";
 import * as L from "leaflet";
 import { latText, lonText } from "../format/position-text.ts";
 import { readPosition } from "../format/read-position.ts";
@@ -30,8 +30,7 @@ export class AlternateHandles {
     map.getContainer().append(this.hint);
   }
 
-  show(): void {
-    const alternates = this.page.store.plan.value.alternates ?? [];
+  show(alternates: readonly AlternateDocument[]): void {
     const places = alternates.map(positionOf);
     for (const [index, handle] of this.handles) {
       if (places[index] != null) continue;
@@ -111,7 +110,9 @@ export class AlternateHandles {
 /** Shows the plan's alternates on the chart until it is closed. */
 export function showAlternates(map: L.Map, page: PageState): () => void {
   const handles = new AlternateHandles(map, page);
-  const show = (): void => handles.show();
+  // A plan changes with every move of a waypoint; names are set apart only where alternates do.
+  const alternates = computed(() => page.store.plan.value.alternates ?? []);
+  const show = (): void => handles.show(alternates.value);
   const stop = effect(show);
   // Panning past half a turn brings another copy of the world into view, and a zoom other names side by side.
   map.on("moveend", show);

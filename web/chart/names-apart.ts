@@ -11,6 +11,7 @@ interface Box {
 /** Puts the names of alternates where they lie on no other name or handle, as far as there is such a place. */
 export function setNamesApart(chart: HTMLElement): void {
   const names = [...chart.querySelectorAll<HTMLElement>(".alternate-handle .handle-name")];
+  if (names.length === 0) return;
   const taken: Box[] = [".waypoint-handle", ".waypoint-handle .handle-name", ".alternate-handle svg"].flatMap(
     (selector) => [...chart.querySelectorAll(selector)].map((part) => part.getBoundingClientRect()),
   );
