@@ -45,7 +45,7 @@ export function makeSweep(
 
 /**
  * Every route × departure × speed, one by one in the order departure, route, speed: ask for as many as are wanted; they are worked
- * out 64 departures at a time. Each equals a lone estimate to the last bit.
+ * out 256 departures at a time. Each equals a lone estimate to the last bit.
  *
  * A speed takes the place of the pace's speed; a leg that names its own keeps it. Where the pace asks for an arrival and
  * the window names no speeds, each cell is at the cheapest speed that makes it.
@@ -69,7 +69,7 @@ export function windowCells(sweep: Sweep, window: DepartureWindow): Generator<Wi
 }
 
 /** Departures that are worked out together: enough to share what depends on the place alone, and few to wait for. */
-const TOGETHER = 64;
+const TOGETHER = 256;
 
 function* cells(sweep: Sweep, window: DepartureWindow): Generator<WindowCell, void, undefined> {
   const speeds = window.speeds_m_s ?? [null];

@@ -125,7 +125,7 @@ describe("a cell of a window", () => {
     );
   });
 
-  test("is worked out only when it, or one of the 64 departures with it, is asked for", () => {
+  test("is worked out only when it, or one of the 256 departures with it, is asked for", () => {
     const input = inputOf();
     let asked = 0;
     const counted: Craft = {
@@ -135,11 +135,11 @@ describe("a cell of a window", () => {
         return 500;
       },
     };
-    const cells = windowCells(sweepOf({ ...input, craft: counted }), { ...day, every_s: 900 });
+    const cells = windowCells(sweepOf({ ...input, craft: counted }), { ...day, every_s: 225 });
     expect(asked).toBe(0);
     cells.next();
     const once = asked;
-    for (let n = 1; n < 64 * routes.length; n += 1) cells.next();
+    for (let n = 1; n < 256 * routes.length; n += 1) cells.next();
     expect(asked).toBe(once);
     cells.next();
     expect(asked).toBeGreaterThan(once);
