@@ -14,7 +14,7 @@ import { signElement } from "./turn-sign.ts";
 const KEYS_ID = "alternate-keys";
 
 /** Handles on the plan's alternates, dragged as waypoints are: by mouse, touch and keyboard, a drag one step to undo. */
-export class AlternateHandles {
+class AlternateHandles {
   private readonly map: L.Map;
   private readonly page: PageState;
   private readonly group: L.LayerGroup;
