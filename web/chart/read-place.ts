@@ -19,13 +19,61 @@ const LONG_PRESS_MS = 500;
  * Reads the chart under the mouse, where a finger taps or presses long, or where the keyboard is: at a handle, or in the middle of
  * the chart.
  */
-export function followPlace(
-  map: L.Map,
-  { view, desk }: PageState,
-  place: Signal<ReadPlace | null>,
-): () => void {
+export function followPlace(map: L.Map, page: PageState, place: Signal<ReadPlace | null>): () => void {
+  const reading = new Reading(map, place);
+  const hand = new Hand(map, reading);
+  const stops = [
+    listen(map, {
+      pointerdown: (event: PointerEvent) => hand.press(event),
+      pointermove: (event: PointerEvent) => hand.move(event),
+      pointerup: () => hand.lift(),
+      pointercancel: () => hand.lift(),
+    }),
+    followKeys(map, reading, hand),
+  ];
+  map.on("mousemove", ({ latlng }) => {
+    // After a tap browsers tell of a mouse too.
+    if (!hand.isTouch) reading.put(latlng, "mouse");
+  });
+  map.on("mouseout", () => reading.leave("mouse"));
+  map.on("click", ({ latlng }) => {
+    if (hand.isTouch && !hand.wasLong && !page.view.adding.value && !page.desk.placing.value)
+      reading.tap(latlng);
+  });
+  return () => {
+    hand.lift();
+    for (const stop of stops) stop();
+  };
+}
+
+function followKeys(map: L.Map, reading: Reading, hand: Hand): () => void {
   const host = map.getContainer();
-  const tapped = L.circleMarker([0, 0], {
+  const read = (): void => {
+    const { activeElement: held } = document;
+    if (hand.isOn || !host.contains(held) || !held?.matches(":focus-visible")) return;
+    reading.put(held === host ? map.getCenter() : placeOf(map, held), "keyboard");
+    host.classList.toggle("read-middle", held === host);
+  };
+  map.on("moveend", read);
+  return listen(map, {
+    focusin: read,
+    // A key may have moved the handle.
+    keyup: () => {
+      hand.isOn = false;
+      read();
+    },
+    focusout: () => {
+      hand.isOn = false;
+      reading.leave("keyboard");
+    },
+  });
+}
+
+/** The place that is read, with a ring around where it was tapped. */
+class Reading {
+  private readonly map: L.Map;
+  private readonly place: Signal<ReadPlace | null>;
+  private readonly ring = L.circleMarker([0, 0], {
     radius: 7,
     color: "var(--ink)",
     weight: 2,
@@ -33,80 +81,89 @@ export function followPlace(
     fill: false,
     interactive: false,
   });
-  let isTouch = false;
-  /** Whether a hand is on the chart, which then has the keyboard by that alone. */
-  let isHand = false;
-  let pressed = { x: 0, y: 0, timer: 0, isLong: false };
-  const noteHand = ({ pointerType }: PointerEvent): void => {
-    isTouch = pointerType === "touch";
-  };
-  const press = (event: PointerEvent): void => {
-    noteHand(event);
-    isHand = true;
-    clearTimeout(pressed.timer);
-    const { clientX: x, clientY: y } = event;
-    const hold = (): void => {
-      pressed.isLong = true;
-      put(map.mouseEventToLatLng(event), "touch");
-    };
+
+  constructor(map: L.Map, place: Signal<ReadPlace | null>) {
+    this.map = map;
+    this.place = place;
+  }
+
+  put({ lat, lng }: L.LatLng, by: ReadPlace["by"]): void {
+    this.clear();
+    this.place.value = { lat, lon: lng, by };
+    if (by === "touch") this.ring.setLatLng([lat, lng]).addTo(this.map);
+  }
+
+  leave(by: ReadPlace["by"]): void {
+    if (this.place.peek()?.by !== by) return;
+    this.place.value = null;
+    this.clear();
+  }
+
+  /** A second tap on a place takes its reading away. */
+  tap(latlng: L.LatLng): void {
+    const isAgain = this.place.peek()?.by === "touch" && isNear(this.map, this.ring.getLatLng(), latlng);
+    if (isAgain) this.leave("touch");
+    else this.put(latlng, "touch");
+  }
+
+  private clear(): void {
+    this.ring.remove();
+    this.map.getContainer().classList.remove("read-middle");
+  }
+}
+
+/** What points at the chart: a finger held still for a while reads it where it is. */
+class Hand {
+  isTouch = false;
+  /** Whether a hand took hold of the chart, which then has the keyboard by that alone. */
+  isOn = false;
+  wasLong = false;
+  private readonly map: L.Map;
+  private readonly reading: Reading;
+  private x = 0;
+  private y = 0;
+  private timer = 0;
+
+  constructor(map: L.Map, reading: Reading) {
+    this.map = map;
+    this.reading = reading;
+  }
+
+  press(event: PointerEvent): void {
+    this.isTouch = event.pointerType === "touch";
+    this.isOn = true;
+    this.wasLong = false;
+    this.x = event.clientX;
+    this.y = event.clientY;
+    this.lift();
     // A second finger pinches.
-    const isAlone = isTouch && event.isPrimary;
-    pressed = { x, y, isLong: false, timer: isAlone ? window.setTimeout(hold, LONG_PRESS_MS) : 0 };
-  };
-  const move = (event: PointerEvent): void => {
-    noteHand(event);
-    if (Math.hypot(event.clientX - pressed.x, event.clientY - pressed.y) > STILL) lift();
-  };
-  const lift = (): void => clearTimeout(pressed.timer);
-  const put = ({ lat, lng }: L.LatLng, by: ReadPlace["by"]): void => {
-    place.value = { lat, lon: lng, by };
-    if (by === "touch") tapped.setLatLng([lat, lng]).addTo(map);
-    else tapped.remove();
-  };
-  const leave = (by: ReadPlace["by"]): void => {
-    if (place.peek()?.by !== by) return;
-    place.value = null;
-    tapped.remove();
-  };
-  map.on("mousemove", ({ latlng }) => {
-    // After a tap browsers tell of a mouse too.
-    if (!isTouch) put(latlng, "mouse");
-  });
-  map.on("mouseout", () => leave("mouse"));
-  map.on("click", ({ latlng }) => {
-    if (!isTouch || pressed.isLong || view.adding.value || desk.placing.value) return;
-    const again = place.peek()?.by === "touch" && isNear(map, tapped.getLatLng(), latlng);
-    if (again) leave("touch");
-    else put(latlng, "touch");
-  });
-  const readFocus = (): void => {
-    const { activeElement: held } = document;
-    if (isHand || !host.contains(held) || !held?.matches(":focus-visible")) return;
-    put(held === host ? map.getCenter() : placeOf(map, held), "keyboard");
-  };
-  const takeKeys = (): void => {
-    isHand = false;
-    readFocus();
-  };
-  const loseKeys = (): void => {
-    isHand = false;
-    leave("keyboard");
-  };
-  const followers = [
-    ["pointerdown", press],
-    ["pointermove", move],
-    ["pointerup", lift],
-    ["pointercancel", lift],
-    ["focusin", readFocus],
-    // A key may have moved the handle.
-    ["keyup", takeKeys],
-    ["focusout", loseKeys],
-  ] as const;
-  for (const [kind, follow] of followers) host.addEventListener(kind, follow as EventListener, true);
-  map.on("moveend", readFocus);
+    if (!this.isTouch || !event.isPrimary) return;
+    this.timer = window.setTimeout(() => {
+      this.wasLong = true;
+      this.reading.put(this.map.mouseEventToLatLng(event), "touch");
+    }, LONG_PRESS_MS);
+  }
+
+  move({ pointerType, clientX, clientY }: PointerEvent): void {
+    this.isTouch = pointerType === "touch";
+    if (Math.hypot(clientX - this.x, clientY - this.y) > STILL) this.lift();
+  }
+
+  lift(): void {
+    clearTimeout(this.timer);
+  }
+}
+
+/** Listens on the chart before what lies on it does. */
+function listen<Kind extends keyof HTMLElementEventMap>(
+  map: L.Map,
+  followers: { readonly [K in Kind]: (event: HTMLElementEventMap[K]) => void },
+): () => void {
+  const host = map.getContainer();
+  const entries = Object.entries(followers) as [string, EventListener][];
+  for (const [kind, follow] of entries) host.addEventListener(kind, follow, true);
   return () => {
-    lift();
-    for (const [kind, follow] of followers) host.removeEventListener(kind, follow as EventListener, true);
+    for (const [kind, follow] of entries) host.removeEventListener(kind, follow, true);
   };
 }
 
