@@ -14,7 +14,8 @@ import { showDecidedLater } from "./decided-later.ts";
 import { turnsToward } from "./longitude.ts";
 import { Marks } from "./marks.ts";
 import { rounded } from "./place-rounding.ts";
-import { followPlace, type ReadPlace } from "./read-place.ts";
+import type { ReadPlace } from "./read-place.ts";
+import { followPlaceLater } from "./read-place-later.ts";
 import { RouteLines, shiftFor } from "./route-lines.ts";
 import { drawnRoutes, handlesOf, legMiddles } from "./route-view.ts";
 import { WaypointHandles } from "./waypoint-handles.ts";
@@ -45,7 +46,7 @@ export function openChart(host: HTMLElement, page: PageState, readouts: ChartRea
   const { map } = chart;
   const fitted = firstView(map, page);
   const closers = [
-    followPlace(map, page, readouts.place),
+    followPlaceLater(map, page, readouts.place),
     measureScale(map, readouts.metresPerPx),
     showRoutes(map, page),
     showFields(map, page, readouts.shadingLimit),
@@ -54,8 +55,7 @@ export function openChart(host: HTMLElement, page: PageState, readouts: ChartRea
     followTheme(chart, page),
     showDecidedLater(map, page),
   ];
-  const resized = new ResizeObserver(() => map.invalidateSize({ pan: false }));
-  resized.observe(host);
+  const unsized = followSize(map, host);
 
   const fitRoutes = (): void => showAll(map, page);
   if (!fitted) closers.push(fitWhenFirstDrawn(page, fitRoutes));
@@ -68,10 +68,27 @@ export function openChart(host: HTMLElement, page: PageState, readouts: ChartRea
     },
     fitRoutes,
     close() {
-      resized.disconnect();
+      unsized();
       for (const close of closers) close();
       map.remove();
     },
+  };
+}
+
+/** How long a size has to last before the chart is drawn anew, ms. */
+const SIZE_LASTS_MS = 120;
+
+/** Redraws the chart once its size has come to rest: what opens beside it is shown first. */
+function followSize(map: L.Map, host: HTMLElement): () => void {
+  let timer: ReturnType<typeof setTimeout> | undefined;
+  const sizes = new ResizeObserver(() => {
+    clearTimeout(timer);
+    timer = setTimeout(() => map.invalidateSize({ pan: false }), SIZE_LASTS_MS);
+  });
+  sizes.observe(host);
+  return () => {
+    clearTimeout(timer);
+    sizes.disconnect();
   };
 }
 
