@@ -45,12 +45,19 @@ export function makeLanes(count: number): Lanes {
 /** Answer of a step that is not smooth enough. */
 export const NOT_SMOOTH = -1;
 
-/** Largest share of the slowness that the guess may miss at the nodes together. */
-const MOST_MISSED = 1e-3;
-/** Largest third Legendre coefficient and bend of the slowness, as shares of it: the rule's own error is then below 1e-12 or so. */
+/*
+ * What a step may miss, as shares of the slowness at its start. Of 300,000 random pairs of columns, with media up to nine tenths of the speed
+ * that turn about within the step, one step in 500 that passed was wrong by more than 1e-11 of itself, the worst by 3e-10; on grids of
+ * white noise at cells of 0.1° to 2.5° one in 800, the worst by 6e-11. Columns made on purpose can hide 2e-7 from all five. What a
+ * step was wrong by is in the bound of a full estimate, which solves it anew on nine nodes.
+ */
+/** Most that the guess may miss at the nodes together: Newton's step leaves about a hundredth of its square. */
+const MOST_MISSED = 5e-4;
+/** Largest third and fourth Legendre coefficient and bend: the rule's own error goes with the square of the fourth. */
 const MOST_TWIST = 1e-4;
+const MOST_FOURTH = 4e-6;
 const MOST_BEND = 5e-3;
-/** Largest product of that share with the growth over the step: Newton's step leaves less than a fifth of it, squared. */
+/** Largest product of what is missed with the growth over the step: Newton's step leaves less than a fifth of it, squared. */
 const MOST_COUPLED = 1e-5;
 
 type Row = readonly [number, number, number, number];
@@ -67,6 +74,10 @@ const [, , T3, T4] = NODE_X.map(
   (x, n) => (7 / 2) * (NODE_WEIGHTS[n] as number) * ((5 * x ** 3 - 3 * x) / 2),
 ) as unknown as Row;
 const PER_Z3 = 1 / Z3;
+/** 8/35 times the fourth divided difference of what is zero at the start: the fourth Legendre coefficient. */
+const [Q1, Q2, Q3, Q4] = NODE_X.map(
+  (x, n) => 8 / 35 / NODE_X.reduce((product, other, j) => (j === n ? product : product * (x - other)), 1 + x),
+) as unknown as Row;
 
 /**
  * Times of a step for the departures `first` to `last - 1` of the lanes; they stand in `lanes.time`.
@@ -216,9 +227,11 @@ function correct(
       const e4 = B41 * d1 + B42 * d2 + B43 * d3 + B44 * d4;
       const missed = Math.abs(m1) + Math.abs(m2) + Math.abs(m3) + Math.abs(m4);
       const twist = T4 * (m4 - m1) + T3 * (m3 - m2);
+      const fourth = Q1 * m1 + Q2 * m2 + Q3 * m3 + Q4 * m4;
       const smooth =
         missed <= MOST_MISSED * f0 &&
         Math.abs(twist) <= MOST_TWIST * f0 &&
+        Math.abs(fourth) <= MOST_FOURTH * f0 &&
         missed * Math.abs(e1) <= MOST_COUPLED * f0 &&
         Math.abs(s2) <= MOST_BEND * f0;
       const open = W1 * (m1 * exp(e1) + m4 * exp(e4)) + W2 * (m2 * exp(e2) + m3 * exp(e3));
@@ -236,14 +249,13 @@ function exp(x: number): number {
  * Distance from the step's start, m, that a lane has come to after `wanted` of the step's seconds, nearly: by Newton's method on the
  * guess, to which what it missed of the step's time is added as the cube of the way, since it misses most near the end.
  */
-export function guessDistance({ half, start, slope, bend, time }: Lanes, n: number, wanted: number): number {
-  const length = half[n] as number;
-  const f0 = start[n] as number;
-  const s1 = slope[n] as number;
-  const s2 = bend[n] as number;
-  const missed = (time[n] as number) / length - (2 * (f0 + s1) + (8 / 3) * s2);
-  const cube = s2 / 3 + missed / 8;
-  let z = (2 * wanted) / (time[n] as number);
+export function guessDistance(lanes: Lanes, n: number, wanted: number): number {
+  const length = lanes.half[n] as number;
+  const f0 = lanes.start[n] as number;
+  const s1 = lanes.slope[n] as number;
+  const s2 = lanes.bend[n] as number;
+  const cube = s2 / 3 + missedBy(lanes, n) / 8;
+  let z = (2 * wanted) / (lanes.time[n] as number);
   for (let step = 0; step < 3; step += 1) {
     const late = z * (f0 + z * (s1 / 2 + z * cube)) - wanted / length;
     z -= late / (f0 + z * (s1 + z * s2));
@@ -252,10 +264,17 @@ export function guessDistance({ half, start, slope, bend, time }: Lanes, n: numb
 }
 
 /** Slowness at the step's end, s/m, by the guess of a lane and what it missed as {@link guessDistance} has it. */
-export function endSlowness({ half, start, slope, bend, time }: Lanes, n: number): number {
-  const f0 = start[n] as number;
-  const s1 = slope[n] as number;
-  const s2 = bend[n] as number;
-  const missed = (time[n] as number) / (half[n] as number) - (2 * (f0 + s1) + (8 / 3) * s2);
-  return f0 + 2 * s1 + 4 * s2 + 1.5 * missed;
+export function endSlowness(lanes: Lanes, n: number): number {
+  return (
+    (lanes.start[n] as number) +
+    2 * (lanes.slope[n] as number) +
+    4 * (lanes.bend[n] as number) +
+    1.5 * missedBy(lanes, n)
+  );
+}
+
+/** By how much the guess of a lane missed its step's time, s in half a length: what is not known of the slowness is less. */
+export function missedBy({ half, start, slope, bend, time }: Lanes, n: number): number {
+  const guessed = 2 * ((start[n] as number) + (slope[n] as number)) + (8 / 3) * (bend[n] as number);
+  return (time[n] as number) / (half[n] as number) - guessed;
 }
