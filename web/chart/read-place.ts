@@ -18,10 +18,18 @@ const LONG_PRESS_MS = 500;
 /**
  * Reads the chart under the mouse, where a finger taps or presses long, or where the keyboard is: at a handle, or in the middle of
  * the chart.
+ *
+ * @param first what brought somebody to the chart
  */
-export function followPlace(map: L.Map, page: PageState, place: Signal<ReadPlace | null>): () => void {
+export function followPlace(
+  map: L.Map,
+  page: PageState,
+  place: Signal<ReadPlace | null>,
+  first: Event,
+): () => void {
   const reading = new Reading(map, place);
   const hand = new Hand(map, reading);
+  if (first instanceof PointerEvent) hand.begin(first);
   const stops = [
     listen(map, {
       pointerdown: (event: PointerEvent) => hand.press(event),
@@ -55,6 +63,7 @@ function followKeys(map: L.Map, reading: Reading, hand: Hand): () => void {
     host.classList.toggle("read-middle", held === host);
   };
   map.on("moveend", read);
+  read();
   return listen(map, {
     focusin: read,
     // A key may have moved the handle.
@@ -142,6 +151,12 @@ class Hand {
       this.wasLong = true;
       this.reading.put(this.map.mouseEventToLatLng(event), "touch");
     }, LONG_PRESS_MS);
+  }
+
+  /** The first that is heard of it; a tap that is over by then is taken for a long one. */
+  begin(event: PointerEvent): void {
+    if (event.pointerType === "touch") this.press(event);
+    else this.reading.put(this.map.mouseEventToLatLng(event), "mouse");
   }
 
   move({ pointerType, clientX, clientY }: PointerEvent): void {
