@@ -72,6 +72,22 @@ describe("the departures compared", () => {
     expect(page.shown.value).toBe(page.store.plan.value);
   });
 
+  test("are worked out anew for another file of the same name", async () => {
+    const page = await windowed();
+    const asked: PlanDocument[] = [];
+    const { beginWindow } = page.engine;
+    page.engine.beginWindow = (ticket, plan) => {
+      asked.push(plan);
+      return beginWindow(ticket, plan);
+    };
+    render(<WindowView page={page} />);
+    await screen.findByRole("list", { name: "Best departures" });
+    const once = asked.length;
+    const files = new Map([["islands-wind.csv", new Blob(["another"])]]);
+    page.store.edit("Replace islands-wind.csv", (plan) => ({ ...plan }), { files });
+    await waitFor(() => expect(asked.length).toBeGreaterThan(once));
+  });
+
   test("say in words what cannot be done and why", async () => {
     const page = await windowed();
     render(<WindowView page={page} />);

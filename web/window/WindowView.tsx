@@ -24,13 +24,15 @@ export function WindowView({ page }: { readonly page: PageState }) {
   const { estimate, landPending } = answers.answer.value;
   const part = estimable(plan);
   const window = plan.window ?? proposedWindow(plan, estimate);
+  // A name in the plan may come to stand for another file.
+  const files = store.files.value;
   const key = part === null || estimate === null ? "" : windowKey(part.plan, window, landPending);
 
   useLayoutEffect(() => {
     if (part !== null && key !== "") void fill.ask({ ...part.plan, window });
     return () => fill.stop();
     // The key says when any of the others is another.
-  }, [fill, key]);
+  }, [fill, key, files]);
   useEffect(
     () => () => {
       desk.preview.value = null;
