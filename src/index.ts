@@ -8,7 +8,7 @@ export type { Alternate } from "./choose/alternate.ts";
 export type { ArrivalWindow } from "./choose/arrival-window.ts";
 export { solveArrival } from "./choose/arrive.ts";
 export { estimateArriving } from "./choose/arriving-estimate.ts";
-export { CellTrials } from "./choose/cell-trials.ts";
+export { CellTrials, type TrialCounts } from "./choose/cell-trials.ts";
 export type { DecidedEstimate, DecidedRoute } from "./choose/decided.ts";
 export { type DepartureWindow, windowDepartures } from "./choose/departure-window.ts";
 // Deciding: how sure it is.

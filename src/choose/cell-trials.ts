@@ -2,15 +2,26 @@ import type { Conditions } from "../estimate/conditions.ts";
 import { estimateRoute } from "../estimate/estimate-route.ts";
 import { momentText } from "../estimate/finding-text.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
+import { unsureReserve } from "./confidence.ts";
 import { membersHeld } from "./ensemble.ts";
 import { errorSpread } from "./error-spread.ts";
 import type { Steps } from "./steps.ts";
-import type { Sure } from "./sure.ts";
+import type { DecidedBy, Sure } from "./sure.ts";
 import { type Trial, type Tried, trialsOf, tryOne } from "./trial.ts";
 import type { UncertaintyAsked } from "./uncertain-estimate.ts";
 import { decidingVariant, variantText } from "./what-if-results.ts";
 import type { Sweep } from "./window.ts";
-import { type CellFinding, paceAt, type WindowCell } from "./window-cell.ts";
+import { type CellFinding, paceAt, type WindowCell, worstFinding } from "./window-cell.ts";
+
+const BY_ERROR: DecidedBy = { member: null, whatIf: null, error: true };
+
+/** What cells are tried in. */
+export interface TrialCounts {
+  readonly members: number;
+  readonly whatIfs: number;
+  /** Probability with which the reserve has to hold under the stated error, 0..1; left out where none is asked for. */
+  readonly confidence?: number;
+}
 
 /** What is known of one cell so far. */
 interface Known {
@@ -18,12 +29,20 @@ interface Known {
   readonly base: Conditions;
   readonly tried: Map<Trial, Tried>;
   /** `undefined` while it is not worked out. */
-  reserveHolds?: number | null;
+  spread?: KnownSpread;
+}
+
+/** What the stated error comes to. */
+interface KnownSpread {
+  readonly reserveHolds: number | null;
+  /** Where the reserve holds with less than the probability asked for. */
+  readonly unsure: CellFinding | null;
 }
 
 /**
  * Puts cells of a sweep to the test with everything that a plan names: every member of an ensemble, every what-if and the
- * stated forecast error, each a true estimate at the cell's departure and at the speed at which it was estimated.
+ * stated forecast error, each a true estimate at the cell's departure and at the speed at which it was estimated. Where a confidence is
+ * asked for, a cell holds only if its reserve does with that probability.
  *
  * What is worked out for a cell is kept. Whether it holds is known at its first break, and what broke the last cell is tried
  * first, so that going down a ranking costs little more than one estimate a cell that is passed over, and one a member and what-if where
@@ -57,6 +76,8 @@ export class CellTrials {
   /** What broke the last cell first. */
   #trials: Trial[];
   readonly #inOrder: readonly Trial[];
+  /** Whether the last cell was broken by the stated error alone. */
+  #unsureFirst = false;
   readonly #known = new Map<string, Known>();
 
   constructor(sweep: Sweep, asked: UncertaintyAsked) {
@@ -71,28 +92,33 @@ export class CellTrials {
     return members.length + whatIfs.length + errors.length > 0;
   }
 
-  /** How many members and what-ifs there are. */
-  get counts(): { readonly members: number; readonly whatIfs: number } {
-    return { members: this.#asked.members.length, whatIfs: this.#asked.whatIfs.length };
+  /** How many members and what-ifs there are, and the confidence asked for. */
+  get counts(): TrialCounts {
+    const { members, whatIfs, confidence } = this.#asked;
+    const counts = { members: members.length, whatIfs: whatIfs.length };
+    return confidence === undefined ? counts : { ...counts, confidence };
   }
 
   /**
-   * Whether a cell can be done, and in every member and what-if too.
+   * Whether a cell can be done, and in every member and what-if too, and its reserve holds with the probability asked for.
    *
    * @param notAfter an arrival to keep in all of them, ms since 1970-01-01T00:00Z
    */
   *holds(cell: WindowCell, notAfter: number | null = null): Steps<boolean> {
     if (cell.status === "stop" || isLate(arrivalOf(cell), notAfter)) return false;
     const known = this.#knownOf(cell);
+    if (this.#unsureFirst && (yield* this.#isUnsure(known))) return false;
     for (const trial of this.#trials) {
       const isNew = !known.tried.has(trial);
       const { status, arrival } = this.#try(known, trial);
       if (isNew) yield;
       if (status !== "stop" && !isLate(arrival, notAfter)) continue;
       this.#trials = [trial, ...this.#trials.filter((other) => other !== trial)];
+      this.#unsureFirst = false;
       return false;
     }
-    return true;
+    this.#unsureFirst = yield* this.#isUnsure(known);
+    return !this.#unsureFirst;
   }
 
   /**
@@ -107,21 +133,25 @@ export class CellTrials {
       if (!known.tried.has(trial)) yield;
       tried.push(keptInTime(this.#try(known, trial), notAfter));
     }
-    if (known.reserveHolds === undefined) {
-      yield;
-      known.reserveHolds = this.#probability(known);
-    }
+    const spread = yield* this.#spread(known);
     const deciding = decidingVariant(cell.status, tried);
     const members = tried.flatMap(({ by, arrival, remaining, reserve }) =>
       by.member === null ? [] : [{ member: by.member, arrives: arrival !== null, remaining, reserve }],
     );
+    const status = deciding?.variant.status ?? cell.status;
+    const decided =
+      status !== "stop" && spread.unsure !== null
+        ? ({ status: "stop", decidedBy: BY_ERROR, worst: spread.unsure, asBad: 0 } as const)
+        : {
+            status,
+            decidedBy: deciding?.variant.by ?? { member: null, whatIf: null },
+            worst: deciding === null ? cell.worst : deciding.variant.worst,
+            asBad: deciding?.others ?? 0,
+          };
     return {
-      status: deciding?.variant.status ?? cell.status,
-      decidedBy: deciding?.variant.by ?? { member: null, whatIf: null },
-      worst: deciding === null ? cell.worst : deciding.variant.worst,
-      asBad: deciding?.others ?? 0,
+      ...decided,
       ensemble: members.length === 0 ? null : membersHeld(members),
-      reserveHolds: known.reserveHolds,
+      reserveHolds: spread.reserveHolds,
     };
   }
 
@@ -129,6 +159,7 @@ export class CellTrials {
   *stoppedBy(cell: WindowCell): Steps<CellFinding | null> {
     if (cell.status === "stop") return cell.worst;
     const { status, worst, decidedBy, asBad } = yield* this.sure(cell);
+    if (decidedBy.error === true) return worst;
     const trial = this.#inOrder.find(({ by }) => by === decidedBy);
     if (status !== "stop" || worst === null || trial === undefined) return null;
     const variant = { label: trial.label, status, remaining: null, worst };
@@ -162,11 +193,28 @@ export class CellTrials {
     return found;
   }
 
-  #probability({ route, base }: Known): number | null {
-    const { errors } = this.#asked;
+  /** Whether the reserve holds with less than the probability asked for. */
+  *#isUnsure(known: Known): Steps<boolean> {
+    return this.#asked.confidence !== undefined && (yield* this.#spread(known)).unsure !== null;
+  }
+
+  *#spread(known: Known): Steps<KnownSpread> {
+    if (known.spread === undefined) {
+      yield;
+      known.spread = this.#spreadOf(known);
+    }
+    return known.spread;
+  }
+
+  #spreadOf({ route, base }: Known): KnownSpread {
+    const { errors, confidence } = this.#asked;
+    if (errors.length === 0) return { reserveHolds: null, unsure: null };
     const prepared = this.#sweep.prepared[route] as PreparedRoute;
-    if (errors.length === 0) return null;
-    return errorSpread(prepared, base, estimateRoute(prepared, base), errors)?.spread.reserveHolds ?? null;
+    const run = estimateRoute(prepared, base);
+    const reserveHolds = errorSpread(prepared, base, run, errors)?.spread.reserveHolds ?? null;
+    if (confidence === undefined) return { reserveHolds, unsure: null };
+    const found = unsureReserve(run.estimate, base, reserveHolds, { confidence, errors });
+    return { reserveHolds, unsure: found && worstFinding([found]) };
   }
 }
 

@@ -27,6 +27,8 @@ export interface ErrorSpread {
   readonly margin: number;
   /** Probability that what is left is not below the reserve, with the margin taken as normally distributed; 0..1. */
   readonly reserveHolds: number;
+  /** The probability that the plan asks for, where it does. */
+  readonly confidence?: number;
   /**
    * Where an error of the forecast adds most to the spread of the arrival, and of the use, per time spent there; `null` where
    * there is no spread.
@@ -77,11 +79,8 @@ export function errorSpread(
   run: RouteRun,
   errors: readonly ForecastError[],
 ): SpreadAnswer | null {
-  const { craft, fields } = conditions;
-  const medium = mediumRole(craft);
-  const acting = errors.filter(
-    ({ role }) => fields.some((field) => field.role === role) && (role === medium || craft.windage !== null),
-  );
+  const medium = mediumRole(conditions.craft);
+  const acting = actingErrors(conditions, errors);
   const { estimate, profile } = run;
   if (estimate.arrival === null || acting.length === 0) return null;
   const cells = trackCells(prepared, conditions, profile, cellSize(estimate, acting));
@@ -92,6 +91,17 @@ export function errorSpread(
     spread: spreadOf(estimate, found, covariance, acting, conditions.reserve),
     profile: sensitivityProfile(found, covariance),
   };
+}
+
+/** The errors that act on the craft: of its medium, and of the wind where it has windage. */
+export function actingErrors(
+  { craft, fields }: Pick<Conditions, "craft" | "fields">,
+  errors: readonly ForecastError[],
+): ForecastError[] {
+  const medium = mediumRole(craft);
+  return errors.filter(
+    ({ role }) => fields.some((field) => field.role === role) && (role === medium || craft.windage !== null),
+  );
 }
 
 function cellSize({ totals }: RouteEstimate, errors: readonly ForecastError[]) {

@@ -1,4 +1,4 @@
-import type { CellTrials } from "./cell-trials.ts";
+import type { CellTrials, TrialCounts } from "./cell-trials.ts";
 import type { DepartureWindow } from "./departure-window.ts";
 import type { InTime } from "./in-time.ts";
 import type { MinuteCells } from "./minute-cells.ts";
@@ -20,10 +20,7 @@ export interface SureRoutes {
 }
 
 /** A window's bests put to the test with everything that the plan names. */
-export interface SureWindow extends SureRoutes {
-  /** How many members and what-ifs the bests were tried in. */
-  readonly members: number;
-  readonly whatIfs: number;
+export interface SureWindow extends SureRoutes, TrialCounts {
   /** To the minute; `null` where that was not asked. */
   readonly refined: SureRoutes | null;
   /** The latest departures that arrive in time; `null` where no arrival is to be kept. */
@@ -85,10 +82,8 @@ export function* sureWindow(
   const own: FoundBests[] = [];
   const routeCells = sweep.prepared.map(({ route: { name } }) => cells.filter(({ route }) => route === name));
   for (const each of routeCells) own.push(yield* foundBests(trials, each));
-  const { members, whatIfs } = trials.counts;
   return {
-    members,
-    whatIfs,
+    ...trials.counts,
     ...(yield* routesTested(sweep, trials, own, routeCells, cells)),
     refined: minutes && (yield* refinedRoutes(sweep, trials, window, minutes, own)),
     inTime: inTime && (yield* sureInTime(sweep, trials, inTime)),

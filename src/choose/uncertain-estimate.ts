@@ -1,9 +1,11 @@
 import type { Pace } from "../craft/craft.ts";
 import type { Conditions } from "../estimate/conditions.ts";
 import type { EstimateAnswer, EstimateInput } from "../estimate/estimate.ts";
+import { statusOf } from "../estimate/findings.ts";
 import { fieldsInUse, type PreparedRoute } from "../estimate/prepare.ts";
-import type { Profile, RouteEstimate } from "../estimate/result.ts";
+import type { Finding, Profile, RouteEstimate } from "../estimate/result.ts";
 import { arrivalSpeed } from "./arrival-answer.ts";
+import { unsureReserve } from "./confidence.ts";
 import type { DecidedEstimate, DecidedRoute } from "./decided.ts";
 import {
   type EnsembleMember,
@@ -17,7 +19,7 @@ import type { ForecastError } from "./forecast-error.ts";
 import type { SensitivityProfile } from "./sensitivity-profile.ts";
 import { speedRange } from "./speed-range.ts";
 import type { WhatIf } from "./what-if.ts";
-import { whatIfResults, whatIfVariants, withWorst } from "./what-if-results.ts";
+import { isOfVariant, whatIfResults, whatIfVariants, withWorst } from "./what-if-results.ts";
 
 /** What is asked about how sure an estimate is. */
 export interface UncertaintyAsked {
@@ -25,6 +27,8 @@ export interface UncertaintyAsked {
   readonly errors: readonly ForecastError[];
   /** Every member of an ensemble with all of the plan's fields, ascending; empty for none. */
   readonly members: readonly EnsembleMember[];
+  /** Probability, 0..1, with which the reserve has to hold under the stated errors; left out where none is asked for. */
+  readonly confidence?: number | undefined;
 }
 
 export interface UncertainAnswer extends EstimateAnswer {
@@ -36,7 +40,7 @@ export interface UncertainAnswer extends EstimateAnswer {
 /**
  * An estimate with what-ifs, the spread under the stated forecast error and every member of an ensemble worked out for each of
  * its routes, at the pace at which it was estimated. The worst what-if or member decides the status of a route that is better
- * itself.
+ * itself; so does a reserve that holds with less than the probability asked for.
  *
  * @param prepared by `prepareRoutes`, from the same input
  * @throws InputError for a what-if that the pace or the craft does not allow
@@ -67,7 +71,7 @@ export function withUncertainty(
   { estimate, profiles }: EstimateAnswer & { readonly estimate: DecidedEstimate },
   prepared: readonly PreparedRoute[],
   input: EstimateInput,
-  { whatIfs, errors, members }: UncertaintyAsked,
+  { whatIfs, errors, members, confidence }: UncertaintyAsked,
 ): UncertainAnswer {
   const conditions = estimate.routes.map((route, index) => conditionsOf(route, input, index));
   const results = whatIfResults(prepared, conditions, whatIfs);
@@ -80,19 +84,34 @@ export function withUncertainty(
   const routes = estimate.routes.map((route, index): DecidedRoute => {
     const own = runs[index] ?? [];
     const whatIf = results[index] ?? [];
+    const spread = spreads[index]?.spread ?? null;
+    const asked = confidence === undefined ? null : { confidence, errors };
     const told = {
       ...route,
-      ...(errors.length === 0 ? {} : { spread: spreads[index]?.spread ?? null }),
+      ...(errors.length === 0
+        ? {}
+        : { spread: spread && asked ? { ...spread, confidence: asked.confidence } : spread }),
       ...(own.length === 0 ? {} : { ensemble: ensembleResult(own) }),
       ...(whatIfs.length === 0 ? {} : { whatIf }),
     };
-    return withWorst(told, [...memberVariants(own), ...whatIfVariants(whatIf)]);
+    const decided = withWorst(told, [...memberVariants(own), ...whatIfVariants(whatIf)]);
+    const unsure =
+      asked && unsureReserve(route, conditions[index] as Conditions, spread?.reserveHolds ?? null, asked);
+    return unsure === null ? decided : withUnsure(decided, unsure);
   });
   return {
     estimate: { ...estimate, routes },
     profiles,
     sensitivities: spreads.map((spread) => spread?.profile ?? null),
   };
+}
+
+/** What is found under the stated error stands after what a member or what-if decides, and before the route's own. */
+function withUnsure(route: DecidedRoute, unsure: Finding): DecidedRoute {
+  const variants = route.findings.filter(isOfVariant);
+  const own = route.findings.filter((finding) => !isOfVariant(finding));
+  const findings = [...variants, unsure, ...own];
+  return { ...route, status: statusOf(findings), findings };
 }
 
 function memberRuns(

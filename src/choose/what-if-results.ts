@@ -98,9 +98,9 @@ export function withWorst<Route extends RouteEstimate>(route: Route, variants: r
   return { ...route, status: statusOf(findings), findings };
 }
 
-/** Whether a finding is one that {@link withWorst} added. */
-export function isOfVariant({ leg, message }: Finding): boolean {
-  return leg === null && /^(what if|member) /.test(message);
+/** Whether a finding is of a member, a what-if or the stated error, and not of the plain estimate. */
+export function isOfVariant({ code, leg, message }: Pick<Finding, "code" | "leg" | "message">): boolean {
+  return code === "reserve-unsure" || (leg === null && /^(what if|member) /.test(message));
 }
 
 function worstVariant(route: RouteEstimate, variants: readonly Variant[]): Finding | null {

@@ -41,6 +41,7 @@ const GRAVITY: readonly FindingCode[] = [
   "outside-power-table",
   "store-empty",
   "reserve-broken",
+  "reserve-unsure",
 ];
 
 /** The gravest of a route's findings, the first along the route of equals; `null` where there are notes at most. */

@@ -14,6 +14,7 @@ const SEVERITIES: Readonly<Record<FindingCode, Severity>> = {
   "outside-power-table": "stop",
   "store-empty": "stop",
   "reserve-broken": "stop",
+  "reserve-unsure": "stop",
   "wind-limit": "stop",
   "gust-limit": "stop",
   "arrival-missed": "stop",

@@ -19,6 +19,7 @@ export type FindingCode =
   | "outside-power-table"
   | "store-empty"
   | "reserve-broken"
+  | "reserve-unsure"
   | "wind-limit"
   | "gust-limit"
   | "arrival-missed"

@@ -88,9 +88,13 @@ function estimateChecked({ plan, input, members }: PlanChecked, turnBack = false
   const { alternates = [] } = plan;
   const isAsked = alternates.length > 0 || turnBack;
   const turned = isAsked ? withTurnBack(answer, prepared, input, alternates) : answer;
-  const { whatIfs = [], errors = [] } = plan;
+  const { whatIfs = [], errors = [], confidence } = plan;
   if (whatIfs.length + errors.length + members.length === 0) return { ...turned, plan, input };
-  return { ...withUncertainty(turned, prepared, input, { whatIfs, errors, members }), plan, input };
+  return {
+    ...withUncertainty(turned, prepared, input, { whatIfs, errors, members, confidence }),
+    plan,
+    input,
+  };
 }
 
 /** Estimates what is read: at the plan's pace, or at the speeds that make the arrival it asks for. */

@@ -13,6 +13,7 @@ import {
   oneOf,
   optional,
   POSITIVE,
+  POSITIVE_SHARE,
   quantity,
   readBy,
   sentence,
@@ -153,6 +154,14 @@ export const planSchema = objectOf(
         "reserve",
         NOT_NEGATIVE,
         "A share of the usable store, an amount in its kind, or a time at the final leg's rate under way.",
+      ),
+    ),
+    confidence: optional(
+      quantity(
+        ["share"],
+        "confidence",
+        POSITIVE_SHARE,
+        "Probability with which the reserve has to hold under the stated errors of the fields; below 100 %.",
       ),
     ),
     fields: optional(

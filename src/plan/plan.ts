@@ -34,6 +34,8 @@ export interface Plan {
   /** Departures to compare. */
   readonly window?: DepartureWindow;
   readonly reserve: Reserve | null;
+  /** Probability, above 0 and below 1, with which the reserve has to hold under the stated errors; left out where the plan names none. */
+  readonly confidence?: number;
   readonly fields: readonly FieldReference[];
   readonly routes: readonly Route[];
   /** Stated errors of the fields, one a role at most; left out where the plan names none. */

@@ -10,7 +10,7 @@ import type { FieldReference, OpenFile, Plan } from "./plan.ts";
 import { type PlanDocument, type PlanParts, planSchema } from "./plan-schema.ts";
 import { readAlternates } from "./read-alternates.ts";
 import { checkOrderedSpeed, readCraft, readCraftDocument } from "./read-craft.ts";
-import { readErrors } from "./read-errors.ts";
+import { readConfidence, readErrors } from "./read-errors.ts";
 import { readRoutes } from "./read-routes.ts";
 import { readWhatIfs } from "./read-what-ifs.ts";
 import { windowOf } from "./read-window.ts";
@@ -101,6 +101,9 @@ function planOf(parts: PlanParts, craft: Craft, fault: Fault): Plan {
     ...pace,
     ...(window === undefined ? {} : { window }),
     reserve: parts.reserve === undefined ? null : reserveOf(parts.reserve, craft, fault),
+    ...(parts.confidence === undefined
+      ? {}
+      : { confidence: readConfidence(parts.confidence, errors, fault) }),
     fields,
     routes: readRoutes(parts, craft, fault),
     ...(errors.length === 0 ? {} : { errors }),

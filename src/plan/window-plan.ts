@@ -85,8 +85,8 @@ function answerWindow(
   const isPaceOpen = minutes !== null && window.speeds_m_s !== null && plan.pace.hold === "through-speed";
   const hasRange = Number.isFinite(plan.craft.speeds?.max ?? plan.craft.power.max);
   const paces = isPaceOpen && hasRange ? routePaces(sweep, summary) : null;
-  const { whatIfs = [], errors = [] } = plan;
-  const asked = { whatIfs, errors, members };
+  const { whatIfs = [], errors = [], confidence } = plan;
+  const asked = { whatIfs, errors, members, confidence };
   const sure = CellTrials.has(asked)
     ? runSteps(sureWindow(sweep, new CellTrials(sweep, asked), { window, cells, minutes, inTime, paces }))
     : null;

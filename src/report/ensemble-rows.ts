@@ -3,9 +3,9 @@ import type { EnsembleFigures, EnsembleResult } from "../choose/ensemble.ts";
 import type { Quantiles } from "../choose/quantiles.ts";
 import { type Column, laidOut, TABLE_WIDTH } from "./columns.ts";
 import { placedText } from "./number-text.ts";
+import { percentText } from "./percent-text.ts";
 import { wrapped } from "./plain-text.ts";
 import { inLastPlace, leftInLastPlace } from "./rounding.ts";
-import { percentText } from "./spread-rows.ts";
 import { STORE_WIDTH, type TableUnits } from "./table-units.ts";
 import { clockSeconds, durationText, etaText } from "./time-text.ts";
 

@@ -4,6 +4,7 @@ import type { WeakPlace } from "../choose/sensitivity-profile.ts";
 import type { RouteEstimate } from "../estimate/result.ts";
 import { laidOut, TABLE_WIDTH } from "./columns.ts";
 import { placedText } from "./number-text.ts";
+import { askedText, percentText } from "./percent-text.ts";
 import { clipped, isolated, plainText, wrapped } from "./plain-text.ts";
 import { inLastPlace } from "./rounding.ts";
 import { amountText } from "./table-head.ts";
@@ -52,17 +53,14 @@ function legRows(route: RouteEstimate, spread: ErrorSpread, units: TableUnits): 
   return [...head, ...rows];
 }
 
-function chanceText(route: RouteEstimate, { reserveHolds, margin }: ErrorSpread, units: TableUnits): string {
+function chanceText(
+  route: RouteEstimate,
+  { reserveHolds, confidence, margin }: ErrorSpread,
+  units: TableUnits,
+): string {
   const what = route.reserve === 0 ? "The store lasts" : "The reserve holds";
-  return `${what} with a probability of ${percentText(reserveHolds)} (what is left above it ± ${amountText(margin, units)}, taken as normal).`;
-}
-
-/** `93 %`; never 0 % or 100 % unless it is. */
-export function percentText(share: number): string {
-  const percent = share * 100;
-  if (share > 0 && percent < 0.1) return "less than 0.1 %";
-  if (share < 1 && percent > 99.9) return "more than 99.9 %";
-  return `${percent.toFixed(share === 0 || share === 1 || (percent > 1 && percent < 99) ? 0 : 1)} %`;
+  const asked = confidence === undefined ? "" : `; the plan asks for ${askedText(confidence)}`;
+  return `${what} with a probability of ${percentText(reserveHolds)} (what is left above it ± ${amountText(margin, units)}, taken as normal)${asked}.`;
 }
 
 function weakText(route: RouteEstimate, { weakest }: ErrorSpread, units: TableUnits): string {

@@ -1,16 +1,26 @@
+import type { TrialCounts } from "../choose/cell-trials.ts";
 import type { Sure } from "../choose/sure.ts";
-import type { SureWindow } from "../choose/sure-window.ts";
 import type { FindingCode } from "../estimate/result.ts";
+import { askedText, percentText } from "./percent-text.ts";
 import { plainText } from "./plain-text.ts";
 
-/** What the bests were tried in: `all 7 members and 3 what-ifs`; `null` where the plan names neither. */
-export function triedText({ members, whatIfs }: Pick<SureWindow, "members" | "whatIfs">): string | null {
+/**
+ * What the bests were tried in, as a departure holds: `in all 7 members and 3 what-ifs, and with a probability of 90 % under the stated
+ * error`; `null` where the plan names nothing that decides.
+ */
+export function triedText({ members, whatIfs, confidence }: TrialCounts): string | null {
   const counts = [
     ...(members === 0 ? [] : [`${members} members`]),
     ...(whatIfs === 0 ? [] : [`${whatIfs} what-if${whatIfs === 1 ? "" : "s"}`]),
   ];
-  if (counts.length === 0) return null;
-  return members + whatIfs === 1 ? "the what-if" : `all ${counts.join(" and ")}`;
+  const all = members + whatIfs === 1 ? "in the what-if" : `in all ${counts.join(" and ")}`;
+  const parts = [
+    ...(counts.length === 0 ? [] : [all]),
+    ...(confidence === undefined
+      ? []
+      : [`with a probability of ${askedText(confidence)} under the stated error`]),
+  ];
+  return parts.length === 0 ? null : parts.join(", and ");
 }
 
 /** What becomes of a departure that does not hold, as `breaks its reserve`. */
@@ -28,9 +38,14 @@ const FATES: Partial<Record<FindingCode, string>> = {
 };
 
 /** `breaks its reserve in the what-if "Gale" (and 2 more)` */
-export function fateText({ worst, decidedBy, asBad }: Sure): string {
+export function fateText({ worst, decidedBy, asBad, reserveHolds }: Sure): string {
+  const { member, whatIf, error } = decidedBy;
+  if (error === true) {
+    const chance =
+      reserveHolds === null ? "an unknown probability" : `a probability of ${percentText(reserveHolds)}`;
+    return `keeps its reserve with ${chance} under the stated error`;
+  }
   const fate = FATES[worst?.code ?? "gap"] ?? "does not hold";
-  const { member, whatIf } = decidedBy;
   const where = member === null ? `the what-if "${plainText(whatIf ?? "")}"` : `member ${member}`;
   return `${fate} in ${where}${asBad === 0 ? "" : ` (and ${asBad} more)`}`;
 }

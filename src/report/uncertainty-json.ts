@@ -60,6 +60,7 @@ export function spreadJson(value: ErrorSpread): ErrorSpread {
     remaining: value.remaining,
     margin: value.margin,
     reserveHolds: value.reserveHolds,
+    ...(value.confidence === undefined ? {} : { confidence: value.confidence }),
     weakest: { time: placeJson(value.weakest.time), use: placeJson(value.weakest.use) },
     legs: value.legs.map(legJson),
   };

@@ -150,7 +150,7 @@ function noneText({ summary, sure }: WindowReport): string {
   const tried = sure === undefined || sure === null ? null : triedText(sure);
   return tried === null || summary.possible === 0
     ? "Nothing in the window can be done."
-    : `Nothing in the window holds in ${tried}.`;
+    : `Nothing in the window holds ${tried}.`;
 }
 
 function pacesText({ paces, sure }: WindowReport): string[] {
@@ -166,12 +166,12 @@ function pacesText({ paces, sure }: WindowReport): string[] {
     ...wrapped(any, TABLE_WIDTH),
     ...(held
       ? wrapped(
-          `Fastest held: the fastest that holds in ${tried}, at the route's departure of least use that does.`,
+          `Fastest held: the fastest that holds ${tried}, at the route's departure of least use that does.`,
           TABLE_WIDTH,
         )
       : []),
     ...none.flatMap((route) =>
-      wrapped(`${isolated(plainText(route))}: no speed holds in ${tried}.`, TABLE_WIDTH),
+      wrapped(`${isolated(plainText(route))}: no speed holds ${tried}.`, TABLE_WIDTH),
     ),
   ];
 }

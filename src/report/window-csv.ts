@@ -44,7 +44,8 @@ function sureColumns({ plain, sure }: BestPair): readonly CsvColumn[] {
 
 function decidedText(sure: Sure | undefined): string | null {
   if (sure === undefined) return null;
-  const { member, whatIf } = sure.decidedBy;
+  const { member, whatIf, error } = sure.decidedBy;
+  if (error === true) return "stated error";
   if (member !== null) return `member ${member}`;
   return whatIf === null ? "plain estimate" : `what if ${whatIf}`;
 }

@@ -28,7 +28,11 @@ function sure(value: Sure): Sure {
   const { decidedBy, ensemble } = value;
   return {
     status: value.status,
-    decidedBy: { member: decidedBy.member, whatIf: decidedBy.whatIf },
+    decidedBy: {
+      member: decidedBy.member,
+      whatIf: decidedBy.whatIf,
+      ...(decidedBy.error === undefined ? {} : { error: decidedBy.error }),
+    },
     worst: finding(value.worst),
     asBad: value.asBad,
     ensemble: ensemble && {
@@ -132,6 +136,10 @@ function paces({ route: name, departure, leastUse, fastest }: RoutePaces, tested
   };
 }
 
+function tried({ members, whatIfs, confidence }: SureWindow) {
+  return { members, whatIfs, ...(confidence === undefined ? {} : { confidence }) };
+}
+
 const iso = (time: number): string => new Date(time).toISOString();
 
 /**
@@ -166,7 +174,7 @@ export function writeWindowJson({ title, fields, craft, arrive, window, ...rest 
     storeUnit: craft.store.unit,
     usable: craft.store.usable,
     possible: rest.summary.possible,
-    ...(tested === null ? {} : { tried: { members: tested.members, whatIfs: tested.whatIfs } }),
+    ...(tested === null ? {} : { tried: tried(tested) }),
     ...bests(rest.summary.best, tested?.best),
     routes: rest.summary.routes.map((each) =>
       route(

@@ -6,8 +6,8 @@ import type { WindowCell } from "../choose/window-cell.ts";
 import type { RouteStatus } from "../estimate/result.ts";
 import { type Column, TABLE_WIDTH } from "./columns.ts";
 import { NO_FIGURE } from "./number-text.ts";
+import { percentText } from "./percent-text.ts";
 import { isolated, plainText, wrapped } from "./plain-text.ts";
-import { percentText } from "./spread-rows.ts";
 import { fateText, triedText } from "./sure-text.ts";
 import { instantText } from "./time-text.ts";
 import type { WindowUnits } from "./window-units.ts";
@@ -126,7 +126,7 @@ export function sureLegend(sure: SureWindow, cells: readonly WindowCell[]): stri
   const tried = triedText(sure);
   const statuses = cells.flatMap((cell) => ("sure" in cell ? [(cell as SureCell).sure.status] : []));
   const parts = [
-    tried === null ? [] : [`Bests of the departures that hold in ${tried}.`],
+    tried === null ? [] : [`Bests of the departures that hold ${tried}.`],
     column?.head[0] === "Holds"
       ? ["Holds: probability that the reserve does, under the stated forecast error."]
       : [],

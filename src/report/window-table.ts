@@ -65,7 +65,7 @@ function legend({ window, arrive, refined, sure }: WindowReport, units: WindowUn
   const held =
     tried === null
       ? "of these"
-      : `of these that hold in ${tried}; in brackets the plain estimate's, where they do not`;
+      : `of these that hold ${tried}; in brackets the plain estimate's, where they do not`;
   return wrapped(
     `ETD down; across ${lead}; left in ${units.store.symbol}. ! with cautions. x cannot be done, and why. T least time, ` +
       `U least use, L latest departure ${held}. All times UTC.${minute}`,

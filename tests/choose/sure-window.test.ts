@@ -207,8 +207,8 @@ describe("the sure bests of a window", () => {
 
   test("and the plain ones have the status, the cause and the shares that an estimate of their departure gives", () => {
     fc.assert(
-      fc.property(asks, (asked) => {
-        const whole = { ...asked, errors: [ERROR] };
+      fc.property(asks, fc.constantFrom(undefined, 0.9, 0.999), (asked, confidence) => {
+        const whole = { ...asked, errors: [ERROR], confidence };
         const { sure } = answerOf(whole);
         for (const best of sure.routes.flatMap(({ plain, sure: own }) => [plain, own])) {
           for (const by of ALL) {
@@ -225,9 +225,10 @@ describe("the sure bests of a window", () => {
             expect(cell.sure.reserveHolds).toBe(route?.spread?.reserveHolds ?? null);
             expect(cell.sure.ensemble?.reserveHolds).toBe(route?.ensemble?.reserveHolds);
             expect(cell.sure.ensemble?.breaksReserve).toEqual(route?.ensemble?.breaksReserve);
-            const { member, whatIf } = cell.sure.decidedBy;
+            const { member, whatIf, error } = cell.sure.decidedBy;
             const label = member !== null ? `member ${member}` : whatIf !== null ? `what if ${whatIf}` : null;
-            if (label === null) expect(cell.sure.status).toBe(cell.status);
+            if (error) expect(route?.findings[0]).toMatchObject(cell.sure.worst ?? {});
+            else if (label === null) expect(cell.sure.status).toBe(cell.status);
             else
               expect(route?.findings[0]?.message).toMatch(new RegExp(`^${label}( \\(and \\d+ more\\))?: `));
           }

@@ -181,6 +181,46 @@ describe("the stated error of a plan's fields", () => {
     expect(await faultOf({ fields: [CURRENT, { ...WIND, error }] })).toContain(message);
   });
 
+  test("and a confidence held against it, decide the status of a route that does not keep its reserve with it", async () => {
+    const fields = [{ ...CURRENT, error: { ...ERROR, speed: "0.2 m/s" } }, WIND];
+    const plain = await answer({ fields });
+    const [own] = plain.estimate.routes;
+    expect(plain.plan).not.toHaveProperty("confidence");
+    expect(own?.status).not.toBe("stop");
+    const far = (own?.spread?.margin as number) * 2;
+    const capacity = (own?.totals.use as number) + far;
+    const craft = { ...CRAFT, store: { capacity: `${capacity} J` } };
+    const sure = await answer({ fields, craft, reserve: "0 %", confidence: "97 %" });
+    expect(sure.plan.confidence).toBe(0.97);
+    // Two standard deviations above nothing: 97.7 %.
+    expect(sure.estimate.routes[0]?.spread?.reserveHolds).toBeCloseTo(0.97725, 5);
+    expect(sure.estimate.routes[0]?.status).not.toBe("stop");
+    const unsure = await answer({ fields, craft, reserve: "0 %", confidence: "98 %" });
+    expect(unsure.estimate.routes[0]).toMatchObject({
+      status: "stop",
+      findings: expect.arrayContaining([expect.objectContaining({ code: "reserve-unsure" })]),
+    });
+  });
+
+  test.each([
+    ["100 %", 'confidence: a confidence is below 100 %, since no forecast is sure; found "100 %"'],
+    ["101 %", 'confidence is at most 100 %; found "101 %"'],
+    ["0 %", 'confidence is above 0 %; found "0 %"'],
+    ["-5 %", "confidence is above 0 %; found"],
+    ["0.9", "confidence takes a number with the unit %"],
+    ["3 h", "confidence takes a number with the unit %"],
+    [0.9, "confidence takes a number with the unit %"],
+    [null, "confidence takes a number with the unit %"],
+  ])("held against it to %j is one sentence", async (confidence, message) => {
+    expect(await faultOf({ fields: [CURRENT, { ...WIND, error: ERROR }], confidence })).toContain(message);
+  });
+
+  test("is what a confidence needs", async () => {
+    expect(await faultOf({ confidence: "90 %" })).toBe(
+      'a.plan.json, confidence: a confidence is held against the error of a field, as { "speed": "1.5 m/s", "length": "150 km", "time": "6 h" }; found no field with one',
+    );
+  });
+
   test("is the same in all files of a role", async () => {
     const fields = [
       { ...CURRENT, error: ERROR },

@@ -8,8 +8,8 @@ import { type EstimateInput, estimatePrepared, prepareRoutes } from "../../src/e
 import { writeCsv } from "../../src/report/csv.ts";
 import type { ReportInput } from "../../src/report/input.ts";
 import { writeJson } from "../../src/report/json.ts";
+import { percentText } from "../../src/report/percent-text.ts";
 import { displayWidth } from "../../src/report/plain-text.ts";
-import { percentText } from "../../src/report/spread-rows.ts";
 import { writeTable } from "../../src/report/table.ts";
 import { craftOf, DEPARTURE, gridField, routeOf, spaced, waypoint } from "../estimate/fixtures.ts";
 import { readCsv } from "./rfc4180.ts";
@@ -90,6 +90,34 @@ describe("how sure an estimate is, in the table", () => {
     expect(lines[at + 3]).toMatch(/^\(as planned\)/);
     expect(lines[at + 5]).toMatch(/late .*– +– +– +– +STOP outside-time$/);
     expect(lines[at + 7]).toMatch(/^=cmd, with a name.*…/);
+  });
+});
+
+describe("a confidence that is not met", () => {
+  const asked = {
+    whatIfs: [],
+    errors: [{ role: "current", speed_m_s: 0.8, length_m: 60_000, time_s: 21_600 }],
+  } as const;
+  const unsure = withUncertainty(estimatePrepared(prepared, input), prepared, input, {
+    ...asked,
+    members: [],
+    confidence: 0.9995,
+  }).estimate;
+  const given: ReportInput = { ...report, estimate: unsure };
+
+  test("stands beside the probability found, and decides the status", () => {
+    const text = writeTable(given, "sea").replace(/\s+/g, " ");
+    expect(text).toMatch(/ taken as normal\); the plan asks for 99\.95 %\. A wrong forecast/);
+    expect(text).toMatch(
+      /STOP the reserve holds with a probability of \d+(\.\d)? % under the stated forecast error, and/,
+    );
+  });
+
+  test("is in JSON with the spread, and its finding in JSON and CSV", () => {
+    const [written] = JSON.parse(writeJson(unsure)).routes;
+    expect(written.spread.confidence).toBe(0.9995);
+    expect(written.findings[0].code).toBe("reserve-unsure");
+    expect(writeCsv(given)).toContain("reserve-unsure");
   });
 });
 

@@ -5,7 +5,7 @@ import { latestInTime } from "../../src/choose/in-time.ts";
 import { refinedBests, refineRoutes } from "../../src/choose/refine.ts";
 import { routePaces } from "../../src/choose/route-paces.ts";
 import { runSteps } from "../../src/choose/steps.ts";
-import { sureWindow } from "../../src/choose/sure-window.ts";
+import { type SureWindow, sureWindow } from "../../src/choose/sure-window.ts";
 import type { UncertaintyAsked } from "../../src/choose/uncertain-estimate.ts";
 import { makeSweep, windowCells } from "../../src/choose/window.ts";
 import type { WindowCell } from "../../src/choose/window-cell.ts";
@@ -344,6 +344,22 @@ describe("a window whose bests are put to the test", () => {
     expect(none.replace(/\s+/g, " ")).toMatch(
       / The quickest.*, 2027-05-0\d \d\d:\d\d UTC, runs out of store in the what-if "Frozen"/,
     );
+  });
+
+  test("with a confidence says what it is, and of the plain bests that do not hold with it that they do not", () => {
+    const errors = ASKED.errors.map((error) => ({ ...error, speed_m_s: 4 }));
+    const asked = reportOf(names, [3, 5], false, { members: [], whatIfs: [], errors, confidence: 0.9999 });
+    const own = asked.sure as SureWindow;
+    const passed = own.routes
+      .flatMap((each) => Object.values(each.plain))
+      .filter((cell) => cell?.sure?.decidedBy.error);
+    expect(passed.length).toBeGreaterThan(0);
+    const told = writeWindowTable(asked, "sea").replace(/\s+/g, " ");
+    expect(told).toContain("hold with a probability of 99.99 % under the stated error");
+    expect(told).toMatch(/, keeps its reserve with a probability of [\d.]+ % under the stated error/);
+    const json = JSON.parse(writeWindowJson(asked));
+    expect(json.tried).toEqual({ members: 0, whatIfs: 0, confidence: 0.9999 });
+    expect(JSON.stringify(json.routes)).toContain('"decidedBy":{"member":null,"whatIf":null,"error":true}');
   });
 
   test("with a stated error alone has the plain bests, and how probably their reserves hold", () => {

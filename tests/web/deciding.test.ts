@@ -15,6 +15,7 @@ import {
 import { createDecisions, wantsDecisions } from "../../web/state/decisions.ts";
 import { departingAt } from "../../web/state/departing-at.ts";
 import type { PlanDocument } from "../../web/state/plan-document.ts";
+import { setPlanText } from "../../web/state/plan-edits.ts";
 import { createDeciding } from "../../web/worker/deciding.ts";
 import { createPlanReader } from "../../web/worker/plan-reader.ts";
 import { sourcesOf } from "../../web/worker/shared-shelves.ts";
@@ -154,6 +155,13 @@ describe("edits of what is decided", () => {
       "wind",
     ]);
     expect(setError(stated, "wind", null)).toEqual(plan);
+    // Nothing is left that a confidence could be held against.
+    const sure = setPlanText(stated, "confidence", "90 %");
+    expect(sure.confidence).toBe("90 %");
+    expect(setError(sure, "wind", null)).toEqual(plan);
+    const both = setError(sure, "current", { speed: "1 m/s", length: "1 km", time: "1 h" });
+    expect(setError(both, "wind", null).confidence).toBe("90 %");
+    expect(setPlanText(sure, "confidence", " ")).toEqual(stated);
   });
 
   test("set a departure alone, or with a speed under the pace's own rule", () => {

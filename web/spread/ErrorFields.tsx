@@ -1,6 +1,7 @@
 import { setError } from "../state/decide-edits.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { ErrorDocument, FieldDocument } from "../state/plan-document.ts";
+import { setPlanText } from "../state/plan-edits.ts";
 import { TextField } from "../waypoints/TextField.tsx";
 
 /** Something to begin from; every figure is the user's to set. */
@@ -15,11 +16,12 @@ const KEYS: readonly (readonly [keyof ErrorDocument, string])[] = [
   ["time", "and over"],
 ];
 
-/** How wrong each field may be, as the plan states it. */
+/** How wrong each field may be, as the plan states it, and the probability with which the reserve has to hold then. */
 export function ErrorFields({ page: { store } }: { readonly page: PageState }) {
-  const { fields = [] } = store.plan.value;
+  const { fields = [], confidence } = store.plan.value;
+  const isStated = fields.some(({ error }) => error !== undefined);
   const roles = [...new Set(fields.map(({ role }) => role))];
-  if (roles.length === 0) return null;
+  if (roles.length === 0 && confidence === undefined) return null;
   return (
     <section class="error-fields" aria-label="Forecast error">
       <h3>Forecast error</h3>
@@ -61,6 +63,21 @@ export function ErrorFields({ page: { store } }: { readonly page: PageState }) {
           </div>
         );
       })}
+      {(isStated || confidence !== undefined) && (
+        <div class="window-bar">
+          <div class="plan-item short">
+            <span>Reserve holds with</span>
+            <TextField
+              label="Probability with which the reserve has to hold"
+              value={confidence ?? ""}
+              placeholder="not asked"
+              onText={(text) =>
+                store.edit("Change confidence", (plan) => setPlanText(plan, "confidence", text))
+              }
+            />
+          </div>
+        </div>
+      )}
     </section>
   );
 }

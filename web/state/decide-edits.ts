@@ -75,21 +75,20 @@ export function deleteWhatIf(plan: PlanDocument, index: number): PlanDocument {
   return withWhatIfs(plan, without(plan.whatIf, index));
 }
 
-/** States how wrong all files of a role may be; `null` takes the statement away. */
+/** States how wrong all files of a role may be; `null` takes the statement away, and with the last one the confidence held against them. */
 export function setError(
   plan: PlanDocument,
   role: FieldDocument["role"],
   error: ErrorDocument | null,
 ): PlanDocument {
-  const { fields = [] } = plan;
-  return {
-    ...plan,
-    fields: fields.map((field) => {
-      if (field.role !== role) return field;
-      const { error: _old, ...rest } = field;
-      return error === null ? rest : { ...rest, error };
-    }),
-  };
+  const fields = (plan.fields ?? []).map((field): FieldDocument => {
+    if (field.role !== role) return field;
+    const { error: _old, ...rest } = field;
+    return error === null ? rest : { ...rest, error };
+  });
+  const { confidence: _confidence, ...rest } = plan;
+  const isStated = fields.some((field) => field.error !== undefined);
+  return { ...(isStated ? plan : rest), fields };
 }
 
 function changed<T>(list: readonly T[] | undefined, index: number, change: Partial<T>): readonly T[] {

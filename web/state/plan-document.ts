@@ -89,6 +89,7 @@ export interface PlanDocument {
   readonly pace?: PaceDocument | ArrivalDocument;
   readonly window?: WindowDocument;
   readonly reserve?: string;
+  readonly confidence?: string;
   readonly fields?: readonly FieldDocument[];
   readonly routes: readonly RouteDocument[];
   readonly alternates?: readonly AlternateDocument[];

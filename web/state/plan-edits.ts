@@ -3,7 +3,11 @@ import type { CraftDocument, FieldDocument, PaceDocument, PlanDocument } from ".
 /* Edits of the plan as a whole. Each takes a plan and returns another; none changes what it was given. */
 
 /** Sets a text of the plan; an empty text takes the key away. */
-export function setPlanText(plan: PlanDocument, key: "title" | "reserve", text: string): PlanDocument {
+export function setPlanText(
+  plan: PlanDocument,
+  key: "title" | "reserve" | "confidence",
+  text: string,
+): PlanDocument {
   const { [key]: _old, ...rest } = plan;
   return text.trim() === "" ? rest : { ...rest, [key]: text };
 }

@@ -94,7 +94,7 @@ function BestItem({ page, filled, told: { letter, name, isPassed, cell } }: Best
     return (
       <li>
         <p>
-          <strong>{name}</strong> none{tried === null ? "" : ` holds in ${tried}`}
+          <strong>{name}</strong> none{tried === null ? "" : ` holds ${tried}`}
         </p>
       </li>
     );

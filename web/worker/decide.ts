@@ -16,9 +16,9 @@ export function decide(
   answer: EstimateAnswer,
   turnBack: boolean,
 ): DecidedAnswer {
-  const { alternates = [], whatIfs = [], errors = [] } = plan;
+  const { alternates = [], whatIfs = [], errors = [], confidence } = plan;
   const turned =
     alternates.length > 0 || turnBack ? withTurnBack(answer, prepared, input, alternates) : answer;
   if (whatIfs.length + errors.length + members.length === 0) return { ...turned, sensitivities: [] };
-  return withUncertainty(turned, prepared, input, { whatIfs, errors, members });
+  return withUncertainty(turned, prepared, input, { whatIfs, errors, members, confidence });
 }

@@ -73,8 +73,8 @@ export function createDeciding(reader: PlanReader): Deciding {
         const sweep = makeSweep(prepared, input, plan.arrive ?? null);
         const departures = windowDepartures(plan.window);
         const { speeds_m_s } = plan.window;
-        const { whatIfs = [], errors = [] } = plan;
-        const asked = { whatIfs, errors, members };
+        const { whatIfs = [], errors = [], confidence } = plan;
+        const asked = { whatIfs, errors, members, confidence };
         const trials = new CellTrials(sweep, asked);
         const speeds = speeds_m_s ?? [null];
         open = { ticket, sweep, window: plan.window, departures, speeds, trials, minutes: null, sure: null };

@@ -1,0 +1,44 @@
+import type { Conditions } from "../estimate/conditions.ts";
+import { routeFinding } from "../estimate/findings.ts";
+import type { Finding, RouteEstimate } from "../estimate/result.ts";
+import { actingErrors } from "./error-spread.ts";
+import type { ForecastError } from "./forecast-error.ts";
+
+/** The probability with which a reserve has to hold, and the errors under which it is found. */
+export interface ConfidenceAsked {
+  /** Above 0 and below 1. */
+  readonly confidence: number;
+  readonly errors: readonly ForecastError[];
+}
+
+/**
+ * What is found where a route's reserve holds with less than the probability asked for; `null` where it holds with that, where no error acts
+ * on the craft, and where the route itself ends short or breaks its reserve, which says more.
+ *
+ * @param reserveHolds probability under the stated errors; `null` where it could not be worked out, which is as bad as too little
+ */
+export function unsureReserve(
+  { arrival, findings }: Pick<RouteEstimate, "arrival" | "findings">,
+  conditions: Pick<Conditions, "craft" | "fields">,
+  reserveHolds: number | null,
+  { confidence, errors }: ConfidenceAsked,
+): Finding | null {
+  const isBroken = findings.some(({ code }) => code === "reserve-broken" || code === "store-empty");
+  if (arrival === null || isBroken || actingErrors(conditions, errors).length === 0) return null;
+  const asked = `the plan asks for ${Number((100 * confidence).toPrecision(12))} %`;
+  if (reserveHolds === null)
+    return routeFinding(
+      "reserve-unsure",
+      `along the edge of its field or of what its pace can hold, the probability that the reserve holds is not known, and ${asked}`,
+    );
+  if (reserveHolds >= confidence) return null;
+  return routeFinding(
+    "reserve-unsure",
+    `the reserve holds with a probability of ${flooredText(reserveHolds)} under the stated forecast error, and ${asked}`,
+  );
+}
+
+/** Rounded down, so that what is too little is not told as enough. */
+function flooredText(share: number): string {
+  return share < 0.001 ? "less than 0.1 %" : `${Math.floor(1000 * share) / 10} %`;
+}
