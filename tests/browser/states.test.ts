@@ -13,7 +13,13 @@ const COLOURS = ["light", "dark"] as const;
 const PANES = ["Chart", "Ribbons", "Ledger", "Plan", "Legs", "Decide"] as const;
 /** Colours are the page's own, so that the dark ones need no look at every pane. */
 const SOME_PANES = ["Chart", "Ledger", "Decide"] as const;
-const DESK = ["Departures"] as const;
+/** Questions of the desk, and what is there once each is answered. */
+const DESK = [
+  ["Departures", (page: Page) => page.getByRole("list", { name: "Best departures" })],
+  ["Pace", (page: Page) => page.getByRole("slider", { name: /^Use by speed/ })],
+  ["Turning back", (page: Page) => page.locator(".turn-back-lines").first()],
+  ["How sure", (page: Page) => page.getByRole("region", { name: "What-ifs" })],
+] as const;
 
 /** Keeps a picture of the page as it is and holds it against WCAG 2.2 AA. */
 async function look(page: Page, name: string): Promise<void> {
@@ -77,9 +83,9 @@ describe.each(COLOURS)("in %s colours", (colours) => {
     await page.getByRole("radio", { name: "Profile" }).check();
     await look(page, `wide-${colours}-profile`);
     const desk = page.getByRole("navigation", { name: "On the desk" }).first();
-    for (const part of DESK) {
+    for (const [part, answer] of DESK) {
       await desk.getByRole("button", { name: part }).click();
-      if (part === "Departures") await page.getByRole("list", { name: "Best departures" }).waitFor();
+      await answer(page).waitFor();
       await look(page, `wide-${colours}-${part.toLowerCase().replace(" ", "-")}`);
     }
     await desk.getByRole("button", { name: "Legs" }).click();
