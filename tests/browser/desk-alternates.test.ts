@@ -3,7 +3,7 @@ import { expect, test } from "vitest";
 import { expectAccessible } from "./audit.ts";
 import { openPart, showPane } from "./desk-parts.ts";
 import { boxOf, touchDragBy } from "./gestures.ts";
-import { said, visit } from "./visit.ts";
+import { openDemo, said, visit } from "./visit.ts";
 
 test("an alternate is set on the chart, renamed, dragged and taken out, and points of no return follow", async () => {
   const { page } = await visit();
@@ -86,6 +86,26 @@ test("on a phone an alternate is set by a tap and dragged by a finger", async ()
   const placed = await handles(page);
   await touchDragBy(page, page.locator(".alternate-handle"), -40, 30);
   await expect.poll(() => handles(page)).not.toEqual(placed);
+});
+
+test("names of alternates lie on no other name of the chart", async () => {
+  const { page } = await visit();
+  await openDemo(page, "Workboat: when, and how sure", "islands-decide");
+  await page.locator(".alternate-handle").nth(1).waitFor();
+  const boxes = await page.locator("#chart .handle-name").evaluateAll((names) =>
+    names.map((name) => {
+      const { left, right, top, bottom } = name.getBoundingClientRect();
+      return { name: name.textContent, left, right, top, bottom };
+    }),
+  );
+  expect(boxes.length).toBe(6);
+  const overlapping = boxes.flatMap((a, at) =>
+    boxes
+      .slice(at + 1)
+      .filter((b) => a.left < b.right && b.left < a.right && a.top < b.bottom && b.top < a.bottom)
+      .map((b) => `${a.name} and ${b.name}`),
+  );
+  expect(overlapping).toEqual([]);
 });
 
 test("a place that turning back names is shown on the chart when its line is chosen", async () => {

@@ -114,6 +114,11 @@ test("on a phone a tap looks at a departure, the button beside its figures sets 
   const told = pane.locator(".heat-told");
   expect(await told.textContent()).toMatch(/4 Nov 00:00 UTC, Down the stream at 12\.5 kn/);
   await expectAccessible(page, "looking at a departure on a phone");
+  // A second tap looks away, a third looks again.
+  const cell = { x: grid.x + grid.width * (4.5 / 9), y: grid.y + grid.height * (4.5 / 6) };
+  await page.touchscreen.tap(cell.x, cell.y);
+  await told.waitFor({ state: "detached" });
+  await page.touchscreen.tap(cell.x, cell.y);
   await told.getByRole("button", { name: "Set this departure" }).tap();
   await page.getByRole("navigation", { name: "Panes" }).getByRole("button", { name: "Plan" }).tap();
   expect(

@@ -23,6 +23,7 @@ export function HeatFocus(props: HeatFocusProps) {
   const grid = useRef<HTMLTableElement>(null);
   // What a finger looks at stays while it goes on to the button that sets it.
   const isTouched = useRef(false);
+  const lookedAt = useRef<HeatPlace | null>(null);
   const columns = departures.length;
   const placeAt = ({ clientX, clientY }: MouseEvent): HeatPlace | null => {
     const box = grid.current?.getBoundingClientRect();
@@ -60,10 +61,11 @@ export function HeatFocus(props: HeatFocusProps) {
       aria-activedescendant="heat-cell"
       onPointerDown={({ pointerType }) => {
         isTouched.current = pointerType === "touch";
+        lookedAt.current = active;
       }}
       onPointerMove={(event) => {
         const place = placeAt(event);
-        if (place?.row !== active?.row || place?.column !== active?.column) onLook(place);
+        if (!isSame(place, active)) onLook(place);
       }}
       onPointerLeave={({ pointerType }) => {
         if (pointerType !== "touch") onLook(null);
@@ -71,9 +73,9 @@ export function HeatFocus(props: HeatFocusProps) {
       onClick={(event) => {
         const place = placeAt(event);
         if (place === null) return;
-        // A finger looks first; the button beside the figures sets what is looked at.
-        if (isTouch(event)) onLook(place);
-        else onChoose(place);
+        // A finger looks first, and at the same cell no more; the button beside the figures sets what is looked at.
+        if (!isTouch(event)) onChoose(place);
+        else onLook(isSame(place, lookedAt.current) ? null : place);
       }}
       onFocus={onFocus}
       onBlur={() => {
@@ -92,6 +94,10 @@ export function HeatFocus(props: HeatFocusProps) {
       </tbody>
     </table>
   );
+}
+
+function isSame(a: HeatPlace | null, b: HeatPlace | null): boolean {
+  return a?.row === b?.row && a?.column === b?.column;
 }
 
 function isTouch(event: MouseEvent): boolean {
