@@ -3,24 +3,15 @@ import type { PanelCells } from "./panels.ts";
 import type { PreparedLeg } from "./prepare.ts";
 import { makeSliceClock, type SliceClock, turnClock } from "./slice-clock.ts";
 import { NO_PAIR, PAIR, SmoothColumns } from "./smooth-columns.ts";
-import {
-  endSlowness,
-  guessDistance,
-  type Lanes,
-  makeLanes,
-  missedBy,
-  NOT_SMOOTH,
-  smoothTimes,
-} from "./smooth-step.ts";
+import { guessDistance, type Lanes, makeLanes, NOT_SMOOTH, smoothTimes } from "./smooth-step.ts";
 
 /** A valid time was passed when it is further behind than this, and met where it is no further ahead, s. */
 const PASSING_S = 1e-9;
 /**
- * A cut is so near to its valid time, as a share of the step's time, that the last correction of its place goes unchecked: it leaves
- * the square of the share open, and the share times what is not known of the slowness there, which is held to a share too.
+ * A cut is so near to its valid time, as a share of the step's time, that the last correction of its place goes unchecked: what it
+ * leaves open is of the order of the share's square.
  */
 const MEETING = 3e-6;
-const MEETING_BLINDLY = 1e-11;
 const MOST_HALVINGS = 10;
 const MOST_CUTS = 8;
 /** Share of the speed held beyond which no medium is smooth: near it the ground speed ends. */
@@ -271,10 +262,8 @@ export class SmoothFleet {
     }
     if (time === NOT_SMOOTH) return this.#sink(n);
     const late = time - wanted;
-    const slowness = endSlowness(lanes, lane);
-    const at = (to[j] as number) - late / slowness;
-    const known = Math.abs(late * missedBy(lanes, lane)) <= MEETING_BLINDLY * time * slowness;
-    if (Math.abs(late) > PASSING_S && !(known && Math.abs(late) <= MEETING * time))
+    const at = (to[j] as number) - late / (lanes.end[lane] as number);
+    if (Math.abs(late) > Math.max(MEETING * time, PASSING_S))
       return this.#again(j, n, MOST_CUTS) && this.#aimAtTime(j, n, at);
     if (at > (place[j] as number)) to[j] = Math.min(at, limit[j] as number);
     this.met[n] = until;

@@ -27,6 +27,8 @@ export interface Lanes {
   readonly bend: Float64Array;
   /** The answer, s; {@link NOT_SMOOTH} where the step's error could be above 1e-11 of it. */
   readonly time: Float64Array;
+  /** Slowness at the step's end, s/m. */
+  readonly end: Float64Array;
 }
 
 export function makeLanes(count: number): Lanes {
@@ -39,6 +41,7 @@ export function makeLanes(count: number): Lanes {
     slope: each(),
     bend: each(),
     time: each(),
+    end: each(),
   };
 }
 
@@ -77,6 +80,14 @@ const PER_Z3 = 1 / Z3;
 /** 8/35 times the fourth divided difference of what is zero at the start: the fourth Legendre coefficient. */
 const [Q1, Q2, Q3, Q4] = NODE_X.map(
   (x, n) => 8 / 35 / NODE_X.reduce((product, other, j) => (j === n ? product : product * (x - other)), 1 + x),
+) as unknown as Row;
+
+/** What is zero at the start and known at the nodes, at the step's end: the quartic through all five. */
+const [N1, N2, N3, N4] = NODE_X.map((x, n) =>
+  NODE_X.reduce(
+    (product, other, j) => (j === n ? product : (product * (1 - other)) / (x - other)),
+    2 / (1 + x),
+  ),
 ) as unknown as Row;
 
 /**
@@ -156,7 +167,7 @@ function correct(
   at: number,
   stride: number,
   speed: number,
-  { half, share, perSecond, start, slope, bend, time }: Lanes,
+  { half, share, perSecond, start, slope, bend, time, end: ends }: Lanes,
   first: number,
   last: number,
 ): void {
@@ -235,6 +246,7 @@ function correct(
         missed * Math.abs(e1) <= MOST_COUPLED * f0 &&
         Math.abs(s2) <= MOST_BEND * f0;
       const open = W1 * (m1 * exp(e1) + m4 * exp(e4)) + W2 * (m2 * exp(e2) + m3 * exp(e3));
+      ends[n] = f0 + 2 * (s1 + 2 * s2) + (N1 * m1 + N2 * m2 + N3 * m3 + N4 * m4) + d4 * open;
       time[n] = smooth ? length * (2 * (f0 + s1) + (8 / 3) * s2 + open) : NOT_SMOOTH;
     }
   }
@@ -254,27 +266,12 @@ export function guessDistance(lanes: Lanes, n: number, wanted: number): number {
   const f0 = lanes.start[n] as number;
   const s1 = lanes.slope[n] as number;
   const s2 = lanes.bend[n] as number;
-  const cube = s2 / 3 + missedBy(lanes, n) / 8;
+  const missed = (lanes.time[n] as number) / length - (2 * (f0 + s1) + (8 / 3) * s2);
+  const cube = s2 / 3 + missed / 8;
   let z = (2 * wanted) / (lanes.time[n] as number);
   for (let step = 0; step < 3; step += 1) {
     const late = z * (f0 + z * (s1 / 2 + z * cube)) - wanted / length;
     z -= late / (f0 + z * (s1 + z * s2));
   }
   return length * z;
-}
-
-/** Slowness at the step's end, s/m, by the guess of a lane and what it missed as {@link guessDistance} has it. */
-export function endSlowness(lanes: Lanes, n: number): number {
-  return (
-    (lanes.start[n] as number) +
-    2 * (lanes.slope[n] as number) +
-    4 * (lanes.bend[n] as number) +
-    1.5 * missedBy(lanes, n)
-  );
-}
-
-/** By how much the guess of a lane missed its step's time, s in half a length: what is not known of the slowness is less. */
-export function missedBy({ half, start, slope, bend, time }: Lanes, n: number): number {
-  const guessed = 2 * ((start[n] as number) + (slope[n] as number)) + (8 / 3) * (bend[n] as number);
-  return (time[n] as number) / (half[n] as number) - guessed;
 }
