@@ -1,7 +1,7 @@
 import type { TrialCounts } from "../choose/cell-trials.ts";
 import type { Sure } from "../choose/sure.ts";
 import type { FindingCode } from "../estimate/result.ts";
-import { askedText, percentText } from "./percent-text.ts";
+import { askedText } from "./percent-text.ts";
 import { plainText } from "./plain-text.ts";
 
 /**
@@ -38,13 +38,9 @@ const FATES: Partial<Record<FindingCode, string>> = {
 };
 
 /** `breaks its reserve in the what-if "Gale" (and 2 more)` */
-export function fateText({ worst, decidedBy, asBad, reserveHolds }: Sure): string {
+export function fateText({ worst, decidedBy, asBad }: Sure): string {
   const { member, whatIf, error } = decidedBy;
-  if (error === true) {
-    const chance =
-      reserveHolds === null ? "an unknown probability" : `a probability of ${percentText(reserveHolds)}`;
-    return `keeps its reserve with ${chance} under the stated error`;
-  }
+  if (error === true) return `is too unsure: ${worst?.message ?? ""}`;
   const fate = FATES[worst?.code ?? "gap"] ?? "does not hold";
   const where = member === null ? `the what-if "${plainText(whatIf ?? "")}"` : `member ${member}`;
   return `${fate} in ${where}${asBad === 0 ? "" : ` (and ${asBad} more)`}`;

@@ -115,7 +115,7 @@ export function windowBests(report: WindowReport, units: WindowUnits): string[] 
   const rows = [...overall, ...(several ? own.flatMap(rowsOf) : []), ...late.rows, ...pacesOf(report)];
   const passed =
     sure === null ? [] : [...passedOverLines(sure, units), ...lateLines(sure.inTime ?? [], units)];
-  if (rows.length === 0) return [noneText(report), ...passed, ...late.missed];
+  if (rows.length === 0) return [...wrapped(noneText(report), TABLE_WIDTH), ...passed, ...late.missed];
   const rest = columnsOf(rows, units);
   const whats = rows.map(({ what }, index) => (index < overall.length ? `of all, ${what}` : what));
   const width = [

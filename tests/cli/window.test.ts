@@ -218,7 +218,7 @@ describe("legwork window of a plan that names members and what-ifs", () => {
       expect([status, err]).toEqual([0, ""]);
       expect(Math.max(...out.split("\n").map(displayWidth))).toBeLessThanOrEqual(80);
       expect(out.replace(/\s+/g, " ")).toMatch(
-        /Bests of the departures that hold in all [57] members and 3 what-ifs\./,
+        /Bests of the departures that hold in all [57] members and 3 what-ifs(\.|, and with a probability of 95 % under the stated error\.)/,
       );
     }
   });

@@ -173,12 +173,26 @@ describe("the drone's decision", () => {
     expect([held(route), route.status]).toEqual(["7 of 7", "clear"]);
   });
 
-  it("leaves three quarters of an hour sooner than the plain estimate allows, and by the low way alone", async () => {
+  it("leaves an hour sooner than the plain estimate allows, and by the low way alone", async () => {
     const { sure } = await windowOf("survey-decide");
-    expect([sure?.best.plain.latest, sure?.best.sure.latest].map(at)).toEqual(["01:30", "00:45"]);
+    expect([sure?.best.plain.latest, sure?.best.sure.latest].map(at)).toEqual(["01:30", "00:30"]);
     expect(sure?.best.plain.latest?.sure.decidedBy.whatIf).toBe("Wind a tenth stronger");
     const high = sure?.routes.find(({ route }) => route === "High, straight");
     expect([at(high?.plain.time), high?.sure.time]).toEqual(["00:30", null]);
+  });
+
+  it("is too unsure of its reserve a quarter of an hour later, where every member and what-if keeps it", async () => {
+    const low = "Low, round the homestead";
+    const { sure } = await windowOf("survey-decide");
+    expect(sure?.best.sure.closedBy?.code).toBe("reserve-unsure");
+    expect(sure?.best.sure.latest?.sure.reserveHolds).toBeGreaterThan(0.96);
+    const later = named(await routesOf("survey-decide", "2027-09-14T00:45Z"), low);
+    expect([held(later), later.status]).toEqual(["7 of 7", "stop"]);
+    expect(later.whatIf?.map(({ status }) => status)).toEqual(["clear", "clear", "clear"]);
+    expect(later.findings.filter(({ severity }) => severity === "stop").map(({ code }) => code)).toEqual([
+      "reserve-unsure",
+    ]);
+    expect(later.spread?.reserveHolds).toBeLessThan(0.94);
   });
 
   it("can reach the strip from further than the pad", async () => {

@@ -356,7 +356,18 @@ describe("a window whose bests are put to the test", () => {
     expect(passed.length).toBeGreaterThan(0);
     const told = writeWindowTable(asked, "sea").replace(/\s+/g, " ");
     expect(told).toContain("hold with a probability of 99.99 % under the stated error");
-    expect(told).toMatch(/, keeps its reserve with a probability of [\d.]+ % under the stated error/);
+    expect(told).toMatch(
+      /, is too unsure: the reserve holds with a probability of [\d.]+ % under the stated forecast error, and the plan asks for 99\.99 %/,
+    );
+    const whatIfs = [{ name: "Frozen", ...AS_PLANNED, consumption: 999 }];
+    const none = writeWindowTable(
+      reportOf(names, null, false, { members: [], whatIfs, errors, confidence: 0.9999999 }),
+      "sea",
+    );
+    expect(none.replace(/\s+/g, " ")).toContain(
+      "Nothing in the window holds in the what-if, and with a probability of 99.99999 % under the stated error.",
+    );
+    for (const line of none.split("\n")) expect(displayWidth(line)).toBeLessThanOrEqual(80);
     const json = JSON.parse(writeWindowJson(asked));
     expect(json.tried).toEqual({ members: 0, whatIfs: 0, confidence: 0.9999 });
     expect(JSON.stringify(json.routes)).toContain('"decidedBy":{"member":null,"whatIf":null,"error":true}');

@@ -25,7 +25,8 @@ function sureText(sure: Sure, of: SureWindow): string {
     reserveHolds === null
       ? ""
       : `; under the stated error the reserve holds with a probability of ${percentText(reserveHolds)}`;
-  if (status === "stop") return `stop: ${fateText(sure)}${decidedBy.error === true ? "" : chance}`;
+  if (decidedBy.error === true) return `stop: ${fateText(sure)}`;
+  if (status === "stop") return `stop: ${fateText(sure)}${chance}`;
   const where = tried === null ? "" : `holds ${tried}`;
   const isPlain = decidedBy.member === null && decidedBy.whatIf === null;
   const why = isPlain || sure.worst === null ? "" : `, with a caution ${variantText(sure)}`;

@@ -36,7 +36,15 @@ export const ISLANDS_DECIDE = deciding(ISLANDS_PLAN, {
 });
 
 export const SURVEY_DECIDE = deciding(SURVEY_PLAN, {
-  fields: [{ role: "wind", file: "survey-wind-members.csv" }],
+  // The members are of the whole night; the error is of what is smaller than their grid and shorter than their step.
+  fields: [
+    {
+      role: "wind",
+      file: "survey-wind-members.csv",
+      error: { speed: "0.8 m/s", length: "5 km", time: "1 h" },
+    },
+  ],
+  confidence: "95 %",
   window: { from: "2027-09-13T22:30Z", to: "2027-09-14T01:45Z", every: "15 min" },
   alternates: [{ name: "Strip", lat: -28.61, lon: 134.36, height: "10 m" }],
   whatIf: [
