@@ -76,9 +76,9 @@ describe("the departures compared", () => {
     const page = await windowed();
     const asked: PlanDocument[] = [];
     const { beginWindow } = page.engine;
-    page.engine.beginWindow = (ticket, plan) => {
+    page.engine.beginWindow = (ticket, plan, first) => {
       asked.push(plan);
-      return beginWindow(ticket, plan);
+      return beginWindow(ticket, plan, first);
     };
     render(<WindowView page={page} />);
     await screen.findByRole("list", { name: "Best departures" });

@@ -2,7 +2,7 @@ import { type ReadonlySignal, signal } from "@preact/signals";
 import type { SureWindow, WindowCell } from "../core.ts";
 import type { Engine } from "../state/page-state.ts";
 import type { PlanDocument } from "../state/plan-document.ts";
-import type { WindowBests, WindowShape } from "../worker/protocol.ts";
+import type { WindowBegun, WindowBests, WindowShape } from "../worker/protocol.ts";
 import { cellOrder } from "./fill-order.ts";
 import { tryBests } from "./try-bests.ts";
 
@@ -63,8 +63,13 @@ export function createWindowFill(hands: readonly (() => Hand)[]): WindowFill {
     filled.value = { ...filled.value, ...found };
   };
 
-  const begin = async (hand: Hand, ticket: number, plan: PlanDocument): Promise<WindowShape | null> => {
-    const answer = await hand.beginWindow(ticket, plan);
+  const begin = async (
+    hand: Hand,
+    ticket: number,
+    plan: PlanDocument,
+    first_ms: number | null,
+  ): Promise<WindowBegun | null> => {
+    const answer = await hand.beginWindow(ticket, plan, first_ms);
     if (ticket !== current) return null;
     if (answer.ok) return answer;
     fault.value = answer.fault;
@@ -85,14 +90,17 @@ export function createWindowFill(hands: readonly (() => Hand)[]): WindowFill {
           // A worker that has yet to start would keep the first from its first cells.
           if (at > 0) await show.begun;
           const hand = handOf();
-          const shape = await begin(hand, ticket, plan);
-          if (shape === null) {
+          const budget_ms = BUDGETS_MS[at] ?? 40;
+          // The first cells come with the window itself: a question less before something is seen.
+          const begun = await begin(hand, ticket, plan, at === 0 ? budget_ms : null);
+          if (begun === null) {
             show.begin();
             return;
           }
-          if (queue.open(shape)) show.open(plan, shape);
+          if (queue.open(begun.shape)) show.open(plan, begun.shape);
           fault.value = null;
-          await work(hand, ticket, queue, show, BUDGETS_MS[at] ?? 40);
+          if (begun.first.length > 0) show.add(queue.takeFirst(begun.first.length), begun.first);
+          await work(hand, ticket, queue, show, budget_ms);
         }),
       );
       const done = show.finished();
@@ -138,6 +146,11 @@ function createQueue() {
       if (order !== null) return false;
       order = cellOrder(departures.length, routes * (speeds?.length ?? 1));
       return true;
+    },
+    /** The first of all, before any other is taken. */
+    takeFirst(count: number): Int32Array {
+      next = count;
+      return order?.slice(0, count) ?? new Int32Array();
     },
     take(): Int32Array {
       const back = returned.shift();

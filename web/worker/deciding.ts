@@ -1,5 +1,6 @@
 import type { WindowCell } from "../core.ts";
 import type { PlanDocument } from "../state/plan-document.ts";
+import { cellOrder } from "../window/fill-order.ts";
 import {
   CellTrials,
   conditionsOf,
@@ -29,15 +30,16 @@ import type {
   PaceAnswer,
   SureQuestion,
   SureSlice,
+  WindowBegun,
   WindowBests,
-  WindowShape,
   WindowSlice,
 } from "./protocol.ts";
 
 /** What the worker works out for a decision, question by question. */
 export interface Deciding {
   decide(plan: PlanDocument, turnBack: boolean): Promise<Answered<DecideAnswer>>;
-  beginWindow(ticket: number, plan: PlanDocument): Promise<Answered<WindowShape>>;
+  /** @param first_ms how long to work on the first cells; `null` to leave them */
+  beginWindow(ticket: number, plan: PlanDocument, first_ms: number | null): Promise<Answered<WindowBegun>>;
   windowSlice(ticket: number, indices: Int32Array, budget_ms: number): WindowSlice | null;
   windowBests(ticket: number, cells: readonly WindowCell[], refine: boolean): WindowBests | null;
   windowSure(ticket: number, question: SureQuestion | null, budget_ms: number): Answered<SureSlice> | null;
@@ -66,7 +68,7 @@ export function createDeciding(reader: PlanReader): Deciding {
         const { estimate, sensitivities } = decide(read, answerOf(read), turnBack);
         return { routes: estimate.routes, sensitivities };
       }),
-    beginWindow: (ticket, document) =>
+    beginWindow: (ticket, document, first_ms) =>
       answered(async () => {
         const { plan, input, prepared, members } = await reader.read(document);
         if (plan.window === undefined) throw new Error("a window is asked of a plan that names none");
@@ -80,7 +82,16 @@ export function createDeciding(reader: PlanReader): Deciding {
         open = { ticket, sweep, window: plan.window, departures, speeds, trials, minutes: null, sure: null };
         const { unit, usable } = input.craft.store;
         const tried = CellTrials.has(asked);
-        return { departures, routes: prepared.length, speeds: speeds_m_s, storeUnit: unit, usable, tried };
+        const shape = {
+          departures,
+          routes: prepared.length,
+          speeds: speeds_m_s,
+          storeUnit: unit,
+          usable,
+          tried,
+        };
+        const order = cellOrder(departures.length, prepared.length * speeds.length);
+        return { shape, first: first_ms === null ? [] : slice(open, order, first_ms).cells };
       }),
     windowSlice(ticket, indices, budget_ms) {
       if (open === null || open.ticket !== ticket) return null;

@@ -194,6 +194,12 @@ export interface WindowShape {
   readonly tried: boolean;
 }
 
+/** A window, and its first cells in the order in which it fills, as many as were done in time. */
+export interface WindowBegun {
+  readonly shape: WindowShape;
+  readonly first: readonly WindowCell[];
+}
+
 /** The first of the cells asked for, as many as were done in time. */
 export interface WindowSlice {
   readonly cells: readonly WindowCell[];
@@ -277,7 +283,7 @@ export interface Worker {
   /** @param turnBack whether turning back is wanted though the plan names no alternates */
   decide(plan: PlanDocument, turnBack: boolean): Promise<Answered<DecideAnswer>>;
   /** Opens the plan's window under a ticket, in place of the one before. */
-  beginWindow(ticket: number, plan: PlanDocument): Promise<Answered<WindowShape>>;
+  beginWindow(ticket: number, plan: PlanDocument, first_ms: number | null): Promise<Answered<WindowBegun>>;
   /** Cells of a window, in the order of their indices, until the time is spent; `null` where it is no longer open. */
   windowSlice(ticket: number, indices: Int32Array, budget_ms: number): Promise<WindowSlice | null>;
   windowBests(ticket: number, cells: readonly WindowCell[], refine: boolean): Promise<WindowBests | null>;

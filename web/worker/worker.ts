@@ -83,7 +83,7 @@ const worker: Worker = {
     await decided();
   },
   decide: async (plan, turnBack) => (await decided()).decide(plan, turnBack),
-  beginWindow: async (ticket, plan) => (await decided()).beginWindow(ticket, plan),
+  beginWindow: async (ticket, plan, first) => (await decided()).beginWindow(ticket, plan, first),
   windowSlice: async (ticket, indices, budget) => (await decided()).windowSlice(ticket, indices, budget),
   windowBests: async (ticket, cells, refine) => (await decided()).windowBests(ticket, cells, refine),
   windowSure: async (ticket, question, budget) => (await decided()).windowSure(ticket, question, budget),
