@@ -79,17 +79,21 @@ function addWindow(program: Command, settle: Settle): void {
     .summary("departures and speeds compared, route by route")
     .description(
       "Estimates every route of a plan at every departure of a window, and at every speed named: arrival, what is left, the " +
-        "best by time, by use and the latest departure that can be done, and why others cannot. Exit status: 0 some departure " +
-        "can be done, 1 none can, 2 bad input.",
+        "best by time, by use and the latest departure that can be done, and why others cannot. Where the plan names members, " +
+        "what-ifs or a confidence, the bests are those that hold in all of them. Exit status: 0 some departure can be done and " +
+        "holds, 1 none, 2 bad input.",
     )
     .argument("<plan>", "plan file (*.plan.json); options take the place of its key window")
     .option("--from <time>", "first departure: ISO 8601 with its zone")
-    .option("--to <time>", "last departure")
+    .option("--to <time>", "last departure, where the steps meet it")
     .option("--every <step>", "from one departure to the next, as 30min")
     .option("--speeds <speeds>", "in place of the pace's speed, as 8kn,10kn; a leg's own speed stays")
     .option("--route <name>", "only this route (repeatable)", collect)
-    .option("--arrive-by <time>", "find the latest departure that arrives by then")
-    .option("--refine", "find the bests to the minute")
+    .option("--arrive-by <time>", "find the latest departure that arrives by then, be it after --to")
+    .option(
+      "--refine",
+      "find the bests to the minute; with speeds, also each route's of least use and fastest",
+    )
     .addOption(
       new Option("--format <format>", "what to write").choices(["table", "csv", "json"]).default("table"),
     )
@@ -102,6 +106,7 @@ function addWindow(program: Command, settle: Settle): void {
       ending([
         "legwork window demo/islands.plan.json --from 2027-05-04T06:00Z \\",
         "    --to 2027-05-04T18:00Z --every 30min --speeds 6kn,8kn --refine",
+        "legwork window demo/islands-decide.plan.json --arrive-by 2027-05-04T17:30Z",
       ]),
     )
     .action(async (plan: string, options: WindowOptions) => {
