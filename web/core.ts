@@ -36,7 +36,7 @@ export { LATTICE_COVERED, LATTICE_GAP } from "../src/field/lattice.ts";
 export type { Position } from "../src/geodesy/track.ts";
 export { parseCoordinate } from "../src/plan/position.ts";
 export type { Units } from "../src/report/input.ts";
-export { percentText } from "../src/report/percent-text.ts";
+export { askedText, percentText } from "../src/report/percent-text.ts";
 export type { ReportFormat } from "../src/report/report.ts";
 export { fateText, triedText } from "../src/report/sure-text.ts";
 export { storeColumn } from "../src/report/table-units.ts";

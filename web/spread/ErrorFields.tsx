@@ -66,7 +66,7 @@ export function ErrorFields({ page: { store } }: { readonly page: PageState }) {
       {(isStated || confidence !== undefined) && (
         <div class="window-bar">
           <div class="plan-item short">
-            <span>Reserve holds with</span>
+            <span>Reserve to hold with</span>
             <TextField
               label="Probability with which the reserve has to hold"
               value={confidence ?? ""}

@@ -1,4 +1,4 @@
-import { type DecidedRoute, type EnsembleResult, type ErrorSpread, percentText } from "../core.ts";
+import { askedText, type DecidedRoute, type EnsembleResult, type ErrorSpread, percentText } from "../core.ts";
 import { clockSince, durationText } from "../format/time-text.ts";
 import { inUnit, shownUnit, storeUnit } from "../format/units.ts";
 import type { PageView } from "../state/page-view.ts";
@@ -9,8 +9,9 @@ type Shown = Pick<PageView, "units" | "zone">;
 export function spreadWords(route: DecidedRoute, spread: ErrorSpread, view: Shown): string[] {
   const amount = storeUnit(route.storeUnit, route.usable);
   const what = route.reserve === 0 ? "The store lasts" : "The reserve holds";
+  const asked = spread.confidence === undefined ? "" : `; the plan asks for ${askedText(spread.confidence)}`;
   return [
-    `${what} with a probability of ${percentText(spread.reserveHolds)}.`,
+    `${what} with a probability of ${percentText(spread.reserveHolds)}${asked}.`,
     `One standard deviation: arrival ${durationText(spread.arrival_s)}, use ${inUnit(spread.use, amount)} ${amount.symbol}, left ${inUnit(spread.remaining, amount)} ${amount.symbol}.`,
     ...weakWords(route, spread.weakest.use, "use", view),
     ...weakWords(route, spread.weakest.time, "arrival", view),

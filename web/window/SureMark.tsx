@@ -1,4 +1,4 @@
-import { fateText, percentText, type Sure, type SureWindow, triedText } from "../core.ts";
+import { askedText, fateText, percentText, type Sure, type SureWindow, triedText } from "../core.ts";
 import { SeverityShape } from "../ledger/StatusMark.tsx";
 import "./sure.css";
 
@@ -20,11 +20,13 @@ export function SureMark({ sure, of }: SureMarkProps) {
 /** `stop: breaks its reserve in member 3 (and 1 more)`, `clear in all 7 members and 3 what-ifs; under the stated error …` */
 function sureText(sure: Sure, of: SureWindow): string {
   const { status, decidedBy, reserveHolds } = sure;
-  const tried = triedText(of);
+  const { members, whatIfs, confidence } = of;
+  const tried = triedText({ members, whatIfs });
+  const asked = confidence === undefined ? "" : `, ${askedText(confidence)} asked for`;
   const chance =
     reserveHolds === null
       ? ""
-      : `; under the stated error the reserve holds with a probability of ${percentText(reserveHolds)}`;
+      : `; under the stated error the reserve holds with a probability of ${percentText(reserveHolds)}${asked}`;
   if (decidedBy.error === true) return `stop: ${fateText(sure)}`;
   if (status === "stop") return `stop: ${fateText(sure)}${chance}`;
   const where = tried === null ? "" : `holds ${tried}`;
