@@ -18,7 +18,7 @@ export interface ConfidenceAsked {
  * @param reserveHolds probability under the stated errors; `null` where it could not be worked out, which is as bad as too little
  */
 export function unsureReserve(
-  { arrival, findings }: Pick<RouteEstimate, "arrival" | "findings">,
+  { arrival, reserve, findings }: Pick<RouteEstimate, "arrival" | "reserve" | "findings">,
   conditions: Pick<Conditions, "craft" | "fields">,
   reserveHolds: number | null,
   { confidence, errors }: ConfidenceAsked,
@@ -26,15 +26,16 @@ export function unsureReserve(
   const isBroken = findings.some(({ code }) => code === "reserve-broken" || code === "store-empty");
   if (arrival === null || isBroken || actingErrors(conditions, errors).length === 0) return null;
   const asked = `the plan asks for ${Number((100 * confidence).toPrecision(12))} %`;
+  const what = reserve === 0 ? "the store lasts" : "the reserve holds";
   if (reserveHolds === null)
     return routeFinding(
       "reserve-unsure",
-      `along the edge of its field or of what its pace can hold, the probability that the reserve holds is not known, and ${asked}`,
+      `along the edge of its field or of what its pace can hold, the probability that ${what} is not known, and ${asked}`,
     );
   if (reserveHolds >= confidence) return null;
   return routeFinding(
     "reserve-unsure",
-    `the reserve holds with a probability of ${flooredText(reserveHolds)} under the stated forecast error, and ${asked}`,
+    `${what} with a probability of ${flooredText(reserveHolds)} under the stated forecast error, and ${asked}`,
   );
 }
 

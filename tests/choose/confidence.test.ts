@@ -95,6 +95,11 @@ describe("the probability with which a reserve has to hold", () => {
     expect(told.spread?.confidence).toBe(above);
   });
 
+  test("is that the store lasts where the plan names no reserve", () => {
+    const found = answerOf(inputOf(5.5e6, { reserve: null }), 0.9999999);
+    expect(found.findings[0]?.message).toMatch(/^the store lasts with a probability of \d/);
+  });
+
   test("asked for, changes no figure, and left out changes nothing", () => {
     const input = inputOf(6.8e6);
     const plain = answerOf(input);
