@@ -49,10 +49,10 @@ export function makeLanes(count: number): Lanes {
 export const NOT_SMOOTH = -1;
 
 /*
- * What a step may miss, as shares of the slowness at its start. Of 300,000 random pairs of columns, with media up to nine tenths of the speed
- * that turn about within the step, one step in 500 that passed was wrong by more than 1e-11 of itself, the worst by 3e-10; on grids of
- * white noise at cells of 0.1° to 2.5° one in 800, the worst by 6e-11. Columns made on purpose can hide 2e-7 from all five. What a
- * step was wrong by is in the bound of a full estimate, which solves it anew on nine nodes.
+ * What a step may miss, as shares of the slowness at its start. Of 150,000 random pairs of columns, with media up to nine tenths of the speed
+ * that turn about within the step, one step in 300 that passed was wrong by more than 1e-11 of itself, one in 5,000 by more than 1e-10, the
+ * worst by 1e-8; on grids of white noise at cells of 0.1° to 2.5° one in 900, the worst by 6e-11. Columns made on purpose can hide 2e-7
+ * from all five. What a step was wrong by is in the bound of a full estimate, which solves it anew on nine nodes.
  */
 /** Most that the guess may miss at the nodes together: Newton's step leaves about a hundredth of its square. */
 const MOST_MISSED = 5e-4;

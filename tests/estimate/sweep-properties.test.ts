@@ -148,7 +148,7 @@ describe("a departure has the same bits in company, alone and in full", () => {
       }),
       { numRuns: 150, endOnFailure: true },
     );
-    expect(swept).toBeGreaterThan(100);
+    expect(swept).toBeGreaterThan(30);
   });
 
   test("five hundred of them, in no order and many twice", () => {
