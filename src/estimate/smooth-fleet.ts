@@ -11,7 +11,7 @@ const PASSING_S = 1e-9;
  * A cut is so near to its valid time, as a share of the step's time, that the last correction of its place goes unchecked: what it
  * leaves open is of the order of the share's square.
  */
-const MEETING = 3e-6;
+const MEETING = 1e-5;
 const MOST_HALVINGS = 10;
 const MOST_CUTS = 8;
 /** Share of the speed held beyond which no medium is smooth: near it the ground speed ends. */
