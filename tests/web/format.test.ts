@@ -56,6 +56,16 @@ describe("times as text", () => {
     expect(zoneText(at, "America/St_Johns")).toBe("America/St_Johns (UTC−02:30)");
   });
 
+  test("are of the nearest minute, with the day that it falls on", () => {
+    const late = Date.UTC(2027, 11, 31, 23, 59, 57);
+    expect(clockText(late - 60_000, "UTC", false)).toBe("23:59");
+    expect(clockText(late, "UTC", true)).toBe("Sat 1 Jan 00:00");
+    expect(clockSince("2027-05-04T13:47:57Z", "2027-05-04T11:00:00Z", "UTC")).toBe("13:48");
+    expect(clockSince("2027-05-04T13:47:29Z", "2027-05-04T11:00:00Z", "UTC")).toBe("13:47");
+    expect(fullTimeText(late, "UTC")).toBe("Sat 1 Jan 2028 00:00 UTC");
+    expect(dateText(late, "UTC")).toBe("2028-01-01");
+  });
+
   test("have a date in the zone", () => {
     expect(dateText(Date.UTC(2027, 11, 31, 23, 30), "UTC")).toBe("2027-12-31");
     expect(dateText(Date.UTC(2027, 11, 31, 23, 30), "Asia/Kolkata")).toBe("2028-01-01");

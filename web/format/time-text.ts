@@ -1,30 +1,30 @@
-/* Times and durations as the page shows them. Zones are those that the browser knows; every time says which it is in. */
+/* Times, to the nearest minute, and durations as the page shows them. Zones are those that the browser knows; every time says which it is in. */
 
 const formats = new Map<string, Intl.DateTimeFormat>();
 
 /** `06:00`, or `Tue 4 May 06:00` with the day, in a zone. */
 export function clockText(instant: number | string, zone: string, withDay: boolean): string {
-  const parts = partsIn(new Date(instant), zone);
+  const parts = partsIn(instant, zone);
   const clock = `${parts.hour}:${parts.minute}`;
   return withDay ? `${parts.weekday} ${Number(parts.day)} ${parts.month} ${clock}` : clock;
 }
 
 /** The date in a zone as ISO 8601 writes it: `2027-05-04`. */
 export function dateText(instant: number, zone: string): string {
-  return localInput(instant, zone).slice(0, 10);
+  return localInput(nearestMinute(instant), zone).slice(0, 10);
 }
 
 /** A time in full, as one that is decided on is read: `Tue 4 May 2027 06:00 UTC`. */
 export function fullTimeText(instant: number, zone: string): string {
-  const { weekday, day, month, hour, minute } = partsIn(new Date(instant), zone);
-  const year = localInput(instant, zone).slice(0, 4);
+  const { weekday, day, month, hour, minute } = partsIn(instant, zone);
+  const year = localInput(nearestMinute(instant), zone).slice(0, 4);
   return `${weekday} ${Number(day)} ${month} ${year} ${hour}:${minute} ${zoneText(instant, zone)}`;
 }
 
 /** `06:00` on the day of another instant, else with its date: `7 Nov 06:00`. */
 export function clockSince(instant: string, since: string | null, zone: string): string {
-  const { day, month, hour, minute } = partsIn(new Date(instant), zone);
-  const start = since === null ? null : partsIn(new Date(since), zone);
+  const { day, month, hour, minute } = partsIn(instant, zone);
+  const start = since === null ? null : partsIn(since, zone);
   const clock = `${hour}:${minute}`;
   return start !== null && start.day === day && start.month === month
     ? clock
@@ -82,6 +82,10 @@ function shortDuration(whole: number): string {
   return `${Math.floor(whole / 60)} min ${String(whole % 60).padStart(2, "0")}`;
 }
 
+function nearestMinute(instant: number | string): number {
+  return Math.round(Number(new Date(instant)) / 60_000) * 60_000;
+}
+
 interface Parts {
   readonly weekday: string;
   readonly day: string;
@@ -90,9 +94,10 @@ interface Parts {
   readonly minute: string;
 }
 
-function partsIn(date: Date, zone: string): Parts {
+/** Of the nearest minute, as the leg table on file rounds. */
+function partsIn(instant: number | string, zone: string): Parts {
   const found: Record<string, string> = {};
-  for (const { type, value } of formatOf(zone).formatToParts(date)) found[type] = value;
+  for (const { type, value } of formatOf(zone).formatToParts(nearestMinute(instant))) found[type] = value;
   const { weekday = "", day = "", month = "", hour = "", minute = "" } = found;
   return { weekday, day, month, hour, minute };
 }
