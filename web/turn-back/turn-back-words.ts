@@ -61,13 +61,20 @@ function limitLine(turn: TurnBack, limit: TurnLimit, where: (place: RoutePlace) 
     return {
       kind: "unknown",
       place: notKnownFrom,
-      text: `${goal}: not known from ${where(notKnownFrom)} on, ${why}.`,
+      text: `${atStart(turn, limit.goal)}: not known from ${where(notKnownFrom)} on, ${why}.`,
     };
   }
   const isNever = last === null;
   const reach = isNever ? "in reach from nowhere on the route" : "in reach from the whole route";
   const kind = isNever ? "nowhere" : "reach";
-  return { kind, place: null, text: `${goal}: ${reach} with the reserve kept.` };
+  return { kind, place: null, text: `${atStart(turn, limit.goal)}: ${reach} with the reserve kept.` };
+}
+
+/** A goal's name where a sentence begins with it; an alternate's name stays as it is. */
+function atStart(turn: TurnBack, goal: number | null): string {
+  const name = goalName(turn, goal);
+  const isAlternate = goal !== null && turn.goals[goal]?.kind === "alternate";
+  return isAlternate ? name : `${name[0]?.toUpperCase()}${name.slice(1)}`;
 }
 
 function placeText(place: RoutePlace, departure: string, { units, zone }: Shown): string {
