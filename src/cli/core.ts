@@ -10,6 +10,8 @@ export {
   type Land,
   type LandTopology,
   type OpenFile,
+  parseQuantity,
+  parseTime,
   prepareLand,
   type ReportFormat,
   type Units,

@@ -1,4 +1,4 @@
-import { estimatePlan, type ReportFormat, type Units, writeReport } from "./core.ts";
+import { estimatePlan, parseTime, type ReportFormat, type Units, writeReport } from "./core.ts";
 import { loadLand } from "./load-land.ts";
 import { writeResult } from "./output.ts";
 import { openPlan } from "./plan-files.ts";
@@ -15,6 +15,7 @@ export interface EstimateOptions {
 
 /** Estimates a plan and writes the answer; 1 where some route ends in a stop. */
 export async function estimateCommand(file: string, options: EstimateOptions): Promise<number> {
+  if (options.departure !== undefined) parseTime(options.departure, "--departure");
   noteUnits(options.units, options.format);
   const inputs = new Set([file]);
   const source = await openPlan(file, inputs);

@@ -1,5 +1,7 @@
 import {
   fieldSummary,
+  parseQuantity,
+  parseTime,
   type Units,
   unitsFor,
   windowPlan,
@@ -29,6 +31,7 @@ export interface WindowOptions {
 /** Compares the departures of a plan's window and writes them; 1 where none can be done, or holds in all that the plan names. */
 export async function windowCommand(file: string, options: WindowOptions): Promise<number> {
   const { from, to, every, speeds, route, refine = false, arriveBy, format, units, out } = options;
+  checkWindowOptions(options);
   noteUnits(units, format);
   const inputs = new Set([file]);
   const source = await openPlan(file, inputs);
@@ -56,4 +59,17 @@ export async function windowCommand(file: string, options: WindowOptions): Promi
   await writeResult(text, out, inputs);
   const { time } = sure === null ? summary.best : (sure.refined ?? sure).best.sure;
   return time === null ? 1 : 0;
+}
+
+/**
+ * Reads the options that are parts of a window, so that a fault in one names it as it was typed.
+ *
+ * @throws InputError for a time or quantity that is none
+ */
+function checkWindowOptions({ from, to, every, speeds, arriveBy }: WindowOptions): void {
+  if (from !== undefined) parseTime(from, "--from");
+  if (to !== undefined) parseTime(to, "--to");
+  if (every !== undefined) parseQuantity(every, "time", "--every");
+  for (const speed of speeds?.split(",") ?? []) parseQuantity(speed, "speed", "--speeds");
+  if (arriveBy !== undefined) parseTime(arriveBy, "--arrive-by");
 }

@@ -157,7 +157,7 @@ describe("legwork estimate", () => {
     for (const time of ["2027-11-04T02:00:00", "tomorrow", "", "2027-13-04T00:00:00Z"]) {
       const { status, out, err } = departure(time);
       expect({ status, out }).toEqual({ status: 2, out: "" });
-      expect(err).toMatch(/^legwork: departure[^\n]*\n$/);
+      expect(err).toMatch(/^legwork: --departure[^\n]*\n$/);
     }
   });
 

@@ -118,11 +118,11 @@ describe("legwork window", () => {
   it.each([
     [
       ["--every", "30"],
-      /^legwork: every takes a number with one of s, min, h, .* found "30" \(without a unit\)\n$/,
+      /^legwork: --every takes a number with one of s, min, h, .* found "30" \(without a unit\)\n$/,
     ],
-    [["--from", "dawn"], /^legwork: from takes an ISO 8601 date and time with its zone/],
+    [["--from", "dawn"], /^legwork: --from takes an ISO 8601 date and time with its zone/],
     [["--to", "2027-05-03T00:00Z"], /does not end before it begins/],
-    [["--speeds", "8kn,"], /^legwork: speeds takes a number with one of .* found ""\n$/],
+    [["--speeds", "8kn,"], /^legwork: --speeds takes a number with one of .* found ""\n$/],
     [["--speeds", "99kn"], /lies within the power model .* found 50\.9 m\/s \(99\.0 kn\)\n$/],
     [["--every", "1s", "--to", "2027-05-09T00:00Z"], /a window has at most 100000 cells/],
     [["--route", "Nowhere"], /a route is one of "Sound"/],
