@@ -176,7 +176,7 @@ function WaypointRow({ page, index, waypoint, path }: WaypointRowProps) {
     store.edit("Place waypoint", (plan) => placeWaypoint(plan, route, index, lat, lon), { select });
   const field = (key: WaypointKey, label: string) => (
     <TextField
-      label={`${label} of waypoint ${index + 1}`}
+      label={`${label} waypoint ${index + 1}`}
       value={waypoint[key] ?? ""}
       onText={(text) =>
         store.edit(`Change ${key}`, (plan) => setWaypointText(plan, route, index, key, text), { select })
@@ -197,7 +197,7 @@ function WaypointRow({ page, index, waypoint, path }: WaypointRowProps) {
       }}
     >
       <th scope="row">{index + 1}</th>
-      <td>{field("name", "Name")}</td>
+      <td>{field("name", "Name of")}</td>
       <td>
         <TextField
           label={`Latitude of waypoint ${index + 1}`}
@@ -229,8 +229,8 @@ function WaypointRow({ page, index, waypoint, path }: WaypointRowProps) {
         )}
       </td>
       <td>{index > 0 && field("speed", "Speed to")}</td>
-      <td>{field("stay", "Stay")}</td>
-      <td>{field("height", "Height")}</td>
+      <td>{field("stay", "Stay of")}</td>
+      <td>{field("height", "Height of")}</td>
     </tr>
   );
 }
