@@ -4,7 +4,7 @@ import { costBar } from "./cost-bar.ts";
 
 /** A route's time as one stacked bar on the ledger's common scale, and the same in figures. */
 export function CostBar({ route, end }: { readonly route: RouteEstimate; readonly end: number }) {
-  const { still, penalty } = route.totals;
+  const { still, penalty, stay_s } = route.totals;
   return (
     <div class="cost-bar">
       <div class="bar" aria-hidden="true">
@@ -26,6 +26,7 @@ export function CostBar({ route, end }: { readonly route: RouteEstimate; readonl
             {signedDurationText(penalty.crossTime_s)}
           </>
         )}
+        {stay_s > 0 && ` · stays ${durationText(stay_s)}`}
       </p>
     </div>
   );
