@@ -2,8 +2,11 @@ import { clockText, localInput } from "../format/time-text.ts";
 
 const HOUR = 3_600_000;
 const STEPS_H = [1, 2, 3, 6, 12, 24, 48, 96] as const;
-/** Room for a label, px. */
+/** Room for a label, px: of a day, which is the widest, and of an hour. */
 const ROOM = 62;
+const HOUR_ROOM = 40;
+/** Share of its room that a label takes before its place. */
+const BEFORE = { start: 0, middle: 0.5, end: 1 } as const;
 
 interface HeatAxisProps {
   readonly departures: readonly number[];
@@ -18,17 +21,25 @@ export function HeatAxis({ departures, cellWidth, zone }: HeatAxisProps) {
   const perMs = cellWidth / Math.max(second - first, 1);
   const x = (instant: number): number => (instant - first) * perMs + cellWidth / 2;
   const width = departures.length * cellWidth;
+  // At either end a label is moved into the picture, and may stand where its neighbour does.
+  let taken = Number.NEGATIVE_INFINITY;
   return (
     <svg class="heat-axis" width={width} height="18" aria-hidden="true">
       {axisHours(first, last, perMs, zone).map(({ instant, isDay }) => {
         const place = x(instant);
-        const anchor = place < 32 ? "start" : place > width - 32 ? "end" : "middle";
+        const anchor = place < ROOM / 2 ? "start" : place > width - ROOM / 2 ? "end" : "middle";
+        const room = isDay ? ROOM : HOUR_ROOM;
+        const from = place - room * BEFORE[anchor];
+        const hasRoom = from >= taken - 1;
+        if (hasRoom) taken = from + room;
         return (
           <g key={instant} transform={`translate(${place} 0)`}>
             <path d="M0 0V4" />
-            <text y="15" text-anchor={anchor} class={isDay ? "day" : ""}>
-              {isDay ? clockText(instant, zone, true).slice(0, -6) : clockText(instant, zone, false)}
-            </text>
+            {hasRoom && (
+              <text y="15" text-anchor={anchor} class={isDay ? "day" : ""}>
+                {isDay ? clockText(instant, zone, true).slice(0, -6) : clockText(instant, zone, false)}
+              </text>
+            )}
           </g>
         );
       })}
