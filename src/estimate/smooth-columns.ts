@@ -1,10 +1,11 @@
 import type { Field } from "../field/field.ts";
 import { type Flow, makeFlow, readSlice } from "./flow.ts";
-import { STATION_X, STATIONS } from "./gauss-kronrod.ts";
-import { lagrangeCoefficients } from "./lagrange.ts";
+import { STATIONS } from "./gauss-kronrod.ts";
 import { LEVEL_BETWEEN, type PanelCells } from "./panels.ts";
 import type { PreparedLeg } from "./prepare.ts";
 import { project } from "./project.ts";
+import { BENDS, PAIR, POINT, POINTS } from "./smooth-pair.ts";
+import { cutPair, fitPowers, TERMS } from "./smooth-powers.ts";
 import { POINT_STATIONS } from "./smooth-rule.ts";
 import { layMiddle, layStations, makeStations } from "./stations.ts";
 
@@ -14,22 +15,11 @@ import { layMiddle, layStations, makeStations } from "./stations.ts";
  * side, as values and changes, make a pair: all that a smooth step reads.
  */
 
-/** Numbers of a pair at each of its points (the start and the four nodes): along and its change, cross and its change, m/s. */
-const POINT = 4;
-const POINTS = POINT_STATIONS.length;
-/** Distances of the points from the start, in half lengths. */
-const POINT_Z = Float64Array.from(POINT_STATIONS, (station) => 1 + (STATION_X[station] as number));
-/** Where the halved second derivatives in ξ = -1..1 of the same four stand. */
-export const BENDS = POINT * POINT_STATIONS.length;
-/** Numbers in a pair. */
-export const PAIR = BENDS + POINT;
-
 /** Answer where the data of a panel cannot serve a smooth step. */
 export const NO_PAIR = -1;
 
 const LAST = STATIONS - 1;
 const MIDDLE = LAST / 2;
-const TERMS = 6;
 /** Offsets in a column: both components at the stations, then the coefficients in ξ of their polynomials. */
 const ALONG = 0;
 const CROSS = STATIONS;
@@ -164,7 +154,7 @@ export class SmoothColumns {
   #join(first: number, second: number, at: number): void {
     const columns = this.#columns;
     const { pairs } = this;
-    for (let n = 0; n < POINT_STATIONS.length; n += 1) {
+    for (let n = 0; n < POINTS; n += 1) {
       const along = POINT_STATIONS[n] as number;
       const cross = along + CROSS;
       const to = at + POINT * n;
@@ -209,81 +199,4 @@ function peak({ corners }: Flow, levels: number): number {
       square = Math.max(square, u * u + v * v, uNorth * uNorth + vNorth * vNorth);
     }
   return Math.sqrt(square);
-}
-
-/** Stations through which the polynomials of degree 5 are laid: both ends and the Gauss nodes. */
-const LAID_ON = [0, 2, 4, 6, 8, 10] as const;
-/** Stations between them where they are held against the data. */
-const CHECKED_ON = [1, 3, 5] as const;
-/** A polynomial that misses by more than this share of the reach does not serve. */
-const POWERS_TOLERANCE = 1e-12;
-/** Row t, column n: the coefficient of ξ^t in the Lagrange polynomial of station LAID_ON[n]. */
-const TO_POWERS = lagrangeCoefficients(LAID_ON.map((station) => STATION_X[station] as number));
-
-function fitPowers(columns: Float64Array, values: number, powers: number, reach: number): boolean {
-  for (let term = 0; term < TERMS; term += 1) {
-    let sum = 0;
-    for (let n = 0; n < TERMS; n += 1)
-      sum += (TO_POWERS[term * TERMS + n] as number) * (columns[values + (LAID_ON[n] as number)] as number);
-    columns[powers + term] = sum;
-  }
-  return CHECKED_ON.every((station) => {
-    const missed =
-      powersAt(columns, powers, STATION_X[station] as number) - (columns[values + station] as number);
-    return Math.abs(missed) <= POWERS_TOLERANCE * reach;
-  });
-}
-
-/**
- * Values and changes at the points of the part that starts at ξ = `from` and is 2 `half` long, by the coefficients of both components
- * that start at `p` in one column and at `q` in the next: four times Horner's rule, side by side.
- */
-function cutPair(
-  columns: Float64Array,
-  p: number,
-  q: number,
-  from: number,
-  half: number,
-  parts: Float64Array,
-  at: number,
-): void {
-  cutColumn(columns, p, from, half, parts, at);
-  cutColumn(columns, q, from, half, parts, at + 1);
-  for (let n = at; n < at + BENDS; n += 2) parts[n + 1] = (parts[n + 1] as number) - (parts[n] as number);
-}
-
-function cutColumn(
-  columns: Float64Array,
-  p: number,
-  from: number,
-  half: number,
-  parts: Float64Array,
-  at: number,
-): void {
-  const a0 = columns[p] as number;
-  const a1 = columns[p + 1] as number;
-  const a2 = columns[p + 2] as number;
-  const a3 = columns[p + 3] as number;
-  const a4 = columns[p + 4] as number;
-  const a5 = columns[p + 5] as number;
-  const c0 = columns[p + TERMS] as number;
-  const c1 = columns[p + TERMS + 1] as number;
-  const c2 = columns[p + TERMS + 2] as number;
-  const c3 = columns[p + TERMS + 3] as number;
-  const c4 = columns[p + TERMS + 4] as number;
-  const c5 = columns[p + TERMS + 5] as number;
-  for (let n = 0, to = at; n < POINTS; n += 1, to += POINT) {
-    const x = from + half * (POINT_Z[n] as number);
-    parts[to] = ((((a5 * x + a4) * x + a3) * x + a2) * x + a1) * x + a0;
-    parts[to + 2] = ((((c5 * x + c4) * x + c3) * x + c2) * x + c1) * x + c0;
-  }
-}
-
-function powersAt(columns: Float64Array, at: number, x: number): number {
-  const a = columns[at] as number;
-  const b = columns[at + 1] as number;
-  const c = columns[at + 2] as number;
-  const d = columns[at + 3] as number;
-  const e = columns[at + 4] as number;
-  return (((((columns[at + 5] as number) * x + e) * x + d) * x + c) * x + b) * x + a;
 }

@@ -2,7 +2,8 @@ import type { Field, Tile } from "../field/field.ts";
 import type { PanelCells } from "./panels.ts";
 import type { PreparedLeg } from "./prepare.ts";
 import { makeSliceClock, type SliceClock, turnClock } from "./slice-clock.ts";
-import { NO_PAIR, PAIR, SmoothColumns } from "./smooth-columns.ts";
+import { NO_PAIR, SmoothColumns } from "./smooth-columns.ts";
+import { PAIR } from "./smooth-pair.ts";
 import { makeRounds, move, type Rounds } from "./smooth-rounds.ts";
 import { guessDistance, type Lanes, makeLanes, NOT_SMOOTH, smoothTimes } from "./smooth-step.ts";
 

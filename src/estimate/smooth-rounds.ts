@@ -1,4 +1,4 @@
-import { PAIR } from "./smooth-columns.ts";
+import { PAIR } from "./smooth-pair.ts";
 import { type Lanes, makeLanes } from "./smooth-step.ts";
 
 /** Those that go over a panel in several steps: index j in the round, `who` in the fleet. */

@@ -1,4 +1,4 @@
-import { BENDS } from "./smooth-columns.ts";
+import { BENDS } from "./smooth-pair.ts";
 import { NODE_TO_END, NODE_WEIGHTS, NODE_X } from "./smooth-rule.ts";
 
 /*

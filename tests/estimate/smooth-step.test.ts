@@ -1,7 +1,7 @@
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
 import { STATION_X } from "../../src/estimate/gauss-kronrod.ts";
-import { BENDS, PAIR } from "../../src/estimate/smooth-columns.ts";
+import { BENDS, PAIR } from "../../src/estimate/smooth-pair.ts";
 import { POINT_STATIONS } from "../../src/estimate/smooth-rule.ts";
 import {
   guessDistance,
