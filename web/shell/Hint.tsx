@@ -6,7 +6,7 @@ export function Hint({ page: { view } }: { readonly page: PageState }) {
   return (
     <aside class="hint" aria-label="First steps">
       <ol>
-        <li>Compare the routes in the ledger: the plan to begin with is an invented demo.</li>
+        <li>Compare the routes in the ledger; the first plan is invented.</li>
         <li>Drag a waypoint on the chart: every figure follows.</li>
         <li>Drop your own field files, set the craft, and print the leg table.</li>
       </ol>
