@@ -135,6 +135,10 @@ function fieldNotes({ craft, fields }: EstimateInput, used: readonly Field[]): F
   } else if (!used.some(({ role }) => role === medium)) {
     notes.push(routeFinding("no-field", `the plan names no ${medium}: the ${craft.moves} is taken as still`));
   }
+  if (craft.moves === "water" && craft.windage === null && used.some(({ role }) => role === "wind")) {
+    const what = `the wind changes neither time nor use: ${craft.name} names no windage`;
+    notes.push(routeFinding("field-unused", `${what}; it is read for limits and cautions alone`));
+  }
   for (const field of fields) {
     if (!used.includes(field))
       notes.push(

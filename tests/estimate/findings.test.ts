@@ -1,4 +1,5 @@
 import { describe, expect, test } from "vitest";
+import type { Craft } from "../../src/craft/craft.ts";
 import { cubePower } from "../../src/craft/cube.ts";
 import { estimate } from "../../src/estimate/estimate.ts";
 import { WGS84 } from "../../src/geodesy/ellipsoid.ts";
@@ -168,6 +169,32 @@ describe("notes", () => {
     expect(answer.routes[0]?.findings).toMatchObject([{ code: "field-unused" }]);
     expect(answer.routes[0]?.legs[0]?.current).toBeNull();
     expect(answer.routes[0]?.legs[0]?.time_s).toBeCloseTo(degree, 5);
+  });
+
+  test("a wind that a boat without windage does not feel is told", () => {
+    const wind = gridField("wind", box, () => [3, 0]);
+    const stream = gridField("current", box, () => [0.5, 0]);
+    const notesOf = (windage: Craft["windage"]) =>
+      estimate({
+        title: "",
+        departure: DEPARTURE,
+        craft: craftOf({ name: "Launch", moves: "water", windage }),
+        pace: { hold: "through-speed", speed_m_s: 10 },
+        reserve: null,
+        fields: [stream, wind],
+        routes: [two],
+        land: null,
+      }).estimate.routes[0]?.findings.filter(({ code }) => code === "field-unused");
+    expect(notesOf(null)).toMatchObject([
+      {
+        severity: "note",
+        leg: null,
+        message:
+          "the wind changes neither time nor use: Launch names no windage; it is read for limits and cautions alone",
+      },
+    ]);
+    const windage = { frontalArea_m2: 7, dragCoefficient: 0.9, efficiency: 0.6, airDensity_kg_m3: 1.225 };
+    expect(notesOf(windage)).toEqual([]);
   });
 
   test("beyond 85° of latitude is told, with the distance", () => {
