@@ -34,3 +34,8 @@ export function readInstant(text: string, formats: readonly RegExp[]): number | 
   const milliseconds = Math.round(Number(`0.${match[7] ?? "0"}`) * 1000);
   return midnight.getTime() + ((part(4) * 60 + part(5) - lead) * 60 + part(6)) * 1000 + milliseconds;
 }
+
+/** An instant (ms since 1970-01-01T00:00Z) as one would write it in a plan: no seconds, no decimals where there are none. */
+export function writtenInstant(milliseconds: number): string {
+  return new Date(milliseconds).toISOString().replace(/(?::00)?\.000Z$/, "Z");
+}

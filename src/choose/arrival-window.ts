@@ -1,5 +1,5 @@
 import { InputError } from "../errors.ts";
-import { isoTime } from "../estimate/leg-result.ts";
+import { writtenInstant } from "../instant.ts";
 
 /** When to arrive, ms since 1970-01-01T00:00Z: at one time where both are equal, else between them; `null`: not too late is enough. */
 export interface ArrivalWindow {
@@ -11,6 +11,6 @@ export interface ArrivalWindow {
 export function checkArrival({ notBefore, notAfter }: ArrivalWindow): void {
   if (notBefore !== null && !(notBefore <= notAfter))
     throw new InputError(
-      `an arrival's notBefore is not after its notAfter; found ${isoTime(notBefore)} and ${isoTime(notAfter)}`,
+      `an arrival's notBefore is not after its notAfter; found ${writtenInstant(notBefore)} and ${writtenInstant(notAfter)}`,
     );
 }

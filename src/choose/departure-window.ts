@@ -1,5 +1,6 @@
 import { InputError } from "../errors.ts";
 import { speedText } from "../estimate/finding-text.ts";
+import { writtenInstant } from "../instant.ts";
 
 /** Departures to compare, and speeds where they are to be compared too. */
 export interface DepartureWindow {
@@ -41,10 +42,9 @@ export function windowDepartures(window: DepartureWindow): number[] {
  */
 export function checkWindow(window: DepartureWindow, routes: number): void {
   const { from, to, every_s, speeds_m_s } = window;
-  const iso = (time: number) => new Date(time).toISOString();
   if (!(to >= from))
     throw new InputError(
-      `a window of departures does not end before it begins; found ${iso(from)} to ${iso(to)}`,
+      `a window of departures does not end before it begins; found ${writtenInstant(from)} to ${writtenInstant(to)}`,
     );
   if (!(every_s >= 1))
     throw new InputError(`the step of a window of departures is at least 1 s; found ${every_s} s`);

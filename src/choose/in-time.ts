@@ -1,5 +1,6 @@
 import { InputError } from "../errors.ts";
 import { isoTime } from "../estimate/leg-result.ts";
+import { writtenInstant } from "../instant.ts";
 import type { DepartureWindow } from "./departure-window.ts";
 import { latestDeparture } from "./latest-departure.ts";
 import type { Sweep } from "./window.ts";
@@ -50,7 +51,7 @@ export function latestInTime(
   if (arriveBy === undefined) return null;
   if (arrive !== null && speeds_m_s === null)
     throw new InputError(
-      `an arriveBy of a window belongs to a pace that says how fast; found ${isoTime(arriveBy)} beside a pace that asks for an arrival`,
+      `an arriveBy of a window belongs to a pace that says how fast; found ${writtenInstant(arriveBy)} beside a pace that asks for an arrival`,
     );
   const routes = prepared.flatMap((route) =>
     (speeds_m_s ?? [null]).map((speed): RouteInTime => {

@@ -2,6 +2,7 @@ import { InputError } from "../errors.ts";
 import type { Conditions } from "../estimate/conditions.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import { routeOutcome } from "../estimate/route-outcomes.ts";
+import { writtenInstant } from "../instant.ts";
 import { rootsOf, scan } from "./line-search.ts";
 import { type WindowCell, windowCell } from "./window-cell.ts";
 
@@ -41,7 +42,7 @@ export function latestDeparture(
 ): LatestDeparture {
   if (!(notAfter > earliest))
     throw new InputError(
-      `an arrival is after the earliest departure considered; found ${new Date(notAfter).toISOString()} and ${new Date(earliest).toISOString()}`,
+      `an arrival is after the earliest departure considered; found ${writtenInstant(notAfter)} and ${writtenInstant(earliest)}`,
     );
   /** Seconds to spare at a departure so many seconds after the earliest. */
   const spare = (after: number): number | null => {

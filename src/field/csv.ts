@@ -1,4 +1,5 @@
 import { InputError } from "../errors.ts";
+import { writtenInstant } from "../instant.ts";
 import { type ColumnMapping, type Columns, findColumns } from "./columns.ts";
 import { CsvTable } from "./csv-table.ts";
 import type { FieldRole } from "./field.ts";
@@ -119,7 +120,7 @@ async function repeatedNode(
   const of = members === null ? { time: node.time, member: 0 } : members.slices.of(node.time);
   const parts = [`latitude ${lat[node.lat]}`, `longitude ${lon[node.lon]}`];
   if (height !== null) parts.push(`height ${Math.round(height[node.level] as number)} m`);
-  if (times !== null) parts.push(`time ${new Date(times[of.time] as number).toISOString()}`);
+  if (times !== null) parts.push(`time ${writtenInstant(times[of.time] as number)}`);
   if (members !== null) parts.push(`member ${members.numbers[of.member]}`);
   const found = `found ${parts.join(", ")} on lines ${toldLines.join(" and ")}`;
   return new InputError(`a node is given once; ${found}`, {

@@ -1,4 +1,5 @@
 import { InputError } from "../errors.ts";
+import { writtenInstant } from "../instant.ts";
 import type { GridFile, GridMember } from "./grid-file.ts";
 import { type FoundAxes, GridLayout, type OrderedAxis } from "./grid-layout.ts";
 import type { GridSlice } from "./grid-slice.ts";
@@ -65,7 +66,7 @@ function orderedSlices(times: OrderedAxis | null, { members }: FoundAxes, file: 
     const slices = order.map((time, at) => {
       const slice = members.slices.find(source, time);
       if (slice !== undefined) return slice;
-      const moment = new Date(times?.values[at] as number).toISOString();
+      const moment = writtenInstant(times?.values[at] as number);
       throw new InputError(
         `every member has every valid time; found none of ${moment} for member ${member}`,
         {

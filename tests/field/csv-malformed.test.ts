@@ -321,7 +321,7 @@ describe("a node given twice is told with both lines", () => {
     [
       "at a time and a height",
       "time,height,lat,lon,u,v\n2027-05-04T06:00Z,10,0,0,1,1\n2027-05-04T06:00Z,10,0,0,1,1\n",
-      "winds.csv, line 3: a node is given once; found latitude 0, longitude 0, height 10 m, time 2027-05-04T06:00:00.000Z on lines 2 and 3",
+      "winds.csv, line 3: a node is given once; found latitude 0, longitude 0, height 10 m, time 2027-05-04T06:00Z on lines 2 and 3",
     ],
     ["even as a missing value", `${HEAD}0,0,,\n0,0,,\n`, "on lines 2 and 3"],
     ["among notes and quotes", `# note\n${HEAD}"0",0,1,1\n\n0,0,1,1\n`, "on lines 3 and 5"],
