@@ -18,6 +18,7 @@ export {
   type EnsembleMember,
   type EnsembleResult,
   type MembersHeld,
+  type MembersInTime,
   ensembleResult,
   type MemberRun,
   memberRun,

@@ -2,9 +2,12 @@ import type { Conditions } from "../estimate/conditions.ts";
 import { estimateRoute } from "../estimate/estimate-route.ts";
 import { momentText } from "../estimate/finding-text.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
-import { unsureReserve } from "./confidence.ts";
+import { arrivalChance, heldToArrival } from "./arrival-kept.ts";
+import type { ArrivalWindow } from "./arrival-window.ts";
+import { unsureArrival, unsureReserve } from "./confidence.ts";
+import type { DepartureWindow } from "./departure-window.ts";
 import { membersHeld } from "./ensemble.ts";
-import { errorSpread } from "./error-spread.ts";
+import { type ErrorSpread, errorSpread } from "./error-spread.ts";
 import type { Steps } from "./steps.ts";
 import type { DecidedBy, Sure } from "./sure.ts";
 import { type Trial, type Tried, trialsOf, tryOne } from "./trial.ts";
@@ -35,14 +38,15 @@ interface Known {
 /** What the stated error comes to. */
 interface KnownSpread {
   readonly reserveHolds: number | null;
-  /** Where the reserve holds with less than the probability asked for. */
+  /** Where the reserve or the arrival holds with less than the probability asked for. */
   readonly unsure: CellFinding | null;
 }
 
 /**
  * Puts cells of a sweep to the test with everything that a plan names: every member of an ensemble, every what-if and the
  * stated forecast error, each a true estimate at the cell's departure and at the speed at which it was estimated. Where a confidence is
- * asked for, a cell holds only if its reserve does with that probability.
+ * asked for, a cell holds only if its reserve does with that probability. Where the plan's pace asks for a span of times to arrive in, a cell
+ * holds only if it is kept in every member and what-if, and with that probability.
  *
  * What is worked out for a cell is kept. Whether it holds is known at its first break, and what broke the last cell is tried
  * first, so that going down a ranking costs little more than one estimate a cell that is passed over, and one a member and what-if where
@@ -73,6 +77,8 @@ interface KnownSpread {
 export class CellTrials {
   readonly #sweep: Sweep;
   readonly #asked: UncertaintyAsked;
+  /** The arrival that the cells were found for, and have to keep. */
+  readonly #arrive: ArrivalWindow | null;
   /** What broke the last cell first. */
   #trials: Trial[];
   readonly #inOrder: readonly Trial[];
@@ -80,9 +86,15 @@ export class CellTrials {
   #unsureFirst = false;
   readonly #known = new Map<string, Known>();
 
-  constructor(sweep: Sweep, asked: UncertaintyAsked) {
+  /** @param window whose speeds, where it names some, stand in place of an arrival that the plan's pace asks for */
+  constructor(
+    sweep: Sweep,
+    asked: UncertaintyAsked,
+    window: Pick<DepartureWindow, "speeds_m_s"> = { speeds_m_s: null },
+  ) {
     this.#sweep = sweep;
     this.#asked = asked;
+    this.#arrive = window.speeds_m_s === null ? sweep.arrive : null;
     this.#inOrder = trialsOf(sweep, asked);
     this.#trials = [...this.#inOrder];
   }
@@ -188,12 +200,13 @@ export class CellTrials {
   #try({ route, base, tried }: Known, trial: Trial): Tried {
     const before = tried.get(trial);
     if (before !== undefined) return before;
-    const found = tryOne(trial, route, base, this.#sweep);
+    const plain = tryOne(trial, route, base, this.#sweep);
+    const found = heldToArrival(plain, plain.arrival, this.#arrive);
     tried.set(trial, found);
     return found;
   }
 
-  /** Whether the reserve holds with less than the probability asked for. */
+  /** Whether the reserve or the arrival holds with less than the probability asked for. */
   *#isUnsure(known: Known): Steps<boolean> {
     return this.#asked.confidence !== undefined && (yield* this.#spread(known)).unsure !== null;
   }
@@ -211,10 +224,18 @@ export class CellTrials {
     if (errors.length === 0) return { reserveHolds: null, unsure: null };
     const prepared = this.#sweep.prepared[route] as PreparedRoute;
     const run = estimateRoute(prepared, base);
-    const reserveHolds = errorSpread(prepared, base, run, errors)?.spread.reserveHolds ?? null;
+    const spread = errorSpread(prepared, base, run, errors)?.spread ?? null;
+    const reserveHolds = spread?.reserveHolds ?? null;
     if (confidence === undefined) return { reserveHolds, unsure: null };
-    const found = unsureReserve(run.estimate, base, reserveHolds, { confidence, errors });
+    const found =
+      unsureReserve(run.estimate, base, reserveHolds, { confidence, errors }) ??
+      unsureArrival(this.#arrive, this.#chanceToArrive(run.estimate.arrival, spread), confidence);
     return { reserveHolds, unsure: found && worstFinding([found]) };
+  }
+
+  #chanceToArrive(arrival: string | null, spread: ErrorSpread | null): number | null {
+    if (arrival === null || spread === null || this.#arrive === null) return null;
+    return arrivalChance(Date.parse(arrival), spread.arrival_s, this.#arrive);
   }
 }
 

@@ -1,6 +1,9 @@
 import type { Conditions } from "../estimate/conditions.ts";
+import { momentText } from "../estimate/finding-text.ts";
 import { routeFinding } from "../estimate/findings.ts";
 import type { Finding, RouteEstimate } from "../estimate/result.ts";
+import { decidesArrival } from "./arrival-kept.ts";
+import type { ArrivalWindow } from "./arrival-window.ts";
 import { actingErrors } from "./error-spread.ts";
 import type { ForecastError } from "./forecast-error.ts";
 
@@ -25,7 +28,7 @@ export function unsureReserve(
 ): Finding | null {
   const isBroken = findings.some(({ code }) => code === "reserve-broken" || code === "store-empty");
   if (arrival === null || isBroken || actingErrors(conditions, errors).length === 0) return null;
-  const asked = `the plan asks for ${Number((100 * confidence).toPrecision(12))} %`;
+  const asked = askedText(confidence);
   const what = reserve === 0 ? "the store lasts" : "the reserve holds";
   if (reserveHolds === null)
     return routeFinding(
@@ -37,6 +40,28 @@ export function unsureReserve(
     "reserve-unsure",
     `${what} with a probability of ${flooredText(reserveHolds)} under the stated forecast error, and ${asked}`,
   );
+}
+
+/**
+ * What is found where a route arrives by the latest of the times asked for with less than the probability asked for; `null` where it does with
+ * that, and where one moment is asked for.
+ *
+ * @param arrivalHolds probability under the stated errors; `null` where there is none, which {@link unsureReserve} tells
+ */
+export function unsureArrival(
+  wanted: ArrivalWindow | null,
+  arrivalHolds: number | null,
+  confidence: number,
+): Finding | null {
+  if (!decidesArrival(wanted) || arrivalHolds === null || arrivalHolds >= confidence) return null;
+  return routeFinding(
+    "arrival-missed",
+    `under the stated forecast error it arrives by ${momentText(wanted.notAfter)} with a probability of ${flooredText(arrivalHolds)}, and ${askedText(confidence)}`,
+  );
+}
+
+function askedText(confidence: number): string {
+  return `the plan asks for ${Number((100 * confidence).toPrecision(12))} %`;
 }
 
 /** Rounded down, so that what is too little is not told as enough. */

@@ -4,6 +4,8 @@ import { isoTime } from "../estimate/leg-result.ts";
 import { type PreparedRoute, prepareRoute } from "../estimate/prepare.ts";
 import type { RouteEstimate } from "../estimate/result.ts";
 import type { Field } from "../field/field.ts";
+import { arrivalMiss, heldToArrival } from "./arrival-kept.ts";
+import type { ArrivalWindow } from "./arrival-window.ts";
 import { type Quantiles, quantiles } from "./quantiles.ts";
 import type { Variant } from "./what-if-results.ts";
 import { worstFinding } from "./window-cell.ts";
@@ -40,8 +42,17 @@ export interface MembersHeld {
   readonly doesNotArrive: readonly number[];
 }
 
+/** In which members of an ensemble a route arrives when its pace asks for it, where it does. */
+export interface MembersInTime {
+  /** Share of all members in which it does, 0..1. */
+  readonly arrivalHolds: number;
+  /** Members in which it arrives, and too early or too late. */
+  readonly arrivesEarly: readonly number[];
+  readonly arrivesLate: readonly number[];
+}
+
 /** A route under every member of an ensemble. */
-export interface EnsembleResult extends MembersHeld, EnsembleFigures {
+export interface EnsembleResult extends MembersHeld, Partial<MembersInTime>, EnsembleFigures {
   readonly legs: readonly EnsembleLeg[];
 }
 
@@ -203,12 +214,37 @@ function figures(of: readonly Figured[]): EnsembleFigures {
   };
 }
 
-/** Members as variants that may decide a route's status. */
-export function memberVariants(runs: readonly MemberRun[]): Variant[] {
-  return runs.map(({ member, estimate }) => ({
-    label: `member ${member}`,
-    status: estimate.status,
-    remaining: estimate.totals.remaining,
-    worst: worstFinding(estimate.findings),
-  }));
+/** Counts the members in which a route arrives when its pace asks for it. */
+export function membersInTime(runs: readonly MemberRun[], asked: ArrivalWindow): MembersInTime {
+  const misses = runs.flatMap(({ member, estimate }) => {
+    const arrival = arrivalOf(estimate);
+    return arrival === null ? [] : [{ member, miss: arrivalMiss(arrival, asked) }];
+  });
+  const those = (is: (miss: number) => boolean): number[] =>
+    misses.filter(({ miss }) => is(miss)).map(({ member }) => member);
+  return {
+    arrivalHolds: those((miss) => miss === 0).length / runs.length,
+    arrivesEarly: those((miss) => miss < 0),
+    arrivesLate: those((miss) => miss > 0),
+  };
+}
+
+function arrivalOf({ arrival }: RouteEstimate): number | null {
+  return arrival === null ? null : Date.parse(arrival);
+}
+
+/** Members as variants that may decide a route's status. @param asked the arrival that the route's pace asks for */
+export function memberVariants(runs: readonly MemberRun[], asked: ArrivalWindow | null = null): Variant[] {
+  return runs.map(({ member, estimate }) =>
+    heldToArrival(
+      {
+        label: `member ${member}`,
+        status: estimate.status,
+        remaining: estimate.totals.remaining,
+        worst: worstFinding(estimate.findings),
+      },
+      arrivalOf(estimate),
+      asked,
+    ),
+  );
 }

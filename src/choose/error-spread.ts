@@ -27,6 +27,8 @@ export interface ErrorSpread {
   readonly margin: number;
   /** Probability that what is left is not below the reserve, with the margin taken as normally distributed; 0..1. */
   readonly reserveHolds: number;
+  /** Probability of arriving by the latest time that the pace asks for, with the arrival taken as normally distributed, where it does; 0..1. */
+  readonly arrivalHolds?: number;
   /** The probability that the plan asks for, where it does. */
   readonly confidence?: number;
   /**

@@ -7,7 +7,7 @@ export interface DecidedBy {
   readonly member: number | null;
   /** Name of the what-if. */
   readonly whatIf: string | null;
-  /** Under the stated forecast error the reserve holds with less than the probability asked for. */
+  /** Under the stated forecast error the reserve, or the arrival asked for, holds with less than the probability asked for. */
   readonly error?: true;
 }
 

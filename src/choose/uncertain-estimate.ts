@@ -5,21 +5,24 @@ import { statusOf } from "../estimate/findings.ts";
 import { fieldsInUse, type PreparedRoute } from "../estimate/prepare.ts";
 import type { Finding, Profile, RouteEstimate } from "../estimate/result.ts";
 import { arrivalSpeed } from "./arrival-answer.ts";
-import { unsureReserve } from "./confidence.ts";
+import { arrivalAsked, arrivalChance } from "./arrival-kept.ts";
+import type { ArrivalWindow } from "./arrival-window.ts";
+import { unsureArrival, unsureReserve } from "./confidence.ts";
 import type { DecidedEstimate, DecidedRoute } from "./decided.ts";
 import {
   type EnsembleMember,
   ensembleResult,
   type MemberRun,
   memberRun,
+  membersInTime,
   memberVariants,
 } from "./ensemble.ts";
-import { errorSpread } from "./error-spread.ts";
+import { type ErrorSpread, errorSpread } from "./error-spread.ts";
 import type { ForecastError } from "./forecast-error.ts";
 import type { SensitivityProfile } from "./sensitivity-profile.ts";
 import { speedRange } from "./speed-range.ts";
 import type { WhatIf } from "./what-if.ts";
-import { isOfVariant, whatIfResults, whatIfVariants, withWorst } from "./what-if-results.ts";
+import { isOfVariant, whatIfResults, whatIfsInTime, whatIfVariants, withWorst } from "./what-if-results.ts";
 
 /** What is asked about how sure an estimate is. */
 export interface UncertaintyAsked {
@@ -40,7 +43,8 @@ export interface UncertainAnswer extends EstimateAnswer {
 /**
  * An estimate with what-ifs, the spread under the stated forecast error and every member of an ensemble worked out for each of
  * its routes, at the pace at which it was estimated. The worst what-if or member decides the status of a route that is better
- * itself; so does a reserve that holds with less than the probability asked for.
+ * itself; so does a reserve that holds with less than the probability asked for. Where a span of times to arrive in was asked for, a member
+ * or what-if that arrives outside it at the speed found is a stop.
  *
  * @param prepared by `prepareRoutes`, from the same input
  * @throws InputError for a what-if that the pace or the craft does not allow
@@ -83,21 +87,24 @@ export function withUncertainty(
   const runs = conditions.map((given, index) => memberRuns(prepared[index] as PreparedRoute, given, members));
   const routes = estimate.routes.map((route, index): DecidedRoute => {
     const own = runs[index] ?? [];
-    const whatIf = results[index] ?? [];
-    const spread = spreads[index]?.spread ?? null;
-    const asked = confidence === undefined ? null : { confidence, errors };
+    const wanted = arrivalAsked(route);
+    const whatIf = whatIfsInTime(results[index] ?? [], wanted);
+    const spread = toldSpread(route, spreads[index]?.spread ?? null, wanted, confidence);
     const told = {
       ...route,
-      ...(errors.length === 0
+      ...(errors.length === 0 ? {} : { spread }),
+      ...(own.length === 0
         ? {}
-        : { spread: spread && asked ? { ...spread, confidence: asked.confidence } : spread }),
-      ...(own.length === 0 ? {} : { ensemble: ensembleResult(own) }),
+        : { ensemble: { ...ensembleResult(own), ...(wanted === null ? {} : membersInTime(own, wanted)) } }),
       ...(whatIfs.length === 0 ? {} : { whatIf }),
     };
-    const decided = withWorst(told, [...memberVariants(own), ...whatIfVariants(whatIf)]);
-    const unsure =
-      asked && unsureReserve(route, conditions[index] as Conditions, spread?.reserveHolds ?? null, asked);
-    return unsure === null ? decided : withUnsure(decided, unsure);
+    const decided = withWorst(told, [...memberVariants(own, wanted), ...whatIfVariants(whatIf)]);
+    if (confidence === undefined) return decided;
+    const asked = { confidence, errors };
+    return withUnsure(decided, [
+      unsureReserve(route, conditions[index] as Conditions, spread?.reserveHolds ?? null, asked),
+      route.arrive?.chosen === null ? null : unsureArrival(wanted, spread?.arrivalHolds ?? null, confidence),
+    ]);
   });
   return {
     estimate: { ...estimate, routes },
@@ -106,11 +113,30 @@ export function withUncertainty(
   };
 }
 
+/** A spread with what the plan asks of it. */
+function toldSpread(
+  { arrival }: RouteEstimate,
+  spread: ErrorSpread | null,
+  wanted: ArrivalWindow | null,
+  confidence: number | undefined,
+): ErrorSpread | null {
+  if (spread === null || arrival === null) return spread;
+  return {
+    ...spread,
+    ...(wanted === null
+      ? {}
+      : { arrivalHolds: arrivalChance(Date.parse(arrival), spread.arrival_s, wanted) }),
+    ...(confidence === undefined ? {} : { confidence }),
+  };
+}
+
 /** What is found under the stated error stands after what a member or what-if decides, and before the route's own. */
-function withUnsure(route: DecidedRoute, unsure: Finding): DecidedRoute {
+function withUnsure(route: DecidedRoute, found: readonly (Finding | null)[]): DecidedRoute {
+  const unsure = found.filter((finding) => finding !== null);
+  if (unsure.length === 0) return route;
   const variants = route.findings.filter(isOfVariant);
   const own = route.findings.filter((finding) => !isOfVariant(finding));
-  const findings = [...variants, unsure, ...own];
+  const findings = [...variants, ...unsure, ...own];
   return { ...route, status: statusOf(findings), findings };
 }
 

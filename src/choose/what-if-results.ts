@@ -3,6 +3,8 @@ import { routeFinding, statusOf } from "../estimate/findings.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { Finding, Reached, RouteEstimate, RouteStatus } from "../estimate/result.ts";
 import { routeOutcome } from "../estimate/route-outcomes.ts";
+import { arrivalMiss, heldToArrival } from "./arrival-kept.ts";
+import type { ArrivalWindow } from "./arrival-window.ts";
 import type { WhatIf } from "./what-if.ts";
 import { underWhatIf, whatIfFields } from "./what-if-conditions.ts";
 import { cellOf, type WindowCell } from "./window-cell.ts";
@@ -12,6 +14,11 @@ export interface WhatIfResult extends Omit<WindowCell, "route" | "speed_m_s"> {
   readonly name: string;
   /** How far it comes, where it stops on the way. */
   readonly reached: Reached | null;
+  /**
+   * Where the pace asks for an arrival: seconds by which it is missed at the speed found, positive too late, negative too early, 0 where it
+   * is kept; `null` where the route does not arrive.
+   */
+  readonly arrivalMiss_s?: number | null;
 }
 
 /**
@@ -66,6 +73,19 @@ function whatIfResult(
   return { name: whatIf.name, ...figures, reached: outcome.reached };
 }
 
+/** What-ifs held to the arrival that the route's pace asks for; as they are where it asks for none. */
+export function whatIfsInTime(
+  results: readonly WhatIfResult[],
+  asked: ArrivalWindow | null,
+): readonly WhatIfResult[] {
+  if (asked === null) return results;
+  return results.map((result) => {
+    const arrival = result.arrival === null ? null : Date.parse(result.arrival);
+    const arrivalMiss_s = arrival === null ? null : arrivalMiss(arrival, asked);
+    return { ...heldToArrival(result, arrival, asked), arrivalMiss_s };
+  });
+}
+
 const RANK: Readonly<Record<RouteStatus, number>> = { clear: 0, caution: 1, stop: 2 };
 
 /** A variant of a route, for {@link withWorst}. */
@@ -100,7 +120,7 @@ export function withWorst<Route extends RouteEstimate>(route: Route, variants: r
 
 /** Whether a finding is of a member, a what-if or the stated error, and not of the plain estimate. */
 export function isOfVariant({ code, leg, message }: Pick<Finding, "code" | "leg" | "message">): boolean {
-  return code === "reserve-unsure" || (leg === null && /^(what if|member) /.test(message));
+  return code === "reserve-unsure" || (leg === null && /^(what if|member|under the stated) /.test(message));
 }
 
 function worstVariant(route: RouteEstimate, variants: readonly Variant[]): Finding | null {

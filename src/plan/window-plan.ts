@@ -88,7 +88,9 @@ function answerWindow(
   const { whatIfs = [], errors = [], confidence } = plan;
   const asked = { whatIfs, errors, members, confidence };
   const sure = CellTrials.has(asked)
-    ? runSteps(sureWindow(sweep, new CellTrials(sweep, asked), { window, cells, minutes, inTime, paces }))
+    ? runSteps(
+        sureWindow(sweep, new CellTrials(sweep, asked, window), { window, cells, minutes, inTime, paces }),
+      )
     : null;
   // Last, since what is tried to be sure counts too.
   const refined = minutes && refinedBests(minutes);

@@ -77,7 +77,7 @@ export function createDeciding(reader: PlanReader): Deciding {
         const { speeds_m_s } = plan.window;
         const { whatIfs = [], errors = [], confidence } = plan;
         const asked = { whatIfs, errors, members, confidence };
-        const trials = new CellTrials(sweep, asked);
+        const trials = new CellTrials(sweep, asked, plan.window);
         const speeds = speeds_m_s ?? [null];
         open = { ticket, sweep, window: plan.window, departures, speeds, trials, minutes: null, sure: null };
         const { unit, usable } = input.craft.store;
