@@ -1,4 +1,4 @@
-import type { EnsembleFigures, EnsembleLeg, EnsembleResult } from "../choose/ensemble.ts";
+import type { EnsembleFigures, EnsembleLeg, EnsembleResult, MembersInTime } from "../choose/ensemble.ts";
 import type { Quantiles } from "../choose/quantiles.ts";
 
 function quantilesJson<Figure>(value: Quantiles<Figure> | null): Quantiles<Figure> | null {
@@ -17,6 +17,12 @@ function figuresJson(value: EnsembleFigures): EnsembleFigures {
 
 const legJson = (value: EnsembleLeg): EnsembleLeg => ({ leg: value.leg, ...figuresJson(value) });
 
+/** Nothing where the pace asks for no arrival. */
+function arrivalJson({ arrivalHolds, arrivesEarly, arrivesLate }: EnsembleResult): Partial<MembersInTime> {
+  if (arrivalHolds === undefined) return {};
+  return { arrivalHolds, arrivesEarly: [...(arrivesEarly ?? [])], arrivesLate: [...(arrivesLate ?? [])] };
+}
+
 /** A route under every member, with the keys in the order of the format. */
 export function ensembleJson(value: EnsembleResult): EnsembleResult {
   return {
@@ -24,6 +30,7 @@ export function ensembleJson(value: EnsembleResult): EnsembleResult {
     reserveHolds: value.reserveHolds,
     breaksReserve: [...value.breaksReserve],
     doesNotArrive: [...value.doesNotArrive],
+    ...arrivalJson(value),
     ...figuresJson(value),
     legs: value.legs.map(legJson),
   };

@@ -1,6 +1,7 @@
 import type { DecidedRoute } from "../choose/decided.ts";
 import type { EnsembleFigures, EnsembleResult } from "../choose/ensemble.ts";
 import type { Quantiles } from "../choose/quantiles.ts";
+import { membersArriveText, memberText } from "./arrival-lines.ts";
 import { type Column, laidOut, TABLE_WIDTH } from "./columns.ts";
 import { placedText } from "./number-text.ts";
 import { percentText } from "./percent-text.ts";
@@ -63,15 +64,11 @@ function columnsOf(
   ];
 }
 
-function countsText({ reserve }: DecidedRoute, ensemble: EnsembleResult): string {
+function countsText(route: DecidedRoute, ensemble: EnsembleResult): string {
   const { members, reserveHolds, breaksReserve, doesNotArrive } = ensemble;
-  const what = reserve === 0 ? "The store lasts" : "The reserve holds";
+  const what = route.reserve === 0 ? "The store lasts" : "The reserve holds";
   const held = Math.round(reserveHolds * members.length);
   const broken = breaksReserve.length === 0 ? "" : ` Broken in ${memberText(breaksReserve)}.`;
   const stopped = doesNotArrive.length === 0 ? "" : ` Does not arrive in ${memberText(doesNotArrive)}.`;
-  return `${what} in ${held} of ${members.length} members (${percentText(reserveHolds)}).${broken}${stopped}`;
-}
-
-function memberText(members: readonly number[]): string {
-  return `${members.length === 1 ? "member" : "members"} ${members.join(", ")}`;
+  return `${what} in ${held} of ${members.length} members (${percentText(reserveHolds)}).${broken}${stopped}${membersArriveText(route, ensemble)}`;
 }

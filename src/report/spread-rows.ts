@@ -2,6 +2,7 @@ import type { DecidedRoute } from "../choose/decided.ts";
 import type { ErrorSpread } from "../choose/error-spread.ts";
 import type { WeakPlace } from "../choose/sensitivity-profile.ts";
 import type { RouteEstimate } from "../estimate/result.ts";
+import { chanceToArriveText } from "./arrival-lines.ts";
 import { laidOut, TABLE_WIDTH } from "./columns.ts";
 import { placedText } from "./number-text.ts";
 import { askedText, percentText } from "./percent-text.ts";
@@ -26,7 +27,7 @@ export function spreadTable(route: DecidedRoute, units: TableUnits): string[] {
     "Spread under the forecast error (one standard deviation, to first order)",
     ...legRows(route, spread, units),
     ...wrapped(
-      `${chanceText(route, spread, units)} ${weakText(route, spread, units)}`.trimEnd(),
+      `${chanceText(route, spread, units)}${chanceToArriveText(route, spread)} ${weakText(route, spread, units)}`.trimEnd(),
       TABLE_WIDTH,
     ),
   ];

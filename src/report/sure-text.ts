@@ -41,7 +41,8 @@ const FATES: Partial<Record<FindingCode, string>> = {
 export function fateText({ worst, decidedBy, asBad }: Sure): string {
   const { member, whatIf, error } = decidedBy;
   if (error === true) return `is too unsure: ${worst?.message ?? ""}`;
-  const fate = FATES[worst?.code ?? "gap"] ?? "does not hold";
+  const isEarly = worst?.code === "arrival-missed" && worst.message.includes(" too early;");
+  const fate = isEarly ? "arrives too early" : (FATES[worst?.code ?? "gap"] ?? "does not hold");
   const where = member === null ? `the what-if "${plainText(whatIf ?? "")}"` : `member ${member}`;
   return `${fate} in ${where}${asBad === 0 ? "" : ` (and ${asBad} more)`}`;
 }

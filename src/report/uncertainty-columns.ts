@@ -8,13 +8,18 @@ type Column = readonly [header: string, cell: (route: DecidedRoute, leg: number)
 
 /** Columns of the spread under the forecast error, and of every what-if, where a route has them. What is of the route stands on each leg. */
 export function uncertaintyColumns(routes: readonly DecidedRoute[], unit: string): Column[] {
-  const spread = routes.some((route) => route.spread !== undefined) ? spreadColumns(unit) : [];
+  const arrives = routes.some((route) => route.arrive !== undefined);
+  const spread = routes.some((route) => route.spread !== undefined) ? spreadColumns(unit, arrives) : [];
   const names = routes[0]?.whatIf?.map(({ name }) => name) ?? [];
-  const ensemble = routes.some((route) => route.ensemble !== undefined) ? ensembleColumns(unit) : [];
-  return [...spread, ...ensemble, ...names.flatMap((name, index) => whatIfColumns(name, index, unit))];
+  const ensemble = routes.some((route) => route.ensemble !== undefined) ? ensembleColumns(unit, arrives) : [];
+  return [
+    ...spread,
+    ...ensemble,
+    ...names.flatMap((name, index) => whatIfColumns(name, index, unit, arrives)),
+  ];
 }
 
-function spreadColumns(unit: string): Column[] {
+function spreadColumns(unit: string, arrives: boolean): Column[] {
   const ofLeg =
     (figure: (spread: LegSpread) => number) =>
     ({ spread }: DecidedRoute, leg: number) => {
@@ -27,10 +32,14 @@ function spreadColumns(unit: string): Column[] {
     [`standard deviation of use [${unit}]`, ofLeg(({ use }) => use)],
     [`standard deviation of left [${unit}]`, ofLeg(({ remaining }) => remaining)],
     ["probability that the reserve holds [1]", ({ spread }) => spread?.reserveHolds ?? null],
+    ...only(arrives, [
+      "probability of arriving by the latest time asked for [1]",
+      ({ spread }) => spread?.arrivalHolds ?? null,
+    ]),
   ];
 }
 
-function ensembleColumns(unit: string): Column[] {
+function ensembleColumns(unit: string, arrives: boolean): Column[] {
   const keys = ["min", "p10", "p50", "p90", "max"] as const;
   const ofLeg = <F extends string | number>(
     name: string,
@@ -52,10 +61,16 @@ function ensembleColumns(unit: string): Column[] {
     ["ensemble share in which the reserve holds [1]", ({ ensemble }) => ensemble?.reserveHolds ?? null],
     ["ensemble members that break the reserve", ({ ensemble }) => ensemble?.breaksReserve.join(" ") ?? null],
     ["ensemble members that do not arrive", ({ ensemble }) => ensemble?.doesNotArrive.join(" ") ?? null],
+    ...only(
+      arrives,
+      ["ensemble share that arrives as asked for [1]", ({ ensemble }) => ensemble?.arrivalHolds ?? null],
+      ["ensemble members that arrive too early", ({ ensemble }) => ensemble?.arrivesEarly?.join(" ") ?? null],
+      ["ensemble members that arrive too late", ({ ensemble }) => ensemble?.arrivesLate?.join(" ") ?? null],
+    ),
   ];
 }
 
-function whatIfColumns(name: string, index: number, unit: string): Column[] {
+function whatIfColumns(name: string, index: number, unit: string, arrives: boolean): Column[] {
   const head = `what if ${plainText(name)}:`;
   return [
     [`${head} status`, ({ whatIf }) => whatIf?.[index]?.status ?? null],
@@ -64,5 +79,13 @@ function whatIfColumns(name: string, index: number, unit: string): Column[] {
     [`${head} route's use [${unit}]`, ({ whatIf }) => whatIf?.[index]?.use ?? null],
     [`${head} left at the end [${unit}]`, ({ whatIf }) => whatIf?.[index]?.remaining ?? null],
     [`${head} worst finding`, ({ whatIf }) => whatIf?.[index]?.worst?.code ?? null],
+    ...only(arrives, [
+      `${head} arrival missed by [s]`,
+      ({ whatIf }) => whatIf?.[index]?.arrivalMiss_s ?? null,
+    ]),
   ];
+}
+
+function only(present: boolean, ...columns: readonly Column[]): readonly Column[] {
+  return present ? columns : [];
 }

@@ -10,7 +10,7 @@ import type { WhatIfResult } from "../choose/what-if-results.ts";
 
 /** A what-if's result. */
 export function whatIfJson(value: WhatIfResult): WhatIfResult {
-  const { worst, reached } = value;
+  const { worst, reached, arrivalMiss_s } = value;
   return {
     name: value.name,
     status: value.status,
@@ -29,6 +29,7 @@ export function whatIfJson(value: WhatIfResult): WhatIfResult {
       at_m: worst.at_m,
       message: worst.message,
     },
+    ...(arrivalMiss_s === undefined ? {} : { arrivalMiss_s }),
   };
 }
 
@@ -60,6 +61,7 @@ export function spreadJson(value: ErrorSpread): ErrorSpread {
     remaining: value.remaining,
     margin: value.margin,
     reserveHolds: value.reserveHolds,
+    ...(value.arrivalHolds === undefined ? {} : { arrivalHolds: value.arrivalHolds }),
     ...(value.confidence === undefined ? {} : { confidence: value.confidence }),
     weakest: { time: placeJson(value.weakest.time), use: placeJson(value.weakest.use) },
     legs: value.legs.map(legJson),

@@ -2,6 +2,7 @@ import type { DecidedRoute } from "../choose/decided.ts";
 import { isOfVariant } from "../choose/what-if-results.ts";
 import { worstFinding } from "../choose/window-cell.ts";
 import type { RouteStatus } from "../estimate/result.ts";
+import { whatIfsArriveLines } from "./arrival-lines.ts";
 import { type Column, laidOut, TABLE_WIDTH } from "./columns.ts";
 import { placedText } from "./number-text.ts";
 import { clipped, displayWidth, isolated, plainText } from "./plain-text.ts";
@@ -45,7 +46,7 @@ export function whatIfTable(route: DecidedRoute, units: TableUnits): string[] {
     [{ head: ["", "What if"], cells: names, align: "left" }, ...columns],
     0,
   );
-  return ["What if (each an estimate of its own)", ...head, ...lines];
+  return ["What if (each an estimate of its own)", ...head, ...lines, ...whatIfsArriveLines(route)];
 }
 
 function figureColumns(rows: readonly Row[], units: TableUnits): Column[] {
