@@ -3,11 +3,13 @@ import { clockSince, durationText } from "../format/time-text.ts";
 import { inUnit, storeUnit } from "../format/units.ts";
 import { SeverityShape } from "../ledger/StatusMark.tsx";
 import type { PageState } from "../state/page-state.ts";
+import { missWords } from "./spread-words.ts";
 import "./what-if-table.css";
 
 interface Row {
   readonly name: string;
   readonly arrival: string | null;
+  readonly arrivalMiss_s?: number | null;
   readonly passage_s: number | null;
   readonly use: number | null;
   readonly remaining: number | null;
@@ -39,7 +41,10 @@ export function WhatIfTable({ page, route }: { readonly page: PageState; readonl
         {rows.map((row) => (
           <tr key={row.name} title={row.why ?? undefined}>
             <th scope="row">{row.name}</th>
-            <td>{row.arrival === null ? "not reached" : clockSince(row.arrival, route.departure, zone)}</td>
+            <td>
+              {row.arrival === null ? "not reached" : clockSince(row.arrival, route.departure, zone)}
+              {missWords(row.arrivalMiss_s)}
+            </td>
             <td>{durationText(row.passage_s)}</td>
             <td>{inUnit(row.use, amount)}</td>
             <td>{inUnit(row.remaining, amount)}</td>

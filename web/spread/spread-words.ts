@@ -12,6 +12,11 @@ export function spreadWords(route: DecidedRoute, spread: ErrorSpread, view: Show
   const asked = spread.confidence === undefined ? "" : `; the plan asks for ${askedText(spread.confidence)}`;
   return [
     `${what} with a probability of ${percentText(spread.reserveHolds)}${asked}.`,
+    ...(route.arrive === undefined || spread.arrivalHolds === undefined
+      ? []
+      : [
+          `Arrives by ${clockSince(route.arrive.notAfter, route.departure, view.zone.value)} with a probability of ${percentText(spread.arrivalHolds)}.`,
+        ]),
     `One standard deviation: arrival ${durationText(spread.arrival_s)}, use ${inUnit(spread.use, amount)} ${amount.symbol}, left ${inUnit(spread.remaining, amount)} ${amount.symbol}.`,
     ...weakWords(route, spread.weakest.use, "use", view),
     ...weakWords(route, spread.weakest.time, "arrival", view),
@@ -29,6 +34,7 @@ export function ensembleWords(route: DecidedRoute, ensemble: EnsembleResult, { z
     `${what} in ${held} of ${members.length} members (${percentText(reserveHolds)}).`,
     ...(breaksReserve.length === 0 ? [] : [`Broken in ${memberWords(breaksReserve)}.`]),
     ...(doesNotArrive.length === 0 ? [] : [`Does not arrive in ${memberWords(doesNotArrive)}.`]),
+    ...arriveWords(route, ensemble, clock),
     ...(arrival === null
       ? []
       : [`Arrival 10 % ${clock(arrival.p10)}, 50 % ${clock(arrival.p50)}, 90 % ${clock(arrival.p90)}.`]),
@@ -38,6 +44,32 @@ export function ensembleWords(route: DecidedRoute, ensemble: EnsembleResult, { z
           `Left 10 % ${inUnit(remaining.p10, amount)}, 50 % ${inUnit(remaining.p50, amount)}, 90 % ${inUnit(remaining.p90, amount)} ${amount.symbol}.`,
         ]),
   ];
+}
+
+/** In how many members a route arrives when its pace asks for it. */
+function arriveWords(
+  { arrive }: DecidedRoute,
+  { members, arrivalHolds, arrivesEarly = [], arrivesLate = [] }: EnsembleResult,
+  clock: (time: string) => string,
+): string[] {
+  if (arrive === undefined || arrivalHolds === undefined) return [];
+  const { notBefore, notAfter } = arrive;
+  const span =
+    notBefore === null || notBefore === notAfter
+      ? `by ${clock(notAfter)}`
+      : `between ${clock(notBefore)} and ${clock(notAfter)}`;
+  const kept = Math.round(arrivalHolds * members.length);
+  return [
+    `Arrives ${span} in ${kept} of ${members.length} members (${percentText(arrivalHolds)}).`,
+    ...(arrivesEarly.length === 0 ? [] : [`Too early in ${memberWords(arrivesEarly)}.`]),
+    ...(arrivesLate.length === 0 ? [] : [`Too late in ${memberWords(arrivesLate)}.`]),
+  ];
+}
+
+/** ` (12 min late)` after an arrival that misses what was asked for; nothing after one that keeps it. */
+export function missWords(miss_s: number | null | undefined): string {
+  if (miss_s === undefined || miss_s === null || miss_s === 0) return "";
+  return ` (${durationText(Math.abs(miss_s))} ${miss_s > 0 ? "late" : "early"})`;
 }
 
 function weakWords(
