@@ -65,6 +65,7 @@ export function bareNumber(name: string, bounds: Bounds, description: string) {
   const limits = {
     ...(bounds.above === undefined ? {} : { exclusiveMinimum: bounds.above }),
     ...(bounds.atLeast === undefined ? {} : { minimum: bounds.atLeast }),
+    ...(bounds.atMost === undefined ? {} : { maximum: bounds.atMost }),
   };
   return z
     .number({ error: (issue) => sentence(name, "takes a number without a unit", issue.input) })
@@ -199,6 +200,7 @@ function brokenSize(value: number, dimension?: Dimension): string | null {
 function boundText(value: number, dimensions: readonly Dimension[]): string {
   const only = dimensions.length === 1 ? dimensions[0] : undefined;
   if (only === "share") return `${value * 100} %`;
+  if (only === "time" && value !== 0 && value % 3600 === 0) return `${value / 3600} h`;
   return only === undefined || value === 0 ? String(value) : `${value} ${INNER_UNITS[only]}`;
 }
 

@@ -128,6 +128,21 @@ describe("the what-ifs of a plan", () => {
     ["with a factor below 0", [{ wind: -1 }], "whatIf[0].wind is not below 0; found -1"],
     ["with a factor that has a unit", [{ wind: "120 %" }], "whatIf[0].wind takes a number without a unit"],
     ["with an angle without its unit", [{ veer: 20 }], "whatIf[0].veer takes a number with the unit deg"],
+    ["with a factor meant as a percentage", [{ wind: 120 }], "whatIf[0].wind is at most 10; found 120"],
+    ["with a current beyond the bound", [{ current: 10.5 }], "whatIf[0].current is at most 10; found 10.5"],
+    ["with more than a turn", [{ veer: "-361 deg" }], 'whatIf[0].veer is not below -360 °; found "-361 deg"'],
+    [
+      "with a speed of another craft",
+      [{ speed: "200 kn" }],
+      'whatIf[0].speed is at most 100 m/s; found "200 kn"',
+    ],
+    [
+      "that spend ten times more",
+      [{ consumption: "1000 %" }],
+      'whatIf[0].consumption is at most 900 %; found "1000 %"',
+    ],
+    ["of another age", [{ late: "1e9 h" }], 'whatIf[0].late is at most 8760 h; found "1e9 h"'],
+    ["of the year before", [{ late: "-8761 h" }], 'whatIf[0].late is not below -8760 h; found "-8761 h"'],
     ["that spend nothing", [{ consumption: "-100 %" }], "whatIf[0].consumption is above -100 %"],
     [
       "with an unknown key",
@@ -138,6 +153,15 @@ describe("the what-ifs of a plan", () => {
     ["that are no list", { wind: 1.2 }, "whatIf takes a list of what-ifs"],
   ])("%s are one sentence", async (_, whatIf, message) => {
     expect(await faultOf({ whatIf })).toContain(message);
+  });
+
+  test("may go as far as the bounds", async () => {
+    const far = [
+      { wind: 10, current: 0, veer: "360 deg", speed: "-100 m/s", consumption: "900 %", late: "8760 h" },
+      { veer: "-360 deg", speed: "100 m/s", consumption: "-99 %", late: "-8760 h" },
+    ];
+    const { whatIfs } = await readPlan(planOf({ whatIf: far }), { open });
+    expect(whatIfs?.map(({ late_s }) => late_s)).toEqual([31536000, -31536000]);
   });
 
   test("that change a field which the plan has not, or a speed which the pace chooses, are one sentence", async () => {
