@@ -137,7 +137,8 @@ function checkSpeeds({ conditions }: Sweep, speeds: readonly number[] | null): v
   for (const speed of speeds ?? []) checkSpeed(conditions.craft, conditions.pace, speed);
 }
 
-function checkSpeed({ power, name }: Craft, pace: Pace, speed: number): void {
+/** @throws InputError where a window does not try a speed: the pace chooses its own, or the craft's power model lacks it */
+export function checkSpeed({ power, name }: Craft, pace: Pace, speed: number): void {
   const { hold } = paceAt(pace, speed);
   if (!(speed > 0) || (hold === "through-speed" && !(speed >= power.min && speed <= power.max)))
     throw new InputError(

@@ -1,5 +1,6 @@
 import {
   fieldSummary,
+  InputError,
   parseQuantity,
   parseTime,
   type Units,
@@ -46,7 +47,7 @@ export async function windowCommand(file: string, options: WindowOptions): Promi
     ...(speeds === undefined ? {} : { speeds: speeds.split(",") }),
     ...(arriveBy === undefined ? {} : { arriveBy }),
     ...(route === undefined ? {} : { routes: route }),
-  });
+  }).catch(tellOfOption);
   const { plan, input, window, cells, summary, refined, inTime, paces, sure } = answer;
   const { title, craft, pace, arrive = null } = plan;
   const fields = input.fields.map(fieldSummary);
@@ -70,6 +71,16 @@ function checkWindowOptions({ from, to, every, speeds, arriveBy }: WindowOptions
   if (from !== undefined) parseTime(from, "--from");
   if (to !== undefined) parseTime(to, "--to");
   if (every !== undefined) parseQuantity(every, "time", "--every");
-  for (const speed of speeds?.split(",") ?? []) parseQuantity(speed, "speed", "--speeds");
+  for (const speed of speeds?.split(",") ?? []) {
+    if (!(parseQuantity(speed, "speed", "--speeds") > 0))
+      throw new InputError(`--speeds is above 0; found "${speed}"`);
+  }
   if (arriveBy !== undefined) parseTime(arriveBy, "--arrive-by");
+}
+
+/** A speed that the craft lacks is known once the plan is read; its fault names the option too. */
+function tellOfOption(fault: unknown): never {
+  const isOfSpeeds =
+    fault instanceof InputError && fault.place.file === undefined && fault.place.key === "speeds";
+  throw isOfSpeeds ? new InputError(fault.sentence, { key: "--speeds" }) : fault;
 }

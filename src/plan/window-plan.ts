@@ -5,9 +5,10 @@ import { type RefinedWindow, refinedBests, refineRoutes } from "../choose/refine
 import { type RoutePaces, routePaces } from "../choose/route-paces.ts";
 import { runSteps } from "../choose/steps.ts";
 import { type SureWindow, sureWindow } from "../choose/sure-window.ts";
-import { makeSweep, windowCells } from "../choose/window.ts";
+import { checkSpeed, makeSweep, windowCells } from "../choose/window.ts";
 import type { WindowCell } from "../choose/window-cell.ts";
 import { summariseWindow, type WindowSummary } from "../choose/window-summary.ts";
+import type { Craft, Pace } from "../craft/craft.ts";
 import { InputError } from "../errors.ts";
 import { type EstimateInput, prepareRoutes } from "../estimate/estimate.ts";
 import { parseQuantity } from "../units.ts";
@@ -68,7 +69,7 @@ export interface WindowAnswer {
  */
 export async function windowPlan(text: string, request: WindowRequest): Promise<WindowAnswer> {
   const checked = await checkPlan(text, request);
-  const window = windowAsked(checked.plan.window, request);
+  const window = windowAsked(checked.plan, request);
   return toldOfFile(request.file, () => answerWindow(checked, window, request.refine === true));
 }
 
@@ -98,7 +99,7 @@ function answerWindow(
 }
 
 function windowAsked(
-  planned: DepartureWindow | undefined,
+  { window: planned, craft, pace }: Plan,
   { file, from, to, every, speeds, arriveBy }: WindowRequest,
 ): DepartureWindow {
   const needed = (what: string, value: number | undefined): number => {
@@ -117,6 +118,17 @@ function windowAsked(
     speeds_m_s:
       speeds === undefined
         ? (planned?.speeds_m_s ?? null)
-        : speeds.map((speed) => parseQuantity(speed, "speed", "speeds")),
+        : speeds.map((speed) => speedAsked(speed, craft, pace)),
   };
+}
+
+/** A speed given beside the plan: a fault in it is not told of the plan's file. */
+function speedAsked(text: string, craft: Craft, pace: Pace): number {
+  const speed = parseQuantity(text, "speed", "speeds");
+  try {
+    checkSpeed(craft, pace, speed);
+  } catch (error) {
+    throw error instanceof InputError ? new InputError(error.sentence, { key: "speeds" }) : error;
+  }
+  return speed;
 }

@@ -123,7 +123,12 @@ describe("legwork window", () => {
     [["--from", "dawn"], /^legwork: --from takes an ISO 8601 date and time with its zone/],
     [["--to", "2027-05-03T00:00Z"], /does not end before it begins/],
     [["--speeds", "8kn,"], /^legwork: --speeds takes a number with one of .* found ""\n$/],
-    [["--speeds", "99kn"], /lies within the power model .* found 50\.9 m\/s \(99\.0 kn\)\n$/],
+    [
+      ["--speeds", "8kn,99kn"],
+      /^legwork: --speeds: a speed of a window lies within the power model .* found 50\.9 m\/s \(99\.0 kn\)\n$/,
+    ],
+    [["--speeds=-3kn"], /^legwork: --speeds is above 0; found "-3kn"\n$/],
+    [["--speeds", "8kn,0kn"], /^legwork: --speeds is above 0; found "0kn"\n$/],
     [["--every", "1s", "--to", "2027-05-09T00:00Z"], /a window has at most 100000 cells/],
     [["--route", "Nowhere"], /a route is one of "Sound"/],
     [["--format", "gpx"], /'gpx' is invalid/],
