@@ -284,6 +284,20 @@ describe("how sure it is", () => {
     expect(legs?.querySelector("tbody tr:last-child")?.textContent).toContain(onArrival);
   });
 
+  test("says by how much a what-if misses the arrival that the pace asks for, and that it is a stop", async () => {
+    const arrive = { notBefore: "2027-05-04T15:30Z", notAfter: "2027-05-04T16:00Z" };
+    const page = await pageOf((plan) => ({
+      ...plan,
+      pace: { arrive },
+      whatIf: [{ name: "A slow start", late: "25 min" }],
+      routes: plan.routes.filter(({ name }) => name === "Sound"),
+    }));
+    await page.decisions.ask(page.shown.value, false);
+    render(<SureView page={page} />);
+    const table = await screen.findByRole("table", { name: /^What if: Sound/ });
+    expect(table.querySelector("tbody tr")?.textContent).toMatch(/\d\d:\d\d \(\d\d min late\).*stop$/);
+  });
+
   test("begins with common what-ifs and a stated error, each to be changed", async () => {
     const page = await pageOf();
     render(<SureView page={page} />);
