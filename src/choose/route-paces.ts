@@ -1,7 +1,7 @@
 import { fastestWithReserve, leastUseSpeed } from "./pace-curve.ts";
 import type { Sweep } from "./window.ts";
 import type { WindowCell } from "./window-cell.ts";
-import type { WindowSummary } from "./window-summary.ts";
+import type { WindowBest } from "./window-summary.ts";
 
 /** A route's choice of pace at one departure, among all speeds of the craft's range. */
 export interface RoutePaces {
@@ -17,6 +17,7 @@ export interface RoutePaces {
  * For each route, at its best departure by use: the speed of least use and the fastest that keeps the reserve, on the route's true
  * figures and not among the speeds of the window alone. Routes of which nothing can be done are left out.
  *
+ * @param routes with their bests, of the window or to the minute
  * @throws InputError where the craft's speeds have no bound
  *
  * @example
@@ -28,7 +29,10 @@ export interface RoutePaces {
  * const window = { from: 0, to: 3600000, every_s: 1800, speeds_m_s: null };
  * routePaces(sweep, summariseWindow([...windowCells(sweep, window)]))[0].leastUse.speed_m_s // → 2
  */
-export function routePaces({ prepared, conditions }: Sweep, { routes }: WindowSummary): RoutePaces[] {
+export function routePaces(
+  { prepared, conditions }: Sweep,
+  { routes }: { readonly routes: readonly { readonly route: string; readonly best: WindowBest }[] },
+): RoutePaces[] {
   return routes.flatMap(({ route, best }) => {
     const way = prepared.find((each) => each.route.name === route);
     if (way === undefined || best.use === null) return [];

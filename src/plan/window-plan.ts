@@ -85,7 +85,7 @@ function answerWindow(
   const summary = summariseWindow(cells);
   const isPaceOpen = minutes !== null && window.speeds_m_s !== null && plan.pace.hold === "through-speed";
   const hasRange = Number.isFinite(plan.craft.speeds?.max ?? plan.craft.power.max);
-  const paces = isPaceOpen && hasRange ? routePaces(sweep, summary) : null;
+  const paces = isPaceOpen && hasRange ? routePaces(sweep, refinedBests(minutes)) : null;
   const { whatIfs = [], errors = [], confidence } = plan;
   const asked = { whatIfs, errors, members, confidence };
   const sure = CellTrials.has(asked)

@@ -242,9 +242,9 @@ describe("a plan's window worked out", () => {
   test("refined over speeds, tells the least use and the fastest of all speeds of the range", async () => {
     const window = { ...WINDOW, speeds: ["6 kn", "9 kn", "12 kn"] };
     const text = textOf(["window", window], ["reserve", "70 %"]);
-    const { paces, summary, cells } = await windowPlan(text, { ...request, refine: true });
+    const { paces, refined, cells } = await windowPlan(text, { ...request, refine: true });
     const [own] = paces ?? [];
-    const best = summary.routes[0]?.best.use;
+    const best = refined?.routes[0]?.best.use;
     expect(own?.departure).toBe(best?.departure);
     expect(own?.leastUse?.use ?? Infinity).toBeLessThanOrEqual(best?.use ?? 0);
     // In still water the use rises with the speed here: the reserve shuts the range from above.
