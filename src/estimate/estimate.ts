@@ -3,9 +3,10 @@ import { ADVISORY } from "../constants.ts";
 import type { Craft, Pace, Reserve } from "../craft/craft.ts";
 import type { Field } from "../field/field.ts";
 import { estimateRoute, type RouteRun } from "./estimate-route.ts";
-import { routeFinding, statusOf } from "./findings.ts";
+import { fieldNotes } from "./field-notes.ts";
+import { statusOf } from "./findings.ts";
 import { isoTime } from "./leg-result.ts";
-import { fieldsInUse, mediumRole, type PreparedRoute, prepareRoute } from "./prepare.ts";
+import { fieldsInUse, type PreparedRoute, prepareRoute } from "./prepare.ts";
 import type { Estimate, FieldSummary, Finding, Profile } from "./result.ts";
 import type { Route } from "./route.ts";
 
@@ -105,7 +106,7 @@ export function prepareRoutes(input: EstimateInput): PreparedRoute[] {
 export function estimatePrepared(prepared: readonly PreparedRoute[], input: EstimateInput): EstimateAnswer {
   const fields = fieldsInUse(input.craft, input.fields);
   const { departure, craft, reserve } = input;
-  const notes = fieldNotes(input, fields);
+  const notes = fieldNotes(input);
   const runs = prepared.map((route, index) => {
     const pace = input.paces?.[index] ?? input.pace;
     return withNotes(estimateRoute(route, { departure, craft, pace, reserve, fields }), notes);
@@ -127,32 +128,9 @@ function withNotes(run: RouteRun, notes: readonly Finding[]): RouteRun {
   return { ...run, estimate: { ...run.estimate, status: statusOf(findings), findings } };
 }
 
-function fieldNotes({ craft, fields }: EstimateInput, used: readonly Field[]): Finding[] {
-  const notes: Finding[] = [];
-  const medium = mediumRole(craft);
-  if (fields.length === 0) {
-    notes.push(routeFinding("no-field", "the plan names no field: this is an estimate for a still medium"));
-  } else if (!used.some(({ role }) => role === medium)) {
-    notes.push(routeFinding("no-field", `the plan names no ${medium}: the ${craft.moves} is taken as still`));
-  }
-  if (craft.moves === "water" && craft.windage === null && used.some(({ role }) => role === "wind")) {
-    const what = `the wind changes neither time nor use: ${craft.name} names no windage`;
-    notes.push(routeFinding("field-unused", `${what}; it is read for limits and cautions alone`));
-  }
-  for (const field of fields) {
-    if (!used.includes(field))
-      notes.push(
-        routeFinding(
-          "field-unused",
-          `the ${field.role} is left out: ${craft.name} moves through the ${craft.moves}`,
-        ),
-      );
-  }
-  return notes;
-}
-
 /**
- * Files and validity of a field: from its first valid time to its last; `null` where no tile of it is timed.
+ * Files and validity of a field: from its first valid time to its last; `null` where no tile of it is timed. Of an ensemble, those
+ * of the control, and the files of every member beside them.
  *
  * @example
  * async function* open() {
@@ -162,7 +140,7 @@ function fieldNotes({ craft, fields }: EstimateInput, used: readonly Field[]): F
  * const grid = await readGridFile(open, { file: "stream.csv", role: "current" });
  * fieldSummary(mergeField("current", [{ grid, gaps: "nearest", beyond: "stop", outside: "stop" }])) // → { files: ["stream.csv"], validFrom: "2027-05-04T00:00:00.000Z", validTo: "2027-05-04T06:00:00.000Z" }
  */
-export function fieldSummary({ role, tiles }: Field): FieldSummary {
+export function fieldSummary({ role, tiles, origin }: Field): FieldSummary {
   const times = tiles.flatMap((tile) =>
     tile.times === null ? [] : [tile.times[0] as number, tile.times[tile.times.length - 1] as number],
   );
@@ -171,5 +149,9 @@ export function fieldSummary({ role, tiles }: Field): FieldSummary {
     files: tiles.flatMap(({ files }) => files),
     validFrom: times.length === 0 ? null : isoTime(Math.min(...times)),
     validTo: times.length === 0 ? null : isoTime(Math.max(...times)),
+    ...(origin === undefined || origin.members.length === 0 ? {} : { members: origin.members }),
+    ...(origin === undefined || origin.unused.length === 0
+      ? {}
+      : { unused: origin.unused.map(({ file }) => file) }),
   };
 }

@@ -28,6 +28,7 @@ const SEVERITIES: Readonly<Record<FindingCode, Severity>> = {
   "height-outside-field": "caution",
   "near-pole": "note",
   "field-unused": "note",
+  "field-shared": "note",
   "no-field": "note",
   "no-variation": "note",
   "pace-found": "note",

@@ -1,5 +1,5 @@
 import type { StoreUnit } from "../craft/craft.ts";
-import type { FieldRole } from "../field/field.ts";
+import type { FieldRole, MemberFiles } from "../field/field.ts";
 import type { PathKind } from "../geodesy/track.ts";
 
 /*
@@ -33,6 +33,7 @@ export type FindingCode =
   | "height-outside-field"
   | "near-pole"
   | "field-unused"
+  | "field-shared"
   | "no-field"
   | "no-variation"
   | "pace-found";
@@ -191,6 +192,10 @@ export interface FieldSummary {
   /** First and last valid time; `null` for a steady field. */
   readonly validFrom: string | null;
   readonly validTo: string | null;
+  /** Of an ensemble: the files of each member, ascending; the keys above are of the first, the control. */
+  readonly members?: readonly MemberFiles[];
+  /** Files that the plan names and nothing is used of. */
+  readonly unused?: readonly string[];
 }
 
 /** The whole answer to a plan: `legwork-estimate/1`. */

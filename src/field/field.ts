@@ -41,9 +41,32 @@ export interface Tile {
   readonly beyond: BeyondPolicy;
 }
 
+/** The files that a member of an ensemble is made of. */
+export interface MemberFiles {
+  readonly member: number;
+  readonly files: readonly string[];
+}
+
+/** A file of which nothing is used, since earlier ones hold wherever and whenever it has data. */
+export interface UnusedFile {
+  readonly file: string;
+  readonly by: readonly string[];
+}
+
+/** What became of the files that a plan names for a role. */
+export interface FieldOrigin {
+  /** Ascending; empty where the role has fewer than two members. */
+  readonly members: readonly MemberFiles[];
+  readonly unused: readonly UnusedFile[];
+  /** Files that name no member beside others that do: they are every member's. */
+  readonly shared: readonly string[];
+}
+
 /** All data of one role. Where tiles overlap, the earlier one holds. */
 export interface Field {
   readonly role: FieldRole;
   readonly tiles: readonly Tile[];
   readonly outside: OutsidePolicy;
+  /** Left out where the field was not made of a plan's files. */
+  readonly origin?: FieldOrigin;
 }

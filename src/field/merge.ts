@@ -28,14 +28,31 @@ export interface FieldSource {
  * mergeField("wind", [{ grid, gaps: "zero", beyond: "stop", outside: "stop" }]).tiles.length // → 1
  */
 export function mergeField(role: FieldRole, sources: readonly FieldSource[]): Field {
+  return { role, tiles: joinedFiles(sources).map(({ tile }) => tile), outside: outsideOf(sources) };
+}
+
+/** Files that are joined into one tile, in the order of the list. */
+export interface JoinedFiles {
+  readonly tile: Tile;
+  readonly group: readonly FieldSource[];
+  /** Those of which some valid time is in the tile. */
+  readonly used: ReadonlySet<FieldSource>;
+}
+
+/** The tiles of a role's files: see {@link mergeField}. */
+export function joinedFiles(sources: readonly FieldSource[]): JoinedFiles[] {
   const groups: FieldSource[][] = [];
   for (const source of sources) {
     const group = groups.find(([first]) => areJoined((first as FieldSource).grid, source.grid));
     if (group === undefined) groups.push([source]);
     else group.push(source);
   }
-  const outside = sources.some((source) => source.outside === "zero") ? "zero" : "stop";
-  return { role, tiles: groups.map(tileOf), outside };
+  return groups.map(joined);
+}
+
+/** What holds outside all tiles of a role's files. */
+export function outsideOf(sources: readonly FieldSource[]): OutsidePolicy {
+  return sources.some((source) => source.outside === "zero") ? "zero" : "stop";
 }
 
 function areJoined(a: GridFile, b: GridFile): boolean {
@@ -59,13 +76,13 @@ interface DatedSlice {
   readonly mask: Uint8Array | null;
 }
 
-function tileOf(group: readonly FieldSource[]): Tile {
+function joined(group: readonly FieldSource[]): JoinedFiles {
   const first = group[0] as FieldSource;
   const slices = datedSlices(group);
   const last = slices.at(-1) as DatedSlice;
   const used = new Set(slices.map((slice) => slice.source));
   const { lon, lat, height, global } = first.grid;
-  return {
+  const tile: Tile = {
     files: group.filter((source) => used.has(source)).map((source) => source.grid.file),
     lon,
     lat,
@@ -77,6 +94,7 @@ function tileOf(group: readonly FieldSource[]): Tile {
     global,
     beyond: last.source.beyond,
   };
+  return { tile, group, used };
 }
 
 /** The slices of files that are joined, in order of time; those that an earlier file's times span are left out. */

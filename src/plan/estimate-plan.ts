@@ -12,7 +12,9 @@ import {
   estimatePrepared,
   prepareRoutes,
 } from "../estimate/estimate.ts";
+import { fieldNotes } from "../estimate/field-notes.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
+import type { Finding } from "../estimate/result.ts";
 import type { MemberFields } from "./merge-fields.ts";
 import type { OpenFile, Plan } from "./plan.ts";
 import { type FileProgress, readMembers } from "./read-fields.ts";
@@ -54,6 +56,8 @@ export interface PlanChecked {
   readonly input: EstimateInput;
   /** Every member of an ensemble; empty where there are fewer than two. */
   readonly members: readonly MemberFields[];
+  /** What there is to note of the fields, whatever the route. */
+  readonly notes: readonly Finding[];
 }
 
 /**
@@ -156,5 +160,6 @@ async function readInput(
   const { fields, members } = await readMembers(plan.fields, open, onProgress);
   const coast = craft.moves === "water" && loadLand !== undefined ? await loadLand() : null;
   const land = coast === null ? null : landFinder(coast);
-  return { input: { title, departure, craft, pace, reserve, fields, routes, land }, members };
+  const input = { title, departure, craft, pace, reserve, fields, routes, land };
+  return { input, members, notes: fieldNotes(input) };
 }

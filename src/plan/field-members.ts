@@ -15,6 +15,23 @@ export function holdsSeveral(grid: GridFile): boolean {
 }
 
 /**
+ * Checks that the members of a role are named in one way.
+ *
+ * @throws InputError where one of its files has a column of members and the plan names another's
+ */
+export function checkNaming(sources: readonly RoleSource[]): void {
+  const named = sources.find(({ reference }) => reference.member !== undefined);
+  const column = sources.find(
+    ({ grid, reference }) => reference.member === undefined && grid.members !== undefined,
+  );
+  if (named === undefined || column === undefined) return;
+  throw new InputError(
+    `the members of a role are named by its files' own columns or by the plan; found both, a column here and "member": ${named.reference.member} of ${named.grid.file} in the plan`,
+    { file: column.grid.file },
+  );
+}
+
+/**
  * The numbers of the members that the files give, ascending: the same in every file with a column of members, and, of files that
  * the plan gives a member each, together.
  *

@@ -1,9 +1,11 @@
 import { InputError } from "../errors.ts";
-import type { Field, FieldRole } from "../field/field.ts";
+import type { Field, FieldOrigin, FieldRole, MemberFiles } from "../field/field.ts";
 import type { GridFile } from "../field/grid-file.ts";
 import { memberGrid } from "../field/member-grid.ts";
-import { type FieldSource, mergeField } from "../field/merge.ts";
-import { holdsSeveral, membersOf, type RoleSource } from "./field-members.ts";
+import type { FieldSource } from "../field/merge.ts";
+import { seenField } from "../field/seen-field.ts";
+import { checkNaming, holdsSeveral, membersOf, type RoleSource } from "./field-members.ts";
+import { checkUnnamed, type SeenRole, sharedFiles, unusedFiles } from "./hidden-files.ts";
 import type { FieldReference } from "./plan.ts";
 
 /** The fields of one member of an ensemble; a role without members is the same object in all. */
@@ -22,21 +24,40 @@ export interface FieldsRead {
 /**
  * The fields that files make once they are read, the roles in the order in which they first come.
  *
- * @throws InputError where the members of two files or roles are not the same
+ * @throws InputError where the members of two files or roles are not the same, a role's members are named in two ways, or a file
+ *   without a member and one with it cover the same
  */
 export function mergeSources(all: readonly RoleSource[]): FieldsRead {
   const roles = [...new Set(all.map(({ grid }) => grid.role))];
   const sources = roles.map((role) => all.filter(({ grid }) => grid.role === role));
+  for (const own of sources) checkNaming(own);
   const numbers = membersOf(sources.flat());
-  const shared = sources.map((own, n) =>
-    own.some(({ members }) => members !== null) ? null : fieldOf(roles[n] as FieldRole, own, null),
-  );
-  const fieldsFor = (member: number | null) =>
-    sources.map((own, n) => shared[n] ?? fieldOf(roles[n] as FieldRole, own, member));
-  const members = numbers.map((member) => ({ member, fields: fieldsFor(member) }));
-  return { fields: members[0]?.fields ?? fieldsFor(null), members: members.length > 1 ? members : [] };
+  const merged = sources.map((own, n) => roleFields(roles[n] as FieldRole, own, numbers));
+  const fieldsAt = (place: number) => merged.map((fields) => (fields[place] ?? fields[0]) as Field);
+  const members = numbers.map((member, place) => ({ member, fields: fieldsAt(place) }));
+  return { fields: members[0]?.fields ?? fieldsAt(0), members: members.length > 1 ? members : [] };
 }
 
+/** The field of a role in every member, or its one field where none of its files has members. */
+function roleFields(role: FieldRole, sources: readonly RoleSource[], numbers: readonly number[]): Field[] {
+  const hasMembers = sources.some(({ members }) => members !== null);
+  const seen = hasMembers
+    ? numbers.map((member) => seenBy(role, sources, member))
+    : [seenBy(role, sources, null)];
+  if (hasMembers) checkUnnamed(sources, seen);
+  const isEnsemble = hasMembers && numbers.length > 1;
+  const unused = unusedFiles(sources, seen);
+  const origin: FieldOrigin = {
+    members: isEnsemble ? numbers.map((member, n) => filesOf(member, seen[n])) : [],
+    unused,
+    shared: isEnsemble ? sharedFiles(sources, unused) : [],
+  };
+  return seen.map(({ field }) => ({ ...field, origin }));
+}
+
+function filesOf(member: number, seen: SeenRole | undefined): MemberFiles {
+  return { member, files: [...new Set(seen?.field.tiles.flatMap(({ files }) => files))] };
+}
 /**
  * A file as read, with the members that it holds.
  *
@@ -55,13 +76,20 @@ export function roleSource(grid: GridFile, reference: FieldReference): RoleSourc
 }
 
 /** The field of one member, of the files that have it or have no members. */
-function fieldOf(role: FieldRole, sources: readonly RoleSource[], member: number | null): Field {
+function seenBy(role: FieldRole, sources: readonly RoleSource[], member: number | null): SeenRole {
   const own = sources.filter(({ members }) => members === null || members.includes(member as number));
-  return mergeField(
-    role,
-    own.map(({ grid, reference: { gaps, beyond, outside } }): FieldSource => {
-      const alone = member !== null && holdsSeveral(grid) ? memberGrid(grid, member) : grid;
-      return { grid: alone, gaps, beyond, outside };
-    }),
-  );
+  const alone = new Map<FieldSource, RoleSource>();
+  for (const source of own) {
+    const { grid, reference } = source;
+    const { gaps, beyond, outside } = reference;
+    const named = member !== null && holdsSeveral(grid) ? memberGrid(grid, member) : grid;
+    alone.set({ grid: named, gaps, beyond, outside }, source);
+  }
+  const { field, hidden } = seenField(role, [...alone.keys()]);
+  const roleSourceOf = (source: FieldSource) => alone.get(source) as RoleSource;
+  return {
+    field,
+    own,
+    hidden: new Map(hidden.map(({ source, by }) => [roleSourceOf(source), by.map(roleSourceOf)])),
+  };
 }

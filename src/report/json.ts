@@ -157,8 +157,17 @@ function route(value: DecidedRoute): DecidedRoute {
 }
 
 /** A field's summary with its keys in the order of the format. */
-export function fieldJson(value: FieldSummary): FieldSummary {
-  return { role: value.role, files: [...value.files], validFrom: value.validFrom, validTo: value.validTo };
+export function fieldJson({ role, files, validFrom, validTo, members, unused }: FieldSummary): FieldSummary {
+  return {
+    role,
+    files: [...files],
+    validFrom,
+    validTo,
+    ...(members === undefined
+      ? {}
+      : { members: members.map((each) => ({ member: each.member, files: [...each.files] })) }),
+    ...(unused === undefined ? {} : { unused: [...unused] }),
+  };
 }
 
 /** For `JSON.stringify`: a number that JSON would write as null is a defect, never silent. */

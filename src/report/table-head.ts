@@ -34,9 +34,12 @@ export function arriveText(asked: Pick<ArrivalAnswer, "notBefore" | "notAfter">,
   return `holds the speed through the ${moves} that arrives ${wantedText(asked)}, each route its own`;
 }
 
-/** Files of a field and their validity. */
+/** Files of a field, those of every member, and their validity. */
 export function fieldText(field: FieldSummary): string {
-  const files = field.files.map(plainText).join(", ");
+  const { members } = field;
+  const all = new Set(members?.flatMap((member) => member.files) ?? field.files);
+  const count = members === undefined ? "" : ` (${members.length} members)`;
+  const files = Array.from(all, plainText).join(", ") + count;
   if (field.validFrom === null || field.validTo === null) return `${files}; steady`;
   return `${files}; valid ${instantText(field.validFrom, "minute").replace(" UTC", "")} to ${instantText(field.validTo, "minute")}`;
 }

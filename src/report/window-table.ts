@@ -1,4 +1,5 @@
 import { ADVISORY } from "../constants.ts";
+import type { FieldSummary } from "../estimate/result.ts";
 import { rule, TABLE_WIDTH } from "./columns.ts";
 import type { Units } from "./input.ts";
 import { placedText } from "./number-text.ts";
@@ -29,6 +30,11 @@ function howText({ craft, pace, arrive, window }: WindowReport, units: WindowUni
   return arriveText(asked, craft.moves);
 }
 
+/** A window has no findings of a field's own, so its head says what is left out. */
+function unusedText({ unused = [] }: FieldSummary): string {
+  return unused.length === 0 ? "" : `; nothing used of ${unused.map(plainText).join(", ")}`;
+}
+
 function head(report: WindowReport, units: WindowUnits): string[] {
   const { title, craft, window, fields, summary } = report;
   const { size, decimals, symbol } = units.store;
@@ -45,7 +51,7 @@ function head(report: WindowReport, units: WindowUnits): string[] {
     ],
     ...fields.map((field): [string, string] => [
       field.role === "wind" ? "Wind" : "Current",
-      fieldText(field),
+      `${fieldText(field)}${unusedText(field)}`,
     ]),
   ];
   if (fields.length === 0) entries.push(["Fields", "none: still air and water"]);

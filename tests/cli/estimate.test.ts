@@ -282,6 +282,17 @@ describe("legwork check", () => {
       err: "",
     });
   });
+  it("says what there is to note of the fields", () => {
+    const twice = smallPlan("twice", (plan) => {
+      const [field] = plan.fields as unknown[];
+      plan.fields = [field, field];
+    });
+    const { status, out } = legwork.run(["check", twice]);
+    expect(status).toBe(0);
+    expect(out).toMatch(
+      /: in order; .*\n {2}note: (\S+) is left out: \1, named before it, covers all of its area and times\n$/,
+    );
+  });
   it("finds what estimate would", () => {
     const broken = smallPlan("unchecked", (plan) => {
       plan.reserve = "20 kg";

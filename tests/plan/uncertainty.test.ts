@@ -314,6 +314,94 @@ describe("an ensemble in a plan", () => {
     );
   });
 
+  test("tells the files of every member, and the control's as the field's own", async () => {
+    Object.assign(FILES, { "a.csv": alone(-0.5, 0), "b.csv": alone(0.1, 0) });
+    const fields = [
+      { role: "current", file: "b.csv", member: 4 },
+      { role: "current", file: "a.csv", member: 0 },
+      WIND,
+    ];
+    const { estimate } = await answer({ fields });
+    const [current, wind] = estimate.fields;
+    expect(current).toMatchObject({ files: ["a.csv"], validFrom: null });
+    expect(current?.members).toEqual([
+      { member: 0, files: ["a.csv"] },
+      { member: 4, files: ["b.csv"] },
+    ]);
+    expect([wind?.members, wind?.unused, current?.unused]).toEqual([undefined, undefined, undefined]);
+    const column = await answer({ fields: [{ role: "current", file: "three.csv" }, WIND] });
+    expect(column.estimate.fields[0]?.members?.map(({ files }) => files.join("+"))).toEqual(
+      Array.from({ length: 3 }, () => "three.csv"),
+    );
+  });
+
+  test("whose member is named twice for the same area leaves the second file out, and says so", async () => {
+    Object.assign(FILES, { "a.csv": alone(-0.5, 0), "b.csv": alone(0.1, 0), "c.csv": alone(0.6, 0) });
+    const named = (file: string, member: number) => ({ role: "current", file, member });
+    const two = [named("a.csv", 0), named("b.csv", 4)];
+    const twice = await answer({ fields: [...two, named("c.csv", 4), WIND] });
+    const once = await answer({ fields: [...two, WIND] });
+    const [route] = twice.estimate.routes;
+    expect(route?.findings.filter(({ code }) => code === "field-unused")).toMatchObject([
+      {
+        severity: "note",
+        message: "c.csv is left out: b.csv, named before it, covers all of its area and times",
+      },
+    ]);
+    expect(route?.ensemble).toEqual(once.estimate.routes[0]?.ensemble);
+    expect(twice.estimate.fields[0]).toEqual({ ...once.estimate.fields[0], unused: ["c.csv"] });
+  });
+
+  test("takes a file without a member for every member's where it adds to theirs, and says so", async () => {
+    Object.assign(FILES, {
+      "a.csv": alone(-0.5, 0),
+      "b.csv": alone(0.1, 0),
+      "wide.csv": "lat,lon,u,v\n48,-8,9,9\n48,-2,9,9\n52,-8,9,9\n52,-2,9,9\n",
+    });
+    const two = [
+      { role: "current", file: "a.csv", member: 0 },
+      { role: "current", file: "b.csv", member: 1 },
+    ];
+    const { estimate } = await answer({ fields: [...two, { role: "current", file: "wide.csv" }, WIND] });
+    const bare = await answer({ fields: [...two, WIND] });
+    expect(estimate.routes[0]?.findings.filter(({ code }) => code === "field-shared")).toMatchObject([
+      { severity: "note", message: "wide.csv names no member, so it serves all 2 members" },
+    ]);
+    expect(estimate.fields[0]?.members?.map(({ files }) => files)).toEqual([
+      ["a.csv", "wide.csv"],
+      ["b.csv", "wide.csv"],
+    ]);
+    expect(bare.estimate.routes[0]?.findings.map(({ code }) => code)).not.toContain("field-shared");
+  });
+
+  test("with a file whose member is forgotten is one sentence", async () => {
+    Object.assign(FILES, { "a.csv": alone(-0.5, 0), "b.csv": alone(0.1, 0), "c.csv": alone(0.6, 0) });
+    const a = { role: "current", file: "a.csv", member: 0 };
+    const b = { role: "current", file: "b.csv", member: 1 };
+    const rule =
+      'a current file without its "member", beside others that name theirs, adds area or times to them';
+    expect(await faultOf({ fields: [a, b, { role: "current", file: "c.csv" }, WIND] })).toBe(
+      `c.csv: ${rule}; found that c.csv lies within a.csv`,
+    );
+    expect(await faultOf({ fields: [{ role: "current", file: "c.csv" }, a, b, WIND] })).toBe(
+      `c.csv: ${rule}; found that a.csv lies within c.csv`,
+    );
+    expect(
+      await faultOf({ fields: [{ role: "current", file: "three.csv" }, { ...a, member: undefined }, WIND] }),
+    ).toBe(`a.csv: ${rule}; found that a.csv lies within three.csv`);
+  });
+
+  test("named by a column and by the plan is one sentence, in either order", async () => {
+    FILES["a.csv"] = alone(-0.5, 0);
+    const a = { role: "current", file: "a.csv", member: 4 };
+    const rule =
+      'the members of a role are named by its files\' own columns or by the plan; found both, a column here and "member": 4 of a.csv in the plan';
+    for (const file of ["three.csv", "one.csv"]) {
+      expect(await faultOf({ fields: [{ role: "current", file }, a, WIND] })).toBe(`${file}: ${rule}`);
+      expect(await faultOf({ fields: [a, { role: "current", file }, WIND] })).toBe(`${file}: ${rule}`);
+    }
+  });
+
   test("that names members twice over, or by half a number, is one sentence", async () => {
     expect(await faultOf({ fields: [{ role: "current", file: "three.csv", member: 1 }, WIND] })).toBe(
       'three.csv: members are named by the file\'s own column or by the plan; found both, "member": 1 in the plan',

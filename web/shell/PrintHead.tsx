@@ -34,9 +34,10 @@ export function PrintHead({ page }: { readonly page: PageState }) {
         <dt>Fields</dt>
         <dd>
           {fields.length === 0 ? "none: a still medium" : null}
-          {fields.map(({ role, files, validFrom, validTo }) => (
+          {fields.map(({ role, files, validFrom, validTo, members }) => (
             <p key={role}>
-              {role}: {files.join(", ")}
+              {role}: {[...new Set(members?.flatMap((each) => each.files) ?? files)].join(", ")}
+              {members && ` (${members.length} members)`}
               {validFrom !== null && validTo !== null && `, valid ${time(validFrom)} to ${time(validTo)}`}
             </p>
           ))}

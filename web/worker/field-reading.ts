@@ -1,4 +1,4 @@
 /*
- * What reads field files, apart from the rest of the core: the worker loads it with the first field.
+ * What reads field files and makes fields of them, apart from the rest of the core: the worker loads it with the first field.
  */
-export { fileKind, inspectField, inspectGrid, readGridFile } from "./core.ts";
+export { fileKind, inspectField, inspectGrid, mergeSources, readGridFile, roleSource } from "./core.ts";

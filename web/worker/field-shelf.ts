@@ -6,8 +6,6 @@ import {
   type FieldsRead,
   type GridFile,
   InputError,
-  mergeSources,
-  roleSource,
 } from "./core.ts";
 import type { FileShelf } from "./file-shelf.ts";
 import type { FieldAnswer, FieldProgress } from "./protocol.ts";
@@ -96,6 +94,7 @@ export function createFieldShelf(files: FileShelf): FieldShelf {
     async merged(references) {
       const key = JSON.stringify(references);
       if (key === last.key) return last.read;
+      const { mergeSources, roleSource } = await import("./field-reading.ts");
       const sources = await Promise.all(
         references.map(async (reference) => roleSource(await grid(reference, () => undefined), reference)),
       );
