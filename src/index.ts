@@ -156,7 +156,17 @@ export type {
 export type { Route, Waypoint } from "./estimate/route.ts";
 // Fields.
 export { readGridFile } from "./field/csv.ts";
-export type { BeyondPolicy, Field, FieldRole, GapPolicy, OutsidePolicy, Tile } from "./field/field.ts";
+export type {
+  BeyondPolicy,
+  Field,
+  FieldOrigin,
+  FieldRole,
+  GapPolicy,
+  MemberFiles,
+  OutsidePolicy,
+  Tile,
+  UnusedFile,
+} from "./field/field.ts";
 export { applyGapPolicy } from "./field/gaps.ts";
 export type { GridFile, GridMember } from "./field/grid-file.ts";
 export { type FieldInspection, inspectGrid } from "./field/inspect.ts";

@@ -5,7 +5,7 @@ import { type FieldSource, type JoinedFiles, joinedFiles, outsideOf } from "./me
 const SAME_END_DEG = 1e-9;
 
 /** A file of which nothing is used, and the earlier ones that hold wherever and whenever it has data. */
-export interface HiddenSource {
+interface HiddenSource {
   readonly source: FieldSource;
   readonly by: readonly FieldSource[];
 }
