@@ -71,11 +71,19 @@ function checkWindowOptions({ from, to, every, speeds, arriveBy }: WindowOptions
   if (from !== undefined) parseTime(from, "--from");
   if (to !== undefined) parseTime(to, "--to");
   if (every !== undefined) parseQuantity(every, "time", "--every");
-  for (const speed of speeds?.split(",") ?? []) {
-    if (!(parseQuantity(speed, "speed", "--speeds") > 0))
-      throw new InputError(`--speeds is above 0; found "${speed}"`);
-  }
+  if (speeds !== undefined) checkSpeeds(speeds.split(","));
   if (arriveBy !== undefined) parseTime(arriveBy, "--arrive-by");
+}
+
+function checkSpeeds(texts: readonly string[]): void {
+  const found: number[] = [];
+  for (const text of texts) {
+    const speed = parseQuantity(text, "speed", "--speeds");
+    if (!(speed > 0)) throw new InputError(`--speeds is above 0; found "${text}"`);
+    if (found.includes(speed))
+      throw new InputError(`--speeds takes speeds that differ; found "${text}" twice`);
+    found.push(speed);
+  }
 }
 
 /** A speed that the craft lacks is known once the plan is read; its fault names the option too. */

@@ -128,6 +128,7 @@ describe("legwork window", () => {
       /^legwork: --speeds: a speed of a window lies within the power model .* found 50\.9 m\/s \(99\.0 kn\)\n$/,
     ],
     [["--speeds=-3kn"], /^legwork: --speeds is above 0; found "-3kn"\n$/],
+    [["--speeds", "8kn,9kn,8.0 kn"], /^legwork: --speeds takes speeds that differ; found "8.0 kn" twice\n$/],
     [["--speeds", "8kn,0kn"], /^legwork: --speeds is above 0; found "0kn"\n$/],
     [["--every", "1s", "--to", "2027-05-09T00:00Z"], /a window has at most 100000 cells/],
     [["--route", "Nowhere"], /a route is one of "Sound"/],
