@@ -111,7 +111,8 @@ export default defineConfig({
   worker: {
     format: "es",
     plugins: () => [lessGeodesic(), lessSchema()],
-    rolldownOptions: { output: { codeSplitting: FIRST } },
+    // A constant that becomes a variable is read anew at every use: the sweep takes a quarter longer.
+    rolldownOptions: { output: { codeSplitting: FIRST, topLevelVar: false } },
   },
   build: {
     outDir: new URL("../dist/page", import.meta.url).pathname,

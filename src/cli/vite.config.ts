@@ -39,6 +39,8 @@ export default defineConfig({
         format: "es",
         entryFileNames: "[name].js",
         chunkFileNames: "chunks/[name].js",
+        // A constant that becomes a variable is read anew at every use: the sweep takes a quarter longer.
+        topLevelVar: false,
         minify: { mangle: false, compress: true, codegen: { removeWhitespace: true } },
       },
     },

@@ -31,7 +31,13 @@ try {
             join(here, `${name}.bench.ts`),
           ]),
         ),
-        output: { format: "es", entryFileNames: "[name].mjs", chunkFileNames: "[name].mjs" },
+        output: {
+          format: "es",
+          entryFileNames: "[name].mjs",
+          chunkFileNames: "[name].mjs",
+          // As the command and the page are built.
+          topLevelVar: false,
+        },
       },
     },
   });
