@@ -76,7 +76,7 @@ export function openChart(host: HTMLElement, page: PageState, readouts: ChartRea
 }
 
 /** How long a size has to last before the chart is drawn anew, ms. */
-const SIZE_LASTS_MS = 120;
+const SIZE_LASTS_MS = 250;
 
 /** Redraws the chart once its size has come to rest: what opens beside it is shown first. */
 function followSize(map: L.Map, host: HTMLElement): () => void {
