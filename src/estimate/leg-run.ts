@@ -83,13 +83,22 @@ function crossSmoothly(run: LegRun, panel: number, start: number, accepted: Acce
   for (const { to, time, since } of steps) {
     const now = start + clock.elapsed;
     if (run.stations) fillStations(run, panel, place, to, Math.max(now, since), now);
-    smooth.book(run.step, time);
+    bookTime(run.step, time);
     accepted(place, to, now, panel);
     clock.elapsed += time;
     place = to;
   }
   clock.met = smooth.met;
   return place;
+}
+
+/** Puts a smooth step's own time and use in place of those from the stations, which tell how far off they may be. */
+function bookTime(step: Step, time: number): void {
+  const rate = step.motion.steadyRate;
+  step.timeError += Math.abs(step.time - time);
+  step.time = time;
+  step.use = rate * time;
+  step.useError = rate * step.timeError;
 }
 
 /** What holds at the stations of a smooth step. */

@@ -26,9 +26,7 @@ import { sweepRoute } from "./route-sweep.ts";
  * [status, use] // → ["clear", 22263898.2]
  */
 export function routeOutcome(prepared: PreparedRoute, conditions: Conditions): RouteOutcome {
-  checkFields(prepared, conditions.fields);
-  const [outcome = null] = sweepRoute(prepared, conditions, [conditions.departure]);
-  return outcome ?? outcomeAlone(prepared, conditions);
+  return routeOutcomes(prepared, conditions, [conditions.departure])[0] as RouteOutcome;
 }
 
 /**

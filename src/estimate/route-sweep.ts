@@ -39,8 +39,8 @@ export function sweepRoute(
   departures: readonly number[],
 ): (RouteOutcome | null)[] {
   const field = soleMedium(conditions);
-  const motions = prepared.legs.map((leg) => motionOn(conditions, leg));
-  if (field === null || !canSweep(prepared, conditions, motions)) return departures.map(() => null);
+  const motions = field === null ? null : heldMotions(prepared, conditions);
+  if (field === null || motions === null) return departures.map(() => null);
   const fleet = new SmoothFleet(field, departures, false);
   const totals = makeTotals(departures.length);
   prepared.legs.forEach((leg, n) => {
@@ -56,12 +56,15 @@ function soleMedium({ craft, fields }: Conditions): Field | null {
   return fields.length === 1 && field?.role === mediumRole(craft) ? field : null;
 }
 
-/** Whether all that is to be worked out is time and use at held speeds. */
-function canSweep({ legs }: PreparedRoute, { craft }: Conditions, motions: readonly Motion[]): boolean {
+/** How each leg is gone along; `null` where more is to be worked out than time and use at held speeds. */
+function heldMotions({ legs }: PreparedRoute, conditions: Conditions): readonly Motion[] | null {
+  const { craft } = conditions;
   const hovers = craft.moves === "air" && legs.some(({ to }) => to.stay_s > 0);
   const watchesGusts = craft.moves === "air" && craft.limits.gust_m_s !== null;
-  const stays = legs.every(({ to }) => plainStay(craft, to.stay_s).failure === null);
-  return !hovers && !watchesGusts && stays && motions.every(({ steadyRate }) => steadyRate >= 0);
+  if (hovers || watchesGusts || legs.some(({ to }) => plainStay(craft, to.stay_s).failure !== null))
+    return null;
+  const motions = legs.map((leg) => motionOn(conditions, leg));
+  return motions.every(({ steadyRate }) => steadyRate >= 0) ? motions : null;
 }
 
 function makeTotals(count: number): Totals {

@@ -45,9 +45,8 @@ export class RouteWork {
   readonly #medium: Flow | null;
   readonly #wind: Flow | null;
   readonly #step: Step;
-  /** By smooth steps where they serve: the medium as it is, and with its cross-track component at zero. */
-  readonly #smooth: SmoothLeg | null;
-  readonly #smoothAlong: SmoothLeg | null;
+  /** By smooth steps, made where they first serve: by whether the medium's cross-track component is taken as zero. */
+  readonly #smooth = new Map<boolean, SmoothLeg>();
   /** The last valid time met, s since departure: before the leg in work, and on it. */
   #met = 0;
   #metOnLeg = 0;
@@ -64,10 +63,6 @@ export class RouteWork {
     const role = mediumRole(craft);
     this.#medium = this.#flows.find(({ field }) => field.role === role) ?? null;
     this.#wind = this.#flows.find(({ field }) => field.role === "wind") ?? null;
-    const smooth = (alongOnly: boolean) =>
-      this.#medium === null ? null : new SmoothLeg(this.#medium.field, departure, alongOnly);
-    this.#smooth = smooth(false);
-    this.#smoothAlong = full ? smooth(true) : null;
     this.#step = makeStep(makeStations(), motionOn(conditions, prepared.legs[0] as PreparedLeg));
   }
 
@@ -150,7 +145,7 @@ export class RouteWork {
       panels: leg.panels,
       flows: this.#flows,
       step,
-      smooth: this.#smoothOn(leg, alongOnly ? this.#smoothAlong : this.#smooth),
+      smooth: this.#smoothOn(leg, alongOnly),
       stations: !alongOnly,
       clock: { elapsed: 0, met: this.#met },
     };
@@ -160,12 +155,15 @@ export class RouteWork {
    * Sets out by smooth steps; `null` where the craft's speed or rate depends on the fields, or where there is another field, whose valid
    * times the steps would pass over.
    */
-  #smoothOn(leg: PreparedLeg, smooth: SmoothLeg | null): SmoothLeg | null {
+  #smoothOn(leg: PreparedLeg, alongOnly: boolean): SmoothLeg | null {
     const { throughSpeed, steadyRate } = this.#step.motion;
     const medium = this.#medium;
     if (medium === null || steadyRate < 0 || this.#flows.length > 1) return null;
+    const { departure } = this.#conditions;
+    const smooth = this.#smooth.get(alongOnly) ?? new SmoothLeg(medium.field, departure, alongOnly);
+    this.#smooth.set(alongOnly, smooth);
     const reach = reachOf(throughSpeed);
-    smooth?.setOut({ leg, cells: medium.cells, speed: throughSpeed, rate: steadyRate, reach });
+    smooth.setOut({ leg, cells: medium.cells, speed: throughSpeed, rate: steadyRate, reach });
     return smooth;
   }
 

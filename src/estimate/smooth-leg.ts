@@ -1,6 +1,5 @@
 import type { Field } from "../field/field.ts";
 import { type Passage, SmoothFleet } from "./smooth-fleet.ts";
-import type { Step } from "./step.ts";
 
 /** A smooth step taken. */
 interface Taken {
@@ -16,7 +15,6 @@ interface Taken {
 export class SmoothLeg {
   readonly #fleet: SmoothFleet;
   #taken: Taken[] = [];
-  #rate = 0;
 
   /** @param departure ms since 1970 */
   constructor(field: Field, departure: number, alongOnly: boolean) {
@@ -32,7 +30,6 @@ export class SmoothLeg {
 
   setOut(passage: Passage): void {
     this.#fleet.setOut(passage);
-    this.#rate = passage.rate;
   }
 
   /**
@@ -50,13 +47,5 @@ export class SmoothLeg {
     fleet.met[0] = met;
     fleet.cross(panel);
     return this.#taken;
-  }
-
-  /** Puts a smooth step's own time and use in place of those from the stations, which tell how far off they may be. */
-  book(step: Step, time: number): void {
-    step.timeError += Math.abs(step.time - time);
-    step.time = time;
-    step.use = this.#rate * time;
-    step.useError = this.#rate * step.timeError;
   }
 }
