@@ -1,3 +1,5 @@
+import { lagrangeAt } from "./lagrange.ts";
+
 /*
  * The 4-point Gauss-Legendre rule and its 9-point Kronrod extension on [-1, 1], with both ends as extra stations.
  *
@@ -65,6 +67,9 @@ export const GAUSS_WEIGHT = Float64Array.of(
   0,
 );
 
+/** The Kronrod nodes alone. */
+const NODES = STATION_X.subarray(FIRST_NODE, LAST_NODE + 1);
+
 /**
  * Row i, column j: the integral from -1 to station i of the Lagrange polynomial of node j, so that row · f is the integral
  * of f up to station i, exact for degree 8: the collocation matrix of the implicit method on these nodes.
@@ -73,7 +78,7 @@ export const INTEGRAL_TO_STATION = collocationMatrix();
 
 /** Per node: the value at the end (x = 1) of its Lagrange polynomial; in reverse order, at the start. */
 export const AT_END = Float64Array.from({ length: STATIONS }, (_, j) =>
-  j >= FIRST_NODE && j <= LAST_NODE ? lagrange(j, 1) : 0,
+  j >= FIRST_NODE && j <= LAST_NODE ? lagrangeAt(NODES, j - FIRST_NODE, 1) : 0,
 );
 
 /** Share of the half panel beyond the outermost node. */
@@ -87,22 +92,11 @@ function collocationMatrix(): Float64Array {
       let sum = 0;
       // The Kronrod rule itself is exact for the degree-8 Lagrange polynomial on the part interval.
       for (let q = FIRST_NODE; q <= LAST_NODE; q += 1) {
-        sum += (KRONROD_WEIGHT[q] as number) * lagrange(j, half * ((STATION_X[q] as number) + 1) - 1);
+        const x = half * ((STATION_X[q] as number) + 1) - 1;
+        sum += (KRONROD_WEIGHT[q] as number) * lagrangeAt(NODES, j - FIRST_NODE, x);
       }
       matrix[i * STATIONS + j] = half * sum;
     }
   }
   return matrix;
-}
-
-function lagrange(j: number, x: number): number {
-  const xj = STATION_X[j] as number;
-  let product = 1;
-  for (let m = FIRST_NODE; m <= LAST_NODE; m += 1) {
-    if (m !== j) {
-      const xm = STATION_X[m] as number;
-      product *= (x - xm) / (xj - xm);
-    }
-  }
-  return product;
 }

@@ -1,3 +1,14 @@
+/** Value at x of the Lagrange polynomial of node j: the one that is 1 there and 0 at the other nodes. */
+export function lagrangeAt(nodes: ArrayLike<number>, j: number, x: number): number {
+  const own = nodes[j] as number;
+  let product = 1;
+  for (let m = 0; m < nodes.length; m += 1) {
+    const other = nodes[m] as number;
+    if (m !== j) product *= (x - other) / (own - other);
+  }
+  return product;
+}
+
 /**
  * Coefficients of the Lagrange polynomials of some nodes: row t, column n of the square matrix is the coefficient of x^t in
  * the polynomial that is 1 at node n and 0 at the others.

@@ -1,4 +1,5 @@
 import { GAUSS_WEIGHT, STATION_X } from "./gauss-kronrod.ts";
+import { lagrangeAt } from "./lagrange.ts";
 
 /* What the smooth step needs of the 4-point Gauss rule. */
 
@@ -18,11 +19,9 @@ function integral(m: number, a: number, b: number): number {
   const half = (b - a) / 2;
   return (
     half *
-    NODE_X.reduce((sum, x, q) => sum + (NODE_WEIGHTS[q] as number) * lagrange(m, a + half * (x + 1)), 0)
+    NODE_X.reduce(
+      (sum, x, q) => sum + (NODE_WEIGHTS[q] as number) * lagrangeAt(NODE_X, m, a + half * (x + 1)),
+      0,
+    )
   );
-}
-
-function lagrange(m: number, x: number): number {
-  const own = NODE_X[m] as number;
-  return NODE_X.reduce((product, root, j) => (j === m ? product : (product * (x - root)) / (own - root)), 1);
 }

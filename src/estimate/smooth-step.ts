@@ -1,3 +1,4 @@
+import { lagrangeAt } from "./lagrange.ts";
 import { BENDS } from "./smooth-pair.ts";
 import { NODE_TO_END, NODE_WEIGHTS, NODE_X } from "./smooth-rule.ts";
 
@@ -83,12 +84,7 @@ const [Q1, Q2, Q3, Q4] = NODE_X.map(
 ) as unknown as Row;
 
 /** What is zero at the start and known at the nodes, at the step's end: the quartic through all five. */
-const [N1, N2, N3, N4] = NODE_X.map((x, n) =>
-  NODE_X.reduce(
-    (product, other, j) => (j === n ? product : (product * (1 - other)) / (x - other)),
-    2 / (1 + x),
-  ),
-) as unknown as Row;
+const [N1, N2, N3, N4] = NODE_X.map((_, n) => lagrangeAt([-1, ...NODE_X], n + 1, 1)) as unknown as Row;
 
 /**
  * Times of a step for the departures `first` to `last - 1` of the lanes; they stand in `lanes.time`.
