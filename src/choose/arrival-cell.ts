@@ -1,11 +1,11 @@
+import { routeFinding } from "../estimate/findings.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
-import type { RouteStatus } from "../estimate/result.ts";
 import { arrivalSpeed, missedText } from "./arrival-answer.ts";
 import type { ArrivalWindow } from "./arrival-window.ts";
 import { solveArrival } from "./arrive.ts";
 import { speedRange } from "./speed-range.ts";
 import type { PacelessConditions } from "./speed-trials.ts";
-import { type WindowCell, windowCell } from "./window-cell.ts";
+import { cellFinding, type WindowCell, windowCell } from "./window-cell.ts";
 
 /**
  * A route at one departure and the cheapest through-speed that arrives when it should; where there is none, at the speed of the
@@ -21,13 +21,6 @@ export function arrivalCell(
   const pace = { hold: "through-speed", speed_m_s: speed } as const;
   const cell = windowCell(prepared, { ...conditions, pace }, conditions.departure, speed);
   if (answer.chosen !== null) return cell;
-  const status: RouteStatus = "stop";
-  const worst = {
-    code: "arrival-missed",
-    severity: "stop",
-    leg: null,
-    at_m: null,
-    message: missedText(answer),
-  } as const;
-  return { ...cell, status, worst: cell.arrival === null ? cell.worst : worst };
+  const missed = cellFinding(routeFinding("arrival-missed", missedText(answer)));
+  return { ...cell, status: "stop", worst: cell.arrival === null ? cell.worst : missed };
 }

@@ -1,10 +1,11 @@
 import { durationText, momentText } from "../estimate/finding-text.ts";
+import { routeFinding } from "../estimate/findings.ts";
 import { isoTime } from "../estimate/leg-result.ts";
 import type { ArrivalAnswer, RouteStatus } from "../estimate/result.ts";
 import { wantedText } from "./arrival-answer.ts";
 import type { ArrivalWindow } from "./arrival-window.ts";
 import { normalProbability } from "./normal-distribution.ts";
-import type { CellFinding } from "./window-cell.ts";
+import { type CellFinding, cellFinding } from "./window-cell.ts";
 
 /** By how much an arrival may miss what was asked for and still keep it, s. */
 const TOLERANCE = 1;
@@ -63,8 +64,7 @@ export function heldToArrival<Kind extends Judged>(
   const by = `${durationText(Math.abs(miss))} too ${miss > 0 ? "late" : "early"}`;
   const nearest = Math.round(arrival / MINUTE) * MINUTE;
   const message = `it arrives ${momentText(nearest)}, ${by}; asked for: ${keptText(asked)}`;
-  const worst = { code: "arrival-missed", severity: "stop", leg: null, at_m: null, message } as const;
-  return { ...judged, status: "stop", worst };
+  return { ...judged, status: "stop", worst: cellFinding(routeFinding("arrival-missed", message)) };
 }
 
 /**

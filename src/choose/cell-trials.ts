@@ -1,6 +1,7 @@
 import type { Conditions } from "../estimate/conditions.ts";
 import { estimateRoute } from "../estimate/estimate-route.ts";
 import { momentText } from "../estimate/finding-text.ts";
+import { routeFinding } from "../estimate/findings.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import { arrivalChance, heldToArrival } from "./arrival-kept.ts";
 import type { ArrivalWindow } from "./arrival-window.ts";
@@ -13,8 +14,8 @@ import type { DecidedBy, Sure } from "./sure.ts";
 import { type Trial, type Tried, trialsOf, tryOne } from "./trial.ts";
 import type { UncertaintyAsked } from "./uncertain-estimate.ts";
 import { decidingVariant, variantText } from "./what-if-results.ts";
-import type { Sweep } from "./window.ts";
-import { type CellFinding, paceAt, type WindowCell, worstFinding } from "./window-cell.ts";
+import { routeOf, type Sweep } from "./window.ts";
+import { type CellFinding, cellFinding, paceAt, type WindowCell } from "./window-cell.ts";
 
 const BY_ERROR: DecidedBy = { member: null, whatIf: null, error: true };
 
@@ -183,14 +184,11 @@ export class CellTrials {
     const before = this.#known.get(key);
     if (before !== undefined) return before;
     const { prepared, conditions } = this.#sweep;
-    const route = prepared.findIndex((each) => each.route.name === cell.route);
-    if (route < 0) throw new Error(`no route ${cell.route} in the sweep`);
-    const { pace } = conditions;
-    const { speed_m_s } = cell;
+    const route = prepared.indexOf(routeOf(this.#sweep, cell.route));
     const base = {
       ...conditions,
       departure: Date.parse(cell.departure),
-      pace: speed_m_s === null ? pace : paceAt(pace, speed_m_s),
+      pace: paceAt(conditions.pace, cell.speed_m_s),
     };
     const known: Known = { route, base, tried: new Map() };
     this.#known.set(key, known);
@@ -230,7 +228,7 @@ export class CellTrials {
     const found =
       unsureReserve(run.estimate, base, reserveHolds, { confidence, errors }) ??
       unsureArrival(this.#arrive, this.#chanceToArrive(run.estimate.arrival, spread), confidence);
-    return { reserveHolds, unsure: found && worstFinding([found]) };
+    return { reserveHolds, unsure: found && cellFinding(found) };
   }
 
   #chanceToArrive(arrival: string | null, spread: ErrorSpread | null): number | null {
@@ -252,6 +250,5 @@ function keptInTime(tried: Tried, notAfter: number | null): Tried {
   const { arrival, status } = tried;
   if (arrival === null || notAfter === null || status === "stop" || !isLate(arrival, notAfter)) return tried;
   const message = `it arrives ${momentText(arrival)}, after ${momentText(notAfter)}`;
-  const worst = { code: "arrival-missed", severity: "stop", leg: null, at_m: null, message } as const;
-  return { ...tried, status: "stop", worst };
+  return { ...tried, status: "stop", worst: cellFinding(routeFinding("arrival-missed", message)) };
 }

@@ -55,7 +55,7 @@ export function latestInTime(
     );
   const routes = prepared.flatMap((route) =>
     (speeds_m_s ?? [null]).map((speed): RouteInTime => {
-      const pace = speed === null ? conditions.pace : paceAt(conditions.pace, speed);
+      const pace = paceAt(conditions.pace, speed);
       const given = { ...conditions, pace };
       const { latest: exact, earliest } = latestDeparture(route, given, from, arriveBy);
       const latest =

@@ -1,4 +1,5 @@
 import { type DepartureWindow, windowDepartures } from "./departure-window.ts";
+import { lastWhole } from "./last-whole.ts";
 import { leastWhole } from "./least-whole.ts";
 import { MinuteCells } from "./minute-cells.ts";
 import { figureOf, inRank, isLess } from "./rank.ts";
@@ -132,12 +133,7 @@ export function narrowLatest(
   for (const cell of able) {
     if (cell.departure !== latest) continue;
     const departure = Date.parse(cell.departure);
-    let open = Math.floor(departure / MINUTE);
-    let shut = Math.ceil((departure + 1000 * window.every_s) / MINUTE);
-    while (shut - open > 1) {
-      const middle = Math.floor((open + shut) / 2);
-      if (canBeDone(minutes.at(middle, cell))) open = middle;
-      else shut = middle;
-    }
+    const shut = Math.ceil((departure + 1000 * window.every_s) / MINUTE);
+    lastWhole((minute) => canBeDone(minutes.at(minute, cell)), Math.floor(departure / MINUTE), shut);
   }
 }

@@ -1,9 +1,10 @@
 import type { CellTrials } from "./cell-trials.ts";
 import type { InTime, RouteInTime } from "./in-time.ts";
+import { lastWhole } from "./last-whole.ts";
 import { runSteps, type Steps } from "./steps.ts";
 import type { SureCell } from "./sure.ts";
 import { testedCell } from "./sure-bests.ts";
-import { type Sweep, sweepCell } from "./window.ts";
+import { routeOf, type Sweep, sweepCell } from "./window.ts";
 import type { WindowCell } from "./window-cell.ts";
 
 const MINUTE = 60_000;
@@ -54,21 +55,12 @@ function* latestToHold(
   const first = Math.ceil(Date.parse(earliest.departure) / MINUTE);
   const last = Math.floor(Date.parse(latest.departure) / MINUTE);
   const step = Math.max(1, Math.ceil((last - first) / STEPS));
-  const prepared = sweep.prepared.find((each) => each.route.name === latest.route);
-  if (prepared === undefined) throw new Error(`no route ${latest.route} in the sweep`);
+  const prepared = routeOf(sweep, latest.route);
   const at = (minute: number) => sweepCell(sweep, prepared, minute * MINUTE, latest.speed_m_s);
   const holds = (minute: number): boolean => runSteps(trials.holds(at(minute), notAfter));
   for (let minute = last; minute >= first; minute -= step) {
     yield;
-    if (!holds(minute)) continue;
-    let open = minute;
-    let shut = Math.min(minute + step, last + 1);
-    while (shut - open > 1) {
-      const middle = Math.floor((open + shut) / 2);
-      if (holds(middle)) open = middle;
-      else shut = middle;
-    }
-    return at(open);
+    if (holds(minute)) return at(lastWhole(holds, minute, Math.min(minute + step, last + 1)));
   }
   return null;
 }

@@ -4,7 +4,7 @@ import { evenlyInSpeed, speedRange } from "./speed-range.ts";
 import type { Steps } from "./steps.ts";
 import type { SureCell } from "./sure.ts";
 import { testedCell } from "./sure-bests.ts";
-import { type Sweep, sweepCell } from "./window.ts";
+import { routeOf, type Sweep, sweepCell } from "./window.ts";
 import type { WindowCell } from "./window-cell.ts";
 
 /** Share of a speed to which the fastest that holds is found. */
@@ -52,8 +52,7 @@ function* fastestToHold(
   route: string,
   departure: string,
 ): Steps<WindowCell | null> {
-  const prepared = sweep.prepared.find((each) => each.route.name === route);
-  if (prepared === undefined) throw new Error(`no route ${route} in the sweep`);
+  const prepared = routeOf(sweep, route);
   const cellAt = (speed: number) => sweepCell(sweep, prepared, Date.parse(departure), speed);
   let tooFast: number | null = null;
   for (const speed of evenlyInSpeed(speedRange(sweep.conditions.craft)).reverse()) {

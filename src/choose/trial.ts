@@ -1,5 +1,6 @@
 import { InputError } from "../errors.ts";
 import type { Conditions } from "../estimate/conditions.ts";
+import { routeFinding } from "../estimate/findings.ts";
 import { fieldsInUse, type PreparedRoute } from "../estimate/prepare.ts";
 import { routeOutcome } from "../estimate/route-outcomes.ts";
 import { preparedForMember } from "./ensemble.ts";
@@ -8,7 +9,7 @@ import type { UncertaintyAsked } from "./uncertain-estimate.ts";
 import { underWhatIf, whatIfFields } from "./what-if-conditions.ts";
 import type { Variant } from "./what-if-results.ts";
 import type { Sweep } from "./window.ts";
-import { cellOf } from "./window-cell.ts";
+import { cellFinding, cellOf } from "./window-cell.ts";
 
 /** A member or a what-if, for the departures of one sweep. */
 export interface Trial {
@@ -82,8 +83,7 @@ export function tryOne({ label, by, under }: Trial, route: number, base: Conditi
   } catch (fault) {
     // At the plan's own pace the plan itself is at fault; one of several speeds may simply lie too near the craft's limit.
     if (!(fault instanceof InputError) || base.pace === sweep.conditions.pace) throw fault;
-    const { message } = fault;
-    const worst = { code: "outside-power-table", severity: "stop", leg: null, at_m: null, message } as const;
+    const worst = cellFinding(routeFinding("outside-power-table", fault.message));
     return { label, by, status: "stop", remaining: null, reserve: null, worst, arrival: null };
   }
 }

@@ -55,8 +55,11 @@ export function worstFinding(findings: readonly Finding[]): CellFinding | null {
     (so, each) => (so === null || rank(each) < rank(so) ? each : so),
     null,
   );
-  if (worst === null) return null;
-  const { code, severity, leg, at_m, message } = worst;
+  return worst === null ? null : cellFinding(worst);
+}
+
+/** A finding as a cell holds it. */
+export function cellFinding({ code, severity, leg, at_m, message }: Finding): CellFinding {
   return { code, severity, leg, at_m, message };
 }
 
@@ -81,7 +84,7 @@ export function windowCell(
   departure: number,
   speed: number | null,
 ): WindowCell {
-  const pace = speed === null ? conditions.pace : paceAt(conditions.pace, speed);
+  const pace = paceAt(conditions.pace, speed);
   return cellOf(prepared, departure, speed, routeOutcome(prepared, { ...conditions, departure, pace }));
 }
 
@@ -114,8 +117,9 @@ export function passageTime({ legs }: PreparedRoute, { time_s }: RouteOutcome): 
   return time_s + stays;
 }
 
-/** The pace with another speed. */
-export function paceAt(pace: Pace, speed: number): Pace {
+/** The pace with another speed, as it is for `null`. */
+export function paceAt(pace: Pace, speed: number | null): Pace {
+  if (speed === null) return pace;
   if (pace.hold === "through-speed" || pace.hold === "ground-speed")
     return { hold: pace.hold, speed_m_s: speed };
   throw new InputError(

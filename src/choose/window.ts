@@ -127,10 +127,17 @@ export function sweepCells(
   if (sweep.arrive !== null && speed === null)
     return departures.map((departure) => sweepCell(sweep, prepared, departure, speed));
   const { conditions } = sweep;
-  const pace = speed === null ? conditions.pace : paceAt(conditions.pace, speed);
+  const pace = paceAt(conditions.pace, speed);
   return routeOutcomes(prepared, { ...conditions, pace }, departures).map((outcome, n) =>
     cellOf(prepared, departures[n] as number, speed, outcome),
   );
+}
+
+/** The prepared route of a name. @throws Error where the sweep has none */
+export function routeOf({ prepared }: Sweep, name: string): PreparedRoute {
+  const found = prepared.find(({ route }) => route.name === name);
+  if (found === undefined) throw new Error(`no route ${name} in the sweep`);
+  return found;
 }
 
 function checkSpeeds({ conditions }: Sweep, speeds: readonly number[] | null): void {
