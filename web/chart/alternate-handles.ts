@@ -8,6 +8,7 @@ import type { AlternateDocument } from "../state/plan-document.ts";
 import { arrowMove } from "./arrow-move.ts";
 import { turnsToward } from "./longitude.ts";
 import { setNamesApart } from "./names-apart.ts";
+import { nameHandle, nameTag, placeHandle } from "./place-handle.ts";
 import { rounded } from "./place-rounding.ts";
 import { signElement } from "./turn-sign.ts";
 
@@ -54,19 +55,12 @@ class AlternateHandles {
     this.handles.set(index, handle);
     if (index !== this.dragged) handle.setLatLng([lat, lon + turnsToward(lon, this.map.getCenter().lng)]);
     const element = handle.getElement();
-    element?.setAttribute("aria-label", `Alternate ${index + 1}, ${name}, ${latText(lat)} ${lonText(lon)}`);
-    const tag = element?.querySelector(".handle-name");
-    if (tag && tag.textContent !== name) tag.textContent = name;
+    if (element)
+      nameHandle(element, `Alternate ${index + 1}, ${name}, ${latText(lat)} ${lonText(lon)}`, name);
   }
 
   private makeHandle(index: number): L.Marker {
-    const marker = L.marker([0, 0], {
-      draggable: true,
-      keyboard: true,
-      autoPanOnFocus: false,
-      icon: handleIcon(),
-      zIndexOffset: 900,
-    }).addTo(this.group);
+    const marker = placeHandle(this.group, handleIcon(), 900);
     marker.on("click", L.DomEvent.stopPropagation);
     marker.on("dragstart", () => {
       this.dragged = index;
@@ -134,9 +128,7 @@ function positionOf({ lat, lon }: AlternateDocument): { lat: number; lon: number
 
 function handleIcon(): L.DivIcon {
   const html = signElement("alternate");
-  const name = document.createElement("span");
-  name.className = "handle-name";
-  html.append(name);
+  html.append(nameTag());
   return L.divIcon({ className: "alternate-handle turn-mark", html, iconSize: [30, 30] });
 }
 

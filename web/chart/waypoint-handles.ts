@@ -1,6 +1,7 @@
 import * as L from "leaflet";
 import { latText, lonText } from "../format/position-text.ts";
 import { arrowMove } from "./arrow-move.ts";
+import { nameHandle, nameTag, placeHandle } from "./place-handle.ts";
 
 /** A waypoint of the chosen route, longitude continuous along the route. */
 export interface Handle {
@@ -73,22 +74,12 @@ export class WaypointHandles {
     element.classList.toggle("selected", selected);
     element.dataset["number"] = String(index + 1);
     element.setAttribute("aria-pressed", String(selected));
-    element.setAttribute(
-      "aria-label",
-      `Waypoint ${index + 1}${name === "" ? "" : `, ${name}`}, ${latText(lat)} ${lonText(lon)}`,
-    );
-    const tag = element.querySelector(".handle-name");
-    if (tag && tag.textContent !== name) tag.textContent = name;
+    const named = name === "" ? "" : `, ${name}`;
+    nameHandle(element, `Waypoint ${index + 1}${named}, ${latText(lat)} ${lonText(lon)}`, name);
   }
 
   private makeHandle(index: number): L.Marker {
-    const marker = L.marker([0, 0], {
-      draggable: true,
-      keyboard: true,
-      autoPanOnFocus: false,
-      icon: handleIcon(),
-      zIndexOffset: 1000,
-    }).addTo(this.group);
+    const marker = placeHandle(this.group, handleIcon(), 1000);
     marker.on("click", (event) => {
       L.DomEvent.stopPropagation(event);
       this.gestures.select(index);
@@ -176,7 +167,5 @@ export class WaypointHandles {
 }
 
 function handleIcon(): L.DivIcon {
-  const html = document.createElement("span");
-  html.className = "handle-name";
-  return L.divIcon({ className: "waypoint-handle", html, iconSize: [30, 30] });
+  return L.divIcon({ className: "waypoint-handle", html: nameTag(), iconSize: [30, 30] });
 }
