@@ -13,10 +13,10 @@ import {
   oneOf,
   optional,
   POSITIVE,
-  POSITIVE_SHARE,
   quantity,
   readBy,
   sentence,
+  UNSURE_SHARE,
   wholeNumber,
 } from "./schema-parts.ts";
 import { time } from "./time-schema.ts";
@@ -160,7 +160,7 @@ export const planSchema = objectOf(
       quantity(
         ["share"],
         "confidence",
-        POSITIVE_SHARE,
+        UNSURE_SHARE,
         "Probability with which the reserve has to hold under the stated errors of the fields; below 100 %.",
       ),
     ),

@@ -1,30 +1,23 @@
 import type { ForecastError } from "../choose/forecast-error.ts";
-import { quoted } from "../found.ts";
 import type { Fault } from "./first-issue.ts";
 import type { PlanParts } from "./plan-schema.ts";
 
 /**
  * The probability with which a plan's reserve has to hold.
  *
- * Errors: certainty; a plan that states no error, under which nothing would be tested.
+ * Errors: a plan that states no error, under which nothing would be tested.
  */
 export function readConfidence(
   confidence: NonNullable<PlanParts["confidence"]>,
   errors: readonly ForecastError[],
   fault: Fault,
 ): number {
-  const { value, text } = confidence;
-  if (value >= 1)
-    throw fault(
-      ["confidence"],
-      `a confidence is below 100 %, since no forecast is sure; found ${quoted(text)}`,
-    );
   if (errors.length === 0)
     throw fault(
       ["confidence"],
       'a confidence is held against the error of a field, as { "speed": "1.5 m/s", "length": "150 km", "time": "6 h" }; found no field with one',
     );
-  return value;
+  return confidence.value;
 }
 
 /**

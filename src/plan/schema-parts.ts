@@ -19,6 +19,7 @@ import {
 /** Bounds of a number or of a quantity in its inner unit. */
 export interface Bounds {
   readonly above?: number;
+  readonly below?: number;
   readonly atLeast?: number;
   readonly atMost?: number;
 }
@@ -28,6 +29,8 @@ export const POSITIVE: Bounds = { above: 0 };
 export const NOT_NEGATIVE: Bounds = { atLeast: 0 };
 /** An efficiency or another share that cannot be nothing. */
 export const POSITIVE_SHARE: Bounds = { above: 0, atMost: 1 };
+/** A probability that is neither nothing nor certainty. */
+export const UNSURE_SHARE: Bounds = { above: 0, below: 1 };
 
 /**
  * Sizes that a figure may have beside 0, in the dimension's inner unit. Far wider than any craft or place, and narrow enough
@@ -64,6 +67,7 @@ function leastOf({ above, atLeast }: Bounds) {
 export function bareNumber(name: string, bounds: Bounds, description: string) {
   const limits = {
     ...(bounds.above === undefined ? {} : { exclusiveMinimum: bounds.above }),
+    ...(bounds.below === undefined ? {} : { exclusiveMaximum: bounds.below }),
     ...(bounds.atLeast === undefined ? {} : { minimum: bounds.atLeast }),
     ...(bounds.atMost === undefined ? {} : { maximum: bounds.atMost }),
   };
@@ -182,7 +186,13 @@ function unknownKeySentence(what: string, key: string, known: readonly string[])
 }
 
 /** The rule that a value breaks, or `null`. */
-function brokenBound(value: number, { above, atLeast, atMost }: Bounds, text: (value: number) => string) {
+function brokenBound(
+  value: number,
+  { above, below, atLeast, atMost }: Bounds,
+  text: (value: number) => string,
+) {
+  if (above !== undefined && below !== undefined)
+    return value > above && value < below ? null : `is above ${text(above)} and below ${text(below)}`;
   if (above !== undefined && !(value > above)) return `is above ${text(above)}`;
   if (atLeast !== undefined && !(value >= atLeast)) return `is not below ${text(atLeast)}`;
   if (atMost !== undefined && !(value <= atMost)) return `is at most ${text(atMost)}`;

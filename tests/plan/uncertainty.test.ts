@@ -227,10 +227,10 @@ describe("the stated error of a plan's fields", () => {
   });
 
   test.each([
-    ["100 %", 'confidence: a confidence is below 100 %, since no forecast is sure; found "100 %"'],
-    ["101 %", 'confidence is at most 100 %; found "101 %"'],
-    ["0 %", 'confidence is above 0 %; found "0 %"'],
-    ["-5 %", "confidence is above 0 %; found"],
+    ["100 %", 'confidence is above 0 % and below 100 %; found "100 %"'],
+    ["120 %", 'confidence is above 0 % and below 100 %; found "120 %"'],
+    ["0 %", 'confidence is above 0 % and below 100 %; found "0 %"'],
+    ["-5 %", 'confidence is above 0 % and below 100 %; found "-5 %"'],
     ["0.9", "confidence takes a number with the unit %"],
     ["3 h", "confidence takes a number with the unit %"],
     [0.9, "confidence takes a number with the unit %"],
