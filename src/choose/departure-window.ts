@@ -34,28 +34,59 @@ export function windowDepartures(window: DepartureWindow): number[] {
   return Array.from({ length: departureCount(window) }, (_, n) => window.from + n * step);
 }
 
+/** What is wrong with a window. */
+export interface WindowFault {
+  /** Those of its parts that it lies in. */
+  readonly parts: readonly ("from" | "to" | "every" | "speeds")[];
+  readonly sentence: string;
+}
+
+/**
+ * The first thing wrong with a window: it ends before it begins, its step is shorter than a second, a speed is given twice, or it has
+ * more than {@link MOST_CELLS} cells; `null` where nothing is.
+ *
+ * @param routes how many are to be compared
+ */
+export function windowFault(window: DepartureWindow, routes: number): WindowFault | null {
+  const { from, to, every_s, speeds_m_s } = window;
+  const found = `found ${writtenInstant(from)} to ${writtenInstant(to)}`;
+  if (!(to >= from))
+    return {
+      parts: ["from", "to"],
+      sentence: `a window of departures does not end before it begins; ${found}`,
+    };
+  const ofStep = stepFault(every_s, `${every_s} s`);
+  if (ofStep !== null) return ofStep;
+  const speeds = speeds_m_s ?? [0];
+  const twice = speeds.find((speed, index) => speeds.indexOf(speed) !== index);
+  if (speeds.length === 0)
+    return { parts: ["speeds"], sentence: "the speeds of a window are one or more; found none" };
+  if (twice !== undefined)
+    return { parts: ["speeds"], sentence: `the speeds of a window differ; found ${speedText(twice)} twice` };
+  const departures = departureCount(window);
+  const cells = departures * routes * speeds.length;
+  if (cells <= MOST_CELLS) return null;
+  return {
+    parts: ["from", "to", "every", "speeds"],
+    sentence: `a window has at most ${MOST_CELLS} cells (routes × departures × speeds); found ${routes} × ${departures} × ${speeds.length} = ${cells}: take a longer step or a shorter window`,
+  };
+}
+
+/** What is wrong with a step, s; `found` is how it was written. */
+export function stepFault(every_s: number, found: string): WindowFault | null {
+  if (every_s >= 1) return null;
+  return {
+    parts: ["every"],
+    sentence: `the step of a window of departures is at least 1 s; found ${found}`,
+  };
+}
+
 /**
  * Checks a window before it is worked out.
  *
- * @param routes how many are to be compared
- * @throws InputError where it ends before it begins, its step is shorter than a second, a speed is given twice, or it has more than {@link MOST_CELLS} cells
+ * @throws InputError for what {@link windowFault} finds
  */
 export function checkWindow(window: DepartureWindow, routes: number): void {
-  const { from, to, every_s, speeds_m_s } = window;
-  if (!(to >= from))
-    throw new InputError(
-      `a window of departures does not end before it begins; found ${writtenInstant(from)} to ${writtenInstant(to)}`,
-    );
-  if (!(every_s >= 1))
-    throw new InputError(`the step of a window of departures is at least 1 s; found ${every_s} s`);
-  const speeds = speeds_m_s ?? [0];
-  if (speeds.length === 0) throw new InputError("the speeds of a window are one or more; found none");
-  const twice = speeds.find((speed, index) => speeds.indexOf(speed) !== index);
-  if (twice !== undefined)
-    throw new InputError(`the speeds of a window differ; found ${speedText(twice)} twice`);
-  const cells = departureCount(window) * routes * speeds.length;
-  if (cells > MOST_CELLS)
-    throw new InputError(
-      `a window has at most ${MOST_CELLS} cells (routes × departures × speeds); found ${routes} × ${departureCount(window)} × ${speeds.length} = ${cells}: take a longer step or a shorter window`,
-    );
+  const fault = windowFault(window, routes);
+  if (fault !== null) throw new InputError(fault.sentence);
 }

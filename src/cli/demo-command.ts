@@ -1,5 +1,5 @@
 import { existsSync } from "node:fs";
-import { mkdir, readdir, readFile, writeFile } from "node:fs/promises";
+import { mkdir, readdir, readFile, stat, writeFile } from "node:fs/promises";
 import { dirname, join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { InputError } from "./core.ts";
@@ -21,13 +21,23 @@ function shippedFolder(): string {
   throw new Error("the demo data were not shipped beside the program");
 }
 
-async function contentOf(file: string): Promise<Buffer | null> {
+/** What `look` finds at a path; `null` where nothing is there. */
+async function found<T>(look: Promise<T>): Promise<T | null> {
   try {
-    return await readFile(file);
+    return await look;
   } catch (fault) {
     if (fault instanceof Error && "code" in fault && fault.code === "ENOENT") return null;
     throw fault;
   }
+}
+
+/** Folder by folder, since Node's own recursion never ends where the system has no such folder to make, as below /proc. */
+async function makeFolder(folder: string): Promise<void> {
+  if ((await found(stat(folder)))?.isDirectory() === true) return;
+  const above = dirname(folder);
+  if (above !== folder) await makeFolder(above);
+  const made = await found(mkdir(folder));
+  if (made === null) throw new InputError("the system makes no folder there", { file: folder });
 }
 
 /** The files to write and their content; a file that is there already with the same content is left out. */
@@ -36,7 +46,7 @@ async function missing(names: readonly string[], from: string, folder: string): 
   for (const name of names) {
     const wanted = await readFile(join(from, name));
     const target = join(folder, name);
-    const there = await contentOf(target);
+    const there = await found(readFile(target));
     if (there === null) files.set(target, wanted);
     else if (!there.equals(wanted)) {
       throw new InputError("a file of other content is there and is not overwritten; name another folder", {
@@ -62,7 +72,7 @@ export async function demoCommand(folder: string): Promise<number> {
   const from = shippedFolder();
   const names = (await readdir(from)).filter((name) => WANTED.test(name)).sort();
   try {
-    await mkdir(folder, { recursive: true });
+    await makeFolder(folder);
     const files = await missing(names, from, folder);
     for (const [file, content] of files) await writeFile(file, content);
   } catch (fault) {

@@ -1,5 +1,6 @@
 import { estimatePlan, parseTime, type ReportFormat, type Units, writeReport } from "./core.ts";
 import { loadLand } from "./load-land.ts";
+import { tellOfOption } from "./option-fault.ts";
 import { writeResult } from "./output.ts";
 import { openPlan } from "./plan-files.ts";
 import { noteUnits } from "./units-note.ts";
@@ -26,7 +27,7 @@ export async function estimateCommand(file: string, options: EstimateOptions): P
     ...(options.departure === undefined ? {} : { departure: options.departure }),
     ...(options.turnBack === undefined ? {} : { turnBack: options.turnBack }),
     ...(options.route === undefined ? {} : { routes: options.route }),
-  });
+  }).catch(tellOfOption);
   const { routes, craft, pace } = plan;
   await writeResult(
     writeReport({ estimate, routes, craft, pace }, options.format, options.units),

@@ -10,15 +10,20 @@ export interface InspectOptions {
 }
 
 function columnMap(pairs: readonly string[]): Readonly<Record<string, string>> {
-  return Object.fromEntries(
-    pairs.map((pair) => {
-      const [, axis, header] = /^([^=]+)=(.+)$/s.exec(pair) ?? [];
-      if (axis === undefined || header === undefined) {
-        throw new InputError(`--map is AXIS=HEADER, as lon=longitude; found "${pair}"`);
-      }
-      return [axis.trim(), header.trim()];
-    }),
-  );
+  const headers = new Map<string, string>();
+  for (const pair of pairs) {
+    const [, axis, header] = /^([^=]+)=(.+)$/s.exec(pair)?.map((part) => part.trim()) ?? [];
+    if (!axis || !header) throw new InputError(`--map is AXIS=HEADER, as lon=longitude; found "${pair}"`);
+    if (headers.has(axis)) throw new InputError(`--map names an axis once; found "${axis}" twice`);
+    headers.set(axis, header);
+  }
+  return Object.fromEntries(headers);
+}
+
+/** A mapping that does not fit the file is the option's fault, not the file's. */
+function tellOfMap(fault: unknown): never {
+  const isOfMap = fault instanceof InputError && fault.place.key === "columns";
+  throw isOfMap ? new InputError(fault.sentence, { key: "--map" }) : fault;
 }
 
 /** Reads a field file and says what it holds. */
@@ -30,7 +35,7 @@ export async function inspectCommand(
     file,
     columns: columnMap(map),
     ...(role === undefined ? {} : { role }),
-  });
+  }).catch(tellOfMap);
   await writeResult(
     format === "json" ? `${JSON.stringify(inspection, null, 2)}\n` : writeInspection(inspection),
   );

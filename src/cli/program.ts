@@ -3,24 +3,12 @@ import { version } from "../../package.json";
 import { ADVISORY } from "./advisory.ts";
 import type { EstimateOptions } from "./estimate-command.ts";
 import type { InspectOptions } from "./inspect-command.ts";
-import { messageLine } from "./message.ts";
+import { nameOf, refuseSlips, usageLine } from "./usage.ts";
 import type { WindowOptions } from "./window-command.ts";
 
 const HELP_WIDTH = 80;
-/** The commands, for messages. */
-export const COMMANDS = "estimate, window, inspect, check or demo";
 
 const collect = (value: string, before: readonly string[] = []): readonly string[] => [...before, value];
-
-/** Commander's message in our form: one line that says what is accepted. */
-function usageLine(text: string): string {
-  const message = text
-    .replace(/^error: /, "")
-    .replace(/\s*\n\s*/g, " ")
-    .trim();
-  const known = /^unknown command/.test(message) ? `; the command is ${COMMANDS}` : "; see legwork --help";
-  return messageLine(message.replace(/\.$/, "") + known);
-}
 
 function wrap(text: string): string {
   const lines = [""];
@@ -46,7 +34,7 @@ function addEstimate(program: Command, settle: Settle): void {
       "Prints the leg table of every route of a plan. Exit status: 0 every route is clear or has cautions only, " +
         "1 some route ends in a stop, 2 bad input.",
     )
-    .argument("<plan>", "plan file (*.plan.json); files that it names are beside it")
+    .argument("<plan>", "plan file (*.plan.json); files that it names are beside it", nameOf("a file"))
     .option("--route <name>", "only this route (repeatable)", collect)
     .option("--departure <time>", "in place of the plan's: ISO 8601 with its zone")
     .addOption(
@@ -83,7 +71,7 @@ function addWindow(program: Command, settle: Settle): void {
         "what-ifs or a confidence, the bests are those that hold in all of them. Exit status: 0 some departure can be done and " +
         "holds, 1 none, 2 bad input.",
     )
-    .argument("<plan>", "plan file (*.plan.json); options take the place of its key window")
+    .argument("<plan>", "plan file (*.plan.json); options take the place of its key window", nameOf("a file"))
     .option("--from <time>", "first departure: ISO 8601 with its zone")
     .option("--to <time>", "last departure, where the steps meet it")
     .option("--every <step>", "from one departure to the next, as 30min")
@@ -122,7 +110,7 @@ function addInspect(program: Command, settle: Settle): void {
     .description(
       "Says what a field file holds: axes, spacing, times, coverage, gaps, ranges, ignored columns, memory.",
     )
-    .argument("<field>", "gridded wind or current (*.csv)")
+    .argument("<field>", "gridded wind or current (*.csv)", nameOf("a file"))
     .addOption(new Option("--role <role>", "what the file is of").choices(["wind", "current"]))
     .option("--map <axis=header>", "a column by its own header, as lon=longitude (repeatable)", collect)
     .addOption(new Option("--format <format>", "what to write").choices(["text", "json"]).default("text"))
@@ -144,7 +132,7 @@ function addCheck(program: Command, settle: Settle): void {
     .command("check")
     .summary("read and check everything that a plan names")
     .description("Reads and checks a plan and everything that it names, and computes nothing.")
-    .argument("<plan>", "plan file (*.plan.json)")
+    .argument("<plan>", "plan file (*.plan.json)", nameOf("a file"))
     .addHelpText("after", ending(["legwork check demo/islands.plan.json"]))
     .action(async (plan: string) => {
       const { checkCommand } = await import("./check-command.ts");
@@ -159,7 +147,7 @@ function addDemo(program: Command, settle: Settle): void {
     .description(
       "Writes the demo plans with their craft and fields into a folder; a file of other content is left alone.",
     )
-    .argument("<folder>", "where to; made if it is not there")
+    .argument("<folder>", "where to; made if it is not there", nameOf("a folder"))
     .addHelpText("after", ending(["legwork demo demo"]))
     .action(async (folder: string) => {
       const { demoCommand } = await import("./demo-command.ts");
@@ -187,6 +175,7 @@ export function buildProgram(settle: Settle): Command {
   addInspect(program, settle);
   addCheck(program, settle);
   addDemo(program, settle);
+  program.commands.forEach(refuseSlips);
   return program.addHelpText(
     "after",
     ending([

@@ -1,6 +1,7 @@
 import { CommanderError } from "commander";
 import { messageLine } from "./message.ts";
-import { buildProgram, COMMANDS } from "./program.ts";
+import { buildProgram } from "./program.ts";
+import { COMMANDS } from "./usage.ts";
 
 /** Bad input or usage. */
 const STATUS_INPUT = 2;

@@ -11,6 +11,7 @@ import {
   writeWindowTable,
 } from "./core.ts";
 import { loadLand } from "./load-land.ts";
+import { tellOfOption } from "./option-fault.ts";
 import { writeResult } from "./output.ts";
 import { openPlan } from "./plan-files.ts";
 import { noteUnits } from "./units-note.ts";
@@ -84,11 +85,4 @@ function checkSpeeds(texts: readonly string[]): void {
       throw new InputError(`--speeds takes speeds that differ; found "${text}" twice`);
     found.push(speed);
   }
-}
-
-/** A speed that the craft lacks is known once the plan is read; its fault names the option too. */
-function tellOfOption(fault: unknown): never {
-  const isOfSpeeds =
-    fault instanceof InputError && fault.place.file === undefined && fault.place.key === "speeds";
-  throw isOfSpeeds ? new InputError(fault.sentence, { key: "--speeds" }) : fault;
 }

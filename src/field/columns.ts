@@ -105,18 +105,18 @@ class ColumnFinder {
     const result = new Map<number, Quantity>();
     for (const [name, header] of Object.entries(mapping)) {
       const quantity = quantityOf(name, this.role);
-      if (quantity === undefined) throw this.fault(unknownNameText(name, this.role));
+      if (quantity === undefined) throw this.faultOfMapping(unknownNameText(name, this.role));
       const index = this.indexOfHeader(header);
       if (index < 0) {
         const found = `found ${headersText(this.headers)}`;
-        throw this.fault(
+        throw this.faultOfMapping(
           `the column mapping of ${quoted(name)} names a header of the file; ${quoted(header)} is none: ${found}`,
         );
       }
       if (result.has(index))
-        throw this.fault(`a column holds one quantity; ${quoted(header)} is mapped to two`);
+        throw this.faultOfMapping(`a column holds one quantity; ${quoted(header)} is mapped to two`);
       if (this.mapped.has(quantity))
-        throw this.fault(`a quantity is mapped once; found ${quoted(name)} mapped again`);
+        throw this.faultOfMapping(`a quantity is mapped once; found ${quoted(name)} mapped again`);
       this.mapped.add(quantity);
       result.set(index, quantity);
     }
@@ -192,5 +192,10 @@ class ColumnFinder {
 
   private fault(sentence: string): InputError {
     return new InputError(sentence, this.place);
+  }
+
+  /** Told of the key, too, that the mapping is given by: what is wrong is not in the file. */
+  private faultOfMapping(sentence: string): InputError {
+    return new InputError(sentence, { ...this.place, key: "columns" });
   }
 }

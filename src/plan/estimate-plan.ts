@@ -15,12 +15,13 @@ import {
 import { fieldNotes } from "../estimate/field-notes.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { Finding } from "../estimate/result.ts";
+import { quoted } from "../found.ts";
 import type { MemberFields } from "./merge-fields.ts";
 import type { OpenFile, Plan } from "./plan.ts";
 import { type FileProgress, readMembers } from "./read-fields.ts";
 import { readPlan } from "./read-plan.ts";
 import { parseTime } from "./time.ts";
-import { toldOfFile } from "./told-of-file.ts";
+import { toldOf } from "./told-of.ts";
 
 /** What a door hands over beside the plan's text. */
 export interface PlanRequest {
@@ -83,7 +84,7 @@ export interface PlanChecked {
  */
 export async function estimatePlan(text: string, request: PlanRequest): Promise<PlanAnswer> {
   const checked = await checkPlan(text, request);
-  return toldOfFile(request.file, () => estimateChecked(checked, request.turnBack));
+  return toldOf({ file: request.file }, () => estimateChecked(checked, request.turnBack));
 }
 
 function estimateChecked({ plan, input, members }: PlanChecked, turnBack = false): PlanAnswer {
@@ -141,15 +142,21 @@ async function checkPlanText(text: string, { file, open, departure, routes }: Pl
   return {
     ...plan,
     ...(departure === undefined ? {} : { departure: parseTime(departure, "departure") }),
-    ...(routes === undefined ? {} : { routes: routes.map((name) => routeNamed(plan, name, file)) }),
+    ...(routes === undefined ? {} : { routes: routesNamed(plan, routes) }),
   };
 }
 
-function routeNamed(plan: Plan, name: string, file: string): Plan["routes"][number] {
-  const route = plan.routes.find((candidate) => candidate.name === name);
-  if (route !== undefined) return route;
-  const names = plan.routes.map((candidate) => `"${candidate.name}"`).join(", ");
-  throw new InputError(`a route is one of ${names}; found "${name}"`, { file, key: "routes" });
+/** The routes asked for. A fault in a name is the request's, so that it is not told of the plan's file. */
+function routesNamed({ routes }: Plan, names: readonly string[]): Plan["routes"] {
+  const twice = names.find((name, index) => names.indexOf(name) !== index);
+  if (twice !== undefined)
+    throw new InputError(`a route is asked for once; found ${quoted(twice)} twice`, { key: "routes" });
+  return names.map((name) => {
+    const route = routes.find((candidate) => candidate.name === name);
+    if (route !== undefined) return route;
+    const known = routes.map((candidate) => quoted(candidate.name)).join(", ");
+    throw new InputError(`a route is one of ${known}; found ${quoted(name)}`, { key: "routes" });
+  });
 }
 
 async function readInput(

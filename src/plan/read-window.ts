@@ -1,6 +1,5 @@
-import { checkWindow, type DepartureWindow } from "../choose/departure-window.ts";
+import { type DepartureWindow, windowFault } from "../choose/departure-window.ts";
 import type { Craft } from "../craft/craft.ts";
-import { InputError } from "../errors.ts";
 import { quoted } from "../found.ts";
 import type { Fault } from "./first-issue.ts";
 import type { PlanParts } from "./plan-schema.ts";
@@ -9,7 +8,7 @@ import { checkOrderedSpeed } from "./read-craft.ts";
 /**
  * The window of a plan, checked against pace and craft.
  *
- * Errors: a window that {@link checkWindow} refuses, speeds beside a pace that chooses its own, a speed outside the power table.
+ * Errors: a window that {@link windowFault} refuses, speeds beside a pace that chooses its own, a speed outside the power table.
  */
 export function windowOf(parts: PlanParts, craft: Craft, fault: Fault): DepartureWindow | undefined {
   const { window, pace } = parts;
@@ -31,10 +30,8 @@ export function windowOf(parts: PlanParts, craft: Craft, fault: Fault): Departur
     speeds_m_s: window.speeds?.map(({ value }) => value) ?? null,
     ...(window.arriveBy === undefined ? {} : { arriveBy: window.arriveBy }),
   };
-  try {
-    checkWindow(read, parts.routes.length);
-  } catch (error) {
-    throw error instanceof InputError ? fault(["window"], error.message) : error;
-  }
+  const wrong = windowFault(read, parts.routes.length);
+  if (wrong !== null)
+    throw fault(["window", ...(wrong.parts.length === 1 ? wrong.parts : [])], wrong.sentence);
   return read;
 }

@@ -1,5 +1,10 @@
 import { CellTrials } from "../choose/cell-trials.ts";
-import type { DepartureWindow } from "../choose/departure-window.ts";
+import {
+  type DepartureWindow,
+  stepFault,
+  type WindowFault,
+  windowFault,
+} from "../choose/departure-window.ts";
 import { type InTime, latestInTime } from "../choose/in-time.ts";
 import { type RefinedWindow, refinedBests, refineRoutes } from "../choose/refine.ts";
 import { type RoutePaces, routePaces } from "../choose/route-paces.ts";
@@ -9,13 +14,14 @@ import { checkSpeed, makeSweep, windowCells } from "../choose/window.ts";
 import type { WindowCell } from "../choose/window-cell.ts";
 import { summariseWindow, type WindowSummary } from "../choose/window-summary.ts";
 import type { Craft, Pace } from "../craft/craft.ts";
-import { InputError } from "../errors.ts";
+import { InputError, type Place } from "../errors.ts";
 import { type EstimateInput, prepareRoutes } from "../estimate/estimate.ts";
+import { quoted } from "../found.ts";
 import { parseQuantity } from "../units.ts";
 import { checkPlan, type PlanChecked, type PlanRequest } from "./estimate-plan.ts";
 import type { Plan } from "./plan.ts";
 import { parseTime } from "./time.ts";
-import { toldOfFile } from "./told-of-file.ts";
+import { toldOf } from "./told-of.ts";
 
 /** What a door hands over beside the plan's text; parts of the window given here take the place of the plan's. */
 export interface WindowRequest extends PlanRequest {
@@ -70,16 +76,17 @@ export interface WindowAnswer {
 export async function windowPlan(text: string, request: WindowRequest): Promise<WindowAnswer> {
   const checked = await checkPlan(text, request);
   const window = windowAsked(checked.plan, request);
-  return toldOfFile(request.file, () => answerWindow(checked, window, request.refine === true));
+  return toldOf({ file: request.file }, () => answerWindow(checked, window, request));
 }
 
 function answerWindow(
   { plan, input, members }: PlanChecked,
   window: DepartureWindow,
-  refine: boolean,
+  { file, arriveBy, refine = false }: WindowRequest,
 ): WindowAnswer {
   const sweep = makeSweep(prepareRoutes(input), input, plan.arrive ?? null);
-  const inTime = latestInTime(sweep, window);
+  const ofArriveBy = arriveBy === undefined ? { file, key: "window.arriveBy" } : { key: "arriveBy" };
+  const inTime = toldOf(ofArriveBy, () => latestInTime(sweep, window));
   const cells = [...windowCells(sweep, window)];
   const minutes = refine ? refineRoutes(sweep, window, cells) : null;
   const summary = summariseWindow(cells);
@@ -98,10 +105,10 @@ function answerWindow(
   return { plan, input, window, cells, summary, refined, inTime, paces, sure };
 }
 
-function windowAsked(
-  { window: planned, craft, pace }: Plan,
-  { file, from, to, every, speeds, arriveBy }: WindowRequest,
-): DepartureWindow {
+/** The window asked for: parts of the request in place of the plan's. A fault in those is not told of the plan's file. */
+function windowAsked(plan: Plan, request: WindowRequest): DepartureWindow {
+  const { window: planned, craft, pace, routes } = plan;
+  const { file, from, to, every, speeds, arriveBy } = request;
   const needed = (what: string, value: number | undefined): number => {
     if (value !== undefined) return value;
     throw new InputError(
@@ -110,16 +117,32 @@ function windowAsked(
     );
   };
   const keep = arriveBy === undefined ? planned?.arriveBy : parseTime(arriveBy, "arriveBy");
-  return {
+  const window = {
     ...(keep === undefined ? {} : { arriveBy: keep }),
     from: needed("from", from === undefined ? planned?.from : parseTime(from, "from")),
     to: needed("to", to === undefined ? planned?.to : parseTime(to, "to")),
-    every_s: needed("every", every === undefined ? planned?.every_s : parseQuantity(every, "time", "every")),
+    every_s: needed("every", every === undefined ? planned?.every_s : stepAsked(every)),
     speeds_m_s:
       speeds === undefined
         ? (planned?.speeds_m_s ?? null)
         : speeds.map((speed) => speedAsked(speed, craft, pace)),
   };
+  const wrong = windowFault(window, routes.length);
+  if (wrong !== null) throw new InputError(wrong.sentence, partsGiven(wrong, request));
+  return window;
+}
+
+/** Of the parts of a window at fault, those that the request gives; the plan's window where it gives none of them. */
+function partsGiven({ parts }: WindowFault, { file, ...given }: WindowRequest): Place {
+  const own = parts.filter((part) => given[part] !== undefined);
+  return own.length === 0 ? { file, key: "window" } : { key: own.join(", ") };
+}
+
+function stepAsked(text: string): number {
+  const step = parseQuantity(text, "time", "every");
+  const wrong = stepFault(step, quoted(text));
+  if (wrong !== null) throw new InputError(wrong.sentence, { key: "every" });
+  return step;
 }
 
 /** A speed given beside the plan: a fault in it is not told of the plan's file. */

@@ -64,17 +64,39 @@ describe("a fault of usage", () => {
     [["frobnicate"], "the command is estimate, window, inspect, check or demo"],
     [["--versoin"], "(Did you mean --version?)"],
     [["estimate"], "missing required argument 'plan'"],
-    [["estimate", "a", "b"], "Expected 1 argument but got 2"],
+    [["estimate", "a", "b"], "legwork: estimate takes 1 argument; found 2; see legwork --help"],
     [["estimate", "x", "--fomat", "csv"], "unknown option '--fomat' (Did you mean --format?)"],
     [
       ["estimate", "x", "--format", "xml"],
-      "argument 'xml' is invalid. Allowed choices are table, csv, json, geojson, gpx",
+      'legwork: --format takes one of table, csv, json, geojson, gpx; found "xml"; see legwork --help',
     ],
-    [["estimate", "x", "--units", "imperial"], "Allowed choices are sea, air, metric"],
-    [["estimate", "x", "--route"], "option '--route <name>' argument missing"],
-    [["inspect", "x.csv", "--role", "rain"], "Allowed choices are wind, current"],
+    [["estimate", "x", "--units", "imperial"], '--units takes one of sea, air, metric; found "imperial"'],
+    [["estimate", "x", "--units", ""], '--units takes one of sea, air, metric; found ""'],
+    [["estimate", "x", "--units", "sea", "--units=air"], '--units is given once; found "sea" and "air"'],
+    [
+      ["estimate", "x", "--format", "csv", "--format", "csv"],
+      '--format is given once; found "csv" and "csv"',
+    ],
+    [["estimate", "x", "--out", "a", "--out", "b"], '--out is given once; found "a" and "b"'],
+    [["estimate", "x", "--out", "--turn-back"], "--out takes a value; found the option --turn-back"],
+    [["estimate", "x", "--route", "--out", "a"], "--route takes a value; found the option --out"],
+    [["estimate", "x", "--route"], "--route takes a value (name); found nothing"],
+    [["estimate", "x", "--departure"], "--departure takes a value (time); found nothing"],
+    [["estimate", "x", "--departure", "noon"], "--departure takes an ISO 8601 date and time"],
+    [["window", "x", "--speeds", "8kn", "--speeds", "9kn"], '--speeds is given once; found "8kn" and "9kn"'],
+    [["window", "x", "--every"], "--every takes a value (step); found nothing"],
+    [["window", "x", "--refine=no"], "unknown option '--refine=no'"],
+    [["inspect", "x.csv", "--role", "rain"], '--role takes one of wind, current; found "rain"'],
+    [["inspect", "x.csv", "--map"], "--map takes a value (axis=header); found nothing"],
+    [["inspect", "x.csv", "--map", "lon= "], '--map is AXIS=HEADER, as lon=longitude; found "lon= "'],
+    [["inspect", "x.csv", "--map", "lon=x", "--map", "lon=y"], '--map names an axis once; found "lon" twice'],
     [["inspect", "x.csv", "--map", "lon"], '--map is AXIS=HEADER, as lon=longitude; found "lon"'],
     [["inspect", "x.csv", "--map", "=x"], '--map is AXIS=HEADER, as lon=longitude; found "=x"'],
+    [["inspect", ""], 'legwork: <field> names a file; found ""; see legwork --help'],
+    [["estimate", ""], 'legwork: <plan> names a file; found ""; see legwork --help'],
+    [["window", " "], "<plan> names a file; found"],
+    [["check", ""], '<plan> names a file; found ""'],
+    [["demo", ""], '<folder> names a folder; found ""'],
     [["check"], "missing required argument 'plan'"],
     [["demo"], "missing required argument 'folder'"],
     [["estimate", "nowhere/x.plan.json"], "nowhere/x.plan.json: there is no such file"],
@@ -167,6 +189,31 @@ describe("legwork demo", () => {
       out: "",
       err: `legwork: ${file}: a folder is needed; found a file\n`,
     });
+  });
+});
+
+describe("a folder that the system does not make", () => {
+  it.runIf(existsSync("/proc/self"))("is said in one line, and does not hang", () => {
+    expect(legwork.run(["demo", "/proc/nowhere/demo"])).toEqual({
+      status: 2,
+      out: "",
+      err: "legwork: /proc/nowhere: the system makes no folder there\n",
+    });
+  });
+});
+
+describe("a column mapping that does not fit the file", () => {
+  const field = new URL("../../data/demo/islands-current.csv", import.meta.url).pathname;
+  it.each([
+    ["foo=longitude", "--map: a column mapping names one of time, latitude, "],
+    [
+      "lon=east",
+      '--map: the column mapping of "lon" names a header of the file; "east" is none: found "time", ',
+    ],
+  ])("%s is told of its option, not of the file", (pair, message) => {
+    const { status, out, err } = legwork.run(["inspect", field, "--map", pair]);
+    expect([status, out]).toEqual([2, ""]);
+    expect(err.startsWith(`legwork: ${message}`), err).toBe(true);
   });
 });
 

@@ -120,8 +120,15 @@ describe("legwork window", () => {
       ["--every", "30"],
       /^legwork: --every takes a number with one of s, min, h, .* found "30" \(without a unit\)\n$/,
     ],
+    [["--every", "0min"], /^legwork: --every: the step .* is at least 1 s; found "0min"\n$/],
+    [["--every", "-5min"], /^legwork: --every: the step .* is at least 1 s; found "-5min"\n$/],
+    [["--every", "0.5s"], /^legwork: --every: the step .* is at least 1 s; found "0\.5s"\n$/],
+    [["--every", "9 kn"], /^legwork: --every takes .* found "9 kn" \(kn is a unit of speed\)\n$/],
     [["--from", "dawn"], /^legwork: --from takes an ISO 8601 date and time with its zone/],
-    [["--to", "2027-05-03T00:00Z"], /does not end before it begins/],
+    [
+      ["--to", "2027-05-03T00:00Z"],
+      /^legwork: --from, --to: a window of departures does not end before it begins; found 2027-05-04T06:00Z to 2027-05-03T00:00Z\n$/,
+    ],
     [["--speeds", "8kn,"], /^legwork: --speeds takes a number with one of .* found ""\n$/],
     [
       ["--speeds", "8kn,99kn"],
@@ -130,16 +137,53 @@ describe("legwork window", () => {
     [["--speeds=-3kn"], /^legwork: --speeds is above 0; found "-3kn"\n$/],
     [["--speeds", "8kn,9kn,8.0 kn"], /^legwork: --speeds takes speeds that differ; found "8.0 kn" twice\n$/],
     [["--speeds", "8kn,0kn"], /^legwork: --speeds is above 0; found "0kn"\n$/],
-    [["--every", "1s", "--to", "2027-05-09T00:00Z"], /a window has at most 100000 cells/],
-    [["--route", "Nowhere"], /a route is one of "Sound"/],
-    [["--format", "gpx"], /'gpx' is invalid/],
+    [
+      ["--every", "1s", "--to", "2027-05-09T00:00Z"],
+      /^legwork: --from, --to, --every: a window has at most 100000 cells/,
+    ],
+    [
+      ["--arrive-by", "2027-05-04T06:00Z"],
+      /^legwork: --arrive-by: an arrival is after the earliest departure considered; found 2027-05-04T06:00Z and 2027-05-04T06:00Z\n$/,
+    ],
+    [["--route", "Nowhere"], /^legwork: --route: a route is one of "Sound", .* found "Nowhere"\n$/],
+    [
+      ["--route=Sound", "--route=Sound"],
+      /^legwork: --route: a route is asked for once; found "Sound" twice\n$/,
+    ],
+    [["--format", "gpx"], /^legwork: --format takes one of table, csv, json; found "gpx"/],
   ])("refuses %j with one line and status 2, and writes nothing", (options, message) => {
     const out = join(folder, "none.txt");
-    const { status, out: text, err } = legwork.run(["window", islands, ...DAY, ...options, "--out", out]);
+    const day = DAY.filter((_, index) => !options.includes(DAY[index - (index % 2)] as string));
+    const { status, out: text, err } = legwork.run(["window", islands, ...day, ...options, "--out", out]);
     expect([status, text]).toEqual([2, ""]);
     expect(err).toMatch(message);
     expect(err.split("\n")).toHaveLength(2);
     expect(existsSync(out)).toBe(false);
+  });
+
+  it("tells a fault that the plan's own window has a part in of the option alone", () => {
+    const plan = changedPlan("own", (document) => {
+      document.window = { from: "2027-05-04T08:00Z", to: "2027-05-04T12:00Z", every: "2 h" };
+    });
+    const { err } = legwork.run(["window", plan, "--from", "2027-05-05T00:00Z"]);
+    expect(err).toBe(
+      "legwork: --from: a window of departures does not end before it begins; found 2027-05-05T00:00Z to 2027-05-04T12:00Z\n",
+    );
+  });
+
+  it("tells a fault of the plan's own arriveBy of the plan", () => {
+    const plan = changedPlan("early", (document) => {
+      document.window = {
+        from: "2027-05-04T08:00Z",
+        to: "2027-05-04T09:00Z",
+        every: "1 h",
+        arriveBy: "2027-05-04T07:00Z",
+      };
+    });
+    const { err } = legwork.run(["window", plan]);
+    expect(err).toBe(
+      `legwork: ${plan}, window.arriveBy: an arrival is after the earliest departure considered; found 2027-05-04T07:00Z and 2027-05-04T08:00Z\n`,
+    );
   });
 
   it("asks for the window where neither plan nor options name it", () => {

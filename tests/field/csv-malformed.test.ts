@@ -176,7 +176,7 @@ describe("columns that are missing or at odds are told with what was looked for 
     [
       "a mapping to no header",
       HEAD,
-      'winds.csv, line 1: the column mapping of "lon" names a header of the file; "x" is none: found "lat", "lon", "u", "v"',
+      'winds.csv, line 1, columns: the column mapping of "lon" names a header of the file; "x" is none: found "lat", "lon", "u", "v"',
       { columns: { lon: "x" } },
     ],
     [

@@ -45,7 +45,7 @@ describe("the key window of a plan", () => {
     [
       "of half a second's steps",
       [["window", { ...WINDOW, every: "0.5 s" }]],
-      "run.plan.json, window: the step of a window of departures is at least 1 s; found 0.5 s",
+      "run.plan.json, window.every: the step of a window of departures is at least 1 s; found 0.5 s",
     ],
     [
       "that ends before it begins",
@@ -235,8 +235,35 @@ describe("a plan's window worked out", () => {
     ).toContain("an arrival is after the earliest departure considered");
     const asked = textOf(["window", WINDOW], ["pace", { arrive: "2027-05-04T12:00Z" }]);
     expect(await faultOf(() => windowPlan(asked, { ...request, arriveBy: "2027-05-04T12:00Z" }))).toMatch(
-      /^run.plan.json: an arriveBy of a window belongs to a pace that says how fast/,
+      /^arriveBy: an arriveBy of a window belongs to a pace that says how fast/,
     );
+  });
+
+  test.each([
+    [
+      "a step of nothing",
+      { every: "0 min" },
+      'every: the step of a window of departures is at least 1 s; found "0 min"',
+    ],
+    [
+      "a first departure after the last",
+      { from: "2027-06-04T06:00Z" },
+      "from: a window of departures does not end",
+    ],
+    [
+      "more cells than are worked out",
+      { every: "1 s", to: "2027-06-04T06:00Z" },
+      "to, every: a window has at most 100000 cells",
+    ],
+    ["a route that the plan lacks", { routes: ["Nowhere"] }, 'routes: a route is one of "Outer"'],
+    [
+      "a route twice",
+      { routes: ["Outer", "Outer"] },
+      'routes: a route is asked for once; found "Outer" twice',
+    ],
+  ])("told by the request of %s, names its part and not the plan's file", async (_, asked, message) => {
+    const fault = await faultOf(() => windowPlan(textOf(["window", WINDOW]), { ...request, ...asked }));
+    expect(fault.startsWith(message), fault).toBe(true);
   });
 
   test("refined over speeds, tells the least use and the fastest of all speeds of the range", async () => {
