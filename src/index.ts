@@ -28,7 +28,7 @@ export type { ForecastError } from "./choose/forecast-error.ts";
 export { type InTime, latestInTime, type RouteInTime } from "./choose/in-time.ts";
 export { type LatestDeparture, latestDeparture } from "./choose/latest-departure.ts";
 export type { LegSpread } from "./choose/leg-spreads.ts";
-export { erfc, normalProbability } from "./choose/normal-distribution.ts";
+export { erfc, normalProbability, normalQuantile } from "./choose/normal-distribution.ts";
 export { fastestWithReserve, leastUseSpeed, type PaceCurve, paceCurve } from "./choose/pace-curve.ts";
 export { type Quantiles, quantiles } from "./choose/quantiles.ts";
 export { type RefinedWindow, refineWindow } from "./choose/refine.ts";
@@ -46,6 +46,7 @@ export {
   type SureWindow,
   sureWindow,
 } from "./choose/sure-window.ts";
+export type { Sweep } from "./choose/sweep.ts";
 export { turnBack } from "./choose/turn-back.ts";
 export { withTurnBack } from "./choose/turn-back-estimate.ts";
 export type {
@@ -67,7 +68,7 @@ export {
 } from "./choose/uncertain-estimate.ts";
 export { type WhatIf, whatIfText } from "./choose/what-if.ts";
 export { type WhatIfResult, whatIfResults } from "./choose/what-if-results.ts";
-export { makeSweep, type Sweep, sweepCell, sweepCells, windowCells } from "./choose/window.ts";
+export { makeSweep, sweepCell, sweepCells, windowCells } from "./choose/window.ts";
 export { type CellFinding, type WindowCell, windowCell } from "./choose/window-cell.ts";
 export {
   type Refusal,

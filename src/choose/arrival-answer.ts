@@ -1,5 +1,5 @@
 import { durationText, momentText, speedText } from "../estimate/finding-text.ts";
-import type { ArrivalAnswer } from "../estimate/result.ts";
+import type { ArrivalAnswer, ArrivalSolution } from "../estimate/result.ts";
 
 /** The speed to estimate at: the chosen one, else that of the nearest arrival, m/s; `null` where no speed completes the route. */
 export function arrivalSpeed({ solutions, chosen, nearest }: ArrivalAnswer): number | null {
@@ -20,13 +20,33 @@ export function missedText(answer: ArrivalAnswer): string {
   return `no through-speed arrives ${wantedText(answer)}: ${answer.reason ?? ""}`;
 }
 
+/** The solution that is the cheapest by the plain estimate, where it does not hold in everything that the plan names; else `null`. */
+export function cheapestLost({ solutions, chosen, cheapest, holds }: ArrivalAnswer): ArrivalSolution | null {
+  const isLost = holds === false || (cheapest !== undefined && cheapest !== chosen);
+  return isLost ? (solutions[cheapest ?? -1] ?? null) : null;
+}
+
 /** What a route at the speed found says. */
 export function foundText(answer: ArrivalAnswer, departure: number): string {
   const solution = answer.solutions[answer.chosen ?? 0];
   if (solution === undefined) throw new Error("an arrival without a solution");
   const arrival = Date.parse(solution.arrival);
-  const count = answer.solutions.length;
-  const others = count > 1 ? `, the cheapest of ${count} solutions` : "";
   const passage = durationText((arrival - departure) / 1000);
-  return `${speedText(solution.speed_m_s)} through the medium arrives ${momentText(arrival)}, after ${passage}${others}; asked for: ${wantedText(answer)}`;
+  const found = `${speedText(solution.speed_m_s)} through the medium arrives ${momentText(arrival)}, after ${passage}`;
+  const asked = `; asked for: ${wantedText(answer)}`;
+  const told = `${found}${choiceText(answer)}`;
+  return told.endsWith(asked) ? told : `${told}${asked}`;
+}
+
+const ALL = "in all that the plan names";
+
+/** Why this solution and no other. */
+function choiceText(answer: ArrivalAnswer): string {
+  const { solutions, holds, reason } = answer;
+  const lost = cheapestLost(answer);
+  const among = solutions.length > 1 ? `, the cheapest of ${solutions.length} solutions` : "";
+  if (lost === null) return holds === true ? `${among}, and holds ${ALL}` : among;
+  if (holds === false)
+    return `${among}; no speed was found that arrives then and holds ${ALL}: ${reason ?? ""}`;
+  return `, the cheapest found that holds ${ALL}; the cheapest by the plain estimate, ${speedText(lost.speed_m_s)}, does not: ${reason ?? ""}`;
 }

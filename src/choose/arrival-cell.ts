@@ -1,22 +1,24 @@
 import { routeFinding } from "../estimate/findings.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import { arrivalSpeed, missedText } from "./arrival-answer.ts";
+import type { ArrivalTestsAt } from "./arrival-tests.ts";
 import type { ArrivalWindow } from "./arrival-window.ts";
-import { solveArrival } from "./arrive.ts";
+import { findArrival } from "./held-arrival.ts";
 import { speedRange } from "./speed-range.ts";
 import type { PacelessConditions } from "./speed-trials.ts";
 import { cellFinding, type WindowCell, windowCell } from "./window-cell.ts";
 
 /**
- * A route at one departure and the cheapest through-speed that arrives when it should; where there is none, at the speed of the
+ * A route at one departure and the through-speed found for its arrival, as `findArrival` has it; where there is none, at the speed of the
  * nearest arrival, as a stop that says so.
  */
 export function arrivalCell(
   prepared: PreparedRoute,
   conditions: PacelessConditions,
   wanted: ArrivalWindow,
+  testsAt: ArrivalTestsAt | null,
 ): WindowCell {
-  const answer = solveArrival(prepared, conditions, wanted);
+  const { answer } = findArrival(prepared, conditions, wanted, testsAt);
   const speed = arrivalSpeed(answer) ?? speedRange(conditions.craft).max;
   const pace = { hold: "through-speed", speed_m_s: speed } as const;
   const cell = windowCell(prepared, { ...conditions, pace }, conditions.departure, speed);

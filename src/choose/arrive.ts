@@ -1,12 +1,12 @@
-import { durationText, momentText, speedText } from "../estimate/finding-text.ts";
 import { isoTime } from "../estimate/leg-result.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { ArrivalAnswer, ArrivalSolution } from "../estimate/result.ts";
+import { solutionAt } from "./arrival-solution.ts";
 import { type ArrivalWindow, checkArrival } from "./arrival-window.ts";
 import { minimaOf, rootsOf, type Sample, scan } from "./line-search.ts";
+import { nearestTo } from "./nearest-arrival.ts";
 import { evenlyInTime } from "./speed-range.ts";
 import { type PacelessConditions, SpeedTrials } from "./speed-trials.ts";
-import { worstFinding } from "./window-cell.ts";
 
 /** How near to the time asked a root is found, s. */
 const ACCURACY = 1e-6;
@@ -37,26 +37,62 @@ export function solveArrival(
   conditions: PacelessConditions,
   wanted: ArrivalWindow,
 ): ArrivalAnswer {
+  return searchArrival(prepared, conditions, wanted).answer;
+}
+
+/** A search for the speeds that arrive when they should, with what it tried. */
+export interface ArrivalSearch {
+  readonly answer: ArrivalAnswer;
+  readonly speeds: SpeedTrials;
+  /** ms since 1970-01-01T00:00Z. */
+  readonly departure: number;
+  /** Speeds tried, ascending, with the use of those that arrive in a span of times; empty where one moment is asked for. */
+  readonly uses: readonly Sample[];
+}
+
+/** As {@link solveArrival}, with what was tried. */
+export function searchArrival(
+  prepared: PreparedRoute,
+  conditions: PacelessConditions,
+  wanted: ArrivalWindow,
+): ArrivalSearch {
   checkArrival(wanted);
+  const { departure } = conditions;
   const trials = new SpeedTrials(prepared, conditions);
-  const target = (time: number) => (time - conditions.departure) / 1000;
+  const target = (time: number) => (time - departure) / 1000;
   const latest = target(wanted.notAfter);
   const earliest = wanted.notBefore === null ? Number.NEGATIVE_INFINITY : target(wanted.notBefore);
   const isOneTime = earliest === latest;
-  const quick = isOneTime ? quickSpeedsAt(trials, latest) : quickCheapest(trials, earliest, latest);
+  const quick = isOneTime
+    ? ofOneTime(quickSpeedsAt(trials, latest))
+    : quickCheapest(trials, earliest, latest);
   const samples = quick === null ? scan(trials.passage, evenlyInTime(trials.range)) : [];
-  const speeds =
+  const { speeds, uses } =
     quick ??
-    (isOneTime ? speedsAt(trials, samples, latest) : cheapestBetween(trials, samples, earliest, latest));
-  const solutions = speeds.map((speed) => solutionAt(trials, speed, conditions.departure));
+    (isOneTime
+      ? { speeds: speedsAt(trials, samples, latest), uses: [] }
+      : cheapestBetween(trials, samples, earliest, latest));
+  const solutions = speeds.map((speed) => solutionAt(trials, speed, departure));
   const chosen = cheapest(solutions);
   const asked = {
     notBefore: wanted.notBefore === null ? null : isoTime(wanted.notBefore),
     notAfter: isoTime(wanted.notAfter),
   };
-  if (chosen !== null) return { ...asked, solutions, chosen, nearest: null, reason: null };
-  const missed = nearestTo(prepared, trials, samples, earliest, latest, conditions.departure);
-  return { ...asked, solutions, chosen, ...missed };
+  const missed =
+    chosen === null
+      ? nearestTo(prepared, trials, samples, earliest, latest, departure)
+      : { nearest: null, reason: null };
+  return { answer: { ...asked, solutions, chosen, ...missed }, speeds: trials, departure, uses };
+}
+
+/** Speeds of locally least use, and those tried for them with their use. */
+interface Valleys {
+  readonly speeds: readonly number[];
+  readonly uses: readonly Sample[];
+}
+
+function ofOneTime(speeds: readonly number[] | null): Valleys | null {
+  return speeds && { speeds, uses: [] };
 }
 
 /** Steps from the fastest down in which a quick search looks for a bracket. */
@@ -78,18 +114,18 @@ function quickSpeedsAt(trials: SpeedTrials, target: number): number[] | null {
 }
 
 /** As {@link quickSpeedsAt}, the speeds of locally least use between two arrival times. */
-function quickCheapest(trials: SpeedTrials, earliest: number, latest: number): number[] | null {
+function quickCheapest(trials: SpeedTrials, earliest: number, latest: number): Valleys | null {
   const { min, max } = trials.range;
   const isEarlyEnough = (trials.passage(max) ?? Number.NEGATIVE_INFINITY) >= earliest;
   const fastest = isEarlyEnough ? max : quickSpeedsAt(trials, earliest)?.[0];
   const slowest =
     (trials.passage(min) ?? Number.POSITIVE_INFINITY) <= latest ? min : quickSpeedsAt(trials, latest)?.[0];
   if (fastest === undefined || slowest === undefined || !(slowest < fastest)) return null;
-  const samples = evenlyInTime({ min: slowest, max: fastest }, QUICK_USES).map((x) => ({
+  const uses = evenlyInTime({ min: slowest, max: fastest }, QUICK_USES).map((x) => ({
     x,
     value: trials.use(x),
   }));
-  return samples.some(({ value }) => value === null) ? null : minimaOf(trials.use, samples);
+  return uses.some(({ value }) => value === null) ? null : { speeds: minimaOf(trials.use, uses), uses };
 }
 
 function speedsAt({ passage }: SpeedTrials, samples: readonly Sample[], target: number): number[] {
@@ -106,7 +142,7 @@ function cheapestBetween(
   samples: readonly Sample[],
   earliest: number,
   latest: number,
-): number[] {
+): Valleys {
   const ends = [earliest, latest].flatMap((target) =>
     Number.isFinite(target) ? speedsAt(trials, samples, target) : [],
   );
@@ -117,14 +153,7 @@ function cheapestBetween(
   };
   const places = [...new Set([...samples.map(({ x }) => x), ...ends])].sort((a, b) => a - b);
   const uses = places.map((x) => ({ x, value: inside(x) }));
-  return minimaOf(inside, uses);
-}
-
-function solutionAt(trials: SpeedTrials, speed: number, departure: number): ArrivalSolution {
-  const passage = trials.passage(speed);
-  const { use, remaining, status } = trials.at(speed);
-  if (passage === null || use === null || remaining === null) throw new Error("a solution does not arrive");
-  return { speed_m_s: speed, arrival: isoTime(departure + 1000 * passage), use, remaining, status };
+  return { speeds: minimaOf(inside, uses), uses };
 }
 
 /** Index of the solution of least use among those that are not a stop, else of least use; `null` where there is none. */
@@ -133,47 +162,4 @@ function cheapest(solutions: readonly ArrivalSolution[]): number | null {
   const order = solutions.map((solution, index) => ({ solution, index }));
   order.sort((a, b) => isStop(a.solution) - isStop(b.solution) || a.solution.use - b.solution.use);
   return order[0]?.index ?? null;
-}
-
-type Missed = Pick<ArrivalAnswer, "nearest" | "reason">;
-
-/** The achievable arrival nearest to those asked for, and why none of them is. */
-function nearestTo(
-  { legs }: PreparedRoute,
-  trials: SpeedTrials,
-  samples: readonly Sample[],
-  earliest: number,
-  latest: number,
-  departure: number,
-): Missed {
-  const { min, max } = trials.range;
-  const whole = `${speedText(min)} to ${speedText(max)}`;
-  const missBy = (passage: number) => Math.max(earliest - passage, passage - latest);
-  const complete = samples.filter((sample): sample is { x: number; value: number } => sample.value !== null);
-  const best = complete.reduce<{ x: number; value: number } | null>(
-    (so, each) => (so === null || missBy(each.value) < missBy(so.value) ? each : so),
-    null,
-  );
-  const whyNot = (speed: number) => worstFinding(trials.at(speed).findings)?.message ?? "";
-  if (best === null)
-    return {
-      nearest: null,
-      reason: `no speed of the craft's range, ${whole}, completes the route; at the highest, ${whyNot(max)}`,
-    };
-  const nearest = solutionAt(trials, best.x, departure);
-  const late = best.value > latest;
-  const by = `${durationText(missBy(best.value))} too ${late ? "late" : "early"}`;
-  const arrives = `arrives ${momentText(Date.parse(nearest.arrival))}, ${by}`;
-  if (legs.every(({ to }) => to.speed_m_s !== null))
-    return { nearest, reason: `every leg names its own speed, and the route ${arrives}` };
-  const beyond = samples.filter(({ x, value }) => value === null && (late ? x > best.x : x < best.x));
-  const next = beyond[late ? 0 : beyond.length - 1];
-  if (next === undefined) {
-    const end = late ? "the highest" : "the lowest";
-    return { nearest, reason: `${end} speed of the craft's range, ${speedText(best.x)}, ${arrives}` };
-  }
-  return {
-    nearest,
-    reason: `the nearest, at ${speedText(best.x)}, ${arrives}; ${late ? "above" : "below"} that speed the route is not completed: ${whyNot(next.x)}`,
-  };
 }

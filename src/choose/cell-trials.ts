@@ -1,20 +1,18 @@
 import type { Conditions } from "../estimate/conditions.ts";
-import { estimateRoute } from "../estimate/estimate-route.ts";
 import { momentText } from "../estimate/finding-text.ts";
 import { routeFinding } from "../estimate/findings.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
-import { arrivalChance, heldToArrival } from "./arrival-kept.ts";
+import { heldToArrival } from "./arrival-kept.ts";
 import type { ArrivalWindow } from "./arrival-window.ts";
-import { unsureArrival, unsureReserve } from "./confidence.ts";
+import { type CellSpread, cellSpread } from "./cell-spread.ts";
 import type { DepartureWindow } from "./departure-window.ts";
 import { membersHeld } from "./ensemble.ts";
-import { type ErrorSpread, errorSpread } from "./error-spread.ts";
-import type { Steps } from "./steps.ts";
+import { runSteps, type Steps } from "./steps.ts";
 import type { DecidedBy, Sure } from "./sure.ts";
+import { routeOf, type Sweep } from "./sweep.ts";
 import { type Trial, type Tried, trialsOf, tryOne } from "./trial.ts";
 import type { UncertaintyAsked } from "./uncertain-estimate.ts";
 import { decidingVariant, variantText } from "./what-if-results.ts";
-import { routeOf, type Sweep } from "./window.ts";
 import { type CellFinding, cellFinding, paceAt, type WindowCell } from "./window-cell.ts";
 
 const BY_ERROR: DecidedBy = { member: null, whatIf: null, error: true };
@@ -33,15 +31,11 @@ interface Known {
   readonly base: Conditions;
   readonly tried: Map<Trial, Tried>;
   /** `undefined` while it is not worked out. */
-  spread?: KnownSpread;
+  spread?: CellSpread;
 }
 
-/** What the stated error comes to. */
-interface KnownSpread {
-  readonly reserveHolds: number | null;
-  /** Where the reserve or the arrival holds with less than the probability asked for. */
-  readonly unsure: CellFinding | null;
-}
+/** What trials are made for. */
+type Tested = Pick<Sweep, "prepared" | "conditions" | "arrive">;
 
 /**
  * Puts cells of a sweep to the test with everything that a plan names: every member of an ensemble, every what-if and the
@@ -76,7 +70,7 @@ interface KnownSpread {
  * runSteps(trials.sure(sweepCell(sweep, sweep.prepared[0], 0, null))).decidedBy.member // → 1
  */
 export class CellTrials {
-  readonly #sweep: Sweep;
+  readonly #sweep: Tested;
   readonly #asked: UncertaintyAsked;
   /** The arrival that the cells were found for, and have to keep. */
   readonly #arrive: ArrivalWindow | null;
@@ -87,22 +81,31 @@ export class CellTrials {
   #unsureFirst = false;
   readonly #known = new Map<string, Known>();
 
-  /** @param window whose speeds, where it names some, stand in place of an arrival that the plan's pace asks for */
+  /**
+   * @param window whose speeds, where it names some, stand in place of an arrival that the plan's pace asks for
+   * @param trials as others have them for the same sweep, so that their changed fields serve these too
+   */
   constructor(
-    sweep: Sweep,
+    sweep: Tested,
     asked: UncertaintyAsked,
     window: Pick<DepartureWindow, "speeds_m_s"> = { speeds_m_s: null },
+    trials: readonly Trial[] = trialsOf(sweep, asked),
   ) {
     this.#sweep = sweep;
     this.#asked = asked;
     this.#arrive = window.speeds_m_s === null ? sweep.arrive : null;
-    this.#inOrder = trialsOf(sweep, asked);
-    this.#trials = [...this.#inOrder];
+    this.#inOrder = trials;
+    this.#trials = [...trials];
   }
 
   /** Whether a plan names anything to put a cell to the test with. */
   static has({ members, whatIfs, errors }: UncertaintyAsked): boolean {
     return members.length + whatIfs.length + errors.length > 0;
+  }
+
+  /** Whether anything that a plan names may make a cell a stop that is none itself: an error does where a confidence is asked for. */
+  static decide({ members, whatIfs, errors, confidence }: UncertaintyAsked): boolean {
+    return members.length + whatIfs.length > 0 || (errors.length > 0 && confidence !== undefined);
   }
 
   /** How many members and what-ifs there are, and the confidence asked for. */
@@ -179,6 +182,16 @@ export class CellTrials {
     return { ...worst, leg: null, at_m: null, message: variantText({ variant, others: asBad }) };
   }
 
+  /** When a cell arrives in one of the members and what-ifs, by its place among them: ms since 1970-01-01T00:00Z; `null` where it does not. */
+  arrivalIn(place: number, cell: WindowCell): number | null {
+    return this.#try(this.#knownOf(cell), this.#inOrder[place] as Trial).arrival;
+  }
+
+  /** What a cell comes to under the stated error. */
+  spreadOf(cell: WindowCell): CellSpread {
+    return runSteps(this.#spread(this.#knownOf(cell)));
+  }
+
   #knownOf(cell: WindowCell): Known {
     const key = JSON.stringify([cell.route, cell.departure, cell.speed_m_s]);
     const before = this.#known.get(key);
@@ -209,31 +222,13 @@ export class CellTrials {
     return this.#asked.confidence !== undefined && (yield* this.#spread(known)).unsure !== null;
   }
 
-  *#spread(known: Known): Steps<KnownSpread> {
+  *#spread(known: Known): Steps<CellSpread> {
     if (known.spread === undefined) {
       yield;
-      known.spread = this.#spreadOf(known);
+      const prepared = this.#sweep.prepared[known.route] as PreparedRoute;
+      known.spread = cellSpread(prepared, known.base, this.#asked, this.#arrive);
     }
     return known.spread;
-  }
-
-  #spreadOf({ route, base }: Known): KnownSpread {
-    const { errors, confidence } = this.#asked;
-    if (errors.length === 0) return { reserveHolds: null, unsure: null };
-    const prepared = this.#sweep.prepared[route] as PreparedRoute;
-    const run = estimateRoute(prepared, base);
-    const spread = errorSpread(prepared, base, run, errors)?.spread ?? null;
-    const reserveHolds = spread?.reserveHolds ?? null;
-    if (confidence === undefined) return { reserveHolds, unsure: null };
-    const found =
-      unsureReserve(run.estimate, base, reserveHolds, { confidence, errors }) ??
-      unsureArrival(this.#arrive, this.#chanceToArrive(run.estimate.arrival, spread), confidence);
-    return { reserveHolds, unsure: found && cellFinding(found) };
-  }
-
-  #chanceToArrive(arrival: string | null, spread: ErrorSpread | null): number | null {
-    if (arrival === null || spread === null || this.#arrive === null) return null;
-    return arrivalChance(Date.parse(arrival), spread.arrival_s, this.#arrive);
   }
 }
 

@@ -3,7 +3,7 @@ import { isoTime } from "../estimate/leg-result.ts";
 import { writtenInstant } from "../instant.ts";
 import type { DepartureWindow } from "./departure-window.ts";
 import { latestDeparture } from "./latest-departure.ts";
-import type { Sweep } from "./window.ts";
+import type { Sweep } from "./sweep.ts";
 import { paceAt, type WindowCell, windowCell } from "./window-cell.ts";
 
 const MINUTE = 60_000;

@@ -1,6 +1,7 @@
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { DepartureWindow } from "./departure-window.ts";
-import { type Sweep, sweepCell } from "./window.ts";
+import type { Sweep } from "./sweep.ts";
+import { sweepCell } from "./window.ts";
 import type { WindowCell } from "./window-cell.ts";
 
 const MINUTE = 60_000;

@@ -1,3 +1,5 @@
+import { findRoot } from "../craft/root.ts";
+
 /** Below this the series is used, above it the continued fraction: both give all digits here. */
 const SERIES_UP_TO = 1.5;
 
@@ -43,4 +45,19 @@ function erfcFraction(x: number): number {
  */
 export function normalProbability(z: number): number {
   return erfc(-z / Math.SQRT2) / 2;
+}
+
+/** Beyond it no probability that a number tells from 0 or 1 lies. */
+const FARTHEST = 40;
+
+/**
+ * The z below which a standard normal variable is with a given probability: the inverse of {@link normalProbability}.
+ *
+ * @param probability above 0 and below 1
+ * @example
+ * normalQuantile(0.5) // → 0
+ */
+export function normalQuantile(probability: number): number {
+  const residual = (z: number) => normalProbability(z) - probability;
+  return findRoot({ residual }, -FARTHEST, -probability, FARTHEST, 1 - probability, FARTHEST);
 }

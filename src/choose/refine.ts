@@ -3,7 +3,7 @@ import { lastWhole } from "./last-whole.ts";
 import { leastWhole } from "./least-whole.ts";
 import { MinuteCells } from "./minute-cells.ts";
 import { figureOf, inRank, isLess } from "./rank.ts";
-import type { Sweep } from "./window.ts";
+import type { Sweep } from "./sweep.ts";
 import type { WindowCell } from "./window-cell.ts";
 import { bestOf, isPossible, type WindowBest } from "./window-summary.ts";
 

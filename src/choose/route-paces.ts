@@ -1,5 +1,5 @@
 import { fastestWithReserve, leastUseSpeed } from "./pace-curve.ts";
-import type { Sweep } from "./window.ts";
+import type { Sweep } from "./sweep.ts";
 import type { WindowCell } from "./window-cell.ts";
 import type { WindowBest } from "./window-summary.ts";
 

@@ -4,7 +4,8 @@ import { lastWhole } from "./last-whole.ts";
 import { runSteps, type Steps } from "./steps.ts";
 import type { SureCell } from "./sure.ts";
 import { testedCell } from "./sure-bests.ts";
-import { routeOf, type Sweep, sweepCell } from "./window.ts";
+import { routeOf, type Sweep } from "./sweep.ts";
+import { sweepCell } from "./window.ts";
 import type { WindowCell } from "./window-cell.ts";
 
 const MINUTE = 60_000;

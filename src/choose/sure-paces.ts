@@ -1,10 +1,12 @@
 import type { CellTrials } from "./cell-trials.ts";
+import { lastToHold } from "./last-to-hold.ts";
 import type { RoutePaces } from "./route-paces.ts";
 import { evenlyInSpeed, speedRange } from "./speed-range.ts";
 import type { Steps } from "./steps.ts";
 import type { SureCell } from "./sure.ts";
 import { testedCell } from "./sure-bests.ts";
-import { routeOf, type Sweep, sweepCell } from "./window.ts";
+import { routeOf, type Sweep } from "./sweep.ts";
+import { sweepCell } from "./window.ts";
 import type { WindowCell } from "./window-cell.ts";
 
 /** Share of a speed to which the fastest that holds is found. */
@@ -54,31 +56,13 @@ function* fastestToHold(
 ): Steps<WindowCell | null> {
   const prepared = routeOf(sweep, route);
   const cellAt = (speed: number) => sweepCell(sweep, prepared, Date.parse(departure), speed);
+  const holds = (speed: number) => trials.holds(cellAt(speed));
   let tooFast: number | null = null;
   for (const speed of evenlyInSpeed(speedRange(sweep.conditions.craft)).reverse()) {
-    const cell = cellAt(speed);
-    if (!(yield* trials.holds(cell))) tooFast = speed;
-    else return tooFast === null ? cell : yield* lastToHold(trials, cellAt, speed, tooFast);
+    if (yield* holds(speed))
+      return cellAt(tooFast === null ? speed : yield* lastToHold(holds, speed, tooFast, CLOSENESS));
+    tooFast = speed;
     yield;
   }
   return null;
-}
-
-/** Halves the speeds between one that holds and one that does not. */
-function* lastToHold(
-  trials: CellTrials,
-  cellAt: (speed: number) => WindowCell,
-  slow: number,
-  tooFast: number,
-): Steps<WindowCell> {
-  let [held, shut] = [slow, tooFast];
-  let best = cellAt(held);
-  while (shut - held > CLOSENESS * held) {
-    const middle = 0.5 * (held + shut);
-    const cell = cellAt(middle);
-    if (yield* trials.holds(cell)) [held, best] = [middle, cell];
-    else shut = middle;
-    yield;
-  }
-  return best;
 }

@@ -9,7 +9,7 @@ import { type FoundBests, foundBests, overallBests, testedBests } from "./sure-b
 import { type SureInTime, sureInTime } from "./sure-in-time.ts";
 import { minuteBests } from "./sure-minutes.ts";
 import { type SurePaces, surePaces } from "./sure-paces.ts";
-import type { Sweep } from "./window.ts";
+import type { Sweep } from "./sweep.ts";
 import type { WindowCell } from "./window-cell.ts";
 
 /** The bests of all routes and of each, plain and sure. */

@@ -5,11 +5,14 @@ import { fieldsInUse, type PreparedRoute } from "../estimate/prepare.ts";
 import { routeOutcome } from "../estimate/route-outcomes.ts";
 import { preparedForMember } from "./ensemble.ts";
 import type { DecidedBy } from "./sure.ts";
+import type { Sweep } from "./sweep.ts";
 import type { UncertaintyAsked } from "./uncertain-estimate.ts";
 import { underWhatIf, whatIfFields } from "./what-if-conditions.ts";
 import type { Variant } from "./what-if-results.ts";
-import type { Sweep } from "./window.ts";
 import { cellFinding, cellOf } from "./window-cell.ts";
+
+/** What a sweep's trials start from. */
+type Ground = Pick<Sweep, "prepared" | "conditions">;
 
 /** A member or a what-if, for the departures of one sweep. */
 export interface Trial {
@@ -34,11 +37,11 @@ export interface Tried extends Variant {
  * The members and what-ifs that a plan names, in this order. What a trial needs is made when it is first tried: a changed field of a
  * what-if is then kept, cut to the nodes that the routes span.
  */
-export function trialsOf(sweep: Sweep, asked: UncertaintyAsked): Trial[] {
+export function trialsOf(sweep: Ground, asked: UncertaintyAsked): Trial[] {
   return [...memberTrials(sweep, asked), ...whatIfTrials(sweep, asked)];
 }
 
-function memberTrials({ prepared, conditions }: Sweep, { members }: UncertaintyAsked): Trial[] {
+function memberTrials({ prepared, conditions }: Ground, { members }: UncertaintyAsked): Trial[] {
   return members.map(({ member, fields: all }) => {
     const fields = fieldsInUse(conditions.craft, all);
     const own = prepared.map((): PreparedRoute | null => null);
@@ -55,7 +58,7 @@ function memberTrials({ prepared, conditions }: Sweep, { members }: UncertaintyA
   });
 }
 
-function whatIfTrials({ prepared, conditions }: Sweep, { whatIfs }: UncertaintyAsked): Trial[] {
+function whatIfTrials({ prepared, conditions }: Ground, { whatIfs }: UncertaintyAsked): Trial[] {
   return whatIfs.map((whatIf) => {
     let changed: ReturnType<typeof whatIfFields> | null = null;
     return {
@@ -74,7 +77,7 @@ function whatIfTrials({ prepared, conditions }: Sweep, { whatIfs }: UncertaintyA
  *
  * @throws InputError for a what-if that the plan's own pace does not allow
  */
-export function tryOne({ label, by, under }: Trial, route: number, base: Conditions, sweep: Sweep): Tried {
+export function tryOne({ label, by, under }: Trial, route: number, base: Conditions, sweep: Ground): Tried {
   try {
     const { prepared, conditions } = under(route, base);
     const outcome = routeOutcome(prepared, conditions);

@@ -1,28 +1,23 @@
 import type { Craft, Pace } from "../craft/craft.ts";
 import { InputError } from "../errors.ts";
-import type { Conditions } from "../estimate/conditions.ts";
 import type { EstimateInput } from "../estimate/estimate.ts";
 import { speedText } from "../estimate/finding-text.ts";
 import { fieldsInUse, type PreparedRoute } from "../estimate/prepare.ts";
 import { routeOutcomes } from "../estimate/route-outcomes.ts";
 import { arrivalCell } from "./arrival-cell.ts";
+import { arrivalTestsAt } from "./arrival-trials.ts";
 import type { ArrivalWindow } from "./arrival-window.ts";
 import { checkWindow, type DepartureWindow, windowDepartures } from "./departure-window.ts";
+import type { Sweep } from "./sweep.ts";
+import type { UncertaintyAsked } from "./uncertain-estimate.ts";
 import { cellOf, paceAt, type WindowCell, windowCell } from "./window-cell.ts";
-
-/** What a window of departures is worked out for: the routes, prepared once, and what the plan says. */
-export interface Sweep {
-  readonly prepared: readonly PreparedRoute[];
-  readonly conditions: Conditions;
-  /** The arrival that the plan's pace asks for; `null` where its pace says how fast. */
-  readonly arrive: ArrivalWindow | null;
-}
 
 /**
  * What a window of departures is worked out for, from what an estimate rests on; the fields that do not act on the craft are left out.
  *
  * @param prepared by `prepareRoutes`, from the same input
  * @param arrive the arrival that the pace asks for; `null`, where its pace says how fast, unless given
+ * @param asked what the speeds found for a span of times have to hold in, where one does; left out, nothing
  *
  * @example
  * const craft = readCraft('{ "name": "Boat", "moves": "water", "power": { "model": "cube", "reference": { "speed": "5 m/s", "power": "20 kW" } }, "speeds": { "min": "2 m/s", "max": "8 m/s" }, "store": { "capacity": "100 kWh" } }', "boat.craft.json");
@@ -35,12 +30,11 @@ export function makeSweep(
   prepared: readonly PreparedRoute[],
   { craft, departure, pace, reserve, fields }: EstimateInput,
   arrive: ArrivalWindow | null = null,
+  asked: UncertaintyAsked | null = null,
 ): Sweep {
-  return {
-    prepared,
-    conditions: { departure, craft, pace, reserve, fields: fieldsInUse(craft, fields) },
-    arrive,
-  };
+  const conditions = { departure, craft, pace, reserve, fields: fieldsInUse(craft, fields) };
+  const sweep = { prepared, conditions, arrive };
+  return { ...sweep, testsAt: asked && arrivalTestsAt(sweep, asked) };
 }
 
 /**
@@ -48,7 +42,7 @@ export function makeSweep(
  * out 256 departures at a time. Each equals a lone estimate to the last bit.
  *
  * A speed takes the place of the pace's speed; a leg that names its own keeps it. Where the pace asks for an arrival and
- * the window names no speeds, each cell is at the cheapest speed that makes it.
+ * the window names no speeds, each cell is at the speed found for it, as `estimateArriving` is.
  *
  * @throws InputError for a window that {@link checkWindow} refuses, speeds beside a pace that holds none, or a speed
  *   outside the craft's power model
@@ -95,12 +89,13 @@ function* cells(sweep: Sweep, window: DepartureWindow): Generator<WindowCell, vo
  * sweepCell(sweep, sweep.prepared[0], 0, null).passage_s.toFixed(3) // → "22263.898"
  */
 export function sweepCell(
-  { conditions, arrive }: Sweep,
+  { conditions, arrive, testsAt }: Sweep,
   prepared: PreparedRoute,
   departure: number,
   speed: number | null,
 ): WindowCell {
-  if (arrive !== null && speed === null) return arrivalCell(prepared, { ...conditions, departure }, arrive);
+  if (arrive !== null && speed === null)
+    return arrivalCell(prepared, { ...conditions, departure }, arrive, testsAt);
   return windowCell(prepared, conditions, departure, speed);
 }
 
@@ -131,13 +126,6 @@ export function sweepCells(
   return routeOutcomes(prepared, { ...conditions, pace }, departures).map((outcome, n) =>
     cellOf(prepared, departures[n] as number, speed, outcome),
   );
-}
-
-/** The prepared route of a name. @throws Error where the sweep has none */
-export function routeOf({ prepared }: Sweep, name: string): PreparedRoute {
-  const found = prepared.find(({ route }) => route.name === name);
-  if (found === undefined) throw new Error(`no route ${name} in the sweep`);
-  return found;
 }
 
 function checkSpeeds({ conditions }: Sweep, speeds: readonly number[] | null): void {

@@ -161,11 +161,20 @@ export interface ArrivalAnswer {
   readonly notAfter: string;
   /** Ascending in speed. */
   readonly solutions: readonly ArrivalSolution[];
-  /** Index of the cheapest solution; `null` where there is none. */
+  /**
+   * Index of the solution that the route is estimated at: of the cheapest, or, where a span of times is asked for, of the cheapest that holds
+   * in everything that the plan names, where one is found; `null` where there is none.
+   */
   readonly chosen: number | null;
+  /**
+   * Where a span of times is asked for and the plan names members, what-ifs or a confidence: index of the cheapest solution of the plain
+   * estimate, and whether the chosen one holds in all of them.
+   */
+  readonly cheapest?: number | null;
+  readonly holds?: boolean;
   /** Where there is none: the achievable arrival nearest to those asked for; `null` where no speed completes the route. */
   readonly nearest: ArrivalSolution | null;
-  /** Where there is none: why. */
+  /** Where there is none: why. Where the cheapest does not hold: what stops it, or, where no other does, what stops the nearest to it. */
   readonly reason: string | null;
 }
 

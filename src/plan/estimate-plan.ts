@@ -1,8 +1,9 @@
 import { estimateArriving } from "../choose/arriving-estimate.ts";
+import { CellTrials } from "../choose/cell-trials.ts";
 import type { DecidedEstimate } from "../choose/decided.ts";
 import type { SensitivityProfile } from "../choose/sensitivity-profile.ts";
 import { withTurnBack } from "../choose/turn-back-estimate.ts";
-import { withUncertainty } from "../choose/uncertain-estimate.ts";
+import { type UncertaintyAsked, withUncertainty } from "../choose/uncertain-estimate.ts";
 import type { Land } from "../coast/land-cells.ts";
 import { landFinder } from "../coast/land-finder.ts";
 import { InputError } from "../errors.ts";
@@ -89,17 +90,13 @@ export async function estimatePlan(text: string, request: PlanRequest): Promise<
 
 function estimateChecked({ plan, input, members }: PlanChecked, turnBack = false): PlanAnswer {
   const prepared = prepareRoutes(input);
-  const answer = answerOf(plan, input, prepared);
-  const { alternates = [] } = plan;
+  const { alternates = [], whatIfs = [], errors = [], confidence } = plan;
+  const asked = { whatIfs, errors, members, confidence };
+  const answer = answerOf(plan, input, prepared, asked);
   const isAsked = alternates.length > 0 || turnBack;
   const turned = isAsked ? withTurnBack(answer, prepared, input, alternates) : answer;
-  const { whatIfs = [], errors = [], confidence } = plan;
-  if (whatIfs.length + errors.length + members.length === 0) return { ...turned, plan, input };
-  return {
-    ...withUncertainty(turned, prepared, input, { whatIfs, errors, members, confidence }),
-    plan,
-    input,
-  };
+  if (!CellTrials.has(asked)) return { ...turned, plan, input };
+  return { ...withUncertainty(turned, prepared, input, asked), plan, input };
 }
 
 /** Estimates what is read: at the plan's pace, or at the speeds that make the arrival it asks for. */
@@ -107,8 +104,11 @@ function answerOf(
   { arrive }: Plan,
   input: EstimateInput,
   prepared: readonly PreparedRoute[],
+  asked: UncertaintyAsked,
 ): EstimateAnswer {
-  return arrive === undefined ? estimatePrepared(prepared, input) : estimateArriving(prepared, input, arrive);
+  return arrive === undefined
+    ? estimatePrepared(prepared, input)
+    : estimateArriving(prepared, input, arrive, asked);
 }
 
 /**

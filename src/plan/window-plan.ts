@@ -84,7 +84,9 @@ function answerWindow(
   window: DepartureWindow,
   { file, arriveBy, refine = false }: WindowRequest,
 ): WindowAnswer {
-  const sweep = makeSweep(prepareRoutes(input), input, plan.arrive ?? null);
+  const { whatIfs = [], errors = [], confidence } = plan;
+  const asked = { whatIfs, errors, members, confidence };
+  const sweep = makeSweep(prepareRoutes(input), input, plan.arrive ?? null, asked);
   const ofArriveBy = arriveBy === undefined ? { file, key: "window.arriveBy" } : { key: "arriveBy" };
   const inTime = toldOf(ofArriveBy, () => latestInTime(sweep, window));
   const cells = [...windowCells(sweep, window)];
@@ -93,8 +95,6 @@ function answerWindow(
   const isPaceOpen = minutes !== null && window.speeds_m_s !== null && plan.pace.hold === "through-speed";
   const hasRange = Number.isFinite(plan.craft.speeds?.max ?? plan.craft.power.max);
   const paces = isPaceOpen && hasRange ? routePaces(sweep, refinedBests(minutes)) : null;
-  const { whatIfs = [], errors = [], confidence } = plan;
-  const asked = { whatIfs, errors, members, confidence };
   const sure = CellTrials.has(asked)
     ? runSteps(
         sureWindow(sweep, new CellTrials(sweep, asked, window), { window, cells, minutes, inTime, paces }),

@@ -128,6 +128,8 @@ function arrive(value: ArrivalAnswer): ArrivalAnswer {
     notAfter: value.notAfter,
     solutions: value.solutions.map(solution),
     chosen: value.chosen,
+    ...(value.cheapest === undefined ? {} : { cheapest: value.cheapest }),
+    ...(value.holds === undefined ? {} : { holds: value.holds }),
     nearest: value.nearest && solution(value.nearest),
     reason: value.reason,
   };

@@ -1,4 +1,5 @@
-import { makeSweep, type Sweep } from "../../src/choose/window.ts";
+import type { Sweep } from "../../src/choose/sweep.ts";
+import { makeSweep } from "../../src/choose/window.ts";
 import { constantPower } from "../../src/craft/constant.ts";
 import type { Craft } from "../../src/craft/craft.ts";
 import type { Conditions } from "../../src/estimate/conditions.ts";

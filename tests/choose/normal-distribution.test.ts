@@ -1,5 +1,5 @@
 import { describe, expect, test } from "vitest";
-import { erfc, normalProbability } from "../../src/choose/normal-distribution.ts";
+import { erfc, normalProbability, normalQuantile } from "../../src/choose/normal-distribution.ts";
 
 // SciPy 1.10: [(x, scipy.special.erfc(x)) for x in (...)] and scipy.stats.norm.cdf
 const ERFC: readonly [number, number][] = [
@@ -48,6 +48,11 @@ describe("the complementary error function", () => {
   test.each(PHI)("gives the normal probability of %d as SciPy's %d", (z, value) => {
     // exp(-z²/2) at z = -8 multiplies the rounding of its argument by 32.
     expect(Math.abs(normalProbability(z) / value - 1)).toBeLessThan(4e-14);
+  });
+
+  test.each(PHI)("of %d is %d, of which the quantile is the former", (z, value) => {
+    // A rounding of the probability moves z by as much over the density, 0.0044 at z = 3.
+    expect(Math.abs(normalQuantile(value) - z)).toBeLessThan(5e-14);
   });
 
   test("falls from 2 to 0 and ends there without NaN", () => {

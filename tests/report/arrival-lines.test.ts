@@ -61,7 +61,9 @@ function planOf(arrive: unknown, more: object = {}): string {
 }
 
 const MOMENT = "2027-05-04T13:00Z";
+/** So narrow that no speed arrives in it in everything. */
 const SPAN = { notBefore: "2027-05-04T12:30Z", notAfter: MOMENT };
+const WIDE = { notBefore: "2027-05-04T11:30Z", notAfter: MOMENT };
 const request = { file: "a.plan.json", open };
 const answerOf = (arrive: unknown): Promise<PlanAnswer> => estimatePlan(planOf(arrive), request);
 
@@ -93,6 +95,18 @@ describe("an arrival asked for, in the table", () => {
     expect(text).toMatch(/STOP under the stated forecast error it arrives by 2027-05-04 13:00 UTC with/);
   });
 
+  test("as a span wide enough has the speed that holds, and what stops the cheapest", async () => {
+    const text = await tableOf(WIDE);
+    const lost =
+      /the cheapest by the plain estimate, 4\.4 m\/s \(8\.6 kn\), does not: member 9 \(and 1 more\): it/;
+    expect(text).toMatch(/, the cheapest found that holds in all that the plan names; the cheapest by/);
+    expect(text).toMatch(lost);
+    expect(text).toContain(
+      "It arrives between 2027-05-04 11:30 UTC and 2027-05-04 13:00 UTC in 3 of 3 members",
+    );
+    expect(text).not.toContain("STOP");
+  });
+
   test("as one moment has its shares alone, of being there by then", async () => {
     const text = await tableOf(MOMENT);
     expect(text).toContain("It arrives by 2027-05-04 13:00 UTC in 2 of 3 members (67 %). Too late in");
@@ -119,6 +133,21 @@ describe("an arrival asked for, in files", () => {
     expect(writeCsv(reportOf(fast))).not.toMatch(/asked for|too late|missed by/);
   });
 
+  test("is in JSON with the cheapest solution and whether the chosen one holds, where something decides", async () => {
+    const arriveOf = async (arrive: unknown, more: object = {}) => {
+      const { estimate } = await estimatePlan(planOf(arrive, more), request);
+      const [{ arrive: written }] = JSON.parse(writeJson(estimate)).routes;
+      expect(written).toEqual(estimate.routes[0]?.arrive);
+      return written;
+    };
+    expect(await arriveOf(WIDE)).toMatchObject({ chosen: 1, cheapest: 0, holds: true });
+    expect(await arriveOf(SPAN)).toMatchObject({ chosen: 0, cheapest: 0, holds: false });
+    const keys = ["notBefore", "notAfter", "solutions", "chosen", "nearest", "reason"];
+    expect(Object.keys(await arriveOf(MOMENT))).toEqual(keys);
+    const alone = { whatIf: undefined, confidence: undefined, fields: [] };
+    expect(Object.keys(await arriveOf(WIDE, alone))).toEqual(keys);
+  });
+
   test("is in CSV in columns of its own", async () => {
     const [head, row] = readCsv(writeCsv(reportOf(await answerOf(SPAN)))) as [string[], string[]];
     const cell = (header: string) => row[head.indexOf(header)];
@@ -130,9 +159,27 @@ describe("an arrival asked for, in files", () => {
   });
 });
 
+const window = { from: "2027-05-04T05:00Z", to: "2027-05-04T07:00Z", every: "1 h" };
+
+test("a window found for a span of arrivals has the figures of an estimate at each departure, and its bests hold", async () => {
+  const { cells, sure } = await windowPlan(planOf(WIDE, { window }), request);
+  for (const { departure, ...cell } of cells) {
+    const { estimate } = await estimatePlan(planOf(WIDE), { ...request, departure });
+    const [route] = estimate.routes;
+    const taken = route?.arrive?.solutions[route.arrive.chosen ?? -1];
+    expect([cell.speed_m_s, cell.arrival, cell.use]).toEqual([
+      taken?.speed_m_s,
+      route?.arrival,
+      route?.totals.use,
+    ]);
+  }
+  expect(sure?.best.sure.use?.departure).toBe(sure?.best.plain.use?.departure);
+  expect(sure?.best.sure.use?.sure.status).toBe("clear");
+});
+
 test("a window found for a span of arrivals says that no departure holds, and in what", async () => {
-  const window = { from: "2027-05-04T05:00Z", to: "2027-05-04T07:00Z", every: "1 h" };
-  const answer = await windowPlan(planOf(SPAN, { window, whatIf: [], confidence: undefined }), request);
+  const narrow = { ...SPAN, notBefore: "2027-05-04T12:50Z" };
+  const answer = await windowPlan(planOf(narrow, { window, whatIf: [], confidence: undefined }), request);
   expect(answer.sure?.best.sure.time).toBeNull();
   expect(answer.sure?.best.plain.time?.sure).toMatchObject({
     status: "stop",

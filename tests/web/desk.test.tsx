@@ -217,6 +217,15 @@ describe("an arrival that is asked for", () => {
     ]);
   });
 
+  test("marks the cheapest, and the cheapest that holds in the plan's what-ifs", async () => {
+    const arrive = { notBefore: "2027-05-04T15:30Z", notAfter: "2027-05-04T16:00Z" };
+    const whatIf = [{ name: "A slow start", late: "20 min" }];
+    const page = await pageOf((plan) => ({ ...plan, pace: { arrive }, whatIf }));
+    render(<ArrivalFields page={page} />);
+    const held = /\d\.\d kn for .* kWh \(cheapest\) .*\d\.\d kn for .* kWh \(cheapest that holds\)/;
+    expect(screen.getByText(/^West about:/).textContent).toMatch(held);
+  });
+
   test("says the nearest arrival where no speed makes it", async () => {
     const page = await pageOf((plan) => ({ ...plan, pace: { arrive: "2027-05-04T11:20:00Z" } }));
     render(<ArrivalFields page={page} />);
@@ -285,7 +294,7 @@ describe("how sure it is", () => {
   });
 
   test("says by how much a what-if misses the arrival that the pace asks for, and that it is a stop", async () => {
-    const arrive = { notBefore: "2027-05-04T15:30Z", notAfter: "2027-05-04T16:00Z" };
+    const arrive = { notBefore: "2027-05-04T15:55Z", notAfter: "2027-05-04T16:00Z" };
     const page = await pageOf((plan) => ({
       ...plan,
       pace: { arrive },

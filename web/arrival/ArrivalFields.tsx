@@ -73,7 +73,7 @@ interface FoundProps {
   readonly route: number;
 }
 
-/** All speeds that arrive in time, the cheapest marked; where there is none, the nearest arrival and why. */
+/** All speeds that arrive in time, the cheapest and the one taken marked; where there is none, the nearest arrival and why. */
 function Found({ page, answer, departure, route }: FoundProps) {
   const { view } = page;
   const speed = shownUnit(view.units.value, "speed");
@@ -85,21 +85,23 @@ function Found({ page, answer, departure, route }: FoundProps) {
         none
         {nearest === null
           ? ", no speed completes the route"
-          : `; nearest ${clockSince(nearest.arrival, departure, view.zone.value)} at ${speedOf(nearest)}`}
+          : `; nearest ${clockSince(nearest.arrival, departure, view.zone.value, view.clock.value)} at ${speedOf(nearest)}`}
       </span>
     );
   }
   const store = page.routes.value[route];
   const unit = store ? storeUnit(store.storeUnit, store.usable) : null;
+  const { chosen, cheapest = chosen } = answer;
   const several = answer.solutions.length > 1;
   return (
     <>
       {answer.solutions.map((solution, at) => (
-        <span key={solution.speed_m_s} class={at === answer.chosen && several ? "best-figure" : ""}>
+        <span key={solution.speed_m_s} class={at === chosen && several ? "best-figure" : ""}>
           {at > 0 && !several ? ", " : ""}
           {speedOf(solution)}
           {several && unit !== null && ` for ${inUnit(solution.use, unit)} ${unit.symbol}`}
-          {at === answer.chosen && several && " (cheapest)"}{" "}
+          {at === cheapest && several && " (cheapest)"}
+          {at === chosen && at !== cheapest && " (cheapest that holds)"}{" "}
         </span>
       ))}
     </>

@@ -10,7 +10,8 @@ export { fastestWithReserve, leastUseSpeed, paceCurve } from "../../src/choose/p
 export { refinedBests, refineRoutes } from "../../src/choose/refine.ts";
 export type { Steps } from "../../src/choose/steps.ts";
 export { type SureWindow, sureWindow } from "../../src/choose/sure-window.ts";
+export type { Sweep } from "../../src/choose/sweep.ts";
 export { withTurnBack } from "../../src/choose/turn-back-estimate.ts";
-export { conditionsOf, withUncertainty } from "../../src/choose/uncertain-estimate.ts";
-export { makeSweep, type Sweep, sweepCells } from "../../src/choose/window.ts";
+export { conditionsOf, type UncertaintyAsked, withUncertainty } from "../../src/choose/uncertain-estimate.ts";
+export { makeSweep, sweepCells } from "../../src/choose/window.ts";
 export { summariseWindow } from "../../src/choose/window-summary.ts";

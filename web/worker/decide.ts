@@ -1,5 +1,6 @@
 import type { DecidedEstimate, SensitivityProfile } from "../core.ts";
-import { withTurnBack, withUncertainty } from "./choose.ts";
+import { askedOf } from "./asked-of.ts";
+import { CellTrials, withTurnBack, withUncertainty } from "./choose.ts";
 import type { EstimateAnswer } from "./core.ts";
 import type { PlanRead } from "./plan-reader.ts";
 
@@ -11,14 +12,12 @@ export interface DecidedAnswer extends EstimateAnswer {
 }
 
 /** @param turnBack whether turning back is wanted though the plan names no alternates */
-export function decide(
-  { plan, input, prepared, members }: PlanRead,
-  answer: EstimateAnswer,
-  turnBack: boolean,
-): DecidedAnswer {
-  const { alternates = [], whatIfs = [], errors = [], confidence } = plan;
+export function decide(read: PlanRead, answer: EstimateAnswer, turnBack: boolean): DecidedAnswer {
+  const { plan, input, prepared } = read;
+  const { alternates = [] } = plan;
+  const asked = askedOf(read);
   const turned =
     alternates.length > 0 || turnBack ? withTurnBack(answer, prepared, input, alternates) : answer;
-  if (whatIfs.length + errors.length + members.length === 0) return { ...turned, sensitivities: [] };
-  return withUncertainty(turned, prepared, input, { whatIfs, errors, members, confidence });
+  if (!CellTrials.has(asked)) return { ...turned, sensitivities: [] };
+  return withUncertainty(turned, prepared, input, asked);
 }

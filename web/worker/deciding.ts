@@ -1,6 +1,7 @@
 import type { WindowCell } from "../core.ts";
 import type { PlanDocument } from "../state/plan-document.ts";
 import { cellOrder } from "../window/fill-order.ts";
+import { askedOf } from "./asked-of.ts";
 import {
   CellTrials,
   conditionsOf,
@@ -70,13 +71,13 @@ export function createDeciding(reader: PlanReader): Deciding {
       }),
     beginWindow: (ticket, document, first_ms) =>
       answered(async () => {
-        const { plan, input, prepared, members } = await reader.read(document);
+        const read = await reader.read(document);
+        const { plan, input, prepared } = read;
         if (plan.window === undefined) throw new Error("a window is asked of a plan that names none");
-        const sweep = makeSweep(prepared, input, plan.arrive ?? null);
+        const asked = askedOf(read);
+        const sweep = makeSweep(prepared, input, plan.arrive ?? null, asked);
         const departures = windowDepartures(plan.window);
         const { speeds_m_s } = plan.window;
-        const { whatIfs = [], errors = [], confidence } = plan;
-        const asked = { whatIfs, errors, members, confidence };
         const trials = new CellTrials(sweep, asked, plan.window);
         const speeds = speeds_m_s ?? [null];
         open = { ticket, sweep, window: plan.window, departures, speeds, trials, minutes: null, sure: null };
@@ -193,10 +194,11 @@ function paceOf(read: PlanRead, at: number): PaceAnswer {
   };
 }
 
-function answerOf({ plan, input, prepared }: PlanRead) {
+function answerOf(read: PlanRead) {
+  const { plan, input, prepared } = read;
   return plan.arrive === undefined
     ? estimatePrepared(prepared, input)
-    : estimateArriving(prepared, input, plan.arrive);
+    : estimateArriving(prepared, input, plan.arrive, askedOf(read));
 }
 
 async function answered<T>(find: () => Promise<T>): Promise<Answered<T>> {

@@ -1,4 +1,5 @@
 import type { PlanDocument } from "../state/plan-document.ts";
+import { askedOf } from "./asked-of.ts";
 import { type EstimateAnswer as CoreAnswer, estimatePrepared, InputError, type ReportInput } from "./core.ts";
 import type { PlanRead, PlanReader } from "./plan-reader.ts";
 import type { EstimateAnswer } from "./protocol.ts";
@@ -55,10 +56,11 @@ export function createEstimator(reader: PlanReader): Estimator {
 }
 
 /** At the plan's pace, or at the speeds that make the arrival it asks for. What searches is loaded when it is first wanted. */
-async function estimateRead({ plan, input, prepared }: PlanRead): Promise<CoreAnswer> {
+async function estimateRead(read: PlanRead): Promise<CoreAnswer> {
+  const { plan, input, prepared } = read;
   if (plan.arrive === undefined) return estimatePrepared(prepared, input);
   const { estimateArriving } = await import("./choose.ts");
-  return estimateArriving(prepared, input, plan.arrive);
+  return estimateArriving(prepared, input, plan.arrive, askedOf(read));
 }
 
 async function decidedEstimate(read: PlanRead, answer: CoreAnswer): Promise<ReportInput["estimate"]> {
