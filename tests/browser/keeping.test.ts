@@ -1,4 +1,4 @@
-import type { Page } from "playwright-core";
+import type { Locator, Page } from "playwright-core";
 import { afterAll, beforeAll, expect, test } from "vitest";
 import { builtFiles } from "./built-page.ts";
 import { type PageServer, servePage } from "./serve-page.ts";
@@ -86,23 +86,82 @@ test("after the first visit the page opens without a network, demos and coast as
 test("a newer version says so, waits until it is asked for, and loses nothing", async () => {
   const { page } = await visit({ address: server.address });
   await installed(page);
-  const served = new Map(server.files);
-  try {
-    newerVersion(server.files);
+  await withNewerVersion(async () => {
     await page.reload();
-    const offer = page.locator(".notice.newer");
-    await offer.waitFor();
+    const offer = await offered(page);
     expect(await offer.textContent()).toContain("newer version");
     expect(await page.title()).toBe("Legwork");
     await rename(page, "Half done");
-    await Promise.all([page.waitForEvent("load"), offer.getByRole("button", { name: "Use it now" }).click()]);
+    await useIt(page);
     await expect.poll(() => page.title()).toBe("Legwork, newer");
     await ready(page);
     expect(await titleOf(page)).toBe("Half done");
+  });
+});
+
+// Seen on 2026-12-01: a request that came as the worker before was stopped started it again, and the newer one waited on.
+test("a newer version comes in when asked for while the page is fetching without a pause", async () => {
+  const { page } = await visit({ address: server.address });
+  await installed(page);
+  await withNewerVersion(async () => {
+    await page.reload();
+    await offered(page);
+    await rename(page, "Busy");
+    await page.evaluate(() => {
+      const part = performance.getEntriesByType("resource").find(({ name }) => name.includes("/assets/"));
+      const fetchOn = async (): Promise<void> => {
+        for (;;) await (await fetch(part?.name ?? "")).arrayBuffer();
+      };
+      // It ends with the page that fetches.
+      for (const fetching of [fetchOn(), fetchOn()]) fetching.catch(() => undefined);
+    });
+    await useIt(page);
+    await expect.poll(() => page.title()).toBe("Legwork, newer");
+    await ready(page);
+    expect(await titleOf(page)).toBe("Busy");
+    expect(page.url()).toBe(server.address);
+    expect(await page.locator(".notice.newer").count()).toBe(0);
+  });
+});
+
+test("a newer version that one tab has brought in comes into another when asked for there", async () => {
+  const { page, reopen } = await visit({ address: server.address });
+  await installed(page);
+  await withNewerVersion(async () => {
+    await page.reload();
+    await offered(page);
+    const other = await reopen();
+    await offered(other);
+    await useIt(page);
+    await expect.poll(() => page.title()).toBe("Legwork, newer");
+    expect(await other.title()).toBe("Legwork");
+    await useIt(other);
+    await expect.poll(() => other.title()).toBe("Legwork, newer");
+  });
+});
+
+/** Serves another version of the page during an act. */
+async function withNewerVersion(act: () => Promise<void>): Promise<void> {
+  const served = new Map(server.files);
+  try {
+    newerVersion(server.files);
+    await act();
   } finally {
     for (const [name, content] of served) server.files.set(name, content);
   }
-});
+}
+
+/** Waits until a newer version is offered. */
+async function offered(page: Page): Promise<Locator> {
+  const offer = page.locator(".notice.newer");
+  await offer.waitFor();
+  return offer;
+}
+
+/** Asks for the newer version, and waits until the page is loaded anew. */
+async function useIt(page: Page): Promise<void> {
+  await Promise.all([page.waitForEvent("load"), page.getByRole("button", { name: "Use it now" }).click()]);
+}
 
 /** Another version of the page: another title, and a list of files with another version in it. */
 function newerVersion(files: Map<string, Buffer>): void {

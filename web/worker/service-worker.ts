@@ -41,6 +41,10 @@ async function forgetOlder(): Promise<void> {
 }
 
 async function answer(request: Request, address: string): Promise<Response> {
+  // The page of a newer version, where it was asked for before its worker has come in.
+  const named = new URL(request.url).searchParams.get("version");
+  const newer = named === null ? undefined : await caches.match(address, { cacheName: OWN + named });
+  if (newer !== undefined) return newer;
   const cache = await caches.open(CURRENT);
   return (await cache.match(address)) ?? (await caches.match(address)) ?? fetch(request);
 }
@@ -55,9 +59,11 @@ function keptAs({ method, url }: Request): string | null {
 
 self.addEventListener("install", (event) => event.waitUntil(install()));
 self.addEventListener("activate", (event) => event.waitUntil(forgetOlder().then(() => self.clients.claim())));
-self.addEventListener("message", ({ data }) => {
-  // A newer version waits until the user asks for it.
-  if (data === "activate") void self.skipWaiting();
+self.addEventListener("message", ({ data, source }) => {
+  // A newer version waits until the user asks for it, and tells the name it can be had by meanwhile.
+  if (data !== "activate") return;
+  source?.postMessage(PRECACHE.version);
+  void self.skipWaiting();
 });
 self.addEventListener("fetch", (event) => {
   const address = keptAs(event.request);
