@@ -39,5 +39,6 @@ export type { Units } from "../src/report/input.ts";
 export { askedText, percentText } from "../src/report/percent-text.ts";
 export type { ReportFormat } from "../src/report/report.ts";
 export { fateText, triedText } from "../src/report/sure-text.ts";
-export { storeColumn } from "../src/report/table-units.ts";
+export { routesClock, storeColumn } from "../src/report/table-units.ts";
+export { type Clock, clockFor } from "../src/report/time-text.ts";
 export { type Dimension, dimensionOf, fromUnit, symbolsOf, toUnit } from "../src/units.ts";

@@ -2,7 +2,7 @@ import type { StoreUnit } from "../craft/craft.ts";
 import type { Estimate, RouteEstimate } from "../estimate/result.ts";
 import type { Units } from "./input.ts";
 import { decimalsThatFit } from "./number-text.ts";
-import type { Clock } from "./time-text.ts";
+import { type Clock, clockFor } from "./time-text.ts";
 
 /** A unit of a column: printed figure = SI figure / size, with so many decimals. */
 export interface ColumnUnit {
@@ -54,8 +54,6 @@ const STORE: Record<
 
 /** Shortest leg, m, below which positions carry another decimal. */
 const FINE_LEG = 5000;
-/** Longest route, s, up to which the table prints seconds. */
-const SECONDS_UP_TO = 7200;
 /** Longest time, s, up to which the ledger prints seconds. */
 const LEDGER_SECONDS_UP_TO = 99 * 3600;
 
@@ -86,25 +84,33 @@ export function speedColumn(system: Units): ColumnUnit {
   return { symbol, size, decimals: 1 };
 }
 
+/** Of the routes, s, stays included; in a still medium too, and of a route that stops on the way only there. */
+function longestPassage(routes: readonly RouteEstimate[]): number {
+  const passages = routes.map(({ totals: { time_s, still, stay_s } }) =>
+    Math.max((time_s ?? still.time_s) + stay_s, still.time_s),
+  );
+  return Math.max(0, ...passages);
+}
+
+/** The clock in which the times of these routes are told. */
+export function routesClock(routes: readonly RouteEstimate[]): Clock {
+  return clockFor(longestPassage(routes));
+}
+
 /** Units for an estimate's tables. */
 export function tableUnits(estimate: Estimate, system: Units): TableUnits {
   const { routes } = estimate;
   const [height, heightSize] = HEIGHT[system];
   const legs = routes.flatMap((route) => route.legs);
   const longest = Math.max(0, ...routes.map((route) => route.totals.distance_m));
-  const duration = (totals: RouteEstimate["totals"]) =>
-    (totals.time_s ?? totals.still.time_s) + totals.stay_s;
-  const lasts = Math.max(
-    0,
-    ...routes.map((route) => Math.max(duration(route.totals), route.totals.still.time_s)),
-  );
+  const lasts = longestPassage(routes);
   return {
     system,
     length: lengthUnit(system, longest),
     speed: speedColumn(system),
     height: { symbol: height, size: heightSize, decimals: 0 },
     store: storeUnit(routes),
-    clock: lasts < SECONDS_UP_TO ? "second" : "minute",
+    clock: clockFor(lasts),
     ledgerClock: lasts < LEDGER_SECONDS_UP_TO ? "second" : "minute",
     finePositions: legs.some((leg) => leg.distance_m < FINE_LEG),
   };

@@ -5,6 +5,14 @@ export type Clock = "minute" | "second";
 
 const SECONDS = { minute: 60, second: 1 } as const;
 
+/** Longest passage, s, up to which a table prints seconds. */
+const SECONDS_UP_TO = 7200;
+
+/** The clock of a table whose longest passage takes so many seconds, stays included. */
+export function clockFor(longest_s: number): Clock {
+  return longest_s < SECONDS_UP_TO ? "second" : "minute";
+}
+
 /** Seconds in one unit of the clock. */
 export function clockSeconds(clock: Clock): number {
   return SECONDS[clock];

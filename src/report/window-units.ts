@@ -1,6 +1,6 @@
 import type { Units } from "./input.ts";
 import { type ColumnUnit, speedColumn, storeColumn } from "./table-units.ts";
-import type { Clock } from "./time-text.ts";
+import { type Clock, clockFor } from "./time-text.ts";
 import type { WindowReport } from "./window-input.ts";
 
 /** The units of a window's table, chosen once. */
@@ -14,8 +14,6 @@ export interface WindowUnits {
   readonly speeds: boolean;
 }
 
-/** Longest passage, s, up to which the table prints seconds. */
-const SECONDS_UP_TO = 7200;
 const MINUTE = 60_000;
 
 export function windowUnits({ cells, craft, window, arrive }: WindowReport, system: Units): WindowUnits {
@@ -28,7 +26,7 @@ export function windowUnits({ cells, craft, window, arrive }: WindowReport, syst
       craft.store.unit,
       amounts.reduce((most, each) => Math.max(most, each), craft.store.usable),
     ),
-    clock: longest < SECONDS_UP_TO ? "second" : "minute",
+    clock: clockFor(longest),
     departures: onMinutes ? "minute" : "second",
     speeds: window.speeds_m_s !== null || arrive !== null,
   };

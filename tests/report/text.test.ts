@@ -11,7 +11,7 @@ import {
 } from "../../src/report/plain-text.ts";
 import { positionText } from "../../src/report/position-text.ts";
 import { inLastPlace, leftInLastPlace, roundedRows } from "../../src/report/rounding.ts";
-import { durationText, etaText, instantText } from "../../src/report/time-text.ts";
+import { clockFor, durationText, etaText, instantText } from "../../src/report/time-text.ts";
 
 describe("courses", () => {
   it("are three digits, and 360 is 000", () => {
@@ -54,6 +54,10 @@ describe("durations", () => {
 });
 
 describe("instants", () => {
+  it("are told to the second where the longest passage takes less than two hours", () => {
+    expect([0, 7199.9, 7200, 1e6].map(clockFor)).toEqual(["second", "second", "minute", "minute"]);
+  });
+
   it("round to the minute across the hour, the day and the year", () => {
     expect(etaText("2027-12-31T23:59:30.000Z", "minute")).toBe("01 00:00");
     expect(instantText("2027-12-31T23:59:30.000Z", "minute")).toBe("2028-01-01 00:00 UTC");

@@ -60,10 +60,18 @@ describe("times as text", () => {
     const late = Date.UTC(2027, 11, 31, 23, 59, 57);
     expect(clockText(late - 60_000, "UTC", false)).toBe("23:59");
     expect(clockText(late, "UTC", true)).toBe("Sat 1 Jan 00:00");
-    expect(clockSince("2027-05-04T13:47:57Z", "2027-05-04T11:00:00Z", "UTC")).toBe("13:48");
-    expect(clockSince("2027-05-04T13:47:29Z", "2027-05-04T11:00:00Z", "UTC")).toBe("13:47");
+    expect(clockSince("2027-05-04T13:47:57Z", "2027-05-04T11:00:00Z", "UTC", "minute")).toBe("13:48");
+    expect(clockSince("2027-05-04T13:47:29Z", "2027-05-04T11:00:00Z", "UTC", "minute")).toBe("13:47");
     expect(fullTimeText(late, "UTC")).toBe("Sat 1 Jan 2028 00:00 UTC");
     expect(dateText(late, "UTC")).toBe("2028-01-01");
+  });
+
+  test("are of the nearest second where seconds count, with the day that it falls on", () => {
+    const departure = "2027-12-31T23:58:00Z";
+    expect(clockSince("2027-12-31T23:59:57.499Z", departure, "UTC", "second")).toBe("23:59:57");
+    expect(clockSince("2027-12-31T23:59:59.500Z", departure, "UTC", "second")).toBe("1 Jan 00:00:00");
+    expect(clockText("2027-12-31T23:59:59.5Z", "UTC", true, "second")).toBe("Sat 1 Jan 00:00:00");
+    expect(clockText("2027-05-04T06:05:09Z", "Asia/Kolkata", false, "second")).toBe("11:35:09");
   });
 
   test("have a date in the zone", () => {
@@ -72,8 +80,8 @@ describe("times as text", () => {
   });
 
   test("carry the date where it is another day than the departure's", () => {
-    expect(clockSince("2027-05-04T23:10:00Z", "2027-05-04T06:00:00Z", "UTC")).toBe("23:10");
-    expect(clockSince("2027-05-05T00:10:00Z", "2027-05-04T06:00:00Z", "UTC")).toBe("5 May 00:10");
+    expect(clockSince("2027-05-04T23:10:00Z", "2027-05-04T06:00:00Z", "UTC", "minute")).toBe("23:10");
+    expect(clockSince("2027-05-05T00:10:00Z", "2027-05-04T06:00:00Z", "UTC", "minute")).toBe("5 May 00:10");
   });
 
   test("go into the local control and come back, whatever the zone", () => {
@@ -97,6 +105,9 @@ describe("times as text", () => {
     expect(durationText(11_220)).toBe("3 h 07");
     expect(durationText(3590)).toBe("1 h 00");
     expect(durationText(3540)).toBe("59 min");
+    expect(durationText(1488)).toBe("25 min");
+    expect(durationText(1488, "second")).toBe("24 min 48");
+    expect(durationText(3599.6, "second")).toBe("1 h 00");
     expect(durationText(42)).toBe("42 s");
     expect(durationText(599)).toBe("9 min 59");
     expect(durationText(-154)).toBe("−2 min 34");

@@ -135,7 +135,9 @@ describe("the leg table", () => {
     const [route] = page.answers.answer.value.routes;
     if (!route) throw new Error("the demo has a route");
     const stopping = { ...route, totals: { ...route.totals, stay_s: 300 } };
-    const still = legColumns(stopping, { preset: "sea", zone: "UTC" }).find(({ key }) => key === "still");
+    const still = legColumns(stopping, { preset: "sea", zone: "UTC", clock: "minute" }).find(
+      ({ key }) => key === "still",
+    );
     expect([still?.heading, still?.unit]).toEqual(["Still time", ""]);
   });
 

@@ -1,34 +1,42 @@
-/* Times, to the nearest minute, and durations as the page shows them. Zones are those that the browser knows; every time says which it is in. */
+import type { Clock } from "../core.ts";
+
+/*
+ * Times, to the nearest minute or second as in the command's tables, and durations as the page shows them. Zones are those that the
+ * browser knows; every time says which it is in.
+ */
 
 const formats = new Map<string, Intl.DateTimeFormat>();
 
-/** `06:00`, or `Tue 4 May 06:00` with the day, in a zone. */
-export function clockText(instant: number | string, zone: string, withDay: boolean): string {
-  const parts = partsIn(instant, zone);
-  const clock = `${parts.hour}:${parts.minute}`;
-  return withDay ? `${parts.weekday} ${Number(parts.day)} ${parts.month} ${clock}` : clock;
+/** `06:00`, or `Tue 4 May 06:00` with the day, in a zone; with its seconds where they count. */
+export function clockText(
+  instant: number | string,
+  zone: string,
+  withDay: boolean,
+  clock: Clock = "minute",
+): string {
+  const { weekday, day, month, time } = partsIn(instant, zone, clock);
+  return withDay ? `${weekday} ${Number(day)} ${month} ${time}` : time;
 }
 
 /** The date in a zone as ISO 8601 writes it: `2027-05-04`. */
 export function dateText(instant: number, zone: string): string {
-  return localInput(nearestMinute(instant), zone).slice(0, 10);
+  return localInput(nearest(instant, "minute"), zone).slice(0, 10);
 }
 
 /** A time in full, as one that is decided on is read: `Tue 4 May 2027 06:00 UTC`. */
 export function fullTimeText(instant: number, zone: string): string {
-  const { weekday, day, month, hour, minute } = partsIn(instant, zone);
-  const year = localInput(nearestMinute(instant), zone).slice(0, 4);
-  return `${weekday} ${Number(day)} ${month} ${year} ${hour}:${minute} ${zoneText(instant, zone)}`;
+  const { weekday, day, month, time } = partsIn(instant, zone, "minute");
+  const year = localInput(nearest(instant, "minute"), zone).slice(0, 4);
+  return `${weekday} ${Number(day)} ${month} ${year} ${time} ${zoneText(instant, zone)}`;
 }
 
-/** `06:00` on the day of another instant, else with its date: `7 Nov 06:00`. */
-export function clockSince(instant: string, since: string | null, zone: string): string {
-  const { day, month, hour, minute } = partsIn(instant, zone);
-  const start = since === null ? null : partsIn(since, zone);
-  const clock = `${hour}:${minute}`;
+/** `06:00`, or `06:00:12`, on the day of another instant, else with its date: `7 Nov 06:00`. */
+export function clockSince(instant: string, since: string | null, zone: string, clock: Clock): string {
+  const { day, month, time } = partsIn(instant, zone, clock);
+  const start = since === null ? null : partsIn(since, zone, clock);
   return start !== null && start.day === day && start.month === month
-    ? clock
-    : `${Number(day)} ${month} ${clock}`;
+    ? time
+    : `${Number(day)} ${month} ${time}`;
 }
 
 /** The zone's label beside a time: `UTC`, or its name and offset at that instant. */
@@ -40,13 +48,13 @@ export function zoneText(instant: number | string, zone: string): string {
   return `${zone} (UTC${offset < 0 ? "−" : "+"}${hours}:${String(size % 60).padStart(2, "0")})`;
 }
 
-/** `3 h 07` from an hour up, `12 min` below; seconds under ten minutes. */
-export function durationText(seconds: number | null): string {
+/** `3 h 07` from an hour up, `12 min` below; seconds under ten minutes, and under an hour where they count. */
+export function durationText(seconds: number | null, clock: Clock = "minute"): string {
   if (seconds === null) return "–";
   const sign = seconds < 0 ? "−" : "";
   const size = Math.abs(seconds);
   const whole = Math.round(size);
-  if (whole < 600) return signOf(sign, whole) + shortDuration(whole);
+  if (whole < (clock === "minute" ? 600 : 3600)) return signOf(sign, whole) + shortDuration(whole);
   const minutes = Math.round(size / 60);
   if (minutes < 60) return `${sign}${minutes} min`;
   return `${sign}${Math.floor(minutes / 60)} h ${String(minutes % 60).padStart(2, "0")}`;
@@ -82,24 +90,24 @@ function shortDuration(whole: number): string {
   return `${Math.floor(whole / 60)} min ${String(whole % 60).padStart(2, "0")}`;
 }
 
-function nearestMinute(instant: number | string): number {
-  return Math.round(Number(new Date(instant)) / 60_000) * 60_000;
+function nearest(instant: number | string, clock: Clock): number {
+  const unit = clock === "minute" ? 60_000 : 1000;
+  return Math.round(Number(new Date(instant)) / unit) * unit;
 }
 
 interface Parts {
   readonly weekday: string;
   readonly day: string;
   readonly month: string;
-  readonly hour: string;
-  readonly minute: string;
+  readonly time: string;
 }
 
-/** Of the nearest minute, as the leg table on file rounds. */
-function partsIn(instant: number | string, zone: string): Parts {
+/** Of the nearest minute or second, as the leg table on file rounds. */
+function partsIn(instant: number | string, zone: string, clock: Clock): Parts {
   const found: Record<string, string> = {};
-  for (const { type, value } of formatOf(zone).formatToParts(nearestMinute(instant))) found[type] = value;
-  const { weekday = "", day = "", month = "", hour = "", minute = "" } = found;
-  return { weekday, day, month, hour, minute };
+  for (const { type, value } of formatOf(zone).formatToParts(nearest(instant, clock))) found[type] = value;
+  const { weekday = "", day = "", month = "", hour, minute, second } = found;
+  return { weekday, day, month, time: `${hour}:${minute}${clock === "minute" ? "" : `:${second}`}` };
 }
 
 function offsetMinutes(instant: number, zone: string): number {
@@ -117,7 +125,8 @@ function formatOf(zone: string, numeric = false): Intl.DateTimeFormat {
   const key = `${zone} ${numeric}`;
   const kept = formats.get(key);
   if (kept !== undefined) return kept;
-  const clock = { hour: "2-digit", minute: "2-digit", hourCycle: "h23", timeZone: zone } as const;
+  const two = "2-digit";
+  const clock = { hour: two, minute: two, second: two, hourCycle: "h23", timeZone: zone } as const;
   const made = numeric
     ? new Intl.DateTimeFormat("en-GB", { ...clock, year: "numeric", month: "numeric", day: "numeric" })
     : new Intl.DateTimeFormat("en-GB", { ...clock, weekday: "short", day: "numeric", month: "short" });

@@ -134,10 +134,10 @@ function LedgerRow({ page, at, name, route, base, best, end }: LedgerRowProps) {
             <Cell label="Arrival" best={best.arrival.has(at)} difference={arrivalDifference(route, against)}>
               {route.arrival === null
                 ? "not reached"
-                : clockSince(route.arrival, route.departure, view.zone.value)}
+                : clockSince(route.arrival, route.departure, view.zone.value, view.clock.value)}
             </Cell>
             <Cell label="Time" best={false} difference={null}>
-              {durationText(wholeTime(route))}
+              {durationText(wholeTime(route), view.clock.value)}
             </Cell>
             <Cell label="Use" best={best.use.has(at)} difference={amountDifference(route, against, "use")}>
               {amountText(route.totals.use, route.storeUnit, route.usable)}

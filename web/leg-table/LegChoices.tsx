@@ -17,6 +17,7 @@ export function LegChoices({ page, onClose }: LegChoicesProps) {
   const columns = legColumns(route, {
     preset: view.units.value,
     zone: view.zone.value,
+    clock: view.clock.value,
     own: view.legUnits.value,
   });
   const hidden = hiddenColumns.value;

@@ -28,7 +28,12 @@ export function LegTable({ page }: { readonly page: PageState }) {
       </section>
     );
   }
-  const shown = { preset: view.units.value, zone: view.zone.value, own: view.legUnits.value };
+  const shown = {
+    preset: view.units.value,
+    zone: view.zone.value,
+    clock: view.clock.value,
+    own: view.legUnits.value,
+  };
   const all = legColumns(route, shown);
   const columns = chosenColumns(all, view.hiddenColumns.value);
   const { distance, amount } = tableUnits(route, shown);
@@ -100,7 +105,8 @@ export function LegTable({ page }: { readonly page: PageState }) {
       </section>
       <p class="leg-totals leg-part">
         {route.name}: {inUnit(route.totals.distance_m, distance)} {distance.symbol},{" "}
-        {durationText(route.totals.time_s)} under way, {inUnit(route.totals.use, amount)} {amount.symbol} used
+        {durationText(route.totals.time_s, view.clock.value)} under way, {inUnit(route.totals.use, amount)}{" "}
+        {amount.symbol} used
       </p>
       <p class="advisory only-print">{ADVISORY}</p>
     </section>

@@ -1,4 +1,4 @@
-import type { LegEstimate, RouteEstimate, StoreUnit } from "../core.ts";
+import type { Clock, LegEstimate, RouteEstimate, StoreUnit } from "../core.ts";
 import { clockSince, durationText } from "../format/time-text.ts";
 import {
   inUnit,
@@ -24,6 +24,7 @@ export interface LegColumn {
 export interface LegShown {
   readonly preset: UnitsPreset;
   readonly zone: string;
+  readonly clock: Clock;
   /** The table's own units, before the preset's. */
   readonly own?: LegUnits;
 }
@@ -60,7 +61,7 @@ function decimalsOf(amount: string): number {
 /** All columns that a route can have, in order. Wind and current columns appear where the plan has such a field. */
 export function legColumns(route: RouteEstimate, shown: LegShown): LegColumn[] {
   const { distance, speed, amount } = tableUnits(route, shown);
-  const { zone } = shown;
+  const { zone, clock } = shown;
   const zoneName = zone === "UTC" ? "UTC" : "local";
   return [
     plain("leg", "Leg", "", ({ leg }) => String(leg)),
@@ -70,10 +71,10 @@ export function legColumns(route: RouteEstimate, shown: LegShown): LegColumn[] {
     plain("final", "Ends", "°T", ({ finalCourse_deg }) => courseText(finalCourse_deg)),
     plain("magnetic", "Course", "°M", ({ magneticCourse_deg }) => courseText(magneticCourse_deg)),
     plain("distance", "Distance", distance.symbol, ({ distance_m }) => inUnit(distance_m, distance)),
-    plain("time", "Time", "", ({ time_s }) => durationText(time_s)),
-    ...stayColumn(route),
+    plain("time", "Time", "", ({ time_s }) => durationText(time_s, clock)),
+    ...stayColumn(route, clock),
     plain("eta", "ETA", zoneName, ({ arrival }) =>
-      arrival === null ? "–" : clockSince(arrival, route.departure, zone),
+      arrival === null ? "–" : clockSince(arrival, route.departure, zone, clock),
     ),
     ...fieldColumns(route, "current", speed),
     ...fieldColumns(route, "wind", speed),
@@ -81,7 +82,7 @@ export function legColumns(route: RouteEstimate, shown: LegShown): LegColumn[] {
     plain("ground", "Ground", speed.symbol, (leg) => inUnit(leg.groundSpeed_m_s?.mean ?? null, speed)),
     plain("heading", "Heading", "°T", (leg) => courseText(leg.heading_deg?.mean ?? null)),
     plain("crab", "Crab", "°", (leg) => crabText(leg.crab_deg?.mean ?? null)),
-    plain("still", "Still time", "", ({ still }) => durationText(still.time_s)),
+    plain("still", "Still time", "", ({ still }) => durationText(still.time_s, clock)),
     plain("use", "Use", amount.symbol, ({ use }) => inUnit(use, amount)),
     plain("left", "Left", amount.symbol, ({ remaining }) => inUnit(remaining, amount)),
   ];
@@ -101,9 +102,9 @@ export function chosenColumns(
   return columns.filter(({ key }) => FIXED_COLUMNS.includes(key) || !hidden.includes(key));
 }
 
-function stayColumn(route: RouteEstimate): LegColumn[] {
+function stayColumn(route: RouteEstimate, clock: Clock): LegColumn[] {
   if (route.totals.stay_s === 0) return [];
-  return [plain("stay", "Stay", "", ({ stay_s }) => (stay_s === 0 ? "" : durationText(stay_s)))];
+  return [plain("stay", "Stay", "", ({ stay_s }) => (stay_s === 0 ? "" : durationText(stay_s, clock)))];
 }
 
 function fieldColumns(route: RouteEstimate, role: "wind" | "current", speed: ShownUnit): LegColumn[] {

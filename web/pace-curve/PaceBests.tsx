@@ -17,8 +17,10 @@ export function PaceBests({ page, answer: { least, fastest, curve }, onLook, onC
   const unit = shownUnit(view.units.value, "speed");
   const amount = storeUnit(curve.storeUnit, curve.usable);
   const words = (cell: WindowCell): string =>
-    `${inUnit(cell.speed_m_s, unit)} ${unit.symbol}: ${durationText(cell.passage_s)}, arrives ${
-      cell.arrival === null ? "–" : clockSince(cell.arrival, cell.departure, view.zone.value)
+    `${inUnit(cell.speed_m_s, unit)} ${unit.symbol}: ${durationText(cell.passage_s, view.clock.value)}, arrives ${
+      cell.arrival === null
+        ? "–"
+        : clockSince(cell.arrival, cell.departure, view.zone.value, view.clock.value)
     }, uses ${inUnit(cell.use, amount)} ${amount.symbol}, ${inUnit(cell.remaining, amount)} left`;
   const item = (letter: string, name: string, cell: WindowCell | null, none: string) => (
     <li>

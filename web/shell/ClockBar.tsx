@@ -2,6 +2,8 @@ import { clockText, zoneText } from "../format/time-text.ts";
 import { type PageState, shownInstant } from "../state/page-state.ts";
 
 const MINUTE = 60_000;
+/** Where the routes are so short that times have seconds, ms. */
+const SHORT_STEP = 10_000;
 
 /** Scrubs the chart through time, over the routes' time under way and the fields' valid times. */
 export function ClockBar({ page }: { readonly page: PageState }) {
@@ -10,8 +12,11 @@ export function ClockBar({ page }: { readonly page: PageState }) {
   const instant = shownInstant(page);
   if (span === null || instant === null) return null;
   const zone = view.zone.value;
+  const clock = view.clock.value;
   const shown = Math.min(Math.max(instant, span.from), span.to);
-  const step = span.to - span.from > 24 * 60 * MINUTE ? 10 * MINUTE : MINUTE;
+  const coarse = span.to - span.from > 24 * 60 * MINUTE ? 10 * MINUTE : MINUTE;
+  const step = clock === "second" ? SHORT_STEP : coarse;
+  const text = clockText(shown, zone, true, clock);
   return (
     <div class="clock-bar">
       <button
@@ -26,7 +31,7 @@ export function ClockBar({ page }: { readonly page: PageState }) {
       <input
         type="range"
         aria-label="Instant shown on the chart"
-        aria-valuetext={`${clockText(shown, zone, true)} ${zoneText(shown, zone)}`}
+        aria-valuetext={`${text} ${zoneText(shown, zone)}`}
         min={span.from}
         max={span.to}
         step={step}
@@ -36,8 +41,7 @@ export function ClockBar({ page }: { readonly page: PageState }) {
         }}
       />
       <output>
-        {clockText(shown, zone, true)}{" "}
-        <span class="zone">{zone === "UTC" ? "UTC" : zoneText(shown, zone)}</span>
+        {text} <span class="zone">{zone === "UTC" ? "UTC" : zoneText(shown, zone)}</span>
       </output>
     </div>
   );

@@ -21,7 +21,7 @@ interface Row {
 export function WhatIfTable({ page, route }: { readonly page: PageState; readonly route: DecidedRoute }) {
   const { whatIf } = route;
   if (whatIf === undefined || whatIf.length === 0) return null;
-  const zone = page.view.zone.value;
+  const { zone, clock } = page.view;
   const amount = storeUnit(route.storeUnit, route.usable);
   const rows: Row[] = whatIf.map(({ worst, ...figures }) => ({ ...figures, why: worst?.message ?? null }));
   return (
@@ -42,10 +42,12 @@ export function WhatIfTable({ page, route }: { readonly page: PageState; readonl
           <tr key={row.name} title={row.why ?? undefined}>
             <th scope="row">{row.name}</th>
             <td>
-              {row.arrival === null ? "not reached" : clockSince(row.arrival, route.departure, zone)}
+              {row.arrival === null
+                ? "not reached"
+                : clockSince(row.arrival, route.departure, zone.value, clock.value)}
               {missWords(row.arrivalMiss_s)}
             </td>
-            <td>{durationText(row.passage_s)}</td>
+            <td>{durationText(row.passage_s, clock.value)}</td>
             <td>{inUnit(row.use, amount)}</td>
             <td>{inUnit(row.remaining, amount)}</td>
             <td>

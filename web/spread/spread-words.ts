@@ -3,7 +3,7 @@ import { clockSince, durationText } from "../format/time-text.ts";
 import { inUnit, shownUnit, storeUnit } from "../format/units.ts";
 import type { PageView } from "../state/page-view.ts";
 
-type Shown = Pick<PageView, "units" | "zone">;
+type Shown = Pick<PageView, "units" | "zone" | "clock">;
 
 /** What the stated forecast error comes to on a route, in sentences. */
 export function spreadWords(route: DecidedRoute, spread: ErrorSpread, view: Shown): string[] {
@@ -15,7 +15,7 @@ export function spreadWords(route: DecidedRoute, spread: ErrorSpread, view: Show
     ...(route.arrive === undefined || spread.arrivalHolds === undefined
       ? []
       : [
-          `Arrives by ${clockSince(route.arrive.notAfter, route.departure, view.zone.value)} with a probability of ${percentText(spread.arrivalHolds)}.`,
+          `Arrives by ${clockSince(route.arrive.notAfter, route.departure, view.zone.value, view.clock.value)} with a probability of ${percentText(spread.arrivalHolds)}.`,
         ]),
     `One standard deviation: arrival ${durationText(spread.arrival_s)}, use ${inUnit(spread.use, amount)} ${amount.symbol}, left ${inUnit(spread.remaining, amount)} ${amount.symbol}.`,
     ...weakWords(route, spread.weakest.use, "use", view),
@@ -24,20 +24,24 @@ export function spreadWords(route: DecidedRoute, spread: ErrorSpread, view: Show
 }
 
 /** What an ensemble comes to on a route. */
-export function ensembleWords(route: DecidedRoute, ensemble: EnsembleResult, { zone }: Shown): string[] {
+export function ensembleWords(
+  route: DecidedRoute,
+  ensemble: EnsembleResult,
+  { zone, clock }: Shown,
+): string[] {
   const amount = storeUnit(route.storeUnit, route.usable);
   const { members, reserveHolds, breaksReserve, doesNotArrive, arrival, remaining } = ensemble;
   const what = route.reserve === 0 ? "The store lasts" : "The reserve holds";
   const held = Math.round(reserveHolds * members.length);
-  const clock = (time: string): string => clockSince(time, route.departure, zone.value);
+  const told = (time: string): string => clockSince(time, route.departure, zone.value, clock.value);
   return [
     `${what} in ${held} of ${members.length} members (${percentText(reserveHolds)}).`,
     ...(breaksReserve.length === 0 ? [] : [`Broken in ${memberWords(breaksReserve)}.`]),
     ...(doesNotArrive.length === 0 ? [] : [`Does not arrive in ${memberWords(doesNotArrive)}.`]),
-    ...arriveWords(route, ensemble, clock),
+    ...arriveWords(route, ensemble, told),
     ...(arrival === null
       ? []
-      : [`Arrival 10 % ${clock(arrival.p10)}, 50 % ${clock(arrival.p50)}, 90 % ${clock(arrival.p90)}.`]),
+      : [`Arrival 10 % ${told(arrival.p10)}, 50 % ${told(arrival.p50)}, 90 % ${told(arrival.p90)}.`]),
     ...(remaining === null
       ? []
       : [
@@ -50,14 +54,14 @@ export function ensembleWords(route: DecidedRoute, ensemble: EnsembleResult, { z
 function arriveWords(
   { arrive }: DecidedRoute,
   { members, arrivalHolds, arrivesEarly = [], arrivesLate = [] }: EnsembleResult,
-  clock: (time: string) => string,
+  told: (time: string) => string,
 ): string[] {
   if (arrive === undefined || arrivalHolds === undefined) return [];
   const { notBefore, notAfter } = arrive;
   const span =
     notBefore === null || notBefore === notAfter
-      ? `by ${clock(notAfter)}`
-      : `between ${clock(notBefore)} and ${clock(notAfter)}`;
+      ? `by ${told(notAfter)}`
+      : `between ${told(notBefore)} and ${told(notAfter)}`;
   const kept = Math.round(arrivalHolds * members.length);
   return [
     `Arrives ${span} in ${kept} of ${members.length} members (${percentText(arrivalHolds)}).`,

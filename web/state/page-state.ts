@@ -1,5 +1,5 @@
 import { computed, type ReadonlySignal, type Signal, signal } from "@preact/signals";
-import type { DecidedRoute, FieldInspection } from "../core.ts";
+import { type DecidedRoute, type FieldInspection, routesClock } from "../core.ts";
 import type { Worker } from "../worker/protocol.ts";
 import { type Answers, createAnswers } from "./answers.ts";
 import { createDecisions, type Decisions, estimatesAlike } from "./decisions.ts";
@@ -74,7 +74,7 @@ export function createPageState(
   });
   return {
     store,
-    view: createPageView(),
+    view: createPageView(computed(() => routesClock(answers.answer.value.estimate?.routes ?? []))),
     answers,
     engine,
     second,

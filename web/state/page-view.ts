@@ -1,4 +1,5 @@
-import { type Signal, signal } from "@preact/signals";
+import { type ReadonlySignal, type Signal, signal } from "@preact/signals";
+import type { Clock } from "../core.ts";
 
 export type UnitsPreset = "sea" | "air" | "metric";
 type Theme = "auto" | "light" | "dark";
@@ -29,6 +30,8 @@ export interface PageView {
   readonly unitsChosen: Signal<boolean>;
   /** IANA name of the time zone that times are shown in; "UTC" unless chosen. */
   readonly zone: Signal<string>;
+  /** Whether times are told to the minute or to the second; it follows from how long the routes take. */
+  readonly clock: ReadonlySignal<Clock>;
   readonly theme: Signal<Theme>;
   readonly axis: Signal<RibbonAxis>;
   /** The instant that the chart shows, ms since 1970; `null` for the departure. */
@@ -64,11 +67,12 @@ export interface PageView {
   readonly announcement: Signal<string>;
 }
 
-export function createPageView(): PageView {
+export function createPageView(clock: ReadonlySignal<Clock> = signal<Clock>("minute")): PageView {
   return {
     units: signal<UnitsPreset>("sea"),
     unitsChosen: signal(false),
     zone: signal("UTC"),
+    clock,
     theme: signal<Theme>("auto"),
     axis: signal<RibbonAxis>("distance"),
     instant: signal<number | null>(null),

@@ -11,7 +11,7 @@ export interface TurnBackLine {
   readonly kind: "no-return" | "equal-time" | "reach" | "unknown" | "nowhere";
 }
 
-type Shown = Pick<PageView, "units" | "zone">;
+type Shown = Pick<PageView, "units" | "zone" | "clock">;
 
 const REASONS: Readonly<Record<string, string>> = {
   "outside-time": "the data end in time on the way there",
@@ -77,8 +77,8 @@ function atStart(turn: TurnBack, goal: number | null): string {
   return isAlternate ? name : `${name[0]?.toUpperCase()}${name.slice(1)}`;
 }
 
-function placeText(place: RoutePlace, departure: string, { units, zone }: Shown): string {
+function placeText(place: RoutePlace, departure: string, { units, zone, clock }: Shown): string {
   const distance = shownUnit(units.value, "distance");
-  const clock = clockSince(place.time, departure, zone.value);
-  return `${inUnit(place.distance_m, distance)} ${distance.symbol} from the start, leg ${place.leg}, ${clock} ${zone.value === "UTC" ? "UTC" : zoneText(place.time, zone.value)}`;
+  const time = clockSince(place.time, departure, zone.value, clock.value);
+  return `${inUnit(place.distance_m, distance)} ${distance.symbol} from the start, leg ${place.leg}, ${time} ${zone.value === "UTC" ? "UTC" : zoneText(place.time, zone.value)}`;
 }

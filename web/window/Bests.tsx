@@ -102,7 +102,7 @@ function BestItem({ page, filled, told: { letter, name, isPassed, cell } }: Best
   return (
     <li>
       <DepartureButton page={page} filled={filled} cell={cell} sign={sign}>
-        <strong>{name}</strong> {cellText(page, cell, filled.shape)}
+        <strong>{name}</strong> {cellText(page, cell, filled)}
         {"sure" in cell && filled.sure !== null && <SureMark sure={cell.sure} of={filled.sure} />}
       </DepartureButton>
     </li>

@@ -112,6 +112,6 @@ export function HeatMap({ page, filled, measure, rows: choice }: HeatMapProps) {
 /** A cell in words, and whether it keeps the window's arrival. */
 function cellWords(page: PageState, cell: WindowCell, filled: Filled): string {
   const spare = spareText(cell, arrivalToKeep(filled));
-  const words = cellText(page, cell, filled.shape);
+  const words = cellText(page, cell, filled);
   return spare === "" ? words : `${words}; ${spare}`;
 }

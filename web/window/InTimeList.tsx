@@ -44,13 +44,13 @@ interface InTimeItemProps {
 }
 
 function InTimeItem({ page, filled, own, tried }: InTimeItemProps) {
-  const { shape, sure } = filled;
+  const { sure } = filled;
   const { route, latest, earliest } = own;
   if (latest === null)
     return (
       <li>
         <p>
-          <strong>{route}: none arrives in time.</strong> The earliest: {cellText(page, earliest, shape)}
+          <strong>{route}: none arrives in time.</strong> The earliest: {cellText(page, earliest, filled)}
         </p>
       </li>
     );
@@ -65,13 +65,13 @@ function InTimeItem({ page, filled, own, tried }: InTimeItemProps) {
         </p>
       ) : (
         <DepartureButton page={page} filled={filled} cell={held} sign={<LatestSign />}>
-          {cellText(page, held, shape)}
+          {cellText(page, held, filled)}
           {mark !== null && sure !== null && <SureMark sure={mark} of={sure} />}
         </DepartureButton>
       )}
       {passed !== null && sure !== null && (
         <DepartureButton page={page} filled={filled} cell={passed} sign={<LatestSign isPassed={true} />}>
-          <strong>By the plain estimate</strong> {cellText(page, passed, shape)}
+          <strong>By the plain estimate</strong> {cellText(page, passed, filled)}
           <SureMark sure={passed.sure} of={sure} />
         </DepartureButton>
       )}

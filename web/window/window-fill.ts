@@ -13,6 +13,8 @@ export interface Filled {
   /** By the cells' indices; `null` where still to come. The same array is filled on and on. */
   readonly cells: readonly (WindowCell | null)[];
   readonly done: number;
+  /** Longest passage of the cells that are there, s. */
+  readonly longest_s: number;
   /** Once all cells are there. */
   readonly bests: WindowBests | null;
   /** Once the bests are put to the test; `null` too where the plan names nothing to do so with. */
@@ -169,6 +171,7 @@ function createQueue() {
 function createShow(filled: { value: Filled | null }, wanted: () => boolean) {
   let cells: (WindowCell | null)[] = [];
   let done = 0;
+  let longest_s = 0;
   let painting = false;
   let begin: () => void = () => undefined;
   const begun = new Promise<void>((resolve) => {
@@ -176,7 +179,7 @@ function createShow(filled: { value: Filled | null }, wanted: () => boolean) {
   });
   const paint = (): void => {
     painting = false;
-    if (wanted() && filled.value) filled.value = { ...filled.value, cells, done };
+    if (wanted() && filled.value) filled.value = { ...filled.value, cells, done, longest_s };
   };
   return {
     wanted,
@@ -188,11 +191,12 @@ function createShow(filled: { value: Filled | null }, wanted: () => boolean) {
         { length: shape.departures.length * shape.routes * (shape.speeds?.length ?? 1) },
         () => null,
       );
-      filled.value = { plan, shape, cells, done: 0, bests: null, sure: null, sureFault: null };
+      filled.value = { plan, shape, cells, done, longest_s, bests: null, sure: null, sureFault: null };
     },
     add(indices: Int32Array, found: readonly WindowCell[]): void {
       found.forEach((cell, at) => {
         cells[indices[at] ?? 0] = cell;
+        longest_s = Math.max(longest_s, cell.passage_s ?? 0);
       });
       done += found.length;
       begin();
