@@ -14,6 +14,8 @@ export interface ArrivalTests {
   readonly lateByChance: Measure | null;
   /** Whether the route can be done at a speed, and arrives when it should and keeps its reserve in all of them. */
   holds(speed: number): boolean;
+  /** Whether a speed is stopped by what stopped the last that did not hold, or by the plain estimate. */
+  isBrokenAlike(speed: number): boolean;
   /** What stops the route at a speed, be it the plain estimate or one of them; `null` where nothing does. */
   stoppedBy(speed: number): CellFinding | null;
 }

@@ -65,6 +65,7 @@ function testsOf(
     late: Array.from({ length: count }, (_, place) => lateIn(place)),
     lateByChance: beyond === null ? null : lateByChance,
     holds: (speed) => runSteps(trials.holds(cellAt(speed))),
+    isBrokenAlike: (speed) => runSteps(trials.isBrokenAlike(cellAt(speed))),
     stoppedBy: (speed) => runSteps(trials.stoppedBy(cellAt(speed))),
   };
 }

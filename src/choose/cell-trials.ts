@@ -137,6 +137,15 @@ export class CellTrials {
     return !this.#unsureFirst;
   }
 
+  /** Whether a cell is broken by what broke the last that did not hold, or by the plain estimate: one estimate at most. */
+  *isBrokenAlike(cell: WindowCell): Steps<boolean> {
+    if (cell.status === "stop") return true;
+    const known = this.#knownOf(cell);
+    if (this.#unsureFirst) return yield* this.#isUnsure(known);
+    const [first] = this.#trials;
+    return first !== undefined && this.#try(known, first).status === "stop";
+  }
+
   /**
    * All that a cell comes to.
    *

@@ -116,12 +116,19 @@ function byUse(candidates: readonly Candidate[]): Candidate[] {
   return [...candidates].sort((a, b) => a.use - b.use || a.speed - b.speed);
 }
 
+/** The edge between a speed that holds and one that does not: first of what stops the latter alone, at one estimate a step. */
 function edgeOf(tests: ArrivalTests, held: number, shut: number): number {
+  if (tests.holds(shut)) return shut;
+  const edge = halved((speed) => !tests.isBrokenAlike(speed), held, shut);
+  return tests.holds(edge) ? edge : halved((speed) => tests.holds(speed), held, edge);
+}
+
+function halved(holds: (speed: number) => boolean, held: number, shut: number): number {
   // biome-ignore lint/correctness/useYield: one test is one step.
-  const holds = function* (speed: number) {
-    return tests.holds(speed);
+  const steps = function* (speed: number) {
+    return holds(speed);
   };
-  return runSteps(lastToHold(holds, held, shut, CLOSENESS));
+  return runSteps(lastToHold(steps, held, shut, CLOSENESS));
 }
 
 /** The least speed in time in everything, from the slowest of some places on; `null` where none is found. */
