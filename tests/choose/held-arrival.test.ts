@@ -262,7 +262,8 @@ describe("a speed found for an arrival with nothing to hold in", () => {
 });
 
 describe("held against trying all speeds", () => {
-  const tried = spaced(2, 8, 240);
+  const ERRORS = [{ role: "current", speed_m_s: 0.1, length_m: 60_000, time_s: 10_800 }] as const;
+  const tried = spaced(2, 8, 120);
 
   test("holds in every trial, is never cheaper than the plain one, and no speed that holds is cheaper", () => {
     const seen = { plain: 0, faster: 0, none: 0 };
@@ -276,7 +277,8 @@ describe("held against trying all speeds", () => {
         double(0.05, 0.6),
         double(0, 30_000),
         double(-0.2, 0.2),
-        (from, wide, strength, late_s, share, hotelPerSecond, more) => {
+        fc.option(double(0.55, 0.97), { nil: undefined }),
+        (from, wide, strength, late_s, share, hotelPerSecond, more, confidence) => {
           const wanted = between(from, from + wide);
           const input = inputOf({ fields: [tide(0, strength)], reserve: { kind: "share", share } });
           const small = {
@@ -284,7 +286,8 @@ describe("held against trying all speeds", () => {
             craft: { ...craft, hotelPerSecond, store: { unit: "J", usable: 1.6e9 } as const },
           };
           const members = [0, 1, 2].map((member) => ({ member, fields: [tide(member, strength, more)] }));
-          const asked = askedOf({ members, whatIfs: [whatIf("Shifted", { late_s })] });
+          const whatIfs = [whatIf("Shifted", { late_s })];
+          const asked = askedOf({ members, whatIfs, errors: ERRORS, confidence });
           const route = answerOf(wanted, asked, small);
           if (route.arrive?.chosen === null) return;
           const { taken, plain } = solved(route);
