@@ -23,11 +23,16 @@ export class InputError extends Error {
     this.place = place;
     this.sentence = sentence;
   }
+
+  /** What the sentence says of the place's key itself, as ` is above 0; found "0 s"`; `null` where it speaks of something else. */
+  get predicate(): string | null {
+    return predicateOf(this.sentence, this.place.key ?? "");
+  }
 }
 
 /** A sentence after its place; one about the key itself has the key's whole path for its subject, so that no word comes twice. */
 function placed(sentence: string, { file, line, key = "" }: Place): string {
-  const predicate = predicateOf(sentence, key.slice(key.lastIndexOf(".") + 1));
+  const predicate = predicateOf(sentence, key);
   const parts = [file, line === undefined ? undefined : `line ${line}`, predicate === null ? key : undefined];
   const shown = parts.filter((part) => part !== undefined && part !== "");
   const before = shown.length === 0 ? "" : `${shown.join(", ")}: `;
@@ -35,7 +40,8 @@ function placed(sentence: string, { file, line, key = "" }: Place): string {
 }
 
 /** What a sentence says of a key, called by its name or its words (`airDensity`, air density); `null` where it speaks of something else. */
-function predicateOf(sentence: string, name: string): string | null {
+function predicateOf(sentence: string, key: string): string | null {
+  const name = key.slice(key.lastIndexOf(".") + 1);
   const words = name.replace(/[A-Z]/g, (letter) => ` ${letter.toLowerCase()}`);
   const subject = [name, words].find((each) => each !== "" && sentence.startsWith(`${each} `));
   const predicate = subject === undefined ? "" : sentence.slice(subject.length);

@@ -115,7 +115,7 @@ test("a position is typed in any notation, and one that is none is told in a sen
   await latitude.press("Enter");
   const fault = page.locator(".ledger .fault");
   await fault.waitFor();
-  expect(await fault.textContent()).toMatch(/lat/);
+  expect(await fault.textContent()).toMatch(/^"Latitude" of waypoint \d of Sound/);
   await page.getByRole("button", { name: "Undo" }).click();
   await fault.waitFor({ state: "detached" });
 });

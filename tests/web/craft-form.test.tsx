@@ -88,7 +88,7 @@ describe("the craft's form", () => {
     expect(field.getAttribute("aria-invalid")).toBe("true");
     const told = document.getElementById(field.getAttribute("aria-describedby") ?? "");
     expect(told?.textContent).toBe(answer.fault);
-    expect(answer.fault).toMatch(/^rate takes .*found "abc"$/);
+    expect(answer.fault).toMatch(/^"Rate" of row 3 takes .*found "abc"$/);
   });
 
   test("has a place for every key that a fault of these craft may stand at", () => {

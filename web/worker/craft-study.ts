@@ -1,3 +1,4 @@
+import { toldBelowField } from "../faults/told-by-label.ts";
 import type { CraftDocument } from "../state/plan-document.ts";
 import { InputError, type Pace, readCraftDocument, type StillPoint, stillCurve, stillPoint } from "./core.ts";
 import type { CraftAnswer } from "./protocol.ts";
@@ -17,7 +18,7 @@ export function studyCraft(document: CraftDocument, pace: Pace | null): CraftAns
     return { ok: true, curve, least, limit, ...pointOf(() => pace && stillPoint(craft, pace)) };
   } catch (fault) {
     if (!(fault instanceof InputError)) throw fault;
-    return { ok: false, key: fault.place.key ?? null, fault: fault.sentence };
+    return { ok: false, key: fault.place.key ?? null, fault: toldBelowField(fault) };
   }
 }
 

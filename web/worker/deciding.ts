@@ -1,4 +1,6 @@
 import type { WindowCell } from "../core.ts";
+import type { NamedParts } from "../faults/field-labels.ts";
+import { toldByLabel } from "../faults/told-by-label.ts";
 import type { PlanDocument } from "../state/plan-document.ts";
 import { cellOrder } from "../window/fill-order.ts";
 import { askedOf } from "./asked-of.ts";
@@ -64,13 +66,13 @@ export function createDeciding(reader: PlanReader): Deciding {
   let open: OpenWindow | null = null;
   return {
     decide: (plan, turnBack) =>
-      answered(async () => {
+      answered(plan, async () => {
         const read = await reader.read(plan);
         const { estimate, sensitivities } = decide(read, answerOf(read), turnBack);
         return { routes: estimate.routes, sensitivities };
       }),
     beginWindow: (ticket, document, first_ms) =>
-      answered(async () => {
+      answered(document, async () => {
         const read = await reader.read(document);
         const { plan, input, prepared } = read;
         if (plan.window === undefined) throw new Error("a window is asked of a plan that names none");
@@ -116,7 +118,7 @@ export function createDeciding(reader: PlanReader): Deciding {
       }
       return sureSlice(open.sure, budget_ms);
     },
-    paceCurve: (plan, route) => answered(async () => paceOf(await reader.read(plan), route)),
+    paceCurve: (plan, route) => answered(plan, async () => paceOf(await reader.read(plan), route)),
   };
 }
 
@@ -125,7 +127,7 @@ function inTimeOf({ sweep, window }: OpenWindow): Pick<WindowBests, "inTime" | "
   try {
     return { inTime: latestInTime(sweep, window), inTimeFault: null };
   } catch (fault) {
-    if (fault instanceof InputError) return { inTime: null, inTimeFault: fault.message };
+    if (fault instanceof InputError) return { inTime: null, inTimeFault: toldByLabel(fault, { routes: [] }) };
     throw fault;
   }
 }
@@ -201,11 +203,11 @@ function answerOf(read: PlanRead) {
     : estimateArriving(prepared, input, plan.arrive, askedOf(read));
 }
 
-async function answered<T>(find: () => Promise<T>): Promise<Answered<T>> {
+async function answered<T>(plan: NamedParts, find: () => Promise<T>): Promise<Answered<T>> {
   try {
     return { ok: true, ...(await find()) };
   } catch (fault) {
-    if (fault instanceof InputError) return { ok: false, fault: fault.message };
+    if (fault instanceof InputError) return { ok: false, fault: toldByLabel(fault, plan) };
     throw fault;
   }
 }

@@ -1,6 +1,7 @@
 import type { PlanDocument } from "../state/plan-document.ts";
 import { askedOf } from "./asked-of.ts";
 import { type EstimateAnswer as CoreAnswer, estimatePrepared, InputError, type ReportInput } from "./core.ts";
+import { faultText } from "./fault-text.ts";
 import type { PlanRead, PlanReader } from "./plan-reader.ts";
 import type { EstimateAnswer } from "./protocol.ts";
 import { drawRoute } from "./route-drawing.ts";
@@ -41,7 +42,7 @@ export function createEstimator(reader: PlanReader): Estimator {
       try {
         return await answer(plan);
       } catch (fault) {
-        if (fault instanceof InputError) return { ok: false, fault: fault.message };
+        if (fault instanceof InputError) return { ok: false, fault: await faultText(fault, plan) };
         throw fault;
       }
     },
