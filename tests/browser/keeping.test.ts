@@ -121,6 +121,10 @@ test("a newer version comes in when asked for while the page is fetching without
     expect(await titleOf(page)).toBe("Busy");
     expect(page.url()).toBe(server.address);
     expect(await page.locator(".notice.newer").count()).toBe(0);
+    // Its worker follows, so that the next visit is to the newer version too.
+    await expect.poll(() => waits(page), { timeout: 20_000 }).toBe(false);
+    await page.reload();
+    expect(await page.title()).toBe("Legwork, newer");
   });
 });
 
@@ -134,6 +138,7 @@ test("a newer version that one tab has brought in comes into another when asked 
     await offered(other);
     await useIt(page);
     await expect.poll(() => page.title()).toBe("Legwork, newer");
+    await expect.poll(() => waits(other), { timeout: 20_000 }).toBe(false);
     expect(await other.title()).toBe("Legwork");
     await useIt(other);
     await expect.poll(() => other.title()).toBe("Legwork, newer");
@@ -156,6 +161,13 @@ async function offered(page: Page): Promise<Locator> {
   const offer = page.locator(".notice.newer");
   await offer.waitFor();
   return offer;
+}
+
+/** Whether a newer version's worker is not let in yet. */
+function waits(page: Page): Promise<boolean> {
+  return page.evaluate(
+    async () => (await navigator.serviceWorker.getRegistration())?.waiting instanceof ServiceWorker,
+  );
 }
 
 /** Asks for the newer version, and waits until the page is loaded anew. */

@@ -1,8 +1,10 @@
 /** How often a page that stays open looks for a newer version, ms. */
 const EVERY = 3_600_000;
-/** How long the worker of a version that was asked for is waited for, ms; it mostly takes a twentieth of that. */
-const PATIENCE = 1000;
-/** What names a version in the page's address: a page that is asked for so may come before its worker. */
+/** After so long a page has what it loads at first, ms. */
+const LOADED = 5000;
+/** A worker that takes longer to say its name has failed to start, ms. */
+const PATIENCE = 10_000;
+/** What names a version in the page's address. */
 const NAMED = "?version=";
 
 /**
@@ -25,6 +27,7 @@ export async function keepOffline(found: (useIt: () => void) => void): Promise<v
     return;
   }
   const own = named ? registration.waiting : null;
+  if (own !== null) setTimeout(() => registration.waiting === own && own.postMessage("activate"), LOADED);
   const tell = (): void => {
     const { waiting } = registration;
     // The first version of all waits for nobody.
@@ -40,21 +43,16 @@ export async function keepOffline(found: (useIt: () => void) => void): Promise<v
 }
 
 /**
- * A worker that was let in waits until the one before has nothing to answer, and a request that comes just as that one is stopped
- * starts it again, for half a minute at least. The page does not wait for that: whichever worker answers then is asked for it by name.
+ * The page of a newer version is asked for by name from the worker before, and lets its own worker in once it is there. The other way
+ * round a press could be lost: a worker that is let in waits until the one before has nothing to answer, and a request that comes
+ * just as that one is stopped starts it again, for half a minute at least.
  */
 function useNewer(serviceWorker: ServiceWorkerContainer, { waiting }: ServiceWorkerRegistration): void {
-  // Another tab may have let it in.
-  if (waiting === null) {
-    location.reload();
-    return;
-  }
-  // A worker that can't even be started leaves its offer standing.
-  let going = setTimeout(() => location.reload(), 10 * PATIENCE);
+  // Another tab may have let it in. Where its worker does not even start, the offer comes again.
+  const reloading = setTimeout(() => location.reload(), waiting === null ? 0 : PATIENCE);
   serviceWorker.addEventListener("message", ({ data: version }) => {
-    clearTimeout(going);
-    going = setTimeout(() => location.replace(NAMED + version), PATIENCE);
+    clearTimeout(reloading);
+    location.replace(NAMED + version);
   });
-  serviceWorker.addEventListener("controllerchange", () => location.reload(), { once: true });
-  waiting.postMessage("activate");
+  waiting?.postMessage("name");
 }

@@ -41,7 +41,7 @@ async function forgetOlder(): Promise<void> {
 }
 
 async function answer(request: Request, address: string): Promise<Response> {
-  // The page of a newer version, where it was asked for before its worker has come in.
+  // The page of a newer version that the user asked for; its worker still waits.
   const named = new URL(request.url).searchParams.get("version");
   const newer = named === null ? undefined : await caches.match(address, { cacheName: OWN + named });
   if (newer !== undefined) return newer;
@@ -60,10 +60,9 @@ function keptAs({ method, url }: Request): string | null {
 self.addEventListener("install", (event) => event.waitUntil(install()));
 self.addEventListener("activate", (event) => event.waitUntil(forgetOlder().then(() => self.clients.claim())));
 self.addEventListener("message", ({ data, source }) => {
-  // A newer version waits until the user asks for it, and tells the name it can be had by meanwhile.
-  if (data !== "activate") return;
-  source?.postMessage(PRECACHE.version);
-  void self.skipWaiting();
+  if (data === "name") source?.postMessage(PRECACHE.version);
+  // A newer version waits until the user asks for it.
+  if (data === "activate") void self.skipWaiting();
 });
 self.addEventListener("fetch", (event) => {
   const address = keptAs(event.request);
