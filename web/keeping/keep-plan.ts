@@ -52,6 +52,7 @@ export function keepPlan(page: PageState): Keeping {
   const store = database();
   const kept = new Map<string, Blob>();
   let safe = true;
+  let failed = false;
 
   const write = async (): Promise<void> => {
     const plan = page.store.plan.peek();
@@ -72,9 +73,14 @@ export function keepPlan(page: PageState): Keeping {
         store,
       );
       await forgetUnnamed(plan);
-      safe = plan === page.store.plan.peek() && files === page.store.files.peek();
+      safe =
+        plan === page.store.plan.peek() &&
+        files === page.store.files.peek() &&
+        unsaved === page.store.unsaved.peek();
+      failed = false;
     } catch {
       safe = false;
+      failed = true;
     }
   };
   const forgetUnnamed = async (plan: PlanDocument): Promise<void> => {
@@ -101,8 +107,12 @@ export function keepPlan(page: PageState): Keeping {
   return {
     safe: () => safe,
     async flush() {
-      if (!safe) await writing.now();
-      return safe;
+      // What is changed while it is written is written again.
+      while (!safe) {
+        await writing.now();
+        if (failed) return false;
+      }
+      return true;
     },
   };
 }
