@@ -20,10 +20,14 @@ function columnMap(pairs: readonly string[]): Readonly<Record<string, string>> {
   return Object.fromEntries(headers);
 }
 
-/** A mapping that does not fit the file is the option's fault, not the file's. */
-function tellOfMap(fault: unknown): never {
-  const isOfMap = fault instanceof InputError && fault.place.key === "columns";
-  throw isOfMap ? new InputError(fault.sentence, { key: "--map" }) : fault;
+/** A mapping or role that does not fit the file is the option's fault, not the file's. */
+function tellOfOption(fault: unknown, hasRole: boolean): never {
+  if (!(fault instanceof InputError)) throw fault;
+  const { key, ...place } = fault.place;
+  if (key === "columns") throw new InputError(fault.sentence, { key: "--map" });
+  if (key === "role")
+    throw new InputError(fault.sentence, { ...place, ...(hasRole ? { key: "--role" } : {}) });
+  throw fault;
 }
 
 /** Reads a field file and says what it holds. */
@@ -35,7 +39,7 @@ export async function inspectCommand(
     file,
     columns: columnMap(map),
     ...(role === undefined ? {} : { role }),
-  }).catch(tellOfMap);
+  }).catch((fault: unknown) => tellOfOption(fault, role !== undefined));
   await writeResult(
     format === "json" ? `${JSON.stringify(inspection, null, 2)}\n` : writeInspection(inspection),
   );

@@ -4,7 +4,13 @@ import { type Quantity, quantityOf } from "./column-names.ts";
 import { likelyUnit, splitHeader, unitSize, unitsText } from "./column-units.ts";
 import type { TableHead } from "./csv-table.ts";
 import type { FieldRole } from "./field.ts";
-import { headersText, missingColumnText, missingVectorText, unknownNameText } from "./missing-columns.ts";
+import {
+  headersText,
+  isOfOtherRole,
+  missingColumnText,
+  missingVectorText,
+  unknownNameText,
+} from "./missing-columns.ts";
 
 /** Where a quantity stands in a row, and the size of its unit in m/s, m, hPa or degrees. */
 export interface Column {
@@ -105,18 +111,19 @@ class ColumnFinder {
     const result = new Map<number, Quantity>();
     for (const [name, header] of Object.entries(mapping)) {
       const quantity = quantityOf(name, this.role);
-      if (quantity === undefined) throw this.faultOfMapping(unknownNameText(name, this.role));
+      if (quantity === undefined) throw this.faultOf("columns", unknownNameText(name, this.role));
       const index = this.indexOfHeader(header);
       if (index < 0) {
         const found = `found ${headersText(this.headers)}`;
-        throw this.faultOfMapping(
+        throw this.faultOf(
+          "columns",
           `the column mapping of ${quoted(name)} names a header of the file; ${quoted(header)} is none: ${found}`,
         );
       }
       if (result.has(index))
-        throw this.faultOfMapping(`a column holds one quantity; ${quoted(header)} is mapped to two`);
+        throw this.faultOf("columns", `a column holds one quantity; ${quoted(header)} is mapped to two`);
       if (this.mapped.has(quantity))
-        throw this.faultOfMapping(`a quantity is mapped once; found ${quoted(name)} mapped again`);
+        throw this.faultOf("columns", `a quantity is mapped once; found ${quoted(name)} mapped again`);
       this.mapped.add(quantity);
       result.set(index, quantity);
     }
@@ -171,7 +178,8 @@ class ColumnFinder {
     }
     if (components !== null) return { first: components[0], second: components[1], form: "components" };
     if (polar !== null) return { first: polar[0], second: polar[1], form: "polar" };
-    throw this.fault(missingVectorText(this.headers, this.role, new Set(this.found.keys())));
+    const sentence = missingVectorText(this.headers, this.role, new Set(this.found.keys()));
+    throw isOfOtherRole(this.headers, this.role) ? this.faultOf("role", sentence) : this.fault(sentence);
   }
 
   private pair(first: Quantity, second: Quantity): readonly [Column, Column] | null {
@@ -194,8 +202,8 @@ class ColumnFinder {
     return new InputError(sentence, this.place);
   }
 
-  /** Told of the key, too, that the mapping is given by: what is wrong is not in the file. */
-  private faultOfMapping(sentence: string): InputError {
-    return new InputError(sentence, { ...this.place, key: "columns" });
+  /** Told of the key, too, that says what the file is or how it is read: what is wrong is not in the file. */
+  private faultOf(key: "columns" | "role", sentence: string): InputError {
+    return new InputError(sentence, { ...this.place, key });
   }
 }

@@ -18,15 +18,14 @@ export function missingVectorText(
   role: FieldRole,
   found: ReadonlySet<Quantity>,
 ): string {
-  const other = role === "wind" ? "current" : "wind";
   const quantities: readonly Quantity[] = ["eastward", "northward", "speed", "direction"];
   const [east, north, speed, direction] = quantities.map((quantity) => namesText(quantity, role));
   const columns = `columns for the ${role}: ${east} with ${north}, or ${speed} with ${direction}`;
-  const strangers = headers.filter((header) => isNameOfOnly(splitHeader(header).name, other));
+  const strangers = headersOfOther(headers, role);
   if (strangers.length > 0) {
     const names = strangers.map(quoted).join(", ");
     return missingText(
-      `${columns}; ${names} is of a ${other}, while the file's role is ${role}`,
+      `${columns}; ${names} is of a ${otherThan(role)}, while the file's role is ${role}`,
       headers,
       role,
       [],
@@ -34,6 +33,19 @@ export function missingVectorText(
   }
   const wanted = quantities.filter((quantity) => !found.has(quantity));
   return missingText(columns, headers, role, wanted);
+}
+
+/** Whether headers are of the other role alone, so that the role may be what is wrong. */
+export function isOfOtherRole(headers: readonly string[], role: FieldRole): boolean {
+  return headersOfOther(headers, role).length > 0;
+}
+
+function headersOfOther(headers: readonly string[], role: FieldRole): readonly string[] {
+  return headers.filter((header) => isNameOfOnly(splitHeader(header).name, otherThan(role)));
+}
+
+function otherThan(role: FieldRole): FieldRole {
+  return role === "wind" ? "current" : "wind";
 }
 
 /** What a message says where a column mapping gives a header to a name that the role does not have. */

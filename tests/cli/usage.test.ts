@@ -217,6 +217,24 @@ describe("a column mapping that does not fit the file", () => {
   });
 });
 
+describe("a role that does not fit the file", () => {
+  it("is told of its option beside the file's line of headers", () => {
+    const field = new URL("../../data/demo/islands-current.csv", import.meta.url).pathname;
+    const { status, out, err } = legwork.run(["inspect", field, "--role", "wind"]);
+    expect([status, out]).toEqual([2, ""]);
+    expect(
+      err.startsWith(`legwork: ${field}, line 4, --role: the file has columns for the wind: `),
+      err,
+    ).toBe(true);
+    expect(err).toContain("while the file's role is wind");
+    const either = join(folder, "either.csv");
+    writeFileSync(either, "lat,lon,eastward_wind,northward_sea_water_velocity\n0,0,1,1\n");
+    expect(legwork.run(["inspect", either]).err).toMatch(
+      /either\.csv, line 1: the file has columns for the wind: /,
+    );
+  });
+});
+
 describe("standard output that cannot be written", () => {
   it("is said in one line, status 2", () => {
     const { status, stderr } = spawnSync(
