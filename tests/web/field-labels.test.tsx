@@ -184,6 +184,14 @@ describe("a fault of a plan on the page", () => {
     );
   });
 
+  test("in what a field's file is of is told beside the file and its line by the label of the choice", async () => {
+    const { fields } = demoEngine("islands-decide");
+    const answer = await fields.open(1, { role: "wind", file: "islands-current.csv" }, () => undefined);
+    expect(answer.ok ? "" : answer.fault).toMatch(
+      /^islands-current\.csv, line 4: "Field of": the file has columns for the wind: .* while the file's role is wind/,
+    );
+  });
+
   test("in a window is told by the labels of its view", async () => {
     const { beginWindow } = createDeciding(demo.reader);
     const window = { from: "2027-05-04T09:00Z", to: "2027-05-04T10:00Z", every: "0.5 s" };

@@ -90,6 +90,11 @@ export function craftLabel(key: string): string | null {
   return key === "power.rows" ? "the rows" : quoted(CRAFT[key]);
 }
 
+/** How a key of a file that a plan names is called on the page: of a craft, or what a field's file is; `null` where it has no field. */
+export function fileKeyLabel(key: string): string | null {
+  return key === "role" ? quoted(FIELD[key]) : ofCraft(key);
+}
+
 /** How a place in a plan is called on the page, as `"Stay" of waypoint 2 of West about`; `null` where it has no field. */
 export function fieldLabel(key: string, parts: NamedParts): string | null {
   const plain = PLAN[key.replace(/^window\.speeds\[\d+\]$/, "window.speeds")];
@@ -100,8 +105,12 @@ export function fieldLabel(key: string, parts: NamedParts): string | null {
   if (list === "alternates") return partLabel(rest, ALTERNATE, `alternate ${at + 1}`);
   if (list === "whatIf") return partLabel(rest, WHAT_IF, `what-if ${at + 1}`);
   if (list === "fields") return fileLabel(rest, parts.fields?.[at]);
-  const craft = key.startsWith("craft.") ? craftLabel(key.slice(6)) : null;
-  return craft === null ? null : `${craft} of the craft`;
+  return key.startsWith("craft.") ? ofCraft(key.slice(6)) : null;
+}
+
+function ofCraft(key: string): string | null {
+  const label = craftLabel(key);
+  return label === null ? null : `${label} of the craft`;
 }
 
 function routeLabel(rest: string, name: string, at: number): string | null {

@@ -1,12 +1,12 @@
 import { PACES } from "../shell/plan-words.ts";
 import type { InputError } from "../worker/core.ts";
-import { craftLabel, fieldLabel, type NamedParts } from "./field-labels.ts";
+import { craftLabel, fieldLabel, fileKeyLabel, type NamedParts } from "./field-labels.ts";
 
 /** What is wrong with a plan or its craft's file, with its place called as the page labels it. */
 export function toldByLabel(fault: InputError, parts: NamedParts): string {
   const { file = "", line, key = "" } = fault.place;
   const rule = wordsOf(fault.sentence, parts);
-  const label = fieldLabel(file === "" ? key : `craft.${key}`, parts);
+  const label = file === "" ? fieldLabel(key, parts) : fileKeyLabel(key);
   if (label === null) return key === "" ? wordsOf(fault.message, parts) : fault.message;
   const where = [...(file === "" ? [] : [file]), ...(line === undefined ? [] : [`line ${line}`])];
   const before = where.length === 0 ? "" : `${where.join(", ")}: `;

@@ -1,5 +1,6 @@
 import type { FieldDocument } from "../state/plan-document.ts";
 import { InputError } from "./core.ts";
+import { faultText } from "./fault-text.ts";
 import { fileKind, inspectField } from "./field-reading.ts";
 import { pieces } from "./file-shelf.ts";
 import type { FieldPreview } from "./protocol.ts";
@@ -23,7 +24,7 @@ export async function previewField(content: Blob, field: FieldDocument): Promise
     return { ...shown, used: header.filter((name) => !ignoredColumns.includes(name)), fault: null };
   } catch (fault) {
     if (!(fault instanceof InputError)) throw fault;
-    return { ...shown, used: [], fault: fault.message };
+    return { ...shown, used: [], fault: await faultText(fault) };
   }
 }
 

@@ -7,6 +7,7 @@ import {
   type GridFile,
   InputError,
 } from "./core.ts";
+import { faultText } from "./fault-text.ts";
 import type { FileShelf } from "./file-shelf.ts";
 import type { FieldAnswer, FieldProgress } from "./protocol.ts";
 
@@ -79,7 +80,8 @@ export function createFieldShelf(files: FileShelf): FieldShelf {
         return { ok: true, inspection: await inspectionOf(read) };
       } catch (fault) {
         if (fault instanceof Cancelled) return { ok: false, fault: `${file} was not read`, cancelled: true };
-        if (fault instanceof InputError) return { ok: false, fault: fault.message, cancelled: false };
+        if (fault instanceof InputError)
+          return { ok: false, fault: await faultText(fault), cancelled: false };
         throw fault;
       } finally {
         cancelled.delete(ticket);
