@@ -47,7 +47,7 @@ export function WhatIfTable({ page, route }: { readonly page: PageState; readonl
                 : clockSince(row.arrival, route.departure, zone.value, clock.value)}
               {missWords(row.arrivalMiss_s)}
             </td>
-            <td>{durationText(row.passage_s, clock.value)}</td>
+            <td>{durationText(row.passage_s)}</td>
             <td>{inUnit(row.use, amount)}</td>
             <td>{inUnit(row.remaining, amount)}</td>
             <td>
