@@ -106,7 +106,7 @@ export function preparedForMember(
 function preparedAnew(prepared: PreparedRoute, fields: readonly Field[]): PreparedRoute {
   const anew = prepareRoute(prepared.route, fields);
   const legs = anew.legs.map((leg, n) => ({ ...leg, land: prepared.legs[n]?.land ?? [] }));
-  return { ...anew, legs };
+  return { ...anew, legs, every_s: prepared.every_s };
 }
 
 function haveSameAxes(a: readonly Field[], b: readonly Field[]): boolean {

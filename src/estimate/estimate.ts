@@ -25,6 +25,8 @@ export interface EstimateInput {
   readonly routes: readonly Route[];
   /** Coarse land for the hint `crosses-land`; `null` for none. */
   readonly land: LandFinder | null;
+  /** Step of the departures that are compared, s, as {@link PreparedRoute} has it; left out for none. */
+  readonly every_s?: number;
 }
 
 export interface EstimateAnswer {
@@ -78,7 +80,8 @@ export function estimate(input: EstimateInput): EstimateAnswer {
 export function prepareRoutes(input: EstimateInput): PreparedRoute[] {
   const fields = fieldsInUse(input.craft, input.fields);
   const land = input.craft.moves === "water" ? input.land : null;
-  return input.routes.map((route) => prepareRoute(route, fields, land));
+  const { every_s = null } = input;
+  return input.routes.map((route) => ({ ...prepareRoute(route, fields, land), every_s }));
 }
 
 /**

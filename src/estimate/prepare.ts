@@ -32,6 +32,11 @@ export interface PreparedRoute {
   readonly legs: readonly PreparedLeg[];
   /** Roles of the fields that `cells` are about, in their order. */
   readonly roles: readonly FieldRole[];
+  /**
+   * Step of the departures that are compared on the route, s; `null` for none. Where many lie between two valid times, what they share is
+   * worked out first; figures then differ from others' in the twelfth digit or so, and are alike among themselves.
+   */
+  readonly every_s: number | null;
 }
 
 /**
@@ -55,7 +60,7 @@ export function prepareRoute(
   const legs = route.waypoints
     .slice(1)
     .map((to, index) => prepareLeg(route.waypoints[index] as Waypoint, to, fields, land));
-  return { route, legs, roles: fields.map(({ role }) => role) };
+  return { route, legs, roles: fields.map(({ role }) => role), every_s: null };
 }
 
 function prepareLeg(

@@ -10,6 +10,7 @@ import { mediumRole, type PreparedLeg, type PreparedRoute } from "./prepare.ts";
 import type { Finding } from "./result.ts";
 import type { RouteOutcome } from "./route-outcome.ts";
 import { reachOf, SmoothFleet } from "./smooth-fleet.ts";
+import { type SmoothLog, SUNK } from "./smooth-log.ts";
 import { reserveAmount } from "./store-findings.ts";
 
 /*
@@ -41,13 +42,13 @@ export function sweepRoute(
   const field = soleMedium(conditions);
   const motions = field === null ? null : heldMotions(prepared, conditions);
   if (field === null || motions === null) return departures.map(() => null);
-  const fleet = new SmoothFleet(field, departures, false);
+  const fleet = new SmoothFleet(field, departures, prepared.every_s);
   const totals = makeTotals(departures.length);
   prepared.legs.forEach((leg, n) => {
     goAlong(fleet, leg, motions[n] as Motion, conditions);
-    arrive(fleet, totals, plainStay(conditions.craft, leg.to.stay_s).use, leg.to.stay_s);
+    arrive(fleet.log, totals, plainStay(conditions.craft, leg.to.stay_s).use, leg.to.stay_s);
   });
-  return outcomes(fleet, totals, prepared, conditions);
+  return outcomes(fleet.log, totals, prepared, conditions);
 }
 
 /** The one field that there is, where it is the medium. */
@@ -90,9 +91,9 @@ function goAlong(fleet: SmoothFleet, leg: PreparedLeg, motion: Motion, { craft }
 }
 
 /** Ends a leg with its stay. */
-function arrive(fleet: SmoothFleet, totals: Totals, stayUse: number, stay_s: number): void {
-  const { begun, legTime, legUse } = fleet;
-  for (let n = 0; n < fleet.count; n += 1) {
+function arrive(log: SmoothLog, totals: Totals, stayUse: number, stay_s: number): void {
+  const { begun, legTime, legUse } = log;
+  for (let n = 0; n < log.count; n += 1) {
     const time = legTime[n] as number;
     const use = legUse[n] as number;
     const arrived = (begun[n] as number) + time;
@@ -105,7 +106,7 @@ function arrive(fleet: SmoothFleet, totals: Totals, stayUse: number, stay_s: num
 }
 
 function outcomes(
-  fleet: SmoothFleet,
+  log: SmoothLog,
   totals: Totals,
   prepared: PreparedRoute,
   conditions: Conditions,
@@ -113,11 +114,11 @@ function outcomes(
   const findings = hintsOf(prepared, conditions);
   const status = statusOf(findings);
   const { craft, reserve } = conditions;
-  return Array.from(fleet.departure, (departure, n) => {
+  return Array.from(log.departure, (departure, n) => {
     const kept = reserveAmount(reserve, craft, totals.rate[n] as number);
     const use = totals.used[n] as number;
     // Where the store ends, or the reserve begins, is for a run that keeps samples.
-    if (fleet.afloat[n] === 0 || use > craft.store.usable - (kept ?? 0)) return null;
+    if (log.state[n] === SUNK || use > craft.store.usable - (kept ?? 0)) return null;
     return {
       status,
       arrival: departure + 1000 * (totals.arrived[n] as number),

@@ -160,7 +160,9 @@ export class RouteWork {
     const medium = this.#medium;
     if (medium === null || steadyRate < 0 || this.#flows.length > 1) return null;
     const { departure } = this.#conditions;
-    const smooth = this.#smooth.get(alongOnly) ?? new SmoothLeg(medium.field, departure, alongOnly);
+    // The run with the cross component at zero stands beside one run alone: single steps are quicker.
+    const every_s = alongOnly ? null : this.#prepared.every_s;
+    const smooth = this.#smooth.get(alongOnly) ?? new SmoothLeg(medium.field, departure, every_s, alongOnly);
     this.#smooth.set(alongOnly, smooth);
     const reach = reachOf(throughSpeed);
     smooth.setOut({ leg, cells: medium.cells, speed: throughSpeed, rate: steadyRate, reach });

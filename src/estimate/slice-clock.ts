@@ -41,12 +41,11 @@ export function turnClock(
   if (!(moment >= since(times, 0, departure) && moment < since(times, last, departure))) return false;
   let slice = clock.slice[n] as number;
   while (since(times, slice + 1, departure) <= moment) slice += 1;
-  const from = since(times, slice, departure);
-  const until = since(times, slice + 1, departure);
   clock.slice[n] = slice;
-  clock.from[n] = from;
-  clock.until[n] = until;
-  clock.perSecond[n] = 1 / (until - from);
+  clock.from[n] = since(times, slice, departure);
+  clock.until[n] = since(times, slice + 1, departure);
+  // From the valid times themselves: the same for every departure.
+  clock.perSecond[n] = 1000 / ((times[slice + 1] as number) - (times[slice] as number));
   return true;
 }
 

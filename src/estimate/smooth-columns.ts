@@ -42,7 +42,7 @@ export class SmoothColumns {
   tile = -1;
   readonly #columns: Float64Array;
   readonly #state: Uint8Array;
-  readonly #paired: Uint8Array;
+  readonly #joined: Uint8Array;
   readonly #sampler: Flow;
   readonly #stations = makeStations();
   readonly #alongOnly: boolean;
@@ -57,7 +57,7 @@ export class SmoothColumns {
     this.#sampler = makeFlow(field, 0);
     this.#alongOnly = alongOnly;
     this.#state = new Uint8Array(slices);
-    this.#paired = new Uint8Array(slices);
+    this.#joined = new Uint8Array(slices);
     this.#columns = new Float64Array(slices * COLUMN);
     this.pairs = new Float64Array(slices * PAIR);
   }
@@ -80,7 +80,7 @@ export class SmoothColumns {
     this.#panel = panel;
     this.#laid = false;
     this.#state.fill(UNMADE);
-    this.#paired.fill(0);
+    this.#joined.fill(0);
     this.tile = -1;
     if ((this.#leg as PreparedLeg).panels.polar[panel] === 1) return;
     for (let q = 0; q < cells.length && this.tile < 0; q += 1)
@@ -90,8 +90,8 @@ export class SmoothColumns {
   /** Offset of the pair of two slices; {@link NO_PAIR} where data are missing, filled, held or out of reach. */
   pair(slice: number, next: number): number {
     if (!this.#has(slice) || !this.#has(next)) return NO_PAIR;
-    if (this.#paired[slice] === 0) {
-      this.#paired[slice] = 1;
+    if (this.#joined[slice] === 0) {
+      this.#joined[slice] = 1;
       this.#join(slice * COLUMN, next * COLUMN, slice * PAIR);
     }
     return slice * PAIR;
@@ -103,7 +103,8 @@ export class SmoothColumns {
    * @returns whether there are such columns, and they can be cut
    */
   part(slice: number, next: number, from: number, half: number, parts: Float64Array, at: number): boolean {
-    if (!this.#hasPowers(slice) || !this.#hasPowers(next)) return false;
+    const whole = this.pair(slice, next);
+    if (whole === NO_PAIR || !this.#hasPowers(slice) || !this.#hasPowers(next)) return false;
     cutPair(
       this.#columns,
       slice * COLUMN + ALONG_POWERS,
@@ -113,9 +114,9 @@ export class SmoothColumns {
       parts,
       at,
     );
-    const whole = this.pair(slice, next) + BENDS;
-    for (let n = 0; n < POINT; n += 1)
-      parts[at + BENDS + n] = half * half * (this.pairs[whole + n] as number);
+    const { pairs } = this;
+    const square = half * half;
+    for (let n = BENDS; n < PAIR; n += 1) parts[at + n] = square * (pairs[whole + n] as number);
     return true;
   }
 
@@ -169,8 +170,8 @@ export class SmoothColumns {
     pairs[at + BENDS + 3] = bend(columns, second + CROSS) - bend(columns, first + CROSS);
   }
 
+  /** Whether polynomials serve for a column that there is. */
   #hasPowers(slice: number): boolean {
-    if (!this.#has(slice)) return false;
     if (this.#state[slice] === MADE) {
       const at = slice * COLUMN;
       const fits =

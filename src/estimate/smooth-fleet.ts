@@ -1,21 +1,20 @@
-import type { Field, Tile } from "../field/field.ts";
+import type { Field } from "../field/field.ts";
 import type { PanelCells } from "./panels.ts";
 import type { PreparedLeg } from "./prepare.ts";
-import { makeSliceClock, type SliceClock, turnClock } from "./slice-clock.ts";
 import { NO_PAIR, SmoothColumns } from "./smooth-columns.ts";
+import { ABREAST, PASSING_S, SmoothLog, SUNK, type Taken } from "./smooth-log.ts";
+import { SmoothMean } from "./smooth-mean.ts";
 import { PAIR } from "./smooth-pair.ts";
-import { makeRounds, move, type Rounds } from "./smooth-rounds.ts";
-import { guessDistance, type Lanes, makeLanes, NOT_SMOOTH, smoothTimes } from "./smooth-step.ts";
+import { SmoothRounds } from "./smooth-rounds.ts";
+import {
+  guessDistance,
+  guessSlowness,
+  type Lanes,
+  makeLanes,
+  NOT_SMOOTH,
+  smoothTimes,
+} from "./smooth-step.ts";
 
-/** A valid time was passed when it is further behind than this, and met where it is no further ahead, s. */
-const PASSING_S = 1e-9;
-/**
- * A cut is so near to its valid time, as a share of the step's time, that the last correction of its place goes unchecked: what it
- * leaves open is of the order of the share's square.
- */
-const MEETING = 1e-5;
-const MOST_HALVINGS = 10;
-const MOST_CUTS = 8;
 /** Share of the speed held beyond which no medium is smooth: near it the ground speed ends. */
 const REACH = 0.9;
 
@@ -23,6 +22,9 @@ const REACH = 0.9;
 export function reachOf(speed: number): number {
   return REACH * speed;
 }
+
+/** So many departures between two valid times are worth what mean ground speeds cost: seven steps. */
+const MANY = 12;
 
 /** A leg as a fleet goes along it, at a held speed and a steady rate. */
 export interface Passage {
@@ -36,289 +38,212 @@ export interface Passage {
   readonly reach: number;
 }
 
-/** Told of every step taken: by which departure, to which place, how long it took, and since which valid time its slices hold. */
-export type Taken = (n: number, to: number, time: number, since: number) => void;
+export interface FleetOptions {
+  /** Takes the cross-track component as zero. */
+  readonly alongOnly?: boolean;
+  readonly taken?: Taken | null;
+}
+
+/** A panel or half of one, m from the leg's start, with its pair of columns: that at `at` of `pairs`. */
+interface Stretch {
+  readonly pairs: Float64Array;
+  readonly at: number;
+  readonly from: number;
+  readonly to: number;
+  /** Share of the way from slice to slice that passes in a second. */
+  readonly perSecond: number;
+}
 
 /**
  * Departures of one craft that go along a leg panel by panel, side by side: what depends on the place and the valid time alone is
- * read once for all. Over a panel each goes in one smooth step, or in several where a valid time falls inside it or it is too rough;
- * none knows of the others, so that its figures are those of a lone one. One that meets anything but data, or a
+ * worked out once for all. Those between the same two valid times go abreast, by a smooth step each, or over the panel or its halves by their mean
+ * ground speed where many are compared and it serves; those to whom a valid time falls due on the way, or for whom it is too rough, go in steps of
+ * their own. None knows of the others, so that its figures are those of a lone one. One that meets anything but data, or a
  * speed out of reach, or a stretch too rough, sinks: it is left where it is.
  */
 export class SmoothFleet {
-  readonly count: number;
-  /** ms since 1970. */
-  readonly departure: Float64Array;
-  /** 0 for one that sank. */
-  readonly afloat: Uint8Array;
-  /** Seconds since departure at the leg's start; on the leg; store units on the leg. */
-  readonly begun: Float64Array;
-  readonly legTime: Float64Array;
-  readonly legUse: Float64Array;
-  /** The last valid time met, s since departure: the clock may be a little short of it. */
-  readonly met: Float64Array;
-  readonly #field: Field;
+  readonly log: SmoothLog;
   readonly #columns: SmoothColumns;
-  readonly #clock: SliceClock;
+  readonly #mean: SmoothMean | null;
+  readonly #rounds: SmoothRounds;
   readonly #lanes: Lanes;
-  readonly #rounds: Rounds;
-  readonly #taken: Taken | null;
+  readonly #due: Int32Array;
+  readonly #halves = new Float64Array(2 * PAIR);
+  readonly #enough_s: number;
   #passage: Passage | null = null;
-  #tile = -1;
-  #times: Float64Array | null = null;
-  #start = 0;
-  #end = 0;
+  #speed = 0;
 
   /**
    * @param departures ms since 1970
-   * @param alongOnly take the cross-track component as zero
+   * @param every_s step of the departures that are compared, s, whether or not they are in this fleet; `null` for none
    */
-  constructor(field: Field, departures: ArrayLike<number>, alongOnly: boolean, taken: Taken | null = null) {
-    const count = departures.length;
-    const each = () => new Float64Array(count);
-    this.count = count;
-    this.departure = Float64Array.from(departures);
-    this.afloat = new Uint8Array(count).fill(1);
-    this.begun = each();
-    this.legTime = each();
-    this.legUse = each();
-    this.met = each();
-    this.#field = field;
+  constructor(
+    field: Field,
+    departures: ArrayLike<number>,
+    every_s: number | null,
+    { alongOnly = false, taken = null }: FleetOptions = {},
+  ) {
+    this.log = new SmoothLog(field, departures, taken);
     this.#columns = new SmoothColumns(field, alongOnly);
-    this.#clock = makeSliceClock(count);
-    this.#lanes = { ...makeLanes(count), perSecond: this.#clock.perSecond };
-    this.#rounds = makeRounds(count);
-    this.#taken = taken;
+    this.#due = new Int32Array(departures.length);
+    this.#mean = every_s === null ? null : new SmoothMean();
+    this.#enough_s = MANY * (every_s ?? 0);
+    this.#rounds = new SmoothRounds(this.log, this.#columns);
+    this.#lanes = { ...makeLanes(departures.length), perSecond: this.log.clock.perSecond };
   }
 
   /** Sets out on a leg. */
   setOut(passage: Passage): void {
     this.#passage = passage;
+    this.#speed = passage.speed;
     this.#columns.onLeg(passage.leg, passage.cells, passage.reach);
-    this.legTime.fill(0);
-    this.legUse.fill(0);
+    this.log.beginLeg(passage.rate);
   }
 
-  /** Goes over a panel of the leg; afterwards `afloat` says who came through. */
+  /** Goes over a panel of the leg; afterwards the log says who came through. */
   cross(panel: number): void {
-    const { leg } = this.#passage as Passage;
-    this.#start = leg.panels.s[panel] as number;
-    this.#end = leg.panels.s[panel + 1] as number;
+    const { log } = this;
+    const { s } = (this.#passage as Passage).leg.panels;
+    const from = s[panel] as number;
+    const to = s[panel + 1] as number;
     this.#columns.enter(panel);
-    this.#onTile(this.#columns.tile);
-    if (this.#tile < 0) this.afloat.fill(0);
-    else {
-      this.#ready();
-      this.#step();
-      this.#settle();
+    if (this.#columns.tile < 0) {
+      log.state.fill(SUNK);
+      return;
     }
-  }
-
-  /** A panel in another tile has other valid times. */
-  #onTile(tile: number): void {
-    if (tile === this.#tile) return;
-    this.#tile = tile;
-    this.#times = (this.#field.tiles[tile] as Tile | undefined)?.times ?? null;
-    this.#clock.slice.fill(0);
-    this.#clock.until.fill(Number.NEGATIVE_INFINITY);
-  }
-
-  /** Sets the lanes for one step over the panel. */
-  #ready(): void {
-    const { afloat, begun, legTime, met, count } = this;
-    const { until } = this.#clock;
-    this.#lanes.half.fill((this.#end - this.#start) / 2);
-    for (let n = 0; n < count; n += 1) {
-      const now = (begun[n] as number) + (legTime[n] as number);
-      const moment = Math.max(now, met[n] as number);
-      if (moment >= (until[n] as number) && afloat[n] === 1 && !this.#turn(n, moment)) afloat[n] = 0;
-      this.#lanes.share[n] = this.#share(n, now);
-    }
-  }
-
-  #turn(n: number, moment: number): boolean {
-    return turnClock(this.#clock, n, this.#times, this.departure[n] as number, moment);
-  }
-
-  #share(n: number, now: number): number {
-    return (now - (this.#clock.from[n] as number)) * (this.#clock.perSecond[n] as number);
-  }
-
-  /** Takes the step over the panel, for all that are between the same two slices at once. */
-  #step(): void {
-    const { slice } = this.#clock;
-    const { speed } = this.#passage as Passage;
-    for (let first = 0; first < this.count; ) {
-      if (this.afloat[first] === 0) {
-        first += 1;
-        continue;
-      }
-      const at = slice[first] as number;
+    log.onTile(this.#columns.tile);
+    this.#rounds.enter(from, to, this.#speed);
+    for (let first = 0; first < log.count; ) {
       let last = first + 1;
-      while (last < this.count && slice[last] === at) last += 1;
-      const pair = this.#columns.pair(at, this.#next(at));
-      if (pair === NO_PAIR) this.afloat.fill(0, first, last);
-      else smoothTimes(this.#columns.pairs, pair, 0, speed, this.#lanes, first, last);
+      if (log.state[first] === ABREAST) {
+        last = this.#lastAbreast(first);
+        this.#goAbreast(from, to, first, last);
+      }
       first = last;
     }
+    this.#rounds.run();
   }
 
-  #next(slice: number): number {
-    return this.#times === null ? slice : slice + 1;
+  /** Where those in a row end who are between the same two valid times as the first. */
+  #lastAbreast(first: number): number {
+    const { count, clock } = this.log;
+    const { slice } = clock;
+    let last = first + 1;
+    while (last < count && slice[last] === slice[first]) last += 1;
+    return last;
   }
 
-  /** Books the steps over the panel; those that have to go over it in several go in rounds. */
-  #settle(): void {
-    const { afloat, begun, legTime, legUse, count } = this;
-    const { time } = this.#lanes;
-    const { until } = this.#clock;
-    const { rate } = this.#passage as Passage;
-    let several = 0;
-    for (let n = 0; n < count; n += 1) {
-      if (afloat[n] === 0) continue;
-      const took = time[n] as number;
+  /** Goes over the panel with those who are between the same two valid times. */
+  #goAbreast(from: number, to: number, first: number, last: number): void {
+    const { log } = this;
+    const columns = this.#columns;
+    const slice = log.clock.slice[first] as number;
+    const next = log.after(slice);
+    const at = columns.pair(slice, next);
+    if (at === NO_PAIR) {
+      log.state.fill(SUNK, first, last);
+      return;
+    }
+    const perSecond = log.clock.perSecond[first] as number;
+    const whole = { pairs: columns.pairs, at, from, to, perSecond };
+    const mean = slice !== next && perSecond * this.#enough_s <= 1 ? this.#mean : null;
+    if (mean === null) this.#goByStep(whole, first, last);
+    else if (this.#lay(mean, whole)) this.#goByMean(mean, whole, first, last);
+    else if (!this.#layHalves(slice, next)) this.#goByStep(whole, first, last);
+    else {
+      const middle = (from + to) / 2;
+      const halves = { pairs: this.#halves, perSecond };
+      this.#goOver(mean, { ...halves, at: 0, from, to: middle }, first, last);
+      this.#setApart(slice, middle, to, first, last);
+      this.#goOver(mean, { ...halves, at: PAIR, from: middle, to }, first, last);
+    }
+  }
+
+  /** Lays the pairs of both halves of the panel; returns whether there are such. */
+  #layHalves(slice: number, next: number): boolean {
+    const columns = this.#columns;
+    return (
+      columns.part(slice, next, -1, 0.5, this.#halves, 0) &&
+      columns.part(slice, next, 0, 0.5, this.#halves, PAIR)
+    );
+  }
+
+  /** Has those go on in steps of their own who met a valid time at the panel's middle. */
+  #setApart(slice: number, middle: number, to: number, first: number, last: number): void {
+    const { state, clock } = this.log;
+    for (let n = first; n < last; n += 1)
+      if (state[n] === ABREAST && clock.slice[n] !== slice) this.#rounds.goOn(n, middle, to);
+  }
+
+  #goOver(mean: SmoothMean, stretch: Stretch, first: number, last: number): void {
+    if (this.#lay(mean, stretch)) this.#goByMean(mean, stretch, first, last);
+    else this.#goByStep(stretch, first, last);
+  }
+
+  #lay(mean: SmoothMean, { pairs, at, from, to, perSecond }: Stretch): boolean {
+    return mean.lay(pairs, at, this.#speed, to - from, perSecond);
+  }
+
+  #goByMean(mean: SmoothMean, stretch: Stretch, first: number, last: number): void {
+    const { log } = this;
+    const { state, begun, legTime, legUse, rate, tells } = log;
+    const { from, until } = log.clock;
+    const { share, time } = this.#lanes;
+    const { to, perSecond } = stretch;
+    let due = 0;
+    for (let n = first; n < last; n += 1) {
+      if (state[n] !== ABREAST) continue;
       const before = legTime[n] as number;
-      if (took !== NOT_SMOOTH && (begun[n] as number) + before + took <= (until[n] as number) + PASSING_S) {
-        this.#tell(n);
+      const now = (begun[n] as number) + before;
+      const left = (until[n] as number) - now;
+      const part = (now - (from[n] as number)) * perSecond;
+      const took = mean.time(part);
+      if (took <= left + PASSING_S) {
+        if (tells) log.tell(n, to, took);
         legTime[n] = before + took;
         legUse[n] = (legUse[n] as number) + rate * took;
-      } else if (this.#takeApart(several, n)) several += 1;
-    }
-    while (several > 0) several = this.#round(several);
-  }
-
-  /** Tells of a step over the whole panel, where somebody listens. */
-  #tell(n: number): void {
-    if (this.#taken !== null)
-      this.#taken(n, this.#end, this.#lanes.time[n] as number, this.#clock.from[n] as number);
-  }
-
-  /** Sees to one that cannot take the panel in one step; returns whether it is to go over it in several. */
-  #takeApart(j: number, n: number): boolean {
-    const rounds = this.#rounds;
-    rounds.who[j] = n;
-    rounds.longest[j] = this.#end - this.#start;
-    this.#aim(j, this.#start);
-    return this.#judge(j, this.#lanes, n);
-  }
-
-  #book(n: number, to: number, time: number): void {
-    this.#taken?.(n, to, time, this.#clock.from[n] as number);
-    this.legTime[n] = (this.legTime[n] as number) + time;
-    this.legUse[n] = (this.legUse[n] as number) + (this.#passage as Passage).rate * time;
-  }
-
-  /** One step of those that go over the panel in several; returns how many still do. */
-  #round(several: number): number {
-    const { who, place, to, lanes, parts } = this.#rounds;
-    const perMetre = 2 / (this.#end - this.#start);
-    let laid = 0;
-    for (let j = 0; j < several; j += 1) {
-      const n = who[j] as number;
-      const slice = this.#clock.slice[n] as number;
-      const from = ((place[j] as number) - this.#start) * perMetre - 1;
-      const half = ((to[j] as number) - (place[j] as number)) / 2;
-      if (!this.#columns.part(slice, this.#next(slice), from, half * perMetre, parts, laid * PAIR)) {
-        this.afloat[n] = 0;
-        continue;
+        if (took >= left - PASSING_S) log.turn(n);
+      } else {
+        share[n] = part;
+        time[n] = took;
+        this.#due[due] = n;
+        due += 1;
       }
-      if (j !== laid) move(this.#rounds, j, laid);
-      lanes.half[laid] = half;
-      lanes.share[laid] = this.#share(n, this.#now(n));
-      lanes.perSecond[laid] = this.#clock.perSecond[n] as number;
-      laid += 1;
     }
-    smoothTimes(parts, 0, PAIR, (this.#passage as Passage).speed, lanes, 0, laid);
-    let left = 0;
-    for (let j = 0; j < laid; j += 1) {
-      if (!this.#judge(j, lanes, j)) continue;
-      if (j !== left) move(this.#rounds, j, left);
-      left += 1;
+    if (due > 0) this.#cut(stretch, due);
+  }
+
+  /**
+   * Has those go in steps of their own to whom a valid time falls due on a stretch. They stand in `due`; in their lanes, how long the stretch would
+   * take them.
+   */
+  #cut({ pairs, at, from, to }: Stretch, count: number): void {
+    const { log } = this;
+    const lanes = this.#lanes;
+    const due = this.#due;
+    const first = due[0] as number;
+    const last = (due[count - 1] as number) + 1;
+    lanes.half.fill((to - from) / 2, first, last);
+    guessSlowness(pairs, at, 0, this.#speed, lanes, first, last);
+    for (let j = 0; j < count; j += 1) {
+      const n = due[j] as number;
+      this.#rounds.cut(n, from, to, guessDistance(lanes, n, log.left(n, log.now(n))));
     }
-    return left;
   }
 
-  #now(n: number): number {
-    return (this.begun[n] as number) + (this.legTime[n] as number);
-  }
-
-  /** Judges the step that one has just tried in a lane; returns whether another is to come. */
-  #judge(j: number, lanes: Lanes, lane: number): boolean {
-    const { who, place, to, longest, limit, tries, cutting } = this.#rounds;
-    const n = who[j] as number;
-    const time = lanes.time[lane] as number;
-    const until = this.#clock.until[n] as number;
-    const wanted = until - this.#now(n);
-    if (cutting[j] === 0) {
-      if (time === NOT_SMOOTH) {
-        longest[j] = ((to[j] as number) - (place[j] as number)) / 2;
-        to[j] = (place[j] as number) + (longest[j] as number);
-        return this.#again(j, n, MOST_HALVINGS);
-      }
-      if (time <= wanted + PASSING_S) return this.#accept(j, n, time);
-      if (wanted <= PASSING_S) return this.#meet(j, n);
-      cutting[j] = 1;
-      tries[j] = 0;
-      limit[j] = to[j] as number;
-      return this.#aimAtTime(j, n, (place[j] as number) + guessDistance(lanes, lane, wanted));
+  #goByStep({ pairs, at, from, to }: Stretch, first: number, last: number): void {
+    const { log } = this;
+    const lanes = this.#lanes;
+    lanes.half.fill((to - from) / 2, first, last);
+    for (let n = first; n < last; n += 1) lanes.share[n] = log.share(n, log.now(n));
+    smoothTimes(pairs, at, 0, this.#speed, lanes, first, last);
+    for (let n = first; n < last; n += 1) {
+      if (log.state[n] !== ABREAST) continue;
+      const time = lanes.time[n] as number;
+      const left = log.left(n, log.now(n));
+      if (time === NOT_SMOOTH) this.#rounds.halve(n, from, to);
+      else if (time <= left + PASSING_S) log.book(n, to, time);
+      else this.#rounds.cut(n, from, to, guessDistance(lanes, n, left));
     }
-    if (time === NOT_SMOOTH) return this.#sink(n);
-    const late = time - wanted;
-    const at = (to[j] as number) - late / (lanes.end[lane] as number);
-    if (Math.abs(late) > Math.max(MEETING * time, PASSING_S))
-      return this.#again(j, n, MOST_CUTS) && this.#aimAtTime(j, n, at);
-    if (at > (place[j] as number)) to[j] = Math.min(at, limit[j] as number);
-    this.met[n] = until;
-    return this.#accept(j, n, wanted);
-  }
-
-  #again(j: number, n: number, most: number): boolean {
-    const { tries } = this.#rounds;
-    tries[j] = (tries[j] as number) + 1;
-    return (tries[j] as number) <= most || this.#sink(n);
-  }
-
-  #sink(n: number): false {
-    this.afloat[n] = 0;
-    return false;
-  }
-
-  /** Meets a valid time on the spot. */
-  #meet(j: number, n: number): boolean {
-    this.met[n] = this.#clock.until[n] as number;
-    return this.#goOn(j, n);
-  }
-
-  /** Aims at the place where a valid time is met. */
-  #aimAtTime(j: number, n: number, at: number): boolean {
-    const { place, to, limit } = this.#rounds;
-    if (!(at > (place[j] as number))) return this.#sink(n);
-    to[j] = Math.min(at, limit[j] as number);
-    return true;
-  }
-
-  #accept(j: number, n: number, time: number): boolean {
-    const { place, to, longest, cutting } = this.#rounds;
-    this.#book(n, to[j] as number, time);
-    // What was too rough is likely so further on; beyond a valid time it need not be.
-    longest[j] = cutting[j] === 1 ? this.#end : 2 * ((to[j] as number) - (place[j] as number));
-    place[j] = to[j] as number;
-    return (place[j] as number) < this.#end && this.#goOn(j, n);
-  }
-
-  /** Makes ready for the next step from where one is. */
-  #goOn(j: number, n: number): boolean {
-    this.#aim(j, this.#rounds.place[j] as number);
-    const moment = Math.max(this.#now(n), this.met[n] as number);
-    return moment < (this.#clock.until[n] as number) || this.#turn(n, moment) || this.#sink(n);
-  }
-
-  /** Aims a step as far as is likely to be smooth. */
-  #aim(j: number, place: number): void {
-    const rounds = this.#rounds;
-    rounds.place[j] = place;
-    rounds.to[j] = Math.min(place + (rounds.longest[j] as number), this.#end);
-    rounds.tries[j] = 0;
-    rounds.cutting[j] = 0;
   }
 }

@@ -16,16 +16,20 @@ export class SmoothLeg {
   readonly #fleet: SmoothFleet;
   #taken: Taken[] = [];
 
-  /** @param departure ms since 1970 */
-  constructor(field: Field, departure: number, alongOnly: boolean) {
-    this.#fleet = new SmoothFleet(field, [departure], alongOnly, (_n, to, time, since) => {
+  /**
+   * @param departure ms since 1970
+   * @param every_s step of the departures that are compared, s; `null` for none
+   */
+  constructor(field: Field, departure: number, every_s: number | null, alongOnly: boolean) {
+    const taken = (_n: number, to: number, time: number, since: number) => {
       this.#taken.push({ to, time, since });
-    });
+    };
+    this.#fleet = new SmoothFleet(field, [departure], every_s, { alongOnly, taken });
   }
 
   /** The last valid time met, s since departure: the clock may be a little short of it. */
   get met(): number {
-    return this.#fleet.met[0] as number;
+    return this.#fleet.log.met[0] as number;
   }
 
   setOut(passage: Passage): void {
@@ -41,10 +45,7 @@ export class SmoothLeg {
   cross(panel: number, start: number, elapsed: number, met: number): readonly Taken[] {
     const fleet = this.#fleet;
     this.#taken = [];
-    fleet.afloat[0] = 1;
-    fleet.begun[0] = start;
-    fleet.legTime[0] = elapsed;
-    fleet.met[0] = met;
+    fleet.log.put(0, start, elapsed, met);
     fleet.cross(panel);
     return this.#taken;
   }

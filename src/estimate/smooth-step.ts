@@ -102,12 +102,12 @@ export function smoothTimes(
   first: number,
   last: number,
 ): void {
-  guess(pairs, at, stride, speed, lanes, first, last);
+  guessSlowness(pairs, at, stride, speed, lanes, first, last);
   correct(pairs, at, stride, speed, lanes, first, last);
 }
 
-/** The parabola through F at the start and, at the time that this gives, at the third node. */
-function guess(
+/** The first guess alone: the parabola through F at the start and, at the time that this gives, at the third node. */
+export function guessSlowness(
   pairs: Float64Array,
   at: number,
   stride: number,
@@ -146,9 +146,11 @@ function guess(
       const rise = (f - f0) * PER_Z3;
       const cRise = (c - cStart) * PER_Z3;
       const turn = scale * f;
-      // g'' / 2 of g = a + sqrt(V² - c²), to first order in c/V; then F'' / 2 = F'²/F - F² g''/2.
+      // g'' / 2 of g = a + sqrt(V² - c²), to first order in c/V, along the way: the medium bends with the place, turns with the
+      // time, and the time bends too; then F'' / 2 = F'²/F - F² g''/2.
       const cSquare = 0.5 * cRise * cRise + c * (cBend + now * dcBend + turn * cTwist);
-      const gBend = aBend + now * daBend + turn * aTwist - cSquare * perSpeed;
+      const turnBend = 0.5 * scale * rise * (da3 - c * dc3 * perSpeed);
+      const gBend = aBend + now * daBend + turn * aTwist + turnBend - cSquare * perSpeed;
       const square = rise * rise * g - gBend * f * f;
       start[n] = f0;
       slope[n] = rise - square * Z3;
@@ -270,4 +272,15 @@ export function guessDistance(lanes: Lanes, n: number, wanted: number): number {
     z -= late / (f0 + z * (s1 + z * s2));
   }
   return length * z;
+}
+
+/**
+ * How far before its end a step was `late` seconds before, m: by the slowness there and how it rises in the guess, so that a
+ * small share's cube is left open.
+ */
+export function lateDistance(lanes: Lanes, n: number, late: number): number {
+  const slowness = lanes.end[n] as number;
+  const rise = ((lanes.slope[n] as number) + 4 * (lanes.bend[n] as number)) / (lanes.half[n] as number);
+  const straight = late / slowness;
+  return straight * (1 + (0.5 * rise * straight) / slowness);
 }

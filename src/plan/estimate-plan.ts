@@ -167,6 +167,7 @@ async function readInput(
   const { fields, members } = await readMembers(plan.fields, open, onProgress);
   const coast = craft.moves === "water" && loadLand !== undefined ? await loadLand() : null;
   const land = coast === null ? null : landFinder(coast);
-  const input = { title, departure, craft, pace, reserve, fields, routes, land };
+  const compared = plan.window === undefined ? {} : { every_s: plan.window.every_s };
+  const input = { title, departure, craft, pace, reserve, fields, routes, land, ...compared };
   return { input, members, notes: fieldNotes(input) };
 }

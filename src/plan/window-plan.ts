@@ -86,7 +86,8 @@ function answerWindow(
 ): WindowAnswer {
   const { whatIfs = [], errors = [], confidence } = plan;
   const asked = { whatIfs, errors, members, confidence };
-  const sweep = makeSweep(prepareRoutes(input), input, plan.arrive ?? null, asked);
+  const prepared = prepareRoutes({ ...input, every_s: window.every_s });
+  const sweep = makeSweep(prepared, input, plan.arrive ?? null, asked);
   const ofArriveBy = arriveBy === undefined ? { file, key: "window.arriveBy" } : { key: "arriveBy" };
   const inTime = toldOf(ofArriveBy, () => latestInTime(sweep, window));
   const cells = [...windowCells(sweep, window)];

@@ -126,27 +126,31 @@ export function oceanConditions(wind: Field, departure_s: number): Conditions {
 }
 
 /** 240 departures, 3 minutes apart. */
-export const DEPARTURES_S = Float64Array.from({ length: 240 }, (_, n) => 600 + 180 * n);
+const EVERY_S = 180;
+export const DEPARTURES_S = Float64Array.from({ length: 240 }, (_, n) => 600 + EVERY_S * n);
 
 export interface Ocean {
   readonly wind: Field;
   readonly prepared: readonly PreparedRoute[];
+  /** The same for comparing all departures. */
+  readonly compared: readonly PreparedRoute[];
 }
 
 export function makeOcean(wind: Field = oceanWind()): Ocean {
-  return { wind, prepared: oceanRoutes().map((route) => prepareRoute(route, [wind])) };
+  const prepared = oceanRoutes().map((route) => prepareRoute(route, [wind]));
+  return { wind, prepared, compared: prepared.map((route) => ({ ...route, every_s: EVERY_S })) };
 }
 
 /** The job's departures and routes as a window that is worked out cell by cell. */
-export function oceanSweep({ wind, prepared }: Ocean): {
+export function oceanSweep({ wind, compared }: Ocean): {
   readonly sweep: Sweep;
   readonly departures: readonly number[];
 } {
   const conditions = oceanConditions(wind, DEPARTURES_S[0] as number);
-  const sweep = makeSweep(prepared, {
+  const sweep = makeSweep(compared, {
     ...conditions,
     title: "",
-    routes: prepared.map(({ route }) => route),
+    routes: compared.map(({ route }) => route),
     land: null,
   });
   return { sweep, departures: Array.from(DEPARTURES_S, (departure) => START + 1000 * departure) };

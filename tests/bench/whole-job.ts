@@ -85,12 +85,12 @@ function accuracy(route: PreparedRoute, wind: Field, scipy: number | undefined):
   );
 }
 
-async function departureSweep({ wind, prepared }: Ocean, peer: PythonPeer | null): Promise<Part> {
+async function departureSweep({ wind, compared }: Ocean, peer: PythonPeer | null): Promise<Part> {
   const conditions = oceanConditions(wind, DEPARTURE_S);
   const moments = Array.from(DEPARTURES_S, (departure) => oceanConditions(wind, departure).departure);
   const ours = inProcess("routeOutcomes, 240 departures of 5 routes", 1, () => {
     let sum = 0;
-    for (const route of prepared)
+    for (const route of compared)
       for (const { time_s } of routeOutcomes(route, conditions, moments)) sum += time_s ?? Number.NaN;
     return sum;
   });

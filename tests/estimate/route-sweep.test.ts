@@ -44,15 +44,31 @@ function conditionsOf(field: Field, craft: Craft = craftOf()): Conditions {
 }
 
 /** The departures together, and how many of them went through as a sweep. */
-function together(route: Route, conditions: Conditions, when: readonly number[] = departures) {
-  const prepared = prepareRoute(route, conditions.fields);
+function together(
+  route: Route,
+  conditions: Conditions,
+  when: readonly number[] = departures,
+  every_s: number | null = null,
+) {
+  const prepared = { ...prepareRoute(route, conditions.fields), every_s };
   const swept = sweepRoute(prepared, conditions, when).filter((outcome) => outcome !== null).length;
   return { prepared, swept, outcomes: routeOutcomes(prepared, conditions, when) };
 }
 
-/** Every departure has the bits of the full estimate made for it alone. */
+/** Every departure has the bits of the full estimate made for it alone, whether or not many are compared. */
 function expectLone(route: Route, conditions: Conditions, when: readonly number[] = departures): number {
-  const { prepared, swept, outcomes } = together(route, conditions, when);
+  const swept = [null, 60].map((every_s) => expectLoneEvery(every_s, route, conditions, when));
+  expect(swept[1]).toBe(swept[0]);
+  return swept[0] as number;
+}
+
+function expectLoneEvery(
+  every_s: number | null,
+  route: Route,
+  conditions: Conditions,
+  when: readonly number[],
+): number {
+  const { prepared, swept, outcomes } = together(route, conditions, when, every_s);
   when.forEach((departure, n) => {
     const alone = { ...conditions, departure };
     const { estimate } = estimateRoute(prepared, alone);
@@ -278,12 +294,11 @@ describe("a smooth step", () => {
     const values: Record<number, number> = { 0: 0, 3: 6, 9: 3, 30: 3 };
     const wind = gridField("wind", shape, (_lon, _lat, hours) => [values[hours] as number, 0]);
     const route = east(36);
-    const { outcomes, swept, prepared } = together(
-      route,
-      { ...conditionsOf(wind), pace: { hold: "through-speed", speed_m_s: 10 } },
-      [DEPARTURE],
-    );
-    expect(swept).toBe(1);
+    const conditions = { ...conditionsOf(wind), pace: { hold: "through-speed", speed_m_s: 10 } as const };
+    const lone = together(route, conditions, [DEPARTURE]);
+    const compared = together(route, conditions, [DEPARTURE], 600);
+    const { prepared } = lone;
+    expect([lone.swept, compared.swept]).toEqual([1, 1]);
     const length = prepared.legs[0]?.track.length as number;
     // 10 t + ∫ w: after 3 h 108 km + 32.4 km, after 9 h 324 km + 32.4 km + 97.2 km = 453.6 km; 13 m/s from there.
     expect(length).toBeLessThan(453_600);
@@ -292,7 +307,8 @@ describe("a smooth step", () => {
     const rest = length - 140_400;
     const exact = 3 * 3600 + (16 - Math.sqrt(256 - 2 * curvature * rest)) / curvature;
     // 30 panels of 1e-14 each, and two valid times met to a millionth of their interval.
-    expect(Math.abs((outcomes[0]?.time_s as number) - exact) / exact).toBeLessThan(2e-12);
+    for (const { outcomes } of [lone, compared])
+      expect(Math.abs((outcomes[0]?.time_s as number) - exact) / exact).toBeLessThan(2e-12);
   });
 
   test("stays within the bound that the full estimate reports, on the same wind on a finer grid", () => {

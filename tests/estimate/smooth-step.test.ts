@@ -1,42 +1,26 @@
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
-import { STATION_X } from "../../src/estimate/gauss-kronrod.ts";
-import { BENDS, PAIR } from "../../src/estimate/smooth-pair.ts";
-import { POINT_STATIONS } from "../../src/estimate/smooth-rule.ts";
+import { PAIR } from "../../src/estimate/smooth-pair.ts";
 import {
   guessDistance,
   type Lanes,
+  lateDistance,
   makeLanes,
   NOT_SMOOTH,
   smoothTimes,
 } from "../../src/estimate/smooth-step.ts";
-
-/** A component of the medium by the place ξ = -1..1 of the step and the share 0..1 of the way from slice to slice, m/s. */
-type Component = (x: number, share: number) => number;
-const none: Component = () => 0;
-const SPEED = 10;
-
-/** The pair that columns of this medium have. */
-function pairOf(along: Component, cross: Component): Float64Array {
-  const pair = new Float64Array(PAIR);
-  POINT_STATIONS.forEach((station, n) => {
-    const x = STATION_X[station] as number;
-    pair.set([along(x, 0), along(x, 1) - along(x, 0), cross(x, 0), cross(x, 1) - cross(x, 0)], 4 * n);
-  });
-  const bend = (component: Component, share: number) =>
-    (component(1, share) + component(-1, share)) / 2 - component(0, share);
-  pair.set(
-    [along, cross].flatMap((component) => [bend(component, 0), bend(component, 1) - bend(component, 0)]),
-    BENDS,
-  );
-  return pair;
-}
-
-interface Way {
-  readonly length: number;
-  readonly perSecond?: number;
-  readonly share?: number;
-}
+import {
+  type Component,
+  isWithinReach,
+  marched,
+  none,
+  numbers,
+  pairOf,
+  randomMedium,
+  SPEED,
+  timeTo,
+  type Way,
+} from "./smooth-media.ts";
 
 /** One lane over a stretch of this length, m, with the step taken. */
 function stepOver(along: Component, cross: Component, { length, perSecond = 0, share = 0 }: Way): Lanes {
@@ -46,17 +30,6 @@ function stepOver(along: Component, cross: Component, { length, perSecond = 0, s
   lanes.share[0] = share;
   smoothTimes(pairOf(along, cross), 0, 0, SPEED, lanes, 0, 1);
   return lanes;
-}
-
-/** The distance gone after a time falls short of the length by nothing at the answer: by bisection. */
-function timeTo(length: number, distance: (time: number) => number): number {
-  let [low, high] = [0, length];
-  for (let n = 0; n < 200; n += 1) {
-    const middle = (low + high) / 2;
-    if (distance(middle) < length) low = middle;
-    else high = middle;
-  }
-  return low;
 }
 
 function expectClose(actual: number, exact: number, tolerance: number): void {
@@ -168,14 +141,10 @@ describe("a smooth step", () => {
 
   test("that passes has the time of a thousand steps of Runge and Kutta's, but for one in a few hundred", () => {
     const next = numbers(7);
-    const quadratic = () => [2 * next(), next(), next()] as const;
     const errors: number[] = [];
     for (let n = 0; n < 1500; n += 1) {
       const rough = 10 ** (-1.65 + 1.35 * next()) * SPEED;
-      const [first, second, third, last] = [quadratic(), quadratic(), quadratic(), quadratic()];
-      const at = ([a, b, c]: typeof first, x: number) => a + rough * (b * x + c * x * x);
-      const along: Component = (x, part) => mix(part, at(first, x), at(second, x));
-      const cross: Component = (x, part) => mix(part, at(third, x), at(last, x));
+      const { along, cross } = randomMedium(next, rough);
       if (!isWithinReach(along, cross)) continue;
       const way = { length: 8000, perSecond: 1e-4, share: 0.45 * (1 + next()) };
       const time = stepOver(along, cross, way).time[0] as number;
@@ -205,44 +174,16 @@ describe("a smooth step", () => {
     const growing = stepOver((_x, part) => part, none, { length: 5000, perSecond: 5e-4 });
     expectClose(growing.end[0] as number, 1 / Math.sqrt(SPEED * SPEED + 2 * 5e-4 * 5000), 1e-8);
   });
+
+  test("tells where it was shortly before its end, or would be after it", () => {
+    const change = 0.5;
+    const perMetre = change / 5000;
+    const lanes = stepOver((x) => (change * (x + 1)) / 2, none, { length: 5000 });
+    const time = lanes.time[0] as number;
+    for (const late of [-1e-4 * time, 1e-5 * time, 1e-4 * time]) {
+      const exact = 5000 - (Math.expm1(perMetre * (time - late)) * SPEED) / perMetre;
+      // Half a metre at most, by a slowness at the end that is right to 1e-8 or so.
+      expect(Math.abs(lateDistance(lanes, 0, late) - exact)).toBeLessThan(1e-8);
+    }
+  });
 });
-
-/** Whether the medium of both slices stays below nine tenths of the speed. */
-function isWithinReach(along: Component, cross: Component): boolean {
-  return [-1, -0.5, 0, 0.5, 1].every((x) =>
-    [0, 1].every((share) => Math.hypot(along(x, share), cross(x, share)) <= 0.9 * SPEED),
-  );
-}
-
-/** Numbers -1..1 in a row that is always the same: Lehmer's generator. */
-function numbers(seed: number): () => number {
-  let state = seed;
-  return () => {
-    state = (state * 48271) % 2147483647;
-    return (2 * state) / 2147483647 - 1;
-  };
-}
-
-function mix(share: number, a: number, b: number): number {
-  return a + share * (b - a);
-}
-
-/** Runge and Kutta's method of the fourth order, 1,000 steps: right to 1e-13 or so. */
-function marched(along: Component, cross: Component, { length, perSecond = 0, share = 0 }: Way): number {
-  const steps = 1000;
-  const slowness = (s: number, time: number) => {
-    const [x, part] = [(2 * s) / length - 1, share + perSecond * time];
-    const c = cross(x, part);
-    return 1 / (along(x, part) + Math.sqrt((SPEED - c) * (SPEED + c)));
-  };
-  const h = length / steps;
-  let time = 0;
-  for (let n = 0; n < steps; n += 1) {
-    const k1 = slowness(n * h, time);
-    const k2 = slowness((n + 0.5) * h, time + (h / 2) * k1);
-    const k3 = slowness((n + 0.5) * h, time + (h / 2) * k2);
-    const k4 = slowness((n + 1) * h, time + h * k3);
-    time += (h / 6) * (k1 + 2 * k2 + 2 * k3 + k4);
-  }
-  return time;
-}

@@ -72,6 +72,8 @@ const situation = fc.record({
     fc.tuple(fc.integer({ min: -1, max: 6 }), fc.constantFrom(0, 0, 1, -1, 0.25, -0.25, 0.5, 1234, 777_777)),
     { minLength: 1, maxLength: 8 },
   ),
+  /** Step of the departures compared: between none and all valid times are many. */
+  every_s: fc.constantFrom(null, 1, 200, 1e5),
 });
 type Situation = typeof situation extends fc.Arbitrary<infer T> ? T : never;
 
@@ -130,7 +132,7 @@ describe("a departure has the same bits in company, alone and in full", () => {
     fc.assert(
       fc.property(situation, (given) => {
         const field = fieldOf(given);
-        const prepared = prepareRoute(routeIn(given), [field]);
+        const prepared = { ...prepareRoute(routeIn(given), [field]), every_s: given.every_s };
         const conditions = conditionsIn(given, [field]);
         const when = given.departures.map(([slice, ms]) => DEPARTURE + slice * given.hours * HOUR + ms);
         const outcomes = routeOutcomes(prepared, conditions, when);
@@ -146,9 +148,9 @@ describe("a departure has the same bits in company, alone and in full", () => {
           expect(outcome.findings).toEqual(estimate.findings.filter(({ code }) => code !== "no-variation"));
         });
       }),
-      { numRuns: 150, endOnFailure: true },
+      { numRuns: 250, endOnFailure: true },
     );
-    expect(swept).toBeGreaterThan(30);
+    expect(swept).toBeGreaterThan(60);
   });
 
   test("five hundred of them, in no order and many twice", () => {
@@ -157,7 +159,8 @@ describe("a departure has the same bits in company, alone and in full", () => {
       { lon: spaced(-1, 2, 12), lat: spaced(-1, 2, 12), hours: spaced(-3, 60, 63) },
       (lon, lat, hours) => [1.2 * Math.sin(hours / 2 + lon), 0.5 * Math.cos(hours / 3 + lat)],
     );
-    const prepared = prepareRoute(routeOf(waypoint("A", 0, 0), waypoint("B", 1, 1.3)), [field]);
+    const route = routeOf(waypoint("A", 0, 0), waypoint("B", 1, 1.3));
+    const prepared = { ...prepareRoute(route, [field]), every_s: 60 };
     const conditions: Conditions = {
       departure: DEPARTURE,
       craft: craftOf({ moves: "water" }),
@@ -216,7 +219,8 @@ describe("the true error", () => {
         fc.constantFrom(1, 3, 12),
         fc.integer({ min: 0, max: 20_000 }),
         fc.integer({ min: 0, max: 359 }),
-        (medium, speed_m_s, share, cell, hours, seconds, bearing) => {
+        fc.constantFrom(null, 60),
+        (medium, speed_m_s, share, cell, hours, seconds, bearing, every_s) => {
           const unit = (MEDIA[medium] as (cell: number) => Flow)(cell);
           const flow: Flow = (...place) => {
             const [u, v] = unit(...place);
@@ -245,7 +249,7 @@ describe("the true error", () => {
               reserve: null,
               fields,
             };
-            return estimateRoute(prepareRoute(route, fields), conditions).estimate.totals;
+            return estimateRoute({ ...prepareRoute(route, fields), every_s }, conditions).estimate.totals;
           });
           const time = own?.time_s as number;
           const bounds = (own?.error?.time_s as number) + (other?.error?.time_s as number);
@@ -254,7 +258,7 @@ describe("the true error", () => {
           if (time < 6 * 3600) expect(own?.error?.time_s as number).toBeLessThan(1e-10 * time);
         },
       ),
-      { numRuns: 40, endOnFailure: true },
+      { numRuns: 60, endOnFailure: true },
     );
   });
 

@@ -33,7 +33,7 @@ export function flownOn(shape: Ellipsoid, route: Route, { speed, fields = [] }: 
     const cells = fields.map(({ tiles }) => tiles.map((tile) => locatePanels(curve, panels, tile, heights)));
     return { from, to, track, curve, panels, heights, cells, land: [] };
   });
-  return run({ route, legs, roles: fields.map(({ role }) => role) }, { speed, fields });
+  return run({ route, legs, roles: fields.map(({ role }) => role), every_s: null }, { speed, fields });
 }
 
 function run(prepared: PreparedRoute, { speed, fields = [] }: LegTerms): RouteRun {

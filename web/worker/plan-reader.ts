@@ -54,7 +54,9 @@ export function createPlanReader({ files, fields, land }: PlanSources): PlanRead
         fields: merged.fields,
         land: craft.moves === "water" ? await land() : null,
       };
-      const prepared = prepare(routes, fieldsInUse(craft, input.fields), input.land);
+      const every_s = plan.window?.every_s ?? null;
+      const made = prepare(routes, fieldsInUse(craft, input.fields), input.land);
+      const prepared = made.map((route) => ({ ...route, every_s }));
       return { plan, input, prepared, members: merged.members };
     },
   };
