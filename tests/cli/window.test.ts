@@ -186,10 +186,12 @@ describe("legwork window", () => {
     );
   });
 
-  it("asks for the window where neither plan nor options name it", () => {
+  it("asks for the window where neither plan nor options name it, and names both", () => {
     const { status, err } = legwork.run(["window", islands]);
     expect(status).toBe(2);
-    expect(err).toMatch(/a window of departures needs from, to and every, .* found no from in either\n$/);
+    expect(err).toBe(
+      `legwork: ${islands}, window: a window of departures needs from, to and every, in the plan or as --from, --to and --every; found no from in either\n`,
+    );
   });
 });
 
