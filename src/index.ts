@@ -29,6 +29,7 @@ export { type InTime, latestInTime, type RouteInTime } from "./choose/in-time.ts
 export { type LatestDeparture, latestDeparture } from "./choose/latest-departure.ts";
 export type { LegSpread } from "./choose/leg-spreads.ts";
 export { erfc, normalProbability, normalQuantile } from "./choose/normal-distribution.ts";
+export type { PaceBound } from "./choose/pace-bound.ts";
 export { fastestWithReserve, leastUseSpeed, type PaceCurve, paceCurve } from "./choose/pace-curve.ts";
 export { type Quantiles, quantiles } from "./choose/quantiles.ts";
 export { type RefinedWindow, refineWindow } from "./choose/refine.ts";

@@ -1,3 +1,4 @@
+import { fastestBound, leastUseBound, type PaceBound } from "./pace-bound.ts";
 import { fastestWithReserve, leastUseSpeed } from "./pace-curve.ts";
 import type { Sweep } from "./sweep.ts";
 import type { WindowCell } from "./window-cell.ts";
@@ -9,8 +10,12 @@ export interface RoutePaces {
   readonly departure: string;
   /** At the through-speed of least use over the ground; `null` where no speed completes the route. */
   readonly leastUse: WindowCell | null;
+  /** What keeps `leastUse` from being a true least, as the end of the forecast does; `null` where the use rises on both sides. */
+  readonly leastUseBound: PaceBound | null;
   /** At the fastest through-speed that keeps the reserve; `null` where none does. */
   readonly fastest: WindowCell | null;
+  /** What bounds `fastest` other than the reserve; `null` where that does. */
+  readonly fastestBound: PaceBound | null;
 }
 
 /**
@@ -38,8 +43,17 @@ export function routePaces(
     if (way === undefined || best.use === null) return [];
     const { departure } = best.use;
     const given = { ...conditions, departure: Date.parse(departure) };
+    const leastUse = leastUseSpeed(way, given);
+    const fastest = fastestWithReserve(way, given);
     return [
-      { route, departure, leastUse: leastUseSpeed(way, given), fastest: fastestWithReserve(way, given) },
+      {
+        route,
+        departure,
+        leastUse,
+        leastUseBound: leastUseBound(way, given, leastUse),
+        fastest,
+        fastestBound: fastestBound(way, given, fastest),
+      },
     ];
   });
 }

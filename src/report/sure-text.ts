@@ -1,4 +1,5 @@
 import type { TrialCounts } from "../choose/cell-trials.ts";
+import type { PaceBound } from "../choose/pace-bound.ts";
 import type { Sure } from "../choose/sure.ts";
 import type { FindingCode } from "../estimate/result.ts";
 import { askedText } from "./percent-text.ts";
@@ -36,6 +37,12 @@ const FATES: Partial<Record<FindingCode, string>> = {
   "gust-limit": "meets stronger gusts than its limit",
   "arrival-missed": "arrives too late",
 };
+
+/** What keeps a choice of speed from going on, as `a slower one outlasts the forecast`. */
+export function boundText({ beyond, stop }: PaceBound): string {
+  if (stop === null) return `the craft's ${beyond === "slower" ? "slowest" : "fastest"}`;
+  return `a ${beyond} one ${FATES[stop.code] ?? "is not to be done"}`;
+}
 
 /** `breaks its reserve in the what-if "Gale" (and 2 more)` */
 export function fateText({ worst, decidedBy, asBad }: Sure): string {

@@ -1,10 +1,12 @@
+import type { PaceBound } from "../choose/pace-bound.ts";
+import type { RoutePaces } from "../choose/route-paces.ts";
 import type { WindowCell } from "../choose/window-cell.ts";
 import type { RouteSummary, WindowBest } from "../choose/window-summary.ts";
 import { type Column, laidOut, TABLE_WIDTH } from "./columns.ts";
 import { NO_FIGURE, placedText } from "./number-text.ts";
 import { clipped, displayWidth, isolated, plainText, wrapped } from "./plain-text.ts";
 import { inLastPlace, leftInLastPlace } from "./rounding.ts";
-import { triedText } from "./sure-text.ts";
+import { boundText, triedText } from "./sure-text.ts";
 import { clockSeconds, durationText, etaText, instantText } from "./time-text.ts";
 import type { WindowReport } from "./window-input.ts";
 import { reasonWord } from "./window-matrix.ts";
@@ -135,7 +137,7 @@ export function windowBests(report: WindowReport, units: WindowUnits): string[] 
     inTime === null
       ? []
       : [`In time: the latest departure that arrives by ${instantText(inTime.notAfter, "minute")}.`];
-  const any = pacesText(report);
+  const any = pacesText(report, units);
   const tried =
     sure === null
       ? []
@@ -153,17 +155,18 @@ function noneText({ summary, sure }: WindowReport): string {
     : `Nothing in the window holds ${tried}.`;
 }
 
-function pacesText({ paces, sure }: WindowReport): string[] {
+function pacesText({ paces, sure }: WindowReport, units: WindowUnits): string[] {
   if (paces === null) return [];
   const any =
     "Any speed: of the craft's whole range, at the route's departure of least use; least use, and the fastest that keeps the reserve.";
   const tried = sure === undefined || sure === null ? null : triedText(sure);
-  if (tried === null) return wrapped(any, TABLE_WIDTH);
+  const lines = [...wrapped(any, TABLE_WIDTH), ...paces.flatMap((own) => boundLines(own, units))];
+  if (tried === null) return lines;
   const own = sure?.paces ?? [];
   const held = own.some(({ fastest, sureFastest }) => sureFastest !== null && sureFastest !== fastest);
   const none = own.flatMap(({ route, sureFastest }) => (sureFastest === null ? [route] : []));
   return [
-    ...wrapped(any, TABLE_WIDTH),
+    ...lines,
     ...(held
       ? wrapped(
           `Fastest held: the fastest that holds ${tried}, at the route's departure of least use that does.`,
@@ -174,6 +177,24 @@ function pacesText({ paces, sure }: WindowReport): string[] {
       wrapped(`${isolated(plainText(route))}: no speed holds ${tried}.`, TABLE_WIDTH),
     ),
   ];
+}
+
+/** What keeps a route's speeds from being true bests: of the craft, or of what is known of the field. */
+function boundLines(
+  { route, leastUse, leastUseBound, fastest, fastestBound }: RoutePaces,
+  { speed }: WindowUnits,
+): string[] {
+  const told = (what: string, cell: WindowCell | null, bound: PaceBound | null): string[] =>
+    cell === null || cell.speed_m_s === null || bound === null
+      ? []
+      : [
+          `${what} at ${(cell.speed_m_s / speed.size).toFixed(speed.decimals)} ${speed.symbol}, ${boundText(bound)}`,
+        ];
+  const parts = [
+    ...told("least use", leastUse, leastUseBound),
+    ...told("fastest", fastest, fastestBound),
+  ].join("; ");
+  return parts === "" ? [] : wrapped(`${isolated(plainText(route))}, any speed: ${parts}.`, TABLE_WIDTH);
 }
 
 function closing({ latest, closedBy }: WindowBest): string[] {

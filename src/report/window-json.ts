@@ -1,4 +1,5 @@
 import type { InTime } from "../choose/in-time.ts";
+import type { PaceBound } from "../choose/pace-bound.ts";
 import type { RefinedWindow } from "../choose/refine.ts";
 import type { RoutePaces } from "../choose/route-paces.ts";
 import type { BestPair, Sure, SureBest, SureCell } from "../choose/sure.ts";
@@ -124,14 +125,20 @@ function inTime({ notAfter, routes }: InTime, tested: SureWindow["inTime"]) {
   };
 }
 
-function paces({ route: name, departure, leastUse, fastest }: RoutePaces, tested: SurePaces | undefined) {
+function bound(value: PaceBound | null): PaceBound | null {
+  return value && { beyond: value.beyond, stop: finding(value.stop) };
+}
+
+function paces({ leastUse, fastest, ...own }: RoutePaces, tested: SurePaces | undefined) {
   const least = tested?.leastUse ?? leastUse;
   const quickest = tested?.fastest ?? fastest;
   return {
-    route: name,
-    departure,
+    route: own.route,
+    departure: own.departure,
     leastUse: least && cell(least),
+    leastUseBound: bound(own.leastUseBound),
     fastest: quickest && cell(quickest),
+    fastestBound: bound(own.fastestBound),
     ...(tested === undefined ? {} : { sureFastest: tested.sureFastest && cell(tested.sureFastest) }),
   };
 }

@@ -310,6 +310,20 @@ describe("a window whose bests are put to the test", () => {
     );
   });
 
+  test("says what keeps a speed of the craft's range from being a true best", () => {
+    const { paces } = JSON.parse(writeWindowJson(report));
+    const plain = report.paces ?? [];
+    expect(plain.some(({ leastUseBound }) => leastUseBound !== null)).toBe(true);
+    plain.forEach(({ route, leastUse, leastUseBound, fastestBound }, at) => {
+      expect(paces[at]).toMatchObject({ leastUseBound, fastestBound });
+      if (leastUse === null || leastUseBound === null) return;
+      const knots = (((leastUse.speed_m_s ?? 0) * 3600) / 1852).toFixed(1);
+      const words =
+        leastUseBound.stop === null ? "the craft's slowest" : "a slower one outlasts the forecast";
+      expect(flat).toContain(`${route}, any speed: least use at ${knots} kn, ${words}`);
+    });
+  });
+
   test("has in its CSV columns at the end that are filled for the bests alone", () => {
     const [head, ...rows] = readCsv(writeWindowCsv(report));
     const [plain] = readCsv(writeWindowCsv(reportOf(names, [3, 5], true)));

@@ -12,17 +12,24 @@ interface PaceBestsProps {
 }
 
 /** The speed of least use and the fastest that keeps the reserve, each to be looked at and set. */
-export function PaceBests({ page, answer: { least, fastest, curve }, onLook, onChoose }: PaceBestsProps) {
+export function PaceBests({ page, answer, onLook, onChoose }: PaceBestsProps) {
   const { view } = page;
+  const { least, fastest, curve } = answer;
   const unit = shownUnit(view.units.value, "speed");
   const amount = storeUnit(curve.storeUnit, curve.usable);
-  const words = (cell: WindowCell): string =>
-    `${inUnit(cell.speed_m_s, unit)} ${unit.symbol}: ${durationText(cell.passage_s, view.clock.value)}, arrives ${
+  const words = (cell: WindowCell, bound: string | null): string =>
+    `${inUnit(cell.speed_m_s, unit)} ${unit.symbol}${bound === null ? "" : ` (${bound})`}: ${durationText(cell.passage_s, view.clock.value)}, arrives ${
       cell.arrival === null
         ? "–"
         : clockSince(cell.arrival, cell.departure, view.zone.value, view.clock.value)
     }, uses ${inUnit(cell.use, amount)} ${amount.symbol}, ${inUnit(cell.remaining, amount)} left`;
-  const item = (letter: string, name: string, cell: WindowCell | null, none: string) => (
+  const item = (
+    letter: string,
+    name: string,
+    cell: WindowCell | null,
+    bound: string | null,
+    none: string,
+  ) => (
     <li>
       {cell === null ? (
         <p class="none-possible">{none}</p>
@@ -39,7 +46,7 @@ export function PaceBests({ page, answer: { least, fastest, curve }, onLook, onC
             {letter}
           </span>
           <span>
-            <strong>{name}</strong> {words(cell)}
+            <strong>{name}</strong> {words(cell, bound)}
             {cell.status === "stop" && cell.worst !== null && `; cannot be done: ${cell.worst.message}`}
           </span>
         </button>
@@ -48,8 +55,14 @@ export function PaceBests({ page, answer: { least, fastest, curve }, onLook, onC
   );
   return (
     <ul class="bests" aria-label="Speeds to choose">
-      {item("U", "Least use", least, "No speed completes the route.")}
-      {item("F", "Fastest that keeps the reserve", fastest, "No speed of the craft's keeps the reserve.")}
+      {item("U", "Least use", least, answer.leastBound, "No speed completes the route.")}
+      {item(
+        "F",
+        "Fastest that keeps the reserve",
+        fastest,
+        answer.fastestBound,
+        "No speed of the craft's keeps the reserve.",
+      )}
     </ul>
   );
 }

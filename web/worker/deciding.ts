@@ -5,14 +5,18 @@ import type { PlanDocument } from "../state/plan-document.ts";
 import { cellOrder } from "../window/fill-order.ts";
 import { askedOf } from "./asked-of.ts";
 import {
+  boundText,
   CellTrials,
   conditionsOf,
   estimateArriving,
+  fastestBound,
   fastestWithReserve,
   latestInTime,
+  leastUseBound,
   leastUseSpeed,
   type MinuteCells,
   makeSweep,
+  type PaceBound,
   paceCurve,
   refinedBests,
   refineRoutes,
@@ -188,10 +192,15 @@ function paceOf(read: PlanRead, at: number): PaceAnswer {
   const estimate = answerOf(read).estimate.routes[at];
   if (route === undefined || estimate === undefined) throw new Error(`no route ${at} in the plan`);
   const { pace, ...conditions } = conditionsOf(estimate, input, at);
+  const least = leastUseSpeed(route, conditions);
+  const fastest = fastestWithReserve(route, conditions);
+  const words = (bound: PaceBound | null): string | null => bound && boundText(bound);
   return {
     curve: paceCurve(route, conditions),
-    least: leastUseSpeed(route, conditions),
-    fastest: fastestWithReserve(route, conditions),
+    least,
+    leastBound: words(leastUseBound(route, conditions, least)),
+    fastest,
+    fastestBound: words(fastestBound(route, conditions, fastest)),
     speed_m_s: pace.hold === "through-speed" ? pace.speed_m_s : null,
   };
 }

@@ -232,7 +232,11 @@ export interface SureSlice {
 export interface PaceAnswer {
   readonly curve: PaceCurve;
   readonly least: WindowCell | null;
+  /** What keeps it from being a true least, in words; `null` where nothing does. */
+  readonly leastBound: string | null;
   readonly fastest: WindowCell | null;
+  /** What bounds it other than the reserve, in words; `null` where that does. */
+  readonly fastestBound: string | null;
   /** The plan's own through-speed, m/s; `null` where its pace holds something else. */
   readonly speed_m_s: number | null;
 }
