@@ -133,6 +133,7 @@ describe("what the chart draws of a route", () => {
       routes: [],
       drawings: [],
       fault: null,
+      faultKey: null,
       landPending: false,
       ensemble: false,
     };

@@ -5,7 +5,6 @@ import { latText, lonText } from "../../web/format/position-text.ts";
 import {
   clockSince,
   clockText,
-  dateText,
   durationText,
   fromLocalInput,
   fullTimeText,
@@ -14,6 +13,7 @@ import {
   zoneText,
 } from "../../web/format/time-text.ts";
 import { inUnit, number, shownUnit, signed, storeUnit } from "../../web/format/units.ts";
+import { instantText } from "../../web/shell/plan-words.ts";
 
 describe("positions as text", () => {
   test("are degrees and minutes with a hemisphere", () => {
@@ -62,8 +62,6 @@ describe("times as text", () => {
     expect(clockText(late, "UTC", true)).toBe("Sat 1 Jan 00:00");
     expect(clockSince("2027-05-04T13:47:57Z", "2027-05-04T11:00:00Z", "UTC", "minute")).toBe("13:48");
     expect(clockSince("2027-05-04T13:47:29Z", "2027-05-04T11:00:00Z", "UTC", "minute")).toBe("13:47");
-    expect(fullTimeText(late, "UTC")).toBe("Sat 1 Jan 2028 00:00 UTC");
-    expect(dateText(late, "UTC")).toBe("2028-01-01");
   });
 
   test("are of the nearest second where seconds count, with the day that it falls on", () => {
@@ -72,11 +70,6 @@ describe("times as text", () => {
     expect(clockSince("2027-12-31T23:59:59.500Z", departure, "UTC", "second")).toBe("1 Jan 00:00:00");
     expect(clockText("2027-12-31T23:59:59.5Z", "UTC", true, "second")).toBe("Sat 1 Jan 00:00:00");
     expect(clockText("2027-05-04T06:05:09Z", "Asia/Kolkata", false, "second")).toBe("11:35:09");
-  });
-
-  test("have a date in the zone", () => {
-    expect(dateText(Date.UTC(2027, 11, 31, 23, 30), "UTC")).toBe("2027-12-31");
-    expect(dateText(Date.UTC(2027, 11, 31, 23, 30), "Asia/Kolkata")).toBe("2028-01-01");
   });
 
   test("carry the date where it is another day than the departure's", () => {
@@ -175,6 +168,16 @@ describe("a time that is decided on", () => {
     const instant = Date.parse("2027-05-04T11:00:00Z");
     expect(fullTimeText(instant, "UTC")).toBe("Tue 4 May 2027 11:00 UTC");
     expect(fullTimeText(instant, "Asia/Kolkata")).toBe("Tue 4 May 2027 16:30 Asia/Kolkata (UTC+05:30)");
+  });
+
+  test("has its seconds where it has any, since it is the plan's own and not one that is worked out", () => {
+    const late = Date.UTC(2027, 11, 31, 23, 59, 57);
+    expect(fullTimeText(late, "UTC")).toBe("Fri 31 Dec 2027 23:59:57 UTC");
+    expect(fullTimeText(late + 120, "UTC")).toBe("Fri 31 Dec 2027 23:59:57.120 UTC");
+    expect(localInput(late, "Asia/Kolkata")).toBe("2028-01-01T05:29:57");
+    expect(localInput(late + 3000, "UTC")).toBe("2028-01-01T00:00");
+    expect(fromLocalInput(localInput(late + 120, "UTC"), "UTC")).toBe(late + 120);
+    expect(instantText("2027-12-31T23:59:57Z", "UTC")).toBe("2027-12-31 23:59:57 UTC");
   });
 
   test("has the year of its zone", () => {

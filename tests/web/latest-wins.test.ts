@@ -82,7 +82,7 @@ describe("the answers to a plan", () => {
     asked[0]?.answer(good(["whole"]));
     await first;
     const second = answers.ask({ ...whole, reserve: "20" });
-    asked[1]?.answer({ ok: false, fault: "reserve: takes a share" });
+    asked[1]?.answer({ ok: false, fault: "reserve: takes a share", key: "reserve" });
     await second;
     expect(answers.answer.value.fault).toBe("reserve: takes a share");
     expect(answers.answer.value.routes[0]?.name).toBe("whole");

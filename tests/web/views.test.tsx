@@ -76,7 +76,11 @@ describe("the ledger", () => {
   });
 
   test("says after a fault that its figures are from before it, and says it no more once it is mended", async () => {
-    const answers: EstimateAnswer[] = [answer, { ok: false, fault: "reserve takes a share" }, answer];
+    const answers: EstimateAnswer[] = [
+      answer,
+      { ok: false, fault: "reserve takes a share", key: "reserve" },
+      answer,
+    ];
     const engine = { estimate: async () => answers.shift() } as unknown as Engine;
     const page = createPageState(plan, engine);
     await page.answers.ask(plan);

@@ -1,11 +1,11 @@
 import type { ArrivalAnswer, ArrivalSolution } from "../core.ts";
-import { clockSince, fromLocalInput, localInput, zoneText } from "../format/time-text.ts";
+import { clockSince, timeOf } from "../format/time-text.ts";
 import { inUnit, shownUnit, storeUnit } from "../format/units.ts";
 import { Swatch } from "../ribbon/Ribbon.tsx";
+import { TimeField } from "../shell/TimeField.tsx";
 import { setArrival } from "../state/decide-edits.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { ArrivalDocument } from "../state/plan-document.ts";
-import { timeOf } from "./ask-arrival.ts";
 
 /** When to arrive, and the speeds that make it on every route. */
 export function ArrivalFields({ page }: { readonly page: PageState }) {
@@ -39,6 +39,7 @@ export function ArrivalFields({ page }: { readonly page: PageState }) {
         <TimeField
           label="Not before"
           value={notBefore}
+          at="pace.arrive.notBefore"
           zone={view.zone.value}
           onTime={(time) => change({ notBefore: time, notAfter })}
         />
@@ -46,6 +47,7 @@ export function ArrivalFields({ page }: { readonly page: PageState }) {
       <TimeField
         label={rule(arrive) === "at" ? "Arrival" : "Not after"}
         value={notAfter}
+        at={isWindow ? "pace.arrive.notAfter" : "pace.arrive"}
         zone={view.zone.value}
         onTime={(time) => change(isWindow ? { ...arrive, notAfter: time } : time)}
       />
@@ -105,56 +107,6 @@ function Found({ page, answer, departure, route }: FoundProps) {
         </span>
       ))}
     </>
-  );
-}
-
-interface TimeFieldProps {
-  readonly label: string;
-  readonly value: string;
-  readonly zone: string;
-  readonly onTime: (time: string) => void;
-  /** Takes the time away, where there may be none. */
-  readonly onClear?: () => void;
-  /** The element that says what is wrong with the time. */
-  readonly faultId?: string;
-}
-
-/** A time in the zone that the page shows, written to the plan in UTC. */
-export function TimeField({ label, value, zone, onTime, onClear, faultId }: TimeFieldProps) {
-  const instant = Date.parse(value);
-  const shown = Number.isNaN(instant) ? "" : localInput(instant, zone);
-  const field = (
-    <label>
-      <span>
-        {label} {Number.isNaN(instant) ? zone : zoneText(instant, zone)}
-      </span>
-      <input
-        type="datetime-local"
-        value={shown}
-        {...(faultId === undefined ? {} : { "aria-invalid": true, "aria-describedby": faultId })}
-        onChange={(event) => {
-          const asked = fromLocalInput(event.currentTarget.value, zone);
-          if (asked !== null) onTime(timeOf(asked));
-        }}
-        // A field is empty while a part of it is typed anew: only one that is left so means no time.
-        onBlur={({ currentTarget }) => {
-          if (currentTarget.value !== "" || shown === "") return;
-          if (onClear === undefined) currentTarget.value = shown;
-          else onClear();
-        }}
-      />
-    </label>
-  );
-  if (onClear === undefined) return field;
-  return (
-    <div class="clearable">
-      {field}
-      {shown !== "" && (
-        <button type="button" aria-label={`Take out: ${label}`} onClick={onClear}>
-          ✕
-        </button>
-      )}
-    </div>
   );
 }
 

@@ -1,3 +1,4 @@
+import { timeOf } from "../format/time-text.ts";
 import { setArrival } from "../state/decide-edits.ts";
 import type { PageState } from "../state/page-state.ts";
 
@@ -13,9 +14,4 @@ export function askArrival({ store, answers }: PageState): void {
   if (Number.isNaN(near)) return;
   const asked = timeOf(Math.ceil(near / TEN_MINUTES) * TEN_MINUTES);
   store.edit("Ask for an arrival", (old) => setArrival(old, asked));
-}
-
-/** An instant as a plan writes it. */
-export function timeOf(instant: number): string {
-  return new Date(instant).toISOString().replace(".000Z", "Z");
 }

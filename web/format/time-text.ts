@@ -18,16 +18,11 @@ export function clockText(
   return withDay ? `${weekday} ${Number(day)} ${month} ${time}` : time;
 }
 
-/** The date in a zone as ISO 8601 writes it: `2027-05-04`. */
-export function dateText(instant: number, zone: string): string {
-  return localInput(nearest(instant, "minute"), zone).slice(0, 10);
-}
-
-/** A time in full, as one that is decided on is read: `Tue 4 May 2027 06:00 UTC`. */
+/** A time in full, as one that is decided on is read: `Tue 4 May 2027 06:00 UTC`, with its seconds where it has any. */
 export function fullTimeText(instant: number, zone: string): string {
-  const { weekday, day, month, time } = partsIn(instant, zone, "minute");
-  const year = localInput(nearest(instant, "minute"), zone).slice(0, 4);
-  return `${weekday} ${Number(day)} ${month} ${year} ${time} ${zoneText(instant, zone)}`;
+  const { weekday, day, month } = partsIn(Math.floor(instant / 60_000) * 60_000, zone, "minute");
+  const local = localInput(instant, zone);
+  return `${weekday} ${Number(day)} ${month} ${local.slice(0, 4)} ${local.slice(11)} ${zoneText(instant, zone)}`;
 }
 
 /** `06:00`, or `06:00:12`, on the day of another instant, else with its date: `7 Nov 06:00`. */
@@ -66,10 +61,10 @@ export function signedDurationText(seconds: number | null): string {
   return Math.round(seconds) > 0 ? `+${durationText(seconds)}` : durationText(seconds);
 }
 
-/** What a `datetime-local` control shows for an instant in a zone: `2027-05-04T06:00`. */
+/** What a `datetime-local` control shows for an instant in a zone: `2027-05-04T06:00`, and seconds where there are any. */
 export function localInput(instant: number, zone: string): string {
   const shifted = new Date(instant + offsetMinutes(instant, zone) * 60_000);
-  return shifted.toISOString().slice(0, 16);
+  return shifted.toISOString().replace(/(:00)?(\.000)?Z$/, "");
 }
 
 /** The instant that a `datetime-local` text in a zone means, ms since 1970; `null` where it means none. */
@@ -79,6 +74,11 @@ export function fromLocalInput(text: string, zone: string): number | null {
   // The offset belongs to the instant sought: one more look settles it except inside a clock change.
   const first = asUtc - offsetMinutes(asUtc, zone) * 60_000;
   return asUtc - offsetMinutes(first, zone) * 60_000;
+}
+
+/** An instant as a plan writes it. */
+export function timeOf(instant: number): string {
+  return new Date(instant).toISOString().replace(".000Z", "Z");
 }
 
 function signOf(sign: string, whole: number): string {

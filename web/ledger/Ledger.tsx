@@ -4,6 +4,7 @@ import { inUnit, signedInUnit, storeUnit } from "../format/units.ts";
 import { Swatch } from "../ribbon/Ribbon.tsx";
 import { LazyPart } from "../shell/LazyPart.tsx";
 import { StaleMark } from "../shell/StaleMark.tsx";
+import { PLAN_FAULT } from "../state/fault-place.ts";
 import type { PageState } from "../state/page-state.ts";
 import { Advisory } from "./Advisory.tsx";
 import { CostBar } from "./CostBar.tsx";
@@ -55,7 +56,7 @@ export function Ledger({ page }: { readonly page: PageState }) {
         </p>
       )}
       {fault !== null && (
-        <p class="fault" role="alert">
+        <p class="fault" role="alert" id={PLAN_FAULT}>
           {fault}
         </p>
       )}

@@ -51,6 +51,7 @@ function HoldField({ page: { store }, pace }: { readonly page: PageState; readon
           <span>Speed</span>
           <TextField
             label="Speed"
+            at="pace.speed"
             value={pace.speed ?? ""}
             placeholder="the craft's"
             onText={(speed) => change({ ...pace, speed })}
@@ -62,6 +63,7 @@ function HoldField({ page: { store }, pace }: { readonly page: PageState; readon
           <span>Power</span>
           <TextField
             label="Power"
+            at="pace.power"
             value={pace.power ?? ""}
             placeholder="40 kW"
             onText={(power) => change({ ...pace, power })}

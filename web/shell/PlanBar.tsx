@@ -1,38 +1,27 @@
 import { FieldButton } from "../files/FieldButton.tsx";
 import { Readings } from "../files/Readings.tsx";
-import { fromLocalInput, fullTimeText, localInput } from "../format/time-text.ts";
 import type { PageState } from "../state/page-state.ts";
 import { deleteField, setDeparture, setPlanText } from "../state/plan-edits.ts";
 import { TextField } from "../waypoints/TextField.tsx";
 import { CraftButton } from "./CraftButton.tsx";
 import { PaceFields } from "./PaceFields.tsx";
 import { craftName } from "./plan-words.ts";
+import { TimeField } from "./TimeField.tsx";
 
 /** What holds for all routes: departure, craft, pace, reserve, fields. */
 export function PlanBar({ page }: { readonly page: PageState }) {
   const { store, view } = page;
   const plan = store.plan.value;
-  const zone = view.zone.value;
-  const departure = Date.parse(plan.departure);
   const { fault } = page.answers.answer.value;
   return (
     <section class="plan-bar" data-pane="route" aria-label="Plan">
-      <label>
-        {/* Browsers choose the control's order of day and month: beside it the time stands in full. */}
-        <span>
-          Departure <b>{Number.isNaN(departure) ? zone : fullTimeText(departure, zone)}</b>
-        </span>
-        <input
-          type="datetime-local"
-          value={Number.isNaN(departure) ? "" : localInput(departure, zone)}
-          onChange={({ currentTarget: { value } }) => {
-            const instant = fromLocalInput(value, zone);
-            if (instant === null) return;
-            const text = new Date(instant).toISOString().replace(".000Z", "Z");
-            store.edit("Change departure", (old) => setDeparture(old, text));
-          }}
-        />
-      </label>
+      <TimeField
+        label="Departure"
+        value={plan.departure}
+        zone={view.zone.value}
+        at="departure"
+        onTime={(time) => store.edit("Change departure", (old) => setDeparture(old, time))}
+      />
       <div class="plan-item">
         <span>Craft</span>
         <CraftButton page={page} name={craftName(plan.craft, page.craftNames.value)} />
@@ -42,6 +31,7 @@ export function PlanBar({ page }: { readonly page: PageState }) {
         <span>Reserve</span>
         <TextField
           label="Reserve"
+          at="reserve"
           value={plan.reserve ?? ""}
           placeholder="20 %"
           onText={(text) => store.edit("Change reserve", (old) => setPlanText(old, "reserve", text))}

@@ -8,7 +8,7 @@ export function PrintHead({ page }: { readonly page: PageState }) {
   const made = useSignal(0);
   useEffect(() => {
     const stamp = (): void => {
-      made.value = Date.now();
+      made.value = Math.round(Date.now() / 60_000) * 60_000;
     };
     stamp();
     window.addEventListener("beforeprint", stamp);

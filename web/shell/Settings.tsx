@@ -60,6 +60,7 @@ export function Settings({ page: { view } }: { readonly page: PageState }) {
           label="Address of raster tiles"
           value={view.tiles.value}
           placeholder="https://…/{z}/{x}/{y}.png"
+          {...(isWrong(view.tiles.value) ? { faultId: FAULT } : {})}
           onText={(text) => {
             view.tiles.value = text.trim();
           }}
@@ -70,12 +71,18 @@ export function Settings({ page: { view } }: { readonly page: PageState }) {
   );
 }
 
+const FAULT = "tiles-fault";
+
+const isWrong = (tiles: string): boolean => tiles !== "" && !isTileAddress(tiles);
+
 /** What stands between an address and its tiles: the page lets images in from the address that it began with. */
 function TileNote({ tiles }: { readonly tiles: string }) {
   if (tiles === "") return null;
-  if (!isTileAddress(tiles)) {
+  if (isWrong(tiles)) {
     return (
-      <p class="field-fault">An address of tiles begins with https:// and holds {"{z}, {x} and {y}"}.</p>
+      <p class="field-fault" id={FAULT}>
+        An address of tiles begins with https:// and holds {"{z}, {x} and {y}"}.
+      </p>
     );
   }
   if (letsIn(tiles)) return null;

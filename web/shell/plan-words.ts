@@ -1,4 +1,4 @@
-import { clockText, dateText, zoneText } from "../format/time-text.ts";
+import { localInput, zoneText } from "../format/time-text.ts";
 import type { ArrivalDocument, PaceDocument, PlanDocument } from "../state/plan-document.ts";
 
 /** The rules of pace in words, in the order in which they are offered. */
@@ -33,5 +33,5 @@ export function craftName(craft: PlanDocument["craft"], names: Readonly<Record<s
 export function instantText(text: string, zone: string): string {
   const instant = Date.parse(text);
   if (Number.isNaN(instant)) return text;
-  return `${dateText(instant, zone)} ${clockText(instant, zone, false)} ${zoneText(instant, zone)}`;
+  return `${localInput(instant, zone).replace("T", " ")} ${zoneText(instant, zone)}`;
 }

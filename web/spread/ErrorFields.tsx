@@ -26,7 +26,8 @@ export function ErrorFields({ page: { store } }: { readonly page: PageState }) {
     <section class="error-fields" aria-label="Forecast error">
       <h3>Forecast error</h3>
       {roles.map((role) => {
-        const error = fields.find((field) => field.role === role && field.error !== undefined)?.error;
+        const stated = fields.findIndex((field) => field.role === role && field.error !== undefined);
+        const error = fields[stated]?.error;
         if (error === undefined) {
           return (
             <button
@@ -46,6 +47,7 @@ export function ErrorFields({ page: { store } }: { readonly page: PageState }) {
                 <span>{name}</span>
                 <TextField
                   label={`${name}, ${role}`}
+                  at={`fields[${stated}].error.${key}`}
                   value={error[key]}
                   onText={(text) => {
                     if (text.trim() !== "")
@@ -69,6 +71,7 @@ export function ErrorFields({ page: { store } }: { readonly page: PageState }) {
             <span>Reserve to hold with</span>
             <TextField
               label="Probability with which the reserve has to hold"
+              at="confidence"
               value={confidence ?? ""}
               placeholder="not asked"
               onText={(text) =>

@@ -82,6 +82,7 @@ function WhatIfRow({ page: { store }, whatIf, at }: WhatIfRowProps) {
         <td key={key} data-label={name}>
           <TextField
             label={`${name} of what-if ${at + 1}`}
+            at={`whatIf[${at}].${key}`}
             value={String(whatIf[key] ?? "")}
             placeholder={placeholder}
             onText={(text) =>
@@ -103,11 +104,11 @@ function WhatIfRow({ page: { store }, whatIf, at }: WhatIfRowProps) {
   );
 }
 
-/** A what-if with a text in one of its keys: factors are numbers, an empty text takes the key away. */
+/** A what-if with a text in one of its keys: factors are numbers, what is none stays as written, an empty text takes the key away. */
 function withText(whatIf: WhatIfDocument, key: Key, text: string): WhatIfDocument {
   const { [key]: _old, ...rest } = whatIf;
   if (text.trim() === "") return rest;
   if (key !== "wind" && key !== "current") return { ...rest, [key]: text };
   const factor = Number(text);
-  return Number.isNaN(factor) ? whatIf : { ...rest, [key]: factor };
+  return { ...rest, [key]: Number.isFinite(factor) ? factor : text };
 }

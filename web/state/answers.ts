@@ -12,6 +12,8 @@ export interface Answer {
   readonly drawings: readonly (RouteDrawing | null)[];
   /** The core's sentence about the plan's fault; the figures are then those of the last plan without one. */
   readonly fault: string | null;
+  /** The key of the plan that the sentence is about. */
+  readonly faultKey: string | null;
   /** Whether the routes are still to be held against land. */
   readonly landPending: boolean;
   /** Whether the fields have several members. */
@@ -37,6 +39,7 @@ const NONE: Answer = {
   routes: [],
   drawings: [],
   fault: null,
+  faultKey: null,
   landPending: false,
   ensemble: false,
 };
@@ -66,7 +69,7 @@ export function createAnswers(estimate: (plan: PlanDocument) => Promise<Estimate
       if (mine === asked) working.value = false;
       if (found === SUPERSEDED) return;
       if (!found.ok) {
-        answer.value = { ...answer.peek(), fault: found.fault };
+        answer.value = { ...answer.peek(), fault: found.fault, faultKey: onPage(found.key, part.routes) };
         return;
       }
       const place = plan.routes.map((_, index) => part.routes.indexOf(index));
@@ -75,9 +78,15 @@ export function createAnswers(estimate: (plan: PlanDocument) => Promise<Estimate
         routes: place.map((at) => found.estimate.routes[at] ?? null),
         drawings: place.map((at) => found.drawings[at] ?? null),
         fault: null,
+        faultKey: null,
         landPending: found.landPending,
         ensemble: found.ensemble,
       };
     },
   };
+}
+
+/** A key of the part that is estimated, as one of the page's plan: routes still being drawn are between. */
+function onPage(key: string | null, routes: readonly number[]): string | null {
+  return key?.replace(/^routes\[(\d+)\]/, (_, at) => `routes[${routes[Number(at)]}]`) ?? null;
 }

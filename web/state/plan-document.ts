@@ -52,8 +52,9 @@ export interface AlternateDocument {
 /** A change of what the estimate rests on. */
 export interface WhatIfDocument {
   readonly name?: string;
-  readonly wind?: number;
-  readonly current?: number;
+  /** A text where what was typed is no number, for the core to say so. */
+  readonly wind?: number | string;
+  readonly current?: number | string;
   readonly veer?: string;
   readonly speed?: string;
   readonly consumption?: string;

@@ -87,6 +87,7 @@ function AlternateRow({ page: { store }, alternate, at }: AlternateRowProps) {
         <td key={key}>
           <TextField
             label={`${name} of alternate ${at + 1}`}
+            at={`alternates[${at}].${key}`}
             value={String(alternate[key] ?? "")}
             placeholder={key === "name" ? alternateName(alternate, at) : ""}
             onText={(text) => store.edit("Change alternate", (plan) => withText(plan, at, key, text))}
@@ -115,7 +116,7 @@ function withText(plan: PlanDocument, at: number, key: keyof AlternateDocument, 
 /** A bare number is degrees, anything else a position in a notation of the plan's. */
 function degreesOr(text: string): number | string {
   const number = Number(text);
-  return Number.isNaN(number) ? text : number;
+  return Number.isFinite(number) ? number : text;
 }
 
 /** Begins an alternate halfway along the chosen route, to be typed over. */

@@ -33,6 +33,7 @@ export function RouteEditor({ page }: { readonly page: PageState }) {
             <Swatch route={chosen} />
             <TextField
               label="Name of the route"
+              at={`routes[${chosen}].name`}
               value={route.name}
               onText={(name) =>
                 name.trim() !== "" && edit("Rename route", (plan) => renameRoute(plan, chosen, name))
@@ -174,9 +175,11 @@ function WaypointRow({ page, index, waypoint, path }: WaypointRowProps) {
   const select = { route, waypoint: index };
   const place = (lat: number | string, lon: number | string): void =>
     store.edit("Place waypoint", (plan) => placeWaypoint(plan, route, index, lat, lon), { select });
+  const at = `routes[${route}].waypoints[${index}]`;
   const field = (key: WaypointKey, label: string) => (
     <TextField
       label={`${label} waypoint ${index + 1}`}
+      at={`${at}.${key}`}
       value={waypoint[key] ?? ""}
       onText={(text) =>
         store.edit(`Change ${key}`, (plan) => setWaypointText(plan, route, index, key, text), { select })
@@ -201,6 +204,7 @@ function WaypointRow({ page, index, waypoint, path }: WaypointRowProps) {
       <td>
         <TextField
           label={`Latitude of waypoint ${index + 1}`}
+          at={`${at}.lat`}
           value={shownDegrees(waypoint.lat, latText)}
           onText={(text) => place(asWritten(text), waypoint.lon)}
         />
@@ -208,6 +212,7 @@ function WaypointRow({ page, index, waypoint, path }: WaypointRowProps) {
       <td>
         <TextField
           label={`Longitude of waypoint ${index + 1}`}
+          at={`${at}.lon`}
           value={shownDegrees(waypoint.lon, lonText)}
           onText={(text) => place(waypoint.lat, asWritten(text))}
         />
@@ -235,9 +240,10 @@ function WaypointRow({ page, index, waypoint, path }: WaypointRowProps) {
   );
 }
 
-/** A number as degrees and minutes; a text as it was written. */
-function shownDegrees(value: number | string, text: (degrees: number, decimals: number) => string): string {
-  return typeof value === "number" ? text(value, 3) : value;
+/** A number as degrees and minutes; a text, or a number that is no place, as it was written. */
+function shownDegrees(value: number | string, text: typeof latText): string {
+  const [least, most] = text === latText ? [-90, 90] : [-180, 360];
+  return typeof value === "number" && value >= least && value <= most ? text(value, 3) : String(value);
 }
 
 /** A bare number is degrees; anything else stays the user's own text. */

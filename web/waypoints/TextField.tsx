@@ -1,4 +1,5 @@
 import { useLayoutEffect, useRef } from "preact/hooks";
+import { useFault } from "../state/fault-place.ts";
 
 interface TextFieldProps {
   readonly label: string;
@@ -8,15 +9,18 @@ interface TextFieldProps {
   readonly placeholder?: string;
   /** Whether the whole text is a tooltip, where the field may be too narrow for it. */
   readonly whole?: boolean;
-  /** The element that says what is wrong with the text. */
+  /** The key of the plan that it edits. */
+  readonly at?: string;
+  /** The element that says what is wrong with the text, where its own does. */
   readonly faultId?: string;
 }
 
 /** A field that speaks when its text is finished, and shows the plan's text again on Escape. */
-export function TextField({ label, value, onText, placeholder, whole, faultId }: TextFieldProps) {
+export function TextField({ label, value, onText, placeholder, whole, at, faultId }: TextFieldProps) {
   const input = useRef<HTMLInputElement>(null);
   // Only text that was typed is told: focus may pass through a field whose value has just become another route's.
   const typed = useRef(false);
+  const fault = useFault(at, faultId);
   useLayoutEffect(() => {
     if (input.current && !typed.current) input.current.value = value;
   }, [value]);
@@ -33,7 +37,7 @@ export function TextField({ label, value, onText, placeholder, whole, faultId }:
       defaultValue={value}
       {...(placeholder === undefined ? {} : { placeholder })}
       {...(whole ? { title: value } : {})}
-      {...(faultId === undefined ? {} : { "aria-invalid": true, "aria-describedby": faultId })}
+      {...fault}
       autocomplete="off"
       spellcheck={false}
       onInput={() => {

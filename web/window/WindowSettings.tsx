@@ -1,4 +1,4 @@
-import { TimeField } from "../arrival/ArrivalFields.tsx";
+import { TimeField } from "../shell/TimeField.tsx";
 import { setWindow } from "../state/decide-edits.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { WindowDocument } from "../state/plan-document.ts";
@@ -22,12 +22,19 @@ export function WindowSettings({ page, window, fault }: WindowSettingsProps) {
   const zone = view.zone.value;
   return (
     <>
-      <TimeField label="From" value={window.from} zone={zone} onTime={(from) => change({ from })} />
-      <TimeField label="To" value={window.to} zone={zone} onTime={(to) => change({ to })} />
+      <TimeField
+        label="From"
+        at="window.from"
+        value={window.from}
+        zone={zone}
+        onTime={(from) => change({ from })}
+      />
+      <TimeField label="To" at="window.to" value={window.to} zone={zone} onTime={(to) => change({ to })} />
       <div class="plan-item shorter">
         <span>Every</span>
         <TextField
           label="Step between departures"
+          at="window.every"
           value={window.every}
           placeholder="30 min"
           onText={(every) => change({ every: every.trim() === "" ? window.every : every })}
@@ -35,6 +42,7 @@ export function WindowSettings({ page, window, fault }: WindowSettingsProps) {
       </div>
       <TimeField
         label="Arrive by"
+        at="window.arriveBy"
         value={window.arriveBy ?? ""}
         zone={zone}
         onTime={(arriveBy) => change({ arriveBy })}
@@ -50,6 +58,7 @@ export function WindowSettings({ page, window, fault }: WindowSettingsProps) {
         <span>Speeds</span>
         <TextField
           label="Speeds to try, with commas between"
+          at="window.speeds"
           value={(window.speeds ?? []).join(", ")}
           placeholder="the pace's"
           onText={(text) => store.edit("Change window", (plan) => setWindow(plan, withSpeeds(window, text)))}

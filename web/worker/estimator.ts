@@ -42,8 +42,9 @@ export function createEstimator(reader: PlanReader): Estimator {
       try {
         return await answer(plan);
       } catch (fault) {
-        if (fault instanceof InputError) return { ok: false, fault: await faultText(fault, plan) };
-        throw fault;
+        if (!(fault instanceof InputError)) throw fault;
+        const { file = "", key = null } = fault.place;
+        return { ok: false, fault: await faultText(fault, plan), key: file === "" ? key : null };
       }
     },
     async answered() {

@@ -51,7 +51,12 @@ interface Estimated {
   readonly ensemble: boolean;
 }
 
-export type EstimateAnswer = Estimated | Fault;
+export type EstimateAnswer =
+  | Estimated
+  | (Fault & {
+      /** The key of the plan at fault; `null` where it is another file's, or none. */
+      readonly key: string | null;
+    });
 
 /** Routes that were read from a file of another kind, and what of it is not in them. */
 export type RoutesAnswer =
