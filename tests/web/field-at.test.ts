@@ -1,9 +1,10 @@
 import { describe, expect, test } from "vitest";
+import { type PreparedRoute, prepareRoute } from "../../src/estimate/prepare.ts";
 import type { Field, Tile } from "../../src/field/field.ts";
 import { areasOf } from "../../web/chart/field-areas.ts";
 import { fieldText } from "../../web/chart/UnderPointer.tsx";
 import { fieldsAt } from "../../web/worker/field-at.ts";
-import { levelsOf } from "../../web/worker/field-levels.ts";
+import { levelOfRoutes, levelsOf } from "../../web/worker/field-levels.ts";
 import { answerLattice } from "../../web/worker/lattice.ts";
 
 const knot = 1852 / 3600;
@@ -58,6 +59,36 @@ describe("the fields at a place", () => {
     const low = field("wind", 1, 1, { height: Float64Array.of(10, 50) });
     const high = field("wind", 1, 1, { height: Float64Array.of(50, 100) });
     expect(levelsOf([low, high, field("current", 1, 1)])).toEqual([10, 50, 100]);
+  });
+});
+
+describe("the level that the chart begins with", () => {
+  const routeAt = (...heights: (number | null)[]): PreparedRoute =>
+    prepareRoute(
+      {
+        name: "Route",
+        waypoints: heights.map((height_m, at) => ({
+          name: `${at}`,
+          lat: 50,
+          lon: at,
+          path: "rhumb",
+          speed_m_s: null,
+          height_m,
+          stay_s: 0,
+        })),
+      },
+      [],
+    );
+
+  test("is the one nearest to where the routes run most of their way", () => {
+    const levels = [10, 60, 120];
+    expect(levelOfRoutes(levels, [routeAt(10, 120, 120, 120, 10)])).toBe(120);
+    expect(levelOfRoutes(levels, [routeAt(50, 50), routeAt(70, 70, 70)])).toBe(60);
+  });
+
+  test("is the lowest of routes without heights, and none where the fields have none", () => {
+    expect(levelOfRoutes([10, 60, 120], [routeAt(null, null)])).toBe(10);
+    expect(levelOfRoutes([], [routeAt(10, 10)])).toBeNull();
   });
 });
 

@@ -3,7 +3,7 @@ import { useEffect, useRef } from "preact/hooks";
 import { latText, lonText } from "../format/position-text.ts";
 import { inUnit, shownUnit } from "../format/units.ts";
 import type { PageState } from "../state/page-state.ts";
-import type { PageView } from "../state/page-view.ts";
+import { type PageView, shownLevel } from "../state/page-view.ts";
 import type { FieldAt } from "../worker/protocol.ts";
 import { type ChartSession, openChart } from "./chart-session.ts";
 import type { ReadPlace } from "./read-place.ts";
@@ -31,7 +31,8 @@ export function Chart({ page }: { readonly page: PageState }) {
   useEffect(() => {
     if (fields === undefined) return;
     void page.engine.levels().then((found) => {
-      levels.value = found;
+      levels.value = found.heights;
+      page.view.routesLevel.value = found.ofRoutes;
     });
   }, [fields, page, levels]);
 
@@ -114,7 +115,7 @@ export function Chart({ page }: { readonly page: PageState }) {
 function LevelChoice({ view, levels }: { readonly view: PageView; readonly levels: readonly number[] }) {
   if (levels.length < 2) return null;
   const unit = shownUnit(view.units.value, "height");
-  const level = view.level.value ?? levels[0] ?? 0;
+  const level = shownLevel(view) ?? levels[0] ?? 0;
   return (
     <label class="chart-shade">
       Height{" "}

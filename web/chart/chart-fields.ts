@@ -5,6 +5,7 @@ import { withinTurn } from "../format/position-text.ts";
 import { shownUnit } from "../format/units.ts";
 import { latestWins, SUPERSEDED } from "../state/latest-wins.ts";
 import { type PageState, shownInstant } from "../state/page-state.ts";
+import { shownLevel } from "../state/page-view.ts";
 import type { FieldAt, Lattice, LatticeQuestion, PlaceQuestion } from "../worker/protocol.ts";
 import { createCoverage } from "./coverage-layer.ts";
 import { type Area, areasOf } from "./field-areas.ts";
@@ -32,7 +33,7 @@ function showRole(map: L.Map, page: PageState, role: FieldRole): () => void {
     };
     if (!shown || instant === null) put(null);
     else
-      void ask(latticeFor(map, role, instant, page.view.level.value, false)).then(
+      void ask(latticeFor(map, role, instant, shownLevel(page.view), false)).then(
         (found) => found && put(found),
       );
   });
@@ -53,7 +54,7 @@ function showShading(map: L.Map, page: PageState, limit: Signal<number | null>):
       put(null);
       return;
     }
-    const step = latticeFor(map, role, instant, page.view.level.value, true);
+    const step = latticeFor(map, role, instant, shownLevel(page.view), true);
     const { si } = shownUnit(page.view.units.value, "speed");
     void ask(step).then((lattice) => lattice && put({ lattice, step, limit_m_s: latticeLimit(lattice, si) }));
   });
@@ -79,7 +80,7 @@ export function readFields(
   return effect(() => {
     const place = read.value;
     const instant = shownInstant(page);
-    const height_m = page.view.level.value;
+    const height_m = shownLevel(page.view);
     const { estimate } = page.answers.answer.value;
     if (place === null || instant === null || estimate === null) {
       under.value = [];

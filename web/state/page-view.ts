@@ -49,8 +49,10 @@ export interface PageView {
   readonly adding: Signal<boolean>;
   /** Which field is shaded by speed on the chart. */
   readonly shading: Signal<"none" | "wind" | "current">;
-  /** Height of the fields on the chart, m above the surface; `null` for their lowest level. */
+  /** Height of the fields on the chart that was chosen, m above the surface; `null` for the routes'. */
   readonly level: Signal<number | null>;
+  /** The level of the fields that is nearest to the routes; `null` while none is known. */
+  readonly routesLevel: Signal<number | null>;
   readonly routePart: Signal<RoutePart>;
   /** Keys of the leg table's columns that are left out. */
   readonly hiddenColumns: Signal<readonly string[]>;
@@ -84,6 +86,7 @@ export function createPageView(clock: ReadonlySignal<Clock> = signal<Clock>("min
     adding: signal(false),
     shading: signal<"none" | "wind" | "current">("none"),
     level: signal<number | null>(null),
+    routesLevel: signal<number | null>(null),
     routePart: signal<RoutePart>("table"),
     hiddenColumns: signal<readonly string[]>(["from", "final", "crab", "still"]),
     legUnits: signal<LegUnits>({}),
@@ -93,4 +96,9 @@ export function createPageView(clock: ReadonlySignal<Clock> = signal<Clock>("min
     newer: signal<(() => Promise<void>) | null>(null),
     announcement: signal(""),
   };
+}
+
+/** The height of the fields on the chart, m above the surface; `null` for their lowest level. */
+export function shownLevel({ level, routesLevel }: PageView): number | null {
+  return level.value ?? routesLevel.value;
 }

@@ -13,6 +13,8 @@ export interface Estimator {
   answered(): Promise<ReportInput | null>;
   /** The pace of the estimate last made. */
   pace(): ReportInput["pace"] | null;
+  /** The routes of the estimate last made. */
+  prepared(): PlanRead["prepared"];
 }
 
 export function createEstimator(reader: PlanReader): Estimator {
@@ -54,6 +56,7 @@ export function createEstimator(reader: PlanReader): Estimator {
       return { estimate: await decidedEstimate(read, found), routes, craft, pace };
     },
     pace: () => last?.read.input.pace ?? null,
+    prepared: () => last?.read.prepared ?? [],
   };
 }
 

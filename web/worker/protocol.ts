@@ -276,8 +276,8 @@ export interface Worker {
   lattice(question: LatticeQuestion): Promise<Lattice>;
   /** The fields of the plan last estimated, at a place. */
   fieldsAt(question: PlaceQuestion): Promise<readonly FieldAt[]>;
-  /** Heights at which those fields have levels, m, ascending. */
-  levels(): readonly number[];
+  /** Heights at which those fields have levels, m, ascending, and the one nearest to the routes last estimated. */
+  levels(): { readonly heights: readonly number[]; readonly ofRoutes: number | null };
   coastTile(z: number, x: number, y: number, detail: CoastDetail): Promise<CoastTile>;
   /** Resolves once the fine coast is there to be drawn. */
   loadFineCoast(): Promise<void>;

@@ -4,7 +4,7 @@ import { createCoastShelf } from "./coast-shelf.ts";
 import type { LandTopology } from "./core.ts";
 import type { Deciding } from "./deciding.ts";
 import { createEstimator } from "./estimator.ts";
-import { levelsOf } from "./field-levels.ts";
+import { levelOfRoutes, levelsOf } from "./field-levels.ts";
 import { createFieldShelf } from "./field-shelf.ts";
 import { createFileShelf } from "./file-shelf.ts";
 import { createLandShelf } from "./land-shelf.ts";
@@ -66,7 +66,10 @@ const worker: Worker = {
   craftText: async (craft) => (await import("./document-text.ts")).craftText(craft),
   lattice: async (question) => handLattice(answerLattice(fields.current(), question)),
   fieldsAt: async (question) => (await import("./field-at.ts")).fieldsAt(fields.current(), question),
-  levels: () => levelsOf(fields.current()),
+  levels() {
+    const heights = levelsOf(fields.current());
+    return { heights, ofRoutes: levelOfRoutes(heights, estimator.prepared()) };
+  },
   coastTile: async (z, x, y, detail) => handTile(await coast.tile(z, x, y, detail)),
   async loadFineCoast() {
     await coast.load("10m");
