@@ -58,7 +58,7 @@ export function HeatMap({ page, filled, measure, rows: choice }: HeatMapProps) {
         {rows.map((row) => (
           <div key={`${row.route} ${row.speed}`} style={{ height: `${ROW_HEIGHT}px` }}>
             <Swatch route={routeOnPage(page, row.route)} />
-            <span>{row.name}</span>
+            <span title={row.name}>{row.name}</span>
           </div>
         ))}
       </div>
