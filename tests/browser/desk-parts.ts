@@ -33,3 +33,9 @@ export async function findings(page: Page, route: string): Promise<string> {
   const row = page.locator(".ledger-table tbody").filter({ hasText: route });
   return (await row.locator("tr").first().locator("td").last().textContent()) ?? "";
 }
+
+/** What the ledger says of how sure a route's reserve is; nothing where it says nothing. */
+export async function sureness(page: Page, route: string): Promise<string> {
+  const row = page.locator(".ledger-table tbody").filter({ hasText: route });
+  return (await row.locator(".sure-line").allTextContents()).join(" ");
+}

@@ -1,16 +1,16 @@
 import type { Page } from "playwright-core";
 import { expect, test } from "vitest";
 import { expectAccessible } from "./audit.ts";
-import { figure, findings, openPart, showPane } from "./desk-parts.ts";
+import { findings, openPart, showPane, sureness } from "./desk-parts.ts";
 import { visit } from "./visit.ts";
 
 test("a stated error gives a probability that the reserve holds, a larger one another, and undo takes both away", async () => {
   const { page } = await visit();
   await page.getByRole("button", { name: "West about" }).first().click();
   await openPart(page, "How sure");
-  expect(await figure(page, "West about", "Left")).not.toMatch(/holds/);
+  expect(await sureness(page, "West about")).not.toMatch(/holds/);
   await page.getByRole("button", { name: "State an error of the current" }).click();
-  await expect.poll(() => figure(page, "West about", "Left")).toMatch(/holds: \d\d %/);
+  await expect.poll(() => sureness(page, "West about")).toMatch(/holds: \d\d %/);
   const first = await probability(page);
   const gauges = page.getByRole("table", { name: /^Left on arrival/ });
   const band = await gauges.getByRole("row", { name: /West about/ }).textContent();
@@ -28,7 +28,7 @@ test("a stated error gives a probability that the reserve holds, a larger one an
   await page.getByRole("button", { name: "Undo" }).click();
   await expect.poll(() => probability(page)).toBe(first);
   await page.getByRole("button", { name: "Undo" }).click();
-  await expect.poll(() => figure(page, "West about", "Left")).not.toMatch(/holds/);
+  await expect.poll(() => sureness(page, "West about")).not.toMatch(/holds/);
 });
 
 test("an error that is none is told in a sentence, and what it was comes back with undo", async () => {
@@ -105,10 +105,10 @@ test("on a phone what-ifs are cards with their consequences below, and the ledge
   }));
   expect(wide).toBeLessThanOrEqual(shown);
   await showPane(page, "Ledger");
-  expect(await figure(page, "West about", "Left")).toMatch(/holds/);
+  expect(await sureness(page, "West about")).toMatch(/holds/);
 });
 
 /** That the reserve holds west about, per cent. */
 async function probability(page: Page): Promise<number> {
-  return Number(/holds: (\d+(?:\.\d)?) %/.exec(await figure(page, "West about", "Left"))?.[1]);
+  return Number(/holds: (\d+(?:\.\d)?) %/.exec(await sureness(page, "West about"))?.[1]);
 }

@@ -200,7 +200,10 @@ describe("the ledger", () => {
     page.store.select({ route: 1, waypoint: null });
     render(<Ledger page={page} />);
     expect(await screen.findByRole("rowheader", { name: "foul tide" })).toBeTruthy();
-    expect(screen.getAllByText(/holds: .*%/).length).toBe(3);
+    expect(screen.getAllByText(/^Reserve holds: [<>]? ?\d.* % by the stated error$/).length).toBe(3);
+    const findings = screen.getByRole("region", { name: /^Findings of / });
+    const whatIfs = screen.getByRole("table", { name: /^What if: / });
+    expect(findings.compareDocumentPosition(whatIfs) & Node.DOCUMENT_POSITION_FOLLOWING).toBeTruthy();
   });
 });
 

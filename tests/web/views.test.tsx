@@ -1,6 +1,7 @@
 // @vitest-environment happy-dom
 import { cleanup, fireEvent, render, screen, within } from "@testing-library/preact";
 import { afterEach, beforeAll, describe, expect, test, vi } from "vitest";
+import { durationText } from "../../web/format/time-text.ts";
 import { Ledger } from "../../web/ledger/Ledger.tsx";
 import { LegTable } from "../../web/leg-table/LegTable.tsx";
 import { legColumns } from "../../web/leg-table/leg-columns.ts";
@@ -50,6 +51,40 @@ describe("the ledger", () => {
       const name = within(mark.closest("tr") as HTMLElement).getByRole("rowheader").textContent;
       expect(routes.find((route) => route?.name === name)?.status).not.toBe("stop");
     }
+  });
+
+  test("explains the mark of the best only where a figure has it", async () => {
+    const { estimator } = demoEngine("islands");
+    const page = createPageState(plan, { estimate: estimator.estimate } as unknown as Engine);
+    await page.answers.ask(plan);
+    const { container, rerender } = render(<Ledger page={page} />);
+    expect(container.querySelector(".key.best")).not.toBeNull();
+    page.store.edit("Ask for much", (old) => ({ ...old, reserve: "99 %" }));
+    await page.answers.ask(page.store.plan.value);
+    rerender(<Ledger page={page} />);
+    expect(page.answers.answer.value.routes.every((route) => route?.status === "stop")).toBe(true);
+    expect(container.querySelector(".key.best")).toBeNull();
+  });
+
+  test("says of the times whether stays are among them, in the ledger and below the leg table", async () => {
+    const { plan: survey, estimator } = demoEngine("survey");
+    const page = createPageState(survey, { estimate: estimator.estimate } as unknown as Engine);
+    await page.answers.ask(survey);
+    const { container } = render(
+      <>
+        <Ledger page={page} />
+        <LegTable page={page} />
+      </>,
+    );
+    screen.getByRole("columnheader", { name: "Time with stays" });
+    const { time_s, stay_s } = page.answers.answer.value.routes[0]?.totals ?? {};
+    expect(stay_s).toBe(240);
+    expect(container.querySelector(".ledger-table [data-label='Time with stays']")?.textContent).toBe(
+      durationText((time_s ?? 0) + 240, "second"),
+    );
+    expect(container.querySelector(".leg-totals")?.textContent).toContain(
+      `${durationText(time_s ?? 0, "second")} under way and 4 min 00 of stays, `,
+    );
   });
 
   test("shows differences to a chosen route on demand", async () => {

@@ -1,9 +1,6 @@
 import type { Finding } from "../core.ts";
-import { LazyPart } from "../shell/LazyPart.tsx";
 import type { PageState } from "../state/page-state.ts";
 import { SeverityShape } from "./StatusMark.tsx";
-
-const loadTurnBackList = async () => (await import("../turn-back/TurnBackList.tsx")).TurnBackList;
 
 /** The chosen route's findings in words, the gravest first; each leads to its place. */
 export function FindingList({ page }: { readonly page: PageState }) {
@@ -31,12 +28,6 @@ export function FindingList({ page }: { readonly page: PageState }) {
             </li>
           ))}
         </ul>
-      )}
-      {route.turnBack !== undefined && (
-        <>
-          <h3>Turning back</h3>
-          <LazyPart load={loadTurnBackList} page={page} at={chosen} route={route} />
-        </>
       )}
     </section>
   );

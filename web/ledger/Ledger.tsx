@@ -14,6 +14,7 @@ import { type Best, bestOf } from "./ledger-best.ts";
 import { StatusMark } from "./StatusMark.tsx";
 import { sureWords } from "./sure-words.ts";
 
+const loadTurnBackList = async () => (await import("../turn-back/TurnBackList.tsx")).TurnBackList;
 const loadWhatIfTable = async () => (await import("../spread/WhatIfTable.tsx")).WhatIfTable;
 
 /** A row a route: what it costs, what is left, what to worry about; beside the advisory, since here is where one decides. */
@@ -26,6 +27,7 @@ export function Ledger({ page }: { readonly page: PageState }) {
   const best = bestOf(routes);
   const end = barsEnd(routes);
   const zone = view.zone.value;
+  const time = routes.some((route) => route && route.totals.stay_s > 0) ? "Time with stays" : "Time";
   return (
     <section class="pane ledger" data-pane="ledger" aria-labelledby="ledger-title">
       <header class="pane-head">
@@ -66,7 +68,7 @@ export function Ledger({ page }: { readonly page: PageState }) {
             <tr>
               <th scope="col">Route</th>
               <th scope="col">Arrival {zone === "UTC" ? "UTC" : zoneText(plan.departure, zone)}</th>
-              <th scope="col">Time</th>
+              <th scope="col">{time}</th>
               <th scope="col">Use</th>
               <th scope="col">Left</th>
               <th scope="col">Findings</th>
@@ -82,22 +84,39 @@ export function Ledger({ page }: { readonly page: PageState }) {
               base={base}
               best={best}
               end={end}
+              time={time}
             />
           ))}
         </table>
-        <BarLegend />
-        <ChosenWhatIfs page={page} />
+        <BarLegend hasBest={Object.values(best).some(({ size }) => size > 0)} />
       </div>
       <FindingList page={page} />
+      <ChosenParts page={page} />
       <Advisory />
     </section>
   );
 }
 
-function ChosenWhatIfs({ page }: { readonly page: PageState }) {
-  const route = page.routes.value[page.store.selection.value.route] ?? null;
-  if (route === null || (route.whatIf ?? []).length === 0) return null;
-  return <LazyPart load={loadWhatIfTable} page={page} route={route} />;
+/** What was decided on top of the chosen route's estimate, below its findings. */
+function ChosenParts({ page }: { readonly page: PageState }) {
+  const at = page.store.selection.value.route;
+  const route = page.routes.value[at];
+  if (!route) return null;
+  return (
+    <>
+      {(route.whatIf ?? []).length > 0 && (
+        <div class="scroll">
+          <LazyPart load={loadWhatIfTable} page={page} route={route} />
+        </div>
+      )}
+      {route.turnBack !== undefined && (
+        <section class="findings" aria-label={`Turning back on ${route.name}`}>
+          <h3>Turning back</h3>
+          <LazyPart load={loadTurnBackList} page={page} at={at} route={route} />
+        </section>
+      )}
+    </>
+  );
 }
 
 interface LedgerRowProps {
@@ -109,9 +128,11 @@ interface LedgerRowProps {
   readonly best: Best;
   /** End of the longest bar, s. */
   readonly end: number;
+  /** What the column of times is called. */
+  readonly time: string;
 }
 
-function LedgerRow({ page, at, name, route, base, best, end }: LedgerRowProps) {
+function LedgerRow({ page, at, name, route, base, best, end, time }: LedgerRowProps) {
   const { store, view } = page;
   const chosen = store.selection.value.route === at;
   const against = base !== null && base !== route ? base : null;
@@ -137,7 +158,7 @@ function LedgerRow({ page, at, name, route, base, best, end }: LedgerRowProps) {
                 ? "not reached"
                 : clockSince(route.arrival, route.departure, view.zone.value, view.clock.value)}
             </Cell>
-            <Cell label="Time" best={false} difference={null}>
+            <Cell label={time} best={false} difference={null}>
               {durationText(wholeTime(route), view.clock.value)}
             </Cell>
             <Cell label="Use" best={best.use.has(at)} difference={amountDifference(route, against, "use")}>
@@ -147,7 +168,6 @@ function LedgerRow({ page, at, name, route, base, best, end }: LedgerRowProps) {
               label="Left"
               best={best.remaining.has(at)}
               difference={amountDifference(route, against, "remaining")}
-              sure={sureWords(route)}
             >
               {amountText(route.totals.remaining, route.storeUnit, route.usable)}
             </Cell>
@@ -161,6 +181,7 @@ function LedgerRow({ page, at, name, route, base, best, end }: LedgerRowProps) {
         <tr class="cost">
           <td colSpan={6}>
             <CostBar route={route} end={end} />
+            <SureLine route={route} />
           </td>
         </tr>
       )}
@@ -172,8 +193,6 @@ interface CellProps {
   readonly label: string;
   readonly best: boolean;
   readonly difference: string | null;
-  /** How sure it is that the reserve holds, by each source that says so. */
-  readonly sure?: readonly string[];
   readonly children: string;
 }
 
@@ -189,21 +208,27 @@ function Cell(props: CellProps) {
         props.children
       )}
       {props.difference !== null && <span class="difference">{props.difference}</span>}
-      {props.sure?.map((words) => (
-        <span key={words} class="difference">
-          <span class="unseen">reserve </span>
-          {words}
-        </span>
-      ))}
     </td>
   );
 }
 
-function BarLegend() {
+/** How sure it is that the reserve holds, by each source that says so. */
+function SureLine({ route }: { readonly route: DecidedRoute }) {
+  const words = sureWords(route);
+  return words === null ? null : <p class="sure-line">{words}</p>;
+}
+
+function BarLegend({ hasBest }: { readonly hasBest: boolean }) {
   return (
     <p class="bar-legend" aria-hidden="true">
       <span class="key still" /> still <span class="key along" /> along, against <span class="key cross" />{" "}
-      cross <span class="key gain" /> saved by a following flow <span class="key best" /> best
+      cross <span class="key gain" /> saved by a following flow
+      {hasBest && (
+        <>
+          {" "}
+          <span class="key best" /> best
+        </>
+      )}
     </p>
   );
 }

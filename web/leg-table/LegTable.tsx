@@ -105,8 +105,9 @@ export function LegTable({ page }: { readonly page: PageState }) {
       </section>
       <p class="leg-totals leg-part">
         {route.name}: {inUnit(route.totals.distance_m, distance)} {distance.symbol},{" "}
-        {durationText(route.totals.time_s, view.clock.value)} under way, {inUnit(route.totals.use, amount)}{" "}
-        {amount.symbol} used
+        {durationText(route.totals.time_s, view.clock.value)} under way
+        {route.totals.stay_s > 0 && ` and ${durationText(route.totals.stay_s, view.clock.value)} of stays`},{" "}
+        {inUnit(route.totals.use, amount)} {amount.symbol} used
       </p>
       <p class="advisory only-print">{ADVISORY}</p>
     </section>
