@@ -38,3 +38,16 @@ export async function longPress(page: Page, x: number, y: number): Promise<void>
   await page.waitForTimeout(700);
   await touch.send("Input.dispatchTouchEvent", { type: "touchEnd", touchPoints: [] });
 }
+
+/** Two fingers drawn apart about a place. */
+export async function pinchOut(page: Page, x: number, y: number): Promise<void> {
+  const touch = await page.context().newCDPSession(page);
+  const apart = (by: number) => [
+    { x: x - by, y },
+    { x: x + by, y },
+  ];
+  await touch.send("Input.dispatchTouchEvent", { type: "touchStart", touchPoints: apart(30) });
+  for (let by = 40; by <= 110; by += 10)
+    await touch.send("Input.dispatchTouchEvent", { type: "touchMove", touchPoints: apart(by) });
+  await touch.send("Input.dispatchTouchEvent", { type: "touchEnd", touchPoints: [] });
+}

@@ -38,6 +38,8 @@ export function createChartMap(element: HTMLElement, coast: TileSource, wantFine
   addPane(map, "graticule", 230);
   addPane(map, "field", 240);
 
+  addGestures(map);
+
   const coastline = new CoastlineLayer(coast, wantFine, {
     pane: "coast",
     maxNativeZoom: MAX_ZOOM,
@@ -66,6 +68,23 @@ export function createChartMap(element: HTMLElement, coast: TileSource, wantFine
     },
     fineCoastReady: () => coastline.refresh(),
   };
+}
+
+/** Ways to zoom that only some have hands for: two fingers, and a box drawn with the Shift key down. */
+function addGestures(map: L.Map): void {
+  const touch = async () => {
+    const { TouchZoom } = await import("leaflet/src/map/handler/Map.TouchZoom.js");
+    // A map made after the first has it from the start.
+    if (map.touchZoom === undefined) map.addHandler("touchZoom", TouchZoom);
+  };
+  const box = async () => {
+    const { BoxZoom } = await import("leaflet/src/map/handler/Map.BoxZoom.js");
+    if ((map.boxZoom as L.Handler | undefined) === undefined) map.addHandler("boxZoom", BoxZoom);
+  };
+  // Without a network there are other ways to zoom.
+  const ifThere = (gesture: () => Promise<void>) => void gesture().catch(() => undefined);
+  if (navigator.maxTouchPoints > 0) ifThere(touch);
+  map.once("mousemove", () => ifThere(box));
 }
 
 function addPane(map: L.Map, name: string, zIndex: number): void {

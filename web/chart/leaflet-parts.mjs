@@ -2,14 +2,11 @@
  * The parts of Leaflet that the chart uses, from its own modules: its bundle would bring every layer and control to the first
  * load, 10 kB more. The build reads this in place of "leaflet"; the types are the package's.
  */
-import "leaflet/src/layer/Tooltip.js";
 import "leaflet/src/layer/vector/Renderer.getRenderer.js";
 import "leaflet/src/map/handler/Map.DoubleClickZoom.js";
 import "leaflet/src/map/handler/Map.Drag.js";
 import "leaflet/src/map/handler/Map.Keyboard.js";
-import "leaflet/src/map/handler/Map.BoxZoom.js";
 import "leaflet/src/map/handler/Map.ScrollWheelZoom.js";
-import "leaflet/src/map/handler/Map.TouchZoom.js";
 import * as DomEvent from "leaflet/src/dom/DomEvent.js";
 import * as DomUtil from "leaflet/src/dom/DomUtil.js";
 

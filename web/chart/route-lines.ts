@@ -81,14 +81,7 @@ export class RouteLines {
     });
     hit.on("mousemove", (event) => this.gestures.point(index, event.latlng.lat, event.latlng.lng - shift));
     hit.on("mouseout", () => this.gestures.leave());
-    hit.bindTooltip(textElement(name), {
-      sticky: true,
-      direction: "top",
-      offset: [0, -8],
-      className: "route-tip",
-    });
-    // Chromium lets Tab stop at a path that listens for focus, as a tooltip's does; the ledger is the keyboard's way to a route.
-    hit.getElement()?.setAttribute("tabindex", "-1");
+    hit.once("mouseover", ({ latlng }) => void nameUnderPointer(hit, name, latlng));
   }
 
   /** A line moved to the right of its direction by so many px at this zoom. */
@@ -104,6 +97,25 @@ export class RouteLines {
   private add(line: L.LatLngTuple[], options: L.PolylineOptions): L.Polyline {
     return L.polyline(line, { smoothFactor: 0.5, ...options }).addTo(this.group);
   }
+}
+
+/** Shows a route's name from now on while the pointer is over its line, as it is now. */
+async function nameUnderPointer(hit: L.Polyline, name: string, at: L.LatLng): Promise<void> {
+  let isOver = true;
+  hit.once("mouseout", () => {
+    isOver = false;
+  });
+  try {
+    await import("leaflet/src/layer/Tooltip.js");
+  } catch {
+    // The ledger has the name too.
+    return;
+  }
+  const look: L.TooltipOptions = { sticky: true, direction: "top", offset: [0, -8], className: "route-tip" };
+  hit.bindTooltip(textElement(name), look);
+  // Chromium lets Tab stop at a path that listens for focus, as a tooltip's does; the ledger is the keyboard's way to a route.
+  hit.getElement()?.setAttribute("tabindex", "-1");
+  if (isOver) hit.openTooltip(at);
 }
 
 /** Whole turns that bring a route to the copy of the world in view. */

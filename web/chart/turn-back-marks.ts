@@ -1,5 +1,6 @@
 import { effect } from "@preact/signals";
 import * as L from "leaflet";
+import "leaflet/src/layer/Tooltip.js";
 import { placeAtDistance } from "../state/along-route.ts";
 import { addAlternate } from "../state/decide-edits.ts";
 import type { PageState } from "../state/page-state.ts";
