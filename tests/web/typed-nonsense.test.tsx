@@ -132,6 +132,6 @@ describe("a departure with seconds", () => {
     fireEvent.blur(field);
     expect(field.value).toBe(before);
     page.store.edit("Change departure", (plan) => ({ ...plan, departure: "at dawn" }));
-    await screen.findByLabelText("Departure at dawn");
+    expect((await screen.findByLabelText<HTMLInputElement>("Departure at dawn")).step).toBe("60");
   });
 });

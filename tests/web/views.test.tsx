@@ -76,10 +76,10 @@ describe("the ledger", () => {
         <LegTable page={page} />
       </>,
     );
-    screen.getByRole("columnheader", { name: "Time with stays" });
+    screen.getByRole("columnheader", { name: "Time + stays" });
     const { time_s, stay_s } = page.answers.answer.value.routes[0]?.totals ?? {};
     expect(stay_s).toBe(240);
-    expect(container.querySelector(".ledger-table [data-label='Time with stays']")?.textContent).toBe(
+    expect(container.querySelector(".ledger-table [data-label='Time + stays']")?.textContent).toBe(
       durationText((time_s ?? 0) + 240, "second"),
     );
     expect(container.querySelector(".leg-totals")?.textContent).toContain(

@@ -27,7 +27,7 @@ export function Ledger({ page }: { readonly page: PageState }) {
   const best = bestOf(routes);
   const end = barsEnd(routes);
   const zone = view.zone.value;
-  const time = routes.some((route) => route && route.totals.stay_s > 0) ? "Time with stays" : "Time";
+  const time = routes.some((route) => route && route.totals.stay_s > 0) ? "Time + stays" : "Time";
   return (
     <section class="pane ledger" data-pane="ledger" aria-labelledby="ledger-title">
       <header class="pane-head">

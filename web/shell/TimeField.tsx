@@ -60,6 +60,6 @@ export function TimeField({ label, value, zone, at, onTime, onClear, faultId }: 
 
 /** Whole minutes, but for a time of the plan's that is finer, s. */
 function stepOf(instant: number): number {
-  if (instant % 1000 !== 0) return 0.001;
-  return instant % 60_000 === 0 ? 60 : 1;
+  if (instant % 1000 > 0) return 0.001;
+  return instant % 60_000 > 0 ? 1 : 60;
 }

@@ -31,7 +31,7 @@ export function WhatIfTable({ page, route }: { readonly page: PageState; readonl
         <tr>
           <th scope="col">What if</th>
           <th scope="col">Arrival</th>
-          <th scope="col">{route.totals.stay_s > 0 ? "Time with stays" : "Time"}</th>
+          <th scope="col">{route.totals.stay_s > 0 ? "Time + stays" : "Time"}</th>
           <th scope="col">Use {amount.symbol}</th>
           <th scope="col">Left {amount.symbol}</th>
           <th scope="col">Comes to</th>
