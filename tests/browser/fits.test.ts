@@ -1,5 +1,6 @@
 import type { Page } from "playwright-core";
 import { expect, test } from "vitest";
+import { expectAccessible } from "./audit.ts";
 import { openPart, showPane } from "./desk-parts.ts";
 import { openDemo, visit } from "./visit.ts";
 
@@ -68,18 +69,44 @@ test("a stop's reason is in sight beside decisions on a wide screen", async () =
 test("the names of a window's rows are whole on a wide screen and on a phone", async () => {
   for (const size of [{}, { width: 360, height: 740, touch: true }]) {
     const { page } = await visit(size);
-    await openDemo(page, "Ocean: when, and how sure", "ocean-decide");
-    await openPart(page, "Departures");
-    const names = page.locator(".heat-names span[title]");
-    await names.first().waitFor();
-    const cut = await names.evaluateAll((spans) =>
-      spans
-        .filter(
-          ({ scrollWidth, clientWidth, scrollHeight, clientHeight }) =>
-            scrollWidth > clientWidth || scrollHeight > clientHeight + 1,
-        )
-        .map(({ textContent }) => textContent),
-    );
-    expect(cut).toEqual([]);
+    for (const [entry, name] of [
+      ["Ocean: when, and how sure", "ocean-decide"],
+      ["Drone: when, and how sure", "survey-decide"],
+    ] as const) {
+      await openDemo(page, entry, name);
+      await openPart(page, "Departures");
+      const names = page.locator(".heat-names span[title]");
+      await names
+        .filter({ hasText: name === "ocean-decide" ? "Great circle" : "High" })
+        .first()
+        .waitFor();
+      const cut = await names.evaluateAll((spans) =>
+        spans
+          .filter(
+            ({ scrollWidth, clientWidth, scrollHeight, clientHeight }) =>
+              scrollWidth > clientWidth || scrollHeight > clientHeight + 1,
+          )
+          .map(({ textContent }) => textContent),
+      );
+      expect(cut).toEqual([]);
+    }
   }
+});
+
+test("what is wrong with a plan is in sight of the field that says it, on a phone too", async () => {
+  const { page } = await visit({ width: 360, height: 740, touch: true });
+  await openDemo(page, "Workboat: when, and how sure", "islands-decide");
+  await openPart(page, "How sure");
+  const factor = page.getByLabel("Wind × of what-if 1");
+  await factor.fill("strong");
+  await factor.press("Enter");
+  const told = page.locator(".decide").getByRole("alert");
+  await told.waitFor();
+  expect(await told.textContent()).toBe(
+    '"Wind ×" of what-if 1 takes a number without a unit; found "strong"',
+  );
+  expect(await factor.inputValue()).toBe("strong");
+  expect(await factor.getAttribute("aria-invalid")).toBe("true");
+  await page.getByText("Working it out").waitFor({ state: "hidden" });
+  await expectAccessible(page, "a what-if that cannot be read");
 });

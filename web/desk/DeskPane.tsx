@@ -23,8 +23,9 @@ const TITLES: Record<Question, string> = {
 
 /** One of the questions that a decision asks, on the desk in place of the legs. */
 export function DeskPane({ page }: { readonly page: PageState }) {
-  const { desk } = page;
+  const { desk, answers } = page;
   const part = desk.part.value;
+  const { fault } = answers.answer.value;
   if (part === "legs") return null;
   return (
     <section
@@ -37,6 +38,12 @@ export function DeskPane({ page }: { readonly page: PageState }) {
       <DeskTabs page={page} legs={false} />
       {/* biome-ignore lint/a11y/noNoninteractiveTabindex: what scrolls must be reached by keyboard (WCAG 2.1.1) */}
       <section class="scroll desk-body" aria-label={`${TITLES[part]}, in full`} tabIndex={0}>
+        {/* Where neither the ledger nor the plan's bar is beside it; two of the questions say of themselves what is wrong. */}
+        {fault !== null && (part === "turn-back" || part === "sure") && (
+          <p class="fault phone-fault" role="alert">
+            {fault}
+          </p>
+        )}
         <LazyPart page={page} load={LOADS[part]} />
       </section>
       <label class="desk-print">

@@ -15,6 +15,7 @@ export function SureView({ page }: { readonly page: PageState }) {
   const routes = page.routes.value;
   const chosen = routes[store.selection.value.route] ?? null;
   const pending =
+    page.answers.answer.value.fault === null &&
     wantsDecisions(page.shown.value, page.answers.answer.value.ensemble) &&
     decisions.decided.value?.plan !== page.shown.value;
   const isSpread = routes.some((route) => route?.spread);

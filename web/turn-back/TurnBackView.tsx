@@ -11,7 +11,9 @@ export function TurnBackView({ page }: { readonly page: PageState }) {
   const routes = page.routes.value;
   const { route: chosen } = page.store.selection.value;
   const turn = routes[chosen]?.turnBack;
-  const isBehind = turn !== undefined && page.decisions.decided.value?.plan !== page.shown.value;
+  const { fault, ensemble } = page.answers.answer.value;
+  const isBehind =
+    fault === null && turn !== undefined && page.decisions.decided.value?.plan !== page.shown.value;
   return (
     <div class="turn-back-view">
       <AlternateList page={page} isBehind={isBehind} />
@@ -40,9 +42,11 @@ export function TurnBackView({ page }: { readonly page: PageState }) {
             </h3>
             {route.turnBack === undefined ? (
               <p class="quiet">
-                {wantsDecisions(page.shown.value, page.answers.answer.value.ensemble)
-                  ? "Working it out again…"
-                  : "Working it out…"}
+                {fault !== null
+                  ? "Not worked out: the plan has a fault."
+                  : wantsDecisions(page.shown.value, ensemble)
+                    ? "Working it out again…"
+                    : "Working it out…"}
               </p>
             ) : (
               <TurnBackList page={page} at={at} route={route} />
