@@ -47,10 +47,10 @@ describe("the mean ground speed over a stretch", () => {
     }
   });
 
-  test("is that of a thousand steps of Runge and Kutta's from that moment on, but for a few in a hundred", () => {
+  test("is that of a thousand steps of Runge and Kutta's from that moment on, but for a few in a thousand", () => {
     const next = numbers(11);
     const errors: number[] = [];
-    for (let n = 0; n < 1500; n += 1) {
+    for (let n = 0; n < 4000; n += 1) {
       const { along, cross } = randomMedium(next, 10 ** (-1.65 + 1.35 * next()) * SPEED);
       const way = { length: 8000, perSecond: 1e-4, share: 0.45 * (1 + next()) };
       const mean = isWithinReach(along, cross) ? meanOver(along, cross, way) : null;
@@ -58,9 +58,18 @@ describe("the mean ground speed over a stretch", () => {
       errors.push(Math.abs(mean.time(way.share) / marched(along, cross, way) - 1));
     }
     errors.sort((a, b) => a - b);
-    expect(errors.length).toBeGreaterThan(120);
-    expect(errors[Math.floor(0.97 * errors.length)]).toBeLessThan(1e-11);
-    expect(errors.at(-1)).toBeLessThan(1.2e-10);
+    expect(errors.length).toBeGreaterThan(300);
+    expect(errors[Math.floor(0.99 * errors.length)]).toBeLessThan(1e-11);
+    expect(errors.at(-1)).toBeLessThan(2e-11);
+  });
+
+  test("is not taken for smoother than it is where the ground speed would end not far beyond the valid times", () => {
+    // The speed rises from 4.8 to 6.4 m/s: it would end 7 half intervals before their middle. Since it varies along the stretch, its mean has
+    // a little of the pole there: after four coefficients that fall by 10 or more each, the last two are 2e-8 and 5e-9, and the next is not less.
+    const along: Component = (x, share) => 0.02 * x - 4.703894775378671 + 1.143584664929955 * share;
+    const cross: Component = (x, share) => 0.02 * x - 2.983077339763165 + 2.814497253935162 * share;
+    const way = { length: 2221.9368040412373, perSecond: 0.0001045934077395295 };
+    expect(meanOver(along, cross, way)).toBeNull();
   });
 
   test("does not depend on what was laid before", () => {
