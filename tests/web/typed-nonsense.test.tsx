@@ -2,6 +2,7 @@
 import { cleanup, fireEvent, render, screen, waitFor } from "@testing-library/preact";
 import { afterEach, describe, expect, test } from "vitest";
 import { Ledger } from "../../web/ledger/Ledger.tsx";
+import { ClockBar } from "../../web/shell/ClockBar.tsx";
 import { PlanBar } from "../../web/shell/PlanBar.tsx";
 import { ErrorFields } from "../../web/spread/ErrorFields.tsx";
 import { WhatIfList } from "../../web/spread/WhatIfList.tsx";
@@ -117,6 +118,8 @@ describe("a departure with seconds", () => {
     const page = await shown({ departure: "2027-05-04T11:00:30Z" });
     const field = screen.getByLabelText<HTMLInputElement>("Departure Tue 4 May 2027 11:00:30 UTC");
     expect([field.value, field.step]).toEqual(["2027-05-04T11:00:30", "1"]);
+    render(<ClockBar page={page} />);
+    expect(screen.getByRole("slider").getAttribute("aria-valuetext")).toBe("Tue 4 May 11:00:30 UTC");
     field.focus();
     fireEvent.blur(field);
     expect(page.store.plan.value.departure).toBe("2027-05-04T11:00:30Z");

@@ -16,7 +16,7 @@ export function ClockBar({ page }: { readonly page: PageState }) {
   const shown = Math.min(Math.max(instant, span.from), span.to);
   const coarse = span.to - span.from > 24 * 60 * MINUTE ? 10 * MINUTE : MINUTE;
   const step = clock === "second" ? SHORT_STEP : coarse;
-  const text = clockText(shown, zone, true, clock);
+  const text = clockText(shown, zone, true, shown % MINUTE === 0 ? clock : "second");
   return (
     <div class="clock-bar">
       <button

@@ -47,7 +47,8 @@ export function WhatIfTable({ page, route }: { readonly page: PageState; readonl
                 : clockSince(row.arrival, route.departure, zone.value, clock.value)}
               {missWords(row.arrivalMiss_s)}
             </td>
-            <td>{durationText(row.passage_s)}</td>
+            {/* Not torn apart at the end of a line. */}
+            <td>{durationText(row.passage_s).replaceAll(" ", "\u00A0")}</td>
             <td>{inUnit(row.use, amount)}</td>
             <td>{inUnit(row.remaining, amount)}</td>
             <td>
