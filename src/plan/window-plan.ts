@@ -86,8 +86,8 @@ function answerWindow(
 ): WindowAnswer {
   const { whatIfs = [], errors = [], confidence } = plan;
   const asked = { whatIfs, errors, members, confidence };
-  const prepared = prepareRoutes({ ...input, every_s: window.every_s });
-  const sweep = makeSweep(prepared, input, plan.arrive ?? null, asked);
+  // At the step of the plan, whatever is asked beside it: each cell is the plan's own estimate, to the last bit.
+  const sweep = makeSweep(prepareRoutes(input), input, plan.arrive ?? null, asked);
   const ofArriveBy = arriveBy === undefined ? { file, key: "window.arriveBy" } : { key: "arriveBy" };
   const inTime = toldOf(ofArriveBy, () => latestInTime(sweep, window));
   const cells = [...windowCells(sweep, window)];

@@ -18,6 +18,20 @@ const CALM: readonly Change[] = [
 const request = { file: "run.plan.json", open: opener() };
 const textOf = (...changes: readonly Change[]) => JSON.stringify(changed(SUPPLY_RUN, ...CALM, ...changes));
 
+/** A current around the supply run that turns in 2 days, every 12 hours. */
+function turningStream(): string {
+  const rows = [0, 12, 24, 36, 48].flatMap((hour) =>
+    [57, 58, 59].flatMap((lat) =>
+      [-8, -7, -6].map((lon) => {
+        const time = new Date(parseTime("2027-05-04T00:00Z") + hour * 3600_000).toISOString();
+        const turn = (Math.PI * hour) / 24 + lat + lon;
+        return `${time},${lat},${lon},${Math.sin(turn).toFixed(3)},${Math.cos(turn).toFixed(3)}`;
+      }),
+    ),
+  );
+  return ["time,lat,lon,u,v", ...rows].join("\n");
+}
+
 describe("the key window of a plan", () => {
   test("is read into SI units", async () => {
     const plan = await read(changed(SUPPLY_RUN, ["window", { ...WINDOW, speeds: ["8 kn", "10kn"] }]));
@@ -193,6 +207,29 @@ describe("a plan's window worked out", () => {
     for (const cell of cells)
       expect(windowCell(prepared, conditions, Date.parse(cell.departure), null)).toEqual(cell);
   });
+
+  test.each([
+    ["of the plan", { ...WINDOW, every: "1 min" }, {}],
+    ["beside the plan", undefined, { ...WINDOW, every: "1 min" }],
+    ["with a step in place of the plan's", { ...WINDOW, every: "2 h" }, { every: "1 min" }],
+  ])(
+    "has the cells of the plan's own estimates where many departures lie between valid times: %s",
+    async (_, window, beside) => {
+      const text = textOf(
+        ["craft.windage", undefined],
+        ["fields", [{ role: "current", file: "sound-current.csv" }]],
+        ["window", window],
+      );
+      const open = opener({ "sound-current.csv": turningStream() });
+      const { cells, summary } = await windowPlan(text, { file: "run.plan.json", open, ...beside });
+      expect([cells.length, summary.possible]).toEqual([361, 361]);
+      for (const cell of cells.filter((_cell, n) => n % 30 === 7)) {
+        const asked = { file: "run.plan.json", open, departure: cell.departure };
+        const route = (await estimatePlan(text, asked)).estimate.routes[0];
+        expect([cell.time_s, cell.use]).toEqual([route?.totals.time_s, route?.totals.use]);
+      }
+    },
+  );
 
   test("takes the parts given beside the plan in place of the plan's", async () => {
     const asked = { ...request, to: "2027-05-04T07:00Z", every: "20min", speeds: ["6kn", "8 kn"] };
