@@ -35,6 +35,17 @@ describe("the worker's estimate", () => {
     expect(await estimator.estimate(plan)).toEqual(first);
   });
 
+  test("of a plan read again has its prepared routes, so that nothing is drawn anew; another window's step alone leaves their legs", async () => {
+    const { plan, reader } = demoEngine("islands-decide");
+    const first = await reader.read(plan);
+    const again = await reader.read({ ...plan, title: "Another" });
+    expect(first.prepared.map(({ every_s }) => every_s)).toEqual(first.prepared.map(() => 3600));
+    expect(again.prepared.every((route, n) => route === first.prepared[n])).toBe(true);
+    const denser = await reader.read({ ...plan, window: { ...plan.window, every: "1 min" } } as typeof plan);
+    expect(denser.prepared.map(({ every_s }) => every_s)).toEqual(denser.prepared.map(() => 60));
+    expect(denser.prepared.every((route, n) => route.legs === first.prepared[n]?.legs)).toBe(true);
+  });
+
   test("draws an ocean route as one line across the antimeridian, its figures on it", async () => {
     const { plan, estimator } = demoEngine("ocean");
     const answer = await estimator.estimate(plan);

@@ -8,7 +8,6 @@ import {
   type Plan,
   type PreparedRoute,
   prepareRoute,
-  type Route,
   readPlanDocument,
 } from "./core.ts";
 import type { FieldSource } from "./field-shelf.ts";
@@ -53,27 +52,22 @@ export function createPlanReader({ files, fields, land }: PlanSources): PlanRead
         routes,
         fields: merged.fields,
         land: craft.moves === "water" ? await land() : null,
+        ...(plan.window === undefined ? {} : { every_s: plan.window.every_s }),
       };
-      const every_s = plan.window?.every_s ?? null;
-      const made = prepare(routes, fieldsInUse(craft, input.fields), input.land);
-      const prepared = made.map((route) => ({ ...route, every_s }));
-      return { plan, input, prepared, members: merged.members };
+      return { plan, input, prepared: prepare(input), members: merged.members };
     },
   };
 }
 
 /** Prepares routes; those that are as they were on the same fields and land are not prepared again. */
-function createPreparation(): (
-  routes: readonly Route[],
-  fields: readonly Field[],
-  land: LandFinder | null,
-) => PreparedRoute[] {
+function createPreparation(): (input: EstimateInput) => PreparedRoute[] {
   let kept = new Map<string, PreparedRoute>();
   let on: { readonly fields: readonly Field[]; readonly land: LandFinder | null } = {
     fields: [],
     land: null,
   };
-  return (routes, fields, land) => {
+  return ({ routes, craft, fields: all, land, every_s = null }) => {
+    const fields = fieldsInUse(craft, all);
     const same =
       land === on.land &&
       fields.length === on.fields.length &&
@@ -83,7 +77,9 @@ function createPreparation(): (
     kept = new Map();
     return routes.map((route) => {
       const key = JSON.stringify(route);
-      const prepared = known.get(key) ?? prepareRoute(route, fields, land);
+      const before = known.get(key) ?? prepareRoute(route, fields, land);
+      // The same object as long as nothing changes: what is drawn of a route is kept by it.
+      const prepared = before.every_s === every_s ? before : { ...before, every_s };
       kept.set(key, prepared);
       return prepared;
     });
