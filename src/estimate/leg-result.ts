@@ -80,11 +80,11 @@ export function legEstimate(
       outcome === null
         ? null
         : {
-            time_s: outcome.sums.timeBound + outcome.sums.growth * outcome.departureBound,
+            time_s: outcome.sums.timeBound + Math.abs(outcome.sums.growth) * outcome.departureBound,
             use:
               outcome.sums.useBound +
               outcome.stayUseBound +
-              outcome.sums.growth * outcome.departureBound * (outcome.sums.use / outcome.sums.time),
+              Math.abs(outcome.sums.growth * (outcome.sums.use / outcome.sums.time)) * outcome.departureBound,
           },
   };
 }

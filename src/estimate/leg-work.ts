@@ -65,7 +65,7 @@ export function addTimes(sums: LegSums, step: Step, length: number): void {
   sums.use += step.use;
   const amplified = 1 + step.growth;
   sums.useBound += step.useError + ROUNDING * Math.abs(step.use);
-  sums.useBound += sums.timeBound * step.growth * (step.use / step.time);
+  sums.useBound += sums.timeBound * Math.abs(step.growth * (step.use / step.time));
   sums.timeBound = sums.timeBound * amplified + step.timeError + ROUNDING * step.time;
   sums.growth = (1 + sums.growth) * amplified - 1;
 }

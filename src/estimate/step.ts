@@ -52,7 +52,10 @@ export interface Step {
   timeError: number;
   use: number;
   useError: number;
-  /** ∫ |∂g/∂t| / g² ds: how much of an error in the start's time the step adds to it. */
+  /**
+   * How much of an error in the start's time the step adds to it: at a held speed and a steady rate exp(-∫ ∂g/∂t / g² ds) - 1, since an error
+   * obeys d' = F_t d with F = 1/g; at other paces a bound on its size, ∫ |∂g/∂t| / g² ds.
+   */
   growth: number;
   /** Station at which the motion failed. */
   failedAt: number;
@@ -299,7 +302,7 @@ function finish(step: Step, start: number, half: number): StepStatus {
   step.timeError = half * Math.abs(time - timeGauss);
   step.use = half * use;
   step.useError = half * Math.abs(use - useGauss);
-  step.growth = half * growth;
+  step.growth = step.motion.steadyRate >= 0 ? Math.expm1(-half * growth) : half * growth;
   // A held speed at a steady rate has no kinks of its own inside a panel; every other pace may have.
   if (step.motion.steadyRate < 0) addEndErrors(step, half);
   step.lastGroundSpeed = groundSpeed[STATIONS - 1] as number;
@@ -329,12 +332,16 @@ function addEndErrors(step: Step, half: number): void {
   step.useError += half * BEYOND_NODES * (Math.abs(startUse) + Math.abs(endUse));
 }
 
-/** A bound on |∂g/∂t| at a station: |∂a/∂t| + |∂c/∂t| |c| / sqrt(V² - c²). */
+/**
+ * ∂g/∂t at a station, ∂a/∂t - ∂c/∂t c / sqrt(V² - c²); where the pace is not of a held speed at a steady rate, its parts' sizes together as a
+ * bound.
+ */
 function changePerSecond(step: Step, medium: Flow, i: number): number {
-  const cross = Math.abs(step.cross[i] as number);
+  const cross = step.cross[i] as number;
   // sqrt(V² - c²) = g - a.
   const lever = cross / Math.max((step.groundSpeed[i] as number) - (step.along[i] as number), 1e-6);
-  const alongChange = Math.abs(medium.alongChange[i] as number);
-  const crossChange = step.alongOnly ? 0 : Math.abs(medium.crossChange[i] as number);
-  return (alongChange + lever * crossChange) * medium.perSecond;
+  const byAlong = medium.alongChange[i] as number;
+  const byCross = step.alongOnly ? 0 : lever * (medium.crossChange[i] as number);
+  const change = step.motion.steadyRate >= 0 ? byAlong - byCross : Math.abs(byAlong) + Math.abs(byCross);
+  return change * medium.perSecond;
 }
