@@ -25,7 +25,7 @@ export function missingVectorText(
   if (strangers.length > 0) {
     const names = strangers.map(quoted).join(", ");
     return missingText(
-      `${columns}; ${names} is of a ${otherThan(role)}, while the file's role is ${role}`,
+      `${columns}; ${names} ${strangers.length === 1 ? "is" : "are"} of the ${otherThan(role)}, while the file's role is ${role}`,
       headers,
       role,
       [],

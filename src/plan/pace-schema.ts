@@ -4,6 +4,14 @@ import { time } from "./time-schema.ts";
 
 const speed = (description: string) => quantity(["speed"], "speed", POSITIVE, description);
 
+/** What a pace that holds something says of an arrival beside it, and the other way round. */
+const NOT_BOTH = 'a pace holds something or asks for an arrival, not both; found "hold" beside "arrive"';
+const BESIDE_HOLD = { arrive: NOT_BOTH };
+const BESIDE_ARRIVE = {
+  hold: NOT_BOTH,
+  speed: 'a pace that asks for an arrival finds its speed itself; found "speed" beside "arrive"',
+};
+
 const holding = z.discriminatedUnion(
   "hold",
   [
@@ -14,6 +22,7 @@ const holding = z.discriminatedUnion(
         speed: optional(speed("Speed through the medium; the craft's own unless given.")),
       },
       "Hold the speed through the medium.",
+      BESIDE_HOLD,
     ),
     objectOf(
       "a pace that holds the ground-speed",
@@ -22,6 +31,7 @@ const holding = z.discriminatedUnion(
         speed: optional(speed("Speed over the ground; the craft's own speed unless given.")),
       },
       "Hold the speed over the ground.",
+      BESIDE_HOLD,
     ),
     objectOf(
       "a pace that holds the power",
@@ -30,6 +40,7 @@ const holding = z.discriminatedUnion(
         power: quantity(["power"], "power", POSITIVE, "The power to hold, hotel load apart."),
       },
       "Hold the power.",
+      BESIDE_HOLD,
     ),
     objectOf(
       "a pace of least energy",
@@ -41,19 +52,21 @@ const holding = z.discriminatedUnion(
         ),
       },
       "The speed of least energy over the ground.",
+      BESIDE_HOLD,
     ),
   ],
   {
     error: (issue) =>
       issue.code === "invalid_union"
-        ? sentence(
-            "hold",
-            'takes one of "through-speed", "ground-speed", "power", "least-energy"',
-            (issue.input as { hold?: unknown } | undefined)?.hold,
-          )
-        : sentence("pace", "is an object with the key hold", issue.input),
+        ? holdSentence((issue.input as { hold?: unknown } | undefined)?.hold)
+        : sentence("pace", "is an object with the key hold or arrive", issue.input),
   },
 );
+
+function holdSentence(found: unknown): string {
+  const rule = 'takes one of "through-speed", "ground-speed", "power", "least-energy"';
+  return sentence("hold", found === undefined ? `${rule}, or "arrive" stands in its place` : rule, found);
+}
 
 const arrivalWindow = objectOf(
   "an arrival",
@@ -79,11 +92,12 @@ const arriving = objectOf(
       .check(z.meta({ description: "When to arrive." })),
   },
   "The constant through-speed that arrives when it should, within the craft's speeds.",
+  BESIDE_ARRIVE,
 );
 
 /** The pace of a plan: one of four told apart by `hold`, or the arrival that it is to make. */
 export const paceSchema = z
   .union([holding, arriving], {
-    error: (issue) => sentence("pace", "is an object with the key hold", issue.input),
+    error: (issue) => sentence("pace", "is an object with the key hold or arrive", issue.input),
   })
   .check(z.meta({ description: "The rule by which the craft chooses its speed." }));

@@ -135,14 +135,24 @@ export function oneOf<const T extends readonly [string, ...string[]]>(
     .check(z.meta({ description }));
 }
 
-/** An object with these keys and no others. `what` names it with its article, as `a waypoint`. */
-export function objectOf<T extends z.core.$ZodShape>(what: string, shape: T, description: string) {
+/**
+ * An object with these keys and no others. `what` names it with its article, as `a waypoint`.
+ *
+ * @param foreign what is said of keys that it has not, where the nearest that it has would not help
+ */
+export function objectOf<T extends z.core.$ZodShape>(
+  what: string,
+  shape: T,
+  description: string,
+  foreign: Readonly<Record<string, string>> = {},
+) {
   const keys = Object.keys(shape);
   return z
     .strictObject(shape, {
       error: (issue) => {
         if (issue.code !== "unrecognized_keys") return sentence(what, "is an object", issue.input);
-        return unknownKeySentence(what, issue.keys[0] ?? "", keys);
+        const key = issue.keys[0] ?? "";
+        return foreign[key] ?? unknownKeySentence(what, key, keys);
       },
     })
     .check(z.meta({ description }));
@@ -211,6 +221,7 @@ function boundText(value: number, dimensions: readonly Dimension[]): string {
   const only = dimensions.length === 1 ? dimensions[0] : undefined;
   if (only === "share") return `${value * 100} %`;
   if (only === "time" && value !== 0 && value % 3600 === 0) return `${value / 3600} h`;
+  if (only === "angle") return `${value} deg`;
   return only === undefined || value === 0 ? String(value) : `${value} ${INNER_UNITS[only]}`;
 }
 

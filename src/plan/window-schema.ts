@@ -13,7 +13,7 @@ export const windowSchema = objectOf(
         "speeds",
         quantity(["speed"], "speed", POSITIVE, "A speed to try."),
         1,
-        "speeds",
+        "speed",
         "Speeds to try in place of the pace's.",
       ),
     ),

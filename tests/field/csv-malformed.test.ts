@@ -115,17 +115,17 @@ describe("columns that are missing or at odds are told with what was looked for 
     [
       "a wind's direction toward",
       "lat,lon,speed,direction_to\n0,0,1,1\n",
-      '"direction_to" is of a current, while the file\'s role is wind',
+      '"direction_to" is of the current, while the file\'s role is wind',
     ],
     [
       "a current as wind",
       "lat,lon,eastward_sea_water_velocity,northward_sea_water_velocity\n0,0,1,1\n",
-      '"eastward_sea_water_velocity", "northward_sea_water_velocity" is of a current, while the file\'s role is wind',
+      '"eastward_sea_water_velocity", "northward_sea_water_velocity" are of the current, while the file\'s role is wind',
     ],
     [
       "a wind as current",
       "lat,lon,eastward_wind,northward_wind\n0,0,1,1\n",
-      '"eastward_wind", "northward_wind" is of a wind, while the file\'s role is current',
+      '"eastward_wind", "northward_wind" are of the wind, while the file\'s role is current',
       { role: "current" },
     ],
     [

@@ -123,7 +123,7 @@ const TOP: readonly Case[] = [
 ];
 
 const PACE: readonly Case[] = [
-  ["a pace that is a text", [["pace", "fast"]], "pace", "is an object with the key hold", '"fast"'],
+  ["a pace that is a text", [["pace", "fast"]], "pace", "is an object with the key hold or arrive", '"fast"'],
   [
     "a pace that holds nothing",
     [["pace", {}]],

@@ -130,7 +130,11 @@ describe("the what-ifs of a plan", () => {
     ["with an angle without its unit", [{ veer: 20 }], "whatIf[0].veer takes a number with the unit deg"],
     ["with a factor meant as a percentage", [{ wind: 120 }], "whatIf[0].wind is at most 10; found 120"],
     ["with a current beyond the bound", [{ current: 10.5 }], "whatIf[0].current is at most 10; found 10.5"],
-    ["with more than a turn", [{ veer: "-361 deg" }], 'whatIf[0].veer is not below -360 °; found "-361 deg"'],
+    [
+      "with more than a turn",
+      [{ veer: "-361 deg" }],
+      'whatIf[0].veer is not below -360 deg; found "-361 deg"',
+    ],
     [
       "with a speed of another craft",
       [{ speed: "200 kn" }],

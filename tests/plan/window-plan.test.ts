@@ -79,7 +79,7 @@ describe("the key window of a plan", () => {
     [
       "of no speeds",
       [["window", { ...WINDOW, speeds: [] }]],
-      "window.speeds takes a list of at least 1 speeds; found 0",
+      "window.speeds takes a list of at least 1 speed; found 0",
     ],
     [
       "of a speed outside the table",
@@ -149,7 +149,22 @@ describe("a pace that asks for an arrival", () => {
     [
       "beside a hold",
       { arrive: "2027-05-04T18:00Z", hold: "power" },
-      'pace.hold: a pace that asks for an arrival has no key "hold"',
+      'pace.hold: a pace holds something or asks for an arrival, not both; found "hold" beside "arrive"',
+    ],
+    [
+      "beside a speed held",
+      { hold: "through-speed", arrive: "2027-05-04T18:00Z" },
+      'pace.arrive: a pace holds something or asks for an arrival, not both; found "hold" beside "arrive"',
+    ],
+    [
+      "beside a speed",
+      { arrive: "2027-05-04T18:00Z", speed: "8 kn" },
+      'pace.speed: a pace that asks for an arrival finds its speed itself; found "speed" beside "arrive"',
+    ],
+    [
+      "as a key unknown",
+      { arrives: "2027-05-04T18:00Z" },
+      'pace.hold takes one of "through-speed", "ground-speed", "power", "least-energy", or "arrive" stands in its place; found nothing',
     ],
     [
       "that ends before it begins",
