@@ -67,9 +67,17 @@ describe("the worker's estimate", () => {
   test("says in a sentence what is wrong with a plan, and which file is missing", async () => {
     const { plan, estimator } = demoEngine("survey");
     const bad = await estimator.estimate({ ...plan, reserve: "8 minutes" });
-    expect(bad).toMatchObject({ ok: false, fault: expect.stringMatching(/^"Reserve" takes a number/) });
+    expect(bad).toEqual({
+      ok: false,
+      fault: expect.stringMatching(/^"Reserve" takes a number/),
+      key: "reserve",
+    });
     const missing = await estimator.estimate({ ...plan, fields: [{ role: "wind", file: "other.csv" }] });
-    expect(missing).toEqual({ ok: false, fault: 'the plan names "other.csv"; open that file too' });
+    expect(missing).toEqual({
+      ok: false,
+      fault: 'the plan names "other.csv"; open that file too',
+      key: null,
+    });
     expect((await estimator.estimate(plan)).ok).toBe(true);
   });
 
