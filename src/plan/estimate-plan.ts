@@ -17,6 +17,7 @@ import { fieldNotes } from "../estimate/field-notes.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { Finding } from "../estimate/result.ts";
 import { quoted } from "../found.ts";
+import { comparedStep } from "./compared-step.ts";
 import type { MemberFields } from "./merge-fields.ts";
 import type { OpenFile, Plan } from "./plan.ts";
 import { type FileProgress, readMembers } from "./read-fields.ts";
@@ -167,7 +168,6 @@ async function readInput(
   const { fields, members } = await readMembers(plan.fields, open, onProgress);
   const coast = craft.moves === "water" && loadLand !== undefined ? await loadLand() : null;
   const land = coast === null ? null : landFinder(coast);
-  const compared = plan.window === undefined ? {} : { every_s: plan.window.every_s };
-  const input = { title, departure, craft, pace, reserve, fields, routes, land, ...compared };
+  const input = { title, departure, craft, pace, reserve, fields, routes, land, ...comparedStep(plan) };
   return { input, members, notes: fieldNotes(input) };
 }

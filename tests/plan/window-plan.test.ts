@@ -246,6 +246,14 @@ describe("a plan's window worked out", () => {
     },
   );
 
+  test("has its departures go side by side but where each has a speed of its own to find", async () => {
+    const step = async (...changes: readonly Change[]) =>
+      (await estimatePlan(textOf(...changes), request)).input.every_s;
+    expect(await step(["window", WINDOW])).toBe(1800);
+    expect(await step(["window", WINDOW], ["pace", { arrive: "2027-05-04T10:00Z" }])).toBeUndefined();
+    expect(await step()).toBeUndefined();
+  });
+
   test("takes the parts given beside the plan in place of the plan's", async () => {
     const asked = { ...request, to: "2027-05-04T07:00Z", every: "20min", speeds: ["6kn", "8 kn"] };
     const { window, cells } = await windowPlan(textOf(["window", WINDOW]), asked);

@@ -44,6 +44,8 @@ describe("the worker's estimate", () => {
     const denser = await reader.read({ ...plan, window: { ...plan.window, every: "1 min" } } as typeof plan);
     expect(denser.prepared.map(({ every_s }) => every_s)).toEqual(denser.prepared.map(() => 60));
     expect(denser.prepared.every((route, n) => route.legs === first.prepared[n]?.legs)).toBe(true);
+    const arriving = await reader.read({ ...plan, pace: { arrive: "2027-05-04T20:00Z" } });
+    expect(arriving.prepared.map(({ every_s }) => every_s)).toEqual(first.prepared.map(() => null));
   });
 
   test("draws an ocean route as one line across the antimeridian, its figures on it", async () => {

@@ -38,6 +38,7 @@ export {
   readGridFile,
 } from "../../src/index.ts";
 export { readArchive, writeArchive } from "../../src/plan/archive.ts";
+export { comparedStep } from "../../src/plan/compared-step.ts";
 export { importRoutes } from "../../src/plan/import-routes.ts";
 export { type FieldsRead, type MemberFields, mergeSources, roleSource } from "../../src/plan/merge-fields.ts";
 export { readCraftDocument } from "../../src/plan/read-craft.ts";

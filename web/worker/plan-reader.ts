@@ -1,5 +1,6 @@
 import type { PlanDocument } from "../state/plan-document.ts";
 import {
+  comparedStep,
   type EstimateInput,
   type Field,
   fieldsInUse,
@@ -52,7 +53,7 @@ export function createPlanReader({ files, fields, land }: PlanSources): PlanRead
         routes,
         fields: merged.fields,
         land: craft.moves === "water" ? await land() : null,
-        ...(plan.window === undefined ? {} : { every_s: plan.window.every_s }),
+        ...comparedStep(plan),
       };
       return { plan, input, prepared: prepare(input), members: merged.members };
     },
