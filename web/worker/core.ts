@@ -34,7 +34,6 @@ export {
   type PreparedRoute,
   type Profile,
   prepareRoute,
-  type Route,
   readGridFile,
 } from "../../src/index.ts";
 export { readArchive, writeArchive } from "../../src/plan/archive.ts";
