@@ -1,6 +1,5 @@
 import type { Tile } from "../field/field.ts";
 import { type Flow, levelShare } from "./flow.ts";
-import { STATIONS } from "./gauss-kronrod.ts";
 import { LEVEL_BETWEEN, type PanelCells } from "./panels.ts";
 import type { Stations } from "./stations.ts";
 
@@ -28,7 +27,7 @@ export function project(flow: Flow, panel: number, polar: boolean, stations: Sta
   const south = tile.lat[row] as number;
   const perLat = tile.lat.length === 1 ? 0 : 1 / ((tile.lat[row + 1] as number) - south);
   const { shareEast, shareNorth } = flow;
-  for (let i = 0; i < STATIONS; i += 1) {
+  for (let i = 0; i < stations.at.length; i += 1) {
     shareEast[i] = ((stations.lon[i] as number) + turn - west) * perLon;
     shareNorth[i] = ((stations.lat[i] as number) - south) * perLat;
   }
@@ -46,7 +45,7 @@ function projectPlain(flow: Flow, stations: Stations): void {
     return;
   }
   projectSlice(flow, NEXT_SLICE, stations, alongChange, crossChange);
-  for (let i = 0; i < STATIONS; i += 1) {
+  for (let i = 0; i < stations.at.length; i += 1) {
     alongChange[i] = (alongChange[i] as number) - (along[i] as number);
     crossChange[i] = (crossChange[i] as number) - (cross[i] as number);
   }
@@ -68,7 +67,7 @@ function projectSlice(
   const westVNorth = corners[offset + 5] as number;
   const eastV = corners[offset + 6] as number;
   const eastVNorth = corners[offset + 7] as number;
-  for (let i = 0; i < STATIONS; i += 1) {
+  for (let i = 0; i < sin.length; i += 1) {
     const fx = shareEast[i] as number;
     const fy = shareNorth[i] as number;
     const uWest = westU + fy * westUNorth;
@@ -95,7 +94,7 @@ function projectAny(
   const tile = flow.field.tiles[flow.tile] as Tile;
   const cells = flow.cells[flow.tile] as PanelCells;
   const steady = flow.nextSlice === flow.slice;
-  for (let i = 0; i < STATIONS; i += 1) {
+  for (let i = 0; i < stations.at.length; i += 1) {
     const fx = flow.shareEast[i] as number;
     const fy = flow.shareNorth[i] as number;
     const fh = between ? levelShare(flow, tile, cells, panel, stations.share[i] as number) : 0;

@@ -1,12 +1,11 @@
 import type { Field } from "../field/field.ts";
 import { type Flow, makeFlow, readSlice } from "./flow.ts";
-import { STATIONS } from "./gauss-kronrod.ts";
 import { LEVEL_BETWEEN, type PanelCells } from "./panels.ts";
 import type { PreparedLeg } from "./prepare.ts";
 import { project } from "./project.ts";
 import { BENDS, PAIR, POINT, POINTS } from "./smooth-pair.ts";
 import { cutPair, fitPowers, TERMS } from "./smooth-powers.ts";
-import { POINT_STATIONS } from "./smooth-rule.ts";
+import { COLUMN_POINTS, COLUMN_X } from "./smooth-rule.ts";
 import { layMiddle, layStations, makeStations } from "./stations.ts";
 
 /*
@@ -18,12 +17,13 @@ import { layMiddle, layStations, makeStations } from "./stations.ts";
 /** Answer where the data of a panel cannot serve a smooth step. */
 export const NO_PAIR = -1;
 
-const LAST = STATIONS - 1;
+const VALUES = COLUMN_X.length;
+const LAST = VALUES - 1;
 const MIDDLE = LAST / 2;
-/** Offsets in a column: both components at the stations, then the coefficients in ξ of their polynomials. */
+/** Offsets in a column: values of both components, then the coefficients in ξ of their polynomials. */
 const ALONG = 0;
-const CROSS = STATIONS;
-const ALONG_POWERS = 2 * STATIONS;
+const CROSS = VALUES;
+const ALONG_POWERS = 2 * VALUES;
 const CROSS_POWERS = ALONG_POWERS + TERMS;
 const COLUMN = CROSS_POWERS + TERMS;
 
@@ -44,7 +44,7 @@ export class SmoothColumns {
   readonly #state: Uint8Array;
   readonly #joined: Uint8Array;
   readonly #sampler: Flow;
-  readonly #stations = makeStations();
+  readonly #stations = makeStations(COLUMN_X);
   readonly #alongOnly: boolean;
   #reach = 0;
   #leg: PreparedLeg | null = null;
@@ -135,9 +135,17 @@ export class SmoothColumns {
     const between = (sampler.cells[this.tile] as PanelCells).levelState[panel] === LEVEL_BETWEEN;
     if (peak(sampler, between ? 2 : 1) > this.#reach) return false;
     project(sampler, panel, false, this.#stations);
-    this.#columns.set(sampler.along, slice * COLUMN + ALONG);
-    if (!this.#alongOnly) this.#columns.set(sampler.cross, slice * COLUMN + CROSS);
+    this.#copy(sampler, slice * COLUMN);
     return true;
+  }
+
+  #copy({ along, cross }: Flow, at: number): void {
+    const columns = this.#columns;
+    const isAcross = !this.#alongOnly;
+    for (let n = 0; n < VALUES; n += 1) {
+      columns[at + ALONG + n] = along[n] as number;
+      if (isAcross) columns[at + CROSS + n] = cross[n] as number;
+    }
   }
 
   /** Lays the stations on the panel, once. */
@@ -156,7 +164,7 @@ export class SmoothColumns {
     const columns = this.#columns;
     const { pairs } = this;
     for (let n = 0; n < POINTS; n += 1) {
-      const along = POINT_STATIONS[n] as number;
+      const along = COLUMN_POINTS[n] as number;
       const cross = along + CROSS;
       const to = at + POINT * n;
       pairs[to] = columns[first + along] as number;

@@ -1,8 +1,10 @@
-import { STATION_X, STATIONS } from "./gauss-kronrod.ts";
+import { STATION_X } from "./gauss-kronrod.ts";
 import { COS, evaluate, evaluateAll, LAT, LON, SIN, STRIDE, type TrackCurve } from "./track-curve.ts";
 
 /** The stations of the stretch in work: places and courses, fixed before time is solved. */
 export interface Stations {
+  /** Where they are on the stretch, -1..1. */
+  readonly at: Float64Array;
   /** Metres from the leg's start. */
   readonly s: Float64Array;
   /** Degrees, longitude continuous along the leg. */
@@ -20,15 +22,18 @@ export interface Stations {
   middleLat: number;
 }
 
-export function makeStations(): Stations {
+/** @param at where they are on a stretch, -1..1: those of the Kronrod rule and the ends unless others are named */
+export function makeStations(at: Float64Array = STATION_X): Stations {
+  const each = () => new Float64Array(at.length);
   return {
-    s: new Float64Array(STATIONS),
-    lon: new Float64Array(STATIONS),
-    lat: new Float64Array(STATIONS),
-    sin: new Float64Array(STATIONS),
-    cos: new Float64Array(STATIONS),
-    share: new Float64Array(STATIONS),
-    x: new Float64Array(STATIONS),
+    at,
+    s: each(),
+    lon: each(),
+    lat: each(),
+    sin: each(),
+    cos: each(),
+    share: each(),
+    x: each(),
     middleLon: 0,
     middleLat: 0,
   };
@@ -45,9 +50,9 @@ export function layStations(
   const start = curve.starts[p] as number;
   const scale = 2 / ((curve.starts[p + 1] as number) - start);
   const length = curve.starts[curve.starts.length - 1] as number;
-  const { s, x, share } = stations;
-  for (let i = 0; i < STATIONS; i += 1) {
-    const place = from + ((to - from) * ((STATION_X[i] as number) + 1)) / 2;
+  const { at, s, x, share } = stations;
+  for (let i = 0; i < at.length; i += 1) {
+    const place = from + ((to - from) * ((at[i] as number) + 1)) / 2;
     s[i] = place;
     share[i] = place / length;
     x[i] = (place - start) * scale - 1;
