@@ -1,4 +1,4 @@
-import { durationText, momentText, speedText } from "../estimate/finding-text.ts";
+import { durationText, minuteText, momentText, speedText } from "../estimate/finding-text.ts";
 import type { ArrivalAnswer, ArrivalSolution } from "../estimate/result.ts";
 
 /** The speed to estimate at: the chosen one, else that of the nearest arrival, m/s; `null` where no speed completes the route. */
@@ -13,6 +13,11 @@ export function wantedText({ notBefore, notAfter }: Pick<ArrivalAnswer, "notBefo
   if (notBefore === null) return `by ${end}`;
   if (notBefore === notAfter) return `at ${end}`;
   return `between ${momentText(Date.parse(notBefore))} and ${end}`;
+}
+
+/** How a missed arrival ends: `; asked for: by 2027-05-04 18:00 UTC` */
+export function askedFor(wanted: string): string {
+  return `; asked for: ${wanted}`;
 }
 
 /** What a route without a solution says. */
@@ -32,10 +37,12 @@ export function foundText(answer: ArrivalAnswer, departure: number): string {
   if (solution === undefined) throw new Error("an arrival without a solution");
   const arrival = Date.parse(solution.arrival);
   const passage = durationText((arrival - departure) / 1000);
-  const found = `${speedText(solution.speed_m_s)} through the medium arrives ${momentText(arrival)}, after ${passage}`;
-  const asked = `; asked for: ${wantedText(answer)}`;
-  const told = `${found}${choiceText(answer)}`;
-  return told.endsWith(asked) ? told : `${told}${asked}`;
+  const found = `${speedText(solution.speed_m_s)} through the medium arrives ${minuteText(arrival)}, after ${passage}`;
+  const wanted = wantedText(answer);
+  const choice = choiceText(answer);
+  // Said once: an arrival that is missed ends with it.
+  const rest = choice.endsWith(askedFor(wanted)) ? choice.slice(0, -askedFor(wanted).length) : choice;
+  return `${found} (asked for: ${wanted})${rest}`;
 }
 
 const ALL = "in all that the plan names";

@@ -1,15 +1,14 @@
-import { durationText, momentText } from "../estimate/finding-text.ts";
+import { durationText, minuteText } from "../estimate/finding-text.ts";
 import { routeFinding } from "../estimate/findings.ts";
 import { isoTime } from "../estimate/leg-result.ts";
 import type { ArrivalAnswer, RouteStatus } from "../estimate/result.ts";
-import { wantedText } from "./arrival-answer.ts";
+import { askedFor, wantedText } from "./arrival-answer.ts";
 import type { ArrivalWindow } from "./arrival-window.ts";
 import { normalProbability } from "./normal-distribution.ts";
 import { type CellFinding, cellFinding } from "./window-cell.ts";
 
 /** By how much an arrival may miss what was asked for and still keep it, s. */
 const TOLERANCE = 1;
-const MINUTE = 60_000;
 
 /** The arrival that a route's pace asked for; `null` where it says how fast. */
 export function arrivalAsked({ arrive }: { readonly arrive?: ArrivalAnswer }): ArrivalWindow | null {
@@ -62,8 +61,7 @@ export function heldToArrival<Kind extends Judged>(
   const miss = arrivalMiss(arrival, asked);
   if (miss === 0) return judged;
   const by = `${durationText(Math.abs(miss))} too ${miss > 0 ? "late" : "early"}`;
-  const nearest = Math.round(arrival / MINUTE) * MINUTE;
-  const message = `it arrives ${momentText(nearest)}, ${by}; asked for: ${keptText(asked)}`;
+  const message = `it arrives ${minuteText(arrival)}, ${by}${askedFor(keptText(asked))}`;
   return { ...judged, status: "stop", worst: cellFinding(routeFinding("arrival-missed", message)) };
 }
 

@@ -1,8 +1,8 @@
 import type { Conditions } from "../estimate/conditions.ts";
-import { momentText } from "../estimate/finding-text.ts";
+import { durationText, minuteText, momentText } from "../estimate/finding-text.ts";
 import { routeFinding } from "../estimate/findings.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
-import { heldToArrival } from "./arrival-kept.ts";
+import { decidesArrival, heldToArrival } from "./arrival-kept.ts";
 import type { ArrivalWindow } from "./arrival-window.ts";
 import { type CellSpread, cellSpread } from "./cell-spread.ts";
 import type { DepartureWindow } from "./departure-window.ts";
@@ -106,6 +106,11 @@ export class CellTrials {
   /** Whether anything that a plan names may make a cell a stop that is none itself: an error does where a confidence is asked for. */
   static decide({ members, whatIfs, errors, confidence }: UncertaintyAsked): boolean {
     return members.length + whatIfs.length > 0 || (errors.length > 0 && confidence !== undefined);
+  }
+
+  /** Whether each cell goes at a speed found for it, the cheapest that holds. */
+  get findsSpeeds(): boolean {
+    return decidesArrival(this.#arrive);
   }
 
   /** How many members and what-ifs there are, and the confidence asked for. */
@@ -253,6 +258,6 @@ function isLate(arrival: number | null, notAfter: number | null): boolean {
 function keptInTime(tried: Tried, notAfter: number | null): Tried {
   const { arrival, status } = tried;
   if (arrival === null || notAfter === null || status === "stop" || !isLate(arrival, notAfter)) return tried;
-  const message = `it arrives ${momentText(arrival)}, after ${momentText(notAfter)}`;
+  const message = `it arrives ${minuteText(arrival)}, ${durationText((arrival - notAfter) / 1000)} after ${momentText(notAfter)}`;
   return { ...tried, status: "stop", worst: cellFinding(routeFinding("arrival-missed", message)) };
 }

@@ -1,3 +1,4 @@
+import { speedText } from "../estimate/finding-text.ts";
 import type { CellTrials } from "./cell-trials.ts";
 import { type BestBy, firstInRank, inRank } from "./rank.ts";
 import type { Steps } from "./steps.ts";
@@ -76,7 +77,13 @@ function* closing(
   cells: readonly WindowCell[],
 ): Steps<CellFinding | null> {
   const next = latest === null ? null : nextAfter(cells, latest);
-  return next === null ? null : yield* trials.stoppedBy(next);
+  const found = next === null ? null : yield* trials.stoppedBy(next);
+  if (next === null || found === null || next.status === "stop" || !trials.findsSpeeds) return found;
+  const speed = next.speed_m_s === null ? "" : `, ${speedText(next.speed_m_s)}`;
+  return {
+    ...found,
+    message: `no speed was found that arrives then and holds in all that the plan names; at the cheapest by the plain estimate${speed}: ${found.message}`,
+  };
 }
 
 function* tested(trials: CellTrials, { time, use, latest, closedBy }: WindowBest): Steps<SureBest> {

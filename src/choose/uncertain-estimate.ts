@@ -78,7 +78,8 @@ export function withUncertainty(
   { whatIfs, errors, members, confidence }: UncertaintyAsked,
 ): UncertainAnswer {
   const conditions = estimate.routes.map((route, index) => conditionsOf(route, input, index));
-  const results = whatIfResults(prepared, conditions, whatIfs);
+  const isFound = estimate.routes.map(({ arrive }) => arrive !== undefined);
+  const results = whatIfResults(prepared, conditions, whatIfs, isFound);
   const spreads = estimate.routes.map((route, index) => {
     const run = { estimate: route, profile: profiles[index] as Profile };
     const given = conditions[index] as Conditions;

@@ -1,6 +1,7 @@
 import type { Craft, Pace } from "../craft/craft.ts";
 import { InputError } from "../errors.ts";
 import type { Conditions } from "../estimate/conditions.ts";
+import { speedText } from "../estimate/finding-text.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { Field } from "../field/field.ts";
 import { changeField } from "./changed-field.ts";
@@ -84,7 +85,5 @@ function checkedSpeed(ordered: number, whatIf: WhatIf, { hold }: Pace, { power, 
   const isWithin = hold === "ground-speed" || (speed >= power.min && speed <= power.max);
   if (speed > 0 && isWithin) return speed;
   const range = `above 0${hold === "ground-speed" ? "" : ` and within the power model of ${name}`}`;
-  throw new InputError(
-    `the what-if "${whatIf.name}" keeps the speed ${range}; found ${Number(speed.toPrecision(6))} m/s`,
-  );
+  throw new InputError(`the what-if "${whatIf.name}" keeps the speed ${range}; found ${speedText(speed)}`);
 }

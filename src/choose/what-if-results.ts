@@ -1,5 +1,7 @@
+import { InputError } from "../errors.ts";
 import type { Conditions } from "../estimate/conditions.ts";
 import { routeFinding, statusOf } from "../estimate/findings.ts";
+import { isoTime } from "../estimate/leg-result.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { Finding, Reached, RouteEstimate, RouteStatus } from "../estimate/result.ts";
 import { routeOutcome } from "../estimate/route-outcomes.ts";
@@ -7,7 +9,7 @@ import { arrivalMiss, heldToArrival } from "./arrival-kept.ts";
 import type { ArrivalWindow } from "./arrival-window.ts";
 import type { WhatIf } from "./what-if.ts";
 import { underWhatIf, whatIfFields } from "./what-if-conditions.ts";
-import { cellOf, type WindowCell } from "./window-cell.ts";
+import { cellFinding, cellOf, type WindowCell } from "./window-cell.ts";
 
 /** What a route comes to under a what-if: a true estimate, with the figures of a window's cell. */
 export interface WhatIfResult extends Omit<WindowCell, "route" | "speed_m_s"> {
@@ -26,6 +28,8 @@ export interface WhatIfResult extends Omit<WindowCell, "route" | "speed_m_s"> {
  *
  * @param prepared every route that the answer is about, so that changed fields serve them all
  * @param conditions one per route
+ * @param isFound per route, whether its pace was found for an arrival: a change of the speed that the craft does not allow is then a stop of
+ *   the what-if, since the plan does not name the speed that it changes
  * @returns per route, in the order of the what-ifs
  * @throws InputError for a what-if that the pace or the craft does not allow
  *
@@ -51,12 +55,15 @@ export function whatIfResults(
   prepared: readonly PreparedRoute[],
   conditions: readonly Conditions[],
   whatIfs: readonly WhatIf[],
+  isFound: readonly boolean[] = [],
 ): WhatIfResult[][] {
   const results: WhatIfResult[][] = prepared.map(() => []);
   for (const whatIf of whatIfs) {
     const changed = whatIfFields(whatIf, conditions[0]?.fields ?? [], prepared);
-    for (const [index, route] of changed.prepared.entries())
-      results[index]?.push(whatIfResult(whatIf, route, conditions[index] as Conditions, changed.fields));
+    for (const [index, route] of changed.prepared.entries()) {
+      const result = isFound[index] === true ? resultOrStop : whatIfResult;
+      results[index]?.push(result(whatIf, route, conditions[index] as Conditions, changed.fields));
+    }
   }
   return results;
 }
@@ -71,6 +78,26 @@ function whatIfResult(
   const outcome = routeOutcome(prepared, conditions);
   const { route: _, speed_m_s: __, ...figures } = cellOf(prepared, conditions.departure, null, outcome);
   return { name: whatIf.name, ...figures, reached: outcome.reached };
+}
+
+function resultOrStop(...given: Parameters<typeof whatIfResult>): WhatIfResult {
+  try {
+    return whatIfResult(...given);
+  } catch (fault) {
+    if (!(fault instanceof InputError)) throw fault;
+    const [{ name, late_s }, , { departure }] = given;
+    const figures = {
+      arrival: null,
+      time_s: null,
+      passage_s: null,
+      use: null,
+      remaining: null,
+      reserve: null,
+    };
+    const worst = cellFinding(routeFinding("outside-power-table", fault.sentence));
+    const left = isoTime(departure + 1000 * late_s);
+    return { name, departure: left, ...figures, status: "stop", worst, reached: null };
+  }
 }
 
 /** What-ifs held to the arrival that the route's pace asks for; as they are where it asks for none. */

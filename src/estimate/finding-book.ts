@@ -1,6 +1,6 @@
 import type { Craft } from "../craft/craft.ts";
 import type { Field, FieldRole } from "../field/field.ts";
-import { momentText } from "./finding-text.ts";
+import { minuteText, momentText } from "./finding-text.ts";
 import { landText, legFinding, type NumberedLeg, routeFinding, stopText, watchedText } from "./findings.ts";
 import type { Stay } from "./hover.ts";
 import type { Stop } from "./leg-run.ts";
@@ -68,7 +68,7 @@ export class FindingBook {
   /** That the magnetic model has no such date, once a route. */
   withoutVariation(moment: number): void {
     if (this.findings.some(({ code }) => code === "no-variation")) return;
-    const what = `the magnetic model has no date ${momentText(moment)}; magnetic courses are left empty`;
+    const what = `the magnetic model has no date ${minuteText(moment)}; magnetic courses are left empty`;
     this.findings.push(routeFinding("no-variation", what));
   }
 
@@ -78,7 +78,7 @@ export class FindingBook {
     const last = tiles.map(({ times }) => times?.[times.length - 1] ?? Number.NEGATIVE_INFINITY);
     if (!first.some(Number.isFinite)) return "";
     const end = Math.max(...last);
-    // Under way the end is reached on the minute that is printed for both.
+    // Under way the end is reached on the second that is printed for both.
     const beyond = momentText(moment) === momentText(end) ? " and not beyond" : "";
     return `the ${role} is valid from ${momentText(Math.min(...first))} to ${momentText(end)}${beyond}`;
   }

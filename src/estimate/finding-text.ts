@@ -1,5 +1,8 @@
 import type { StoreUnit } from "../craft/craft.ts";
 
+const SECOND = 1000;
+const MINUTE = 60_000;
+
 /*
  * How findings say an amount: SI first, the unit of the trade beside it, so that one text serves every door and unit preset.
  */
@@ -24,9 +27,15 @@ export function amountText(amount: number, unit: StoreUnit): string {
   return Math.abs(wattHours) >= 1000 ? `${(wattHours / 1000).toFixed(2)} kWh` : `${wattHours.toFixed(1)} Wh`;
 }
 
-/** `2027-05-04 06:00 UTC`, to the minute */
+/** A moment given or reached, to the second: `2027-05-04 06:00 UTC`, `2027-05-04 06:00:20 UTC` */
 export function momentText(milliseconds: number): string {
-  return `${new Date(milliseconds).toISOString().slice(0, 16).replace("T", " ")} UTC`;
+  const text = new Date(Math.round(milliseconds / SECOND) * SECOND).toISOString();
+  return `${text.slice(0, 10)} ${text.slice(11, text.slice(17, 19) === "00" ? 16 : 19)} UTC`;
+}
+
+/** A moment worked out, to the nearest minute, as tables have it: `2027-05-04 06:00 UTC` */
+export function minuteText(milliseconds: number): string {
+  return momentText(Math.round(milliseconds / MINUTE) * MINUTE);
 }
 
 /** `90 s`, `12 min`, `3 h 05 min` */

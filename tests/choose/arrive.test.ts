@@ -266,7 +266,7 @@ describe("a time that no speed arrives at", () => {
     expect([solutions, chosen]).toEqual([[], null]);
     expect(nearest?.speed_m_s).toBe(12);
     expect(reason).toBe(
-      "the highest speed of the craft's range, 12.0 m/s (23.3 kn), arrives 2027-05-04 08:34 UTC, 35 min too late",
+      "the highest speed of the craft's range, 12.0 m/s (23.3 kn), arrives 2027-05-04 08:35 UTC, 35 min too late",
     );
   });
 
@@ -325,7 +325,7 @@ describe("an estimate whose pace asks for an arrival", () => {
     expect(long?.legs[0]?.throughSpeed_m_s?.mean).toBeCloseTo(found?.speed_m_s ?? 0, 9);
     expect(long?.findings[0]).toMatchObject({ code: "pace-found", severity: "note", leg: null });
     expect(long?.findings[0]?.message).toMatch(
-      /through the medium arrives 2027-05-04 13:00 UTC, after 7 h 00 min; asked for: at 2027-05-04 13:00 UTC$/,
+      /through the medium arrives 2027-05-04 13:00 UTC, after 7 h 00 min \(asked for: at 2027-05-04 13:00 UTC\)$/,
     );
     expect(profiles).toHaveLength(2);
   });

@@ -5,6 +5,7 @@ import { estimateArriving } from "../../src/choose/arriving-estimate.ts";
 import { CellTrials } from "../../src/choose/cell-trials.ts";
 import type { DecidedRoute } from "../../src/choose/decided.ts";
 import { runSteps } from "../../src/choose/steps.ts";
+import { foundBests, testedBests } from "../../src/choose/sure-bests.ts";
 import { type UncertaintyAsked, withUncertainty } from "../../src/choose/uncertain-estimate.ts";
 import { makeSweep, sweepCell, windowCells } from "../../src/choose/window.ts";
 import { windowCell } from "../../src/choose/window-cell.ts";
@@ -103,12 +104,13 @@ describe("the cheapest speed that arrives in a span in everything that the plan 
   test("is said with what stops the cheapest by the plain estimate", () => {
     const { findings, arrive } = answerOf(SPAN, askedOf({ whatIfs: [STRONGER] }));
     const late_min = Math.round((DISTANCE / (madeGood(7) - 0.1) - 7 * 3600) / 60);
-    const stopped = `what if Stronger: it arrives 2027-05-04 13:10 UTC, ${late_min} min too late; asked for: between 2027-05-04 12:30 UTC and 2027-05-04 13:00 UTC`;
+    const wanted = "asked for: between 2027-05-04 12:30 UTC and 2027-05-04 13:00 UTC";
+    const stopped = `what if Stronger: it arrives 2027-05-04 13:10 UTC, ${late_min} min too late`;
     expect(findings.map(({ code }) => code)).toEqual(["pace-found"]);
     expect(findings[0]?.message).toBe(
-      `5.0 m/s (9.8 kn) through the medium arrives 2027-05-04 12:50 UTC, after 6 h 51 min, the cheapest found that holds in all that the plan names; the cheapest by the plain estimate, 4.9 m/s (9.6 kn), does not: ${stopped}`,
+      `5.0 m/s (9.8 kn) through the medium arrives 2027-05-04 12:51 UTC, after 6 h 51 min (${wanted}), the cheapest found that holds in all that the plan names; the cheapest by the plain estimate, 4.9 m/s (9.6 kn), does not: ${stopped}`,
     );
-    expect(arrive?.reason).toBe(stopped);
+    expect(arrive?.reason).toBe(`${stopped}; ${wanted}`);
   });
 
   test("is the plain estimate's own where that holds, and nothing else changes", () => {
@@ -118,7 +120,9 @@ describe("the cheapest speed that arrives in a span in everything that the plan 
     const before = estimateArriving(prepareRoutes(input), input, SPAN).estimate.routes[0];
     expect(told.arrive).toEqual({ ...before?.arrive, cheapest: 0, holds: true });
     expect(told.totals).toEqual(before?.totals);
-    expect(told.findings[0]?.message).toMatch(/, and holds in all that the plan names; asked for: between /);
+    expect(told.findings[0]?.message).toMatch(
+      / \(asked for: between .*\), and holds in all that the plan names$/,
+    );
   });
 
   test("lies at the early end where going faster is cheaper", () => {
@@ -175,9 +179,19 @@ describe("the cheapest speed that arrives in a span in everything that the plan 
     const input = inputOf({ craft: narrow });
     const prepared = prepareRoutes(input);
     const plain = estimateArriving(prepared, input, SPAN);
-    expect(() => withUncertainty(plain, prepared, input, asked)).toThrow(
-      /^the what-if "Slower" keeps the speed/,
-    );
+    const [route] = withUncertainty(plain, prepared, input, asked).estimate.routes;
+    expect(route?.whatIf?.[0]).toMatchObject({
+      status: "stop",
+      departure: route?.departure,
+      arrival: null,
+      use: null,
+      reached: null,
+      worst: { code: "outside-power-table" },
+    });
+    expect([route?.status, route?.findings[0]?.message]).toEqual([
+      "stop",
+      'what if Slower: the what-if "Slower" keeps the speed above 0 and within the power model of Craft; found 4.8 m/s (9.4 kn)',
+    ]);
     expect(solved(answerOf(SPAN, asked, input)).taken.speed_m_s).toBeCloseTo(madeGood(7) + 0.6, 8);
   });
 });
@@ -196,7 +210,22 @@ describe("a span in which no speed holds in everything", () => {
     expect(arrive).toEqual({ ...was, cheapest: 0, holds: false, reason: arrive?.reason });
     expect(findings.map(({ code }) => code)).toEqual(told.map(({ code }) => code));
     expect(findings[1]?.message).toMatch(
-      /^4\.9 m\/s .*, after 7 h 00 min; no speed was found that arrives then and holds in all that the plan names: the slowest that is in time in all of it, 5\.1 m\/s \(10\.0 kn\), does not: what if Early: it arrives 2027-05-04 12:20 UTC, 10 min too early; asked for: between 2027-05-04 12:30 UTC and 2027-05-04 13:00 UTC$/,
+      /^4\.9 m\/s .*, after 7 h 00 min \(asked for: between 2027-05-04 12:30 UTC and 2027-05-04 13:00 UTC\); no speed was found that arrives then and holds in all that the plan names: the slowest that is in time in all of it, 5\.1 m\/s \(10\.0 kn\), does not: what if Early: it arrives 2027-05-04 12:20 UTC, 10 min too early$/,
+    );
+  });
+
+  test("closes a window after the last departure that has one, with the speed that was judged", () => {
+    const asked = askedOf({ whatIfs: [whatIf("Late", { late_s: 1200 })] });
+    const input = inputOf();
+    const window = { from: DEPARTURE, to: DEPARTURE + 3 * HOUR, every_s: 900, speeds_m_s: null };
+    const sweep = makeSweep(prepareRoutes(input), input, SPAN, asked);
+    const cells = [...windowCells(sweep, window)];
+    const trials = new CellTrials(sweep, asked, window);
+    const { sure } = runSteps(testedBests(trials, runSteps(foundBests(trials, cells)), cells));
+    // At 8 m/s less the stream it takes 4 h 07 min: 20 min late it is there by 13:00 when it was to leave by 08:32.
+    expect(sure.latest?.departure.slice(11, 16)).toBe("08:30");
+    expect(sure.closedBy?.message).toMatch(
+      /^no speed was found that arrives then and holds in all that the plan names; at the cheapest by the plain estimate, 7\.8 m\/s \(15\.1 kn\): what if Late: it arrives 2027-05-04 13:20 UTC, 20 min too late/,
     );
   });
 

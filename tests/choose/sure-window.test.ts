@@ -295,12 +295,12 @@ describe("the sure bests of a window", () => {
     expect(sure.best.plain.time?.sure.worst).toMatchObject({
       code: "outside-power-table",
       message:
-        'the what-if "Faster" keeps the speed above 0 and within the power model of Drone; found 17 m/s',
+        'the what-if "Faster" keeps the speed above 0 and within the power model of Drone; found 17.0 m/s (33.0 kn)',
     });
     expect(sure.best.sure.time?.speed_m_s).toBe(12);
     const own = { ...input, pace: { hold: "through-speed", speed_m_s: 16 } as const };
     expect(() => answerOf({ whatIfs }, { input: own })).toThrow(
-      'the what-if "Faster" keeps the speed above 0 and within the power model of Drone; found 17 m/s',
+      'the what-if "Faster" keeps the speed above 0 and within the power model of Drone; found 17.0 m/s (33.0 kn)',
     );
   });
 });
@@ -417,7 +417,7 @@ describe("the latest departure that arrives in time", () => {
         status: "stop",
         worst: {
           code: "arrival-missed",
-          message: expect.stringMatching(/^it arrives .* UTC, after .* UTC$/),
+          message: expect.stringMatching(/^it arrives .* UTC, \d+ \w+ after .* UTC$/),
         },
       });
       const arrivals = (departure: number) => {

@@ -156,7 +156,7 @@ describe("a what-if", () => {
 
   test("that asks for a speed which the craft or the pace has not is one sentence", () => {
     expect(() => one(given, { name: "too slow", speed_m_s: -5 })).toThrow(
-      'the what-if "too slow" keeps the speed above 0 and within the power model of Craft; found 0 m/s',
+      'the what-if "too slow" keeps the speed above 0 and within the power model of Craft; found 0.0 m/s (0.0 kn)',
     );
     const least = caseOf(ROUTE, [current], {
       craft: { ...boat, speeds: { min: 2, max: 8 } },

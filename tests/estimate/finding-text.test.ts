@@ -1,0 +1,19 @@
+import { describe, expect, test } from "vitest";
+import { minuteText, momentText } from "../../src/estimate/finding-text.ts";
+
+const at = (iso: string) => Date.parse(iso);
+
+describe("a moment in a finding", () => {
+  test("has seconds where there are any, so that what is just outside a time never reads as that time", () => {
+    expect(momentText(at("2027-05-04T06:00:00Z"))).toBe("2027-05-04 06:00 UTC");
+    expect(momentText(at("2027-05-04T05:59:40Z"))).toBe("2027-05-04 05:59:40 UTC");
+    // A root under way ends up to a microsecond off.
+    expect(momentText(at("2027-05-04T06:00:00Z") - 0.001)).toBe("2027-05-04 06:00 UTC");
+  });
+
+  test("that was worked out is rounded to the minute as a table's is, over midnight too", () => {
+    expect(minuteText(at("2027-05-04T11:25:34Z"))).toBe("2027-05-04 11:26 UTC");
+    expect(minuteText(at("2027-05-04T11:25:29Z"))).toBe("2027-05-04 11:25 UTC");
+    expect(minuteText(at("2027-12-31T23:59:30Z"))).toBe("2028-01-01 00:00 UTC");
+  });
+});
