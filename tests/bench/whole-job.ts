@@ -12,7 +12,7 @@ const MS = [1e-3, "ms"] as const;
 const DEPARTURE_S = DEPARTURES_S[0] as number;
 const ESTIMATES = 200;
 const ROUNDS = 9;
-const SWEEP_ROUNDS = 5;
+const SWEEP_ROUNDS = 15;
 
 /** One route, 10 legs, 3,000 NM; then five of them at 240 departures. */
 export async function wholeJob(ocean: Ocean, peer: PythonPeer | null): Promise<Part> {
@@ -101,7 +101,7 @@ async function departureSweep({ wind, compared }: Ocean, peer: PythonPeer | null
       name: "NumPy midpoint on time columns, 240 departures of 5 routes",
       time: async () => (await peer.ask("sweep", { departures })).seconds,
     });
-  const timings = await takeTurns(contestants, SWEEP_ROUNDS);
+  const timings = await takeTurns(contestants, SWEEP_ROUNDS, 3);
   const [outcomes, numpy] = timings as [Timing, Timing | undefined];
   const what = "240 departures of 5 routes";
   return { comparisons: numpy === undefined ? [] : [faster(what, outcomes, numpy, 3, MS)], timings };
