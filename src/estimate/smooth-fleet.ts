@@ -200,9 +200,10 @@ export class SmoothFleet {
       const took = mean.time(part);
       if (took <= left + PASSING_S) {
         if (tells) log.tell(n, to, took);
-        legTime[n] = before + took;
+        const after = before + took;
+        legTime[n] = after;
         legUse[n] = (legUse[n] as number) + rate * took;
-        if (took >= left - PASSING_S) log.turn(n);
+        if ((begun[n] as number) + after >= (until[n] as number)) log.turn(n);
       } else {
         share[n] = part;
         time[n] = took;

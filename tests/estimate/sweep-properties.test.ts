@@ -153,6 +153,43 @@ describe("a departure has the same bits in company, alone and in full", () => {
     expect(swept).toBeGreaterThan(60);
   });
 
+  test("that come to the end of a panel, after a stay of a year, so near to a valid time that rounding decides whether it is met", () => {
+    // The moments are told from 1970 on, so that valid times are precise; a year after the departure a second is, to 7 billionths.
+    const axis = spaced(-1.5, 1.5, 6);
+    const route = routeOf(
+      waypoint("A", -0.7, -0.6),
+      waypoint("B", 0.3, 0.5, { stay_s: 4e7 }),
+      waypoint("C", 0.9, 1.3),
+    );
+    const conditionsOn = (field: Field): Conditions => ({
+      departure: 0,
+      craft: craftOf({ moves: "water" }),
+      pace: { hold: "through-speed", speed_m_s: 10 },
+      reserve: null,
+      fields: [field],
+    });
+    const metAt = (second: number): Field => {
+      const hours = [-1, second / 3600, second / 3600 + 3, second / 3600 + 7];
+      const field = gridField("current", { lon: axis, lat: axis, hours }, (lon, lat, hour) => [
+        2 * Math.sin(lon + (hour > second / 3600 + 1 ? 1 : 0)),
+        2 * Math.cos(lat),
+      ]);
+      const times = Float64Array.from(hours, (hour) => hour * HOUR);
+      return { ...field, tiles: field.tiles.map((tile) => ({ ...tile, times })) };
+    };
+    const estimateOn = (field: Field) =>
+      estimateRoute({ ...prepareRoute(route, [field]), every_s: 60 }, conditionsOn(field));
+    const moments = Array.from(estimateOn(metAt(5e7)).profile.time_s).filter((time) => time > 4e7);
+    for (const moment of moments.slice(0, -1)) {
+      for (let billionths = -20; billionths <= 20; billionths += 1) {
+        const field = metAt(moment + billionths * 1e-9);
+        const prepared = { ...prepareRoute(route, [field]), every_s: 60 };
+        const outcome = sweepRoute(prepared, conditionsOn(field), [0])[0];
+        expect(outcome?.time_s).toBe(estimateOn(field).estimate.totals.time_s);
+      }
+    }
+  });
+
   test("five hundred of them, in no order and many twice", () => {
     const field = gridField(
       "current",
