@@ -56,7 +56,7 @@ export interface Craft {
   readonly speed_m_s: number | null;
   readonly power: PowerModel;
   readonly windage: Windage | null;
-  /** Range of through-medium speeds for the paces `power` and `least-energy`, m/s. `null` where neither given nor implied. */
+  /** Range of through-medium speeds to choose from, by the paces `power` and `least-energy` and for an arrival, m/s. `null` where neither given nor implied. */
   readonly speeds: { readonly min: number; readonly max: number } | null;
   /** Hotel load, in store units per second. */
   readonly hotelPerSecond: number;

@@ -93,7 +93,7 @@ export const craftSchema = objectOf(
           min: quantity(["speed"], "least speed", NOT_NEGATIVE, "Least speed through the medium."),
           max: quantity(["speed"], "greatest speed", POSITIVE, "Greatest speed through the medium."),
         },
-        "Range of speeds for the paces power and least-energy.",
+        "Range from which a speed is chosen, by the paces power, least-energy and arrive and where paces are compared.",
       ),
     ),
     hotel: optional(
