@@ -2,7 +2,7 @@ import type { Field } from "../field/field.ts";
 import { type Passage, SmoothFleet } from "./smooth-fleet.ts";
 
 /** A smooth step taken. */
-interface Taken {
+interface StepTaken {
   /** Metres from the leg's start. */
   readonly to: number;
   /** s */
@@ -14,7 +14,7 @@ interface Taken {
 /** One craft that goes along a leg by smooth steps where they serve: a fleet of one. */
 export class SmoothLeg {
   readonly #fleet: SmoothFleet;
-  #taken: Taken[] = [];
+  #taken: StepTaken[] = [];
 
   /**
    * @param departure ms since 1970
@@ -42,7 +42,7 @@ export class SmoothLeg {
    * @param start s since departure at the leg's start
    * @param elapsed s since then
    */
-  cross(panel: number, start: number, elapsed: number, met: number): readonly Taken[] {
+  cross(panel: number, start: number, elapsed: number, met: number): readonly StepTaken[] {
     const fleet = this.#fleet;
     this.#taken = [];
     fleet.log.put(0, start, elapsed, met);
