@@ -8,8 +8,16 @@ const MINUTE = 60_000;
  */
 
 /** `15.2 m/s (29.5 kn)` */
-export function speedText(speed: number): string {
-  return `${speed.toFixed(1)} m/s (${((speed * 3600) / 1852).toFixed(1)} kn)`;
+export function speedText(speed: number, decimals = 1): string {
+  return `${speed.toFixed(decimals)} m/s (${((speed * 3600) / 1852).toFixed(decimals)} kn)`;
+}
+
+/** A speed and the limit that it passes, with the decimals that tell them apart, four at most: `2.05 m/s (3.99 kn)`, `2.06 m/s (4.00 kn)` */
+export function speedTexts(speed: number, limit: number): readonly [string, string] {
+  const isApart = (decimals: number) =>
+    [1, 3600 / 1852].every((unit) => (speed * unit).toFixed(decimals) !== (limit * unit).toFixed(decimals));
+  const decimals = [1, 2, 3].find(isApart) ?? 4;
+  return [speedText(speed, decimals), speedText(limit, decimals)];
 }
 
 /** `850 m`, `3.4 km (1.8 NM)` */

@@ -1,7 +1,7 @@
 import type { LandStretch } from "../coast/land-crossings.ts";
 import type { Craft } from "../craft/craft.ts";
 import type { FieldRole } from "../field/field.ts";
-import { amountText, lengthText, momentText, speedText } from "./finding-text.ts";
+import { amountText, lengthText, momentText, speedText, speedTexts } from "./finding-text.ts";
 import type { Watched } from "./leg-watch.ts";
 import type { PreparedLeg } from "./prepare.ts";
 import type { Finding, FindingCode, RouteStatus, Severity } from "./result.ts";
@@ -88,12 +88,11 @@ function extentText(leg: NumberedLeg, from: number, to: number): string {
 /** What a watched stretch has to say, by code. */
 export function watchedText({ code, role, stretch }: Watched, craft: Craft): string {
   const repeated = stretch.times > 1 ? `, ${stretch.times} times, ${lengthText(stretch.touched)} in all` : "";
-  const { limits } = craft;
   switch (code) {
     case "wind-limit":
-      return `wind up to ${speedText(stretch.peak)}, above the craft's limit of ${speedText(limits.wind_m_s ?? 0)}${repeated}`;
     case "gust-limit":
-      return `gusts up to ${speedText(stretch.peak)}, above the craft's limit of ${speedText(limits.gust_m_s ?? 0)}${repeated}`;
+    case "slow-over-ground":
+      return `${passedText(code, stretch.peak, craft)}${repeated}`;
     case "gap-filled":
       return `the ${role} has missing values here, filled by the plan's gap policy over ${lengthText(stretch.touched)}${repeated}`;
     case "held-beyond":
@@ -102,8 +101,6 @@ export function watchedText({ code, role, stretch }: Watched, craft: Craft): str
       return `outside the ${role}'s area; taken as no ${role} over ${lengthText(stretch.touched)}${repeated}`;
     case "height-outside-field":
       return `the height is outside the ${role}'s levels; the nearest level holds over ${lengthText(stretch.touched)}${repeated}`;
-    case "slow-over-ground":
-      return `ground speed down to ${speedText((limits.groundSpeed_m_s ?? 0) - stretch.peak)}, below the craft's ${speedText(limits.groundSpeed_m_s ?? 0)}${repeated}`;
     case "stems-flow":
       return `the flow along the track, up to ${speedText(stretch.peak)}, overtakes the ground speed ordered; the craft points against its course${repeated}`;
     case "wind-against-current":
@@ -113,6 +110,25 @@ export function watchedText({ code, role, stretch }: Watched, craft: Craft): str
     default:
       throw new Error(`no text for a stretch of ${code}`);
   }
+}
+
+/** That a limit of the craft is passed, and by how much at most. */
+function passedText(
+  code: "wind-limit" | "gust-limit" | "slow-over-ground",
+  peak: number,
+  { limits }: Craft,
+): string {
+  if (code === "slow-over-ground") {
+    const least = limits.groundSpeed_m_s ?? 0;
+    const [down, below] = speedTexts(least - peak, least);
+    return `ground speed down to ${down}, below the craft's ${below}`;
+  }
+  const [what, most] =
+    code === "wind-limit"
+      ? (["wind", limits.wind_m_s ?? 0] as const)
+      : (["gusts", limits.gust_m_s ?? 0] as const);
+  const [up, above] = speedTexts(peak, most);
+  return `${what} up to ${up}, above the craft's limit of ${above}`;
 }
 
 /** What a leg over the coarse land has to say: a hint, never a clearance. */

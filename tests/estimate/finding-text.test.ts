@@ -1,5 +1,5 @@
 import { describe, expect, test } from "vitest";
-import { minuteText, momentText } from "../../src/estimate/finding-text.ts";
+import { minuteText, momentText, speedTexts } from "../../src/estimate/finding-text.ts";
 
 const at = (iso: string) => Date.parse(iso);
 
@@ -15,5 +15,13 @@ describe("a moment in a finding", () => {
     expect(minuteText(at("2027-05-04T11:25:34Z"))).toBe("2027-05-04 11:26 UTC");
     expect(minuteText(at("2027-05-04T11:25:29Z"))).toBe("2027-05-04 11:25 UTC");
     expect(minuteText(at("2027-12-31T23:59:30Z"))).toBe("2028-01-01 00:00 UTC");
+  });
+});
+
+describe("a speed beside the limit that it passes", () => {
+  test("has the decimals that tell the two apart in both units", () => {
+    expect(speedTexts(15.2, 14)).toEqual(["15.2 m/s (29.5 kn)", "14.0 m/s (27.2 kn)"]);
+    expect(speedTexts(2.05, 2.0578)).toEqual(["2.05 m/s (3.98 kn)", "2.06 m/s (4.00 kn)"]);
+    expect(speedTexts(14.00001, 14)).toEqual(["14.0000 m/s (27.2138 kn)", "14.0000 m/s (27.2138 kn)"]);
   });
 });
