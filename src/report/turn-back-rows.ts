@@ -1,8 +1,8 @@
 import type { DecidedRoute } from "../choose/decided.ts";
 import type { Goal, RoutePlace, TurnBack, TurnLimit } from "../choose/turn-back-result.ts";
-import { laidOut, TABLE_WIDTH } from "./columns.ts";
+import { type Column, laidOut, TABLE_WIDTH } from "./columns.ts";
 import { placedText } from "./number-text.ts";
-import { clipped, wrapped } from "./plain-text.ts";
+import { clipped, displayWidth, wrapped } from "./plain-text.ts";
 import { positionText } from "./position-text.ts";
 import { inLastPlace } from "./rounding.ts";
 import { LENGTH_WIDTH, type TableUnits } from "./table-units.ts";
@@ -16,7 +16,7 @@ interface Row {
   readonly toGo: number | null;
 }
 
-/** Room for what a row is of. */
+/** Most room for what a row is of. */
 const WHAT_WIDTH = 27;
 
 function rowsOf(turn: TurnBack): Row[] {
@@ -70,38 +70,47 @@ function distanceText(distance: number, { length }: TableUnits): string {
   return `${(distance / length.size).toFixed(length.decimals)} ${length.symbol} from the start`;
 }
 
+/** Where a row's place is, when, and how far it is from there. */
+function placeColumns(rows: readonly Row[], { length, clock, finePositions, system }: TableUnits): Column[] {
+  const toGo = (seconds: number | null) =>
+    seconds === null ? "" : durationText(Math.round(seconds / clockSeconds(clock)), clock, 7);
+  return [
+    { head: ["", "Leg"], cells: rows.map(({ place }) => String(place.leg)) },
+    {
+      head: ["From start", length.symbol],
+      cells: rows.map(({ place }) =>
+        placedText(
+          inLastPlace(place.distance_m / length.size, length.decimals),
+          length.decimals,
+          LENGTH_WIDTH + 1,
+        ),
+      ),
+    },
+    {
+      head: ["At UTC", clock === "minute" ? "dd hh:mm" : "hh:mm:ss"],
+      cells: rows.map(({ place }) => etaText(place.time, clock)),
+    },
+    { head: ["To go", clock === "minute" ? "h:mm" : "h:mm:ss"], cells: rows.map((row) => toGo(row.toGo)) },
+    {
+      head: ["", "Position"],
+      cells: rows.map(({ place }) => positionText(place.lat, place.lon, system, finePositions)),
+      align: "left",
+    },
+  ];
+}
+
 /** How far a route can still turn back or off: points of no return, equal-time points, and where nothing is in reach. */
 export function turnBackTable({ turnBack: turn }: DecidedRoute, units: TableUnits): string[] {
   if (turn === undefined) return [];
-  const { length, clock, finePositions } = units;
   const rows = rowsOf(turn);
-  const toGo = (seconds: number | null) =>
-    seconds === null ? "" : durationText(Math.round(seconds / clockSeconds(clock)), clock, 7);
+  const columns = placeColumns(rows, units);
+  const rest = columns.reduce(
+    (sum, { head, cells }) => sum + Math.max(...[...head, ...cells].map(displayWidth)) + 1,
+    0,
+  );
+  const names = rows.map(({ what }) => clipped(what, Math.min(WHAT_WIDTH, TABLE_WIDTH - rest)));
   const { head, rows: lines } = laidOut(
-    [
-      { head: ["", "Point"], cells: rows.map(({ what }) => clipped(what, WHAT_WIDTH)), align: "left" },
-      { head: ["", "Leg"], cells: rows.map(({ place }) => String(place.leg)) },
-      {
-        head: ["From start", length.symbol],
-        cells: rows.map(({ place }) =>
-          placedText(
-            inLastPlace(place.distance_m / length.size, length.decimals),
-            length.decimals,
-            LENGTH_WIDTH + 1,
-          ),
-        ),
-      },
-      {
-        head: ["At UTC", clock === "minute" ? "dd hh:mm" : "hh:mm:ss"],
-        cells: rows.map(({ place }) => etaText(place.time, clock)),
-      },
-      { head: ["To go", clock === "minute" ? "h:mm" : "h:mm:ss"], cells: rows.map((row) => toGo(row.toGo)) },
-      {
-        head: ["", "Position"],
-        cells: rows.map(({ place }) => positionText(place.lat, place.lon, units.system, finePositions)),
-        align: "left",
-      },
-    ],
+    [{ head: ["", "Point"], cells: names, align: "left" }, ...columns],
     0,
   );
   return [

@@ -75,6 +75,22 @@ describe("turning back in the table", () => {
     }
   });
 
+  test("keeps its columns apart where times have seconds and places another decimal", () => {
+    const short: EstimateInput = {
+      ...input,
+      craft: craftOf({ moves: "air", store: { unit: "J", usable: 1.2 * NM * 1000 } }),
+      routes: [routeOf(waypoint("West", 61, 9), waypoint("East", 61, 9.05, { path: "rhumb" }))],
+    };
+    const isle = { name: "Isle of the long name", lat: 61.005, lon: 9.02, height_m: null };
+    const [, over, head, ...rest] = section(writeTable(reported(short, [isle]), "air"));
+    const rows = rest.filter((line) => !line.includes("in reach from the whole way"));
+    expect(over).toMatch(/ From start +At UTC +To go$/);
+    expect(head).toMatch(/^Point +Leg +NM +hh:mm:ss +h:mm:ss +Position$/);
+    for (const row of rows)
+      expect(row).toMatch(/^\S.{0,25} \d +\d\.\d{3} +\d\d:\d\d:\d\d +(\d:\d\d:\d\d +)?\d\d°/);
+    expect(rows.length).toBeGreaterThan(2);
+  });
+
   test("says where a goal is in reach from everywhere, or from nowhere, or is not known", () => {
     const rich = { ...input, craft: craftOf() };
     expect(section(writeTable(reported(rich), "sea"))).toEqual(
