@@ -1,4 +1,4 @@
-import { durationText, minuteText } from "../estimate/finding-text.ts";
+import { durationText, missedArrivalText } from "../estimate/finding-text.ts";
 import { routeFinding } from "../estimate/findings.ts";
 import { isoTime } from "../estimate/leg-result.ts";
 import type { ArrivalAnswer, RouteStatus } from "../estimate/result.ts";
@@ -60,8 +60,9 @@ export function heldToArrival<Kind extends Judged>(
   if (asked === null || isOneTime(asked) || arrival === null || judged.status === "stop") return judged;
   const miss = arrivalMiss(arrival, asked);
   if (miss === 0) return judged;
-  const by = `${durationText(Math.abs(miss))} too ${miss > 0 ? "late" : "early"}`;
-  const message = `it arrives ${minuteText(arrival)}, ${by}${askedFor(keptText(asked))}`;
+  const off = Math.abs(miss);
+  const by = `${durationText(off)} too ${miss > 0 ? "late" : "early"}`;
+  const message = `it arrives ${missedArrivalText(arrival, off)}, ${by}${askedFor(keptText(asked))}`;
   return { ...judged, status: "stop", worst: cellFinding(routeFinding("arrival-missed", message)) };
 }
 

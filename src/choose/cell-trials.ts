@@ -1,5 +1,5 @@
 import type { Conditions } from "../estimate/conditions.ts";
-import { durationText, minuteText, momentText } from "../estimate/finding-text.ts";
+import { durationText, missedArrivalText, momentText } from "../estimate/finding-text.ts";
 import { routeFinding } from "../estimate/findings.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import { decidesArrival, heldToArrival } from "./arrival-kept.ts";
@@ -258,6 +258,7 @@ function isLate(arrival: number | null, notAfter: number | null): boolean {
 function keptInTime(tried: Tried, notAfter: number | null): Tried {
   const { arrival, status } = tried;
   if (arrival === null || notAfter === null || status === "stop" || !isLate(arrival, notAfter)) return tried;
-  const message = `it arrives ${minuteText(arrival)}, ${durationText((arrival - notAfter) / 1000)} after ${momentText(notAfter)}`;
+  const late = (arrival - notAfter) / 1000;
+  const message = `it arrives ${missedArrivalText(arrival, late)}, ${durationText(late)} after ${momentText(notAfter)}`;
   return { ...tried, status: "stop", worst: cellFinding(routeFinding("arrival-missed", message)) };
 }

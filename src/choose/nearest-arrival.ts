@@ -1,4 +1,4 @@
-import { durationText, minuteText, speedText } from "../estimate/finding-text.ts";
+import { durationText, missedArrivalText, speedText } from "../estimate/finding-text.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { ArrivalAnswer } from "../estimate/result.ts";
 import { solutionAt } from "./arrival-solution.ts";
@@ -33,8 +33,9 @@ export function nearestTo(
     };
   const nearest = solutionAt(trials, best.x, departure);
   const late = best.value > latest;
-  const by = `${durationText(missBy(best.value))} too ${late ? "late" : "early"}`;
-  const arrives = `arrives ${minuteText(Date.parse(nearest.arrival))}, ${by}`;
+  const off = missBy(best.value);
+  const by = `${durationText(off)} too ${late ? "late" : "early"}`;
+  const arrives = `arrives ${missedArrivalText(Date.parse(nearest.arrival), off)}, ${by}`;
   if (legs.every(({ to }) => to.speed_m_s !== null))
     return { nearest, reason: `every leg names its own speed, and the route ${arrives}` };
   const beyond = samples.filter(({ x, value }) => value === null && (late ? x > best.x : x < best.x));

@@ -2,6 +2,8 @@ import type { StoreUnit } from "../craft/craft.ts";
 
 const SECOND = 1000;
 const MINUTE = 60_000;
+/** Durations below are told in seconds, s. */
+const IN_SECONDS = 120;
 
 /*
  * How findings say an amount: SI first, the unit of the trade beside it, so that one text serves every door and unit preset.
@@ -46,9 +48,14 @@ export function minuteText(milliseconds: number): string {
   return momentText(Math.round(milliseconds / MINUTE) * MINUTE);
 }
 
+/** An arrival that misses the one asked for, to the second where {@link durationText} says by how many: `2027-05-04 05:59:40 UTC` */
+export function missedArrivalText(arrival: number, seconds: number): string {
+  return seconds < IN_SECONDS ? momentText(arrival) : minuteText(arrival);
+}
+
 /** `90 s`, `12 min`, `3 h 05 min` */
 export function durationText(seconds: number): string {
-  if (seconds < 120) return `${Math.round(seconds)} s`;
+  if (seconds < IN_SECONDS) return `${Math.round(seconds)} s`;
   const minutes = Math.round(seconds / 60);
   if (minutes < 60) return `${minutes} min`;
   return `${Math.floor(minutes / 60)} h ${String(minutes % 60).padStart(2, "0")} min`;

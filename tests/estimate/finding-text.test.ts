@@ -1,5 +1,5 @@
 import { describe, expect, test } from "vitest";
-import { minuteText, momentText, speedTexts } from "../../src/estimate/finding-text.ts";
+import { minuteText, missedArrivalText, momentText, speedTexts } from "../../src/estimate/finding-text.ts";
 
 const at = (iso: string) => Date.parse(iso);
 
@@ -15,6 +15,13 @@ describe("a moment in a finding", () => {
     expect(minuteText(at("2027-05-04T11:25:34Z"))).toBe("2027-05-04 11:26 UTC");
     expect(minuteText(at("2027-05-04T11:25:29Z"))).toBe("2027-05-04 11:25 UTC");
     expect(minuteText(at("2027-12-31T23:59:30Z"))).toBe("2028-01-01 00:00 UTC");
+  });
+});
+
+describe("an arrival missed", () => {
+  test("by seconds has them, and by more is rounded to the minute", () => {
+    expect(missedArrivalText(at("2027-05-04T10:59:52Z"), 8)).toBe("2027-05-04 10:59:52 UTC");
+    expect(missedArrivalText(at("2027-05-04T11:33:42Z"), 822)).toBe("2027-05-04 11:34 UTC");
   });
 });
 
