@@ -53,8 +53,10 @@ export class SmoothMean {
     const lanes = this.#lanes;
     const speeds = this.#speeds;
     this.#length = length;
-    lanes.half.fill(length / 2);
-    lanes.perSecond.fill(perSecond);
+    for (let n = 0; n < NODES; n += 1) {
+      lanes.half[n] = length / 2;
+      lanes.perSecond[n] = perSecond;
+    }
     smoothTimes(pairs, at, 0, speed, lanes, 0, NODES);
     for (let n = 0; n < NODES; n += 1) {
       const time = lanes.time[n] as number;

@@ -35,9 +35,12 @@ export function fitPowers(columns: Float64Array, values: number, powers: number,
   const r3 = columns[values + 4] as number;
   const r2 = columns[values + 5] as number;
   const r1 = columns[values + 6] as number;
-  const [even1, odd1] = [(l1 + r1) / 2, (l1 - r1) / (2 * X1)];
-  const [even2, odd2] = [(l2 + r2) / 2, (l2 - r2) / (2 * X2)];
-  const [even3, odd3] = [(l3 + r3) / 2, (l3 - r3) / (2 * X3)];
+  const even1 = (l1 + r1) / 2;
+  const odd1 = (l1 - r1) / (2 * X1);
+  const even2 = (l2 + r2) / 2;
+  const odd2 = (l2 - r2) / (2 * X2);
+  const even3 = (l3 + r3) / 2;
+  const odd3 = (l3 - r3) / (2 * X3);
   columns[powers] = E11 * even1 + E12 * even2 + E13 * even3;
   columns[powers + 1] = E11 * odd1 + E12 * odd2 + E13 * odd3;
   columns[powers + 2] = E21 * even1 + E22 * even2 + E23 * even3;
