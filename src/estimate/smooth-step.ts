@@ -234,20 +234,34 @@ function correct(
       const e2 = B21 * d1 + B22 * d2 + B23 * d3 + B24 * d4;
       const e3 = B31 * d1 + B32 * d2 + B33 * d3 + B34 * d4;
       const e4 = B41 * d1 + B42 * d2 + B43 * d3 + B44 * d4;
-      const missed = Math.abs(m1) + Math.abs(m2) + Math.abs(m3) + Math.abs(m4);
-      const twist = T4 * (m4 - m1) + T3 * (m3 - m2);
-      const fourth = Q1 * m1 + Q2 * m2 + Q3 * m3 + Q4 * m4;
-      const smooth =
-        missed <= MOST_MISSED * f0 &&
-        Math.abs(twist) <= MOST_TWIST * f0 &&
-        Math.abs(fourth) <= MOST_FOURTH * f0 &&
-        missed * Math.abs(e1) <= MOST_COUPLED * f0 &&
-        Math.abs(s2) <= MOST_BEND * f0;
       const open = W1 * (m1 * exp(e1) + m4 * exp(e4)) + W2 * (m2 * exp(e2) + m3 * exp(e3));
       ends[n] = f0 + 2 * (s1 + 2 * s2) + (N1 * m1 + N2 * m2 + N3 * m3 + N4 * m4) + d4 * open;
-      time[n] = smooth ? length * (2 * (f0 + s1) + (8 / 3) * s2 + open) : NOT_SMOOTH;
+      const took = length * (2 * (f0 + s1) + (8 / 3) * s2 + open);
+      time[n] = isSmooth(f0, s2, e1, m1, m2, m3, m4) ? took : NOT_SMOOTH;
     }
   }
+}
+
+/** Whether a step is, by its slowness at the start, the guess's bend, the growth over it and what the guess missed at the nodes. */
+function isSmooth(
+  f0: number,
+  s2: number,
+  e1: number,
+  m1: number,
+  m2: number,
+  m3: number,
+  m4: number,
+): boolean {
+  const missed = Math.abs(m1) + Math.abs(m2) + Math.abs(m3) + Math.abs(m4);
+  const twist = T4 * (m4 - m1) + T3 * (m3 - m2);
+  const fourth = Q1 * m1 + Q2 * m2 + Q3 * m3 + Q4 * m4;
+  return (
+    Math.abs(s2) <= MOST_BEND * f0 &&
+    missed <= MOST_MISSED * f0 &&
+    Math.abs(twist) <= MOST_TWIST * f0 &&
+    Math.abs(fourth) <= MOST_FOURTH * f0 &&
+    missed * Math.abs(e1) <= MOST_COUPLED * f0
+  );
 }
 
 /** e^x for the small growth over one step. */
