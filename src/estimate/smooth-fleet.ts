@@ -202,6 +202,7 @@ export class SmoothFleet {
       const part = (now - (from[n] as number)) * perSecond;
       const took = mean.time(part);
       if (took <= left + PASSING_S) {
+        // As the log books it, with its arrays at hand: nowhere does a sweep spend more time.
         if (tells) log.tell(n, to, took);
         const after = before + took;
         legTime[n] = after;

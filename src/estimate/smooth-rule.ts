@@ -6,10 +6,11 @@ import { lagrangeAt } from "./lagrange.ts";
 /** Stations that a smooth step reads: the start of the panel and the nodes of the rule, in order. */
 export const POINT_STATIONS = [0, 2, 4, 6, 8] as const;
 
-/** Where a column has values, -1..1: at the start, two nodes, the middle, two nodes and the end. */
-export const COLUMN_X = Float64Array.from([0, 2, 4, 5, 6, 8, 10], (station) => STATION_X[station] as number);
-/** Which of them are the points of a smooth step. */
-export const COLUMN_POINTS = [0, 1, 2, 4, 5] as const;
+/** Stations where a column has values: those points, the middle and the end. */
+const COLUMN_STATIONS: readonly number[] = [0, 2, 4, 5, 6, 8, 10];
+/** Where they are, -1..1, and which of them the points are. */
+export const COLUMN_X = Float64Array.from(COLUMN_STATIONS, (station) => STATION_X[station] as number);
+export const COLUMN_POINTS = POINT_STATIONS.map((station) => COLUMN_STATIONS.indexOf(station));
 
 const [, ...NODE_STATIONS] = POINT_STATIONS;
 /** Nodes, -1..1, and weights. */

@@ -2,6 +2,7 @@ import { describe, expect, test } from "vitest";
 import { SmoothMean } from "../../src/estimate/smooth-mean.ts";
 import {
   type Component,
+  expectClose,
   isWithinReach,
   marched,
   none,
@@ -18,10 +19,6 @@ const SHARES = [0, 0.013, 0.25, 0.5, 0.77, 0.999];
 function meanOver(along: Component, cross: Component, { length, perSecond = 0 }: Way): SmoothMean | null {
   const mean = new SmoothMean();
   return mean.lay(pairOf(along, cross), 0, SPEED, length, perSecond) ? mean : null;
-}
-
-function expectClose(actual: number | undefined, exact: number, tolerance: number): void {
-  expect(Math.abs((actual ?? Number.NaN) / exact - 1)).toBeLessThan(tolerance);
 }
 
 describe("the mean ground speed over a stretch", () => {

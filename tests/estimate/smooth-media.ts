@@ -1,3 +1,4 @@
+import { expect } from "vitest";
 import { STATION_X } from "../../src/estimate/gauss-kronrod.ts";
 import { BENDS, PAIR } from "../../src/estimate/smooth-pair.ts";
 import { POINT_STATIONS } from "../../src/estimate/smooth-rule.ts";
@@ -94,4 +95,9 @@ export function marched(
     time += (h / 6) * (k1 + 2 * k2 + 2 * k3 + k4);
   }
   return time;
+}
+
+/** Holds a figure, which has to be there, against the exact one: the tolerance is a share of it. */
+export function expectClose(actual: number | undefined, exact: number, tolerance: number): void {
+  expect(Math.abs((actual ?? Number.NaN) - exact) / exact).toBeLessThan(tolerance);
 }

@@ -11,6 +11,7 @@ import {
 } from "../../src/estimate/smooth-step.ts";
 import {
   type Component,
+  expectClose,
   isWithinReach,
   marched,
   none,
@@ -30,10 +31,6 @@ function stepOver(along: Component, cross: Component, { length, perSecond = 0, s
   lanes.share[0] = share;
   smoothTimes(pairOf(along, cross), 0, 0, SPEED, lanes, 0, 1);
   return lanes;
-}
-
-function expectClose(actual: number, exact: number, tolerance: number): void {
-  expect(Math.abs(actual - exact) / exact).toBeLessThan(tolerance);
 }
 
 describe("a smooth step over a medium with a closed form", () => {
