@@ -149,10 +149,6 @@ function stepAsked(text: string): number {
 /** A speed given beside the plan: a fault in it is not told of the plan's file. */
 function speedAsked(text: string, craft: Craft, pace: Pace): number {
   const speed = parseQuantity(text, "speed", "speeds");
-  try {
-    checkSpeed(craft, pace, speed);
-  } catch (error) {
-    throw error instanceof InputError ? new InputError(error.sentence, { key: "speeds" }) : error;
-  }
+  toldOf({ key: "speeds" }, () => checkSpeed(craft, pace, speed));
   return speed;
 }
