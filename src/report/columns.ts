@@ -18,9 +18,19 @@ export interface LaidOut {
   readonly rows: readonly string[];
 }
 
+/** How wide a column is. */
+function widthOf({ head, cells }: Column): number {
+  return Math.max(...[...head, ...cells].map(displayWidth));
+}
+
+/** What these columns take at least, with a space before the next to each. */
+export function leastWidth(columns: readonly Column[]): number {
+  return columns.reduce((sum, column) => sum + widthOf(column) + 1, 0);
+}
+
 /** Lines in which the columns share out `width`, after an indent; spare space goes between the columns. */
 export function laidOut(columns: readonly Column[], indent: number, width = TABLE_WIDTH): LaidOut {
-  const widths = columns.map((column) => Math.max(...[...column.head, ...column.cells].map(displayWidth)));
+  const widths = columns.map(widthOf);
   const spare = width - indent - widths.reduce((sum, each) => sum + each, 0);
   const gaps = Math.max(1, columns.length - 1);
   const each = Math.min(WIDEST_GAP, Math.floor(spare / gaps));

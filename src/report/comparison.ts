@@ -1,7 +1,7 @@
 import type { RouteEstimate } from "../estimate/result.ts";
-import { type Column, laidOut, TABLE_WIDTH } from "./columns.ts";
+import { type Column, laidOut, leastWidth, TABLE_WIDTH } from "./columns.ts";
 import { placedText } from "./number-text.ts";
-import { clipped, displayWidth, isolated, plainText } from "./plain-text.ts";
+import { clipped, isolated, plainText } from "./plain-text.ts";
 import type { RouteFigures } from "./route-figures.ts";
 import { LENGTH_WIDTH, STORE_WIDTH, type TableUnits } from "./table-units.ts";
 import { durationText, etaText } from "./time-text.ts";
@@ -71,11 +71,7 @@ export function comparisonTable(
     { head: ["Use ", `${store.symbol} `], cells: marked(amounts(use), best(use, routes, 1)) },
     { head: ["Left ", `${store.symbol} `], cells: marked(amounts(left), best(left, routes, -1)) },
   ];
-  const rest = columns.reduce(
-    (sum, column) => sum + Math.max(...[...column.head, ...column.cells].map(displayWidth)) + 1,
-    0,
-  );
-  const names = nameCells(routes, TABLE_WIDTH - rest);
+  const names = nameCells(routes, TABLE_WIDTH - leastWidth(columns));
   const { head, rows } = laidOut([{ head: ["", "Route"], cells: names, align: "left" }, ...columns], 0);
   return ["Routes compared (* the best of those that do not stop)", ...head, ...rows];
 }

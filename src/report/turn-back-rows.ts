@@ -1,8 +1,8 @@
 import type { DecidedRoute } from "../choose/decided.ts";
 import type { Goal, RoutePlace, TurnBack, TurnLimit } from "../choose/turn-back-result.ts";
-import { type Column, laidOut, TABLE_WIDTH } from "./columns.ts";
+import { type Column, laidOut, leastWidth, TABLE_WIDTH } from "./columns.ts";
 import { placedText } from "./number-text.ts";
-import { clipped, displayWidth, wrapped } from "./plain-text.ts";
+import { clipped, wrapped } from "./plain-text.ts";
 import { positionText } from "./position-text.ts";
 import { inLastPlace } from "./rounding.ts";
 import { LENGTH_WIDTH, type TableUnits } from "./table-units.ts";
@@ -104,11 +104,8 @@ export function turnBackTable({ turnBack: turn }: DecidedRoute, units: TableUnit
   if (turn === undefined) return [];
   const rows = rowsOf(turn);
   const columns = placeColumns(rows, units);
-  const rest = columns.reduce(
-    (sum, { head, cells }) => sum + Math.max(...[...head, ...cells].map(displayWidth)) + 1,
-    0,
-  );
-  const names = rows.map(({ what }) => clipped(what, Math.min(WHAT_WIDTH, TABLE_WIDTH - rest)));
+  const room = Math.min(WHAT_WIDTH, TABLE_WIDTH - leastWidth(columns));
+  const names = rows.map(({ what }) => clipped(what, room));
   const { head, rows: lines } = laidOut(
     [{ head: ["", "Point"], cells: names, align: "left" }, ...columns],
     0,

@@ -3,9 +3,9 @@ import { isOfVariant } from "../choose/what-if-results.ts";
 import { worstFinding } from "../choose/window-cell.ts";
 import type { RouteStatus } from "../estimate/result.ts";
 import { whatIfsArriveLines } from "./arrival-lines.ts";
-import { type Column, laidOut, TABLE_WIDTH } from "./columns.ts";
+import { type Column, laidOut, leastWidth, TABLE_WIDTH } from "./columns.ts";
 import { placedText } from "./number-text.ts";
-import { clipped, displayWidth, isolated, plainText } from "./plain-text.ts";
+import { clipped, isolated, plainText } from "./plain-text.ts";
 import { inLastPlace, leftInLastPlace } from "./rounding.ts";
 import { STORE_WIDTH, type TableUnits } from "./table-units.ts";
 import { clockSeconds, durationText, etaText } from "./time-text.ts";
@@ -38,9 +38,7 @@ export function whatIfTable(route: DecidedRoute, units: TableUnits): string[] {
   };
   const rows: Row[] = [planned, ...whatIfs.map((each) => ({ ...each, code: each.worst?.code ?? "" }))];
   const columns = figureColumns(rows, units);
-  const room =
-    TABLE_WIDTH -
-    columns.reduce((sum, { head, cells }) => sum + Math.max(...[...head, ...cells].map(displayWidth)) + 1, 0);
+  const room = TABLE_WIDTH - leastWidth(columns);
   const names = rows.map(({ name }) => isolated(clipped(plainText(name), room)));
   const { head, rows: lines } = laidOut(
     [{ head: ["", "What if"], cells: names, align: "left" }, ...columns],

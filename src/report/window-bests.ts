@@ -2,9 +2,9 @@ import type { PaceBound } from "../choose/pace-bound.ts";
 import type { RoutePaces } from "../choose/route-paces.ts";
 import type { WindowCell } from "../choose/window-cell.ts";
 import type { RouteSummary, WindowBest } from "../choose/window-summary.ts";
-import { type Column, laidOut, TABLE_WIDTH } from "./columns.ts";
+import { type Column, laidOut, leastWidth, TABLE_WIDTH } from "./columns.ts";
 import { NO_FIGURE, placedText } from "./number-text.ts";
-import { clipped, displayWidth, isolated, plainText, wrapped } from "./plain-text.ts";
+import { clipped, isolated, plainText, wrapped } from "./plain-text.ts";
 import { inLastPlace, leftInLastPlace } from "./rounding.ts";
 import { boundText, triedText } from "./sure-text.ts";
 import { clockSeconds, durationText, etaText, instantText } from "./time-text.ts";
@@ -120,17 +120,15 @@ export function windowBests(report: WindowReport, units: WindowUnits): string[] 
   if (rows.length === 0) return [...wrapped(noneText(report), TABLE_WIDTH), ...passed, ...late.missed];
   const rest = columnsOf(rows, units);
   const whats = rows.map(({ what }, index) => (index < overall.length ? `of all, ${what}` : what));
-  const width = [
-    { head: ["", "Best"], cells: several ? whats : rows.map(({ what }) => what) },
-    ...rest,
-  ].reduce((sum, column) => sum + Math.max(...[...column.head, ...column.cells].map(displayWidth)) + 1, 0);
-  const names = rows.map(({ cell }) => isolated(clipped(plainText(cell.route), TABLE_WIDTH - width)));
+  const bests: Column = {
+    head: ["", "Best"],
+    cells: several ? whats : rows.map(({ what }) => what),
+    align: "left",
+  };
+  const room = TABLE_WIDTH - leastWidth([bests, ...rest]);
+  const names = rows.map(({ cell }) => isolated(clipped(plainText(cell.route), room)));
   const { head, rows: lines } = laidOut(
-    [
-      { head: ["", "Best"], cells: several ? whats : rows.map(({ what }) => what), align: "left" },
-      { head: ["", "Route"], cells: names, align: "left" },
-      ...rest,
-    ],
+    [bests, { head: ["", "Route"], cells: names, align: "left" }, ...rest],
     0,
   );
   const kept =
