@@ -13,7 +13,7 @@ import { routeOf, type Sweep } from "./sweep.ts";
 import { type Trial, type Tried, trialsOf, tryOne } from "./trial.ts";
 import type { UncertaintyAsked } from "./uncertain-estimate.ts";
 import { decidingVariant, variantText } from "./what-if-results.ts";
-import { type CellFinding, cellFinding, paceAt, type WindowCell } from "./window-cell.ts";
+import { arrivalOf, type CellFinding, cellFinding, paceAt, type WindowCell } from "./window-cell.ts";
 
 const BY_ERROR: DecidedBy = { member: null, whatIf: null, error: true };
 
@@ -244,10 +244,6 @@ export class CellTrials {
     }
     return known.spread;
   }
-}
-
-function arrivalOf({ arrival }: WindowCell): number | null {
-  return arrival === null ? null : Date.parse(arrival);
 }
 
 function isLate(arrival: number | null, notAfter: number | null): boolean {

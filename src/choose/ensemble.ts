@@ -8,7 +8,7 @@ import { arrivalMiss, heldToArrival } from "./arrival-kept.ts";
 import type { ArrivalWindow } from "./arrival-window.ts";
 import { type Quantiles, quantiles } from "./quantiles.ts";
 import type { Variant } from "./what-if-results.ts";
-import { worstFinding } from "./window-cell.ts";
+import { arrivalOf, worstFinding } from "./window-cell.ts";
 
 /** A member of an ensemble: its own fields, those in use by the craft. */
 export interface EnsembleMember {
@@ -227,10 +227,6 @@ export function membersInTime(runs: readonly MemberRun[], asked: ArrivalWindow):
     arrivesEarly: those((miss) => miss < 0),
     arrivesLate: those((miss) => miss > 0),
   };
-}
-
-function arrivalOf({ arrival }: RouteEstimate): number | null {
-  return arrival === null ? null : Date.parse(arrival);
 }
 
 /** Members as variants that may decide a route's status. @param asked the arrival that the route's pace asks for */

@@ -9,7 +9,7 @@ import { arrivalMiss, heldToArrival } from "./arrival-kept.ts";
 import type { ArrivalWindow } from "./arrival-window.ts";
 import type { WhatIf } from "./what-if.ts";
 import { underWhatIf, whatIfFields } from "./what-if-conditions.ts";
-import { cellFinding, cellOf, type WindowCell } from "./window-cell.ts";
+import { arrivalOf, cellFinding, cellOf, type WindowCell } from "./window-cell.ts";
 
 /** What a route comes to under a what-if: a true estimate, with the figures of a window's cell. */
 export interface WhatIfResult extends Omit<WindowCell, "route" | "speed_m_s"> {
@@ -107,7 +107,7 @@ export function whatIfsInTime(
 ): readonly WhatIfResult[] {
   if (asked === null) return results;
   return results.map((result) => {
-    const arrival = result.arrival === null ? null : Date.parse(result.arrival);
+    const arrival = arrivalOf(result);
     const arrivalMiss_s = arrival === null ? null : arrivalMiss(arrival, asked);
     return { ...heldToArrival(result, arrival, asked), arrivalMiss_s };
   });

@@ -88,6 +88,11 @@ export function windowCell(
   return cellOf(prepared, departure, speed, routeOutcome(prepared, { ...conditions, departure, pace }));
 }
 
+/** When a cell or route arrives, ms since 1970-01-01T00:00Z; `null` where it does not. */
+export function arrivalOf({ arrival }: { readonly arrival: string | null }): number | null {
+  return arrival === null ? null : Date.parse(arrival);
+}
+
 /** A cell from a route's outcome. */
 export function cellOf(
   prepared: PreparedRoute,
