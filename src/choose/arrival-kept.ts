@@ -1,4 +1,4 @@
-import { durationText, missedArrivalText } from "../estimate/finding-text.ts";
+import { missedArrivalText, missText } from "../estimate/finding-text.ts";
 import { routeFinding } from "../estimate/findings.ts";
 import { isoTime } from "../estimate/leg-result.ts";
 import type { ArrivalAnswer, RouteStatus } from "../estimate/result.ts";
@@ -61,8 +61,7 @@ export function heldToArrival<Kind extends Judged>(
   const miss = arrivalMiss(arrival, asked);
   if (miss === 0) return judged;
   const off = Math.abs(miss);
-  const by = `${durationText(off)} too ${miss > 0 ? "late" : "early"}`;
-  const message = `it arrives ${missedArrivalText(arrival, off)}, ${by}${askedFor(keptText(asked))}`;
+  const message = `it arrives ${missedArrivalText(arrival, off)}, ${missText(off, miss > 0)}${askedFor(keptText(asked))}`;
   return { ...judged, status: "stop", worst: cellFinding(routeFinding("arrival-missed", message)) };
 }
 

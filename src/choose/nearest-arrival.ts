@@ -1,4 +1,4 @@
-import { durationText, missedArrivalText, speedText } from "../estimate/finding-text.ts";
+import { missedArrivalText, missText, speedText } from "../estimate/finding-text.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { ArrivalAnswer } from "../estimate/result.ts";
 import { solutionAt } from "./arrival-solution.ts";
@@ -34,8 +34,7 @@ export function nearestTo(
   const nearest = solutionAt(trials, best.x, departure);
   const late = best.value > latest;
   const off = missBy(best.value);
-  const by = `${durationText(off)} too ${late ? "late" : "early"}`;
-  const arrives = `arrives ${missedArrivalText(Date.parse(nearest.arrival), off)}, ${by}`;
+  const arrives = `arrives ${missedArrivalText(Date.parse(nearest.arrival), off)}, ${missText(off, late)}`;
   if (legs.every(({ to }) => to.speed_m_s !== null))
     return { nearest, reason: `every leg names its own speed, and the route ${arrives}` };
   const beyond = samples.filter(({ x, value }) => value === null && (late ? x > best.x : x < best.x));

@@ -53,6 +53,11 @@ export function missedArrivalText(arrival: number, seconds: number): string {
   return seconds < IN_SECONDS ? momentText(arrival) : minuteText(arrival);
 }
 
+/** By how much an arrival misses the one asked for: `12 min too late`, `40 s too early` */
+export function missText(seconds: number, isLate: boolean): string {
+  return `${durationText(seconds)} too ${isLate ? "late" : "early"}`;
+}
+
 /** `90 s`, `12 min`, `3 h 05 min` */
 export function durationText(seconds: number): string {
   if (seconds < IN_SECONDS) return `${Math.round(seconds)} s`;

@@ -2,7 +2,7 @@ import { arrivalAsked, decidesArrival, keptText } from "../choose/arrival-kept.t
 import type { DecidedRoute } from "../choose/decided.ts";
 import type { EnsembleResult } from "../choose/ensemble.ts";
 import type { ErrorSpread } from "../choose/error-spread.ts";
-import { durationText } from "../estimate/finding-text.ts";
+import { missText } from "../estimate/finding-text.ts";
 import { TABLE_WIDTH } from "./columns.ts";
 import { askedText, percentText } from "./percent-text.ts";
 import { clipped, isolated, plainText, wrapped } from "./plain-text.ts";
@@ -47,7 +47,7 @@ export function whatIfsArriveLines(route: DecidedRoute): string[] {
   const kept = whatIfs.filter(({ arrivalMiss_s }) => arrivalMiss_s === 0).length;
   const missed = whatIfs.flatMap(({ name, arrivalMiss_s = 0 }) => {
     if (arrivalMiss_s === 0 || arrivalMiss_s === null) return [];
-    const by = `${durationText(Math.abs(arrivalMiss_s))} too ${arrivalMiss_s > 0 ? "late" : "early"}`;
+    const by = missText(Math.abs(arrivalMiss_s), arrivalMiss_s > 0);
     return [`${by} in ${isolated(clipped(plainText(name), NAME_WIDTH))}`];
   });
   const of = `${kept} of ${whatIfs.length} what-if${whatIfs.length === 1 ? "" : "s"}`;
