@@ -1,6 +1,6 @@
 import type { Conditions } from "../estimate/conditions.ts";
 import { momentText } from "../estimate/finding-text.ts";
-import { routeFinding } from "../estimate/findings.ts";
+import { isOfStore, routeFinding } from "../estimate/findings.ts";
 import type { Finding, RouteEstimate } from "../estimate/result.ts";
 import { decidesArrival } from "./arrival-kept.ts";
 import type { ArrivalWindow } from "./arrival-window.ts";
@@ -26,7 +26,7 @@ export function unsureReserve(
   reserveHolds: number | null,
   { confidence, errors }: ConfidenceAsked,
 ): Finding | null {
-  const isBroken = findings.some(({ code }) => code === "reserve-broken" || code === "store-empty");
+  const isBroken = findings.some(isOfStore);
   if (arrival === null || isBroken || actingErrors(conditions, errors).length === 0) return null;
   const asked = askedText(confidence);
   const what = reserve === 0 ? "the store lasts" : "the reserve holds";

@@ -1,5 +1,5 @@
+import { isOfStore } from "../estimate/findings.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
-import type { Finding } from "../estimate/result.ts";
 import type { RouteOutcome } from "../estimate/route-outcome.ts";
 import { type PacelessConditions, SpeedTrials } from "./speed-trials.ts";
 import { type CellFinding, type WindowCell, worstFinding } from "./window-cell.ts";
@@ -46,9 +46,8 @@ export function fastestBound(
   conditions: PacelessConditions,
   found: WindowCell | null,
 ): PaceBound | null {
-  const isStore = ({ code }: Finding): boolean => code === "reserve-broken" || code === "store-empty";
   return boundOf(prepared, conditions, found, "faster", ({ findings }) =>
-    worstFinding(findings.filter((finding) => finding.severity === "stop" && !isStore(finding))),
+    worstFinding(findings.filter((finding) => finding.severity === "stop" && !isOfStore(finding))),
   );
 }
 

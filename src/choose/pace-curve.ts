@@ -1,4 +1,5 @@
 import type { StoreUnit } from "../craft/craft.ts";
+import { isOfStore } from "../estimate/findings.ts";
 import type { PreparedRoute } from "../estimate/prepare.ts";
 import type { RouteOutcome } from "../estimate/route-outcome.ts";
 import { minimaOf, rootsOf, scan } from "./line-search.ts";
@@ -102,9 +103,7 @@ export function fastestWithReserve(
 /** What is left above the reserve; `null` where the route does not arrive or something but the store makes it a stop. */
 function marginOf({ remaining, reserve, findings }: RouteOutcome): number | null {
   if (remaining === null || reserve === null) return null;
-  const isStopped = findings.some(
-    ({ severity, code }) => severity === "stop" && code !== "reserve-broken" && code !== "store-empty",
-  );
+  const isStopped = findings.some((finding) => finding.severity === "stop" && !isOfStore(finding));
   return isStopped ? null : remaining - reserve;
 }
 

@@ -85,6 +85,11 @@ function extentText(leg: NumberedLeg, from: number, to: number): string {
   return `${first} ${to >= track.length ? `to ${end.name}` : `for ${lengthText(to - from)}`}`;
 }
 
+/** Whether a finding is that the store does not last: it ends empty, or with less than the reserve. */
+export function isOfStore({ code }: Pick<Finding, "code">): boolean {
+  return code === "reserve-broken" || code === "store-empty";
+}
+
 /** What a watched stretch has to say, by code. */
 export function watchedText({ code, role, stretch }: Watched, craft: Craft): string {
   const repeated = stretch.times > 1 ? `, ${stretch.times} times, ${lengthText(stretch.touched)} in all` : "";
