@@ -11,6 +11,11 @@ export interface ColumnUnit {
   readonly decimals: number;
 }
 
+/** An SI figure in a unit, with it: `8.0 kn` */
+export function figureText(figure: number, { symbol, size, decimals }: ColumnUnit): string {
+  return `${(figure / size).toFixed(decimals)} ${symbol}`;
+}
+
 /** The units of a whole report, chosen once so that every row of a column shares one. */
 export interface TableUnits {
   readonly system: Units;

@@ -5,7 +5,7 @@ import { placedText } from "./number-text.ts";
 import { clipped, wrapped } from "./plain-text.ts";
 import { positionText } from "./position-text.ts";
 import { inLastPlace } from "./rounding.ts";
-import { LENGTH_WIDTH, type TableUnits } from "./table-units.ts";
+import { figureText, LENGTH_WIDTH, type TableUnits } from "./table-units.ts";
 import { clockSeconds, durationText, etaText } from "./time-text.ts";
 import { goalText, limitText, noReturn, reasonText } from "./turn-back-text.ts";
 
@@ -67,7 +67,7 @@ function brokenLimits({ goals, samples }: TurnBack, units: TableUnits): string[]
 }
 
 function distanceText(distance: number, { length }: TableUnits): string {
-  return `${(distance / length.size).toFixed(length.decimals)} ${length.symbol} from the start`;
+  return `${figureText(distance, length)} from the start`;
 }
 
 /** Where a row's place is, when, and how far it is from there. */

@@ -7,6 +7,7 @@ import { NO_FIGURE, placedText } from "./number-text.ts";
 import { clipped, isolated, plainText, wrapped } from "./plain-text.ts";
 import { inLastPlace, leftInLastPlace } from "./rounding.ts";
 import { boundText, triedText } from "./sure-text.ts";
+import { figureText } from "./table-units.ts";
 import { clockSeconds, durationText, etaText, instantText } from "./time-text.ts";
 import type { WindowReport } from "./window-input.ts";
 import { reasonWord } from "./window-matrix.ts";
@@ -68,9 +69,7 @@ function inTimeOf({ inTime, sure }: WindowReport, units: WindowUnits): { rows: R
   const rows = held.flatMap((cell) => (cell === null ? [] : [{ what: "in time", cell }]));
   const missed = found.flatMap(({ route, speed_m_s, latest, earliest }) => {
     if (latest !== null || inTime === null) return [];
-    const { speed } = units;
-    const at =
-      speed_m_s === null ? "" : ` at ${(speed_m_s / speed.size).toFixed(speed.decimals)} ${speed.symbol}`;
+    const at = speed_m_s === null ? "" : ` at ${figureText(speed_m_s, units.speed)}`;
     const why =
       earliest.arrival === null || earliest.status === "stop"
         ? (earliest.worst?.message ?? "")
@@ -185,9 +184,7 @@ function boundLines(
   const told = (what: string, cell: WindowCell | null, bound: PaceBound | null): string[] =>
     cell === null || cell.speed_m_s === null || bound === null
       ? []
-      : [
-          `${what} at ${(cell.speed_m_s / speed.size).toFixed(speed.decimals)} ${speed.symbol}, ${boundText(bound)}`,
-        ];
+      : [`${what} at ${figureText(cell.speed_m_s, speed)}, ${boundText(bound)}`];
   const parts = [
     ...told("least use", leastUse, leastUseBound),
     ...told("fastest", fastest, fastestBound),

@@ -5,6 +5,7 @@ import { TABLE_WIDTH } from "./columns.ts";
 import { NO_FIGURE, placedText } from "./number-text.ts";
 import { clipped, displayWidth, isolated, leftAligned, plainText, rightAligned } from "./plain-text.ts";
 import { leftInLastPlace } from "./rounding.ts";
+import { figureText } from "./table-units.ts";
 import { clockSeconds, clockText } from "./time-text.ts";
 import { bestWords } from "./window-csv.ts";
 import type { WindowReport } from "./window-input.ts";
@@ -118,10 +119,7 @@ function candidates(report: WindowReport, units: WindowUnits): Candidate[] {
     const whole = displayWidth(plainText(cells[0]?.route ?? ""));
     const width = Math.max(displayWidth(columnHead), widest, Math.min(whole, NAME_WIDTH));
     const speed = window.speeds_m_s === null ? null : (cells[0]?.speed_m_s ?? null);
-    const speedHead =
-      speed === null
-        ? []
-        : [`${(speed / units.speed.size).toFixed(units.speed.decimals)} ${units.speed.symbol}`];
+    const speedHead = speed === null ? [] : [figureText(speed, units.speed)];
     const name = isolated(clipped(plainText(cells[0]?.route ?? ""), width));
     return { head: [name, ...speedHead, columnHead], texts, width };
   });

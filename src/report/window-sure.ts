@@ -9,6 +9,7 @@ import { NO_FIGURE } from "./number-text.ts";
 import { percentText } from "./percent-text.ts";
 import { isolated, plainText, wrapped } from "./plain-text.ts";
 import { fateText, triedText } from "./sure-text.ts";
+import { figureText } from "./table-units.ts";
 import { instantText } from "./time-text.ts";
 import type { WindowUnits } from "./window-units.ts";
 
@@ -79,10 +80,7 @@ function sentence(lead: string, naming: boolean, cells: readonly PassedOver[], u
 
 /** `2027-05-04 06:00 UTC at 8.0 kn` */
 function whenText({ departure, speed_m_s }: WindowCell, { speed, speeds }: WindowUnits): string {
-  const at =
-    speed_m_s === null || !speeds
-      ? ""
-      : ` at ${(speed_m_s / speed.size).toFixed(speed.decimals)} ${speed.symbol}`;
+  const at = speed_m_s === null || !speeds ? "" : ` at ${figureText(speed_m_s, speed)}`;
   return `${instantText(departure, "minute")}${at}`;
 }
 
