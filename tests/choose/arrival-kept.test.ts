@@ -8,26 +8,14 @@ import type { DecidedRoute } from "../../src/choose/decided.ts";
 import { runSteps } from "../../src/choose/steps.ts";
 import { type UncertaintyAsked, withUncertainty } from "../../src/choose/uncertain-estimate.ts";
 import { makeSweep, sweepCell } from "../../src/choose/window.ts";
-import { cubePower } from "../../src/craft/cube.ts";
 import { type EstimateInput, estimatePrepared, prepareRoutes } from "../../src/estimate/estimate.ts";
 import { estimateRoute } from "../../src/estimate/estimate-route.ts";
 import { prepareRoute } from "../../src/estimate/prepare.ts";
-import { craftOf, DEPARTURE, gridField, HOUR, routeOf, spaced, waypoint } from "../estimate/fixtures.ts";
+import { DEPARTURE, gridField, HOUR } from "../estimate/fixtures.ts";
+import { between, craft, DISTANCE, ROUTE, SHAPE, stream, whatIf } from "./arrival-fixtures.ts";
 
-const SHAPE = { lon: spaced(-1, 2, 6), lat: spaced(-1, 1, 4), hours: spaced(-6, 60, 22) };
-const stream = (u: number) => gridField("current", SHAPE, () => [u, 0]);
 const tide = (member: number) =>
   gridField("current", SHAPE, (lon, _, h) => [0.5 * Math.sin(h / 3 + lon + member) - member / 40, 0.1]);
-
-/** Along the equator the rhumb is a circle of the ellipsoid's semi-major axis. */
-const DISTANCE = (6378137 * Math.PI) / 180;
-const ROUTE = routeOf(waypoint("A", 0, 0), { ...waypoint("B", 0, 1), path: "rhumb" });
-const craft = craftOf({
-  moves: "water",
-  power: cubePower({ referenceSpeed_m_s: 6, referencePower_W: 60_000 }),
-  speeds: { min: 2, max: 8 },
-  store: { unit: "J", usable: 4e9 },
-});
 
 function inputOf(more: Partial<EstimateInput> = {}): EstimateInput {
   const pace = { hold: "through-speed", speed_m_s: 5 } as const;
@@ -51,18 +39,10 @@ function decidedOf(
 
 const membersOf = (...streams: readonly number[]) =>
   streams.map((u, member) => ({ member, fields: [stream(u)] }));
-const whatIf = (name: string, change: object) => {
-  const none = { wind: 1, current: 1, veer_deg: 0, speed_m_s: 0, consumption: 0, late_s: 0 };
-  return { name, ...none, ...change };
-};
 const at = (hours: number): ArrivalWindow => {
   const moment = DEPARTURE + hours * HOUR;
   return { notBefore: moment, notAfter: moment };
 };
-const between = (from: number, to: number): ArrivalWindow => ({
-  notBefore: DEPARTURE + from * HOUR,
-  notAfter: DEPARTURE + to * HOUR,
-});
 /** Going slower is cheaper, so that the craft without a stream is there at the end of the span. */
 const SPAN = between(6.5, 7);
 const speedFor = (hours: number): number => DISTANCE / (hours * 3600);

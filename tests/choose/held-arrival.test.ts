@@ -11,16 +11,14 @@ import { makeSweep, sweepCell, windowCells } from "../../src/choose/window.ts";
 import { windowCell } from "../../src/choose/window-cell.ts";
 import { constantPower } from "../../src/craft/constant.ts";
 import type { Craft } from "../../src/craft/craft.ts";
-import { cubePower } from "../../src/craft/cube.ts";
 import { tablePower } from "../../src/craft/table.ts";
 import { type EstimateInput, prepareRoutes } from "../../src/estimate/estimate.ts";
 import { estimateRoute } from "../../src/estimate/estimate-route.ts";
 import { prepareRoute } from "../../src/estimate/prepare.ts";
 import type { ArrivalSolution } from "../../src/estimate/result.ts";
-import { craftOf, DEPARTURE, gridField, HOUR, routeOf, spaced, waypoint } from "../estimate/fixtures.ts";
+import { DEPARTURE, gridField, HOUR, spaced } from "../estimate/fixtures.ts";
+import { between, craft, DISTANCE, ROUTE, SHAPE, stream, whatIf } from "./arrival-fixtures.ts";
 
-const SHAPE = { lon: spaced(-1, 2, 6), lat: spaced(-1, 1, 4), hours: spaced(-6, 60, 22) };
-const stream = (u: number) => gridField("current", SHAPE, () => [u, 0]);
 /** Every member with more stream along the craft than the one before. */
 const tide = (member: number, strength = 0.5, more = -0.025) =>
   gridField("current", SHAPE, (lon, _, h) => [
@@ -28,16 +26,6 @@ const tide = (member: number, strength = 0.5, more = -0.025) =>
     0.1,
   ]);
 
-/** Along the equator the rhumb is a circle of the ellipsoid's semi-major axis. */
-const DISTANCE = (6378137 * Math.PI) / 180;
-const ROUTE = routeOf(waypoint("A", 0, 0), { ...waypoint("B", 0, 1), path: "rhumb" });
-/** Going slower is always cheaper. */
-const craft = craftOf({
-  moves: "water",
-  power: cubePower({ referenceSpeed_m_s: 6, referencePower_W: 60_000 }),
-  speeds: { min: 2, max: 8 },
-  store: { unit: "J", usable: 4e9 },
-});
 /** Against half a metre a second. */
 const AGAINST = stream(-0.5);
 
@@ -73,14 +61,6 @@ function solved({ arrive }: DecidedRoute): {
   return { taken, plain };
 }
 
-const whatIf = (name: string, change: object) => {
-  const none = { wind: 1, current: 1, veer_deg: 0, speed_m_s: 0, consumption: 0, late_s: 0 };
-  return { name, ...none, ...change };
-};
-const between = (from: number, to: number): ArrivalWindow => ({
-  notBefore: DEPARTURE + from * HOUR,
-  notAfter: DEPARTURE + to * HOUR,
-});
 const SPAN = between(6.5, 7);
 /** Over the ground, to take so many hours. */
 const madeGood = (hours: number): number => DISTANCE / (hours * 3600);
