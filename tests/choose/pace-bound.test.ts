@@ -2,21 +2,10 @@ import { describe, expect, test } from "vitest";
 import { fastestBound, leastUseBound } from "../../src/choose/pace-bound.ts";
 import { fastestWithReserve, leastUseSpeed } from "../../src/choose/pace-curve.ts";
 import type { Craft, Reserve } from "../../src/craft/craft.ts";
-import { cubePower } from "../../src/craft/cube.ts";
 import { prepareRoute } from "../../src/estimate/prepare.ts";
 import type { Field } from "../../src/field/field.ts";
-import { WGS84 } from "../../src/geodesy/ellipsoid.ts";
-import { geodesicInverse } from "../../src/geodesy/geodesic.ts";
-import { craftOf, DEPARTURE, gridField, routeOf, spaced, waypoint } from "../estimate/fixtures.ts";
-
-const east = routeOf(waypoint("A", 0, 0), waypoint("B", 0, 1));
-const distance = geodesicInverse(WGS84, { lat: 0, lon: 0 }, { lat: 0, lon: 1 }).distance;
-const box = { lon: spaced(-2, 3, 10), lat: spaced(-2, 2, 8) };
-const boat = craftOf({
-  moves: "water",
-  power: cubePower({ referenceSpeed_m_s: 5, referencePower_W: 20_000 }),
-  speeds: { min: 0.5, max: 12 },
-});
+import { DEPARTURE, gridField } from "../estimate/fixtures.ts";
+import { boat, box, distance, east } from "./pace-fixtures.ts";
 
 /** What bounds the least use and the fastest. */
 function boundsOf(fields: readonly Field[], craft: Craft = boat, reserve: Reserve | null = null) {
