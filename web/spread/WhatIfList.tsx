@@ -1,6 +1,7 @@
 import { addWhatIf, deleteWhatIf, setWhatIf } from "../state/decide-edits.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { WhatIfDocument } from "../state/plan-document.ts";
+import { asWritten } from "../waypoints/as-written.ts";
 import { TextField } from "../waypoints/TextField.tsx";
 
 type Key = keyof WhatIfDocument;
@@ -109,6 +110,5 @@ function withText(whatIf: WhatIfDocument, key: Key, text: string): WhatIfDocumen
   const { [key]: _old, ...rest } = whatIf;
   if (text.trim() === "") return rest;
   if (key !== "wind" && key !== "current") return { ...rest, [key]: text };
-  const factor = Number(text);
-  return { ...rest, [key]: Number.isFinite(factor) ? factor : text };
+  return { ...rest, [key]: asWritten(text) };
 }

@@ -7,6 +7,7 @@ import {
 } from "../state/decide-edits.ts";
 import type { PageState } from "../state/page-state.ts";
 import type { AlternateDocument, PlanDocument } from "../state/plan-document.ts";
+import { asWritten } from "../waypoints/as-written.ts";
 import { TextField } from "../waypoints/TextField.tsx";
 
 const KEYS: readonly (readonly [keyof AlternateDocument, string])[] = [
@@ -110,13 +111,7 @@ function AlternateRow({ page: { store }, alternate, at }: AlternateRowProps) {
 /** An alternate without a position is none: an emptied one stays what it was. */
 function withText(plan: PlanDocument, at: number, key: keyof AlternateDocument, text: string): PlanDocument {
   if (key === "name" || key === "height") return setAlternateText(plan, at, key, text);
-  return text.trim() === "" ? plan : changeAlternate(plan, at, { [key]: degreesOr(text) });
-}
-
-/** A bare number is degrees, anything else a position in a notation of the plan's. */
-function degreesOr(text: string): number | string {
-  const number = Number(text);
-  return Number.isFinite(number) ? number : text;
+  return text.trim() === "" ? plan : changeAlternate(plan, at, { [key]: asWritten(text) });
 }
 
 /** Begins an alternate halfway along the chosen route, to be typed over. */

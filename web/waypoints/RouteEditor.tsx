@@ -14,6 +14,7 @@ import {
   setWaypointText,
   type WaypointKey,
 } from "../state/waypoint-edits.ts";
+import { asWritten } from "./as-written.ts";
 import { TextField } from "./TextField.tsx";
 
 /** The chosen route as a table: everything that the chart can do, by typing. */
@@ -244,12 +245,6 @@ function WaypointRow({ page, index, waypoint, path }: WaypointRowProps) {
 function shownDegrees(value: number | string, text: typeof latText): string {
   const [least, most] = text === latText ? [-90, 90] : [-180, 360];
   return typeof value === "number" && value >= least && value <= most ? text(value, 3) : String(value);
-}
-
-/** A bare number is degrees; anything else stays the user's own text. */
-function asWritten(text: string): number | string {
-  const value = Number(text);
-  return text.trim() !== "" && Number.isFinite(value) ? value : text;
 }
 
 /** A new waypoint starts beside the last one, where it can be seen and moved. */
