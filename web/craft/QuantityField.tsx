@@ -24,7 +24,7 @@ export function QuantityField({ field, text, fault, unlabelled = false, onText }
   const known = units.includes(split.unit);
   const unit = known || text === "" ? split.unit || field.unit : "";
   return (
-    <div class={fault === null ? "quantity" : "quantity wrong"}>
+    <div class="quantity">
       {!unlabelled && <span aria-hidden="true">{label}</span>}
       <TextField
         label={label}
