@@ -2,8 +2,10 @@ import { PACES } from "../shell/plan-words.ts";
 import type { InputError } from "../worker/core.ts";
 import { craftLabel, fieldLabel, fileKeyLabel, type NamedParts } from "./field-labels.ts";
 
+const NO_NAMES: NamedParts = { routes: [] };
+
 /** What is wrong with a plan or its craft's file, with its place called as the page labels it. */
-export function toldByLabel(fault: InputError, parts: NamedParts): string {
+export function toldByLabel(fault: InputError, parts = NO_NAMES): string {
   const { file = "", line, key = "" } = fault.place;
   const rule = wordsOf(fault.sentence, parts);
   const label = file === "" ? fieldLabel(key, parts) : fileKeyLabel(key);

@@ -131,7 +131,7 @@ function inTimeOf({ sweep, window }: OpenWindow): Pick<WindowBests, "inTime" | "
   try {
     return { inTime: latestInTime(sweep, window), inTimeFault: null };
   } catch (fault) {
-    if (fault instanceof InputError) return { inTime: null, inTimeFault: toldByLabel(fault, { routes: [] }) };
+    if (fault instanceof InputError) return { inTime: null, inTimeFault: toldByLabel(fault) };
     throw fault;
   }
 }
